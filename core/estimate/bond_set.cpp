@@ -1,0 +1,1 @@
+#include "core/estimate/bond_set.hpp"

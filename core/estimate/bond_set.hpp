@@ -1,0 +1,54 @@
+// Published tables of average bond enthalpies: one coherent set is used at a time.
+#pragma once
+
+#include <cstdint>
+#include <optional>
+#include <string>
+#include <string_view>
+#include <vector>
+
+#include "core/base/result.hpp"
+#include "core/molecule/bonds.hpp"
+#include "core/uncertainty/quantity.hpp"
+
+namespace heatledger::estimate {
+
+/// How a bond's figure was come by.
+enum class BondOrigin : std::uint8_t {
+  TableMean,      ///< mean over many molecules, from the set's own table
+  TableSpecific,  ///< the value of one molecule (CO2, CO, N2, O2, NO)
+  OtherTable,     ///< the set has no value: taken from the named other table, and said so
+  User            ///< typed on the sheet
+};
+
+struct BondValue {
+  molecule::BondType type;
+  double value = 0;  ///< [J/mol]
+  double u95 = 0;    ///< [J/mol]
+  BondOrigin origin = BondOrigin::TableMean;
+  std::string source;
+  std::string remark;
+};
+
+/// One table with the user's own values laid over it.
+class BondSet {
+ public:
+  static const std::vector<std::string>& names();          ///< ids, the primary set first
+  static Result<BondSet> published(std::string_view name);  ///< @errors bond_set.unknown
+
+  const std::string& name() const { return name_; }
+  const std::string& title() const { return title_; }
+
+  /// Lays a typed value over the table; the published one stays reachable through `published_value`.
+  void lay_over(BondValue typed);
+  /// Price of one bond: the type with its setting, else the plain type; empty when the set and its fallbacks have none.
+  const BondValue* find(const molecule::BondType& type) const;
+  const BondValue* published_value(const molecule::BondType& type) const;
+  const std::vector<BondValue>& values() const { return values_; }
+
+ private:
+  std::string name_, title_;
+  std::vector<BondValue> values_, covered_;
+};
+
+}  // namespace heatledger::estimate

@@ -1,0 +1,1 @@
+#include "core/file/worksheet_file.hpp"

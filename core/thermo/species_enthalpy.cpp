@@ -1,0 +1,1 @@
+#include "core/thermo/species_enthalpy.hpp"

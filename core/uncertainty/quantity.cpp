@@ -1,0 +1,47 @@
+#include "core/uncertainty/quantity.hpp"
+
+#include <cmath>
+
+#include "core/base/check.hpp"
+
+namespace heatledger::uncertainty {
+
+Quantity::Quantity(double value, double u95, SourceKey source) : value_(value) {
+  CHECK(u95 >= 0, "a half width is not negative");
+  if (u95 > 0) parts_.push_back({source, u95});
+}
+
+double Quantity::u95() const {
+  double sum = 0;
+  for (const Part& part : parts_) sum += part.u95 * part.u95;
+  return std::sqrt(sum);
+}
+
+void Quantity::add(const Quantity& other, double factor) {
+  value_ += factor * other.value_;
+  std::vector<Part> merged;
+  merged.reserve(parts_.size() + other.parts_.size());
+  auto mine = parts_.begin();
+  auto theirs = other.parts_.begin();
+  while (mine != parts_.end() || theirs != other.parts_.end()) {
+    if (theirs == other.parts_.end() || (mine != parts_.end() && mine->source < theirs->source)) {
+      merged.push_back(*mine++);
+    } else if (mine == parts_.end() || theirs->source < mine->source) {
+      merged.push_back({theirs->source, factor * theirs->u95});
+      ++theirs;
+    } else {
+      merged.push_back({mine->source, mine->u95 + factor * theirs->u95});
+      ++mine;
+      ++theirs;
+    }
+  }
+  parts_ = std::move(merged);
+}
+
+Quantity Quantity::scaled(double factor) const {
+  Quantity result;
+  result.add(*this, factor);
+  return result;
+}
+
+}  // namespace heatledger::uncertainty

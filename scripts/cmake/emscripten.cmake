@@ -1,0 +1,11 @@
+# Debian's emscripten brings its own toolchain file; this finds it wherever the package put it.
+find_program(HEATLEDGER_EMCC emcc REQUIRED)
+get_filename_component(emcc_real "${HEATLEDGER_EMCC}" REALPATH)
+get_filename_component(emscripten_root "${emcc_real}" DIRECTORY)
+foreach(candidate IN ITEMS "${emscripten_root}" /usr/share/emscripten)
+  if(EXISTS "${candidate}/cmake/Modules/Platform/Emscripten.cmake")
+    include("${candidate}/cmake/Modules/Platform/Emscripten.cmake")
+    return()
+  endif()
+endforeach()
+message(FATAL_ERROR "emscripten's CMake toolchain file was not found: install Debian's package emscripten.")
