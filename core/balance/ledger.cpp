@@ -1,1 +1,128 @@
+// Puts a ledger together: rows, totals, corrections, routes, notes.
 #include "core/balance/ledger.hpp"
+
+#include "core/balance/bond_words.hpp"
+#include "core/balance/figures.hpp"
+#include "core/balance/routes.hpp"
+#include "core/base/check.hpp"
+
+namespace heatledger::balance {
+namespace {
+
+using molecule::Phase;
+using uncertainty::Quantity;
+
+Error not_balanced(const Reaction& reaction) {
+  Error error{"ledger.not_balanced", "The equation does not balance: " + reaction.why_unbalanced + ".", "equation", ""};
+  if (error.message.size() > 2 && error.message.compare(error.message.size() - 2, 2, "..") == 0) error.message.pop_back();
+  if (reaction.proposals.size() == 1) {
+    error.hint = "Balanced it reads: " + reaction.proposals[0];
+  } else if (!reaction.proposals.empty()) {
+    error.hint = "It can be balanced in independent ways; write the one that is meant, or each as a reaction of its own: ";
+    for (std::size_t i = 0; i < reaction.proposals.size(); ++i) error.hint += (i == 0 ? "" : "; ") + reaction.proposals[i];
+  } else {
+    error.hint = "Write the species that is missing.";
+  }
+  return error;
+}
+
+Correction phase_correction(const Reaction& reaction, std::size_t index, const SpeciesFigures& figures, std::vector<std::string>& cautions) {
+  const ReactionSpecies& entry = reaction.species[index];
+  const Phase phase = figures.priced.phase;
+  Correction correction;
+  correction.species = index;
+  correction.times = entry.coefficient();
+  const std::string gas = "gas", other(thermo::phase_word(phase));
+  correction.what = display_species(entry) + ", " + (entry.product ? gas + " to " + other : other + " to " + gas);
+  if (correction.times != 1) correction.what += ", " + times_text(correction.times) + " ×";
+  const Result<thermo::Sourced> change = thermo::gas_to_phase(*entry.species, phase);
+  if (!change.ok()) {
+    correction.why_not = change.error().message;
+    return correction;
+  }
+  const double times = entry.product ? correction.times : -correction.times;
+  correction.value = change->value.scaled(times);
+  correction.source = change->source;
+  correction.working = change->working;
+  correction.working.push_back(times_text(correction.times) + " × " + fine_kj((entry.product ? 1 : -1) * change->value.value()) +
+                               " = " + fine_kj(correction.value->value()) + " kJ");
+  cautions.insert(cautions.end(), change->cautions.begin(), change->cautions.end());
+  return correction;
+}
+
+/// One note for all phases that nobody wrote.
+void note_phases(Ledger& ledger) {
+  std::string gas, other;
+  for (const LedgerRow& row : ledger.rows) {
+    const ReactionSpecies& entry = ledger.reaction->species[row.species];
+    if (entry.term.phase != Phase::Unstated) continue;
+    if (row.phase == Phase::Gas) {
+      gas += (gas.empty() ? "" : ", ") + display_species(entry);
+    } else {
+      other += (other.empty() ? "" : ", ") + display_species(entry) + " as " + std::string(thermo::phase_word(row.phase));
+    }
+  }
+  if (gas.empty() && other.empty()) return;
+  std::string text = "No phase is written: ";
+  if (!gas.empty()) text += gas + " taken as gas";
+  if (!other.empty()) text += (gas.empty() ? "" : "; ") + other;
+  ledger.notes.push_back(text + ". Write (g), (l), (s) or (aq) behind the name.");
+}
+
+void note_set(Ledger& ledger) {
+  bool priced = false, typed = false;
+  for (const LedgerRow& row : ledger.rows) {
+    for (const BondLine& line : row.lines) {
+      priced = priced || line.price != nullptr;
+      typed = typed || (line.price != nullptr && line.price->origin == estimate::BondOrigin::User) ||
+              (line.second && line.second->price != nullptr && line.second->price->origin == estimate::BondOrigin::User);
+    }
+  }
+  if (priced) ledger.notes.emplace_back(estimate::BondSet::spread_remark());
+  if (typed) ledger.notes.emplace_back("Typed bond values act in this ledger; the lines that use them say so.");
+}
+
+}  // namespace
+
+Quantity on_basis(const Quantity& quantity, const Basis& basis) { return quantity.scaled(basis.factor); }
+
+Result<Ledger> make_ledger(std::shared_ptr<const Reaction> reaction, const LedgerOptions& options) {
+  CHECK(reaction != nullptr && options.set != nullptr, "a ledger has a reaction and a bond set");
+  if (reaction->checkable && !reaction->balance.balanced) return not_balanced(*reaction);
+  if (!options.pinned_route.empty() && options.pinned_route != kAverageRoute && options.pinned_route != kFormationRoute) {
+    return Error{"ledger.route_unknown", "There is no route \"" + options.pinned_route + "\".", "pinned_route",
+                 "Choose average or formation, or leave it empty."};
+  }
+  Result<Basis> basis = find_basis(*reaction, options.basis);
+  if (!basis.ok()) return basis.error();
+
+  Ledger ledger;
+  ledger.reaction = std::move(reaction);
+  ledger.set = options.set;
+  ledger.basis = std::move(basis).value();
+  const std::vector<ReactionSpecies>& species = ledger.reaction->species;
+  std::vector<SpeciesFigures> figures;
+  figures.reserve(species.size());
+  std::vector<Entry> entries(species.size());
+  for (std::size_t i = 0; i < species.size(); ++i) {
+    figures.push_back(species_figures(*species[i].species, species[i].term.phase, *options.set));
+    entries[i].coefficient = species[i].coefficient();
+    entries[i].product = species[i].product;
+    entries[i].figures = &figures[i];
+    ledger.rows.push_back(describe_row(species[i], i, figures[i].priced, *options.set));
+    if (figures[i].corrected) ledger.corrections.push_back(phase_correction(*ledger.reaction, i, figures[i], ledger.cautions));
+    if (!species[i].species->note.empty()) ledger.notes.push_back(species[i].species->note);
+  }
+  const EquationFigures sums = add_up(entries);
+  ledger.broken = sums.broken;
+  ledger.formed = sums.formed;
+  ledger.gas_298 = sums.gas_298;
+  ledger.as_written = sums.as_written;
+  if (!ledger.reaction->checkable) ledger.notes.emplace_back("Element balance not checkable: a species has no formula.");
+  note_phases(ledger);
+  add_routes(ledger, sums, options.pinned_route);
+  note_set(ledger);
+  return ledger;
+}
+
+}  // namespace heatledger::balance

@@ -14,14 +14,27 @@
 
 namespace heatledger::balance {
 
-/// One kind of bond in one species row.
+/// One kind of bond in one species row. The bonds of nitro groups share one line: `type` is the N-O, `second` the N=O.
 struct BondLine {
+  /// The other half of a line that joins two types of bond.
+  struct Half {
+    molecule::BondType type;
+    int count = 0;
+    const estimate::BondValue* price = nullptr;
+  };
+
   molecule::BondType type;
   int count = 0;                        ///< per molecule
   const estimate::BondValue* price = nullptr;  ///< null: the set has no value; the row has no sum and says which is missing
-  double per_mole = 0;                  ///< count × price [J/mol]
+  std::optional<Half> second;
+  double per_mole = 0;                  ///< Σ count × price [J/mol]; 0 without price
   std::string label;                    ///< in words where that is clearer than the spelling: "N–O and N=O of nitro"
-  std::string remark;
+  std::string count_text;               ///< "5", "1 + 1"
+  std::string price_text;               ///< kJ/mol: "413", "201, 607"; "no value"
+  std::string source;
+  std::string remark;                   ///< a typed value in use, Kekulé counting, one molecule's own value
+
+  bool priced() const { return price != nullptr && (!second || second->price != nullptr); }
 };
 
 /// How a row's bond sum came about.
@@ -39,9 +52,12 @@ struct LedgerRow {
   std::optional<uncertainty::Quantity> per_mole;    ///< bond sum of one mole [J/mol]
   std::optional<uncertainty::Quantity> in_equation; ///< times the coefficient [J]
   std::vector<molecule::BondType> missing;          ///< bond types without a value
+  molecule::Phase phase = molecule::Phase::Gas;     ///< the phase reckoned with; bonds are always of the gas
   std::optional<uncertainty::Quantity> table;       ///< bond sum that the tabulated formation enthalpy implies [J/mol]
   std::string table_source;
-  std::string remark;
+  std::string remark;                ///< how a row without bonds came about, which bond is missing and which set has it
+  std::vector<std::string> strains;  ///< what average bonds do not hold in this structure: "aromatic ring", "nitro group"
+  std::vector<std::string> working;
 };
 
 /// One correction line under the totals.
@@ -70,8 +86,19 @@ struct Basis {
   std::size_t species = 0;
   double factor = 1;   ///< figure as written × factor = figure on this basis
   std::string text;    ///< "per mol nitrobenzene"
-  std::string unit;    ///< "kJ/mol", "kJ/kg"
+  std::string unit;    ///< "kJ", "kJ/mol", "kJ/kg"
 };
+
+/// A basis that a reaction can be stated on: what to type, and how it reads.
+struct BasisChoice {
+  std::string name;  ///< for LedgerOptions::basis
+  std::string text;
+};
+std::vector<BasisChoice> basis_choices(const Reaction& reaction);
+
+/// @param name  see LedgerOptions::basis; a species by its text on the sheet or its library name, case forgiven
+/// @errors ledger.basis_unknown, ledger.no_molar_mass
+Result<Basis> find_basis(const Reaction& reaction, std::string_view name);
 
 struct Ledger {
   std::shared_ptr<const Reaction> reaction;
@@ -93,7 +120,16 @@ struct LedgerOptions {
   std::string pinned_route;  ///< empty: the best
 };
 
-/// @errors ledger.not_balanced (message lists proposals), ledger.basis_unknown
+/// Names of the routes.
+inline constexpr std::string_view kAverageRoute = "average", kFormationRoute = "formation";
+
+/// A figure on the chosen basis [J, J/mol or J/kg].
+uncertainty::Quantity on_basis(const uncertainty::Quantity& quantity, const Basis& basis);
+
+/// The route of that name; null when the ledger has none.
+const Route* find_route(const Ledger& ledger, std::string_view name);
+
+/// @errors ledger.not_balanced (hint lists proposals), ledger.basis_unknown, ledger.no_molar_mass, ledger.route_unknown
 Result<Ledger> make_ledger(std::shared_ptr<const Reaction> reaction, const LedgerOptions& options);
 
 }  // namespace heatledger::balance

@@ -38,9 +38,11 @@ class SpeciesSource {
   virtual Result<std::shared_ptr<const facts::Species>> species(std::string_view text, bool quoted) = 0;
 };
 
-/// Remembers what it resolved; bounded, so that bulk work stays in constant memory.
+/// Remembers what it resolved; bounded, so that bulk work stays in constant memory: when `capacity` texts are held they
+/// become the older half, which is let go when the newer half is full too. What is used keeps moving to the newer half.
 class CachedSpecies : public SpeciesSource {
  public:
+  /// @param capacity  texts in each half, at least 1
   explicit CachedSpecies(std::size_t capacity = 4096);
   ~CachedSpecies() override;
   Result<std::shared_ptr<const facts::Species>> species(std::string_view text, bool quoted) override;
@@ -52,6 +54,11 @@ class CachedSpecies : public SpeciesSource {
 
 /// @errors equation.*, species.*, smiles.*, formula.*; `where` is "offset N" into the equation text
 Result<Reaction> read_reaction(std::string_view text, SpeciesSource& source);
+
+/// The name a term goes by on the sheet: as typed, formulas with subscripts, SMILES in quotes; phase not included.
+std::string display_species(const ReactionSpecies& species);
+/// "(l)", "(aq, 96 wt%)", "" when no phase was written.
+std::string phase_suffix(const molecule::Term& term);
 
 /// The equation set in type: "nitrobenzene(l) + 3 H₂ → aniline(l) + 2 H₂O(l)".
 std::string display_equation(const Reaction& reaction);

@@ -3,6 +3,7 @@
 #pragma once
 
 #include <string>
+#include <string_view>
 #include <vector>
 
 #include "core/base/result.hpp"
@@ -21,12 +22,28 @@ struct Sourced {
   std::vector<std::string> cautions;
 };
 
+/// The phase to reckon with. A phase that is written is never changed; one that is not written is taken as gas, for
+/// elements as the reference state where that is solid, and as the only tabulated phase where there is just one.
+struct PhaseChoice {
+  molecule::Phase phase = molecule::Phase::Gas;
+  bool assumed = false;  ///< not written on the sheet: a note says so
+};
+PhaseChoice phase_taken(const facts::Species& species, molecule::Phase written);
+
+/// Key of the error that a compound's figure in a phase carries; the same compound under two spellings has one key.
+uncertainty::SourceKey figure_key(uncertainty::SourceKind kind, const facts::Species& species, molecule::Phase phase);
+
+/// "gas", "liquid", "solid", "solution", "dissolved".
+std::string_view phase_word(molecule::Phase phase);
+
 /// Enthalpy of one mole in `to` minus one mole as ideal gas, both at 298.15 K [J/mol]: minus the vaporisation or
 /// sublimation enthalpy. Difference of formation enthalpies first, else a tabulated vaporisation enthalpy at 298 K.
+/// Where both exist and disagree beyond their ±, the formation enthalpies stand and a caution says so.
 /// @errors thermo.no_phase_change_data
 Result<Sourced> gas_to_phase(const facts::Species& species, molecule::Phase to);
 
-/// Formation enthalpy in a phase at 298.15 K [J/mol] from the tables (elements in their reference state: zero).
+/// Formation enthalpy in a phase at 298.15 K [J/mol] from the tables (elements in their reference state: zero). Gas from
+/// liquid, or liquid from gas, through the tabulated vaporisation enthalpy where only one is tabulated.
 /// @errors thermo.no_formation_data
 Result<Sourced> tabulated_formation(const facts::Species& species, molecule::Phase phase);
 

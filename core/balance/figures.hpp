@@ -1,0 +1,40 @@
+// The arithmetic of a ledger without its texts: shared by make_ledger and by the quick tally, so that both give the same
+// digits.
+#pragma once
+
+#include <optional>
+#include <vector>
+
+#include "core/balance/rows.hpp"
+
+namespace heatledger::balance {
+
+/// Figures of one species in one phase that do not depend on the reaction it stands in; per mole.
+struct SpeciesFigures {
+  PricedSpecies priced;
+  bool corrected = false;                              ///< the phase written is not the one its bond sum belongs to
+  std::optional<uncertainty::Quantity> to_phase;       ///< gas to the phase written [J/mol]; empty: no data
+  std::optional<uncertainty::Quantity> formation;      ///< ΔfH in the phase taken [J/mol]
+  std::optional<uncertainty::Quantity> formation_row;  ///< ΔfH in the phase that the bond sum belongs to [J/mol]
+};
+
+SpeciesFigures species_figures(const facts::Species& species, molecule::Phase written, const estimate::BondSet& set);
+
+/// One species of an equation with its figures.
+struct Entry {
+  double coefficient = 1;
+  bool product = false;
+  const SpeciesFigures* figures = nullptr;
+
+  double signed_coefficient() const { return product ? coefficient : -coefficient; }
+};
+
+/// Sums over an equation as written [J]; each empty as soon as one species lacks its figure.
+struct EquationFigures {
+  std::optional<uncertainty::Quantity> broken, formed, gas_298, as_written;  ///< average bonds
+  std::optional<uncertainty::Quantity> formation_gas_298, formation_as_written;
+};
+
+EquationFigures add_up(const std::vector<Entry>& entries);
+
+}  // namespace heatledger::balance

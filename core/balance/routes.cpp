@@ -1,0 +1,127 @@
+#include "core/balance/routes.hpp"
+
+#include <cmath>
+
+#include "core/balance/bond_words.hpp"
+#include "core/base/number_text.hpp"
+
+namespace heatledger::balance {
+namespace {
+
+using uncertainty::Quantity;
+
+Route average_route(const Ledger& ledger, const EquationFigures& sums) {
+  Route route;
+  route.name = kAverageRoute;
+  route.gas_298 = sums.gas_298;
+  route.as_written = sums.as_written;
+  for (const LedgerRow& row : ledger.rows) {
+    if (!row.per_mole && route.why_not.empty()) route.why_not = row.remark;
+  }
+  for (const Correction& correction : ledger.corrections) {
+    if (!correction.value && route.why_not.empty()) route.why_not = correction.why_not;
+  }
+  if (!route.gas_298) return route;
+  route.working.push_back("broken − formed = " + ledger_kj(sums.broken->value()) + " − " + ledger_kj(sums.formed->value()) +
+                          " = " + ledger_kj(sums.gas_298->value()) + " kJ, all as gas at 25 °C");
+  for (const Correction& correction : ledger.corrections) {
+    if (correction.value) route.working.push_back(correction.what + "  " + fine_kj(correction.value->value()) + " kJ");
+  }
+  if (route.as_written) {
+    route.working.push_back("as written, 25 °C: " + kj_with_u95(*route.as_written, "kJ"));
+  }
+  return route;
+}
+
+Route formation_route(const Ledger& ledger, const EquationFigures& sums) {
+  Route route;
+  route.name = kFormationRoute;
+  route.gas_298 = sums.formation_gas_298;
+  route.as_written = sums.formation_as_written;
+  for (std::size_t i = 0; i < ledger.rows.size(); ++i) {
+    const ReactionSpecies& entry = ledger.reaction->species[i];
+    const Result<thermo::Sourced> formation = thermo::tabulated_formation(*entry.species, ledger.rows[i].phase);
+    if (!formation.ok()) {
+      if (route.why_not.empty()) route.why_not = formation.error().message;
+      continue;
+    }
+    const double times = entry.product ? entry.coefficient() : -entry.coefficient();
+    route.working.push_back(display_species(entry) + phase_suffix(entry.term) + "  " + display_number(times, times == std::round(times) ? 0 : 4) +
+                            " × (" + fine_kj(formation->value.value()) + ") = " + fine_kj(times * formation->value.value()) +
+                            " kJ; " + formation->source);
+  }
+  if (route.as_written) {
+    route.working.push_back("sum: " + kj_with_u95(*route.as_written, "kJ"));
+  } else if (route.why_not.empty()) {
+    route.why_not = "a formation enthalpy is missing";
+  }
+  return route;
+}
+
+/// The row where bonds and table part most, for the written coefficients.
+const LedgerRow* widest_gap(const Ledger& ledger, double& gap) {
+  const LedgerRow* widest = nullptr;
+  gap = 0;
+  for (std::size_t i = 0; i < ledger.rows.size(); ++i) {
+    const LedgerRow& row = ledger.rows[i];
+    if (!row.table || !row.per_mole) continue;
+    const ReactionSpecies& entry = ledger.reaction->species[i];
+    const double here = (entry.product ? -1 : 1) * entry.coefficient() * (row.per_mole->value() - row.table->value());
+    if (std::fabs(here) > std::fabs(gap)) {
+      gap = here;
+      widest = &row;
+    }
+  }
+  return widest;
+}
+
+void note_disagreement(Ledger& ledger) {
+  const Route *average = find_route(ledger, kAverageRoute), *formation = find_route(ledger, kFormationRoute);
+  if (!average->gas_298 || !formation->gas_298) return;
+  const double apart = average->gas_298->value() - formation->gas_298->value();
+  const double allowed = std::sqrt(average->gas_298->u95() * average->gas_298->u95() + formation->gas_298->u95() * formation->gas_298->u95());
+  if (std::fabs(apart) <= allowed) return;
+  std::string text = "Average bonds give " + kj_with_u95(*average->gas_298, "kJ") + ", formation enthalpies " +
+                     kj_with_u95(*formation->gas_298, "kJ") + " for the gas: " + ledger_kj(std::fabs(apart)) + " kJ apart, beyond their ±.";
+  double gap = 0;
+  if (const LedgerRow* row = widest_gap(ledger, gap)) {
+    const ReactionSpecies& entry = ledger.reaction->species[row->species];
+    text += " Most of it stands on the row of " + display_species(entry) + " (" + ledger_kj(std::fabs(gap)) + " kJ).";
+    for (const std::string& strain : row->strains) {
+      std::string sentence = strain;
+      if (sentence[0] >= 'a' && sentence[0] <= 'z') sentence[0] = static_cast<char>(sentence[0] - 'a' + 'A');
+      text += " " + sentence + ".";
+    }
+  }
+  ledger.notes.push_back(std::move(text));
+}
+
+}  // namespace
+
+const Route* find_route(const Ledger& ledger, std::string_view name) {
+  for (const Route& route : ledger.routes) {
+    if (route.name == name) return &route;
+  }
+  return nullptr;
+}
+
+void add_routes(Ledger& ledger, const EquationFigures& sums, std::string_view pinned) {
+  ledger.routes.push_back(average_route(ledger, sums));
+  ledger.routes.push_back(formation_route(ledger, sums));
+  for (const std::string_view name : {pinned, kFormationRoute, kAverageRoute}) {
+    const Route* route = find_route(ledger, name);
+    if (route != nullptr && route->as_written) {
+      ledger.taken = name;
+      break;
+    }
+  }
+  if (!pinned.empty() && ledger.taken != pinned) {
+    ledger.notes.push_back("The pinned route (" + std::string(pinned) + ") has no figure for this reaction" +
+                           (ledger.taken.empty() ? std::string(".") : "; the figure by " + ledger.taken + " is taken instead."));
+  } else if (!pinned.empty()) {
+    ledger.notes.push_back("The figure taken is pinned to the route by " + ledger.taken + ".");
+  }
+  note_disagreement(ledger);
+}
+
+}  // namespace heatledger::balance

@@ -1,1 +1,0 @@
-#include "core/thermo/species_enthalpy.hpp"
