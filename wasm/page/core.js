@@ -1,0 +1,79 @@
+// The only file that touches the WebAssembly module: JSON text in, JSON text out.
+
+/**
+ * @typedef {object} CoreModule
+ * @property {Uint8Array} HEAPU8
+ * @property {(size: number) => number} _heatledger_allocate
+ * @property {(at: number) => void} _heatledger_release
+ * @property {(at: number, size: number) => number} _heatledger_handle_request
+ * @property {() => number} _heatledger_answer_size
+ *
+ * @typedef {(options: {wasmBinary: Uint8Array}) => Promise<CoreModule>} CreateModule
+ *
+ * @typedef {{ok: true, value: any} | {ok: false, error: import("./types.js").CoreError}} Answer
+ */
+
+const encoder = new TextEncoder();
+const decoder = new TextDecoder();
+
+export class Core {
+  /** @param {CoreModule} module */
+  constructor(module) {
+    this.module = module;
+  }
+
+  /**
+   * @param {Record<string, unknown>} request  see core/page/requests.hpp
+   * @returns {Answer}
+   */
+  request(request) {
+    return JSON.parse(this.requestText(JSON.stringify(request)));
+  }
+
+  /**
+   * @param {string} request
+   * @returns {string}
+   */
+  requestText(request) {
+    const module = this.module;
+    const bytes = encoder.encode(request);
+    const at = module._heatledger_allocate(bytes.length);
+    module.HEAPU8.set(bytes, at);
+    const answer = module._heatledger_handle_request(at, bytes.length);
+    module._heatledger_release(at);
+    // Memory may have grown during the call: HEAPU8 is read again, never kept.
+    return decoder.decode(module.HEAPU8.subarray(answer, answer + module._heatledger_answer_size()));
+  }
+}
+
+/**
+ * @param {CreateModule} createModule  emscripten's start-up function
+ * @param {Uint8Array} wasmBinary
+ */
+export async function startCore(createModule, wasmBinary) {
+  return new Core(await createModule({wasmBinary}));
+}
+
+/**
+ * Bytes of a block of the page that holds deflated data in base64.
+ * @param {string} base64
+ * @returns {Promise<Uint8Array>}
+ */
+export async function inflateBase64(base64) {
+  const packed = decodeBase64(base64.trim());
+  const stream = new Blob([packed]).stream().pipeThrough(new DecompressionStream("deflate"));
+  return new Uint8Array(await new Response(stream).arrayBuffer());
+}
+
+/**
+ * @param {string} text
+ * @returns {Uint8Array<ArrayBuffer>}
+ */
+function decodeBase64(text) {
+  const native = /** @type {{fromBase64?: (text: string) => Uint8Array<ArrayBuffer>}} */ (/** @type {unknown} */ (Uint8Array));
+  if (native.fromBase64) return native.fromBase64(text);
+  const characters = atob(text);
+  const bytes = new Uint8Array(characters.length);
+  for (let i = 0; i < characters.length; ++i) bytes[i] = characters.charCodeAt(i);
+  return bytes;
+}

@@ -1,0 +1,61 @@
+// Small helpers over the DOM. Text goes in as text only; nothing here parses markup.
+
+/**
+ * @template {keyof HTMLElementTagNameMap} Tag
+ * @param {Tag} tag
+ * @param {string} [className]
+ * @param {string} [text]
+ * @returns {HTMLElementTagNameMap[Tag]}
+ */
+export function make(tag, className, text) {
+  const node = document.createElement(tag);
+  if (className) node.className = className;
+  if (text) node.textContent = text;
+  return node;
+}
+
+/**
+ * @param {string} tag
+ * @param {Record<string, string | number>} attributes
+ * @returns {SVGElement}
+ */
+export function makeSvg(tag, attributes) {
+  const node = document.createElementNS("http://www.w3.org/2000/svg", tag);
+  for (const [name, value] of Object.entries(attributes)) node.setAttribute(name, String(value));
+  return node;
+}
+
+/**
+ * Sets, changes or removes an attribute.
+ * @param {Element} node
+ * @param {string} name
+ * @param {string | null} value
+ */
+export function setAttribute(node, name, value) {
+  if (value === null) {
+    if (node.hasAttribute(name)) node.removeAttribute(name);
+  } else if (node.getAttribute(name) !== value) {
+    node.setAttribute(name, value);
+  }
+}
+
+/**
+ * Makes the children of `parent` exactly `wanted`, moving as little as possible.
+ * @param {Element} parent
+ * @param {Element[]} wanted
+ */
+export function setChildren(parent, wanted) {
+  let at = parent.firstElementChild;
+  for (const node of wanted) {
+    if (node === at) {
+      at = at.nextElementSibling;
+    } else {
+      parent.insertBefore(node, at);
+    }
+  }
+  while (at) {
+    const next = at.nextElementSibling;
+    at.remove();
+    at = next;
+  }
+}

@@ -1,0 +1,124 @@
+// The sheet: blocks in order, each shown by a view that is kept as long as its block id is.
+
+import {make, setAttribute, setChildren} from "./dom.js";
+import {DrawingView} from "./drawing_view.js";
+import {TableView} from "./table_view.js";
+
+/**
+ * @typedef {import("../types.js").Block} Block
+ * @typedef {{node: HTMLElement, show: (block: any) => void}} BlockView
+ */
+
+/** Marks in front of a note, so that its kind does not rest on colour. */
+const noteMarks = {info: "", assumption: "", caution: "Caution", disagreement: "Routes differ", error: "Not understood"};
+
+class HeadingView {
+  /** @param {string} id */
+  constructor(id) {
+    this.node = make("header", "block heading-block");
+    this.node.dataset.block = id;
+  }
+
+  /** @param {import("../types.js").HeadingBlock} block */
+  show(block) {
+    const level = block.level ?? 2;
+    setAttribute(this.node, "data-level", String(level));
+    const heading = make(level === 1 ? "h1" : "h2", "", block.text);
+    this.node.replaceChildren(heading, make("span", "rule"), ...(block.aside ? [make("span", "aside", block.aside)] : []));
+  }
+}
+
+class NoteView {
+  /** @param {string} id */
+  constructor(id) {
+    this.node = make("div", "block note-block");
+    this.node.dataset.block = id;
+    this.node.id = `note:${id}`;
+  }
+
+  /** @param {import("../types.js").NoteBlock} block */
+  show(block) {
+    const kind = block.kind ?? "info";
+    this.node.className = `block note-block note-${kind}`;
+    setAttribute(this.node, "role", kind === "error" ? "alert" : "note");
+    const mark = noteMarks[kind];
+    this.node.replaceChildren(...(mark ? [make("strong", "mark", mark)] : []), make("span", "", block.text));
+  }
+}
+
+export class SheetView {
+  /** @param {HTMLElement} node */
+  constructor(node) {
+    this.node = node;
+    /** @type {Map<string, {kind: string, shown: Block, view: BlockView}>} */
+    this.blocks = new Map();
+    /** @type {Set<HTMLElement>} */
+    this.marked = new Set();
+  }
+
+  /** @param {import("../types.js").Page} page */
+  show(page) {
+    /** @type {typeof this.blocks} */
+    const blocks = new Map();
+    for (const block of page.blocks) {
+      const before = this.blocks.get(block.id);
+      const entry = before && before.kind === block.block ? before : {kind: block.block, shown: block, view: viewFor(block)};
+      if (entry !== before || entry.shown !== block) entry.view.show(block);
+      entry.shown = block;
+      blocks.set(block.id, entry);
+    }
+    this.blocks = blocks;
+    setChildren(this.node, [...blocks.values()].map((entry) => entry.view.node));
+    this.#markCells(page);
+  }
+
+  /**
+   * Ties error notes to the cells they speak of.
+   * @param {import("../types.js").Page} page
+   */
+  #markCells(page) {
+    /** @type {Set<HTMLElement>} */
+    const marked = new Set();
+    for (const block of page.blocks) {
+      if (block.block !== "note" || block.kind !== "error") continue;
+      for (const id of block.cells ?? []) {
+        const cell = this.cell(id);
+        if (!cell) continue;
+        setAttribute(cell, "aria-invalid", "true");
+        setAttribute(cell, "aria-describedby", `note:${block.id}`);
+        marked.add(cell);
+      }
+    }
+    for (const cell of this.marked) {
+      if (marked.has(cell)) continue;
+      cell.removeAttribute("aria-invalid");
+      cell.removeAttribute("aria-describedby");
+    }
+    this.marked = marked;
+  }
+
+  /**
+   * @param {string} id
+   * @returns {HTMLTableCellElement | null}
+   */
+  cell(id) {
+    return this.node.querySelector(`[data-cell="${CSS.escape(id)}"]`);
+  }
+}
+
+/**
+ * @param {Block} block
+ * @returns {BlockView}
+ */
+function viewFor(block) {
+  switch (block.block) {
+    case "heading":
+      return new HeadingView(block.id);
+    case "table":
+      return new TableView(block.id);
+    case "drawing":
+      return new DrawingView(block.id);
+    case "note":
+      return new NoteView(block.id);
+  }
+}

@@ -1,0 +1,161 @@
+// One table of the page: cells are kept and only what changed is written.
+
+import {make, setAttribute, setChildren} from "./dom.js";
+
+/**
+ * @typedef {import("../types.js").TableBlock} TableBlock
+ * @typedef {import("../types.js").Cell} Cell
+ * @typedef {import("../types.js").Row} Row
+ * @typedef {{node: HTMLTableCellElement, text: HTMLElement, shown: string}} CellView
+ * @typedef {{node: HTMLTableRowElement, cells: CellView[], shown: string}} RowView
+ */
+
+/** A bracketed state after a species, as in "H2O(l)"; set lower and lighter, the text itself stays as it came. */
+const STATE_MARK = /(?<=\S)\([a-z][^()]*\)/g;
+
+/** @type {WeakMap<Element, Cell>} */
+const cells = new WeakMap();
+
+/**
+ * What core sent for a cell of the sheet.
+ * @param {Element} node
+ * @returns {Cell | undefined}
+ */
+export function cellData(node) {
+  return cells.get(node);
+}
+
+export class TableView {
+  /** @param {string} id */
+  constructor(id) {
+    this.node = make("div", "block table-block");
+    this.node.dataset.block = id;
+    this.table = make("table");
+    this.columns = make("colgroup");
+    this.head = make("thead");
+    this.body = make("tbody");
+    this.table.append(this.columns, this.head, this.body);
+    this.node.append(this.table);
+    /** @type {Map<string, RowView>} */
+    this.rows = new Map();
+    this.shownColumns = "";
+  }
+
+  /** @param {TableBlock} block */
+  show(block) {
+    const look = block.look ?? "list";
+    if (this.table.className !== look) this.table.className = look;
+    setAttribute(this.table, "role", block.rows.some((row) => row.fold_id) ? "treegrid" : "grid");
+    this.#showColumns(block);
+    /** @type {Map<string, RowView>} */
+    const rows = new Map();
+    block.rows.forEach((row, index) => {
+      const key = row.id || `#${index}`;
+      rows.set(key, this.#showRow(this.rows.get(key), row, block));
+    });
+    this.rows = rows;
+    setChildren(this.body, [...rows.values()].map((row) => row.node));
+  }
+
+  /** @param {TableBlock} block */
+  #showColumns(block) {
+    const shown = JSON.stringify(block.columns);
+    if (shown === this.shownColumns) return;
+    this.shownColumns = shown;
+    this.rows.clear();
+    this.columns.replaceChildren(
+      ...block.columns.map((column) => {
+        const node = make("col");
+        if (column.width) node.style.width = `${column.width * 100}%`;
+        return node;
+      }),
+    );
+    const heading = make("tr");
+    for (const column of block.columns) {
+      const node = make("th", `align-${column.align ?? "left"}${column.spine_after ? " spine" : ""}`, column.heading);
+      node.scope = "col";
+      heading.append(node);
+    }
+    this.head.replaceChildren(...(block.columns.some((column) => column.heading) ? [heading] : []));
+  }
+
+  /**
+   * @param {RowView | undefined} before
+   * @param {Row} row
+   * @param {TableBlock} block
+   * @returns {RowView}
+   */
+  #showRow(before, row, block) {
+    const shown = JSON.stringify(row);
+    if (before && before.shown === shown) return before;
+    const node = before?.node ?? make("tr");
+    const role = row.role ?? "body";
+    node.className = `row-${role}${row.fold_id ? " folds" : ""}`;
+    setAttribute(node, "data-fold", row.fold_id || null);
+    setAttribute(node, "aria-expanded", row.fold_id ? String(Boolean(row.open)) : null);
+    setAttribute(node, "aria-level", block.rows.some((other) => other.fold_id) ? (role === "detail" ? "2" : "1") : null);
+    const kept = before?.cells ?? [];
+    let column = 0;
+    const views = row.cells.map((cell, index) => {
+      const view = showCell(kept[index], cell, block.columns.slice(column, column + (cell.span ?? 1)), Boolean(row.fold_id) && index === 0);
+      column += cell.span ?? 1;
+      return view;
+    });
+    setChildren(node, views.map((view) => view.node));
+    return {node, cells: views, shown};
+  }
+}
+
+/**
+ * @param {CellView | undefined} before
+ * @param {Cell} cell
+ * @param {import("../types.js").Column[]} columns  those it spans
+ * @param {boolean} folds  it carries the mark that unfolds its row
+ * @returns {CellView}
+ */
+function showCell(before, cell, columns, folds) {
+  const shown = JSON.stringify(cell) + folds;
+  if (before && before.shown === shown) return before;
+  const node = before?.node ?? make("td");
+  const text = before?.text ?? node.appendChild(make("span", "text"));
+  const kind = cell.kind ?? "label";
+  const last = columns[columns.length - 1];
+  // Words that run over several columns begin at the left of them, figures end at the right.
+  const align = (columns.length > 1 && kind !== "number" ? columns[0].align : last?.align) ?? "left";
+  const classes = ["cell", `kind-${kind}`, `align-${align}`];
+  if (cell.tone && cell.tone !== "plain") classes.push(`tone-${cell.tone}`);
+  if (cell.origin && cell.origin !== "none") classes.push(`origin-${cell.origin}`);
+  if (cell.editable) classes.push("editable");
+  if (last?.spine_after) classes.push("spine");
+  if (node.classList.contains("editing")) classes.push("editing");
+  if (folds) classes.push("fold-mark");
+  const words = cell.text || (cell.editable ? cell.hint : "") || "";
+  if (!cell.text && words) classes.push("empty");
+  node.className = classes.join(" ");
+  if (kind === "equation" && cell.text) setEquation(text, words);
+  else if (text.textContent !== words) text.textContent = words;
+  node.colSpan = cell.span ?? 1;
+  setAttribute(node, "data-cell", cell.id || null);
+  setAttribute(node, "tabindex", cell.id || folds ? node.getAttribute("tabindex") ?? "-1" : null);
+  setAttribute(node, "aria-readonly", cell.id ? String(!cell.editable) : null);
+  setAttribute(node, "aria-haspopup", kind === "choice" && cell.editable ? "listbox" : null);
+  setAttribute(node, "title", cell.hint && cell.text ? cell.hint : null);
+  cells.set(node, cell);
+  return {node, text, shown};
+}
+
+/**
+ * @param {HTMLElement} node
+ * @param {string} equation
+ */
+function setEquation(node, equation) {
+  if (node.textContent === equation) return;
+  /** @type {(Node | string)[]} */
+  const parts = [];
+  let from = 0;
+  for (const match of equation.matchAll(STATE_MARK)) {
+    parts.push(equation.slice(from, match.index), make("span", "state", match[0]));
+    from = match.index + match[0].length;
+  }
+  node.replaceChildren(...parts, equation.slice(from));
+}
