@@ -67,4 +67,17 @@ Table read_table(const std::string& path) {
   return table;
 }
 
+BadCase read_bad_case(const std::string& path) {
+  const std::string content = read_source_file(path);
+  const std::size_t line = content.find('\n');
+  const std::size_t blank = content.find(' ');
+  if (line == std::string::npos || blank >= line || content.back() != '\n') {
+    ADD_FAILURE() << path << ": first line is to be \"code offset\", the last to end with a line end";
+    return {};
+  }
+  BadCase bad{content.substr(0, blank), content.substr(blank + 1, line - blank - 1), content.substr(line + 1)};
+  if (!bad.text.empty()) bad.text.pop_back();
+  return bad;
+}
+
 }  // namespace heatledger::test

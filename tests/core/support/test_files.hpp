@@ -18,4 +18,10 @@ struct Table {
 };
 Table read_table(const std::string& path);
 
+/// One piece of bad input: first line "code offset", then the text up to the last line end.
+struct BadCase {
+  std::string code, offset, text;
+};
+BadCase read_bad_case(const std::string& path);
+
 }  // namespace heatledger::test
