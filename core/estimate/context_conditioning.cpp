@@ -1,0 +1,115 @@
+#include "core/estimate/context_conditioning.hpp"
+
+#include <cmath>
+
+#include "core/base/check.hpp"
+
+namespace heatledger::estimate {
+namespace {
+
+double dot(const std::vector<double>& a, const std::vector<double>& b) {
+  double sum = 0;
+  for (std::size_t i = 0; i < a.size(); ++i) sum += a[i] * b[i];
+  return sum;
+}
+
+}  // namespace
+
+void SmallCholesky::factor(std::vector<double> matrix, std::size_t n) {
+  size_ = n;
+  for (std::size_t j = 0; j < n; ++j) {
+    for (std::size_t i = j; i < n; ++i) {
+      double value = matrix[i * n + j];
+      for (std::size_t k = 0; k < j; ++k) value -= matrix[i * n + k] * matrix[j * n + k];
+      if (i == j) {
+        CHECK(value > 0, "a positive definite small matrix");
+        matrix[j * n + j] = std::sqrt(value);
+      } else {
+        matrix[i * n + j] = value / matrix[j * n + j];
+      }
+    }
+  }
+  factor_ = std::move(matrix);
+}
+
+void SmallCholesky::forward(std::vector<double>& x) const {
+  for (std::size_t i = 0; i < size_; ++i) {
+    double value = x[i];
+    for (std::size_t k = 0; k < i; ++k) value -= factor_[i * size_ + k] * x[k];
+    x[i] = value / factor_[i * size_ + i];
+  }
+}
+
+Conditioning::Conditioning(const ContextFit& fit, std::vector<std::uint32_t> without,
+                           const std::vector<MeasuredDirection>& measured)
+    : fit_(fit), without_(std::move(without)) {
+  const std::size_t n = without_.size();
+  std::vector<double> x;
+  for (const std::uint32_t row : without_) {
+    fit_.row_vector(row, x);
+    left_out_z_.emplace_back();
+    fit_.cholesky().forward(x, left_out_z_.back());
+  }
+  // Taking a row out: P loses x x' / variance. With H = X P⁻¹ X' the small matrix is variance − H, still positive.
+  std::vector<double> matrix(n * n, 0.0);
+  for (std::size_t i = 0; i < n; ++i) {
+    for (std::size_t j = 0; j <= i; ++j) matrix[i * n + j] = -dot(left_out_z_[i], left_out_z_[j]);
+    matrix[i * n + i] += fit_.row_variance(without_[i]);
+  }
+  left_out_.factor(std::move(matrix), n);
+  for (std::size_t k = 0; k < fit_.right_hand_sides(); ++k) {
+    std::vector<double> pull(n);
+    for (std::size_t i = 0; i < n; ++i) pull[i] = fit_.row_residual(without_[i], k);
+    left_out_.forward(pull);
+    left_out_pull_.push_back(std::move(pull));
+  }
+
+  const std::size_t m = measured.size();
+  for (const MeasuredDirection& one : measured) measured_.push_back(direction(one.terms));
+  std::vector<double> spread(m * m, 0.0);
+  for (std::size_t i = 0; i < m; ++i) {
+    for (std::size_t j = 0; j <= i; ++j) spread[i * m + j] = before_measurements(measured_[i], measured_[j]);
+    spread[i * m + i] += measured[i].variance;
+  }
+  measured_factor_.factor(std::move(spread), m);
+  for (std::size_t i = 0; i < m; ++i) {
+    measured_pull_.push_back(measured[i].figure - mean_before_measurements(measured_[i], 0));
+  }
+  measured_factor_.forward(measured_pull_);
+}
+
+Direction Conditioning::direction(const std::vector<ContextFit::Term>& terms) const {
+  Direction out;
+  out.functional = fit_.functional(terms, without_);
+  fit_.cholesky().forward(out.functional.x, out.z);
+  for (const std::vector<double>& z : left_out_z_) out.widened.push_back(dot(out.z, z));
+  left_out_.forward(out.widened);
+  return out;
+}
+
+double Conditioning::before_measurements(const Direction& a, const Direction& b) const {
+  return fit_.covariance(a.functional, a.z, b.functional, b.z) + dot(a.widened, b.widened);
+}
+
+double Conditioning::mean_before_measurements(const Direction& direction, std::size_t right_hand_side) const {
+  return fit_.mean(direction.functional, right_hand_side) - dot(direction.widened, left_out_pull_[right_hand_side]);
+}
+
+std::vector<double> Conditioning::onto_measurements(const Direction& direction) const {
+  std::vector<double> onto;
+  for (const Direction& measured : measured_) onto.push_back(before_measurements(direction, measured));
+  measured_factor_.forward(onto);
+  return onto;
+}
+
+double Conditioning::mean(const Direction& direction, std::size_t right_hand_side) const {
+  const double before = mean_before_measurements(direction, right_hand_side);
+  return measured_.empty() ? before : before + dot(onto_measurements(direction), measured_pull_);
+}
+
+double Conditioning::covariance(const Direction& a, const Direction& b) const {
+  const double before = before_measurements(a, b);
+  return measured_.empty() ? before : before - dot(onto_measurements(a), onto_measurements(b));
+}
+
+}  // namespace heatledger::estimate

@@ -1,0 +1,172 @@
+#include "core/estimate/context_model.hpp"
+
+#include <algorithm>
+#include <cmath>
+
+#include "core/base/check.hpp"
+#include "core/estimate/context_conditioning.hpp"
+#include "core/estimate/context_store.hpp"
+#include "core/estimate/gas_interpolation.hpp"
+
+namespace heatledger::estimate {
+namespace {
+
+constexpr double kGasConstant = 8.314462618;  // J/(mol K), exact by the SI of 2019
+
+FitKind kind_of(Property property) {
+  switch (property) {
+    case Property::GasFormation:
+      return FitKind::Formation;
+    case Property::Vaporisation298:
+      return FitKind::Vaporisation;
+    case Property::LiquidHeatCapacity298:
+      return FitKind::Liquid;
+    case Property::GasHeatCapacity:
+      break;
+  }
+  return FitKind::Gas298;
+}
+
+/// Value and variance in the units of the fit.
+struct Estimate {
+  std::vector<double> value;
+  double variance = 0;
+  int unseen = 0;
+  bool in_table = false;
+};
+
+std::vector<std::uint32_t> rows_to_leave(const ContextFit& fit, std::span<const ContextTerm> terms, const ContextOptions& options) {
+  std::vector<std::uint32_t> rows;
+  const auto leave = [&](const ContextMolecule& molecule) {
+    for (const std::uint32_t row : fit.rows_of(molecule.constitution)) rows.push_back(row);
+  };
+  for (const ContextMolecule* molecule : options.leave_out) leave(*molecule);
+  if (options.estimate_only) {
+    for (const ContextTerm& term : terms) leave(*term.molecule);
+  }
+  std::sort(rows.begin(), rows.end());
+  rows.erase(std::unique(rows.begin(), rows.end()), rows.end());
+  return rows;
+}
+
+/// A gas molecule of more than three atoms never takes up more than all its vibrations at full swing.
+double above_classical_limit(const ContextMolecule& molecule, double heat_capacity) {
+  if (molecule.atoms <= 3 || molecule.repeat_unit) return 0;
+  return std::max(0.0, heat_capacity - (3 * molecule.atoms - 2) * kGasConstant);
+}
+
+}  // namespace
+
+const ContextModel& ContextModel::embedded() {
+  static const ContextModel model;
+  return model;
+}
+
+const FittedProperty& embedded_fit(FitKind kind) {
+  static std::array<std::unique_ptr<FittedProperty>, fit_kind_count> fits;
+  std::unique_ptr<FittedProperty>& one = fits[static_cast<std::size_t>(kind)];
+  if (one == nullptr) one = std::make_unique<FittedProperty>(fit_embedded(kind));
+  return *one;
+}
+
+FittedProperty fit_embedded(FitKind kind) {
+  FittedProperty out;
+  out.temperatures.assign(1, gas_nodes[0]);
+  if (kind == FitKind::GasAbove) out.temperatures.assign(gas_nodes + 1, gas_nodes + gas_node_count);
+  out.figures = training_figures(kind);
+  out.fit = std::make_unique<ContextFit>(context_settings(kind), fit_rows(kind, out.figures, out.temperatures));
+  out.plain = std::make_unique<Conditioning>(*out.fit, std::vector<std::uint32_t>{}, std::vector<MeasuredDirection>{});
+  return out;
+}
+
+namespace {
+
+Estimate estimate_with(const FittedProperty& fitted, FitKind kind, const Conditioning& conditioning,
+                       std::span<const ContextTerm> terms) {
+  std::vector<ContextFit::Term> parts;
+  parts.reserve(terms.size());
+  for (const ContextTerm& term : terms) parts.push_back({term.coefficient, term.molecule, true});
+  const Direction direction = conditioning.direction(parts);
+  Estimate out;
+  out.variance = std::max(0.0, conditioning.variance(direction));
+  out.unseen = direction.functional.unseen;
+  out.in_table = direction.functional.in_table;
+  for (std::size_t k = 0; k < fitted.temperatures.size(); ++k) {
+    double value = conditioning.mean(direction, k);
+    for (const ContextTerm& term : terms) value += term.coefficient * offset(kind, *term.molecule, fitted.temperatures[k]);
+    out.value.push_back(sign_of(kind) * value);
+  }
+  return out;
+}
+
+Prediction finished(double value, double s, double scale, const ContextSettings& settings, const Estimate& from) {
+  Prediction out;
+  out.value = value * scale;
+  out.s = s * scale;
+  out.u68 = settings.k68 * out.s;
+  out.u95 = settings.k95 * out.s;
+  out.unseen = from.unseen;
+  out.in_table = from.in_table;
+  return out;
+}
+
+}  // namespace
+
+Result<Prediction> ContextModel::predict(Property property, std::span<const ContextTerm> terms, const ContextOptions& options) const {
+  // The same molecule under two terms counts once, with the sum of the coefficients: its table row too.
+  const auto estimate = [&](FitKind kind, std::span<const ContextTerm> of) {
+    const FittedProperty& fitted = embedded_fit(kind);
+    const std::vector<std::uint32_t> without = rows_to_leave(*fitted.fit, of, options);
+    if (without.empty()) {
+      const Conditioning* observed =
+          options.observations != nullptr ? observed_conditioning(*options.observations, kind) : nullptr;
+      return estimate_with(fitted, kind, observed != nullptr ? *observed : *fitted.plain, of);
+    }
+    const std::vector<MeasuredDirection> measured =
+        options.observations != nullptr ? observed_directions(*options.observations, kind) : std::vector<MeasuredDirection>{};
+    return estimate_with(fitted, kind, Conditioning(*fitted.fit, without, measured), of);
+  };
+  if (property != Property::GasHeatCapacity) {
+    const FitKind kind = kind_of(property);
+    const Estimate at = estimate(kind, terms);
+    Prediction out = finished(at.value[0], std::sqrt(at.variance), kind == FitKind::Liquid ? 1.0 : 1000.0, context_settings(kind), at);
+    if (kind != FitKind::Liquid) out.reading = out.s <= 8000 ? Reading::Good : out.s <= 15000 ? Reading::Rough : Reading::None;
+    return out;
+  }
+  if (options.temperature < gas_range_low || options.temperature > gas_range_high) {
+    return Error{"estimate.temperature", "Gas heat capacities are estimated from 273.15 K to 1000 K.", "temperature",
+                 "Use a table or a polynomial beyond that range."};
+  }
+  const Estimate low = estimate(FitKind::Gas298, terms);
+  if (options.temperature == gas_nodes[0] && terms.size() == 1) {
+    const double excess = above_classical_limit(*terms[0].molecule, low.value[0] / terms[0].coefficient) * terms[0].coefficient;
+    return finished(low.value[0] - excess, std::sqrt(low.variance), 1.0, context_settings(FitKind::Gas298), low);
+  }
+  const auto curve_of = [&](std::span<const ContextTerm> of) {
+    const Estimate first = estimate(FitKind::Gas298, of), above = estimate(FitKind::GasAbove, of);
+    GasCurve curve;
+    curve.value[0] = first.value[0];
+    curve.s[0] = std::sqrt(first.variance);
+    for (std::size_t node = 1; node < gas_node_count; ++node) {
+      curve.value[node] = above.value[node - 1];
+      curve.s[node] = std::sqrt(above.variance);
+    }
+    return curve;
+  };
+  const GasCurve curve = curve_of(terms);
+  double value = curve.value_at(options.temperature);
+  for (const ContextTerm& term : terms) {
+    const ContextTerm alone{1, term.molecule};
+    const GasCurve own = terms.size() == 1 ? curve : curve_of(std::span<const ContextTerm>(&alone, 1));
+    const double each = terms.size() == 1 ? 1 / term.coefficient : 1;
+    value -= term.coefficient * above_classical_limit(*term.molecule, own.value_at(options.temperature) * each);
+  }
+  return finished(value, curve.s_at(options.temperature), 1.0, context_settings(FitKind::GasAbove), low);
+}
+
+Result<Prediction> ContextModel::predict(Property property, const ContextMolecule& molecule, const ContextOptions& options) const {
+  const ContextTerm term{1, &molecule};
+  return predict(property, std::span<const ContextTerm>(&term, 1), options);
+}
+
+}  // namespace heatledger::estimate

@@ -1,0 +1,20 @@
+// Repeat units of polymers: the increment of one unit between two long chains, so that the ends cancel.
+#pragma once
+
+#include "core/base/result.hpp"
+#include "core/estimate/context_molecule.hpp"
+#include "core/molecule/graph.hpp"
+
+namespace heatledger::estimate {
+
+bool has_open_ends(const molecule::Graph& graph);
+
+/// A chain of `units` repeat units, its two ends closed with hydrogen.
+/// @errors estimate.repeat_unit: not exactly two `*`, each with one single bond to an atom of the unit
+Result<molecule::Graph> chain_of(const molecule::Graph& unit, unsigned units);
+
+/// Counts of the longer chain minus counts of the shorter one. Own deviation: that of one unit taken as a molecule.
+/// @errors estimate.repeat_unit; those of context_molecule
+Result<ContextMolecule> repeat_unit(const molecule::Graph& unit);
+
+}  // namespace heatledger::estimate
