@@ -27,7 +27,20 @@ export class Core {
    * @returns {Answer}
    */
   request(request) {
-    return JSON.parse(this.requestText(JSON.stringify(request)));
+    try {
+      return JSON.parse(this.requestText(JSON.stringify(request)));
+    } catch (error) {
+      // Core stops at a broken invariant rather than go on with wrong figures; nothing it holds can be trusted then.
+      console.error(error);
+      return {
+        ok: false,
+        error: {
+          code: "page.core_stopped",
+          message: "The calculation stopped on an internal error; the sheet shows its last good state.",
+          hint: "Reload the page and open the file as last saved. Please report the entry that led here.",
+        },
+      };
+    }
   }
 
   /**

@@ -145,8 +145,8 @@ store.subscribe((view, before) => {
 function activate(cell) {
   const data = cellData(cell);
   const row = /** @type {HTMLElement | null} */ (cell.closest("tr[data-fold]"));
-  if (data?.editable) editor.start(cell);
-  else if (data?.kind === "button" && data.id) store.edit(data.id, "");
+  if (data?.kind === "button" && data.id) store.edit(data.id, "");
+  else if (data?.editable) editor.start(cell);
   else if (row) store.edit(row.dataset.fold ?? "", row.getAttribute("aria-expanded") === "true" ? "closed" : "open");
 }
 
@@ -155,19 +155,20 @@ sheetNode.addEventListener("click", (event) => {
   if (!cell || !(event.target instanceof Element) || event.target.closest("input, .choice-list")) return;
   const data = cellData(cell);
   if (cell.hasAttribute("tabindex")) navigation.focus(cell);
-  if (data?.editable) editor.start(cell, {selectAll: data.kind === "number"});
-  else if (data?.kind === "button" || cell.classList.contains("fold-mark")) activate(cell);
+  if (data?.kind === "button" || cell.classList.contains("fold-mark")) activate(cell);
+  else if (data?.editable) editor.start(cell, {selectAll: data.kind === "number"});
 });
 
 sheetNode.addEventListener("keydown", (event) => {
   const cell = navigation.current;
   if (!cell || editor.active || event.altKey) return;
   const data = cellData(cell);
+  const typing = data?.editable && data.kind !== "button";
   const plain = !event.ctrlKey && !event.metaKey;
   if (event.key === "Enter" || event.key === "F2") activate(cell);
-  else if (event.key === " " && !data?.editable) activate(cell);
-  else if ((event.key === "Delete" || event.key === "Backspace") && data?.editable && data.id && data.kind !== "choice") store.edit(data.id, "");
-  else if (event.key.length === 1 && plain && data?.editable) {
+  else if (event.key === " " && !typing) activate(cell);
+  else if ((event.key === "Delete" || event.key === "Backspace") && typing && data.id && data.kind !== "choice") store.edit(data.id, "");
+  else if (event.key.length === 1 && plain && typing) {
     // The key itself goes on into the field that now has the focus.
     editor.start(cell, {typed: data.kind !== "choice"});
     return;
@@ -201,7 +202,7 @@ document.addEventListener("paste", (event) => {
   const cell = navigation.current;
   const data = cell && cell === document.activeElement ? cellData(cell) : undefined;
   const text = event.clipboardData?.getData("text/plain").trim().split(/[\r\n]+/)[0];
-  if (!data?.editable || !data.id || !text) return;
+  if (!data?.editable || data.kind === "button" || !data.id || !text) return;
   store.edit(data.id, text);
   event.preventDefault();
 });

@@ -24,7 +24,7 @@
  * @property {FileState} file
  * @property {Message | null} message
  *
- * @typedef {{shown: string, remark: string, text: string}} Suggestion  text: what stands before the caret, completed
+ * @typedef {{text: string, remark: string, name?: string}} Suggestion  text: what stands before the caret, completed
  */
 
 /** @type {Page} */

@@ -31,7 +31,7 @@ export class CellEditor {
    */
   start(td, how = {}) {
     const cell = cellData(td);
-    if (!cell?.id || !cell.editable) return;
+    if (!cell?.id || !cell.editable || cell.kind === "button") return;
     this.finish("leave");
     const before = cell.edit_text ?? cell.text ?? "";
     const field = make("input", "cell-field");
@@ -94,7 +94,7 @@ export class CellEditor {
     if (!at) return;
     const caret = at.field.selectionStart ?? at.field.value.length;
     const found = this.host.suggest(at.id, at.field.value.slice(0, caret));
-    at.list.show(found.map((entry) => ({text: entry.shown, remark: entry.remark, value: entry.text})));
+    at.list.show(found.map((entry) => ({text: entry.name ?? entry.text, remark: entry.remark, value: entry.text})));
   }
 
   /** @param {string} value */

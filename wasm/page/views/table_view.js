@@ -45,6 +45,7 @@ export class TableView {
   show(block) {
     const look = block.look ?? "list";
     if (this.table.className !== look) this.table.className = look;
+    this.node.className = `block table-block look-${look}${block.rows.some(hasWords) ? "" : " unprinted"}`;
     setAttribute(this.table, "role", block.rows.some((row) => row.fold_id) ? "treegrid" : "grid");
     this.#showColumns(block);
     /** @type {Map<string, RowView>} */
@@ -90,7 +91,8 @@ export class TableView {
     if (before && before.shown === shown) return before;
     const node = before?.node ?? make("tr");
     const role = row.role ?? "body";
-    node.className = `row-${role}${row.fold_id ? " folds" : ""}`;
+    node.className = `row-${role}${row.fold_id ? " folds" : ""}${hasWords(row) ? "" : " unprinted"}`;
+    setAttribute(node, "role", "row");
     setAttribute(node, "data-fold", row.fold_id || null);
     setAttribute(node, "aria-expanded", row.fold_id ? String(Boolean(row.open)) : null);
     setAttribute(node, "aria-level", block.rows.some((other) => other.fold_id) ? (role === "detail" ? "2" : "1") : null);
@@ -104,6 +106,14 @@ export class TableView {
     setChildren(node, views.map((view) => view.node));
     return {node, cells: views, shown};
   }
+}
+
+/**
+ * Whether paper has any use for a row: one that only waits for input or only offers buttons has none.
+ * @param {Row} row
+ */
+function hasWords(row) {
+  return row.cells.some((cell) => cell.text && cell.kind !== "button");
 }
 
 /**
@@ -125,19 +135,20 @@ function showCell(before, cell, columns, folds) {
   const classes = ["cell", `kind-${kind}`, `align-${align}`];
   if (cell.tone && cell.tone !== "plain") classes.push(`tone-${cell.tone}`);
   if (cell.origin && cell.origin !== "none") classes.push(`origin-${cell.origin}`);
-  if (cell.editable) classes.push("editable");
+  if (cell.editable && kind !== "button") classes.push("editable");
   if (last?.spine_after) classes.push("spine");
   if (node.classList.contains("editing")) classes.push("editing");
   if (folds) classes.push("fold-mark");
-  const words = cell.text || (cell.editable ? cell.hint : "") || "";
+  const words = cell.text || (cell.editable && kind !== "button" ? cell.hint : "") || "";
   if (!cell.text && words) classes.push("empty");
   node.className = classes.join(" ");
   if (kind === "equation" && cell.text) setEquation(text, words);
   else if (text.textContent !== words) text.textContent = words;
   node.colSpan = cell.span ?? 1;
+  setAttribute(node, "role", "gridcell");
   setAttribute(node, "data-cell", cell.id || null);
   setAttribute(node, "tabindex", cell.id || folds ? node.getAttribute("tabindex") ?? "-1" : null);
-  setAttribute(node, "aria-readonly", cell.id ? String(!cell.editable) : null);
+  setAttribute(node, "aria-readonly", cell.id ? String(!cell.editable || kind === "button") : null);
   setAttribute(node, "aria-haspopup", kind === "choice" && cell.editable ? "listbox" : null);
   setAttribute(node, "title", cell.hint && cell.text ? cell.hint : null);
   cells.set(node, cell);

@@ -1,0 +1,106 @@
+// How quick the page is in headless Chromium: opening the file, and an edit on a sheet of twenty reactions.
+//   node tests/bench/page_bench.mjs [heatledger.html]      after: cmake --build --preset wasm --target heatledger_page
+// Prints median and 95th percentile in milliseconds. Inputs are fixed: EQUATIONS below, four to a family.
+import {statSync} from "node:fs";
+import {pathToFileURL} from "node:url";
+import {ask, startNodeCore} from "../page/core_module.mjs";
+import {launch, pageFile} from "../page/support.mjs";
+
+const file = process.argv[2] ?? pageFile;
+const OPENINGS = 15;
+const EDITS = 120;
+
+/** Twenty reactions over some sixty species, as the figures to reach ask for. */
+const EQUATIONS = [
+  "nitrobenzene(l) + 3 H2 -> aniline(l) + 2 H2O(l)", "benzene(l) + Cl2 -> chlorobenzene(l) + HCl",
+  "toluene(l) + Cl2 -> benzyl chloride(l) + HCl", "acetic acid(l) + ethanol(l) -> ethyl acetate(l) + H2O(l)",
+  "CH4 + 2 O2 -> CO2 + 2 H2O", "2 CO + O2 -> 2 CO2", "2 H2 + O2 -> 2 H2O", "H2 + Cl2 -> 2 HCl",
+  "N2 + 3 H2 -> 2 NH3", "CO + 2 H2 -> methanol(l)", "ethylene + H2 -> ethane", "propylene + H2 -> propane",
+  "acetone(l) + H2 -> isopropanol(l)", "2 methanol(l) -> dimethyl ether + H2O(l)", "ethylene + H2O -> ethanol(l)",
+  "cyclohexane(l) -> benzene(l) + 3 H2", "phenol(l) + 3 H2 -> cyclohexanol(l)", "acetylene + 2 H2 -> ethane",
+  "formaldehyde + H2 -> methanol(l)", "2 NO + O2 -> 2 NO2",
+];
+
+/** @param {number[]} times */
+function summary(times) {
+  const sorted = [...times].sort((a, b) => a - b);
+  const at = (/** @type {number} */ share) => sorted[Math.min(sorted.length - 1, Math.floor(share * sorted.length))];
+  return `median ${at(0.5).toFixed(1)} ms, 95 % ${at(0.95).toFixed(1)} ms (${sorted.length} times)`;
+}
+
+async function twentyReactions() {
+  const core = await startNodeCore();
+  const {sheet} = ask(core, {do: "new"});
+  EQUATIONS.forEach((text, index) => {
+    if (index > 0) ask(core, {do: "command", sheet, name: "add_reaction"});
+    ask(core, {do: "edit", sheet, cell: `r${index + 1}.equation`, text});
+  });
+  return ask(core, {do: "save", sheet});
+}
+
+const browser = await launch();
+const url = pathToFileURL(file).href;
+console.log(`page file: ${statSync(file).size} bytes`);
+
+const usable = [];
+const painted = [];
+for (let i = 0; i < OPENINGS; ++i) {
+  const context = await browser.newContext({viewport: {width: 1280, height: 900}});
+  const page = await context.newPage();
+  await page.goto(url);
+  await page.waitForSelector("html[data-ready]");
+  const times = await page.evaluate(async () => {
+    await new Promise((resolve) => requestAnimationFrame(() => setTimeout(() => resolve(undefined), 0)));
+    return {usable: performance.getEntriesByName("usable")[0].startTime, frame: performance.now()};
+  });
+  usable.push(times.usable);
+  painted.push(times.frame);
+  await context.close();
+}
+console.log(`from opening the file to a usable sheet: ${summary(usable)}`);
+console.log(`  and to the frame that shows it, as a script sees it: ${summary(painted)}`);
+
+const page = await browser.newPage({viewport: {width: 1280, height: 900}});
+await page.goto(url);
+await page.waitForSelector("html[data-ready]");
+const transfer = await page.evaluateHandle((text) => {
+  const data = new DataTransfer();
+  data.items.add(new File([text], "twenty.heatledger.json", {type: "application/json"}));
+  return data;
+}, await twentyReactions());
+await page.dispatchEvent("#sheet", "drop", {dataTransfer: transfer});
+await page.waitForSelector('td[data-cell="r20.equation"]');
+
+await page.evaluate(() => {
+  /** @type {number[]} */
+  const times = [];
+  Object.assign(window, {times});
+  // A task of its own follows the handlers of the key; it asks for the layout and so waits until that is done.
+  window.addEventListener("keydown", (event) => {
+    if (event.key !== "Enter") return;
+    const channel = new MessageChannel();
+    channel.port1.onmessage = () => {
+      void document.body.offsetHeight;
+      times.push(performance.now() - event.timeStamp);
+    };
+    channel.port2.postMessage(0);
+  }, {capture: true});
+});
+/** @param {string} id */
+async function editTimes(id) {
+  const cell = page.locator(`td[data-cell="${id}"]`);
+  await cell.scrollIntoViewIfNeeded();
+  for (let i = 0; i < EDITS; ++i) {
+    await cell.focus();
+    await page.keyboard.type(String(2 + (i % 7)));
+    await page.evaluate(() => void (/** @type {any} */ (window).times.length = 0));
+    await page.keyboard.press("Enter");
+    await page.evaluate(() => new Promise((resolve) => requestAnimationFrame(() => setTimeout(resolve, 0))));
+    all.push(await page.evaluate(() => /** @type {any} */ (window).times[0]));
+  }
+}
+/** @type {number[]} */
+const all = [];
+for (const id of ["r1.row.1.times", "r10.row.0.times", "r20.row.0.times"]) await editTimes(id);
+console.log(`from Enter in a coefficient to the end of layout, twenty reactions: ${summary(all)}`);
+await browser.close();
