@@ -121,7 +121,7 @@ function actions() {
 
 const palette = new Palette(actions);
 /** @type {Action} */
-const paletteAction = {id: "commands", text: "Ctrl K", key: "Ctrl+K", run: () => palette.open()};
+const paletteAction = {id: "commands", text: "Commands", key: "Ctrl+K", run: () => palette.open()};
 const onBar = ["new", "open", "save", "print"];
 const bar = new BarView(part("bar"), [...pageActions.filter((action) => onBar.includes(action.id)), paletteAction]);
 

@@ -18,6 +18,7 @@ export class BarView {
       button.dataset.action = action.id;
       if (action.key) {
         button.title = action.key;
+        if (action.id === "commands") button.append(make("kbd", "", action.key));
         button.setAttribute("aria-keyshortcuts", action.key.replace("Ctrl", "Control"));
       }
       button.addEventListener("click", action.run);
