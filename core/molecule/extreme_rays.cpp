@@ -164,7 +164,7 @@ std::optional<bool> RankCounter::add(WholeVector vector) {
 }
 
 std::vector<std::size_t> wrong_side(const std::vector<WholeVector>& rows, std::size_t columns) {
-  RankCounter rank(columns);
+  RankCounter rank;
   for (const WholeVector& row : rows) {
     if (!rank.add(row)) return {};
   }

@@ -24,14 +24,12 @@ std::vector<std::size_t> wrong_side(const std::vector<WholeVector>& rows, std::s
 /// Counts linearly independent vectors as they come.
 class RankCounter {
  public:
-  explicit RankCounter(std::size_t columns) : columns_(columns) {}
   /// True when the vector is independent of those before; empty on overflow.
   std::optional<bool> add(WholeVector vector);
   const std::vector<WholeVector>& reduced() const { return rows_; }
   const std::vector<std::size_t>& pivots() const { return pivots_; }
 
  private:
-  std::size_t columns_;
   std::vector<WholeVector> rows_;     ///< in echelon form
   std::vector<std::size_t> pivots_;
 };

@@ -271,7 +271,7 @@ Result<std::vector<std::vector<std::int64_t>>> balance(const std::vector<Composi
     if (a.sum != b.sum) return a.sum < b.sum;
     return a.numbers > b.numbers;
   });
-  RankCounter rank(species);
+  RankCounter rank;
   std::vector<std::vector<std::int64_t>> result;
   for (Way& way : ways) {
     const std::optional<bool> grows = rank.add(way.numbers);
