@@ -1,0 +1,13 @@
+// The tables as compiled in; each file under tables/ says its columns, units and sources at its head.
+#pragma once
+
+#include <string_view>
+
+namespace heatledger::facts::tables {
+
+extern const std::string_view atoms;
+extern const std::string_view compounds;
+extern const std::string_view defaults;
+extern const std::string_view sources;
+
+}  // namespace heatledger::facts::tables
