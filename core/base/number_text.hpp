@@ -19,7 +19,10 @@ std::optional<double> parse_number_prefix(std::string_view text, std::size_t& le
 /// `value` rounded to at most `digits` significant digits (1 to 15), shortest form, '.' as point, '-' as minus:
 /// the text for files and JSON. Exponent form outside 1e-6 .. 1e15. Zero is "0", never "-0".
 /// @validity finite values; CHECKs otherwise (a value that cannot be computed is never a number)
+/// Exact: from 1e-6 to 1e9 in whole numbers of 128 bits, elsewhere by printf; both give the same text.
 std::string machine_number(double value, int digits = 10);
+/// The same at the end of a text; takes no memory of its own.
+void append_machine_number(std::string& text, double value, int digits = 10);
 
 /// `value` with exactly `decimals` decimals (0 to 12) for people: true minus sign U+2212, thin-space (U+2009)
 /// thousands from 1 000 on, '.' as point. A value that rounds to zero shows no sign.

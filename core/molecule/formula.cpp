@@ -8,6 +8,7 @@
 #include "core/base/text_error.hpp"
 #include "core/base/utf8.hpp"
 #include "core/molecule/elements.hpp"
+#include "core/molecule/formula_marks.hpp"
 
 namespace heatledger::molecule {
 namespace {
@@ -59,6 +60,8 @@ class FormulaReader {
     start_ = at_ = std::min(utf8::skip_blanks(text_, 0), end_);
   }
 
+  FormulaMarks& marks() { return marks_; }
+
   Result<Composition> read() {
     if (at_ >= end_) return error("formula.empty", "There is no formula here.", at_, "Write a formula such as C2H5OH.");
     if (is_digit(text_[at_])) {
@@ -72,6 +75,7 @@ class FormulaReader {
       if (at_ >= end_) break;
       const std::size_t dot = dot_at(utf8::skip_blanks(text_, at_));
       if (dot == 0) return unexpected();
+      marks_.dots.push_back(utf8::skip_blanks(text_, at_));
       at_ = utf8::skip_blanks(text_, at_) + dot;
       at_ = utf8::skip_blanks(text_, at_);
       const std::optional<Error> bad_number = read_part_coefficient();
@@ -349,9 +353,14 @@ class FormulaReader {
       }
     }
     if (digits == 0) return std::nullopt;
+    return take_count(value, begin, count);
+  }
+
+  std::optional<Error> take_count(double value, std::size_t begin, double& count) {
     if (value == 0) return error("formula.zero_count", "A count cannot be zero.", begin, "Leave the element out, or write its number.");
     if (!(value <= kMostAtoms)) return too_large(begin);
     count = value;
+    marks_.counts.emplace_back(begin, at_);
     return std::nullopt;
   }
 
@@ -368,9 +377,8 @@ class FormulaReader {
       return std::nullopt;
     }
     if (one_sign && digits == 2 && before.element == 8 && sign < 0 && second_is_charge && !whole) {
-      count = first;  // "SO42-": no oxyanion holds 42 oxygen atoms
-      at_ = begin + 1;
-      return std::nullopt;
+      at_ = begin + 1;  // "SO42-": no oxyanion holds 42 oxygen atoms
+      return take_count(first, begin, count);
     }
     if (one_sign && ((whole && digits <= 2) || (digits == 2 && second_is_charge))) {
       const std::string base(text_.substr(start_, begin - start_));
@@ -383,10 +391,7 @@ class FormulaReader {
     }
     double value = 0;
     for (std::size_t i = begin; i < at_; ++i) value = value * 10 + (text_[i] - '0');
-    if (value == 0) return error("formula.zero_count", "A count cannot be zero.", begin, "Leave the element out, or write its number.");
-    if (!(value <= kMostAtoms)) return too_large(begin);
-    count = value;
-    return std::nullopt;
+    return take_count(value, begin, count);
   }
 
   bool charge_begins() const {
@@ -399,6 +404,7 @@ class FormulaReader {
 
   /// "^2-", "^-2", "^{2-}", "²⁻", "2-", " 2-", "-2", "+++"; raised and plain rows may not be mixed.
   std::optional<Error> read_charge() {
+    marks_.charge = at_;
     at_ = std::min(utf8::skip_blanks(text_, at_), end_);
     const std::size_t begin = at_;
     bool braced = false;
@@ -453,11 +459,21 @@ class FormulaReader {
   double part_ = 1;
   int charge_ = 0;
   Composition result_;
+  FormulaMarks marks_;
 };
 
 }  // namespace
 
 Result<Composition> parse_formula(std::string_view text) { return FormulaReader(text).read(); }
+
+std::optional<FormulaMarks> formula_marks(std::string_view text, int& charge) {
+  FormulaReader reader(text);
+  const Result<Composition> composition = reader.read();
+  if (!composition) return std::nullopt;
+  charge = composition->charge;
+  if (reader.marks().charge == FormulaMarks::kNone) reader.marks().charge = text.size();
+  return std::move(reader.marks());
+}
 
 Composition composition(const Graph& graph) {
   Composition result;

@@ -2,12 +2,15 @@
 #include <algorithm>
 #include <array>
 #include <cmath>
-#include <cstdint>
+#include <cstdlib>
+#include <optional>
 #include <vector>
 
 #include "core/base/number_text.hpp"
+#include "core/base/utf8.hpp"
 #include "core/molecule/elements.hpp"
 #include "core/molecule/formula.hpp"
+#include "core/molecule/formula_marks.hpp"
 
 namespace heatledger::molecule {
 namespace {
@@ -39,6 +42,11 @@ std::string raised(const std::string& digits) {
     }
   }
   return text;
+}
+
+std::string charge_text(int charge) {
+  const int size = std::abs(charge);
+  return (size > 1 ? std::to_string(size) : "") + (charge > 0 ? "+" : "-");
 }
 
 struct Entry {
@@ -97,11 +105,7 @@ std::string formula_text(const Composition& composition, bool display) {
     text += display ? lowered(number) : number;
   }
   if (denominator > 1) text = "(" + text + ")1/" + std::to_string(denominator);
-  if (composition.charge != 0) {
-    const int size = std::abs(composition.charge);
-    const std::string charge = (size > 1 ? std::to_string(size) : "") + (composition.charge > 0 ? "+" : "-");
-    text += display ? raised(charge) : "^" + charge;
-  }
+  if (composition.charge != 0) text += display ? raised(charge_text(composition.charge)) : "^" + charge_text(composition.charge);
   return text;
 }
 
@@ -110,5 +114,30 @@ std::string formula_text(const Composition& composition, bool display) {
 std::string hill_formula(const Composition& composition) { return formula_text(composition, false); }
 
 std::string display_formula(const Composition& composition) { return formula_text(composition, true); }
+
+std::string typeset_formula(std::string_view text) {
+  text = utf8::trim(text);
+  int charge = 0;
+  const std::optional<FormulaMarks> marks = formula_marks(text, charge);
+  if (!marks) return std::string(text);
+  std::string result;
+  std::size_t at = 0, count = 0, dot = 0;
+  while (at < marks->charge) {
+    if (dot < marks->dots.size() && marks->dots[dot] == at) {
+      result += "\u00B7";
+      at += utf8::code_point_at(text, at).bytes;
+      ++dot;
+    } else if (count < marks->counts.size() && marks->counts[count].first == at) {
+      const auto [begin, end] = marks->counts[count];
+      result += lowered(std::string(text.substr(begin, end - begin)));
+      at = end;
+      ++count;
+    } else {
+      result += text[at++];
+    }
+  }
+  if (charge != 0) result += raised(charge_text(charge));
+  return result;
+}
 
 }  // namespace heatledger::molecule

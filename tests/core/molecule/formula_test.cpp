@@ -105,6 +105,19 @@ TEST(Formula, HillTextReadsBackToTheSameComposition) {
   }
 }
 
+TEST(Formula, SetsTypedTextInItsOwnOrder) {
+  EXPECT_EQ(typeset_formula("CH3CH2OH"), "CH\u2083CH\u2082OH");
+  EXPECT_EQ(typeset_formula("Ca(OH)2"), "Ca(OH)\u2082");
+  EXPECT_EQ(typeset_formula("CuSO4.5H2O"), "CuSO\u2084\u00B75H\u2082O");
+  EXPECT_EQ(typeset_formula("CaSO4*0.5H2O"), "CaSO\u2084\u00B70.5H\u2082O");
+  EXPECT_EQ(typeset_formula("SO42-"), "SO\u2084\u00B2\u207B");
+  EXPECT_EQ(typeset_formula("SO4^2-"), "SO\u2084\u00B2\u207B");
+  EXPECT_EQ(typeset_formula("Fe3+"), "Fe\u00B3\u207A");
+  EXPECT_EQ(typeset_formula("[Fe(CN)6]3-"), "[Fe(CN)\u2086]\u00B3\u207B");
+  EXPECT_EQ(typeset_formula("C\u2086H\u2086"), "C\u2086H\u2086");
+  EXPECT_EQ(typeset_formula("nitrobenzene"), "nitrobenzene");
+}
+
 TEST(Formula, RefusesBadTextWithCodeAndOffset) {
   const std::string folder = "tests/data/formula/bad";
   const std::vector<std::string> names = test::list_source_folder(folder);
