@@ -2,8 +2,8 @@
 
 #include <algorithm>
 #include <bit>
+#include <cstddef>
 #include <utility>
-#include <vector>
 
 #include "core/molecule/matching.hpp"
 #include "core/molecule/rings.hpp"
@@ -13,12 +13,15 @@ namespace {
 
 using Edge = std::pair<std::uint32_t, std::uint32_t>;
 
-// The double bonds that could lie elsewhere: ring bonds between atoms that have one double bond each.
-struct MobileSystem {
-  std::vector<Edge> edges;
-  std::vector<std::uint32_t> bonds;   // of each edge
-  std::vector<std::uint32_t> system;  // per atom: a root atom of its connected system
-};
+bool hetero_pair(const Graph& graph, const Bond& bond) {
+  return graph.atoms[bond.a].element != 6 && graph.atoms[bond.b].element != 6;
+}
+
+bool has_double_hetero_pair(const Graph& graph) {
+  return std::any_of(graph.bonds.begin(), graph.bonds.end(), [&](const Bond& bond) {
+    return bond.order == Order::Double && hetero_pair(graph, bond);
+  });
+}
 
 std::uint32_t root_of(std::vector<std::uint32_t>& parent, std::uint32_t atom) {
   while (parent[atom] != atom) {
@@ -28,35 +31,42 @@ std::uint32_t root_of(std::vector<std::uint32_t>& parent, std::uint32_t atom) {
   return atom;
 }
 
-MobileSystem find_mobile(const Graph& graph) {
-  std::vector<std::uint8_t> in_ring;
-  find_ring_bonds(graph, in_ring);
-  std::vector<std::uint8_t> doubles(graph.atoms.size(), 0);
+// One connected set of mobile bonds.
+struct System {
+  std::vector<std::uint32_t> atoms;
+  std::vector<Edge> hetero_pairs;
+  bool joined_pair = false;  // one of the pairs has the double bond now
+};
+
+std::vector<System> mobile_systems(const Graph& graph, const std::vector<std::uint8_t>& mobile) {
+  std::vector<std::uint32_t> parent(graph.atoms.size());
+  std::vector<std::uint8_t> member(graph.atoms.size(), 0);
+  for (std::uint32_t i = 0; i < graph.atoms.size(); ++i) parent[i] = i;
+  for (std::size_t i = 0; i < graph.bonds.size(); ++i) {
+    if (!mobile[i]) continue;
+    const Bond& bond = graph.bonds[i];
+    member[bond.a] = member[bond.b] = 1;
+    parent[root_of(parent, bond.a)] = root_of(parent, bond.b);
+  }
+  std::vector<System> systems;
+  std::vector<std::uint32_t> number(graph.atoms.size(), Matching::none);
+  for (std::uint32_t i = 0; i < graph.atoms.size(); ++i) {
+    if (!member[i]) continue;
+    std::uint32_t& at = number[root_of(parent, i)];
+    if (at == Matching::none) {
+      at = static_cast<std::uint32_t>(systems.size());
+      systems.emplace_back();
+    }
+    systems[at].atoms.push_back(i);
+  }
   for (std::size_t i = 0; i < graph.bonds.size(); ++i) {
     const Bond& bond = graph.bonds[i];
-    if (bond.order < Order::Double) continue;
-    // A double bond beside the ring, or a triple one, fixes the atom.
-    const std::uint8_t weight = bond.order == Order::Double && in_ring[i] ? 1 : 2;
-    for (const std::uint32_t end : {bond.a, bond.b}) {
-      doubles[end] = static_cast<std::uint8_t>(std::min(2, doubles[end] + weight));
-    }
+    if (!mobile[i] || !hetero_pair(graph, bond)) continue;
+    System& system = systems[number[root_of(parent, bond.a)]];
+    system.hetero_pairs.emplace_back(bond.a, bond.b);
+    system.joined_pair |= bond.order == Order::Double;
   }
-  MobileSystem mobile;
-  mobile.system.resize(graph.atoms.size());
-  for (std::uint32_t i = 0; i < graph.atoms.size(); ++i) mobile.system[i] = i;
-  for (std::uint32_t i = 0; i < graph.bonds.size(); ++i) {
-    const Bond& bond = graph.bonds[i];
-    if (!in_ring[i] || doubles[bond.a] != 1 || doubles[bond.b] != 1 || bond.order < Order::Single) continue;
-    mobile.edges.emplace_back(bond.a, bond.b);
-    mobile.bonds.push_back(i);
-    mobile.system[root_of(mobile.system, bond.a)] = root_of(mobile.system, bond.b);
-  }
-  for (std::uint32_t i = 0; i < graph.atoms.size(); ++i) mobile.system[i] = root_of(mobile.system, i);
-  return mobile;
-}
-
-bool hetero_pair(const Graph& graph, const Bond& bond) {
-  return graph.atoms[bond.a].element != 6 && graph.atoms[bond.b].element != 6;
+  return systems;
 }
 
 // Matches every free atom of the list again; false when some stay free.
@@ -67,15 +77,17 @@ bool rematch(Matching& matching, const std::vector<std::uint32_t>& atoms) {
   return true;
 }
 
-// Leaves as few hetero pairs joined as any Kekulé structure of this system needs.
-void thin_out(Matching& matching, const std::vector<Edge>& pairs, const std::vector<std::uint32_t>& atoms) {
+// Leaves as few hetero pairs joined as any Kekulé structure of this system needs; the others are forbidden after it.
+// Of several sets with that number the first in the order of the pairs is taken.
+void thin_out(Matching& matching, const System& system) {
   constexpr std::size_t exhaustive = 12;
+  const std::vector<Edge>& pairs = system.hetero_pairs;
   if (pairs.size() > exhaustive) {
     for (const Edge& pair : pairs) {
       matching.set_forbidden(pair.first, pair.second, true);
-      if (rematch(matching, atoms)) continue;
+      if (rematch(matching, system.atoms)) continue;
       matching.set_forbidden(pair.first, pair.second, false);
-      rematch(matching, atoms);
+      rematch(matching, system.atoms);
     }
     return;
   }
@@ -86,53 +98,109 @@ void thin_out(Matching& matching, const std::vector<Edge>& pairs, const std::vec
       for (std::size_t p = 0; p < pairs.size(); ++p) {
         matching.set_forbidden(pairs[p].first, pairs[p].second, ((set >> p) & 1u) == 0);
       }
-      if (rematch(matching, atoms)) return;
+      if (rematch(matching, system.atoms)) return;
     }
+  }
+}
+
+// Fixes partners one atom after the other: lowest rank first, with the lowest partner that still lets all be matched.
+void match_by_rank(Matching& matching, const System& system) {
+  for (const std::uint32_t atom : system.atoms) {
+    if (matching.removed(atom)) continue;
+    for (const std::uint32_t partner : matching.allowed_neighbours(atom)) {
+      if (matching.removed(partner)) continue;
+      const std::uint32_t left = matching.mate(atom);
+      const std::uint32_t right = matching.mate(partner);
+      if (left != partner) {
+        matching.part(atom);
+        matching.part(partner);
+        matching.set_removed(atom, true);
+        matching.set_removed(partner, true);
+        const bool possible = matching.augment(left, false);
+        matching.set_removed(atom, false);
+        matching.set_removed(partner, false);
+        if (!possible) {
+          matching.join(atom, left);
+          matching.join(partner, right);
+          continue;
+        }
+        matching.join(atom, partner);
+      }
+      matching.set_removed(atom, true);
+      matching.set_removed(partner, true);
+      break;
+    }
+  }
+}
+
+void choose(Graph& graph, const std::vector<std::uint32_t>* ranks) {
+  std::vector<std::uint8_t> mobile;
+  find_mobile_bonds(graph, mobile);
+  const auto rank = [&](std::uint32_t atom) { return ranks == nullptr ? atom : (*ranks)[atom]; };
+  std::vector<Edge> edges;
+  std::vector<std::size_t> edge_bond;
+  for (std::size_t i = 0; i < graph.bonds.size(); ++i) {
+    if (mobile[i]) edge_bond.push_back(i);
+  }
+  const auto ends = [&](const Bond& bond) {
+    return Edge{std::min(rank(bond.a), rank(bond.b)), std::max(rank(bond.a), rank(bond.b))};
+  };
+  std::sort(edge_bond.begin(), edge_bond.end(),
+            [&](std::size_t a, std::size_t b) { return ends(graph.bonds[a]) < ends(graph.bonds[b]); });
+  for (const std::size_t at : edge_bond) edges.emplace_back(graph.bonds[at].a, graph.bonds[at].b);
+  Matching matching(static_cast<std::uint32_t>(graph.atoms.size()), edges);
+  for (const std::size_t at : edge_bond) {
+    if (graph.bonds[at].order == Order::Double) matching.join(graph.bonds[at].a, graph.bonds[at].b);
+  }
+  std::vector<System> systems = mobile_systems(graph, mobile);
+  for (System& system : systems) {
+    std::sort(system.atoms.begin(), system.atoms.end(),
+              [&](std::uint32_t a, std::uint32_t b) { return rank(a) < rank(b); });
+    std::sort(system.hetero_pairs.begin(), system.hetero_pairs.end(), [&](const Edge& a, const Edge& b) {
+      return Edge{std::min(rank(a.first), rank(a.second)), std::max(rank(a.first), rank(a.second))} <
+             Edge{std::min(rank(b.first), rank(b.second)), std::max(rank(b.first), rank(b.second))};
+    });
+    // Without a joined pair the number is lowest already; the ranks still want the others kept out.
+    if (system.joined_pair || (ranks != nullptr && !system.hetero_pairs.empty())) thin_out(matching, system);
+    if (ranks != nullptr) match_by_rank(matching, system);
+  }
+  for (const std::size_t at : edge_bond) {
+    Bond& bond = graph.bonds[at];
+    bond.order = matching.mate(bond.a) == bond.b ? Order::Double : Order::Single;
   }
 }
 
 }  // namespace
 
-void choose_kekule_bonds(Graph& graph) {
-  bool any = false;
-  for (const Bond& bond : graph.bonds) any |= bond.order == Order::Double && hetero_pair(graph, bond);
-  if (!any) return;
-  const MobileSystem mobile = find_mobile(graph);
-  Matching matching(static_cast<std::uint32_t>(graph.atoms.size()), mobile.edges);
-  std::vector<std::uint8_t> thin(graph.atoms.size(), 0);  // by root: the system holds a joined hetero pair
-  for (const std::uint32_t at : mobile.bonds) {
-    const Bond& bond = graph.bonds[at];
-    if (bond.order != Order::Double) continue;
-    matching.join(bond.a, bond.b);
-    if (hetero_pair(graph, bond)) thin[mobile.system[bond.a]] = 1;
-  }
-  std::vector<std::pair<std::uint32_t, std::uint32_t>> members, pair_bonds;  // root first, so that sorting groups them
-  for (std::uint32_t i = 0; i < graph.atoms.size(); ++i) {
-    if (thin[mobile.system[i]]) members.emplace_back(mobile.system[i], i);
-  }
-  for (const std::uint32_t at : mobile.bonds) {
-    const std::uint32_t system = mobile.system[graph.bonds[at].a];
-    if (thin[system] && hetero_pair(graph, graph.bonds[at])) pair_bonds.emplace_back(system, at);
-  }
-  std::sort(members.begin(), members.end());
-  std::sort(pair_bonds.begin(), pair_bonds.end());
-  std::vector<Edge> pairs;
-  std::vector<std::uint32_t> atoms;
-  for (std::size_t m = 0, p = 0; m < members.size();) {
-    const std::uint32_t system = members[m].first;
-    pairs.clear();
-    atoms.clear();
-    for (; m < members.size() && members[m].first == system; ++m) atoms.push_back(members[m].second);
-    for (; p < pair_bonds.size() && pair_bonds[p].first == system; ++p) {
-      const Bond& bond = graph.bonds[pair_bonds[p].second];
-      pairs.emplace_back(bond.a, bond.b);
+void find_mobile_bonds(const Graph& graph, std::vector<std::uint8_t>& mobile) {
+  find_ring_bonds(graph, mobile);
+  // Per atom: double bonds in rings, with a multiple bond beside the ring or a triple one counted as two.
+  std::vector<std::uint8_t> doubles(graph.atoms.size(), 0);
+  for (std::size_t i = 0; i < graph.bonds.size(); ++i) {
+    const Bond& bond = graph.bonds[i];
+    if (bond.order < Order::Double) continue;
+    const int weight = bond.order == Order::Double && mobile[i] ? 1 : 2;
+    for (const std::uint32_t end : {bond.a, bond.b}) {
+      doubles[end] = static_cast<std::uint8_t>(std::min(2, doubles[end] + weight));
     }
-    thin_out(matching, pairs, atoms);
   }
-  for (const std::uint32_t at : mobile.bonds) {
-    Bond& bond = graph.bonds[at];
-    bond.order = matching.mate(bond.a) == bond.b ? Order::Double : Order::Single;
+  // An atom whose partner is fixed is fixed too.
+  for (std::size_t i = 0; i < graph.bonds.size(); ++i) {
+    const Bond& bond = graph.bonds[i];
+    if (bond.order != Order::Double || !mobile[i]) continue;
+    const std::uint8_t worst = std::max(doubles[bond.a], doubles[bond.b]);
+    if (worst != 1) doubles[bond.a] = doubles[bond.b] = worst;
+  }
+  for (std::size_t i = 0; i < graph.bonds.size(); ++i) {
+    const Bond& bond = graph.bonds[i];
+    if (doubles[bond.a] != 1 || doubles[bond.b] != 1 || bond.order < Order::Single) mobile[i] = 0;
   }
 }
+
+void choose_kekule_bonds(Graph& graph) {
+  if (has_double_hetero_pair(graph)) choose(graph, nullptr);
+}
+
+void choose_kekule_bonds(Graph& graph, const std::vector<std::uint32_t>& ranks) { choose(graph, &ranks); }
 
 }  // namespace heatledger::molecule

@@ -42,12 +42,18 @@ void Matching::join(std::uint32_t a, std::uint32_t b) {
   mate_[b] = a;
 }
 
-void Matching::set_removed(std::uint32_t vertex, bool removed) {
-  removed_[vertex] = removed ? 1 : 0;
-  if (removed && mate_[vertex] != none) {
-    mate_[mate_[vertex]] = none;
-    mate_[vertex] = none;
+void Matching::part(std::uint32_t vertex) {
+  if (mate_[vertex] == none) return;
+  mate_[mate_[vertex]] = none;
+  mate_[vertex] = none;
+}
+
+std::vector<std::uint32_t> Matching::allowed_neighbours(std::uint32_t vertex) const {
+  std::vector<std::uint32_t> found;
+  for (std::uint32_t e = first_[vertex]; e < first_[vertex + 1]; ++e) {
+    if (!forbidden_[e]) found.push_back(neighbours_[e]);
   }
+  return found;
 }
 
 void Matching::set_forbidden(std::uint32_t a, std::uint32_t b, bool forbidden) {
@@ -57,7 +63,7 @@ void Matching::set_forbidden(std::uint32_t a, std::uint32_t b, bool forbidden) {
   for (std::uint32_t e = first_[b]; e < first_[b + 1]; ++e) {
     if (neighbours_[e] == a) forbidden_[e] = forbidden ? 1 : 0;
   }
-  if (forbidden && mate_[a] == b) mate_[a] = mate_[b] = none;
+  if (forbidden && mate_[a] == b) part(a);
 }
 
 void Matching::touch(std::uint32_t vertex) {

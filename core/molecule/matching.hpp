@@ -23,8 +23,13 @@ class Matching {
   void join(std::uint32_t a, std::uint32_t b);
   /// Allows augmentation to leave this vertex free again (it may be matched, but need not be).
   void set_optional(std::uint32_t vertex) { optional_[vertex] = 1; }
-  /// Takes a vertex out of the graph, or puts it back; a matched vertex is freed together with its mate.
-  void set_removed(std::uint32_t vertex, bool removed);
+  /// Frees a vertex and its mate.
+  void part(std::uint32_t vertex);
+  /// Hides a vertex from augmentation, or shows it again; its mate stays as it is.
+  void set_removed(std::uint32_t vertex, bool removed) { removed_[vertex] = removed ? 1 : 0; }
+  bool removed(std::uint32_t vertex) const { return removed_[vertex] != 0; }
+  /// Neighbours over allowed edges, in the order in which the edges were given.
+  std::vector<std::uint32_t> allowed_neighbours(std::uint32_t vertex) const;
   /// Forbids or allows an edge; a matched one is parted.
   void set_forbidden(std::uint32_t a, std::uint32_t b, bool forbidden);
 

@@ -327,6 +327,4 @@ std::vector<Ring> relevant_cycles(const Graph& graph, bool* complete) {
   return rings;
 }
 
-std::vector<Ring> symmetrised_smallest_rings(const Graph& graph) { return relevant_cycles(graph); }
-
 }  // namespace heatledger::molecule

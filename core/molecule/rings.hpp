@@ -1,4 +1,4 @@
-// Rings of a graph: the relevant cycles (union of all minimum cycle bases) and a symmetrised smallest set.
+// Rings of a graph: which bonds lie in one, and the relevant cycles (union of all minimum cycle bases).
 #pragma once
 
 #include <cstdint>
@@ -22,9 +22,5 @@ void find_ring_bonds(const Graph& graph, std::vector<std::uint8_t>& in_ring);
 /// @complexity quadratic in the atoms of a ring system; families of over 1,000 rings are cut, and systems of over
 /// 4,000 ring atoms give none, and then `complete` is cleared
 std::vector<Ring> relevant_cycles(const Graph& graph, bool* complete = nullptr);
-
-/// A smallest set of smallest rings, made symmetric: with it every ring of the same size that could stand in for one
-/// of its rings. Same as relevant_cycles for nearly all molecules; kept apart because fitted tables refer to it.
-std::vector<Ring> symmetrised_smallest_rings(const Graph& graph);
 
 }  // namespace heatledger::molecule

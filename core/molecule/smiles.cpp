@@ -284,10 +284,12 @@ bool Reader::read_bracket() {
   atom.isotope = static_cast<std::uint16_t>(isotope);
   if (!read_bracket_symbol(atom) || !read_chirality(atom)) return false;
   if (peek() == 'H') {
-    if (atom.element == 1) return fail(SmilesFault::HydrogenOnHydrogen, at_);
-    ++at_;
+    const std::size_t count = at_++;
     atom.hydrogens = 1;
     if (peek() >= '0' && peek() <= '9') atom.hydrogens = static_cast<std::uint8_t>(text_[at_++] - '0');
+    // Only [HH] itself, as many tables write the hydrogen molecule.
+    const bool lone = previous_ == no_atom && peek() == ']' && text_[at_ - 1] == 'H';
+    if (atom.element == 1 && !lone) return fail(SmilesFault::HydrogenOnHydrogen, count);
   }
   if (!read_charge(atom)) return false;
   if (peek() == ':') {
@@ -305,7 +307,13 @@ bool Reader::read_bracket() {
     return fail(SmilesFault::InsideBracket, at_);
   }
   ++at_;
-  return add_atom(atom, start);
+  if (atom.element != 1 || atom.hydrogens == 0) return add_atom(atom, start);
+  // [HH], a hydrogen molecule: two atoms, so that its bond is one like any other.
+  atom.hydrogens = 0;
+  if (!add_atom(atom, start)) return false;
+  Atom second;
+  second.element = 1;
+  return add_atom(second, start);
 }
 
 bool Reader::close_ring(std::size_t number, std::size_t offset) {
