@@ -82,12 +82,15 @@ class FeatureCode {
 /// "B2o", "OMP".
 const char* class_name(FeatureClass family);
 
-/// Mixes one word into a hash; + − × and shifts only, so equal in every build.
+/// Mixes one word into a hash; the two arguments play different parts, so mix(a, b) is not mix(b, a). Whole-number
+/// arithmetic only, so equal in every build.
 constexpr std::uint64_t mix(std::uint64_t state, std::uint64_t value) {
-  state = (state ^ value) * 0x9e3779b97f4a7c15ULL;
-  state ^= state >> 29;
-  state *= 0xbf58476d1ce4e5b9ULL;
-  return state ^ (state >> 32);
+  std::uint64_t mixed = (state + 0x243f6a8885a308d3ULL) * 0x9e3779b97f4a7c15ULL;
+  mixed ^= mixed >> 31;
+  mixed = (mixed + value) * 0xbf58476d1ce4e5b9ULL;
+  mixed ^= mixed >> 29;
+  mixed *= 0x94d049bb133111ebULL;
+  return mixed ^ (mixed >> 32);
 }
 
 }  // namespace heatledger::estimate

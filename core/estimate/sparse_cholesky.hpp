@@ -1,5 +1,5 @@
-// Cholesky factor of a sparse symmetric positive definite matrix, in an order that keeps it sparse. Only + − × ÷ √ in
-// a fixed order, so every build gives the same digits.
+// Cholesky factor of a sparse symmetric positive definite matrix in an order that keeps it sparse, with its dense
+// last block stored as such. Only + − × ÷ √, each entry in a fixed order, so every build gives the same digits.
 #pragma once
 
 #include <cstdint>
@@ -14,24 +14,42 @@ struct LowerTriangle {
   std::size_t size() const { return start.empty() ? 0 : start.size() - 1; }
 };
 
+/// P = Πᵀ L Lᵀ Π. Unknowns that few rows share come first and stay sparse; the often-seen ones end up in a dense block.
 class SparseCholesky {
  public:
-  /// Factors P = Πᵀ L Lᵀ Π. CHECKs that the matrix is positive definite.
+  /// CHECKs that the matrix is positive definite.
   void factor(const LowerTriangle& matrix);
 
-  std::size_t size() const { return factor_.size(); }
-  std::size_t nonzeros() const { return factor_.value.size(); }
+  std::size_t size() const { return place_.size(); }
+  std::size_t dense_size() const { return dense_; }
+  std::size_t nonzeros() const { return sparse_.value.size() + dense_ * (dense_ + 1) / 2; }
 
-  /// z = L⁻¹ Π x, so that x'P⁻¹y = z(x)·z(y). Columns whose entry is zero cost nothing.
+  /// z = L⁻¹ Π x, so that x'P⁻¹y = z(x)·z(y). Unknowns that x does not touch cost nothing in the sparse part.
   /// @param x  length size(); left as it was
   /// @param z  receives length size()
   void forward(const std::vector<double>& x, std::vector<double>& z) const;
   /// x = Πᵀ L⁻ᵀ z
   void backward(std::vector<double> z, std::vector<double>& x) const;
 
+  /// x'P⁻¹x. After tabulate() its cost follows the unknowns touched, no longer the dense block.
+  double squared_norm(const std::vector<double>& x) const;
+  /// Inverts the dense block, for bulk work: cubic in its size, once.
+  void tabulate();
+
  private:
-  LowerTriangle factor_;
-  std::vector<int> place_;  ///< place_[j]: row of L that stands for unknown j
+  void factor_sparse(const LowerTriangle& permuted);
+  void factor_dense();
+  void forward_sparse(std::vector<double>& z) const;
+  void forward_dense(double* z) const;
+  double* column(std::size_t j) { return block_.data() + column_start_[j]; }
+  const double* column(std::size_t j) const { return block_.data() + column_start_[j]; }
+
+  std::size_t dense_ = 0;       ///< unknowns of the dense block, the last ones
+  LowerTriangle sparse_;        ///< columns before the block, rows down to the end
+  std::vector<double> block_;   ///< lower triangle of the block by columns, each from its diagonal down
+  std::vector<std::size_t> column_start_;
+  std::vector<double> inverse_; ///< full inverse of block × blockᵀ; empty until tabulated
+  std::vector<int> place_;      ///< place_[j]: row of L that stands for unknown j
 };
 
 }  // namespace heatledger::estimate
