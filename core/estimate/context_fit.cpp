@@ -250,7 +250,7 @@ Functional ContextFit::functional(const std::vector<Term>& terms, const std::vec
     }
     if (!term.own) continue;
     const double own = std::sqrt(own_variance(settings_, term.molecule->measures));
-    const std::uint32_t row = find_row(*term.molecule);
+    const std::uint32_t row = term.own_row ? find_row(*term.molecule) : kNone;
     const std::uint64_t identity =
         row != kNone ? mix(row, 0xd1) : mix(mix(term.molecule->constitution, term.molecule->stereo), 0xd2);
     add_latent(identity, term.coefficient * own, row, own, true);
@@ -304,6 +304,13 @@ double ContextFit::mean(const Functional& functional, std::size_t right_hand_sid
   for (std::size_t j = 0; j < beta.size(); ++j) {
     if (functional.x[j] != 0) sum += functional.x[j] * beta[j];
   }
+  return sum;
+}
+
+double ContextFit::variance(const Functional& f) const {
+  double sum = cholesky_.squared_norm(f.x);
+  for (const Functional::Latent& latent : f.latents) sum += latent.coefficient * latent.coefficient;
+  for (const Functional::RowShare& row : f.rows) sum -= row.share * row.share / row_noise_[row.row];
   return sum;
 }
 

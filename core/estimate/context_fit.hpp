@@ -86,12 +86,14 @@ class ContextFit {
   struct Term {
     double coefficient = 1;
     const ContextMolecule* molecule = nullptr;
-    bool own = true;  ///< with the molecule's own deviation
+    bool own = true;      ///< with the molecule's own deviation
+    bool own_row = true;  ///< the molecule's row of the table, if any, tells of that deviation
   };
   Functional functional(const std::vector<Term>& terms, const std::vector<std::uint32_t>& without) const;
 
   /// Σ x β for one right-hand side plus the constant of the functional.
   double mean(const Functional& functional, std::size_t right_hand_side) const;
+  double variance(const Functional& functional) const;
   /// Covariance of two functionals whose forward solves are known.
   double covariance(const Functional& f, const std::vector<double>& zf, const Functional& g, const std::vector<double>& zg) const;
 

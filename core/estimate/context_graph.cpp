@@ -276,11 +276,12 @@ bool has_stereo(const ContextGraph& graph, std::uint32_t double_bond) {
   return true;
 }
 
-Result<ContextGraph> context_graph(const molecule::Graph& graph) {
+Result<ContextGraph> context_graph(const molecule::Graph& graph, KekuleForm form) {
   if (Status status = check_atoms(graph); !status) return status.error();
   if (Status status = check_one_fragment(graph); !status) return status.error();
   molecule::Graph settled = graph;
   molecule::perceive_aromaticity(settled);
+  static_cast<void>(form);
   molecule::neutralise_charges(settled);
   ContextGraph out;
   if (Status status = fill_atoms(settled, out); !status) return status.error();

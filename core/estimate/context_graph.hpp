@@ -8,6 +8,7 @@
 #include <vector>
 
 #include "core/base/result.hpp"
+#include "core/estimate/context_molecule.hpp"
 #include "core/estimate/feature_code.hpp"
 #include "core/molecule/graph.hpp"
 
@@ -79,6 +80,6 @@ int side_of(const ContextGraph& graph, std::uint32_t end, std::uint32_t neighbou
 bool has_stereo(const ContextGraph& graph, std::uint32_t double_bond);
 
 /// @errors as context_molecule, but for repeat units, which stand in context_polymer.cpp
-Result<ContextGraph> context_graph(const molecule::Graph& graph);
+Result<ContextGraph> context_graph(const molecule::Graph& graph, KekuleForm form = KekuleForm::Canonical);
 
 }  // namespace heatledger::estimate

@@ -85,7 +85,7 @@ Estimate estimate_with(const FittedProperty& fitted, FitKind kind, const Conditi
                        std::span<const ContextTerm> terms) {
   std::vector<ContextFit::Term> parts;
   parts.reserve(terms.size());
-  for (const ContextTerm& term : terms) parts.push_back({term.coefficient, term.molecule, true});
+  for (const ContextTerm& term : terms) parts.push_back({term.coefficient, term.molecule});
   const Direction direction = conditioning.direction(parts);
   Estimate out;
   out.variance = std::max(0.0, conditioning.variance(direction));

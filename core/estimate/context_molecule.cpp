@@ -46,9 +46,9 @@ ContextMolecule molecule_from(const ContextGraph& graph, FeatureSink& sink) {
   return out;
 }
 
-Result<ContextMolecule> context_molecule(const molecule::Graph& graph) {
+Result<ContextMolecule> context_molecule(const molecule::Graph& graph, KekuleForm form) {
   if (has_open_ends(graph)) return repeat_unit(graph);
-  Result<ContextGraph> prepared = context_graph(graph);
+  Result<ContextGraph> prepared = context_graph(graph, form);
   if (!prepared) return prepared.error();
   FeatureSink sink;
   return molecule_from(*prepared, sink);

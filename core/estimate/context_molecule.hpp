@@ -51,10 +51,14 @@ struct ContextMolecule {
   bool repeat_unit = false;            ///< figures are the increment of one unit in a long chain
 };
 
+/// Which Kekulé structure stands for rings that are not aromatic but could be drawn in several ways (rare: fused odd
+/// rings). Canonical: the same whatever was written. AsWritten is for comparing with tables made elsewhere.
+enum class KekuleForm : std::uint8_t { Canonical, AsWritten };
+
 /// Counts the features of a structure. A graph with two `*` of one bond each is a repeat unit.
 /// The order in which the atoms were written makes no difference to any digit.
 /// @errors estimate.empty, estimate.fragments, estimate.element, estimate.charged, estimate.radical,
 ///         estimate.valence, estimate.repeat_unit; the message names the atom or element
-Result<ContextMolecule> context_molecule(const molecule::Graph& graph);
+Result<ContextMolecule> context_molecule(const molecule::Graph& graph, KekuleForm form = KekuleForm::Canonical);
 
 }  // namespace heatledger::estimate

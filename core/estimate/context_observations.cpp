@@ -67,7 +67,7 @@ std::vector<MeasuredDirection> observed_directions(const Observations& observati
     MeasuredDirection one;
     one.figure = sign_of(kind) * measurement.value / scale;
     for (const Measurement::Term& term : measurement.terms) {
-      one.terms.push_back({term.coefficient, term.molecule.get(), true});
+      one.terms.push_back({term.coefficient, term.molecule.get()});
       one.figure -= term.coefficient * offset(kind, *term.molecule, gas_nodes[0]);
     }
     const double s = measurement.u95 / scale / 2;

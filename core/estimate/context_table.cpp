@@ -180,13 +180,14 @@ double error_variance(const ContextSettings& settings, const TrainingFigure& fig
   return s * s + extra * extra;
 }
 
-std::vector<FitRow> fit_rows(FitKind kind, const std::vector<TrainingFigure>& figures, const std::vector<double>& temperatures) {
+std::vector<FitRow> fit_rows(FitKind kind, const std::vector<TrainingFigure>& figures, const std::vector<double>& temperatures,
+                             const MoleculeSource& molecule) {
   const ContextSettings& settings = context_settings(kind);
   std::vector<FitRow> rows;
   rows.reserve(figures.size());
   for (const TrainingFigure& figure : figures) {
     FitRow row;
-    row.molecule = &training_molecule(figure.compound);
+    row.molecule = &molecule(figure.compound);
     row.own = own_variance(settings, row.molecule->measures);
     row.noise = (row.own + error_variance(settings, figure)) / std::min(figure.weight, 1.0);
     for (std::size_t k = 0; k < figure.value.size(); ++k) {

@@ -2,7 +2,9 @@
 #pragma once
 
 #include <cstdint>
+#include <functional>
 #include <optional>
+#include <string>
 #include <string_view>
 #include <vector>
 
@@ -45,9 +47,13 @@ std::vector<TrainingFigure> training_figures_at(std::size_t node);
 /// The sources of a figure in words: "ATcT 1.112, CRC 95".
 std::string source_text(std::string_view letters);
 
+/// Where the features of a row's compound come from.
+using MoleculeSource = std::function<const ContextMolecule&(std::size_t compound)>;
+
 /// Rows to fit: offset taken off, variances from settings. One right-hand side per value.
 /// @param temperatures  one per value; [K], used by the gas heat capacity only
-std::vector<FitRow> fit_rows(FitKind kind, const std::vector<TrainingFigure>& figures, const std::vector<double>& temperatures);
+std::vector<FitRow> fit_rows(FitKind kind, const std::vector<TrainingFigure>& figures, const std::vector<double>& temperatures,
+                             const MoleculeSource& molecule = training_molecule);
 
 /// Variance of a figure's error: (u95 / 2)² and the extra spread of a single source.
 double error_variance(const ContextSettings& settings, const TrainingFigure& figure);
