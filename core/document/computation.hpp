@@ -1,8 +1,8 @@
 // Results of a worksheet: recomputed where an edit reaches, shared elsewhere.
 #pragma once
 
-#include <map>
 #include <memory>
+#include <optional>
 #include <string>
 #include <vector>
 
@@ -11,11 +11,13 @@
 
 namespace heatledger::document {
 
-/// A reaction of the sheet computed: a ledger, or the error that stands in its place.
+/// A reaction of the sheet computed: a ledger, or the error that stands in its place. Immutable: the same inputs give
+/// the same object, so that a page can tell by identity what an edit reached.
 struct ReactionResult {
-  std::shared_ptr<const balance::Reaction> reaction;  ///< null when the equation could not be read
+  std::shared_ptr<const balance::Reaction> reaction;  ///< null when the equation is empty or could not be read
   std::shared_ptr<const balance::Ledger> ledger;      ///< null when not balanced or not readable
-  std::optional<Error> error;
+  std::optional<Error> error;                         ///< of the equation or the ledger
+  std::optional<Error> option_error;  ///< of basis, bond set or route; the ledger then stands on the default
 };
 
 struct Results {
@@ -23,11 +25,14 @@ struct Results {
   std::vector<Error> errors;  ///< typed bonds that cannot be read, and the like; `where` is a field path
 };
 
-/// Keeps species and ledgers between edits, so that one edit recomputes one ledger.
+/// Keeps species, equations, bond sets and ledgers between edits, so that one edit recomputes one ledger.
 class Calculator {
  public:
   Calculator();
   ~Calculator();
+  Calculator(Calculator&&) noexcept;
+  Calculator& operator=(Calculator&&) noexcept;
+
   Results compute(const Worksheet& sheet);
 
  private:

@@ -2,9 +2,9 @@
 #pragma once
 
 #include <cstddef>
+#include <deque>
 #include <memory>
 #include <string>
-#include <vector>
 
 #include "core/document/worksheet.hpp"
 
@@ -14,20 +14,27 @@ using State = std::shared_ptr<const Worksheet>;
 
 class History {
  public:
+  /// @param depth  edits that can be undone, at least 1; the oldest are forgotten beyond it
   explicit History(State first, std::size_t depth = 20000);
 
-  const State& current() const { return states_[at_]; }
+  const State& current() const { return entries_[at_].state; }
+  /// @param label  what the edit did, for "Undo …" ("edit equation")
   void push(State next, std::string label);
   bool undo();
   bool redo();
   bool can_undo() const { return at_ > 0; }
-  bool can_redo() const { return at_ + 1 < states_.size(); }
+  bool can_redo() const { return at_ + 1 < entries_.size(); }
+  std::size_t undo_depth() const { return at_; }
+  /// Label of the edit that undo (redo) would take back (repeat); empty when there is none.
   std::string undo_label() const;
   std::string redo_label() const;
 
  private:
-  std::vector<State> states_;
-  std::vector<std::string> labels_;  ///< labels_[i] led from states_[i] to states_[i + 1]
+  struct Entry {
+    State state;
+    std::string label;  ///< the edit that led here
+  };
+  std::deque<Entry> entries_;
   std::size_t at_ = 0, depth_ = 0;
 };
 

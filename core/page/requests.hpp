@@ -1,5 +1,5 @@
 // JSON requests of the browser face and of tests: {"do": "...", ...} in, {"ok":true,"value":…} or
-// {"ok":false,"error":{…}} out.
+// {"ok":false,"error":{"code","message","where","hint"}} out. Any input at all gets one of the two.
 #pragma once
 
 #include <string>
@@ -7,9 +7,29 @@
 
 namespace heatledger::page {
 
-/// do: "new" | "open" {text} | "save" | "page" | "edit" {cell, text} | "command" {name, arguments} | "margin" {cell} |
-/// "suggest" {text, limit} | "report" | "csv" | "svg" {drawing} | "close"; each with "sheet": number, except "new" and
-/// "open", which answer it. "edit" and "command" answer the new page.
+/// "sheet" is a number that "new" or "open" gave.
+///
+///   do        further members                     value
+///   new                                           {"sheet": 1}
+///   open      text                                {"sheet": 2}
+///   save      sheet                               the file text; the sheet counts as saved
+///   export    sheet                               the file text for recovery; leaves the saved mark alone
+///   page      sheet, since?                       page, or the changes since that revision
+///   edit      sheet, cell, text, since?           the same
+///   command   sheet, name, arguments?, since?     the same
+///   margin    sheet, cell                         margin
+///   suggest   sheet, text, limit?                 [{"text", "remark"}]
+///   state     sheet                               {"changed": bool, "revision": n}
+///   report    sheet                               HTML text
+///   text      sheet, width?                       terminal text
+///   csv       sheet                               CSV text
+///   svg       sheet, drawing                      SVG text
+///   close     sheet                               true
+///
+/// Page: {"title","revision","blocks":[…],"commands":[…]}; members that hold their default are left out. With "since":
+/// {"title","since","revision","blocks":[changed ones],"commands":[…]} and, when blocks came, went or moved, "order":
+/// the ids of all blocks in order; a block that is not in "order" is gone.
+/// @errors request.not_understood, request.no_such_sheet, request.too_many_sheets and those of session.hpp
 std::string handle_request(std::string_view request);
 
 }  // namespace heatledger::page

@@ -1,11 +1,12 @@
-// A sheet being worked on: history, results, folds, selection. Every face talks to a sheet through this and nothing
-// else; requests.hpp gives the same as JSON text.
+// A sheet being worked on: history, results, folds. Every face talks to a sheet through this and nothing else;
+// requests.hpp gives the same as JSON text.
 #pragma once
 
 #include <map>
 #include <memory>
 #include <string>
 #include <string_view>
+#include <vector>
 
 #include "core/base/result.hpp"
 #include "core/page/page.hpp"
@@ -20,21 +21,34 @@ class Session {
   Session& operator=(Session&&) noexcept;
 
   /// Replaces the sheet by the file's; on error the present sheet stays.
+  /// @errors file.*
   Status open(std::string_view file_text);
-  std::string save();  ///< file text; marks the sheet as saved
+  std::string save();               ///< file text; marks the sheet as saved
+  std::string file_text() const;    ///< the same without the mark: for recovery copies
   bool changed_since_save() const;
 
   /// The text typed into an editable cell. An unreadable text is kept and shown with its error, never lost.
+  /// Pressing a Button cell is an edit with any text.
   /// @errors edit.no_such_cell, edit.not_editable
   Status edit(std::string_view cell, std::string_view text);
-  /// A named command ("undo", "redo", "add_reaction", "remove_reaction", "fold", …) with arguments.
-  /// @errors command.unknown, command.argument
+  /// A named command with arguments; names and arguments: page/README.md.
+  /// @errors command.unknown, command.argument, command.nothing_to_undo, command.nothing_to_redo
   Status command(std::string_view name, const std::map<std::string, std::string>& arguments);
 
+  /// Stays valid until the next call that changes the sheet.
   const Page& page();
-  Margin margin(std::string_view cell);
-  /// Completions of a half-typed species name: texts to insert with a quiet remark each.
-  struct Suggestion { std::string insert, remark; };
+  /// Revision at which blocks of the page last came, went or moved.
+  std::uint64_t order_changed() const;
+  /// Everything about one cell. @errors edit.no_such_cell
+  Result<Margin> margin(std::string_view cell);
+  /// Margins of every cell that has a working, in reading order: the appendix of a report.
+  std::vector<Margin> workings();
+
+  /// Completions of the species name that a half-typed equation (or name) ends with: the whole text with the name
+  /// put in, and a quiet remark each.
+  struct Suggestion {
+    std::string insert, remark;
+  };
   std::vector<Suggestion> suggest(std::string_view text, std::size_t limit);
 
  private:

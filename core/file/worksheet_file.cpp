@@ -1,1 +1,0 @@
-#include "core/file/worksheet_file.hpp"

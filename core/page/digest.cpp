@@ -1,0 +1,90 @@
+#include "core/page/digest.hpp"
+
+#include <array>
+#include <cstdint>
+
+#include "core/page/figures.hpp"
+
+namespace heatledger::page {
+namespace {
+
+/// FNV-1a, 64 bits: tells texts apart, guards against nothing.
+class Digest {
+ public:
+  void add(const std::string& text) {
+    for (const char c : text) step(static_cast<unsigned char>(c));
+    step(0xff);  // parts texts: no byte of UTF-8
+  }
+  std::string hex() const {
+    constexpr std::array<char, 17> kDigits{"0123456789abcdef"};
+    std::string out;
+    for (int shift = 60; shift >= 0; shift -= 4) out += kDigits[(state_ >> shift) & 0xfU];
+    return out;
+  }
+
+ private:
+  void step(std::uint64_t byte) { state_ = (state_ ^ byte) * 0x100000001b3ULL; }
+  std::uint64_t state_ = 0xcbf29ce484222325ULL;
+};
+
+void add_quantity(Digest& digest, const std::optional<uncertainty::Quantity>& quantity) {
+  digest.add(quantity ? figure_kj(quantity->figure()) : std::string("none"));
+}
+
+void add_reaction(Digest& digest, const document::ReactionResult& result) {
+  if (result.ledger == nullptr) {
+    digest.add(result.error ? result.error->code : "empty");
+    return;
+  }
+  const balance::Ledger& ledger = *result.ledger;
+  for (const balance::LedgerRow& row : ledger.rows) {
+    add_quantity(digest, row.in_equation);
+    add_quantity(digest, row.table);
+  }
+  add_quantity(digest, ledger.gas_298);
+  for (const balance::Correction& correction : ledger.corrections) add_quantity(digest, correction.value);
+  add_quantity(digest, ledger.as_written);
+  for (const balance::Route& route : ledger.routes) {
+    digest.add(route.name);
+    add_quantity(digest, route.as_written);
+  }
+  digest.add(ledger.taken);
+}
+
+}  // namespace
+
+file::SavedResults results_to_save(const document::Worksheet& sheet, const document::Results& results) {
+  file::SavedResults saved;
+  Digest digest;
+  for (std::size_t i = 0; i < sheet.reactions.size(); ++i) {
+    const document::ReactionResult& result = *results.reactions[i];
+    add_reaction(digest, result);
+    if (result.ledger == nullptr) continue;
+    const std::string taken = taken_text(*result.ledger);
+    if (!taken.empty()) saved.figures[sheet.reactions[i]->id] = taken + ", by " + route_words(result.ledger->taken);
+  }
+  saved.digest = digest.hex();
+  return saved;
+}
+
+std::vector<std::string> changed_figures(const document::Worksheet& sheet, const file::SavedResults& saved,
+                                         const file::SavedResults& now) {
+  std::vector<std::string> sentences;
+  if (saved.digest.empty() || saved.digest == now.digest) return sentences;
+  for (std::size_t i = 0; i < sheet.reactions.size(); ++i) {
+    const std::string& id = sheet.reactions[i]->id;
+    const auto before = saved.figures.find(id), after = now.figures.find(id);
+    const std::string was = before == saved.figures.end() ? "no value" : before->second;
+    const std::string is = after == now.figures.end() ? "no value" : after->second;
+    if (was == is) continue;
+    sentences.push_back("Reaction " + std::to_string(i + 1) + " read " + was + " when this sheet was saved and reads " + is +
+                        " now: other tables or another version of the program stand behind it.");
+  }
+  if (sentences.empty()) {
+    sentences.push_back(
+        "Some figures of this sheet no longer read as they did when it was saved; the figures taken are the same.");
+  }
+  return sentences;
+}
+
+}  // namespace heatledger::page

@@ -1,0 +1,35 @@
+// How figures of a sheet are spelled: kJ, decimals that suit the ±, signs. Every text of a figure is made here.
+#pragma once
+
+#include <optional>
+#include <string>
+
+#include "core/balance/ledger.hpp"
+#include "core/uncertainty/quantity.hpp"
+
+namespace heatledger::page {
+
+/// [J] as kJ with the decimals given: "6 225", "−518"; signed_kj writes "+" too.
+std::string kj(double joule, int decimals);
+std::string signed_kj(double joule, int decimals);
+/// "± 62" as the sheet shows it in a column of its own; empty when zero.
+std::string half_width_kj(double joule, int decimals);
+/// "−552.6 ± 3.0" from [J], decimals after the ±; "−552.6" when the ± is zero.
+std::string figure_kj(const uncertainty::Figure& joule);
+
+/// Decimals of one figure in kJ: two digits of its ±, at most one.
+int decimals_kj(double u95_joule);
+/// Decimals of a ledger's columns: none where every price is a whole number of kJ or the total is vaguer than that.
+int ledger_decimals(const balance::Ledger& ledger);
+
+/// A coefficient as typed: "3", "1/2", "0.25".
+std::string coefficient_text(const molecule::Coefficient& coefficient);
+
+/// "average bonds" for "average", and back; an unknown name stands for itself.
+std::string route_words(const std::string& route);
+std::string route_from_words(const std::string& words);
+
+/// The figure taken as the sheet prints it, with its unit: "−552.6 ± 3.0 kJ/mol nitrobenzene"; empty without one.
+std::string taken_text(const balance::Ledger& ledger);
+
+}  // namespace heatledger::page

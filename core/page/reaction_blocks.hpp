@@ -1,0 +1,46 @@
+// The blocks of one reaction: equation, ledger, result, routes, profile, cautions. Built anew only when the reaction
+// or its result changed; the parts stand in ledger_table.cpp, result_blocks.cpp and drawings.cpp.
+#pragma once
+
+#include <map>
+#include <set>
+#include <string>
+#include <vector>
+
+#include "core/document/computation.hpp"
+#include "core/page/page.hpp"
+
+namespace heatledger::page {
+
+/// A text that could not be taken into the sheet, kept for the cell it was typed into.
+struct RejectedText {
+  std::string text;
+  Error error;
+  friend bool operator==(const RejectedText& a, const RejectedText& b) { return a.text == b.text && a.error == b.error; }
+};
+
+struct ReactionView {
+  const document::ReactionSheet& sheet;
+  const document::ReactionResult& result;
+  std::size_t number = 1, count = 1;                  ///< place among the reactions of the sheet, from 1
+  const std::set<std::string>& open_rows;             ///< fold ids that are open
+  const std::map<std::string, RejectedText>& rejected;  ///< by cell id
+};
+
+std::vector<Block> reaction_blocks(const ReactionView& view);
+
+/// "r1.row.0" in "r1.row.0.broken".
+std::string row_id(const document::ReactionSheet& sheet, std::size_t row);
+
+Table ledger_table(const ReactionView& view);
+/// Boxes with the figure taken and what it is per mole and per kilogram.
+Table result_table(const ReactionView& view);
+/// Each route with its figure and ±, or the reason why it has none.
+Table routes_table(const ReactionView& view);
+
+/// Routes as dots with their intervals on one axis; nothing to draw gives an empty drawing (no strokes).
+Drawing routes_drawing(const std::string& id, const balance::Ledger& ledger);
+/// From the reactants up to the free atoms and down to the products, to scale.
+Drawing profile_drawing(const std::string& id, const balance::Ledger& ledger);
+
+}  // namespace heatledger::page
