@@ -187,16 +187,16 @@ Result<int> file_version(const Json& root) {
   const Json* version = root.find("version");
   if (version == nullptr || version->kind() != Json::Kind::Number) return not_a_worksheet("version");
   const std::optional<double> number = parse_number(version->text());
+  constexpr double kMostChecked = 1e9;  // beyond it a number is newer whatever its decimals
   if (!number || *number < 0) return not_a_worksheet("version");
+  if (*number < kMostChecked && static_cast<int>(*number) != *number) return not_a_worksheet("version");
   if (*number > kWorksheetVersion) {
     return Error{"file.newer_version",
                  "This worksheet was saved in format version " + version->text() + "; this program reads up to version " +
                      std::to_string(kWorksheetVersion) + ".",
                  "version", "Open it with a newer copy of the program; nothing was changed."};
   }
-  const int whole = static_cast<int>(*number);
-  if (whole != *number) return not_a_worksheet("version");
-  return whole;
+  return static_cast<int>(*number);
 }
 
 /// Gives every reaction an id of its own that can be part of a cell id.
