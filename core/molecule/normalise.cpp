@@ -88,9 +88,8 @@ void return_to_octet(Graph& graph, const Adjacency& adjacency, std::uint32_t ato
   --graph.atoms[best->atom].charge;
 }
 
-}  // namespace
-
-void neutralise_charges(Graph& graph) {
+// `keep_adducts`: a borate or aluminate beside a cation has its octet by its charge and keeps it.
+void join_charges(Graph& graph, bool keep_adducts) {
   if (!any_charge(graph)) return;
   for (bool changed = true; changed;) {
     changed = false;
@@ -102,6 +101,7 @@ void neutralise_charges(Graph& graph) {
         Atom& plus = a.charge > 0 ? a : b;
         Atom& minus = a.charge > 0 ? b : a;
         if (partner_class(minus.element) != turn) continue;
+        if (keep_adducts && (minus.element == 5 || minus.element == 13)) continue;
         --plus.charge;
         ++minus.charge;
         if (!bond.aromatic && bond.order < Order::Triple) {
@@ -113,9 +113,13 @@ void neutralise_charges(Graph& graph) {
   }
 }
 
+}  // namespace
+
+void neutralise_charges(Graph& graph) { join_charges(graph, false); }
+
 void take_octet_form(Graph& graph) {
   for (Bond& bond : graph.bonds) bond.aromatic = false;
-  neutralise_charges(graph);
+  join_charges(graph, true);
   Adjacency adjacency;
   build_adjacency(graph, adjacency);
   for (std::uint32_t i = 0; i < graph.atoms.size(); ++i) {

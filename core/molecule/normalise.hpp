@@ -15,7 +15,7 @@ void neutralise_charges(Graph& graph);
 /// then each nitrogen or oxygen above its octet gives back one order and a pair of charges, to a terminal O first, then
 /// another chalcogen, a terminal N, the most electronegative neighbour.
 /// nitro [N+](=O)[O-], N-oxide and nitrone [N+][O-], azide C-N=[N+]=[N-], diazo C=[N+]=[N-], N2O N#[N+]-[O-],
-/// O3 O=[O+][O-], CO [C-]#[O+], isocyanide C-[N+]#[C-], sulfone S=O twice, ammonium ylid [N+]-[C-].
+/// O3 O=[O+][O-], adducts of boron [N+]-[B-], CO [C-]#[O+], isocyanide C-[N+]#[C-], sulfone S=O twice, ammonium ylid [N+]-[C-].
 /// Where a ring has several Kekulé structures that differ in their bonds (pyridazine), one with the fewest double
 /// bonds between two hetero atoms is taken. Aromatic flags are cleared.
 void take_octet_form(Graph& graph);

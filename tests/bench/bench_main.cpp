@@ -1,0 +1,4 @@
+// The suites' helper library brings GoogleTest's main along; this one goes first.
+#include <benchmark/benchmark.h>
+
+BENCHMARK_MAIN();
