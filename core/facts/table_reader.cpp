@@ -29,6 +29,16 @@ void split_cells(std::string_view line, std::vector<std::string_view>& cells) {
   cells.push_back(line);
 }
 
+std::vector<std::string_view> split_bars(std::string_view cell) {
+  std::vector<std::string_view> out;
+  while (!cell.empty()) {
+    const std::size_t bar = cell.find('|');
+    out.push_back(cell.substr(0, bar));
+    cell = bar == std::string_view::npos ? std::string_view() : cell.substr(bar + 1);
+  }
+  return out;
+}
+
 std::size_t TableReader::column(std::string_view name) const {
   for (std::size_t i = 0; i < names_.size(); ++i) {
     if (names_[i] == name) return i;

@@ -11,6 +11,9 @@ namespace heatledger::facts {
 /// Cells of one line; `cells` is emptied first.
 void split_cells(std::string_view line, std::vector<std::string_view>& cells);
 
+/// Entries of a cell that holds a list, "a|b|c".
+std::vector<std::string_view> split_bars(std::string_view cell);
+
 class TableReader {
  public:
   explicit TableReader(std::string_view text);

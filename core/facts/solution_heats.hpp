@@ -1,0 +1,38 @@
+// Integral heats of solution in water at 25 degC against dilution. Each curve is of one source; curves are never joined.
+#pragma once
+
+#include <optional>
+#include <string_view>
+#include <vector>
+
+namespace heatledger::facts {
+
+struct SolutionHeatPoint {
+  double ratio = 0;  ///< moles of water per mole of solute
+  double heat = 0;   ///< [J per mole of solute]; < 0 gives off heat
+  double u95 = 0;    ///< [J/mol]
+};
+
+struct SolutionHeats {
+  std::string_view solute;  ///< formula as typed: "H2SO4"
+  char phase = 's';         ///< before dissolving
+  std::string_view source;
+  bool from_memory = false; ///< not compared with a copy of the source
+  std::vector<SolutionHeatPoint> points;            ///< rising ratio; empty for salts with infinite dilution only
+  std::optional<SolutionHeatPoint> infinite;        ///< infinite dilution; its ratio is not used
+};
+
+/// All curves; for a solute with several, the one with the most points first.
+const std::vector<SolutionHeats>& solution_heats();
+/// The first curve of a solute in a phase; nullptr when there is none.
+/// @param formula  as typed; compared by composition, so that "NaOH" and "HNaO" are one
+const SolutionHeats* find_solution_heats(std::string_view formula, char phase);
+
+/// Heat of dissolving one mole in `ratio` moles of water [J/mol], interpolated between the points, monotone where they
+/// are, in x = ratio / (ratio + 1); a curve with its infinite dilution reaches x = 1.
+/// @param ratio  moles of water per mole of solute
+/// @return empty below the first point, and beyond the last when the curve has no figure for infinite dilution
+/// @source F. N. Fritsch and R. E. Carlson, SIAM J. Numer. Anal. 17 (1980) 238: monotone cubic pieces
+std::optional<SolutionHeatPoint> solution_heat_at(const SolutionHeats& curve, double ratio);
+
+}  // namespace heatledger::facts
