@@ -62,14 +62,16 @@ std::shared_ptr<Species> species_of(std::string_view text, const Compound& compo
   species->name = compound.name;
   species->compound = &compound;
   species->aqueous = find_aqueous_name(compound.name);
-  const Result<molecule::Composition> composition = molecule::parse_formula(compound.formula);
-  CHECK(composition.ok(), "the formula of every compound can be read");
-  set_composition(*species, *composition);
+  // Site records may hold texts that cannot be read: such a species has no composition or no structure.
+  if (const Result<molecule::Composition> composition = molecule::parse_formula(compound.formula)) {
+    set_composition(*species, *composition);
+  }
   if (compound.structure == Structure::Molecule) {
-    Result<molecule::Graph> graph = molecule::parse_smiles(compound.smiles);
-    CHECK(graph.ok(), "the structure of every compound can be read");
-    std::string canonical = molecule::canonical_smiles(*graph);
-    set_structure(*species, std::move(*graph), std::move(canonical));
+    if (Result<molecule::Graph> graph = molecule::parse_smiles(compound.smiles)) {
+      if (!species->composition) set_composition(*species, molecule::composition(*graph));
+      std::string canonical = molecule::canonical_smiles(*graph);
+      set_structure(*species, std::move(*graph), std::move(canonical));
+    }
   }
   return species;
 }
