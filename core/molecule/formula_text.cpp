@@ -20,7 +20,9 @@ constexpr std::array<std::string_view, 10> kSubscripts = {"\u2080", "\u2081", "\
 constexpr std::array<std::string_view, 10> kSuperscripts = {"\u2070", "\u00B9", "\u00B2", "\u00B3", "\u2074",
                                                             "\u2075", "\u2076", "\u2077", "\u2078", "\u2079"};
 
+/// Whole numbers only: there is no lowered point or slash, and "Fe0.95O" has to read back.
 std::string lowered(const std::string& digits) {
+  if (digits.find_first_of("./") != std::string::npos) return digits;
   std::string text;
   for (const char c : digits) {
     if (c >= '0' && c <= '9') {
