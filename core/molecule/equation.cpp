@@ -71,6 +71,7 @@ class EquationReader {
       }
       pending_plus_ = mark.joint == Joint::Plus;
       at += mark.bytes;
+      joint_end_ = at;
       term = at;
     }
     if (!open_.empty()) {
@@ -120,16 +121,10 @@ class EquationReader {
     return {};
   }
 
-  Mark joint_at(std::size_t at) {
+  Mark joint_at(std::size_t at) const {
     if (text_[at] != '+') return arrow_at(at);
-    const bool attached_left = !blank_or_start(at) && at != last_plus_end_;
-    if (!attached_left) {
-      last_plus_end_ = at + 1;
-      return {Joint::Plus, 1};
-    }
-    if (plus_is_charge(at)) return {};
-    last_plus_end_ = at + 1;
-    return {Joint::Plus, 1};
+    const bool attached_left = !blank_or_start(at) && at != joint_end_;
+    return attached_left && plus_is_charge(at) ? Mark{} : Mark{Joint::Plus, 1};
   }
 
   /// A plus directly after text: charge or separator? Looks past one run of blanks or digits only.
@@ -192,7 +187,7 @@ class EquationReader {
   std::vector<Term> sides_[2];
   EquationText result_;
   bool arrow_seen_ = false, pending_plus_ = false;
-  std::size_t last_plus_end_ = static_cast<std::size_t>(-1);
+  std::size_t joint_end_ = static_cast<std::size_t>(-1);  ///< just past the last arrow or separating plus
 };
 
 }  // namespace
