@@ -220,20 +220,20 @@ Result<double> absolute_pressure(const TypedValue& typed, double ambient) {
   return pressure;
 }
 
-std::string print(double si_value, const Unit& unit, int decimals) {
-  std::string text = display_number(unit.from_si(si_value), decimals);
+std::string print(double in_si, const Unit& unit, int decimals) {
+  std::string text = display_number(unit.from_si(in_si), decimals);
   if (!unit.display.empty()) text += (unit.display == "%" ? "\u00A0" : " ") + unit.display;
   return text;
 }
 
-std::string print(const uncertainty::Figure& si_figure, const Unit& unit, int most_decimals) {
-  std::string text = figure_text({unit.from_si(si_figure.value), std::fabs(si_figure.u95 / unit.factor)}, most_decimals);
+std::string print(const uncertainty::Figure& figure_in_si, const Unit& unit, int most_decimals) {
+  std::string text = figure_text({unit.from_si(figure_in_si.value), std::fabs(figure_in_si.u95 / unit.factor)}, most_decimals);
   if (!unit.display.empty()) text += " " + unit.display;
   return text;
 }
 
-std::string machine_text(double si_value, const Unit& unit) {
-  std::string text = machine_number(unit.from_si(si_value));
+std::string machine_text(double in_si, const Unit& unit) {
+  std::string text = machine_number(unit.from_si(in_si));
   if (!unit.text.empty()) text += " " + unit.text;
   return text;
 }

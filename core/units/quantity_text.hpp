@@ -39,10 +39,10 @@ Result<TypedValue> parse_quantity(std::string_view text, const Dimension& expect
 Result<double> absolute_pressure(const TypedValue& typed, double ambient = kStandardAtmosphere);
 
 /// "1.20 t/h" for people: true minus, thin spaces, `decimals` decimals, the unit set.
-std::string print(double si_value, const Unit& unit, int decimals);
+std::string print(double in_si, const Unit& unit, int decimals);
 /// "340 ± 10 kJ/mol", decimals as the ± justifies, at most `most_decimals`; the ± is left out when it is zero.
-std::string print(const uncertainty::Figure& si_figure, const Unit& unit, int most_decimals);
+std::string print(const uncertainty::Figure& figure_in_si, const Unit& unit, int most_decimals);
 /// "1.2 t/h" for files: reads back through parse_quantity to the same figure (10 digits).
-std::string machine_text(double si_value, const Unit& unit);
+std::string machine_text(double in_si, const Unit& unit);
 
 }  // namespace heatledger::units
