@@ -5,8 +5,10 @@
 namespace heatledger::utf8 {
 namespace {
 
-constexpr std::array<std::string_view, 9> kBlanks = {" ",      "\t",     "\n",     "\r",    "\u00A0",
-                                                     "\u2009", "\u2007", "\u202F", "\u3000"};
+constexpr std::array<std::string_view, 5> kWideBlanks = {"\u00A0", "\u2009", "\u2007", "\u202F", "\u3000"};
+
+bool is_plain(char c) { return static_cast<unsigned char>(c) < 0x80; }
+bool is_plain_blank(char c) { return c == ' ' || c == '\t' || c == '\n' || c == '\r'; }
 
 bool is_continuation(char c) { return (static_cast<unsigned char>(c) & 0xC0u) == 0x80u; }
 
@@ -58,14 +60,17 @@ std::size_t first_malformed(std::string_view text) {
 
 std::size_t blank_at(std::string_view text, std::size_t at) {
   if (at >= text.size()) return 0;
-  for (const std::string_view blank : kBlanks) {
+  if (is_plain(text[at])) return is_plain_blank(text[at]) ? 1 : 0;
+  for (const std::string_view blank : kWideBlanks) {
     if (text.compare(at, blank.size(), blank) == 0) return blank.size();
   }
   return 0;
 }
 
 std::size_t blank_before(std::string_view text, std::size_t at) {
-  for (const std::string_view blank : kBlanks) {
+  if (at == 0 || at > text.size()) return 0;
+  if (is_plain(text[at - 1])) return is_plain_blank(text[at - 1]) ? 1 : 0;
+  for (const std::string_view blank : kWideBlanks) {
     if (at >= blank.size() && text.compare(at - blank.size(), blank.size(), blank) == 0) return blank.size();
   }
   return 0;

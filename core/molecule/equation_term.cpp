@@ -68,6 +68,7 @@ bool take_digits(std::string_view text, std::size_t& at, std::int64_t& value, in
 
 /// "½" at `at`: numerator, denominator, bytes (0: none).
 const Vulgar* vulgar_at(std::string_view text, std::size_t at) {
+  if (static_cast<unsigned char>(text[at]) < 0x80) return nullptr;
   for (const Vulgar& vulgar : kVulgar) {
     if (text.compare(at, vulgar.text.size(), vulgar.text) == 0) return &vulgar;
   }
