@@ -1,5 +1,6 @@
 #include "core/estimate/context_conditioning.hpp"
 
+#include <algorithm>
 #include <cmath>
 
 #include "core/base/check.hpp"
@@ -36,6 +37,14 @@ void SmallCholesky::forward(std::vector<double>& x) const {
   for (std::size_t i = 0; i < size_; ++i) {
     double value = x[i];
     for (std::size_t k = 0; k < i; ++k) value -= factor_[i * size_ + k] * x[k];
+    x[i] = value / factor_[i * size_ + i];
+  }
+}
+
+void SmallCholesky::backward(std::vector<double>& x) const {
+  for (std::size_t i = size_; i-- > 0;) {
+    double value = x[i];
+    for (std::size_t k = i + 1; k < size_; ++k) value -= factor_[k * size_ + i] * x[k];
     x[i] = value / factor_[i * size_ + i];
   }
 }
@@ -105,6 +114,32 @@ std::vector<double> Conditioning::onto_measurements(const Direction& direction) 
 double Conditioning::mean(const Direction& direction, std::size_t right_hand_side) const {
   const double before = mean_before_measurements(direction, right_hand_side);
   return measured_.empty() ? before : before + dot(onto_measurements(direction), measured_pull_);
+}
+
+std::vector<double> Conditioning::row_weights(const Direction& direction) const {
+  // Measurements take over a part of the estimate: what is left of it, as a sum of directions.
+  std::vector<std::pair<double, const Direction*>> parts{{1.0, &direction}};
+  std::vector<double> gain = onto_measurements(direction);
+  measured_factor_.backward(gain);
+  for (std::size_t o = 0; o < gain.size(); ++o) parts.emplace_back(-gain[o], &measured_[o]);
+  std::vector<double> weights(fit_.rows().size(), 0.0), z(fit_.unknowns(), 0.0), solved;
+  for (const auto& [factor, part] : parts) {
+    for (std::size_t j = 0; j < z.size(); ++j) z[j] += factor * part->z[j];
+    std::vector<double> pull = part->widened;
+    left_out_.backward(pull);
+    for (std::size_t r = 0; r < pull.size(); ++r) {
+      for (std::size_t j = 0; j < z.size(); ++j) z[j] += factor * pull[r] * left_out_z_[r][j];
+    }
+    for (const Functional::RowShare& share : part->functional.rows) {
+      weights[share.row] += factor * share.share / fit_.row_variance(share.row);
+    }
+  }
+  fit_.cholesky().backward(std::move(z), solved);
+  for (std::uint32_t row = 0; row < weights.size(); ++row) {
+    if (std::find(without_.begin(), without_.end(), row) != without_.end()) continue;
+    weights[row] += fit_.row_dot(row, solved) / fit_.row_variance(row);
+  }
+  return weights;
 }
 
 double Conditioning::covariance(const Direction& a, const Direction& b) const {

@@ -16,6 +16,8 @@ class SmallCholesky {
   std::size_t size() const { return size_; }
   /// x = C⁻¹ x
   void forward(std::vector<double>& x) const;
+  /// x = C⁻ᵀ x
+  void backward(std::vector<double>& x) const;
 
  private:
   std::vector<double> factor_;
@@ -45,6 +47,8 @@ class Conditioning {
   double mean(const Direction& direction, std::size_t right_hand_side) const;
   double variance(const Direction& direction) const { return covariance(direction, direction); }
   double covariance(const Direction& a, const Direction& b) const;
+  /// What the mean changes by when the figure of each row changes by one.
+  std::vector<double> row_weights(const Direction& direction) const;
   const std::vector<std::uint32_t>& without() const { return without_; }
 
  private:

@@ -3,8 +3,7 @@
 #include <algorithm>
 #include <cmath>
 
-#include "core/base/check.hpp"
-#include "core/estimate/context_conditioning.hpp"
+#include "core/estimate/context_query.hpp"
 #include "core/estimate/context_store.hpp"
 #include "core/estimate/gas_interpolation.hpp"
 
@@ -12,42 +11,6 @@ namespace heatledger::estimate {
 namespace {
 
 constexpr double kGasConstant = 8.314462618;  // J/(mol K), exact by the SI of 2019
-
-FitKind kind_of(Property property) {
-  switch (property) {
-    case Property::GasFormation:
-      return FitKind::Formation;
-    case Property::Vaporisation298:
-      return FitKind::Vaporisation;
-    case Property::LiquidHeatCapacity298:
-      return FitKind::Liquid;
-    case Property::GasHeatCapacity:
-      break;
-  }
-  return FitKind::Gas298;
-}
-
-/// Value and variance in the units of the fit.
-struct Estimate {
-  std::vector<double> value;
-  double variance = 0;
-  int unseen = 0;
-  bool in_table = false;
-};
-
-std::vector<std::uint32_t> rows_to_leave(const ContextFit& fit, std::span<const ContextTerm> terms, const ContextOptions& options) {
-  std::vector<std::uint32_t> rows;
-  const auto leave = [&](const ContextMolecule& molecule) {
-    for (const std::uint32_t row : fit.rows_of(molecule.constitution)) rows.push_back(row);
-  };
-  for (const ContextMolecule* molecule : options.leave_out) leave(*molecule);
-  if (options.estimate_only) {
-    for (const ContextTerm& term : terms) leave(*term.molecule);
-  }
-  std::sort(rows.begin(), rows.end());
-  rows.erase(std::unique(rows.begin(), rows.end()), rows.end());
-  return rows;
-}
 
 /// A gas molecule of more than three atoms never takes up more than all its vibrations at full swing.
 double above_classical_limit(const ContextMolecule& molecule, double heat_capacity) {
@@ -81,25 +44,7 @@ FittedProperty fit_embedded(FitKind kind) {
 
 namespace {
 
-Estimate estimate_with(const FittedProperty& fitted, FitKind kind, const Conditioning& conditioning,
-                       std::span<const ContextTerm> terms) {
-  std::vector<ContextFit::Term> parts;
-  parts.reserve(terms.size());
-  for (const ContextTerm& term : terms) parts.push_back({term.coefficient, term.molecule});
-  const Direction direction = conditioning.direction(parts);
-  Estimate out;
-  out.variance = std::max(0.0, conditioning.variance(direction));
-  out.unseen = direction.functional.unseen;
-  out.in_table = direction.functional.in_table;
-  for (std::size_t k = 0; k < fitted.temperatures.size(); ++k) {
-    double value = conditioning.mean(direction, k);
-    for (const ContextTerm& term : terms) value += term.coefficient * offset(kind, *term.molecule, fitted.temperatures[k]);
-    out.value.push_back(sign_of(kind) * value);
-  }
-  return out;
-}
-
-Prediction finished(double value, double s, double scale, const ContextSettings& settings, const Estimate& from) {
+Prediction finished(double value, double s, double scale, const ContextSettings& settings, const ContextEstimate& from) {
   Prediction out;
   out.value = value * scale;
   out.s = s * scale;
@@ -113,23 +58,11 @@ Prediction finished(double value, double s, double scale, const ContextSettings&
 }  // namespace
 
 Result<Prediction> ContextModel::predict(Property property, std::span<const ContextTerm> terms, const ContextOptions& options) const {
-  // The same molecule under two terms counts once, with the sum of the coefficients: its table row too.
-  const auto estimate = [&](FitKind kind, std::span<const ContextTerm> of) {
-    const FittedProperty& fitted = embedded_fit(kind);
-    const std::vector<std::uint32_t> without = rows_to_leave(*fitted.fit, of, options);
-    if (without.empty()) {
-      const Conditioning* observed =
-          options.observations != nullptr ? observed_conditioning(*options.observations, kind) : nullptr;
-      return estimate_with(fitted, kind, observed != nullptr ? *observed : *fitted.plain, of);
-    }
-    const std::vector<MeasuredDirection> measured =
-        options.observations != nullptr ? observed_directions(*options.observations, kind) : std::vector<MeasuredDirection>{};
-    return estimate_with(fitted, kind, Conditioning(*fitted.fit, without, measured), of);
-  };
+  const auto estimate = [&](FitKind kind, std::span<const ContextTerm> of) { return Query(kind, of, options).estimate(); };
   if (property != Property::GasHeatCapacity) {
-    const FitKind kind = kind_of(property);
-    const Estimate at = estimate(kind, terms);
-    Prediction out = finished(at.value[0], std::sqrt(at.variance), kind == FitKind::Liquid ? 1.0 : 1000.0, context_settings(kind), at);
+    const FitKind kind = fit_kind_of(property);
+    const ContextEstimate at = estimate(kind, terms);
+    Prediction out = finished(at.value[0], std::sqrt(at.variance), unit_of(kind), context_settings(kind), at);
     if (kind != FitKind::Liquid) out.reading = out.s <= 8000 ? Reading::Good : out.s <= 15000 ? Reading::Rough : Reading::None;
     return out;
   }
@@ -137,13 +70,13 @@ Result<Prediction> ContextModel::predict(Property property, std::span<const Cont
     return Error{"estimate.temperature", "Gas heat capacities are estimated from 273.15 K to 1000 K.", "temperature",
                  "Use a table or a polynomial beyond that range."};
   }
-  const Estimate low = estimate(FitKind::Gas298, terms);
+  const ContextEstimate low = estimate(FitKind::Gas298, terms);
   if (options.temperature == gas_nodes[0] && terms.size() == 1) {
     const double excess = above_classical_limit(*terms[0].molecule, low.value[0] / terms[0].coefficient) * terms[0].coefficient;
     return finished(low.value[0] - excess, std::sqrt(low.variance), 1.0, context_settings(FitKind::Gas298), low);
   }
   const auto curve_of = [&](std::span<const ContextTerm> of) {
-    const Estimate first = estimate(FitKind::Gas298, of), above = estimate(FitKind::GasAbove, of);
+    const ContextEstimate first = estimate(FitKind::Gas298, of), above = estimate(FitKind::GasAbove, of);
     GasCurve curve;
     curve.value[0] = first.value[0];
     curve.s[0] = std::sqrt(first.variance);
