@@ -59,7 +59,8 @@ Conditioning::Conditioning(const ContextFit& fit, std::vector<std::uint32_t> wit
     left_out_z_.emplace_back();
     fit_.cholesky().forward(x, left_out_z_.back());
   }
-  // Taking a row out: P loses x x' / variance. With H = X P⁻¹ X' the small matrix is variance − H, still positive.
+  // Taking a row out: P loses x x' / variance. With H = X P⁻¹ X' the small matrix is variance − H, still
+  // positive.
   std::vector<double> matrix(n * n, 0.0);
   for (std::size_t i = 0; i < n; ++i) {
     for (std::size_t j = 0; j <= i; ++j) matrix[i * n + j] = -dot(left_out_z_[i], left_out_z_[j]);
@@ -101,7 +102,8 @@ double Conditioning::before_measurements(const Direction& a, const Direction& b)
 }
 
 double Conditioning::mean_before_measurements(const Direction& direction, std::size_t right_hand_side) const {
-  return fit_.mean(direction.functional, right_hand_side) - dot(direction.widened, left_out_pull_[right_hand_side]);
+  return fit_.mean(direction.functional, right_hand_side) -
+         dot(direction.widened, left_out_pull_[right_hand_side]);
 }
 
 std::vector<double> Conditioning::onto_measurements(const Direction& direction) const {

@@ -41,7 +41,8 @@ struct MeasuredDirection {
 /// Rows left out of one fit, then measurements taken in. Cheap to build for a few of each.
 class Conditioning {
  public:
-  Conditioning(const ContextFit& fit, std::vector<std::uint32_t> without, const std::vector<MeasuredDirection>& measured);
+  Conditioning(const ContextFit& fit, std::vector<std::uint32_t> without,
+               const std::vector<MeasuredDirection>& measured);
 
   Direction direction(const std::vector<ContextFit::Term>& terms) const;
   double mean(const Direction& direction, std::size_t right_hand_side) const;

@@ -57,7 +57,9 @@ LineKind line_of(FeatureClass family) {
 std::string words_for(LineKind kind, double total, bool aromatic) {
   switch (kind) {
     case LineKind::Ring:
-      return aromatic && total > 0 ? "rings: resonance" : total < 0 ? "rings: strain" : "rings: closing and shape";
+      return aromatic && total > 0 ? "rings: resonance"
+             : total < 0           ? "rings: strain"
+                                   : "rings: closing and shape";
     case LineKind::Crowding:
       return "crowding of groups";
     case LineKind::RingPositions:
@@ -77,8 +79,8 @@ std::string words_for(LineKind kind, double total, bool aromatic) {
   }
 }
 
-/// Shares that fall on the bonds of one place; summed in the order of feature keys, so that bonds alike by symmetry
-/// get the same digits.
+/// Shares that fall on the bonds of one place; summed in the order of feature keys, so that bonds alike by
+/// symmetry get the same digits.
 struct Place {
   struct Share {
     std::uint64_t key;
@@ -109,10 +111,13 @@ struct Subject {
   std::size_t unit_atoms = 0;  ///< atoms of one repeat unit in the chain; 0: a molecule
   static constexpr std::size_t middle = 4, units = 9;
 
-  bool holds_atom(std::uint32_t atom) const { return unit_atoms == 0 || graph.atoms[atom].source / unit_atoms == middle; }
+  bool holds_atom(std::uint32_t atom) const {
+    return unit_atoms == 0 || graph.atoms[atom].source / unit_atoms == middle;
+  }
   /// A bond between two units belongs to the later one: every linking bond counts once.
   bool holds_bond(std::uint32_t bond) const {
-    const std::uint32_t later = std::max(graph.atoms[graph.bonds[bond].a].source, graph.atoms[graph.bonds[bond].b].source);
+    const std::uint32_t later =
+        std::max(graph.atoms[graph.bonds[bond].a].source, graph.atoms[graph.bonds[bond].b].source);
     return unit_atoms == 0 || later / unit_atoms == middle;
   }
 };
@@ -227,8 +232,8 @@ class BondLines {
   Place dihydrogen_;
 };
 
-/// Everything that stands on no bond, by kind, in the order of LineKind. Counts come from the molecule, so that a
-/// repeat unit gets its increments.
+/// Everything that stands on no bond, by kind, in the order of LineKind. Counts come from the molecule, so
+/// that a repeat unit gets its increments.
 std::vector<ContextLine> other_lines(const Subject& subject, const FeatureValues& values) {
   std::map<LineKind, ContextLine> lines;
   for (const FeatureCount& feature : subject.molecule.features) {
@@ -239,7 +244,8 @@ std::vector<ContextLine> other_lines(const Subject& subject, const FeatureValues
     line.surroundings += found.value * feature.count;
     line.unseen += found.unseen ? 1 : 0;
   }
-  const bool aromatic = std::any_of(subject.graph.rings.begin(), subject.graph.rings.end(), [](const ContextRing& ring) { return ring.aromatic; });
+  const bool aromatic = std::any_of(subject.graph.rings.begin(), subject.graph.rings.end(),
+                                    [](const ContextRing& ring) { return ring.aromatic; });
   std::vector<ContextLine> out;
   for (auto& [kind, line] : lines) {
     if (line.surroundings == 0 && line.unseen == 0) continue;
@@ -263,7 +269,8 @@ void scale(std::vector<ContextLine>& lines, double factor) {
 
 Result<Explanation> explain(Property property, const molecule::Graph& graph, const ContextOptions& options) {
   if (property == Property::GasHeatCapacity && options.temperature != gas_nodes[0]) {
-    return Error{"estimate.temperature", "A gas heat capacity is explained at 298.15 K only.", "temperature", "Ask for 298.15 K."};
+    return Error{"estimate.temperature", "A gas heat capacity is explained at 298.15 K only.", "temperature",
+                 "Ask for 298.15 K."};
   }
   Result<Subject> found = subject_of(graph);
   if (!found) return found.error();
@@ -296,7 +303,8 @@ Result<Explanation> explain(Property property, const molecule::Graph& graph, con
   own.kind = LineKind::OwnDeviation;
   own.total = out.sum;
   for (const ContextLine& line : out.lines) own.total -= line.total;
-  // Without a row or a measurement of this very molecule what is left is rounding, far below any printed digit.
+  // Without a row or a measurement of this very molecule what is left is rounding, far below any printed
+  // digit.
   if (std::fabs(own.total) > 1e-6 * unit) {
     own.surroundings = own.total;
     own.text = words_for(own.kind, 0, false);

@@ -1,5 +1,5 @@
-// An estimate in context as the lines of a ledger: each bond with its surroundings, what rings and contacts add, the
-// molecule's own deviation, and the compounds of the table that carry it.
+// An estimate in context as the lines of a ledger: each bond with its surroundings, what rings and contacts
+// add, the molecule's own deviation, and the compounds of the table that carry it.
 #pragma once
 
 #include <string>
@@ -21,14 +21,14 @@ enum class LineKind : std::uint8_t {
   FarPolar,       ///< polar atoms four bonds apart
   Liquid,         ///< size and hydrogen bonding of the liquid
   Constant,       ///< the same for every molecule
-  Start,          ///< what the fit starts from: so much an atom (not for formation, whose start is the base bonds)
-  OwnDeviation    ///< what the molecule's own row of the table, or a measurement, says beyond all that
+  Start,  ///< what the fit starts from: so much an atom (not for formation, whose start is the base bonds)
+  OwnDeviation  ///< what the molecule's own row of the table, or a measurement, says beyond all that
 };
 
 struct ContextLine {
   LineKind kind = LineKind::Bond;
-  std::string bond;         ///< "C–H", "C=O", "C⋯C" for aromatic; empty for other kinds
-  std::string text;         ///< surroundings in plain words: "in CH₃ on CH₂", "CH₃–CH₂(O)"; else what the line is
+  std::string bond;  ///< "C–H", "C=O", "C⋯C" for aromatic; empty for other kinds
+  std::string text;  ///< surroundings in plain words: "in CH₃ on CH₂", "CH₃–CH₂(O)"; else what the line is
   double count = 1;         ///< bonds of the molecule on this line
   double base = 0;          ///< what one bond of this type is worth anywhere [J/mol or J/(mol K)]
   double surroundings = 0;  ///< what its surroundings add to one bond
@@ -44,20 +44,21 @@ struct ReferenceRow {
 };
 
 struct Explanation {
-  /// Sum of all lines: the sum of bond enthalpies for GasFormation (free atoms minus formation enthalpy), the property
-  /// itself otherwise.
+  /// Sum of all lines: the sum of bond enthalpies for GasFormation (free atoms minus formation enthalpy), the
+  /// property itself otherwise.
   double sum = 0;
-  Prediction prediction;             ///< of the property itself
-  double gas_atoms = 0;              ///< formation enthalpy of the free atoms: prediction.value = gas_atoms − sum [J/mol]
-  std::vector<ContextLine> lines;    ///< bonds by bond and surroundings, then the rest in the order of LineKind
-  std::vector<ReferenceRow> rows;    ///< greatest weight first, ten at most
-  std::vector<std::string> unseen;   ///< features that no row has, spelled out
+  Prediction prediction;  ///< of the property itself
+  double gas_atoms = 0;  ///< formation enthalpy of the free atoms: prediction.value = gas_atoms − sum [J/mol]
+  std::vector<ContextLine> lines;  ///< bonds by bond and surroundings, then the rest in the order of LineKind
+  std::vector<ReferenceRow> rows;  ///< greatest weight first, ten at most
+  std::vector<std::string> unseen;  ///< features that no row has, spelled out
 };
 
 /// @param graph    a structure or a repeat unit
 /// @param options  as for predict; the gas heat capacity is explained at 298.15 K only
 /// @errors those of context_molecule; estimate.temperature
 /// @validity lines add up to `sum` exactly in the last printed digit: the own deviation takes up the rounding
-Result<Explanation> explain(Property property, const molecule::Graph& graph, const ContextOptions& options = {});
+Result<Explanation> explain(Property property, const molecule::Graph& graph,
+                            const ContextOptions& options = {});
 
 }  // namespace heatledger::estimate

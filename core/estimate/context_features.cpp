@@ -11,14 +11,25 @@ namespace {
 
 using Where = FeatureSite::Where;
 
-FeatureSite at_bond(std::uint32_t bond) { return {Where::Bond, bond, 0}; }
-FeatureSite at_atom(std::uint32_t atom) { return {Where::Atom, atom, 0}; }
-FeatureSite at_hydrogens(std::uint32_t atom) { return {Where::Hydrogens, atom, 0}; }
+FeatureSite at_bond(std::uint32_t bond) {
+  return {Where::Bond, bond, 0};
+}
+FeatureSite at_atom(std::uint32_t atom) {
+  return {Where::Atom, atom, 0};
+}
+FeatureSite at_hydrogens(std::uint32_t atom) {
+  return {Where::Hydrogens, atom, 0};
+}
 
-unsigned code(Kind kind) { return static_cast<unsigned>(kind); }
-bool is_hetero(Kind kind) { return kind != Kind::C && kind != Kind::H; }
+unsigned code(Kind kind) {
+  return static_cast<unsigned>(kind);
+}
+bool is_hetero(Kind kind) {
+  return kind != Kind::C && kind != Kind::H;
+}
 
-/// "one further step" list of an atom without the neighbour `except`: hydrogens, then heavy neighbours sorted.
+/// "one further step" list of an atom without the neighbour `except`: hydrogens, then heavy neighbours
+/// sorted.
 struct Environment {
   FeatureCode bytes{FeatureClass::K0};
   std::array<std::uint16_t, 16> heavy{};
@@ -32,7 +43,8 @@ struct Environment {
     for (const auto& next : around(graph, atom)) {
       if (next.atom == except) continue;
       const ContextAtom& other = graph.atoms[next.atom];
-      heavy[count++] = static_cast<std::uint16_t>(graph.bonds[next.bond].order << 8 | signed_type(other.type(), other.sign));
+      heavy[count++] = static_cast<std::uint16_t>(graph.bonds[next.bond].order << 8 |
+                                                  signed_type(other.type(), other.sign));
       elements |= 1u << code(other.kind);
     }
     std::sort(heavy.begin(), heavy.begin() + count);
@@ -56,9 +68,10 @@ void count_hydrogen_bonds(const ContextGraph& graph, FeatureSink& sink) {
   for (std::uint32_t i = 0; i < graph.atoms.size(); ++i) {
     const ContextAtom& atom = graph.atoms[i];
     if (atom.hydrogens == 0) continue;
-    sink.add(FeatureCode(FeatureClass::B).sorted(code(atom.kind), code(Kind::H)).byte(1), atom.hydrogens, at_hydrogens(i));
-    sink.add(FeatureCode(FeatureClass::B1c).pair(atom.full()).byte(1).byte(code(Kind::H)).names(atom.kind), atom.hydrogens,
+    sink.add(FeatureCode(FeatureClass::B).sorted(code(atom.kind), code(Kind::H)).byte(1), atom.hydrogens,
              at_hydrogens(i));
+    sink.add(FeatureCode(FeatureClass::B1c).pair(atom.full()).byte(1).byte(code(Kind::H)).names(atom.kind),
+             atom.hydrogens, at_hydrogens(i));
   }
 }
 
@@ -67,12 +80,26 @@ void count_bonds(const ContextGraph& graph, FeatureSink& sink) {
     const ContextBond& bond = graph.bonds[k];
     const ContextAtom &a = graph.atoms[bond.a], &b = graph.atoms[bond.b];
     sink.add(FeatureCode(FeatureClass::B).sorted(code(a.kind), code(b.kind)).byte(bond.order), 1, at_bond(k));
-    sink.add(FeatureCode(FeatureClass::B1c).pair(a.full()).byte(bond.order).byte(code(b.kind)).names(a.kind).names(b.kind), 1,
-             at_bond(k));
-    sink.add(FeatureCode(FeatureClass::B1c).pair(b.full()).byte(bond.order).byte(code(a.kind)).names(a.kind).names(b.kind), 1,
-             at_bond(k));
-    sink.add(FeatureCode(FeatureClass::B2c).sorted_pairs(a.full(), b.full()).byte(bond.order).names(a.kind).names(b.kind), 1,
-             at_bond(k));
+    sink.add(FeatureCode(FeatureClass::B1c)
+                 .pair(a.full())
+                 .byte(bond.order)
+                 .byte(code(b.kind))
+                 .names(a.kind)
+                 .names(b.kind),
+             1, at_bond(k));
+    sink.add(FeatureCode(FeatureClass::B1c)
+                 .pair(b.full())
+                 .byte(bond.order)
+                 .byte(code(a.kind))
+                 .names(a.kind)
+                 .names(b.kind),
+             1, at_bond(k));
+    sink.add(FeatureCode(FeatureClass::B2c)
+                 .sorted_pairs(a.full(), b.full())
+                 .byte(bond.order)
+                 .names(a.kind)
+                 .names(b.kind),
+             1, at_bond(k));
     const Environment x(graph, bond.a, bond.b), y(graph, bond.b, bond.a);
     FeatureCode both(FeatureClass::B3c);
     both.byte(bond.order);
@@ -144,12 +171,17 @@ void count_along_bonds(const ContextGraph& graph, FeatureSink& sink) {
         if (y.atom == bond.a || y.atom == x.atom) continue;
         const ContextAtom& q = graph.atoms[y.atom];
         const bool q_hetero = is_hetero(q.kind);
-        if (p_hetero || q_hetero || p.unsaturation != Unsaturation::None || q.unsaturation != Unsaturation::None) {
-          sink.add(FeatureCode(FeatureClass::P3).sorted(p.type(), q.type()).sorted(a.type(), b.type()).byte(bond.order), 1,
-                   at_bond(k));
+        if (p_hetero || q_hetero || p.unsaturation != Unsaturation::None ||
+            q.unsaturation != Unsaturation::None) {
+          sink.add(FeatureCode(FeatureClass::P3)
+                       .sorted(p.type(), q.type())
+                       .sorted(a.type(), b.type())
+                       .byte(bond.order),
+                   1, at_bond(k));
         }
         if (p_hetero && q_hetero) {
-          sink.add(FeatureCode(FeatureClass::P3h).sorted(code(p.kind), code(q.kind)).byte(bond.order), 1, at_bond(k));
+          sink.add(FeatureCode(FeatureClass::P3h).sorted(code(p.kind), code(q.kind)).byte(bond.order), 1,
+                   at_bond(k));
         }
       }
     }
@@ -176,7 +208,9 @@ void count_bays(const ContextGraph& graph, FeatureSink& sink, DeviationMeasures&
     for (const auto& x : around(graph, bond.a)) {
       if (x.atom == bond.b || !graph.atoms[x.atom].aromatic) continue;
       for (const auto& y : around(graph, bond.b)) {
-        if (y.atom == bond.a || y.atom == x.atom || !graph.atoms[y.atom].aromatic || share_a_ring(x.atom, y.atom)) continue;
+        if (y.atom == bond.a || y.atom == x.atom || !graph.atoms[y.atom].aromatic ||
+            share_a_ring(x.atom, y.atom))
+          continue;
         sink.add(FeatureCode(FeatureClass::BAY)
                      .byte(bond.order != aromatic_order)
                      .sorted(outside(x.atom, bond.a), outside(y.atom, bond.b)),
@@ -194,7 +228,9 @@ void count_cis(const ContextGraph& graph, FeatureSink& sink) {
     if (bond.order != 2 || bond.rings != 0) continue;
     const unsigned at_a = graph.atoms[bond.a].heavy - 1u, at_b = graph.atoms[bond.b].heavy - 1u;
     if (!has_stereo(graph, k)) {
-      const unsigned forced = at_a == 2 && at_b == 2 ? 2 : (at_a == 2 && at_b == 1) || (at_a == 1 && at_b == 2) ? 1 : 0;
+      const unsigned forced = at_a == 2 && at_b == 2                                 ? 2
+                              : (at_a == 2 && at_b == 1) || (at_a == 1 && at_b == 2) ? 1
+                                                                                     : 0;
       if (forced != 0) sink.add(FeatureCode(FeatureClass::CT0), forced);
       continue;
     }
@@ -248,7 +284,9 @@ void count_distances(const ContextGraph& graph, FeatureSink& sink) {
   }
 }
 
-bool is_polar(Kind kind) { return kind == Kind::N || kind == Kind::O || kind == Kind::S || kind == Kind::P; }
+bool is_polar(Kind kind) {
+  return kind == Kind::N || kind == Kind::O || kind == Kind::S || kind == Kind::P;
+}
 
 /// Clusters of N, O, S, P that are bonded to each other or sit on one carbon.
 unsigned polar_clusters(const ContextGraph& graph) {
@@ -259,7 +297,8 @@ unsigned polar_clusters(const ContextGraph& graph) {
     return i;
   };
   for (const ContextBond& bond : graph.bonds) {
-    if (is_polar(graph.atoms[bond.a].kind) && is_polar(graph.atoms[bond.b].kind)) parent[root(bond.a)] = root(bond.b);
+    if (is_polar(graph.atoms[bond.a].kind) && is_polar(graph.atoms[bond.b].kind))
+      parent[root(bond.a)] = root(bond.b);
   }
   unsigned clusters = 0;
   for (std::uint32_t i = 0; i < graph.atoms.size(); ++i) {
@@ -277,7 +316,9 @@ unsigned polar_clusters(const ContextGraph& graph) {
   return clusters;
 }
 
-double beyond_first(unsigned count) { return count > 1 ? count - 1.0 : 0.0; }
+double beyond_first(unsigned count) {
+  return count > 1 ? count - 1.0 : 0.0;
+}
 
 void measure(const ContextGraph& graph, DeviationMeasures& measures) {
   const auto count = [&](Kind kind) { return graph.elements[static_cast<std::size_t>(kind)]; };
@@ -328,7 +369,8 @@ std::vector<FeatureCount> FeatureSink::take() {
   for (const FeatureCount& count : counts_) {
     if (count.count != 0) taken.push_back(count);
   }
-  std::sort(taken.begin(), taken.end(), [](const FeatureCount& a, const FeatureCount& b) { return a.key < b.key; });
+  std::sort(taken.begin(), taken.end(),
+            [](const FeatureCount& a, const FeatureCount& b) { return a.key < b.key; });
   counts_.clear();
   std::fill(slots_.begin(), slots_.end(), 0);
   return taken;

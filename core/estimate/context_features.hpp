@@ -1,5 +1,5 @@
-// Counting: every bond, atom, ring and contact of a ContextGraph turned into features. For people, each count can
-// be kept with the place in the molecule where it arose.
+// Counting: every bond, atom, ring and contact of a ContextGraph turned into features. For people, each count
+// can be kept with the place in the molecule where it arose.
 #pragma once
 
 #include <cstdint>
@@ -14,11 +14,11 @@ namespace heatledger::estimate {
 /// Where a count arose, so that a ledger can put it on a line.
 struct FeatureSite {
   enum class Where : std::uint8_t {
-    Nowhere,        ///< no single place: rings, contacts, the molecule as a whole
-    Bond,           ///< heavy-heavy bond `first`
-    Hydrogens,      ///< the X-H bonds of atom `first`
-    Atom,           ///< atom `first`: shared among its bonds
-    TwoBonds        ///< bonds `first` and `second`, half each
+    Nowhere,    ///< no single place: rings, contacts, the molecule as a whole
+    Bond,       ///< heavy-heavy bond `first`
+    Hydrogens,  ///< the X-H bonds of atom `first`
+    Atom,       ///< atom `first`: shared among its bonds
+    TwoBonds    ///< bonds `first` and `second`, half each
   } where = Where::Nowhere;
   std::uint32_t first = 0, second = 0;
 };

@@ -34,7 +34,8 @@ std::vector<Seen> distinct_features(const ContextSettings& settings, const std::
       const double spread = settings.spread[static_cast<std::size_t>(feature.family)];
       if (spread == 0) continue;
       std::size_t slot = feature.key & (slots.size() - 1);
-      while (slots[slot] != 0 && seen[slots[slot] - 1].key != feature.key) slot = (slot + 1) & (slots.size() - 1);
+      while (slots[slot] != 0 && seen[slots[slot] - 1].key != feature.key)
+        slot = (slot + 1) & (slots.size() - 1);
       if (slots[slot] != 0) {
         seen[slots[slot] - 1].several = true;
         continue;
@@ -52,6 +53,12 @@ std::vector<Seen> distinct_features(const ContextSettings& settings, const std::
   }
   std::sort(seen.begin(), seen.end(), [](const Seen& a, const Seen& b) { return a.key < b.key; });
   return seen;
+}
+
+bool same_counts(const ContextMolecule& a, const ContextMolecule& b) {
+  return std::equal(
+      a.features.begin(), a.features.end(), b.features.begin(), b.features.end(),
+      [](const FeatureCount& x, const FeatureCount& y) { return x.key == y.key && x.count == y.count; });
 }
 
 }  // namespace
@@ -105,8 +112,8 @@ void ContextFit::place_features() {
 
 /// P = 1 + Σ rows x x' / variance, lower triangle; column by column, rows in the order of the table.
 LowerTriangle ContextFit::information() const {
-  const std::size_t unknowns = static_cast<std::size_t>(
-      std::count_if(entries_.begin(), entries_.end(), [](const Entry& e) { return e.place.shared != kNone; }));
+  const std::size_t unknowns = static_cast<std::size_t>(std::count_if(
+      entries_.begin(), entries_.end(), [](const Entry& e) { return e.place.shared != kNone; }));
   std::vector<std::uint32_t> first(unknowns + 1, 0), where(row_index_.size()), row_of(row_index_.size());
   for (const std::uint32_t j : row_index_) ++first[j + 1];
   for (std::size_t j = 0; j < unknowns; ++j) first[j + 1] += first[j];
@@ -158,7 +165,8 @@ void ContextFit::solve() {
     sum.assign(cholesky_.size(), 0.0);
     for (std::uint32_t r = 0; r < rows_.size(); ++r) {
       const double weight = rows_[r].y[k] / row_noise_[r];
-      for (std::uint32_t e = row_start_[r]; e < row_start_[r + 1]; ++e) sum[row_index_[e]] += row_value_[e] * weight;
+      for (std::uint32_t e = row_start_[r]; e < row_start_[r + 1]; ++e)
+        sum[row_index_[e]] += row_value_[e] * weight;
     }
     cholesky_.forward(sum, forward);
     beta_.emplace_back();
@@ -178,7 +186,8 @@ const FeaturePlace* ContextFit::find(std::uint64_t key) const {
 
 std::vector<std::uint32_t> ContextFit::rows_of(std::uint64_t constitution) const {
   std::vector<std::uint32_t> rows;
-  auto at = std::lower_bound(by_constitution_.begin(), by_constitution_.end(), std::make_pair(constitution, std::uint32_t{0}));
+  auto at = std::lower_bound(by_constitution_.begin(), by_constitution_.end(),
+                             std::make_pair(constitution, std::uint32_t{0}));
   for (; at != by_constitution_.end() && at->first == constitution; ++at) rows.push_back(at->second);
   return rows;
 }
@@ -193,12 +202,16 @@ std::uint32_t ContextFit::find_row(const ContextMolecule& molecule) const {
     only = at->second;
     ++isomers;
   }
-  return isomers == 1 && molecule.stereo == 0 ? only : kNone;
+  if (isomers != 1) return kNone;
+  const ContextMolecule& row = *rows_[only].molecule;
+  const bool one_is_silent = molecule.stereo == 0 || row.stereo == 0;
+  return one_is_silent || same_counts(molecule, row) ? only : kNone;
 }
 
 double ContextFit::row_dot(std::uint32_t row, const std::vector<double>& x) const {
   double sum = 0;
-  for (std::uint32_t e = row_start_[row]; e < row_start_[row + 1]; ++e) sum += row_value_[e] * x[row_index_[e]];
+  for (std::uint32_t e = row_start_[row]; e < row_start_[row + 1]; ++e)
+    sum += row_value_[e] * x[row_index_[e]];
   return sum;
 }
 
@@ -217,14 +230,16 @@ double ContextFit::feature_value(const FeatureCount& feature, std::size_t right_
   return spread * place->in_row * left_over / row_noise_[place->row];
 }
 
-Functional ContextFit::functional(const std::vector<Term>& terms, const std::vector<std::uint32_t>& without) const {
+Functional ContextFit::functional(const std::vector<Term>& terms,
+                                  const std::vector<std::uint32_t>& without) const {
   Functional out;
   out.x.assign(unknowns(), 0.0);
   out.constant.assign(right_hand_sides(), 0.0);
   const auto is_left_out = [&](std::uint32_t row) {
     return std::find(without.begin(), without.end(), row) != without.end();
   };
-  const auto add_latent = [&](std::uint64_t key, double coefficient, std::uint32_t row, double in_row, bool own) {
+  const auto add_latent = [&](std::uint64_t key, double coefficient, std::uint32_t row, double in_row,
+                              bool own) {
     Functional::Latent latent;
     latent.key = key;
     latent.coefficient = coefficient;
@@ -244,8 +259,8 @@ Functional ContextFit::functional(const std::vector<Term>& terms, const std::vec
       if (place != nullptr && place->shared != kNone) {
         out.x[place->shared] += scaled;
       } else {
-        add_latent(feature.key, scaled, place == nullptr ? kNone : place->row, place == nullptr ? 0 : place->in_row,
-                   false);
+        add_latent(feature.key, scaled, place == nullptr ? kNone : place->row,
+                   place == nullptr ? 0 : place->in_row, false);
       }
     }
     if (!term.own) continue;

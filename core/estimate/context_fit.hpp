@@ -1,5 +1,6 @@
-// One fitted property: the posterior of all feature values given the rows of a table, in information form. A feature
-// that only one row has is settled exactly by that row alone and never enters the matrix; nor does a row's own deviation.
+// One fitted property: the posterior of all feature values given the rows of a table, in information form. A
+// feature that only one row has is settled exactly by that row alone and never enters the matrix; nor does a
+// row's own deviation.
 #pragma once
 
 #include <cstdint>
@@ -14,9 +15,9 @@ namespace heatledger::estimate {
 /// One row to fit: figure minus offset = Σ features + own deviation + error.
 struct FitRow {
   const ContextMolecule* molecule = nullptr;
-  double own = 0;             ///< variance of the molecule's own deviation
-  double noise = 0;           ///< variance of own deviation and error, divided by the row's weight
-  std::vector<double> y;      ///< one figure for each right-hand side
+  double own = 0;         ///< variance of the molecule's own deviation
+  double noise = 0;       ///< variance of own deviation and error, divided by the row's weight
+  std::vector<double> y;  ///< one figure for each right-hand side
 };
 
 /// Value of one feature relative to its prior spread ("scaled"): where it lives in the fit.
@@ -27,22 +28,22 @@ struct FeaturePlace {
   double in_row = 0;            ///< scaled count in that row
 };
 
-/// A sum of features and own deviations, split by where the knowledge comes from. Two functionals over one fit have a
-/// covariance; see covariance().
+/// A sum of features and own deviations, split by where the knowledge comes from. Two functionals over one
+/// fit have a covariance; see covariance().
 struct Functional {
-  std::vector<double> x;       ///< scaled coefficients of the shared unknowns, what rows say already taken in
-  std::vector<double> constant;///< one for each right-hand side
-  struct Latent {              ///< coefficient of an independent unit-variance unknown outside the matrix
+  std::vector<double> x;  ///< scaled coefficients of the shared unknowns, what rows say already taken in
+  std::vector<double> constant;  ///< one for each right-hand side
+  struct Latent {                ///< coefficient of an independent unit-variance unknown outside the matrix
     std::uint64_t key = 0;
     double coefficient = 0;
     std::uint32_t row = FeaturePlace::none;  ///< the row that informs it, if any
-    double in_row = 0;         ///< its coefficient in that row
-    bool own = false;          ///< a molecule's own deviation
+    double in_row = 0;                       ///< its coefficient in that row
+    bool own = false;                        ///< a molecule's own deviation
   };
-  std::vector<Latent> latents; ///< sorted by key
+  std::vector<Latent> latents;  ///< sorted by key
   struct RowShare {
     std::uint32_t row = 0;
-    double share = 0;          ///< covariance of the latents with the row's figure
+    double share = 0;  ///< covariance of the latents with the row's figure
   };
   std::vector<RowShare> rows;  ///< sorted by row
   int unseen = 0;              ///< features that no row in use has
@@ -64,8 +65,9 @@ class ContextFit {
 
   /// nullptr: no row has this feature.
   const FeaturePlace* find(std::uint64_t key) const;
-  /// Row of the table for a molecule: same constitution and stereo; a molecule written without stereo takes the only
-  /// row of its constitution. FeaturePlace::none when there is no such row.
+  /// Row of the table for a molecule: same constitution and stereo. Where the table has only one row of that
+  /// constitution, it also stands for the molecule if either is written without stereo or both have the same
+  /// counts (mirror images). FeaturePlace::none when there is no such row.
   std::uint32_t find_row(const ContextMolecule& molecule) const;
   /// Rows of one constitution: the molecule and its stereoisomers.
   std::vector<std::uint32_t> rows_of(std::uint64_t constitution) const;
@@ -95,7 +97,8 @@ class ContextFit {
   double mean(const Functional& functional, std::size_t right_hand_side) const;
   double variance(const Functional& functional) const;
   /// Covariance of two functionals whose forward solves are known.
-  double covariance(const Functional& f, const std::vector<double>& zf, const Functional& g, const std::vector<double>& zg) const;
+  double covariance(const Functional& f, const std::vector<double>& zf, const Functional& g,
+                    const std::vector<double>& zg) const;
 
  private:
   void place_features();
@@ -108,9 +111,9 @@ class ContextFit {
     std::uint64_t key = 0;
     FeaturePlace place;
   };
-  std::vector<Entry> entries_;          ///< sorted by key
-  std::vector<std::uint32_t> slots_;    ///< open addressing into entries_, index + 1
-  std::vector<std::uint32_t> row_start_;///< shared features of row r: row_start_[r] .. row_start_[r + 1]
+  std::vector<Entry> entries_;            ///< sorted by key
+  std::vector<std::uint32_t> slots_;      ///< open addressing into entries_, index + 1
+  std::vector<std::uint32_t> row_start_;  ///< shared features of row r: row_start_[r] .. row_start_[r + 1]
   std::vector<std::uint32_t> row_index_;
   std::vector<double> row_value_;
   std::vector<double> row_noise_;

@@ -4,7 +4,9 @@
 
 #include "core/molecule/aromaticity.hpp"
 #include "core/molecule/elements.hpp"
+#include "core/molecule/kekule_choice.hpp"
 #include "core/molecule/normalise.hpp"
+#include "core/molecule/ranking.hpp"
 #include "core/molecule/rings.hpp"
 
 namespace heatledger::estimate {
@@ -15,19 +17,32 @@ constexpr std::uint32_t kHydrogen = 0xffffffffU;  ///< marks an explicit hydroge
 
 std::optional<Kind> kind_of(int atomic_number) {
   switch (atomic_number) {
-    case 1: return Kind::H;
-    case 5: return Kind::B;
-    case 6: return Kind::C;
-    case 7: return Kind::N;
-    case 8: return Kind::O;
-    case 9: return Kind::F;
-    case 14: return Kind::Si;
-    case 15: return Kind::P;
-    case 16: return Kind::S;
-    case 17: return Kind::Cl;
-    case 35: return Kind::Br;
-    case 53: return Kind::I;
-    default: return std::nullopt;
+    case 1:
+      return Kind::H;
+    case 5:
+      return Kind::B;
+    case 6:
+      return Kind::C;
+    case 7:
+      return Kind::N;
+    case 8:
+      return Kind::O;
+    case 9:
+      return Kind::F;
+    case 14:
+      return Kind::Si;
+    case 15:
+      return Kind::P;
+    case 16:
+      return Kind::S;
+    case 17:
+      return Kind::Cl;
+    case 35:
+      return Kind::Br;
+    case 53:
+      return Kind::I;
+    default:
+      return std::nullopt;
   }
 }
 
@@ -38,7 +53,8 @@ Error refusal(const char* code, std::string message, std::size_t atom, const cha
 /// What the model does not cover is refused by name before anything is counted.
 Status check_atoms(const molecule::Graph& graph) {
   if (graph.atoms.empty()) {
-    return Error{"estimate.empty", "There is no structure to estimate from.", "", "Give the species a structure."};
+    return Error{"estimate.empty", "There is no structure to estimate from.", "",
+                 "Give the species a structure."};
   }
   int charge = 0;
   for (std::size_t i = 0; i < graph.atoms.size(); ++i) {
@@ -49,8 +65,9 @@ Status check_atoms(const molecule::Graph& graph) {
                      "Give a measured or published formation enthalpy.");
     }
     if (atom.unpaired != 0) {
-      return refusal("estimate.radical", "The " + symbol + " atom has an unpaired electron: radicals are outside the model.",
-                     i, "Give a measured or published formation enthalpy.");
+      return refusal("estimate.radical",
+                     "The " + symbol + " atom has an unpaired electron: radicals are outside the model.", i,
+                     "Give a measured or published formation enthalpy.");
     }
     charge += atom.charge;
   }
@@ -80,8 +97,10 @@ Status check_one_fragment(const molecule::Graph& graph) {
     }
   }
   if (count == graph.atoms.size()) return success();
-  return Error{"estimate.fragments", "The structure has several parts that no bond joins: salts and mixtures are outside the model.",
-               "", "Estimate each part as a species of its own."};
+  return Error{
+      "estimate.fragments",
+      "The structure has several parts that no bond joins: salts and mixtures are outside the model.", "",
+      "Estimate each part as a species of its own."};
 }
 
 /// Explicit hydrogens become counts of their neighbour; only H2 keeps its bond.
@@ -112,7 +131,8 @@ Status fill_atoms(const molecule::Graph& graph, ContextGraph& out) {
     const std::uint32_t a = index[bond.a], b = index[bond.b];
     for (const std::uint32_t end : {bond.a, bond.b}) {
       if (index[end] == kHydrogen && ++hydrogen_degree[end] > 1) {
-        return refusal("estimate.valence", "A hydrogen atom has two bonds: three-centre bonds are outside the model.", end,
+        return refusal("estimate.valence",
+                       "A hydrogen atom has two bonds: three-centre bonds are outside the model.", end,
                        "Give a measured or published formation enthalpy.");
       }
     }
@@ -125,7 +145,9 @@ Status fill_atoms(const molecule::Graph& graph, ContextGraph& out) {
       heavy.a = a;
       heavy.b = b;
       heavy.order = bond.aromatic ? aromatic_order : static_cast<std::uint8_t>(bond.order);
-      heavy.side_of_b = bond.mark == molecule::BondMark::Up ? 1 : bond.mark == molecule::BondMark::Down ? -1 : 0;
+      heavy.side_of_b = bond.mark == molecule::BondMark::Up     ? 1
+                        : bond.mark == molecule::BondMark::Down ? -1
+                                                                : 0;
       heavy.source = static_cast<std::uint32_t>(k);
       if (heavy.order == 0 || heavy.order > aromatic_order || bond.order == molecule::Order::Quadruple) {
         return refusal("estimate.valence", "A bond of this order is outside the model.", bond.a,
@@ -157,8 +179,10 @@ Status fill_types(ContextGraph& out) {
     ContextAtom& atom = out.atoms[i];
     const unsigned heavy = out.first[i + 1] - out.first[i];
     if (heavy + atom.hydrogens > kMostNeighbours) {
-      return refusal("estimate.valence", std::string("The ") + kind_symbol(atom.kind) + " atom has more bonds than the model covers.",
-                     atom.source, "Check the structure.");
+      return refusal(
+          "estimate.valence",
+          std::string("The ") + kind_symbol(atom.kind) + " atom has more bonds than the model covers.",
+          atom.source, "Check the structure.");
     }
     atom.heavy = static_cast<std::uint8_t>(heavy);
     atom.degree = static_cast<std::uint8_t>(heavy + atom.hydrogens);
@@ -167,7 +191,7 @@ Status fill_types(ContextGraph& out) {
       doubles += out.bonds[next.bond].order == 2;
       triples += out.bonds[next.bond].order == 3;
     }
-    atom.unsaturation = atom.aromatic                                               ? Unsaturation::Aromatic
+    atom.unsaturation = atom.aromatic                                            ? Unsaturation::Aromatic
                         : triples != 0 || (doubles >= 2 && atom.kind == Kind::C) ? Unsaturation::Triple
                         : doubles != 0                                           ? Unsaturation::Double
                                                                                  : Unsaturation::None;
@@ -198,8 +222,8 @@ void fill_rings(const molecule::Graph& graph, ContextGraph& out) {
   }
 }
 
-/// Refines the colours of the atoms by their neighbours' colours until every path that a molecule of this size
-/// can hold has been walked (or 64 steps, beyond which chains are not told apart).
+/// Refines the colours of the atoms by their neighbours' colours until every path that a molecule of this
+/// size can hold has been walked (or 64 steps, beyond which chains are not told apart).
 void refine_colours(ContextGraph& graph) {
   const std::size_t rounds = std::min<std::size_t>(graph.atoms.size() / 2 + 1, 64);
   std::vector<std::uint64_t> next(graph.atoms.size());
@@ -223,12 +247,14 @@ std::uint64_t sum_of_colours(const ContextGraph& graph) {
 }
 
 void fill_colours(ContextGraph& graph) {
-  for (std::uint32_t i = 0; i < graph.atoms.size(); ++i) graph.atoms[i].colour = mix(graph.atoms[i].full(), 7);
+  for (std::uint32_t i = 0; i < graph.atoms.size(); ++i)
+    graph.atoms[i].colour = mix(graph.atoms[i].full(), 7);
   std::vector<std::uint64_t> rings(graph.atoms.size(), 0);
   for (const ContextRing& ring : graph.rings) {
     for (const std::uint32_t atom : ring.atoms) rings[atom] += mix(ring.atoms.size(), ring.aromatic ? 3 : 2);
   }
-  for (std::uint32_t i = 0; i < graph.atoms.size(); ++i) graph.atoms[i].colour = mix(graph.atoms[i].colour, rings[i]);
+  for (std::uint32_t i = 0; i < graph.atoms.size(); ++i)
+    graph.atoms[i].colour = mix(graph.atoms[i].colour, rings[i]);
   refine_colours(graph);
   graph.constitution = mix(sum_of_colours(graph), graph.rings.size());
 }
@@ -243,11 +269,25 @@ std::uint32_t reference_neighbour(const ContextGraph& graph, std::uint32_t end, 
   return best;
 }
 
+/// Double bonds that could be drawn elsewhere outside aromatic rings (azulene) are drawn in one canonical
+/// way.
+void settle_kekule_bonds(molecule::Graph& graph) {
+  std::vector<std::uint8_t> labels;
+  molecule::find_mobile_bonds(graph, labels);
+  bool settled = true;
+  for (std::size_t k = 0; k < graph.bonds.size(); ++k) {
+    settled = settled && (labels[k] == 0 || graph.bonds[k].aromatic);
+    labels[k] = labels[k] != 0 ? 100 : static_cast<std::uint8_t>(graph.bonds[k].order);
+  }
+  if (!settled) molecule::choose_kekule_bonds(graph, molecule::canonical_ranks(graph, labels));
+}
+
 void fill_stereo(const molecule::Graph& source, ContextGraph& graph);
 
 }  // namespace
 
-int side_of(const ContextGraph& graph, std::uint32_t end, std::uint32_t neighbour, std::uint32_t double_bond) {
+int side_of(const ContextGraph& graph, std::uint32_t end, std::uint32_t neighbour,
+            std::uint32_t double_bond) {
   int given = 0;
   for (const auto& next : around(graph, end)) {
     const ContextBond& bond = graph.bonds[next.bond];
@@ -271,7 +311,8 @@ bool has_stereo(const ContextGraph& graph, std::uint32_t double_bond) {
       others[count++] = &next;
     }
     if (count == 0 || side_of(graph, end, others[0]->atom, double_bond) == 0) return false;
-    if (count == 2 && graph.atoms[others[0]->atom].colour == graph.atoms[others[1]->atom].colour) return false;
+    if (count == 2 && graph.atoms[others[0]->atom].colour == graph.atoms[others[1]->atom].colour)
+      return false;
   }
   return true;
 }
@@ -281,7 +322,7 @@ Result<ContextGraph> context_graph(const molecule::Graph& graph, KekuleForm form
   if (Status status = check_one_fragment(graph); !status) return status.error();
   molecule::Graph settled = graph;
   molecule::perceive_aromaticity(settled);
-  static_cast<void>(form);
+  if (form == KekuleForm::Canonical) settle_kekule_bonds(settled);
   molecule::neutralise_charges(settled);
   ContextGraph out;
   if (Status status = fill_atoms(settled, out); !status) return status.error();
@@ -295,67 +336,137 @@ Result<ContextGraph> context_graph(const molecule::Graph& graph, KekuleForm form
 
 namespace {
 
-/// Parity of a stereocentre's neighbours, sorted by colour, against the order of writing: +1, -1, or 0 when two
-/// neighbours have one colour.
+/// Neighbours of a stereocentre in the order of writing: predecessor, ring closures, branches; empty when the
+/// graph does not tell it (two ring closures opened at one atom, or one opened and one closed).
+std::vector<std::uint32_t> written_order(const molecule::Graph& source, std::uint32_t centre) {
+  std::vector<std::uint32_t> predecessor, closing, opening, branches;
+  std::vector<char> placed(source.atoms.size(), 0);  // an atom's first bond to an earlier one is its branch
+  for (const molecule::Bond& bond : source.bonds) {
+    const std::uint32_t earlier = std::min(bond.a, bond.b), later = std::max(bond.a, bond.b);
+    const bool branch = placed[later] == 0;
+    placed[later] = 1;
+    if (later == centre) (branch ? predecessor : closing).push_back(earlier);
+    if (earlier == centre) (branch ? branches : opening).push_back(later);
+  }
+  if (opening.size() > 1 || (!opening.empty() && !closing.empty())) return {};
+  std::vector<std::uint32_t> order = predecessor;
+  order.insert(order.end(), closing.begin(), closing.end());
+  order.insert(order.end(), opening.begin(), opening.end());
+  order.insert(order.end(), branches.begin(), branches.end());
+  return order;
+}
+
+/// Parity of a stereocentre's neighbours, sorted by colour, against the order of writing: +1, -1, or 0 when
+/// two neighbours have one colour or the order is not known.
 int parity(const molecule::Graph& source, const ContextGraph& graph, std::uint32_t atom,
            const std::vector<std::uint32_t>& index) {
   const ContextAtom& centre = graph.atoms[atom];
-  std::vector<std::uint64_t> order;
-  bool hydrogen_placed = source.atoms[centre.source].hydrogens == 0;
-  molecule::Adjacency adjacency;
-  build_adjacency(source, adjacency);
-  for (std::uint32_t e = adjacency.first[centre.source]; e < adjacency.first[centre.source + 1]; ++e) {
-    const std::uint32_t other = adjacency.entries[e].atom;
-    // An implicit hydrogen counts as written right behind the atom's predecessor, or first of all.
-    if (!hydrogen_placed && other > centre.source) {
-      order.push_back(0);
-      hydrogen_placed = true;
-    }
-    order.push_back(index[other] == kHydrogen ? 0 : graph.atoms[index[other]].colour);
+  std::vector<std::uint64_t> colours;
+  const std::vector<std::uint32_t> order = written_order(source, centre.source);
+  for (const std::uint32_t other : order)
+    colours.push_back(index[other] == kHydrogen ? 0 : graph.atoms[index[other]].colour);
+  if (source.atoms[centre.source].hydrogens != 0) {
+    // A hydrogen inside the brackets counts as written right behind the predecessor, or first of all.
+    const bool preceded = !order.empty() && order.front() < centre.source;
+    colours.insert(colours.begin() + (preceded ? 1 : 0), 0);
   }
-  if (!hydrogen_placed) order.push_back(0);
   int sign = centre.chirality == 1 ? 1 : -1;
-  for (std::size_t i = 0; i < order.size(); ++i) {
-    for (std::size_t j = i + 1; j < order.size(); ++j) {
-      if (order[i] == order[j]) return 0;
-      if (order[i] > order[j]) sign = -sign;
+  for (std::size_t i = 0; i < colours.size(); ++i) {
+    for (std::size_t j = i + 1; j < colours.size(); ++j) {
+      if (colours[i] == colours[j]) return 0;
+      if (colours[i] > colours[j]) sign = -sign;
     }
   }
   return sign;
 }
 
-/// Colours once more with the given stereo mixed in: mirror images get one common key, so both signs are tried
-/// and the results added.
-void fill_stereo(const molecule::Graph& source, ContextGraph& graph) {
-  std::vector<std::uint64_t> marks(graph.atoms.size(), 0);
-  std::vector<int> signs(graph.atoms.size(), 0);
+bool can_turn(const ContextGraph& graph, std::uint32_t bond) {
+  constexpr std::size_t kSmallestRingWithTrans = 8;
+  return std::none_of(graph.rings.begin(), graph.rings.end(), [&](const ContextRing& ring) {
+    return ring.bonds.size() < kSmallestRingWithTrans &&
+           std::find(ring.bonds.begin(), ring.bonds.end(), bond) != ring.bonds.end();
+  });
+}
+
+/// Cis or trans of every double bond that says so, as marks on its two ends.
+bool mark_double_bonds(const ContextGraph& graph, std::vector<std::uint64_t>& marks) {
   bool any = false;
   for (std::uint32_t k = 0; k < graph.bonds.size(); ++k) {
     const ContextBond& bond = graph.bonds[k];
-    if (bond.order != 2 || bond.rings != 0 || !has_stereo(graph, k)) continue;
+    if (bond.order != 2 || !has_stereo(graph, k) || !can_turn(graph, k)) continue;
     const int a = side_of(graph, bond.a, reference_neighbour(graph, bond.a, k), k);
     const int b = side_of(graph, bond.b, reference_neighbour(graph, bond.b, k), k);
     marks[bond.a] = marks[bond.b] = a == b ? 11 : 12;
     any = true;
   }
-  std::vector<std::uint32_t> index(source.atoms.size(), kHydrogen);
-  for (std::uint32_t i = 0; i < graph.atoms.size(); ++i) index[graph.atoms[i].source] = i;
+  return any;
+}
+
+std::vector<std::uint64_t> colours_of(const ContextGraph& graph) {
+  std::vector<std::uint64_t> colours;
+  for (const ContextAtom& atom : graph.atoms) colours.push_back(atom.colour);
+  return colours;
+}
+
+void set_colours(ContextGraph& graph, const std::vector<std::uint64_t>& colours) {
+  for (std::uint32_t i = 0; i < graph.atoms.size(); ++i) graph.atoms[i].colour = colours[i];
+}
+
+/// Colourings to judge stereocentres by: the plain one, or, where a centre has two neighbours alike (opposite
+/// sides of a ring), one for each way to tell them apart.
+std::vector<std::vector<std::uint64_t>> told_apart(ContextGraph& graph) {
+  const std::vector<std::uint64_t> plain = colours_of(graph);
+  std::vector<std::vector<std::uint64_t>> out;
   for (std::uint32_t i = 0; i < graph.atoms.size(); ++i) {
     if (graph.atoms[i].chirality != 1 && graph.atoms[i].chirality != 2) continue;
-    signs[i] = parity(source, graph, i, index);
-    any = any || signs[i] != 0;
-  }
-  if (!any) return;
-  std::vector<std::uint64_t> plain(graph.atoms.size());
-  for (std::uint32_t i = 0; i < graph.atoms.size(); ++i) plain[i] = graph.atoms[i].colour;
-  for (const int hand : {1, -1}) {
-    for (std::uint32_t i = 0; i < graph.atoms.size(); ++i) {
-      graph.atoms[i].colour = mix(plain[i], marks[i] + (signs[i] == 0 ? 0 : signs[i] == hand ? 101 : 102));
+    for (const auto& x : around(graph, i)) {
+      for (const auto& y : around(graph, i)) {
+        if (&x == &y || plain[x.atom] != plain[y.atom]) continue;
+        graph.atoms[x.atom].colour = mix(plain[x.atom], 77);
+        refine_colours(graph);
+        out.push_back(colours_of(graph));
+        set_colours(graph, plain);
+        break;
+      }
     }
-    refine_colours(graph);
-    graph.stereo += sum_of_colours(graph);
   }
-  for (std::uint32_t i = 0; i < graph.atoms.size(); ++i) graph.atoms[i].colour = plain[i];
+  if (out.empty()) out.push_back(plain);
+  return out;
+}
+
+/// Key of the stereo given: colours once more with the marks mixed in. Mirror images get one common key, so
+/// both signs are taken and added, and so are all ways to tell like neighbours apart.
+void fill_stereo(const molecule::Graph& source, ContextGraph& graph) {
+  std::vector<std::uint64_t> marks(graph.atoms.size(), 0);
+  bool any = mark_double_bonds(graph, marks);
+  const bool centres = std::any_of(graph.atoms.begin(), graph.atoms.end(), [](const ContextAtom& atom) {
+    return atom.chirality == 1 || atom.chirality == 2;
+  });
+  if (!any && !centres) return;
+  const std::vector<std::uint64_t> plain = colours_of(graph);
+  std::vector<std::uint32_t> index(source.atoms.size(), kHydrogen);
+  for (std::uint32_t i = 0; i < graph.atoms.size(); ++i) index[graph.atoms[i].source] = i;
+  std::uint64_t key = 0;
+  for (const std::vector<std::uint64_t>& colours : told_apart(graph)) {
+    set_colours(graph, colours);
+    std::vector<int> signs(graph.atoms.size(), 0);
+    for (std::uint32_t i = 0; i < graph.atoms.size(); ++i) {
+      if (graph.atoms[i].chirality == 1 || graph.atoms[i].chirality == 2)
+        signs[i] = parity(source, graph, i, index);
+      any = any || signs[i] != 0;
+    }
+    for (const int hand : {1, -1}) {
+      for (std::uint32_t i = 0; i < graph.atoms.size(); ++i) {
+        graph.atoms[i].colour = mix(colours[i], marks[i] + (signs[i] == 0      ? 0
+                                                            : signs[i] == hand ? 101
+                                                                               : 102));
+      }
+      refine_colours(graph);
+      key += mix(sum_of_colours(graph), 9);
+    }
+  }
+  set_colours(graph, plain);
+  if (any) graph.stereo = key;
 }
 
 }  // namespace

@@ -1,5 +1,6 @@
-// The graph that features are counted on: heavy atoms with hydrogens as counts, charges neutralised, rings and
-// their bonds listed. Built from a molecule::Graph; the features themselves stand in context_features.cpp.
+// The graph that features are counted on: heavy atoms with hydrogens as counts, charges neutralised, rings
+// and their bonds listed. Built from a molecule::Graph; the features themselves stand in
+// context_features.cpp.
 #pragma once
 
 #include <array>
@@ -17,15 +18,15 @@ namespace heatledger::estimate {
 struct ContextAtom {
   Kind kind = Kind::C;
   Unsaturation unsaturation = Unsaturation::None;
-  std::uint8_t sign = 0;       ///< 0 none, 1 '+', 2 '-': a charge that no neighbour could settle
+  std::uint8_t sign = 0;  ///< 0 none, 1 '+', 2 '-': a charge that no neighbour could settle
   std::uint8_t hydrogens = 0;
-  std::uint8_t degree = 0;     ///< neighbours, hydrogens included
-  std::uint8_t heavy = 0;      ///< heavy neighbours
+  std::uint8_t degree = 0;  ///< neighbours, hydrogens included
+  std::uint8_t heavy = 0;   ///< heavy neighbours
   bool aromatic = false;
   bool in_ring = false;
   std::uint8_t chirality = 0;
-  std::uint32_t source = 0;    ///< atom index in the molecule::Graph
-  std::uint64_t colour = 0;    ///< equal for atoms that the constitution does not tell apart
+  std::uint32_t source = 0;  ///< atom index in the molecule::Graph
+  std::uint64_t colour = 0;  ///< equal for atoms that the constitution does not tell apart
 
   ShortType type() const { return short_type(kind, unsaturation); }
   FullType full() const { return full_type(signed_type(type(), sign), degree, hydrogens); }
@@ -33,10 +34,10 @@ struct ContextAtom {
 
 struct ContextBond {
   std::uint32_t a = 0, b = 0;
-  std::uint8_t order = 1;      ///< 1, 2, 3; aromatic_order
-  std::uint16_t rings = 0;     ///< rings that hold it
-  std::int8_t side_of_b = 0;   ///< mark of a stereo double bond beside it: +1 b above a, -1 below
-  std::uint32_t source = 0;    ///< bond index in the molecule::Graph
+  std::uint8_t order = 1;     ///< 1, 2, 3; aromatic_order
+  std::uint16_t rings = 0;    ///< rings that hold it
+  std::int8_t side_of_b = 0;  ///< mark of a stereo double bond beside it: +1 b above a, -1 below
+  std::uint32_t source = 0;   ///< bond index in the molecule::Graph
 };
 
 struct ContextRing {
@@ -54,7 +55,7 @@ struct ContextGraph {
   std::vector<std::uint32_t> first;
   std::vector<Neighbour> neighbours;
   std::vector<ContextRing> rings;
-  unsigned hydrogen_bonds = 0;     ///< H-H: 1 in the hydrogen molecule
+  unsigned hydrogen_bonds = 0;  ///< H-H: 1 in the hydrogen molecule
   std::array<unsigned, kind_count> elements{};
   std::uint64_t constitution = 0;
   std::uint64_t stereo = 0;

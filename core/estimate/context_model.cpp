@@ -37,14 +37,17 @@ FittedProperty fit_embedded(FitKind kind) {
   out.temperatures.assign(1, gas_nodes[0]);
   if (kind == FitKind::GasAbove) out.temperatures.assign(gas_nodes + 1, gas_nodes + gas_node_count);
   out.figures = training_figures(kind);
-  out.fit = std::make_unique<ContextFit>(context_settings(kind), fit_rows(kind, out.figures, out.temperatures));
-  out.plain = std::make_unique<Conditioning>(*out.fit, std::vector<std::uint32_t>{}, std::vector<MeasuredDirection>{});
+  out.fit =
+      std::make_unique<ContextFit>(context_settings(kind), fit_rows(kind, out.figures, out.temperatures));
+  out.plain = std::make_unique<Conditioning>(*out.fit, std::vector<std::uint32_t>{},
+                                             std::vector<MeasuredDirection>{});
   return out;
 }
 
 namespace {
 
-Prediction finished(double value, double s, double scale, const ContextSettings& settings, const ContextEstimate& from) {
+Prediction finished(double value, double s, double scale, const ContextSettings& settings,
+                    const ContextEstimate& from) {
   Prediction out;
   out.value = value * scale;
   out.s = s * scale;
@@ -57,23 +60,29 @@ Prediction finished(double value, double s, double scale, const ContextSettings&
 
 }  // namespace
 
-Result<Prediction> ContextModel::predict(Property property, std::span<const ContextTerm> terms, const ContextOptions& options) const {
-  const auto estimate = [&](FitKind kind, std::span<const ContextTerm> of) { return Query(kind, of, options).estimate(); };
+Result<Prediction> ContextModel::predict(Property property, std::span<const ContextTerm> terms,
+                                         const ContextOptions& options) const {
+  const auto estimate = [&](FitKind kind, std::span<const ContextTerm> of) {
+    return Query(kind, of, options).estimate();
+  };
   if (property != Property::GasHeatCapacity) {
     const FitKind kind = fit_kind_of(property);
     const ContextEstimate at = estimate(kind, terms);
     Prediction out = finished(at.value[0], std::sqrt(at.variance), unit_of(kind), context_settings(kind), at);
-    if (kind != FitKind::Liquid) out.reading = out.s <= 8000 ? Reading::Good : out.s <= 15000 ? Reading::Rough : Reading::None;
+    if (kind != FitKind::Liquid)
+      out.reading = out.s <= 8000 ? Reading::Good : out.s <= 15000 ? Reading::Rough : Reading::None;
     return out;
   }
   if (options.temperature < gas_range_low || options.temperature > gas_range_high) {
-    return Error{"estimate.temperature", "Gas heat capacities are estimated from 273.15 K to 1000 K.", "temperature",
-                 "Use a table or a polynomial beyond that range."};
+    return Error{"estimate.temperature", "Gas heat capacities are estimated from 273.15 K to 1000 K.",
+                 "temperature", "Use a table or a polynomial beyond that range."};
   }
   const ContextEstimate low = estimate(FitKind::Gas298, terms);
   if (options.temperature == gas_nodes[0] && terms.size() == 1) {
-    const double excess = above_classical_limit(*terms[0].molecule, low.value[0] / terms[0].coefficient) * terms[0].coefficient;
-    return finished(low.value[0] - excess, std::sqrt(low.variance), 1.0, context_settings(FitKind::Gas298), low);
+    const double excess =
+        above_classical_limit(*terms[0].molecule, low.value[0] / terms[0].coefficient) * terms[0].coefficient;
+    return finished(low.value[0] - excess, std::sqrt(low.variance), 1.0, context_settings(FitKind::Gas298),
+                    low);
   }
   const auto curve_of = [&](std::span<const ContextTerm> of) {
     const ContextEstimate first = estimate(FitKind::Gas298, of), above = estimate(FitKind::GasAbove, of);
@@ -92,12 +101,14 @@ Result<Prediction> ContextModel::predict(Property property, std::span<const Cont
     const ContextTerm alone{1, term.molecule};
     const GasCurve own = terms.size() == 1 ? curve : curve_of(std::span<const ContextTerm>(&alone, 1));
     const double each = terms.size() == 1 ? 1 / term.coefficient : 1;
-    value -= term.coefficient * above_classical_limit(*term.molecule, own.value_at(options.temperature) * each);
+    value -=
+        term.coefficient * above_classical_limit(*term.molecule, own.value_at(options.temperature) * each);
   }
   return finished(value, curve.s_at(options.temperature), 1.0, context_settings(FitKind::GasAbove), low);
 }
 
-Result<Prediction> ContextModel::predict(Property property, const ContextMolecule& molecule, const ContextOptions& options) const {
+Result<Prediction> ContextModel::predict(Property property, const ContextMolecule& molecule,
+                                         const ContextOptions& options) const {
   const ContextTerm term{1, &molecule};
   return predict(property, std::span<const ContextTerm>(&term, 1), options);
 }

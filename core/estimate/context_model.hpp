@@ -1,6 +1,6 @@
 // Bonds in context: four properties of a molecule, or of a whole reaction, from counts of its bonds in their
-// surroundings, with the ± that follows from one joint covariance. Counting stands in context_molecule.hpp, the
-// lines of a ledger in context_explain.hpp.
+// surroundings, with the ± that follows from one joint covariance. Counting stands in context_molecule.hpp,
+// the lines of a ledger in context_explain.hpp.
 #pragma once
 
 #include <cstdint>
@@ -50,7 +50,7 @@ struct Prediction {
   double u68 = 0;  ///< half widths of the 68 and 95 % intervals, calibrated on compounds left out
   double u95 = 0;
   Reading reading = Reading::Good;
-  int unseen = 0;       ///< features that no row of the table has; they widen the ± and add nothing to the value
+  int unseen = 0;  ///< features that no row of the table has; they widen the ± and add nothing to the value
   bool in_table = false;  ///< a molecule's own row takes part
 };
 

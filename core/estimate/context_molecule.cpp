@@ -22,7 +22,8 @@ double base_bonds(const ContextGraph& graph) {
 /// The liquid properties see how many O-H and N-H bonds there are, not only that there are some.
 void count_donors(const ContextGraph& graph, double donors, FeatureSink& sink) {
   const double more = std::max(0.0, donors - 1);
-  const double values[4] = {std::sqrt(static_cast<double>(graph.atoms.size())), donors > 0 ? 1.0 : 0.0, more, more * more};
+  const double values[4] = {std::sqrt(static_cast<double>(graph.atoms.size())), donors > 0 ? 1.0 : 0.0, more,
+                            more * more};
   for (unsigned i = 0; i < 4; ++i) {
     if (values[i] != 0) sink.add(FeatureCode(FeatureClass::VX).byte(i), values[i]);
   }

@@ -30,7 +30,8 @@ struct Observations::Prepared {
 };
 
 Observations::Observations() : prepared_(std::make_unique<Prepared>()) {}
-Observations::Observations(const Observations& other) : list_(other.list_), prepared_(std::make_unique<Prepared>()) {}
+Observations::Observations(const Observations& other)
+    : list_(other.list_), prepared_(std::make_unique<Prepared>()) {}
 Observations& Observations::operator=(const Observations& other) {
   list_ = other.list_;
   prepared_ = std::make_unique<Prepared>();
@@ -40,11 +41,13 @@ Observations::~Observations() = default;
 
 Status Observations::add(Measurement measurement) {
   const auto refuse = [](const char* message) {
-    return Error{"estimate.measurement", message, "measurement", "Give the measured figure with its 95 % interval."};
+    return Error{"estimate.measurement", message, "measurement",
+                 "Give the measured figure with its 95 % interval."};
   };
   if (measurement.terms.empty()) return refuse("A measurement belongs to a species or a reaction.");
   if (!std::isfinite(measurement.value)) return refuse("The measured figure is not a number.");
-  if (!std::isfinite(measurement.u95) || measurement.u95 <= 0) return refuse("A measured figure needs a ± greater than zero.");
+  if (!std::isfinite(measurement.u95) || measurement.u95 <= 0)
+    return refuse("A measured figure needs a ± greater than zero.");
   if (measurement.property == Property::GasHeatCapacity) {
     return refuse("A measured gas heat capacity stands for itself and does not enter the fit.");
   }
@@ -82,7 +85,8 @@ const Conditioning* observed_conditioning(const Observations& observations, FitK
   if (measured.empty()) return nullptr;
   std::unique_ptr<Conditioning>& prepared = observations.prepared_->by_kind[static_cast<std::size_t>(kind)];
   if (prepared == nullptr) {
-    prepared = std::make_unique<Conditioning>(*embedded_fit(kind).fit, std::vector<std::uint32_t>{}, measured);
+    prepared =
+        std::make_unique<Conditioning>(*embedded_fit(kind).fit, std::vector<std::uint32_t>{}, measured);
   }
   return prepared.get();
 }

@@ -1,5 +1,5 @@
-// Measurements of the user laid over the fitted model: each is one more observation, sharpens every related estimate
-// at once and leaves no trace when taken out.
+// Measurements of the user laid over the fitted model: each is one more observation, sharpens every related
+// estimate at once and leaves no trace when taken out.
 #pragma once
 
 #include <cstdint>
@@ -22,9 +22,9 @@ struct Measurement {
     std::shared_ptr<const ContextMolecule> molecule;
   };
   std::vector<Term> terms;
-  double value = 0;  ///< [J/mol] or [J/(mol K)]; for a reaction per mole as its coefficients say
-  double u95 = 0;    ///< > 0, half width of the 95 % interval of the measurement itself
-  std::string label; ///< what the sheet calls it
+  double value = 0;   ///< [J/mol] or [J/(mol K)]; for a reaction per mole as its coefficients say
+  double u95 = 0;     ///< > 0, half width of the 95 % interval of the measurement itself
+  std::string label;  ///< what the sheet calls it
 };
 
 /// A value: copies are independent, equal lists give equal digits whatever came and went before.
@@ -35,7 +35,8 @@ class Observations {
   Observations& operator=(const Observations& other);
   ~Observations();
 
-  /// @errors estimate.measurement: no term, a value or ± that is not finite, ± of zero or less, or a gas heat capacity
+  /// @errors estimate.measurement: no term, a value or ± that is not finite, ± of zero or less, or a gas heat
+  /// capacity
   ///         (those have one figure per temperature and are typed on the sheet instead)
   Status add(Measurement measurement);
   /// @param index  < list().size()

@@ -7,7 +7,8 @@
 namespace heatledger::estimate {
 namespace {
 
-std::vector<std::uint32_t> rows_to_leave(const ContextFit& fit, std::span<const ContextTerm> terms, const ContextOptions& options) {
+std::vector<std::uint32_t> rows_to_leave(const ContextFit& fit, std::span<const ContextTerm> terms,
+                                         const ContextOptions& options) {
   std::vector<std::uint32_t> rows;
   const auto leave = [&](const ContextMolecule& molecule) {
     for (const std::uint32_t row : fit.rows_of(molecule.constitution)) rows.push_back(row);
@@ -37,19 +38,23 @@ FitKind fit_kind_of(Property property) {
   return FitKind::Gas298;
 }
 
-double unit_of(FitKind kind) { return kind == FitKind::Formation || kind == FitKind::Vaporisation ? 1000 : 1; }
+double unit_of(FitKind kind) {
+  return kind == FitKind::Formation || kind == FitKind::Vaporisation ? 1000 : 1;
+}
 
 Query::Query(FitKind kind, std::span<const ContextTerm> terms, const ContextOptions& options)
     : kind_(kind), terms_(terms.begin(), terms.end()), fitted_(embedded_fit(kind)) {
   const std::vector<std::uint32_t> without = rows_to_leave(*fitted_.fit, terms, options);
   if (without.empty()) {
-    conditioning_ = options.observations != nullptr ? observed_conditioning(*options.observations, kind) : nullptr;
+    conditioning_ =
+        options.observations != nullptr ? observed_conditioning(*options.observations, kind) : nullptr;
     if (conditioning_ == nullptr) conditioning_ = fitted_.plain.get();
     return;
   }
   own_ = std::make_unique<Conditioning>(*fitted_.fit, without,
-                                        options.observations != nullptr ? observed_directions(*options.observations, kind)
-                                                                        : std::vector<MeasuredDirection>{});
+                                        options.observations != nullptr
+                                            ? observed_directions(*options.observations, kind)
+                                            : std::vector<MeasuredDirection>{});
   conditioning_ = own_.get();
 }
 
@@ -69,7 +74,8 @@ ContextEstimate Query::estimate() const {
   out.in_table = direction.functional.in_table;
   for (std::size_t k = 0; k < fitted_.temperatures.size(); ++k) {
     double value = conditioning_->mean(direction, k);
-    for (const ContextTerm& term : terms_) value += term.coefficient * offset(kind_, *term.molecule, fitted_.temperatures[k]);
+    for (const ContextTerm& term : terms_)
+      value += term.coefficient * offset(kind_, *term.molecule, fitted_.temperatures[k]);
     out.value.push_back(sign_of(kind_) * value);
   }
   return out;
@@ -80,10 +86,11 @@ std::vector<ReferenceRow> Query::reference_rows(std::size_t most) const {
   std::vector<std::uint32_t> order(weights.size());
   for (std::uint32_t r = 0; r < order.size(); ++r) order[r] = r;
   most = std::min(most, order.size());
-  std::partial_sort(order.begin(), order.begin() + static_cast<std::ptrdiff_t>(most), order.end(), [&](std::uint32_t a, std::uint32_t b) {
-    const double x = std::fabs(weights[a]), y = std::fabs(weights[b]);
-    return x != y ? x > y : a < b;
-  });
+  std::partial_sort(order.begin(), order.begin() + static_cast<std::ptrdiff_t>(most), order.end(),
+                    [&](std::uint32_t a, std::uint32_t b) {
+                      const double x = std::fabs(weights[a]), y = std::fabs(weights[b]);
+                      return x != y ? x > y : a < b;
+                    });
   std::vector<ReferenceRow> rows;
   for (std::size_t i = 0; i < most; ++i) {
     const TrainingFigure& figure = fitted_.figures[order[i]];

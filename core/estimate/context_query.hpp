@@ -1,5 +1,5 @@
-// One question to one fit: which rows are left out, which measurements count, and the answers that prediction and
-// explanation share. Not for callers outside this room.
+// One question to one fit: which rows are left out, which measurements count, and the answers that prediction
+// and explanation share. Not for callers outside this room.
 #pragma once
 
 #include <memory>

@@ -15,7 +15,8 @@ double degrees_of_freedom(FitKind kind, const TrainingFigure& figure) {
 }  // namespace
 
 std::vector<double> robust_weights(FitKind kind, const std::vector<TrainingFigure>& figures,
-                                   const std::vector<double>& temperatures, int rounds, const MoleculeSource& molecule) {
+                                   const std::vector<double>& temperatures, int rounds,
+                                   const MoleculeSource& molecule) {
   std::vector<TrainingFigure> weighted = figures;
   for (TrainingFigure& figure : weighted) figure.weight = 1;
   const ContextSettings& settings = context_settings(kind);

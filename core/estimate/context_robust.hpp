@@ -1,5 +1,5 @@
-// Weights of the table's rows: how far each fits the others. The shipped weights stand in the table; here is how
-// they are come by.
+// Weights of the table's rows: how far each fits the others. The shipped weights stand in the table; here is
+// how they are come by.
 #pragma once
 
 #include <vector>
@@ -8,9 +8,9 @@
 
 namespace heatledger::estimate {
 
-/// Weights by expectation-maximisation for errors that follow Student's t instead of the normal law: a row whose figure
-/// lies far off, given its stated error, counts for less; none counts for more than its stated error.
-/// With several right-hand sides the squared misfits are averaged.
+/// Weights by expectation-maximisation for errors that follow Student's t instead of the normal law: a row
+/// whose figure lies far off, given its stated error, counts for less; none counts for more than its stated
+/// error. With several right-hand sides the squared misfits are averaged.
 /// @param figures  one fit's figures; their own weights are not used
 /// @param rounds   refits; six settle the weights to about 1e-3
 /// @return         one weight per figure, 0 < w <= 1

@@ -137,9 +137,9 @@ const ContextSettings& context_settings(FitKind kind) {
 double own_variance(const ContextSettings& settings, const DeviationMeasures& m) {
   const DeviationMeasures& own = settings.own;
   return own.one * own.one * m.one + own.heavy * own.heavy * m.heavy + own.ring * own.ring * m.ring +
-         own.polar * own.polar * m.polar + own.hetero * own.hetero * m.hetero + own.halogen * own.halogen * m.halogen +
-         own.crowding * own.crowding * m.crowding + own.inorganic * own.inorganic * m.inorganic +
-         own.donors * own.donors * m.donors;
+         own.polar * own.polar * m.polar + own.hetero * own.hetero * m.hetero +
+         own.halogen * own.halogen * m.halogen + own.crowding * own.crowding * m.crowding +
+         own.inorganic * own.inorganic * m.inorganic + own.donors * own.donors * m.donors;
 }
 
 double prior_bond(Kind a, Kind b, unsigned order) {
@@ -151,7 +151,9 @@ double prior_bond(Kind a, Kind b, unsigned order) {
   return (0.5 * (p.single[x] + p.single[y]) + 96.5 * difference * difference) * kOrderFactor[order];
 }
 
-double model_gas_atom(Kind kind) { return prior().gas_atom[static_cast<std::size_t>(kind)]; }
+double model_gas_atom(Kind kind) {
+  return prior().gas_atom[static_cast<std::size_t>(kind)];
+}
 
 double offset(FitKind kind, const ContextMolecule& molecule, double temperature) {
   switch (kind) {
@@ -165,7 +167,8 @@ double offset(FitKind kind, const ContextMolecule& molecule, double temperature)
     case FitKind::GasAbove:
       break;
   }
-  return 8.0 * molecule.measures.one + 0.5 * (8 + 0.022 * temperature) * molecule.atoms + 3.0 * molecule.heavy_atoms;
+  return 8.0 * molecule.measures.one + 0.5 * (8 + 0.022 * temperature) * molecule.atoms +
+         3.0 * molecule.heavy_atoms;
 }
 
 }  // namespace heatledger::estimate

@@ -1,5 +1,6 @@
-// Settings of the model of bonds in context: prior spreads per class, the parts of a molecule's own deviation,
-// interval factors, prior bond enthalpies. Read from tables/context_settings.tsv and tables/context_prior.tsv.
+// Settings of the model of bonds in context: prior spreads per class, the parts of a molecule's own
+// deviation, interval factors, prior bond enthalpies. Read from tables/context_settings.tsv and
+// tables/context_prior.tsv.
 #pragma once
 
 #include <array>
@@ -15,9 +16,9 @@ constexpr std::size_t fit_kind_count = 5;
 
 struct ContextSettings {
   std::array<double, feature_class_count> spread{};  ///< prior standard deviation; 0: the class takes no part
-  DeviationMeasures own{};      ///< standard deviation that one unit of each measure adds
-  double single_source = 0;     ///< extra standard deviation of a row that only one source gives
-  double k68 = 0, k95 = 0;      ///< interval half width / standard deviation
+  DeviationMeasures own{};   ///< standard deviation that one unit of each measure adds
+  double single_source = 0;  ///< extra standard deviation of a row that only one source gives
+  double k68 = 0, k95 = 0;   ///< interval half width / standard deviation
 };
 
 const ContextSettings& context_settings(FitKind kind);

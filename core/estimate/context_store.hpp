@@ -1,5 +1,5 @@
-// The fits behind the model, for the files of this room that look inside: prediction, explanation, measurements,
-// accuracy. Not for callers.
+// The fits behind the model, for the files of this room that look inside: prediction, explanation,
+// measurements, accuracy. Not for callers.
 #pragma once
 
 #include <array>

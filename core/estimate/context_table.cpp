@@ -117,7 +117,10 @@ std::vector<TrainingFigure> training_figures(FitKind kind) {
   std::vector<TrainingFigure> figures;
   if (kind == FitKind::Gas298) return training_figures_at(0);
   for (std::size_t c = 0; c < compounds.size(); ++c) {
-    const std::size_t column = kind == FitKind::Formation ? 0 : kind == FitKind::Vaporisation ? 1 : kind == FitKind::Liquid ? 2 : 3;
+    const std::size_t column = kind == FitKind::Formation      ? 0
+                               : kind == FitKind::Vaporisation ? 1
+                               : kind == FitKind::Liquid       ? 2
+                                                               : 3;
     const std::string_view cell = compounds[c].cells[column];
     if (cell.empty()) continue;
     if (column < 3) {
@@ -126,7 +129,8 @@ std::vector<TrainingFigure> training_figures(FitKind kind) {
     }
     const GasCell gas = gas_cell(cell);
     bool complete = true;
-    for (std::size_t node = 1; node < gas_node_count; ++node) complete = complete && gas.value[node].has_value();
+    for (std::size_t node = 1; node < gas_node_count; ++node)
+      complete = complete && gas.value[node].has_value();
     if (!complete) continue;
     // One error for all temperatures, that of the middle one: the rows state it in per cent.
     TrainingFigure figure = gas_figure(c, gas, 3, gas.weight_above);
@@ -143,7 +147,8 @@ std::vector<TrainingFigure> training_figures_at(std::size_t node) {
   for (std::size_t c = 0; c < compounds.size(); ++c) {
     if (compounds[c].cells[3].empty()) continue;
     const GasCell gas = gas_cell(compounds[c].cells[3]);
-    if (gas.value[node]) figures.push_back(gas_figure(c, gas, node, node == 0 ? gas.weight_298 : gas.weight_above));
+    if (gas.value[node])
+      figures.push_back(gas_figure(c, gas, node, node == 0 ? gas.weight_298 : gas.weight_above));
   }
   return figures;
 }
@@ -153,17 +158,25 @@ std::string source_text(std::string_view letters) {
     char letter;
     const char* text;
   };
-  static constexpr Source kSources[] = {
-      {'A', "ATcT 1.112"},         {'a', "ATcT 1.112 (from the condensed phase)"},
-      {'C', "CRC 95"},             {'c', "CRC 95 (from the liquid)"},
-      {'k', "CRC 95 (from the solid)"}, {'T', "TRC 1994"},
-      {'J', "JANAF 1998"},         {'j', "JANAF 1998 (from the liquid)"},
-      {'P', "API data book"},      {'D', "open pure-component database"},
-      {'Y', "Yaws"},               {'W', "NIST WebBook"},
-      {'w', "NIST WebBook (from the liquid)"}, {'s', "NIST WebBook (from the solid)"},
-      {'G', "Poling 2001"},        {'Z', "Zabransky"},
-      {'E', "Perry 8"},            {'V', "VDI"},
-      {'H', "compilation of vaporisation enthalpies"}};
+  static constexpr Source kSources[] = {{'A', "ATcT 1.112"},
+                                        {'a', "ATcT 1.112 (from the condensed phase)"},
+                                        {'C', "CRC 95"},
+                                        {'c', "CRC 95 (from the liquid)"},
+                                        {'k', "CRC 95 (from the solid)"},
+                                        {'T', "TRC 1994"},
+                                        {'J', "JANAF 1998"},
+                                        {'j', "JANAF 1998 (from the liquid)"},
+                                        {'P', "API data book"},
+                                        {'D', "open pure-component database"},
+                                        {'Y', "Yaws"},
+                                        {'W', "NIST WebBook"},
+                                        {'w', "NIST WebBook (from the liquid)"},
+                                        {'s', "NIST WebBook (from the solid)"},
+                                        {'G', "Poling 2001"},
+                                        {'Z', "Zabransky"},
+                                        {'E', "Perry 8"},
+                                        {'V', "VDI"},
+                                        {'H', "compilation of vaporisation enthalpies"}};
   std::string text;
   for (const char letter : letters) {
     for (const Source& source : kSources) {
@@ -180,8 +193,8 @@ double error_variance(const ContextSettings& settings, const TrainingFigure& fig
   return s * s + extra * extra;
 }
 
-std::vector<FitRow> fit_rows(FitKind kind, const std::vector<TrainingFigure>& figures, const std::vector<double>& temperatures,
-                             const MoleculeSource& molecule) {
+std::vector<FitRow> fit_rows(FitKind kind, const std::vector<TrainingFigure>& figures,
+                             const std::vector<double>& temperatures, const MoleculeSource& molecule) {
   const ContextSettings& settings = context_settings(kind);
   std::vector<FitRow> rows;
   rows.reserve(figures.size());

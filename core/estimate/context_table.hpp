@@ -1,4 +1,5 @@
-// The table that the model is fitted to: published figures of some 4,500 compounds, read from tables/training.tsv.
+// The table that the model is fitted to: published figures of some 4,500 compounds, read from
+// tables/training.tsv.
 #pragma once
 
 #include <cstdint>
@@ -20,28 +21,30 @@ constexpr std::size_t gas_node_count = 6;
 
 /// One figure of one compound, kJ/mol or J/(mol K). Text views point into the embedded table.
 struct TrainingFigure {
-  std::size_t compound = 0;           ///< index into training_compounds()
-  std::vector<double> value;          ///< one, or one per temperature of the fit
+  std::size_t compound = 0;   ///< index into training_compounds()
+  std::vector<double> value;  ///< one, or one per temperature of the fit
   double u95 = 0;
   double weight = 1;
-  bool trusted = false;               ///< at least two sources share the value
-  std::string_view sources;           ///< one letter each
+  bool trusted = false;      ///< at least two sources share the value
+  std::string_view sources;  ///< one letter each
 };
 
 struct TrainingCompound {
   std::string_view name, smiles;
-  std::string_view cells[4];  ///< formation, vaporisation, liquid, gas as they stand in the table; empty: no figure
+  std::string_view
+      cells[4];  ///< formation, vaporisation, liquid, gas as they stand in the table; empty: no figure
 };
 
 const std::vector<TrainingCompound>& training_compounds();
 
-/// Features of a compound of the table, counted once and kept. The embedded table holds only structures that the
-/// model covers (a test sees to that).
+/// Features of a compound of the table, counted once and kept. The embedded table holds only structures that
+/// the model covers (a test sees to that).
 const ContextMolecule& training_molecule(std::size_t compound);
 
 /// Figures of one fit in the order of the table. Rows that lack a temperature of GasAbove are left out of it.
 std::vector<TrainingFigure> training_figures(FitKind kind);
-/// Heat capacities at one of the higher temperatures alone, with every row that has it; for the reference settings.
+/// Heat capacities at one of the higher temperatures alone, with every row that has it; for the reference
+/// settings.
 std::vector<TrainingFigure> training_figures_at(std::size_t node);
 
 /// The sources of a figure in words: "ATcT 1.112, CRC 95".
@@ -52,13 +55,16 @@ using MoleculeSource = std::function<const ContextMolecule&(std::size_t compound
 
 /// Rows to fit: offset taken off, variances from settings. One right-hand side per value.
 /// @param temperatures  one per value; [K], used by the gas heat capacity only
-std::vector<FitRow> fit_rows(FitKind kind, const std::vector<TrainingFigure>& figures, const std::vector<double>& temperatures,
+std::vector<FitRow> fit_rows(FitKind kind, const std::vector<TrainingFigure>& figures,
+                             const std::vector<double>& temperatures,
                              const MoleculeSource& molecule = training_molecule);
 
 /// Variance of a figure's error: (u95 / 2)² and the extra spread of a single source.
 double error_variance(const ContextSettings& settings, const TrainingFigure& figure);
 
 /// Formation enthalpies enter as atomisation: minus the value. Others as they are.
-constexpr double sign_of(FitKind kind) { return kind == FitKind::Formation ? -1.0 : 1.0; }
+constexpr double sign_of(FitKind kind) {
+  return kind == FitKind::Formation ? -1.0 : 1.0;
+}
 
 }  // namespace heatledger::estimate

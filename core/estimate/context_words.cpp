@@ -37,7 +37,8 @@ std::string neighbours(const ContextGraph& graph, std::uint32_t atom, std::uint3
   for (const auto& next : around(graph, atom)) {
     if (next.atom == except) continue;
     const unsigned order = graph.bonds[next.bond].order;
-    parts.push_back(std::string(order == 1 ? "" : order_sign(order)) + kind_symbol(graph.atoms[next.atom].kind));
+    parts.push_back(std::string(order == 1 ? "" : order_sign(order)) +
+                    kind_symbol(graph.atoms[next.atom].kind));
   }
   std::sort(parts.begin(), parts.end());
   std::string text;

@@ -8,11 +8,12 @@ namespace {
 
 constexpr const char* kSymbols[kind_count] = {"H", "C", "N", "O", "F", "Si", "P", "S", "Cl", "Br", "I", "B"};
 constexpr const char* kClassNames[feature_class_count] = {
-    "K0",  "B",    "Ac",   "Ao",  "Ax",  "B1c", "B1o", "B1x", "B2c", "B2o", "B2x", "B3c", "B3o", "B3x", "G1c",
-    "G1o", "G1x",  "P2",   "P2h", "P3",  "P3h", "P4h", "GA",  "P5",  "P5m", "R0",  "R1",  "R1h", "R2c", "R2o",
-    "R2x", "RS",   "RF",   "RP",  "BAY", "SC",  "OMP0", "OMP", "OMP2", "CT0", "CT", "HB0", "HB",  "VX"};
+    "K0",  "B",   "Ac", "Ao",  "Ax",  "B1c", "B1o",  "B1x", "B2c",  "B2o", "B2x", "B3c", "B3o", "B3x", "G1c",
+    "G1o", "G1x", "P2", "P2h", "P3",  "P3h", "P4h",  "GA",  "P5",   "P5m", "R0",  "R1",  "R1h", "R2c", "R2o",
+    "R2x", "RS",  "RF", "RP",  "BAY", "SC",  "OMP0", "OMP", "OMP2", "CT0", "CT",  "HB0", "HB",  "VX"};
 
-constexpr unsigned kCarbonHydrogen = 1u << static_cast<unsigned>(Kind::C) | 1u << static_cast<unsigned>(Kind::H);
+constexpr unsigned kCarbonHydrogen =
+    1u << static_cast<unsigned>(Kind::C) | 1u << static_cast<unsigned>(Kind::H);
 constexpr unsigned kWithNitrogenOxygen =
     kCarbonHydrogen | 1u << static_cast<unsigned>(Kind::N) | 1u << static_cast<unsigned>(Kind::O);
 
@@ -36,11 +37,14 @@ class Reader {
     return code < kind_count ? kSymbols[code] : "lp";
   }
   std::string order() { return order_text(byte()); }
-  static std::string order_text(unsigned order) { return order == aromatic_order ? "a" : std::to_string(order); }
+  static std::string order_text(unsigned order) {
+    return order == aromatic_order ? "a" : std::to_string(order);
+  }
   std::string short_text() { return short_text(byte()); }
   static std::string short_text(unsigned type) {
     static constexpr const char* kUnsaturation[4] = {"", "d", "t", "a"};
-    return std::string(kSymbols[std::min<std::size_t>(type & 15, kind_count - 1)]) + kUnsaturation[type >> 4 & 3];
+    return std::string(kSymbols[std::min<std::size_t>(type & 15, kind_count - 1)]) +
+           kUnsaturation[type >> 4 & 3];
   }
   static std::string sign_text(unsigned type) { return type >> 6 == 1 ? "+" : type >> 6 == 2 ? "-" : ""; }
   std::string full_text() {
@@ -121,8 +125,12 @@ std::string omp_text(Reader& in) {
 
 }  // namespace
 
-const char* kind_symbol(Kind kind) { return kSymbols[static_cast<std::size_t>(kind)]; }
-const char* class_name(FeatureClass family) { return kClassNames[static_cast<std::size_t>(family)]; }
+const char* kind_symbol(Kind kind) {
+  return kSymbols[static_cast<std::size_t>(kind)];
+}
+const char* class_name(FeatureClass family) {
+  return kClassNames[static_cast<std::size_t>(family)];
+}
 
 FeatureClass FeatureCode::family() const {
   switch (family_) {
@@ -238,7 +246,9 @@ std::string FeatureCode::text() const {
     case FeatureClass::RF: {
       const unsigned shared = in.byte();
       const std::string a = in.ring_text();
-      const std::string how = shared == 0 ? "spiro" : shared == 1 ? "fused" : "bridge" + std::to_string(shared);
+      const std::string how = shared == 0   ? "spiro"
+                              : shared == 1 ? "fused"
+                                            : "bridge" + std::to_string(shared);
       return how + ":" + joined({a, in.ring_text()}, ",");
     }
     case FeatureClass::RP: {

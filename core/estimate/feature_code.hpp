@@ -1,4 +1,5 @@
-// The description of one counted feature, packed into a few bytes: hashed for counting, spelled out for people.
+// The description of one counted feature, packed into a few bytes: hashed for counting, spelled out for
+// people.
 #pragma once
 
 #include <array>
@@ -26,7 +27,9 @@ constexpr ShortType short_type(Kind kind, Unsaturation u) {
   return static_cast<ShortType>(static_cast<unsigned>(kind) | (static_cast<unsigned>(u) << 4));
 }
 /// sign: 0 none, 1 '+', 2 '-'
-constexpr ShortType signed_type(ShortType type, unsigned sign) { return static_cast<ShortType>(type | (sign << 6)); }
+constexpr ShortType signed_type(ShortType type, unsigned sign) {
+  return static_cast<ShortType>(type | (sign << 6));
+}
 
 /// Full type: signed short type, total degree, hydrogens.
 using FullType = std::uint16_t;
@@ -34,7 +37,8 @@ constexpr FullType full_type(ShortType signed_short, unsigned degree, unsigned h
   return static_cast<FullType>((signed_short << 8) | (degree << 4) | hydrogens);
 }
 
-/// Bytes of one description. Longer ones (large rings of hetero atoms) are folded into a hash and lose their text.
+/// Bytes of one description. Longer ones (large rings of hetero atoms) are folded into a hash and lose their
+/// text.
 class FeatureCode {
  public:
   explicit FeatureCode(FeatureClass family) : family_(family) {}
@@ -82,8 +86,8 @@ class FeatureCode {
 /// "B2o", "OMP".
 const char* class_name(FeatureClass family);
 
-/// Mixes one word into a hash; the two arguments play different parts, so mix(a, b) is not mix(b, a). Whole-number
-/// arithmetic only, so equal in every build.
+/// Mixes one word into a hash; the two arguments play different parts, so mix(a, b) is not mix(b, a).
+/// Whole-number arithmetic only, so equal in every build.
 constexpr std::uint64_t mix(std::uint64_t state, std::uint64_t value) {
   std::uint64_t mixed = (state + 0x243f6a8885a308d3ULL) * 0x9e3779b97f4a7c15ULL;
   mixed ^= mixed >> 31;

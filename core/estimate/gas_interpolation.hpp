@@ -1,4 +1,5 @@
-// Gas heat capacity between the temperatures of the table: monotone cubic, so no bump that the nodes do not have.
+// Gas heat capacity between the temperatures of the table: monotone cubic, so no bump that the nodes do not
+// have.
 #pragma once
 
 #include <array>

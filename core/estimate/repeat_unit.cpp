@@ -13,7 +13,8 @@ struct Ends {
 };
 
 Error wrong_unit(const char* message) {
-  return Error{"estimate.repeat_unit", message, "", "Write the unit with * at both ends, for example *CC(*)c1ccccc1."};
+  return Error{"estimate.repeat_unit", message, "",
+               "Write the unit with * at both ends, for example *CC(*)c1ccccc1."};
 }
 
 Result<Ends> find_ends(const molecule::Graph& unit) {
@@ -31,7 +32,8 @@ Result<Ends> find_ends(const molecule::Graph& unit) {
       if (bond.a != ends.star[e] && bond.b != ends.star[e]) continue;
       ++bonds;
       ends.atom[e] = bond.a == ends.star[e] ? bond.b : bond.a;
-      if (bond.order != molecule::Order::Single) return wrong_unit("The open ends of a repeat unit are single bonds.");
+      if (bond.order != molecule::Order::Single)
+        return wrong_unit("The open ends of a repeat unit are single bonds.");
     }
     if (bonds != 1) return wrong_unit("Each open end of a repeat unit hangs on one atom.");
     if (unit.atoms[ends.atom[e]].element == 0) return wrong_unit("There is no atom between the open ends.");
@@ -60,7 +62,8 @@ void subtract(std::vector<FeatureCount>& from, const std::vector<FeatureCount>& 
 }  // namespace
 
 bool has_open_ends(const molecule::Graph& graph) {
-  return std::any_of(graph.atoms.begin(), graph.atoms.end(), [](const molecule::Atom& atom) { return atom.element == 0; });
+  return std::any_of(graph.atoms.begin(), graph.atoms.end(),
+                     [](const molecule::Atom& atom) { return atom.element == 0; });
 }
 
 Result<molecule::Graph> chain_of(const molecule::Graph& unit, unsigned units) {
@@ -100,8 +103,9 @@ Result<molecule::Graph> chain_of(const molecule::Graph& unit, unsigned units) {
 }
 
 Result<ContextMolecule> repeat_unit(const molecule::Graph& unit) {
-  // The longest feature spans five bonds and a chain adds at least one per unit: from seven units on, one more unit
-  // adds the same counts whatever the ends are. Refinement of atom identities plays no part in counts.
+  // The longest feature spans five bonds and a chain adds at least one per unit: from seven units on, one
+  // more unit adds the same counts whatever the ends are. Refinement of atom identities plays no part in
+  // counts.
   constexpr unsigned kUnits = 7;
   ContextMolecule chains[2];
   for (unsigned k = 0; k < 2; ++k) {

@@ -13,7 +13,8 @@ bool has_open_ends(const molecule::Graph& graph);
 /// @errors estimate.repeat_unit: not exactly two `*`, each with one single bond to an atom of the unit
 Result<molecule::Graph> chain_of(const molecule::Graph& unit, unsigned units);
 
-/// Counts of the longer chain minus counts of the shorter one. Own deviation: that of one unit taken as a molecule.
+/// Counts of the longer chain minus counts of the shorter one. Own deviation: that of one unit taken as a
+/// molecule.
 /// @errors estimate.repeat_unit; those of context_molecule
 Result<ContextMolecule> repeat_unit(const molecule::Graph& unit);
 

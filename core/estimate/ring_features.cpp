@@ -6,16 +6,23 @@
 namespace heatledger::estimate {
 namespace {
 
-unsigned code(Kind kind) { return static_cast<unsigned>(kind); }
-unsigned shown_size(const ContextRing& ring) { return static_cast<unsigned>(std::min<std::size_t>(ring.atoms.size(), 255)); }
-unsigned grouped_size(const ContextRing& ring) { return std::min(shown_size(ring), 9u); }
+unsigned code(Kind kind) {
+  return static_cast<unsigned>(kind);
+}
+unsigned shown_size(const ContextRing& ring) {
+  return static_cast<unsigned>(std::min<std::size_t>(ring.atoms.size(), 255));
+}
+unsigned grouped_size(const ContextRing& ring) {
+  return std::min(shown_size(ring), 9u);
+}
 
 bool holds(const std::vector<std::uint32_t>& list, std::uint32_t value) {
   return std::find(list.begin(), list.end(), value) != list.end();
 }
 
 std::size_t shared(const std::vector<std::uint32_t>& a, const std::vector<std::uint32_t>& b) {
-  return static_cast<std::size_t>(std::count_if(a.begin(), a.end(), [&](std::uint32_t x) { return holds(b, x); }));
+  return static_cast<std::size_t>(
+      std::count_if(a.begin(), a.end(), [&](std::uint32_t x) { return holds(b, x); }));
 }
 
 /// What one ring is by itself.
@@ -42,10 +49,16 @@ void count_ring(const ContextGraph& graph, const ContextRing& ring, FeatureSink&
   std::sort(hetero.begin(), hetero.end());
   const unsigned size = shown_size(ring);
   sink.add(FeatureCode(FeatureClass::R0).byte(grouped_size(ring)).byte(ring.aromatic), 1);
-  if (substituents != 0) sink.add(FeatureCode(FeatureClass::RS).byte(grouped_size(ring)).byte(ring.aromatic), substituents);
+  if (substituents != 0)
+    sink.add(FeatureCode(FeatureClass::RS).byte(grouped_size(ring)).byte(ring.aromatic), substituents);
   const auto detail = [&](FeatureClass family) {
     FeatureCode feature(family);
-    feature.byte(size).byte(ring.aromatic).byte(doubles & 255).byte(triples & 255).byte(stray_aromatic & 255).byte(exocyclic & 255);
+    feature.byte(size)
+        .byte(ring.aromatic)
+        .byte(doubles & 255)
+        .byte(triples & 255)
+        .byte(stray_aromatic & 255)
+        .byte(exocyclic & 255);
     return feature;
   };
   sink.add(detail(FeatureClass::R1), 1);
@@ -124,7 +137,12 @@ void count_positions(const ContextGraph& graph, const ContextRing& ring, Feature
     for (std::size_t y = x + 1; y < ring.atoms.size(); ++y) {
       const Kind other = graph.atoms[ring.atoms[y]].kind;
       if (other == Kind::C) continue;
-      sink.add(FeatureCode(FeatureClass::OMP).byte(2).byte(size).sorted(code(hetero), code(other)).byte(distance(x, y)), 1);
+      sink.add(FeatureCode(FeatureClass::OMP)
+                   .byte(2)
+                   .byte(size)
+                   .sorted(code(hetero), code(other))
+                   .byte(distance(x, y)),
+               1);
     }
   }
 }
@@ -145,7 +163,8 @@ std::uint64_t ring_system_hash(const ContextGraph& graph, const std::vector<std:
     for (const std::uint32_t i : atoms) {
       std::uint64_t sum = 0;
       for (const auto& neighbour : around(graph, i)) {
-        if (inside[neighbour.atom] != 0) sum += mix(colour[neighbour.atom], graph.bonds[neighbour.bond].order);
+        if (inside[neighbour.atom] != 0)
+          sum += mix(colour[neighbour.atom], graph.bonds[neighbour.bond].order);
       }
       next[i] = mix(colour[i], sum);
     }
@@ -191,7 +210,8 @@ void count_ring_systems(const ContextGraph& graph, FeatureSink& sink) {
     std::sort(atoms.begin(), atoms.end());
     atoms.erase(std::unique(atoms.begin(), atoms.end()), atoms.end());
     if (members == 1 && weight == 0) {
-      const bool aromatic = std::all_of(atoms.begin(), atoms.end(), [&](std::uint32_t i) { return graph.atoms[i].aromatic; });
+      const bool aromatic =
+          std::all_of(atoms.begin(), atoms.end(), [&](std::uint32_t i) { return graph.atoms[i].aromatic; });
       weight = aromatic ? 0.25 : 0.5;
     }
     sink.add(FeatureCode(FeatureClass::SC).word(ring_system_hash(graph, atoms)), std::sqrt(weight));
@@ -205,7 +225,8 @@ void count_ring_pairs(const ContextGraph& graph, FeatureSink& sink, DeviationMea
       if (shared(a.atoms, b.atoms) == 0) continue;
       const std::size_t bonds = shared(a.bonds, b.bonds);
       measures.ring += bonds == 1 ? 0.5 : 1.0;
-      const unsigned x = shown_size(a) << 8 | (a.aromatic ? 1u : 0u), y = shown_size(b) << 8 | (b.aromatic ? 1u : 0u);
+      const unsigned x = shown_size(a) << 8 | (a.aromatic ? 1u : 0u),
+                     y = shown_size(b) << 8 | (b.aromatic ? 1u : 0u);
       sink.add(FeatureCode(FeatureClass::RF).byte(static_cast<unsigned>(bonds) & 255).sorted_pairs(x, y), 1);
     }
   }

@@ -10,19 +10,23 @@
 namespace heatledger::estimate {
 namespace {
 
-std::size_t at(int index) { return static_cast<std::size_t>(index); }
+std::size_t at(int index) {
+  return static_cast<std::size_t>(index);
+}
 
 /// Approximate minimum degree order: place of each unknown.
 std::vector<int> sparse_order(const LowerTriangle& matrix) {
   const Eigen::Index n = static_cast<Eigen::Index>(matrix.size());
-  const Eigen::Map<const Eigen::SparseMatrix<double>> lower(n, n, static_cast<Eigen::Index>(matrix.value.size()),
-                                                            matrix.start.data(), matrix.row.data(), matrix.value.data());
+  const Eigen::Map<const Eigen::SparseMatrix<double>> lower(
+      n, n, static_cast<Eigen::Index>(matrix.value.size()), matrix.start.data(), matrix.row.data(),
+      matrix.value.data());
   Eigen::SparseMatrix<double> full;
   full = lower.selfadjointView<Eigen::Lower>();
   Eigen::PermutationMatrix<Eigen::Dynamic, Eigen::Dynamic, int> old_of_new;
   Eigen::AMDOrdering<int>()(full, old_of_new);
   std::vector<int> place(matrix.size());
-  for (std::size_t i = 0; i < place.size(); ++i) place[at(old_of_new.indices()[static_cast<Eigen::Index>(i)])] = static_cast<int>(i);
+  for (std::size_t i = 0; i < place.size(); ++i)
+    place[at(old_of_new.indices()[static_cast<Eigen::Index>(i)])] = static_cast<int>(i);
   return place;
 }
 
@@ -48,8 +52,8 @@ LowerTriangle permuted(const LowerTriangle& matrix, const std::vector<int>& plac
   return out;
 }
 
-/// Entries of each column of L, by the elimination tree: the pattern of a column is that of its matrix column and of
-/// its children in the tree.
+/// Entries of each column of L, by the elimination tree: the pattern of a column is that of its matrix column
+/// and of its children in the tree.
 std::vector<std::size_t> column_counts(const LowerTriangle& matrix) {
   const std::size_t n = matrix.size();
   std::vector<std::size_t> counts(n);
@@ -69,7 +73,8 @@ std::vector<std::size_t> column_counts(const LowerTriangle& matrix) {
       pattern[at(child)].shrink_to_fit();
     }
     counts[j] = pattern[j].size() + 1;
-    if (!pattern[j].empty()) children[at(*std::min_element(pattern[j].begin(), pattern[j].end()))].push_back(static_cast<int>(j));
+    if (!pattern[j].empty())
+      children[at(*std::min_element(pattern[j].begin(), pattern[j].end()))].push_back(static_cast<int>(j));
   }
   return counts;
 }
@@ -86,14 +91,16 @@ std::size_t dense_begin(const std::vector<std::size_t>& counts) {
   return begin;
 }
 
-/// y[0..n) -= a × x[0..n). Entries are independent, so the compiler may use wide registers without changing a digit.
+/// y[0..n) -= a × x[0..n). Entries are independent, so the compiler may use wide registers without changing a
+/// digit.
 void subtract(double* __restrict y, const double* __restrict x, double a, std::size_t n) {
   for (std::size_t i = 0; i < n; ++i) y[i] -= a * x[i];
 }
 
 /// Four at once, in the order a, b, c, d: the same digits as four calls, a quarter of the memory traffic.
-void subtract4(double* __restrict y, const double* __restrict p, const double* __restrict q, const double* __restrict r,
-               const double* __restrict s, double a, double b, double c, double d, std::size_t n) {
+void subtract4(double* __restrict y, const double* __restrict p, const double* __restrict q,
+               const double* __restrict r, const double* __restrict s, double a, double b, double c, double d,
+               std::size_t n) {
   for (std::size_t i = 0; i < n; ++i) y[i] = (((y[i] - a * p[i]) - b * q[i]) - c * r[i]) - d * s[i];
 }
 
@@ -113,13 +120,15 @@ void SparseCholesky::factor(const LowerTriangle& matrix) {
   block_.assign(entries, 0.0);
   const std::size_t begin = size() - dense_;
   for (std::size_t j = begin; j < size(); ++j) {
-    for (std::size_t e = at(ordered.start[j]); e < at(ordered.start[j + 1]); ++e) column(j - begin)[at(ordered.row[e]) - j] = ordered.value[e];
+    for (std::size_t e = at(ordered.start[j]); e < at(ordered.start[j + 1]); ++e)
+      column(j - begin)[at(ordered.row[e]) - j] = ordered.value[e];
   }
   factor_sparse(ordered);
   factor_dense();
 }
 
-/// Column by column, each taking in the finished columns that reach it; what falls into the block is subtracted there.
+/// Column by column, each taking in the finished columns that reach it; what falls into the block is
+/// subtracted there.
 void SparseCholesky::factor_sparse(const LowerTriangle& ordered) {
   const std::size_t n = size(), begin = n - dense_;
   sparse_ = LowerTriangle();
@@ -180,7 +189,8 @@ void SparseCholesky::factor_sparse(const LowerTriangle& ordered) {
     for (std::size_t a = e; a < end; ++a) {
       const std::size_t ja = at(sparse_.row[a]);
       double* target = column(ja - begin);
-      for (std::size_t b = a; b < end; ++b) target[at(sparse_.row[b]) - ja] -= sparse_.value[a] * sparse_.value[b];
+      for (std::size_t b = a; b < end; ++b)
+        target[at(sparse_.row[b]) - ja] -= sparse_.value[a] * sparse_.value[b];
     }
   }
 }
@@ -191,8 +201,8 @@ void SparseCholesky::factor_dense() {
     const std::size_t rows = dense_ - j;
     std::size_t k = 0;
     for (; k + 4 <= j; k += 4) {
-      const double *p = column(k) + (j - k), *q = column(k + 1) + (j - k - 1), *r = column(k + 2) + (j - k - 2),
-                   *s = column(k + 3) + (j - k - 3);
+      const double *p = column(k) + (j - k), *q = column(k + 1) + (j - k - 1),
+                   *r = column(k + 2) + (j - k - 2), *s = column(k + 3) + (j - k - 3);
       subtract4(target, p, q, r, s, *p, *q, *r, *s, rows);
     }
     for (; k < j; ++k) subtract(target, column(k) + (j - k), column(k)[j - k], rows);
@@ -286,7 +296,8 @@ double SparseCholesky::squared_norm(const std::vector<double>& x) const {
 
 void SparseCholesky::tabulate() {
   if (!inverse_.empty() || dense_ == 0) return;
-  // Column j of the inverse by one forward and one backward solve, only its part from j on; the rest by symmetry.
+  // Column j of the inverse by one forward and one backward solve, only its part from j on; the rest by
+  // symmetry.
   inverse_.assign(dense_ * dense_, 0.0);
   std::vector<double> z(dense_);
   for (std::size_t j = 0; j < dense_; ++j) {

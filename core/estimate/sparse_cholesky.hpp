@@ -1,5 +1,6 @@
-// Cholesky factor of a sparse symmetric positive definite matrix in an order that keeps it sparse, with its dense
-// last block stored as such. Only + − × ÷ √, each entry in a fixed order, so every build gives the same digits.
+// Cholesky factor of a sparse symmetric positive definite matrix in an order that keeps it sparse, with its
+// dense last block stored as such. Only + − × ÷ √, each entry in a fixed order, so every build gives the same
+// digits.
 #pragma once
 
 #include <cstdint>
@@ -7,14 +8,16 @@
 
 namespace heatledger::estimate {
 
-/// Lower triangle by columns: rows of column j are row[start[j]] .. row[start[j + 1]], ascending, diagonal first.
+/// Lower triangle by columns: rows of column j are row[start[j]] .. row[start[j + 1]], ascending, diagonal
+/// first.
 struct LowerTriangle {
   std::vector<int> start, row;
   std::vector<double> value;
   std::size_t size() const { return start.empty() ? 0 : start.size() - 1; }
 };
 
-/// P = Πᵀ L Lᵀ Π. Unknowns that few rows share come first and stay sparse; the often-seen ones end up in a dense block.
+/// P = Πᵀ L Lᵀ Π. Unknowns that few rows share come first and stay sparse; the often-seen ones end up in a
+/// dense block.
 class SparseCholesky {
  public:
   /// CHECKs that the matrix is positive definite.
@@ -44,12 +47,12 @@ class SparseCholesky {
   double* column(std::size_t j) { return block_.data() + column_start_[j]; }
   const double* column(std::size_t j) const { return block_.data() + column_start_[j]; }
 
-  std::size_t dense_ = 0;       ///< unknowns of the dense block, the last ones
-  LowerTriangle sparse_;        ///< columns before the block, rows down to the end
-  std::vector<double> block_;   ///< lower triangle of the block by columns, each from its diagonal down
+  std::size_t dense_ = 0;      ///< unknowns of the dense block, the last ones
+  LowerTriangle sparse_;       ///< columns before the block, rows down to the end
+  std::vector<double> block_;  ///< lower triangle of the block by columns, each from its diagonal down
   std::vector<std::size_t> column_start_;
-  std::vector<double> inverse_; ///< full inverse of block × blockᵀ; empty until tabulated
-  std::vector<int> place_;      ///< place_[j]: row of L that stands for unknown j
+  std::vector<double> inverse_;  ///< full inverse of block × blockᵀ; empty until tabulated
+  std::vector<int> place_;       ///< place_[j]: row of L that stands for unknown j
 };
 
 }  // namespace heatledger::estimate

@@ -1,5 +1,5 @@
-// The model against an independent implementation (numpy, scipy, RDKit) of the same rules: feature counts exactly, values
-// and standard deviations to 1e-6. How the data files were made stands in their first lines.
+// The model against an independent implementation (numpy, scipy, RDKit) of the same rules: feature counts
+// exactly, values and standard deviations to 1e-6. How the data files were made stands in their first lines.
 #include <algorithm>
 #include <array>
 #include <cmath>
@@ -48,8 +48,8 @@ TEST(ContextFeatures, CountsEveryFeatureOfTheCases) {
   }
 }
 
-/// The fit with the settings of the independent implementation: Kekulé structures as written, every row of a gas
-/// temperature, weights iterated instead of read from the table (but for the formation enthalpy).
+/// The fit with the settings of the independent implementation: Kekulé structures as written, every row of a
+/// gas temperature, weights iterated instead of read from the table (but for the formation enthalpy).
 struct ReferenceFit {
   FitKind kind = FitKind::Formation;
   double temperature = 298.15;
@@ -59,7 +59,8 @@ struct ReferenceFit {
 const ContextMolecule& molecule_as_written(std::size_t compound) {
   static std::vector<std::unique_ptr<ContextMolecule>> molecules(training_compounds().size());
   if (molecules[compound] == nullptr) {
-    Result<ContextMolecule> counted = context_molecule(graph_of(std::string(training_compounds()[compound].smiles)), KekuleForm::AsWritten);
+    Result<ContextMolecule> counted =
+        context_molecule(graph_of(std::string(training_compounds()[compound].smiles)), KekuleForm::AsWritten);
     EXPECT_TRUE(counted.ok());
     molecules[compound] = std::make_unique<ContextMolecule>(std::move(counted).value());
   }
@@ -86,10 +87,12 @@ ReferenceFit reference_fit(const std::string& property) {
     figures = training_figures_at(5);
   }
   if (out.kind != FitKind::Formation) {
-    const std::vector<double> weights = robust_weights(out.kind, figures, {out.temperature}, 6, molecule_as_written);
+    const std::vector<double> weights =
+        robust_weights(out.kind, figures, {out.temperature}, 6, molecule_as_written);
     for (std::size_t i = 0; i < figures.size(); ++i) figures[i].weight = weights[i];
   }
-  out.fit = std::make_unique<ContextFit>(context_settings(out.kind), fit_rows(out.kind, figures, {out.temperature}, molecule_as_written));
+  out.fit = std::make_unique<ContextFit>(context_settings(out.kind),
+                                         fit_rows(out.kind, figures, {out.temperature}, molecule_as_written));
   return out;
 }
 
@@ -124,13 +127,15 @@ TEST_P(ContextReference, GivesValuesAndSpreads) {
     value = sign_of(reference.kind) * (value + reference.fit->mean(functional, 0));
     // 1e-6 is what two solvers of one linear system agree to in double precision with room to spare.
     EXPECT_NEAR(value, *parse_number(row[2]), 1e-6) << row[0];
-    EXPECT_NEAR(std::sqrt(std::max(0.0, reference.fit->variance(functional))), *parse_number(row[3]), 1e-6) << row[0];
+    EXPECT_NEAR(std::sqrt(std::max(0.0, reference.fit->variance(functional))), *parse_number(row[3]), 1e-6)
+        << row[0];
     ++compared;
   }
   EXPECT_GE(compared, 111);
 }
 
-INSTANTIATE_TEST_SUITE_P(Properties, ContextReference, testing::Values("hf_gas", "hvap298", "cp_gas_298.15", "cp_gas_1000", "cp_liquid"));
+INSTANTIATE_TEST_SUITE_P(Properties, ContextReference,
+                         testing::Values("hf_gas", "hvap298", "cp_gas_298.15", "cp_gas_1000", "cp_liquid"));
 
 }  // namespace
 }  // namespace heatledger::estimate
