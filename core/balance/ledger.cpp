@@ -3,6 +3,7 @@
 
 #include "core/balance/bond_words.hpp"
 #include "core/balance/figures.hpp"
+#include "core/balance/proposals.hpp"
 #include "core/balance/routes.hpp"
 #include "core/base/check.hpp"
 
@@ -11,20 +12,6 @@ namespace {
 
 using molecule::Phase;
 using uncertainty::Quantity;
-
-Error not_balanced(const Reaction& reaction) {
-  Error error{"ledger.not_balanced", "The equation does not balance: " + reaction.why_unbalanced + ".", "equation", ""};
-  if (error.message.size() > 2 && error.message.compare(error.message.size() - 2, 2, "..") == 0) error.message.pop_back();
-  if (reaction.proposals.size() == 1) {
-    error.hint = "Balanced it reads: " + reaction.proposals[0];
-  } else if (!reaction.proposals.empty()) {
-    error.hint = "It can be balanced in independent ways; write the one that is meant, or each as a reaction of its own: ";
-    for (std::size_t i = 0; i < reaction.proposals.size(); ++i) error.hint += (i == 0 ? "" : "; ") + reaction.proposals[i];
-  } else {
-    error.hint = "Write the species that is missing.";
-  }
-  return error;
-}
 
 Correction phase_correction(const Reaction& reaction, std::size_t index, const SpeciesFigures& figures, std::vector<std::string>& cautions) {
   const ReactionSpecies& entry = reaction.species[index];

@@ -91,4 +91,19 @@ void explain_imbalance(Reaction& reaction) {
   reaction.why_unbalanced += ". " + ways.error().message;
 }
 
+
+Error not_balanced(const Reaction& reaction) {
+  Error error{"ledger.not_balanced", "The equation does not balance: " + reaction.why_unbalanced + ".", "equation", ""};
+  if (error.message.size() > 2 && error.message.compare(error.message.size() - 2, 2, "..") == 0) error.message.pop_back();
+  if (reaction.proposals.size() == 1) {
+    error.hint = "Balanced it reads: " + reaction.proposals[0];
+  } else if (!reaction.proposals.empty()) {
+    error.hint = "It can be balanced in independent ways; write the one that is meant, or each as a reaction of its own: ";
+    for (std::size_t i = 0; i < reaction.proposals.size(); ++i) error.hint += (i == 0 ? "" : "; ") + reaction.proposals[i];
+  } else {
+    error.hint = "Write the species that is missing.";
+  }
+  return error;
+}
+
 }  // namespace heatledger::balance

@@ -201,6 +201,10 @@ void add_table(LedgerRow& row, const Species& species) {
 
 bool reachable_by_bonds(const Species& species, Phase phase) {
   if (!species.graph || species.graph->atoms.empty()) return false;
+  if (species.compound != nullptr && species.compound->structure == facts::Structure::Formal &&
+      !(species.compound->reference_element && species.bonds.empty() && phase == Phase::Gas)) {
+    return false;  // drawn as ions or bare atoms, which is no structure to count bonds in
+  }
   if (species.compound != nullptr && species.compound->reference_element && phase == Phase::Solid &&
       species.compound->reference_phase == 's' && species.bonds.size() != 1) {
     return false;  // graphite, metals; iodine has its one bond and a sublimation enthalpy

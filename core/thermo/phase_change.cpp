@@ -16,6 +16,28 @@ using uncertainty::SourceKind;
 
 constexpr double kJ = 1000.0;
 
+/// Hydrogen fluoride and carboxylic acids form pairs and rings in the vapour (a figure of the library may say so too).
+bool vapour_associates(const Species& species) {
+  if (species.compound != nullptr && species.compound->vapour_associates) return true;
+  if (!species.graph) return false;
+  const molecule::Graph& graph = *species.graph;
+  if (graph.atoms.size() == 1) return graph.atoms[0].element == 9 && graph.atoms[0].hydrogens == 1;
+  molecule::Adjacency around;
+  molecule::build_adjacency(graph, around);
+  for (std::uint32_t atom = 0; atom < graph.atoms.size(); ++atom) {
+    if (graph.atoms[atom].element != 6) continue;
+    bool carbonyl = false, hydroxyl = false;
+    for (std::uint32_t i = around.first[atom]; i < around.first[atom + 1]; ++i) {
+      const molecule::Atom& neighbour = graph.atoms[around.entries[i].atom];
+      if (neighbour.element != 8) continue;
+      carbonyl = carbonyl || graph.bonds[around.entries[i].bond].order == molecule::Order::Double;
+      hydroxyl = hydroxyl || neighbour.hydrogens == 1;
+    }
+    if (carbonyl && hydroxyl) return true;
+  }
+  return false;
+}
+
 std::string kj(double value) { return display_number(value / kJ, 2); }
 
 bool has_own_figure(const Species& species, Phase phase) {
@@ -44,7 +66,7 @@ Sourced from_formation(const Species& species, Phase to, const Sourced& gas, con
           species.name + ": the formation enthalpies of gas and liquid differ by " + kj(-difference) +
           " kJ/mol, the tabulated vaporisation enthalpy is " + kj(evaporation->value) + " (" + std::string(evaporation->source) +
           "). The formation enthalpies are taken." +
-          (species.compound->vapour_associates ? " The vapour associates, so its vaporisation enthalpy is not that of single molecules."
+          (vapour_associates(species) ? " The vapour associates, so its vaporisation enthalpy is not that of single molecules."
                                                : ""));
     } else {
       // Both say the same; the directly measured vaporisation enthalpy is often known better than either sum.
@@ -53,7 +75,7 @@ Sourced from_formation(const Species& species, Phase to, const Sourced& gas, con
                                kj(evaporation->u95) + " kJ/mol, " + std::string(evaporation->source));
     }
   }
-  if (species.compound->vapour_associates && result.cautions.empty()) {
+  if (vapour_associates(species) && result.cautions.empty()) {
     result.cautions.push_back(species.name + ": the real vapour associates; the figure is that of single molecules.");
   }
   result.value = Quantity(difference, u95, figure_key(SourceKind::Phase, species, to));
@@ -67,7 +89,7 @@ Sourced from_evaporation(const Species& species, const Datum& evaporation) {
   result.source = std::string(evaporation.source);
   result.working.push_back("vaporisation of " + species.name + " at 298.15 K: " + kj(evaporation.value) + " ± " +
                            kj(evaporation.u95) + " kJ/mol, " + result.source);
-  if (species.compound->vapour_associates) {
+  if (vapour_associates(species)) {
     result.cautions.push_back(species.name + ": the vapour associates, so the tabulated vaporisation enthalpy is not that of single molecules.");
   }
   return result;
