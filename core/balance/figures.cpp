@@ -22,18 +22,18 @@ void add_to(std::optional<Quantity>& sum, const std::optional<Quantity>& part, d
 
 }  // namespace
 
-SpeciesFigures species_figures(const facts::Species& species, Phase written, const estimate::BondSet& set) {
+SpeciesFigures species_figures(const facts::Species& species, const molecule::Term& written, const estimate::BondSet& set) {
   SpeciesFigures figures;
   figures.priced = price_species(species, written, set);
   const Phase phase = figures.priced.phase;
-  figures.formation = value_of(thermo::tabulated_formation(species, phase));
+  figures.formation = value_of(thermo::tabulated_formation(species, phase, written.strength));
   const bool by_bonds = figures.priced.route == RowRoute::Bonds || !figures.priced.missing.empty();
   figures.corrected = by_bonds && phase != Phase::Gas;
   if (!figures.corrected) {
     figures.formation_row = figures.formation;
     return figures;
   }
-  figures.to_phase = value_of(thermo::gas_to_phase(species, phase));
+  figures.to_phase = value_of(thermo::gas_to_phase(species, phase, written.strength));
   figures.formation_row = value_of(thermo::tabulated_formation(species, Phase::Gas));
   return figures;
 }

@@ -18,7 +18,7 @@ struct SpeciesFigures {
   std::optional<uncertainty::Quantity> formation_row;  ///< ΔfH in the phase that the bond sum belongs to [J/mol]
 };
 
-SpeciesFigures species_figures(const facts::Species& species, molecule::Phase written, const estimate::BondSet& set);
+SpeciesFigures species_figures(const facts::Species& species, const molecule::Term& written, const estimate::BondSet& set);
 
 /// One species of an equation with its figures.
 struct Entry {

@@ -22,7 +22,7 @@ Correction phase_correction(const Reaction& reaction, std::size_t index, const S
   const std::string gas = "gas", other(thermo::phase_word(phase));
   correction.what = display_species(entry) + ", " + (entry.product ? gas + " to " + other : other + " to " + gas);
   if (correction.times != 1) correction.what += ", " + times_text(correction.times) + " ×";
-  const Result<thermo::Sourced> change = thermo::gas_to_phase(*entry.species, phase);
+  const Result<thermo::Sourced> change = thermo::gas_to_phase(*entry.species, phase, entry.term.strength);
   if (!change.ok()) {
     correction.why_not = change.error().message;
     return correction;
@@ -92,7 +92,7 @@ Result<Ledger> make_ledger(std::shared_ptr<const Reaction> reaction, const Ledge
   figures.reserve(species.size());
   std::vector<Entry> entries(species.size());
   for (std::size_t i = 0; i < species.size(); ++i) {
-    figures.push_back(species_figures(*species[i].species, species[i].term.phase, *options.set));
+    figures.push_back(species_figures(*species[i].species, species[i].term, *options.set));
     entries[i].coefficient = species[i].coefficient();
     entries[i].product = species[i].product;
     entries[i].figures = &figures[i];

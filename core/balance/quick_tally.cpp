@@ -164,7 +164,7 @@ struct QuickTally::State {
     for (const ReactionSpecies& entry : reaction.species) {
       auto term = std::make_shared<KnownTerm>();
       term->coefficient = entry.coefficient();
-      term->figures = species_figures(*entry.species, entry.term.phase, *set);
+      term->figures = species_figures(*entry.species, entry.term, *set);
       term->whole = entry.term.coefficient.denominator == 1 && entry.species->composition.has_value();
       if (entry.species->composition) {
         for (const auto& atom : entry.species->composition->atoms) {

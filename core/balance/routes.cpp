@@ -40,7 +40,7 @@ Route formation_route(const Ledger& ledger, const EquationFigures& sums) {
   route.as_written = sums.formation_as_written;
   for (std::size_t i = 0; i < ledger.rows.size(); ++i) {
     const ReactionSpecies& entry = ledger.reaction->species[i];
-    const Result<thermo::Sourced> formation = thermo::tabulated_formation(*entry.species, ledger.rows[i].phase);
+    const Result<thermo::Sourced> formation = thermo::tabulated_formation(*entry.species, ledger.rows[i].phase, entry.term.strength);
     if (!formation.ok()) {
       if (route.why_not.empty()) route.why_not = formation.error().message;
       continue;

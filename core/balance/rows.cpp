@@ -175,10 +175,10 @@ void add_bond_working(LedgerRow& row) {
 }
 
 /// Atoms minus formation enthalpy: the bond sum of what no bond set reaches.
-void add_formation_working(LedgerRow& row, const Species& species) {
+void add_formation_working(LedgerRow& row, const Species& species, const std::optional<molecule::Strength>& strength) {
   std::string lacking;
   gas_atoms(species, lacking, &row.working);
-  const Result<thermo::Sourced> formation = thermo::tabulated_formation(species, row.phase);
+  const Result<thermo::Sourced> formation = thermo::tabulated_formation(species, row.phase, strength);
   if (!formation.ok()) return;
   row.working.insert(row.working.end(), formation->working.begin(), formation->working.end());
   row.remark = row.route == RowRoute::AtomsFromElement
@@ -214,14 +214,14 @@ bool reachable_by_bonds(const Species& species, Phase phase) {
   return !solid_sulfur_or_phosphorus && !has_charged_fragment(*species.graph);
 }
 
-PricedSpecies price_species(const Species& species, Phase written, const BondSet& set) {
+PricedSpecies price_species(const Species& species, const molecule::Term& written, const BondSet& set) {
   PricedSpecies priced;
-  priced.phase = thermo::phase_taken(species, written).phase;
+  priced.phase = thermo::phase_taken(species, written.phase).phase;
   if (reachable_by_bonds(species, priced.phase)) {
     if (sum_bonds(species, set, priced)) priced.route = RowRoute::Bonds;
     return priced;
   }
-  const Result<thermo::Sourced> formation = thermo::tabulated_formation(species, priced.phase);
+  const Result<thermo::Sourced> formation = thermo::tabulated_formation(species, priced.phase, written.strength);
   std::string lacking;
   std::optional<Quantity> atoms = gas_atoms(species, lacking, nullptr);
   if (!formation.ok() || !atoms) return priced;
@@ -249,7 +249,7 @@ LedgerRow describe_row(const ReactionSpecies& entry, std::size_t index, const Pr
     add_table(row, species);
     if (row.route == RowRoute::Bonds && row.lines.empty()) row.remark = "free atom: no bond";
   } else {
-    add_formation_working(row, species);
+    add_formation_working(row, species, entry.term.strength);
   }
   if (row.route == RowRoute::Missing) explain_missing(row, species);
   if (row.per_mole) {

@@ -13,8 +13,8 @@ struct PricedSpecies {
   std::vector<molecule::BondType> missing;
 };
 
-/// @param written  phase on the sheet, Unstated included
-PricedSpecies price_species(const facts::Species& species, molecule::Phase written, const estimate::BondSet& set);
+/// @param written  the term on the sheet: its phase, Unstated included, and strength count
+PricedSpecies price_species(const facts::Species& species, const molecule::Term& written, const estimate::BondSet& set);
 
 /// Whether the structure can be taken apart into neutral atoms bond by bond: no ions, no element in its solid state.
 bool reachable_by_bonds(const facts::Species& species, molecule::Phase phase);

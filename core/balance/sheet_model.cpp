@@ -50,7 +50,7 @@ std::optional<SheetModel> SheetModel::of(const Ledger& ledger, const estimate::B
       // A table with a value for aromatic rings prices bonds apart that share a line here: the row as a whole is right.
       double lines = 0;
       for (const Line& line : row.lines) lines += line.count_value * line.price_value + line.count2_value * line.price2_value;
-      const PricedSpecies priced = price_species(*entry.species, entry.term.phase, prices);
+      const PricedSpecies priced = price_species(*entry.species, entry.term, prices);
       if (priced.per_mole) row.fixed = priced.per_mole->value() / kJ - lines;
       if (row.fixed > -1e-6 && row.fixed < 1e-6) row.fixed = 0;
     }

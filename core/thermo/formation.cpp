@@ -2,6 +2,7 @@
 #include <cmath>
 
 #include "core/base/number_text.hpp"
+#include "core/thermo/dissolved.hpp"
 #include "core/thermo/species_enthalpy.hpp"
 
 namespace heatledger::thermo {
@@ -87,7 +88,7 @@ uncertainty::SourceKey figure_key(SourceKind kind, const Species& species, Phase
 PhaseChoice phase_taken(const Species& species, Phase written) {
   if (written != Phase::Unstated) return {written, false};
   const Compound* compound = species.compound;
-  if (compound == nullptr) return {Phase::Gas, true};
+  if (compound == nullptr) return {species.aqueous != nullptr ? Phase::Aqueous : Phase::Gas, true};
   if (compound->reference_element && compound->reference_phase == 's') return {Phase::Solid, true};
   if (has_formation(*compound, Phase::Gas) || (species.graph && has_formation(*compound, Phase::Liquid))) return {Phase::Gas, true};
   const bool liquid = has_formation(*compound, Phase::Liquid), solid = has_formation(*compound, Phase::Solid);
@@ -96,8 +97,9 @@ PhaseChoice phase_taken(const Species& species, Phase written) {
   return {Phase::Gas, true};
 }
 
-Result<Sourced> tabulated_formation(const Species& species, Phase phase) {
+Result<Sourced> tabulated_formation(const Species& species, Phase phase, const std::optional<molecule::Strength>& strength) {
   if (phase == Phase::Unstated) phase = Phase::Gas;
+  if (phase == Phase::Aqueous) return dissolved_formation(species, strength);
   const Compound* compound = species.compound;
   if (compound == nullptr) return no_formation(species, phase);
   if (is_reference(*compound, phase)) {

@@ -2,6 +2,7 @@
 // Kirchhoff between them.
 #pragma once
 
+#include <optional>
 #include <string>
 #include <string_view>
 #include <vector>
@@ -39,13 +40,21 @@ std::string_view phase_word(molecule::Phase phase);
 /// Enthalpy of one mole in `to` minus one mole as ideal gas, both at 298.15 K [J/mol]: minus the vaporisation or
 /// sublimation enthalpy. Difference of formation enthalpies first, else a tabulated vaporisation enthalpy at 298 K.
 /// Where both exist and disagree beyond their ±, the formation enthalpies stand and a caution says so.
+/// Into water: formation enthalpy dissolved minus formation enthalpy of the gas.
+/// @param strength  of a solution; empty: infinite dilution
 /// @errors thermo.no_phase_change_data
-Result<Sourced> gas_to_phase(const facts::Species& species, molecule::Phase to);
+Result<Sourced> gas_to_phase(const facts::Species& species, molecule::Phase to, const std::optional<molecule::Strength>& strength = {});
 
 /// Formation enthalpy in a phase at 298.15 K [J/mol] from the tables (elements in their reference state: zero). Gas from
 /// liquid, or liquid from gas, through the tabulated vaporisation enthalpy where only one is tabulated.
-/// @errors thermo.no_formation_data
-Result<Sourced> tabulated_formation(const facts::Species& species, molecule::Phase phase);
+/// In water: the table of dissolved substances at infinite dilution, else pure solute plus its integral heat of solution.
+/// @param strength  of a solution; empty: infinite dilution. Water of the solution is not part of the figure
+/// @errors thermo.no_formation_data, thermo.no_solution_data (a strength outside the measured curve, or no curve)
+Result<Sourced> tabulated_formation(const facts::Species& species, molecule::Phase phase, const std::optional<molecule::Strength>& strength = {});
+
+/// Moles of water per mole of solute; empty for infinite dilution.
+/// @param molar_mass  of the solute [kg/mol]
+std::optional<double> water_ratio(const molecule::Strength& strength, double molar_mass);
 
 /// h(T) - h(298.15 K) of a phase that is kept [J/mol]. @errors thermo.no_heat_capacity, thermo.temperature_range
 Result<Sourced> enthalpy_increment(const facts::Species& species, molecule::Phase phase, double temperature);
