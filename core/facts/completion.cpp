@@ -1,9 +1,9 @@
 #include "core/facts/completion.hpp"
 
 #include <algorithm>
-#include <array>
 #include <bit>
 
+#include "core/base/check.hpp"
 #include "core/facts/name_key.hpp"
 
 namespace heatledger::facts {
@@ -19,6 +19,13 @@ std::uint32_t letters_of(std::string_view key) {
   return bits;
 }
 
+/// First eight bytes, the first highest; shorter texts are filled up with zero.
+std::uint64_t head_of(std::string_view text) {
+  std::uint64_t head = 0;
+  for (std::size_t i = 0; i < 8; ++i) head = (head << 8) | (i < text.size() ? static_cast<unsigned char>(text[i]) : 0u);
+  return head;
+}
+
 bool begins_word(std::string_view name, std::size_t at) {
   if (at == 0) return true;
   const auto is_letter = [](char c) { return (c >= 'a' && c <= 'z') || (c >= 'A' && c <= 'Z') || (c & 0x80) != 0; };
@@ -27,14 +34,17 @@ bool begins_word(std::string_view name, std::size_t at) {
 
 }  // namespace
 
-int prefix_distance(std::string_view pattern, std::string_view text) {
-  std::array<std::uint64_t, 256> match{};
-  for (std::size_t i = 0; i < pattern.size(); ++i) match[static_cast<unsigned char>(pattern[i])] |= 1ULL << i;
-  const std::uint64_t last = 1ULL << (pattern.size() - 1);
+EditPattern::EditPattern(std::string_view pattern) : length_(static_cast<int>(pattern.size())) {
+  CHECK(!pattern.empty() && pattern.size() <= 64, "a pattern of one machine word");
+  for (std::size_t i = 0; i < pattern.size(); ++i) match_[static_cast<unsigned char>(pattern[i])] |= 1ULL << i;
+}
+
+int EditPattern::distance_to_beginning(std::string_view text) const {
+  const std::uint64_t last = 1ULL << (length_ - 1);
   std::uint64_t plus = ~0ULL, minus = 0;
-  int score = static_cast<int>(pattern.size()), best = score;
+  int score = length_, best = score;
   for (const char c : text) {
-    const std::uint64_t equal = match[static_cast<unsigned char>(c)];
+    const std::uint64_t equal = match_[static_cast<unsigned char>(c)];
     const std::uint64_t vertical = equal | minus;
     const std::uint64_t horizontal = (((equal & plus) + plus) ^ plus) | equal;
     std::uint64_t up = minus | ~(horizontal | plus);
@@ -53,31 +63,27 @@ int prefix_distance(std::string_view pattern, std::string_view text) {
 CompletionIndex::CompletionIndex(std::vector<NameEntry> entries) : entries_(std::move(entries)) {
   pool_.reserve(entries_.size() * 20);
   for (std::uint32_t i = 0; i < entries_.size(); ++i) {
+    // Word by word: a key is the row of its words' keys, so that a completion can begin at any of them.
     const std::string_view name = entries_[i].name;
     Key key;
     key.begin = static_cast<std::uint32_t>(pool_.size());
-    // Key of the whole first, then the beginnings of words in it: the key of the name's tail is the tail of its key,
-    // save where a spelling is evened out across the cut, which costs a completion and nothing else.
-    key.length = static_cast<std::uint32_t>(append_name_key(name, pool_));
+    for (std::size_t at = 0; at < name.size();) {
+      std::size_t end = at + 1;
+      while (end < name.size() && !begins_word(name, end)) ++end;
+      starts_.push_back({0, static_cast<std::uint32_t>(pool_.size()), i, at == 0});
+      if (append_name_key(name.substr(at, end - at), pool_) == 0 && at > 0) starts_.pop_back();
+      at = end;
+    }
+    key.length = static_cast<std::uint32_t>(pool_.size()) - key.begin;
     key.letters = letters_of(std::string_view(pool_).substr(key.begin, key.length));
     keys_.push_back(key);
-    std::string tail_key;
-    for (std::size_t at = 0; at < name.size(); ++at) {
-      if (!begins_word(name, at)) continue;
-      tail_key.clear();
-      const std::size_t length = append_name_key(name.substr(at), tail_key);
-      if (length == 0 || length > key.length) continue;
-      starts_.push_back({key.begin + key.length - static_cast<std::uint32_t>(length), i, at == 0});
-    }
   }
+  for (Start& start : starts_) start.head = head_of(tail(start));
   std::sort(starts_.begin(), starts_.end(), [this](const Start& a, const Start& b) {
+    if (a.head != b.head) return a.head < b.head;
     const int order = tail(a).compare(tail(b));
     return order != 0 ? order < 0 : a.entry < b.entry;
   });
-}
-
-std::string_view CompletionIndex::key(std::uint32_t entry) const {
-  return std::string_view(pool_).substr(keys_[entry].begin, keys_[entry].length);
 }
 
 std::string_view CompletionIndex::tail(const Start& start) const {
@@ -109,15 +115,20 @@ std::vector<NameEntry> CompletionIndex::complete(std::string_view text, std::siz
   }
   const std::size_t allowed = wanted.size() < 4 ? 0 : wanted.size() < 6 ? 1 : 2;
   if (hits.size() < limit && allowed > 0 && wanted.size() <= 64) {
+    // The first letter is hardly ever the wrong one; words that begin with it stand side by side.
+    const EditPattern pattern(wanted);
     const std::uint32_t letters = letters_of(wanted);
-    for (std::uint32_t i = 0; i < keys_.size(); ++i) {
+    const auto first = std::lower_bound(starts_.begin(), starts_.end(), wanted.substr(0, 1),
+                                        [this](const Start& start, const std::string& key) { return tail(start) < key; });
+    for (auto at = first; at != starts_.end() && tail(*at).substr(0, 1) == wanted.substr(0, 1); ++at) {
       // An edit brings at most one letter that the name does not have.
-      if (static_cast<std::size_t>(std::popcount(letters & ~keys_[i].letters)) > allowed) continue;
-      if (keys_[i].length + allowed < wanted.size()) continue;
-      const std::string_view near = key(i).substr(0, wanted.size() + allowed);
-      const int distance = prefix_distance(wanted, near);
+      const Key& whole = keys_[at->entry];
+      if (static_cast<std::size_t>(std::popcount(letters & ~whole.letters)) > allowed) continue;
+      const std::string_view near = tail(*at).substr(0, wanted.size() + allowed);
+      if (near.size() + allowed < wanted.size()) continue;
+      const int distance = pattern.distance_to_beginning(near);
       if (distance == 0 || static_cast<std::size_t>(distance) > allowed) continue;
-      hits.push_back({2 + distance, entries_[i].row, keys_[i].length, i});
+      hits.push_back({2 + distance, entries_[at->entry].row, whole.length, at->entry});
     }
   }
   std::sort(hits.begin(), hits.end());

@@ -1,8 +1,10 @@
 #include "core/facts/species_build.hpp"
 
 #include <algorithm>
+#include <iterator>
 
 #include "core/base/check.hpp"
+#include "core/facts/double_bond_stereo.hpp"
 #include "core/molecule/aromaticity.hpp"
 #include "core/molecule/smiles.hpp"
 
@@ -39,14 +41,32 @@ bool is_repeat_unit(const molecule::Graph& graph) {
 
 bool writes_stereo(std::string_view smiles) { return smiles.find_first_of("/\\@") != std::string_view::npos; }
 
-/// Of several compounds with one structure but for stereo: the one written, else the commonest, with a note.
-const Compound& choose_stereo(std::string_view text, const std::vector<const Compound*>& found, std::string& note) {
+DoubleBondStereo stereo_of(const Compound& compound) {
+  const Result<molecule::Graph> graph = molecule::parse_smiles(compound.smiles);
+  return graph ? double_bond_stereo(*graph) : DoubleBondStereo();
+}
+
+/// Of several compounds that differ in stereo only: the one written, else the commonest, with a note.
+const Compound& choose_stereo(std::string_view text, const molecule::Graph& graph, std::vector<const Compound*> found, std::string& note) {
+  if (found.size() == 1) return *found.front();
   for (const Compound* candidate : found) {
     if (candidate->smiles == text) return *candidate;
   }
+  const bool written = writes_stereo(text);
+  const auto keep = [&](auto fits) {
+    std::vector<const Compound*> fitting;
+    std::copy_if(found.begin(), found.end(), std::back_inserter(fitting), fits);
+    if (!fitting.empty()) found = std::move(fitting);
+  };
+  if (written) {
+    const DoubleBondStereo wanted = double_bond_stereo(graph);
+    keep([&](const Compound* c) { return stereo_of(*c) == wanted; });
+  } else {
+    keep([](const Compound* c) { return !writes_stereo(c->smiles); });
+  }
   const Compound& taken = *found.front();
   if (found.size() > 1) {
-    note = writes_stereo(text) ? "stereo marks are not told apart here: taken as " : "no stereo marks written: taken as ";
+    note = written ? "stereo marks at rings and centres are not told apart here: taken as " : "no stereo marks written: taken as ";
     note += taken.name;
     note += "; the same bonds has ";
     note += found[1]->name;
@@ -93,7 +113,7 @@ std::shared_ptr<Species> species_of(std::string_view text, molecule::Graph graph
   std::string canonical = molecule::canonical_smiles(graph);
   if (const std::vector<const Compound*> found = library.find_structures(canonical, hill); !found.empty()) {
     std::string note;
-    std::shared_ptr<Species> species = species_of(text, choose_stereo(text, found, note));
+    std::shared_ptr<Species> species = species_of(text, choose_stereo(text, graph, found, note));
     species->note = std::move(note);
     return species;
   }

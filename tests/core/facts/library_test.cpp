@@ -58,6 +58,9 @@ TEST(Completion, PutsBeginningsBeforeWordsBeforeSlips) {
   EXPECT_EQ(hits[0].compound->name, "nitrobenzene");
   hits = library.complete("acetate", 20);
   EXPECT_TRUE(std::any_of(hits.begin(), hits.end(), [](const auto& h) { return h.compound->name == "ethyl acetate"; }));
+  hits = library.complete("nitrotolune", 3);  // a slip in a word after its locant
+  ASSERT_FALSE(hits.empty());
+  EXPECT_EQ(hits[0].compound->name, "2-nitrotoluene");
   hits = library.complete("tolunee", 3);  // two letters swapped
   ASSERT_FALSE(hits.empty());
   EXPECT_EQ(hits[0].compound->name, "toluene");
@@ -66,12 +69,12 @@ TEST(Completion, PutsBeginningsBeforeWordsBeforeSlips) {
 }
 
 TEST(Completion, EditDistanceToTheNearestBeginning) {
-  EXPECT_EQ(prefix_distance("ethanol", "ethanol"), 0);
-  EXPECT_EQ(prefix_distance("ethan", "ethanol"), 0);
-  EXPECT_EQ(prefix_distance("etanol", "ethanol"), 1);
-  EXPECT_EQ(prefix_distance("ethaanol", "ethanol"), 1);
-  EXPECT_EQ(prefix_distance("kitten", "sitting"), 2);  // "sitti" or "sitte": two changes, one deletion saved by the prefix
-  EXPECT_EQ(prefix_distance("abc", ""), 3);
+  EXPECT_EQ(EditPattern("ethanol").distance_to_beginning("ethanol"), 0);
+  EXPECT_EQ(EditPattern("ethan").distance_to_beginning("ethanol"), 0);
+  EXPECT_EQ(EditPattern("etanol").distance_to_beginning("ethanol"), 1);
+  EXPECT_EQ(EditPattern("ethaanol").distance_to_beginning("ethanol"), 1);
+  EXPECT_EQ(EditPattern("kitten").distance_to_beginning("sitting"), 2);  // "sitti" or "sitte": two changes, one deletion saved by the prefix
+  EXPECT_EQ(EditPattern("abc").distance_to_beginning(""), 3);
 }
 
 }  // namespace

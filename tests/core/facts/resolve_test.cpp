@@ -149,6 +149,20 @@ TEST(Resolve, HelpsWithWhatItCannotRead) {
   EXPECT_EQ(refuse("\xff\xfe??").code, "species.unknown");
 }
 
+TEST(Resolve, TellsCisFromTrans) {
+  EXPECT_EQ(read("C/C=C\\C", true)->name, "cis-2-butene");
+  EXPECT_EQ(read("C/C=C/C", true)->name, "trans-2-butene");
+  // OpenSMILES 3.9.2: a branch turns the direction of writing round.
+  EXPECT_EQ(read("C(\\C)=C/C", true)->name, "trans-2-butene");
+  EXPECT_EQ(read("C(/C)=C/C", true)->name, "cis-2-butene");
+  // Named by the longer chain: methyl and ethyl on one side.
+  EXPECT_EQ(read("CC/C(C)=C\\C", true)->name, "3-methyl-cis-2-pentene");
+  EXPECT_EQ(read("OC(=O)/C=C/C(O)=O", true)->name, "fumaric acid");
+  EXPECT_EQ(read("OC(=O)/C=C\\C(O)=O", true)->name, "maleic acid");
+  EXPECT_EQ(read("OC(=O)/C=C\\C(O)=O", true)->note, "");
+  EXPECT_EQ(read("NC(C)C(O)=O", true)->name, "DL-alanine");
+}
+
 TEST(Resolve, TellsStereoIsomersItCannotTellApart) {
   EXPECT_NE(read("CC=CC", true)->note.find("2-butene"), std::string::npos) << read("CC=CC", true)->note;
   EXPECT_EQ(read("trans-2-butene")->note, "");
