@@ -198,17 +198,19 @@ bool count_quickly(const Graph& graph, BondTally& out) {
       const auto passes_on = [](int element) { return element != 6 && element != 8 && element != 16; };
       if (passes_on(a) && passes_on(b)) return false;
     }
-    if (bond.order == Order::Zero) return false;
+    if (bond.order == Order::Zero || graph.atoms[bond.a].charge * graph.atoms[bond.b].charge < 0) return false;
     sums[bond.a] = static_cast<std::uint16_t>(sums[bond.a] + add);
     sums[bond.b] = static_cast<std::uint16_t>(sums[bond.b] + add);
     counter.add(a, b, bond.order, 1);
   }
   for (std::size_t i = 0; i < graph.atoms.size(); ++i) {
     const Atom& atom = graph.atoms[i];
-    if (atom.charge != 0 || atom.unpaired != 0) return false;
-    const int bonded = (sums[i] & 255) + atom.hydrogens;
-    if (atom.element == 6 && sums[i] >= 2 * 256) return false;               // CO2
-    if ((atom.element == 7 && bonded > 3) || (atom.element == 8 && bonded > 2)) return false;
+    if (atom.element >= 6 && atom.element <= 8) {
+      if (atom.unpaired != 0) return false;                     // NO, NO2, CO written as radicals
+      if (atom.element == 6 && sums[i] >= 2 * 256) return false;  // CO2
+      const int octet = 10 - atom.element + atom.charge;
+      if (atom.element != 6 && (sums[i] & 255) + atom.hydrogens > octet) return false;
+    }
     if (atom.hydrogens > 0) counter.add(atom.element, 1, Order::Single, atom.hydrogens);
   }
   counter.finish();

@@ -60,6 +60,41 @@ void fill_atom(Atom& atom, int ring_double_bonds) {
   }
 }
 
+// Clears the flag of bonds that no ring holds; false, nothing settled, where the molecule is too large.
+// In the order of writing every atom but the first of a fragment hangs on an earlier one by the first bond that names it
+// second; the others are ring closures, one bit each. Summing the bits of both ends of each closure from the last atom
+// to the first leaves on every hanging bond the closures that pass over it: none means a bridge.
+bool mark_bridges_quickly(const Graph& graph, Flags& in_ring) {
+  constexpr std::size_t most_atoms = 128, most_closures = 64;
+  const std::size_t atoms = graph.atoms.size();
+  if (atoms > most_atoms) return false;
+  constexpr std::uint32_t none = 0xFFFFFFFF;
+  std::uint64_t passing[most_atoms];
+  std::uint32_t hangs_by[most_atoms];
+  for (std::size_t i = 0; i < atoms; ++i) {
+    passing[i] = 0;
+    hangs_by[i] = none;
+  }
+  std::size_t closures = 0;
+  for (std::uint32_t i = 0; i < graph.bonds.size(); ++i) {
+    const Bond& bond = graph.bonds[i];
+    if (bond.a < bond.b && hangs_by[bond.b] == none) {
+      hangs_by[bond.b] = i;
+      continue;
+    }
+    if (closures == most_closures) return false;
+    const std::uint64_t bit = std::uint64_t{1} << closures++;
+    passing[bond.a] ^= bit;
+    passing[bond.b] ^= bit;
+  }
+  for (std::size_t i = atoms; i-- > 1;) {
+    if (hangs_by[i] == none) continue;
+    if (passing[i] == 0) in_ring[hangs_by[i]] = 0;
+    passing[graph.bonds[hangs_by[i]].a] ^= passing[i];
+  }
+  return true;
+}
+
 // Bonds between aromatic atoms that no ring holds (biphenyl) are single. Systems of lone cycles need no search.
 void drop_bonds_outside_rings(Graph& graph) {
   Flags degree(graph.atoms.size(), 0);
@@ -76,14 +111,16 @@ void drop_bonds_outside_rings(Graph& graph) {
     if (degree[i] == 1 || degree[i] > 2) lone_cycles = false;
   }
   if (lone_cycles) return;
-  std::vector<std::uint8_t> in_ring;
-  find_ring_bonds(graph, in_ring);
+  std::vector<std::uint8_t> found;
+  Flags quick(graph.bonds.size(), 1);
+  const bool settled = mark_bridges_quickly(graph, quick);
+  if (!settled) find_ring_bonds(graph, found);
   for (Atom& atom : graph.atoms) {
     if (atom.element == 0) atom.aromatic = false;
   }
   for (std::size_t i = 0; i < graph.bonds.size(); ++i) {
     Bond& bond = graph.bonds[i];
-    if (!in_ring[i]) bond.aromatic = false;
+    if (settled ? !quick[i] : !found[i]) bond.aromatic = false;
     if (bond.aromatic) graph.atoms[bond.a].aromatic = graph.atoms[bond.b].aromatic = true;
   }
 }
