@@ -2,7 +2,7 @@
 #include <vector>
 
 #include "core/molecule/kekule_choice.hpp"
-#include "core/molecule/normalise.hpp"
+#include "core/molecule/octet_form.hpp"
 #include "core/molecule/ranking.hpp"
 #include "core/molecule/smiles.hpp"
 #include "core/molecule/smiles_writer.hpp"
@@ -56,17 +56,22 @@ Graph with_hydrogens_counted(const Graph& graph) {
   return out;
 }
 
+std::vector<std::uint32_t> ranks_of(const Graph& graph) {
+  std::vector<std::uint8_t> labels;
+  find_mobile_bonds(graph, labels);
+  for (std::size_t i = 0; i < labels.size(); ++i) {
+    labels[i] = labels[i] ? mobile_label : static_cast<std::uint8_t>(graph.bonds[i].order);
+  }
+  return canonical_ranks(graph, labels);
+}
+
 }  // namespace
 
 std::string canonical_smiles(const Graph& graph) {
   Graph form = with_hydrogens_counted(graph);
-  take_octet_form(form);
-  std::vector<std::uint8_t> labels;
-  find_mobile_bonds(form, labels);
-  for (std::size_t i = 0; i < labels.size(); ++i) {
-    labels[i] = labels[i] ? mobile_label : static_cast<std::uint8_t>(form.bonds[i].order);
-  }
-  const std::vector<std::uint32_t> ranks = canonical_ranks(form, labels);
+  const TieBreaker ties = ranks_of;
+  take_octet_form(form, &ties);
+  const std::vector<std::uint32_t> ranks = ranks_of(form);
   choose_kekule_bonds(form, ranks);
   return write_smiles(form, ranks);
 }

@@ -1,8 +1,11 @@
 #include "core/molecule/normalise.hpp"
 
+#include <algorithm>
 #include <optional>
+#include <vector>
 
 #include "core/molecule/kekule_choice.hpp"
+#include "core/molecule/octet_form.hpp"
 
 namespace heatledger::molecule {
 namespace {
@@ -23,6 +26,12 @@ bool opposite(const Atom& a, const Atom& b) {
   return (a.charge > 0 && b.charge < 0) || (a.charge < 0 && b.charge > 0);
 }
 
+// Charges that a bond can take up: beyond them (oxygen at -2 with a bond) the text means no such group.
+bool can_give_pair(const Atom& minus, int excess) {
+  const int kind = partner_class(minus.element);
+  return excess == 0 && minus.charge >= (kind == 0 || kind == 2 ? -1 : -2);
+}
+
 bool any_charge(const Graph& graph) {
   for (const Atom& atom : graph.atoms) {
     if (atom.charge != 0) return true;
@@ -30,7 +39,21 @@ bool any_charge(const Graph& graph) {
   return false;
 }
 
-int octet_bonds(const Atom& atom) { return atom.element == 7 ? 3 : atom.element == 8 ? 2 : 255; }
+int octet_bonds(const Atom& atom) { return atom.element == 7 ? 3 : atom.element == 8 ? 2 : 1000; }
+
+// By how many bonds each atom stands above its octet; 0 for elements that may expand it.
+std::vector<int> octet_excess(const Graph& graph) {
+  std::vector<int> excess(graph.atoms.size(), 0);
+  for (const Bond& bond : graph.bonds) {
+    excess[bond.a] += static_cast<int>(bond.order);
+    excess[bond.b] += static_cast<int>(bond.order);
+  }
+  for (std::size_t i = 0; i < excess.size(); ++i) {
+    const Atom& atom = graph.atoms[i];
+    excess[i] = std::max(0, excess[i] + atom.hydrogens - octet_bonds(atom) - atom.charge);
+  }
+  return excess;
+}
 
 bool terminal(const Graph& graph, const Adjacency& adjacency, std::uint32_t atom) {
   return adjacency.first[atom + 1] - adjacency.first[atom] == 1 && graph.atoms[atom].hydrogens == 0;
@@ -40,12 +63,14 @@ bool terminal(const Graph& graph, const Adjacency& adjacency, std::uint32_t atom
 int giving_class(const Graph& graph, const Adjacency& adjacency, const Adjacency::Entry& entry) {
   const Bond& bond = graph.bonds[entry.bond];
   const int element = graph.atoms[entry.atom].element;
-  if (bond.order < Order::Double) return -1;
+  if (bond.order != Order::Double && bond.order != Order::Triple) return -1;
   const bool end = terminal(graph, adjacency, entry.atom);
+  // Of two bonds to the same element the double one gives.
+  const int triple = bond.order == Order::Triple ? 1 : 0;
   if (end && element == 8 && bond.order == Order::Double) return 0;
-  if (end && partner_class(element) == 1) return 1;
-  if (end && element == 7) return 2;
-  return 3 + partner_class(element);
+  if (end && partner_class(element) == 1) return 2 + triple;
+  if (end && element == 7) return 5 - triple;  // azides: N=N=N, also where the other end is charged already
+  return 6 + 2 * partner_class(element) + triple;
 }
 
 // CO and isocyanides keep their triple bond; only the charges come back. Empty where this is no such atom.
@@ -60,13 +85,11 @@ std::optional<std::uint32_t> carbon_of_triple_bond(const Graph& graph, const Adj
   return std::nullopt;
 }
 
-void return_to_octet(Graph& graph, const Adjacency& adjacency, std::uint32_t atom) {
+// `ranks`: what decides between equal bonds; null where only the number of bonds matters.
+void return_to_octet(Graph& graph, const Adjacency& adjacency, const std::vector<int>& excess,
+                     const std::vector<std::uint32_t>* ranks, std::uint32_t atom) {
+  if (excess[atom] < 1 || excess[atom] > 2) return;
   Atom& centre = graph.atoms[atom];
-  int bonded = centre.hydrogens;
-  for (std::uint32_t e = adjacency.first[atom]; e < adjacency.first[atom + 1]; ++e) {
-    bonded += static_cast<int>(graph.bonds[adjacency.entries[e].bond].order);
-  }
-  if (bonded <= octet_bonds(centre) + centre.charge) return;
   if (const std::optional<std::uint32_t> carbon = carbon_of_triple_bond(graph, adjacency, atom)) {
     ++centre.charge;
     --graph.atoms[*carbon].charge;
@@ -77,7 +100,8 @@ void return_to_octet(Graph& graph, const Adjacency& adjacency, std::uint32_t ato
   for (std::uint32_t e = adjacency.first[atom]; e < adjacency.first[atom + 1]; ++e) {
     const Adjacency::Entry& entry = adjacency.entries[e];
     const int kind = giving_class(graph, adjacency, entry);
-    if (kind < 0 || (best != nullptr && kind >= best_class)) continue;
+    if (kind < 0 || excess[entry.atom] > 0 || (best != nullptr && kind > best_class)) continue;
+    if (best != nullptr && kind == best_class && (ranks == nullptr || (*ranks)[entry.atom] > (*ranks)[best->atom])) continue;
     best = &entry;
     best_class = kind;
   }
@@ -91,6 +115,7 @@ void return_to_octet(Graph& graph, const Adjacency& adjacency, std::uint32_t ato
 // `keep_adducts`: a borate or aluminate beside a cation has its octet by its charge and keeps it.
 void join_charges(Graph& graph, bool keep_adducts) {
   if (!any_charge(graph)) return;
+  const std::vector<int> excess = octet_excess(graph);
   for (bool changed = true; changed;) {
     changed = false;
     for (int turn = 0; turn < partner_classes; ++turn) {
@@ -100,7 +125,7 @@ void join_charges(Graph& graph, bool keep_adducts) {
         if (!opposite(a, b)) continue;
         Atom& plus = a.charge > 0 ? a : b;
         Atom& minus = a.charge > 0 ? b : a;
-        if (partner_class(minus.element) != turn) continue;
+        if (partner_class(minus.element) != turn || !can_give_pair(minus, excess[&minus - graph.atoms.data()])) continue;
         if (keep_adducts && (minus.element == 5 || minus.element == 13)) continue;
         --plus.charge;
         ++minus.charge;
@@ -117,16 +142,29 @@ void join_charges(Graph& graph, bool keep_adducts) {
 
 void neutralise_charges(Graph& graph) { join_charges(graph, false); }
 
-void take_octet_form(Graph& graph) {
+void take_octet_form(Graph& graph, const TieBreaker* ties) {
   for (Bond& bond : graph.bonds) bond.aromatic = false;
   join_charges(graph, true);
-  Adjacency adjacency;
-  build_adjacency(graph, adjacency);
+  const std::vector<int> excess = octet_excess(graph);
+  std::vector<std::uint32_t> over;
   for (std::uint32_t i = 0; i < graph.atoms.size(); ++i) {
-    const int element = graph.atoms[i].element;
-    if (element == 7 || element == 8) return_to_octet(graph, adjacency, i);
+    if (excess[i] > 0) over.push_back(i);
+  }
+  if (!over.empty()) {
+    Adjacency adjacency;
+    build_adjacency(graph, adjacency);
+    std::vector<std::uint32_t> ranks;
+    if (ties != nullptr) {
+      ranks = (*ties)(graph);
+      std::sort(over.begin(), over.end(), [&](std::uint32_t a, std::uint32_t b) { return ranks[a] < ranks[b]; });
+    }
+    for (const std::uint32_t atom : over) {
+      return_to_octet(graph, adjacency, excess, ties != nullptr ? &ranks : nullptr, atom);
+    }
   }
   choose_kekule_bonds(graph);
 }
+
+void take_octet_form(Graph& graph) { take_octet_form(graph, nullptr); }
 
 }  // namespace heatledger::molecule

@@ -98,5 +98,13 @@ TEST(CanonicalSmiles, KeepsIsotopesAndChargesLeavesStereoOut) {
   EXPECT_EQ(canonical_smiles(read("OCC")), "CCO");
 }
 
+// Found by tests/fuzz/smiles_fuzz: texts that no chemist writes, whose canonical text was not its own canonical text.
+TEST(CanonicalSmiles, StaysItselfForAtomsFarAboveTheirOctet) {
+  for (const char* text : {"O#O#oO", "O$F=C", "[O------------][n+]1ccccc1", "n#1cc1", "CC[O-][n]1=c=ccbc\\C=1I"}) {
+    const std::string once = canonical_smiles(read(text));
+    EXPECT_EQ(canonical_smiles(read(once)), once) << text;
+  }
+}
+
 }  // namespace
 }  // namespace heatledger::molecule
