@@ -189,6 +189,8 @@ class Request {
       if (out.size() > 1) out += ',';
       out += "{\"text\":";
       file::append_json_string(out, suggestion.insert);
+      out += ",\"name\":";
+      file::append_json_string(out, suggestion.name);
       out += ",\"remark\":";
       file::append_json_string(out, suggestion.remark);
       out += '}';

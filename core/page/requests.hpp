@@ -18,7 +18,7 @@ namespace heatledger::page {
 ///   edit      sheet, cell, text, since?           the same
 ///   command   sheet, name, arguments?, since?     the same
 ///   margin    sheet, cell                         margin
-///   suggest   sheet, text, limit?                 [{"text", "remark"}]
+///   suggest   sheet, text, limit?                 [{"text", "name", "remark"}]
 ///   state     sheet                               {"changed": bool, "revision": n}
 ///   report    sheet                               HTML text
 ///   text      sheet, width?                       terminal text

@@ -262,7 +262,8 @@ std::vector<Session::Suggestion> Session::suggest(std::string_view text, std::si
   if (name.empty() || limit == 0) return list;
   for (const facts::Library::Completion& found : facts::Library::embedded().complete(name, limit)) {
     Suggestion suggestion;
-    suggestion.insert = std::string(text.substr(0, start)) + std::string(found.matched);
+    suggestion.name = std::string(found.matched);
+    suggestion.insert = std::string(text.substr(0, start)) + suggestion.name;
     suggestion.remark = std::string(found.compound->formula);
     if (found.matched != found.compound->name) suggestion.remark = std::string(found.compound->name) + ", " + suggestion.remark;
     list.push_back(std::move(suggestion));

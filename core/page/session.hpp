@@ -45,9 +45,9 @@ class Session {
   std::vector<Margin> workings();
 
   /// Completions of the species name that a half-typed equation (or name) ends with: the whole text with the name
-  /// put in, and a quiet remark each.
+  /// put in, the name alone for the list, and a quiet remark each.
   struct Suggestion {
-    std::string insert, remark;
+    std::string insert, name, remark;
   };
   std::vector<Suggestion> suggest(std::string_view text, std::size_t limit);
 

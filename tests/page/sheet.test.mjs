@@ -98,10 +98,12 @@ test("a half-typed species is completed from the list", async () => {
   await cell(page, "r1.equation").click();
   await page.keyboard.type("3 H2 + nitrob");
   const list = page.locator(".choice-list:visible");
-  assert.match((await list.textContent()) ?? "", /nitrobenzene/);
-  await page.keyboard.press("ArrowDown");
+  const names = await list.locator("li > span:first-child").allTextContents();
+  const wanted = names.findIndex((name) => /^nitrobenz(ene|ol)$/.test(name));
+  assert.ok(wanted >= 0, names.join(" | "));
+  for (let i = 0; i <= wanted; ++i) await page.keyboard.press("ArrowDown");
   await page.keyboard.press("Enter");
-  assert.equal(await page.locator(".cell-field").inputValue(), "3 H2 + nitrobenzene");
+  assert.equal(await page.locator(".cell-field").inputValue(), `3 H2 + ${names[wanted]}`);
   await page.keyboard.type(" -> aniline + 2 water");
   await page.keyboard.press("Escape");
   await page.keyboard.press("Enter");

@@ -24,7 +24,7 @@
  * @property {FileState} file
  * @property {Message | null} message
  *
- * @typedef {{text: string, remark: string, name?: string}} Suggestion  text: what stands before the caret, completed
+ * @typedef {{text: string, name: string, remark: string}} Suggestion  text: what stands before the caret, completed
  */
 
 /** @type {Page} */
@@ -166,7 +166,7 @@ export class Store {
       for (const row of block.rows) {
         for (const cell of row.cells) {
           const margin = cell.has_working && cell.id ? this.#marginOf(cell.id) : null;
-          if (margin) found.push(margin);
+          if (margin?.steps?.length) found.push(margin);
         }
       }
     }

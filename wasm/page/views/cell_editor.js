@@ -94,7 +94,7 @@ export class CellEditor {
     if (!at) return;
     const caret = at.field.selectionStart ?? at.field.value.length;
     const found = this.host.suggest(at.id, at.field.value.slice(0, caret));
-    at.list.show(found.map((entry) => ({text: entry.name ?? entry.text, remark: entry.remark, value: entry.text})));
+    at.list.show(found.map((entry) => ({text: entry.name, remark: entry.remark, value: entry.text})));
   }
 
   /** @param {string} value */

@@ -14,6 +14,9 @@ export class Navigation {
     this.sheet = sheet;
     /** @type {HTMLTableCellElement | null} */
     this.current = null;
+    /** Where a walk up or down began sideways, so that a narrow row on the way does not bend it. @type {number | null} */
+    this.walk = null;
+    sheet.addEventListener("pointerdown", () => (this.walk = null));
     sheet.addEventListener("focusin", (event) => {
       const cell = event.target instanceof Element ? event.target.closest("td[tabindex]") : null;
       if (!cell) return;
@@ -101,11 +104,11 @@ export class Navigation {
    */
   vertical(from, step) {
     const rows = [...this.sheet.querySelectorAll("tr")];
-    const middle = centre(from);
+    const x = this.walk ?? reading(from);
     for (let at = rows.indexOf(/** @type {HTMLTableRowElement} */ (from.parentElement)) + step; at >= 0 && at < rows.length; at += step) {
       const cells = [...rows[at].querySelectorAll("td")].filter((cell) => cell.hasAttribute("tabindex"));
       if (cells.length === 0) continue;
-      return cells.reduce((best, cell) => (Math.abs(centre(cell) - middle) < Math.abs(centre(best) - middle) ? cell : best));
+      return cells.reduce((best, cell) => (aside(cell, x) < aside(best, x) ? cell : best));
     }
     return undefined;
   }
@@ -117,6 +120,8 @@ export class Navigation {
   target(event) {
     const from = this.current;
     if (!from) return undefined;
+    if (event.key === "ArrowUp" || event.key === "ArrowDown") this.walk ??= reading(from);
+    else this.walk = null;
     const cells = () => this.cells();
     const row = () => [...(from.parentElement?.querySelectorAll("td") ?? [])].filter((cell) => cell.hasAttribute("tabindex"));
     switch (event.key) {
@@ -140,8 +145,21 @@ export class Navigation {
   }
 }
 
-/** @param {Element} cell */
-function centre(cell) {
+/**
+ * Where the eye stands in a cell: at the end of a figure, at the beginning of words.
+ * @param {Element} cell
+ */
+function reading(cell) {
   const box = cell.getBoundingClientRect();
-  return (box.left + box.right) / 2;
+  return cell.classList.contains("align-right") ? box.right - 8 : box.left + 8;
+}
+
+/**
+ * How far a cell lies to the side of x; nothing when it stands above or below.
+ * @param {Element} cell
+ * @param {number} x
+ */
+function aside(cell, x) {
+  const box = cell.getBoundingClientRect();
+  return Math.max(box.left - x, x - box.right, 0);
 }

@@ -165,7 +165,7 @@ function setEquation(node, equation) {
   const parts = [];
   let from = 0;
   for (const match of equation.matchAll(STATE_MARK)) {
-    parts.push(equation.slice(from, match.index), make("span", "state", match[0]));
+    parts.push(equation.slice(from, match.index), make("span", "phase-mark", match[0]));
     from = match.index + match[0].length;
   }
   node.replaceChildren(...parts, equation.slice(from));
