@@ -1,5 +1,7 @@
 #include "core/balance/figures.hpp"
 
+#include "core/thermo/estimated.hpp"
+
 namespace heatledger::balance {
 namespace {
 
@@ -20,21 +22,43 @@ void add_to(std::optional<Quantity>& sum, const std::optional<Quantity>& part, d
   }
 }
 
+/// Elements and what the model does not cover keep their table value; the rest is estimated as gas and brought into its phase.
+void add_context(const facts::Species& species, bool by_bonds, SpeciesFigures& figures) {
+  const bool element = species.compound != nullptr && species.compound->reference_element;
+  const Result<thermo::Sourced> gas = thermo::estimated_formation(species, Phase::Gas);
+  if (element || !by_bonds || !gas.ok()) {
+    figures.context = figures.formation;
+    figures.context_row = figures.formation_row;
+    return;
+  }
+  figures.context_row = gas->value;
+  figures.context = gas->value;
+  if (figures.corrected) add_to(figures.context, figures.to_phase, 1);
+}
+
 }  // namespace
 
-SpeciesFigures species_figures(const facts::Species& species, const molecule::Term& written, const estimate::BondSet& set) {
+SpeciesFigures species_figures(const facts::Species& species, const molecule::Term& written, const estimate::BondSet& set, ContextUse context) {
+  const bool may_estimate = context != ContextUse::Never;
+  const auto formation_of = [&](Phase phase) {
+    return may_estimate ? thermo::best_formation(species, phase, written.strength) : thermo::tabulated_formation(species, phase, written.strength);
+  };
   SpeciesFigures figures;
   figures.priced = price_species(species, written, set);
   const Phase phase = figures.priced.phase;
-  figures.formation = value_of(thermo::tabulated_formation(species, phase, written.strength));
+  const Result<thermo::Sourced> formation = formation_of(phase);
+  figures.formation = value_of(formation);
+  figures.formation_estimated = formation.ok() && formation->route == "estimate";
   const bool by_bonds = figures.priced.route == RowRoute::Bonds || !figures.priced.missing.empty();
   figures.corrected = by_bonds && phase != Phase::Gas;
-  if (!figures.corrected) {
+  if (figures.corrected) {
+    figures.to_phase = value_of(may_estimate ? thermo::best_gas_to_phase(species, phase, written.strength)
+                                             : thermo::gas_to_phase(species, phase, written.strength));
+    figures.formation_row = value_of(formation_of(Phase::Gas));
+  } else {
     figures.formation_row = figures.formation;
-    return figures;
   }
-  figures.to_phase = value_of(thermo::gas_to_phase(species, phase, written.strength));
-  figures.formation_row = value_of(thermo::tabulated_formation(species, Phase::Gas));
+  if (context == ContextUse::Always) add_context(species, by_bonds, figures);
   return figures;
 }
 
@@ -44,10 +68,14 @@ EquationFigures add_up(const std::vector<Entry>& entries) {
   sums.formed.emplace();
   sums.formation_gas_298.emplace();
   sums.formation_as_written.emplace();
+  sums.context_gas_298.emplace();
+  sums.context_as_written.emplace();
   for (const Entry& entry : entries) {
     add_to(entry.product ? sums.formed : sums.broken, entry.figures->priced.per_mole, entry.coefficient);
     add_to(sums.formation_gas_298, entry.figures->formation_row, entry.signed_coefficient());
     add_to(sums.formation_as_written, entry.figures->formation, entry.signed_coefficient());
+    add_to(sums.context_gas_298, entry.figures->context_row, entry.signed_coefficient());
+    add_to(sums.context_as_written, entry.figures->context, entry.signed_coefficient());
   }
   if (!sums.broken || !sums.formed) return sums;
   sums.gas_298 = sums.broken;

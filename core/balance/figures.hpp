@@ -16,9 +16,11 @@ struct SpeciesFigures {
   std::optional<uncertainty::Quantity> to_phase;       ///< gas to the phase written [J/mol]; empty: no data
   std::optional<uncertainty::Quantity> formation;      ///< ΔfH in the phase taken [J/mol]
   std::optional<uncertainty::Quantity> formation_row;  ///< ΔfH in the phase that the bond sum belongs to [J/mol]
+  bool formation_estimated = false;                    ///< no table has `formation`: bonds in context
+  std::optional<uncertainty::Quantity> context, context_row;  ///< as `formation`, by bonds in context (ContextUse::Always)
 };
 
-SpeciesFigures species_figures(const facts::Species& species, const molecule::Term& written, const estimate::BondSet& set);
+SpeciesFigures species_figures(const facts::Species& species, const molecule::Term& written, const estimate::BondSet& set, ContextUse context);
 
 /// One species of an equation with its figures.
 struct Entry {
@@ -33,6 +35,7 @@ struct Entry {
 struct EquationFigures {
   std::optional<uncertainty::Quantity> broken, formed, gas_298, as_written;  ///< average bonds
   std::optional<uncertainty::Quantity> formation_gas_298, formation_as_written;
+  std::optional<uncertainty::Quantity> context_gas_298, context_as_written;
 };
 
 EquationFigures add_up(const std::vector<Entry>& entries);

@@ -5,7 +5,9 @@
 #include "core/balance/figures.hpp"
 #include "core/balance/proposals.hpp"
 #include "core/balance/routes.hpp"
+#include "core/balance/temperature.hpp"
 #include "core/base/check.hpp"
+#include "core/thermo/estimated.hpp"
 
 namespace heatledger::balance {
 namespace {
@@ -13,7 +15,8 @@ namespace {
 using molecule::Phase;
 using uncertainty::Quantity;
 
-Correction phase_correction(const Reaction& reaction, std::size_t index, const SpeciesFigures& figures, std::vector<std::string>& cautions) {
+Correction phase_correction(const Reaction& reaction, std::size_t index, const SpeciesFigures& figures, bool may_estimate,
+                            std::vector<std::string>& cautions) {
   const ReactionSpecies& entry = reaction.species[index];
   const Phase phase = figures.priced.phase;
   Correction correction;
@@ -22,7 +25,8 @@ Correction phase_correction(const Reaction& reaction, std::size_t index, const S
   const std::string gas = "gas", other(thermo::phase_word(phase));
   correction.what = display_species(entry) + ", " + (entry.product ? gas + " to " + other : other + " to " + gas);
   if (correction.times != 1) correction.what += ", " + times_text(correction.times) + " ×";
-  const Result<thermo::Sourced> change = thermo::gas_to_phase(*entry.species, phase, entry.term.strength);
+  const Result<thermo::Sourced> change = may_estimate ? thermo::best_gas_to_phase(*entry.species, phase, entry.term.strength)
+                                                      : thermo::gas_to_phase(*entry.species, phase, entry.term.strength);
   if (!change.ok()) {
     correction.why_not = change.error().message;
     return correction;
@@ -76,9 +80,10 @@ Quantity on_basis(const Quantity& quantity, const Basis& basis) { return quantit
 Result<Ledger> make_ledger(std::shared_ptr<const Reaction> reaction, const LedgerOptions& options) {
   CHECK(reaction != nullptr && options.set != nullptr, "a ledger has a reaction and a bond set");
   if (reaction->checkable && !reaction->balance.balanced) return not_balanced(*reaction);
-  if (!options.pinned_route.empty() && options.pinned_route != kAverageRoute && options.pinned_route != kFormationRoute) {
+  if (!options.pinned_route.empty() && options.pinned_route != kAverageRoute && options.pinned_route != kFormationRoute &&
+      options.pinned_route != kContextRoute) {
     return Error{"ledger.route_unknown", "There is no route \"" + options.pinned_route + "\".", "pinned_route",
-                 "Choose average or formation, or leave it empty."};
+                 "Choose average, context or formation, or leave it empty."};
   }
   Result<Basis> basis = find_basis(*reaction, options.basis);
   if (!basis.ok()) return basis.error();
@@ -92,12 +97,12 @@ Result<Ledger> make_ledger(std::shared_ptr<const Reaction> reaction, const Ledge
   figures.reserve(species.size());
   std::vector<Entry> entries(species.size());
   for (std::size_t i = 0; i < species.size(); ++i) {
-    figures.push_back(species_figures(*species[i].species, species[i].term, *options.set));
+    figures.push_back(species_figures(*species[i].species, species[i].term, *options.set, options.context));
     entries[i].coefficient = species[i].coefficient();
     entries[i].product = species[i].product;
     entries[i].figures = &figures[i];
     ledger.rows.push_back(describe_row(species[i], i, figures[i].priced, *options.set));
-    if (figures[i].corrected) ledger.corrections.push_back(phase_correction(*ledger.reaction, i, figures[i], ledger.cautions));
+    if (figures[i].corrected) ledger.corrections.push_back(phase_correction(*ledger.reaction, i, figures[i], options.context != ContextUse::Never, ledger.cautions));
     if (!species[i].species->note.empty()) ledger.notes.push_back(species[i].species->note);
   }
   const EquationFigures sums = add_up(entries);
@@ -107,7 +112,8 @@ Result<Ledger> make_ledger(std::shared_ptr<const Reaction> reaction, const Ledge
   ledger.as_written = sums.as_written;
   if (!ledger.reaction->checkable) ledger.notes.emplace_back("Element balance not checkable: a species has no formula.");
   note_phases(ledger);
-  add_routes(ledger, sums, options.pinned_route);
+  add_routes(ledger, entries, sums, options);
+  if (options.reactants_at || options.products_at) run_at_temperatures(ledger, options);
   note_set(ledger);
   return ledger;
 }

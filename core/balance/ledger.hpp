@@ -78,6 +78,7 @@ struct Route {
   std::optional<uncertainty::Quantity> as_written;
   std::string why_not;
   std::vector<std::string> working;
+  std::vector<std::size_t> estimated;  ///< indices of species whose figure no table has
 };
 
 /// What the figures are stated per.
@@ -110,18 +111,30 @@ struct Ledger {
   std::optional<uncertainty::Quantity> as_written;      ///< phases as written, 25 °C [J], by bonds
   std::vector<Route> routes;
   std::string taken;  ///< name of the route whose figure goes on
+  /// Species brought from 25 °C to their real temperature; empty when none was given.
+  std::vector<Correction> to_temperature;
+  std::optional<uncertainty::Quantity> as_run;  ///< the figure taken plus these [J]; empty without temperatures or data
   Basis basis;
   std::vector<std::string> notes, cautions;
+};
+
+/// When bonds in context are asked. The first question of a program run fits the model, which takes part of a second.
+enum class ContextUse : std::uint8_t {
+  Never,
+  WhereNeeded,  ///< for species that no table has
+  Always        ///< and as a route of its own for every reaction
 };
 
 struct LedgerOptions {
   std::shared_ptr<const estimate::BondSet> set;  ///< required
   std::string basis;  ///< "" as written, "NAME" per mole of a species, "kg NAME", "kg reactants"
   std::string pinned_route;  ///< empty: the best
+  ContextUse context = ContextUse::WhereNeeded;
+  std::optional<double> reactants_at, products_at;  ///< [K] > 0; empty: 298.15 K
 };
 
 /// Names of the routes.
-inline constexpr std::string_view kAverageRoute = "average", kFormationRoute = "formation";
+inline constexpr std::string_view kAverageRoute = "average", kFormationRoute = "formation", kContextRoute = "context";
 
 /// A figure on the chosen basis [J, J/mol or J/kg].
 uncertainty::Quantity on_basis(const uncertainty::Quantity& quantity, const Basis& basis);

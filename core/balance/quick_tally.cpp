@@ -96,6 +96,7 @@ bool balanced_in_whole_numbers(const std::vector<const KnownTerm*>& terms, const
 
 struct QuickTally::State {
   std::shared_ptr<const estimate::BondSet> set;
+  ContextUse context = ContextUse::WhereNeeded;
   std::size_t capacity = 1;
   CachedSpecies species;
   Terms newer, older;
@@ -129,8 +130,12 @@ struct QuickTally::State {
     result.as_written = figure_of(sums.as_written);
     result.formation_gas_298 = figure_of(sums.formation_gas_298);
     result.formation = figure_of(sums.formation_as_written);
+    result.context_gas_298 = figure_of(sums.context_gas_298);
+    result.context = figure_of(sums.context_as_written);
     if (result.formation) {
       result.taken = kFormationRoute;
+    } else if (result.context) {
+      result.taken = kContextRoute;
     } else if (result.as_written) {
       result.taken = kAverageRoute;
     }
@@ -164,7 +169,7 @@ struct QuickTally::State {
     for (const ReactionSpecies& entry : reaction.species) {
       auto term = std::make_shared<KnownTerm>();
       term->coefficient = entry.coefficient();
-      term->figures = species_figures(*entry.species, entry.term, *set);
+      term->figures = species_figures(*entry.species, entry.term, *set, context);
       term->whole = entry.term.coefficient.denominator == 1 && entry.species->composition.has_value();
       if (entry.species->composition) {
         for (const auto& atom : entry.species->composition->atoms) {
@@ -190,9 +195,10 @@ struct QuickTally::State {
   }
 };
 
-QuickTally::QuickTally(std::shared_ptr<const estimate::BondSet> set, std::size_t capacity) : state_(std::make_unique<State>()) {
+QuickTally::QuickTally(std::shared_ptr<const estimate::BondSet> set, ContextUse context, std::size_t capacity) : state_(std::make_unique<State>()) {
   CHECK(set != nullptr && capacity > 0, "a quick tally has a bond set and a memory");
   state_->set = std::move(set);
+  state_->context = context;
   state_->capacity = capacity;
 }
 

@@ -14,6 +14,7 @@ namespace heatledger::balance {
 struct QuickAnswer {
   std::optional<uncertainty::Figure> broken, formed, gas_298, as_written;  ///< average bonds
   std::optional<uncertainty::Figure> formation_gas_298, formation;         ///< formation enthalpies; as written
+  std::optional<uncertainty::Figure> context_gas_298, context;             ///< bonds in context (ContextUse::Always)
   std::string_view taken;  ///< name of the route whose figure goes on; empty when there is none
 };
 
@@ -21,7 +22,7 @@ struct QuickAnswer {
 class QuickTally {
  public:
   /// @param capacity  terms kept in each half of the memory, at least 1
-  explicit QuickTally(std::shared_ptr<const estimate::BondSet> set, std::size_t capacity = 8192);
+  explicit QuickTally(std::shared_ptr<const estimate::BondSet> set, ContextUse context = ContextUse::WhereNeeded, std::size_t capacity = 8192);
   ~QuickTally();
 
   /// @errors as read_reaction and make_ledger without basis: equation.*, species.*, smiles.*, formula.*, ledger.not_balanced

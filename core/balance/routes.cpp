@@ -4,6 +4,7 @@
 
 #include "core/balance/bond_words.hpp"
 #include "core/base/number_text.hpp"
+#include "core/thermo/estimated.hpp"
 
 namespace heatledger::balance {
 namespace {
@@ -33,14 +34,17 @@ Route average_route(const Ledger& ledger, const EquationFigures& sums) {
   return route;
 }
 
-Route formation_route(const Ledger& ledger, const EquationFigures& sums) {
+Route formation_route(const Ledger& ledger, const std::vector<Entry>& entries, const EquationFigures& sums, bool may_estimate) {
   Route route;
   route.name = kFormationRoute;
   route.gas_298 = sums.formation_gas_298;
   route.as_written = sums.formation_as_written;
   for (std::size_t i = 0; i < ledger.rows.size(); ++i) {
     const ReactionSpecies& entry = ledger.reaction->species[i];
-    const Result<thermo::Sourced> formation = thermo::tabulated_formation(*entry.species, ledger.rows[i].phase, entry.term.strength);
+    const molecule::Phase phase = ledger.rows[i].phase;
+    const Result<thermo::Sourced> formation = may_estimate ? thermo::best_formation(*entry.species, phase, entry.term.strength)
+                                                           : thermo::tabulated_formation(*entry.species, phase, entry.term.strength);
+    if (entries[i].figures->formation_estimated) route.estimated.push_back(i);
     if (!formation.ok()) {
       if (route.why_not.empty()) route.why_not = formation.error().message;
       continue;
@@ -56,6 +60,34 @@ Route formation_route(const Ledger& ledger, const EquationFigures& sums) {
     route.why_not = "a formation enthalpy is missing";
   }
   return route;
+}
+
+Route context_route(const Ledger& ledger, const std::vector<Entry>& entries, const EquationFigures& sums) {
+  Route route;
+  route.name = kContextRoute;
+  route.gas_298 = sums.context_gas_298;
+  route.as_written = sums.context_as_written;
+  for (std::size_t i = 0; i < entries.size(); ++i) {
+    const ReactionSpecies& entry = ledger.reaction->species[i];
+    if (!entries[i].figures->context) {
+      if (route.why_not.empty()) route.why_not = "no figure in context for " + display_species(entry);
+      continue;
+    }
+    const double value = entries[i].figures->context->value(), times = entries[i].signed_coefficient();
+    route.working.push_back(display_species(entry) + phase_suffix(entry.term) + "  " + display_number(times, times == std::round(times) ? 0 : 4) + " × (" +
+                            fine_kj(value) + ") = " + fine_kj(times * value) + " kJ");
+  }
+  if (route.as_written) route.working.push_back("sum: " + kj_with_u95(*route.as_written, "kJ") + ", what both sides share cancelled");
+  return route;
+}
+
+/// Which figures of the formation route no table has.
+void note_estimates(Ledger& ledger) {
+  const Route* formation = find_route(ledger, kFormationRoute);
+  if (!formation->as_written || formation->estimated.empty()) return;
+  std::string names;
+  for (const std::size_t i : formation->estimated) names += (names.empty() ? "" : ", ") + display_species(ledger.reaction->species[i]);
+  ledger.notes.push_back("No table has " + names + ": estimated from bonds in context.");
 }
 
 /// The row where bonds and table part most, for the written coefficients.
@@ -105,10 +137,12 @@ const Route* find_route(const Ledger& ledger, std::string_view name) {
   return nullptr;
 }
 
-void add_routes(Ledger& ledger, const EquationFigures& sums, std::string_view pinned) {
+void add_routes(Ledger& ledger, const std::vector<Entry>& entries, const EquationFigures& sums, const LedgerOptions& options) {
+  const std::string_view pinned = options.pinned_route;
   ledger.routes.push_back(average_route(ledger, sums));
-  ledger.routes.push_back(formation_route(ledger, sums));
-  for (const std::string_view name : {pinned, kFormationRoute, kAverageRoute}) {
+  if (options.context == ContextUse::Always) ledger.routes.push_back(context_route(ledger, entries, sums));
+  ledger.routes.push_back(formation_route(ledger, entries, sums, options.context != ContextUse::Never));
+  for (const std::string_view name : {pinned, kFormationRoute, kContextRoute, kAverageRoute}) {
     const Route* route = find_route(ledger, name);
     if (route != nullptr && route->as_written) {
       ledger.taken = name;
@@ -121,6 +155,7 @@ void add_routes(Ledger& ledger, const EquationFigures& sums, std::string_view pi
   } else if (!pinned.empty()) {
     ledger.notes.push_back("The figure taken is pinned to the route by " + ledger.taken + ".");
   }
+  note_estimates(ledger);
   note_disagreement(ledger);
 }
 

@@ -56,7 +56,10 @@ Result<Sourced> tabulated_formation(const facts::Species& species, molecule::Pha
 /// @param molar_mass  of the solute [kg/mol]
 std::optional<double> water_ratio(const molecule::Strength& strength, double molar_mass);
 
-/// h(T) - h(298.15 K) of a phase that is kept [J/mol]. @errors thermo.no_heat_capacity, thermo.temperature_range
+/// h(T) - h(298.15 K) of a phase that is kept [J/mol]: polynomial, estimate for gases above 25 °C, else the heat capacity at
+/// 298.15 K as constant, with a caution beyond 75 K from there.
+/// @param temperature  [K] > 0
+/// @errors thermo.no_heat_capacity, thermo.temperature_range
 Result<Sourced> enthalpy_increment(const facts::Species& species, molecule::Phase phase, double temperature);
 
 }  // namespace heatledger::thermo

@@ -54,11 +54,59 @@ TEST(Ledger, TakesTheFormationRouteWhereEverySpeciesIsTabulated) {
   EXPECT_EQ(find_route(liquid, kAverageRoute)->as_written->value(), liquid.as_written->value());
 }
 
+const char* const kUntabulated = "\"CCC(C)(Cl)CC(F)CC\"(l) -> \"CCC(C)=CC(F)CC\"(l) + HCl(g)";
+
+Ledger with_options(const char* equation, const LedgerOptions& given) {
+  LedgerOptions options = given;
+  options.set = test_sheets::bond_set();
+  Result<Ledger> made = make_ledger(test_sheets::reaction(equation), options);
+  EXPECT_TRUE(made.ok());
+  return made.ok() ? std::move(made).value() : Ledger{};
+}
+
 TEST(Ledger, FallsBackOnBondsWhereNobodyTabulatedASpecies) {
-  const Ledger sheet = ledger("\"CCC(C)(Cl)CC(F)CC\"(g) -> \"CCC(C)=CC(F)CC\"(g) + HCl(g)");
+  LedgerOptions options;
+  options.context = ContextUse::Never;
+  const Ledger sheet = with_options("\"CCC(C)(Cl)CC(F)CC\"(g) -> \"CCC(C)=CC(F)CC\"(g) + HCl(g)", options);
   EXPECT_EQ(sheet.taken, "average");
   EXPECT_FALSE(find_route(sheet, kFormationRoute)->as_written.has_value());
   EXPECT_FALSE(find_route(sheet, kFormationRoute)->why_not.empty());
+}
+
+TEST(Ledger, EstimatesInContextWhatNobodyTabulatedAndSaysWhich) {
+  const Ledger sheet = ledger(kUntabulated);
+  EXPECT_EQ(sheet.taken, "formation");
+  EXPECT_EQ(find_route(sheet, kFormationRoute)->estimated, (std::vector<std::size_t>{0, 1}));
+  EXPECT_TRUE(any_contains(sheet.notes, "estimated from bonds in context"));
+  EXPECT_TRUE(sheet.as_written.has_value());  // the average route with estimated vaporisation enthalpies
+}
+
+TEST(Ledger, LetsCorrelatedErrorsOfTheEstimateCancel) {
+  LedgerOptions options;
+  options.context = ContextUse::Always;
+  const Ledger sheet = with_options(kUntabulated, options);
+  const Route* context = find_route(sheet, kContextRoute);
+  ASSERT_TRUE(context != nullptr && context->gas_298.has_value());
+  // Two molecules that share most of their bonds are known better together than each alone.
+  const Ledger one = with_options("\"CCC(C)(Cl)CC(F)CC\"(g) + 13 O2(g) -> 9 CO2(g) + 8 H2O(g) + HCl(g) + HF(g)", options);
+  EXPECT_LT(context->gas_298->u95(), 1.5 * find_route(one, kContextRoute)->gas_298->u95());
+  const Ledger nothing = with_options("\"CCC(C)(Cl)CC(F)CC\"(l) -> \"CCC(C)(Cl)CC(F)CC\"(l)", options);
+  EXPECT_EQ(find_route(nothing, kContextRoute)->as_written->value(), 0);
+  EXPECT_EQ(find_route(nothing, kContextRoute)->as_written->u95(), 0);
+}
+
+// JANAF 1998: ΔrH of CO + ½ O2 -> CO2 is −282.98 at 298.15 K and −282.36 kJ/mol at 1000 K, both sides at T.
+TEST(Ledger, BringsBothSidesToTheirTemperatures) {
+  LedgerOptions options;
+  options.reactants_at = options.products_at = 1000.0;
+  const Ledger sheet = with_options("CO(g) + 0.5 O2(g) -> CO2(g)", options);
+  ASSERT_EQ(sheet.to_temperature.size(), 3u);
+  EXPECT_NEAR(kj(sheet.as_run), -282.36, 0.3);  // 0.3: polynomials against the tables, three species
+  double sum = find_route(sheet, sheet.taken)->as_written->value();
+  for (const Correction& correction : sheet.to_temperature) sum += correction.value->value();
+  EXPECT_NEAR(sum, sheet.as_run->value(), 1e-6);
+  options.products_at.reset();
+  EXPECT_NE(kj(with_options("CO(g) + 0.5 O2(g) -> CO2(g)", options).as_run), kj(sheet.as_run));
 }
 
 TEST(Ledger, PutsTheTwoBondsOfANitroGroupOnOneLine) {

@@ -61,7 +61,7 @@ TEST(QuickTally, RefusesWhatTheLedgerRefuses) {
 }
 
 TEST(QuickTally, KeepsItsMemoryBoundedAndItsAnswersRight) {
-  QuickTally small(test_sheets::bond_set(), 2);
+  QuickTally small(test_sheets::bond_set(), ContextUse::WhereNeeded, 2);
   const double expected = test_sheets::ledger("methane(g) + 2 O2(g) -> CO2(g) + 2 H2O(g)").gas_298->value();
   for (const char* name : {"ethane", "propane", "butane", "methane", "ethane"}) {
     ASSERT_TRUE(small.tally(std::string(name) + "(g) -> " + name + "(g)").ok());

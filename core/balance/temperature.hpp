@@ -1,0 +1,12 @@
+// From 25 °C to the temperatures at which the reaction is run.
+#pragma once
+
+#include "core/balance/ledger.hpp"
+
+namespace heatledger::balance {
+
+/// Fills `to_temperature` and `as_run` of a ledger whose routes are known: ΔH(run) = ΔH(25 °C) + Σ products ν Δh(T) −
+/// Σ reactants ν Δh(T), every species kept in the phase written.
+void run_at_temperatures(Ledger& ledger, const LedgerOptions& options);
+
+}  // namespace heatledger::balance

@@ -1,0 +1,101 @@
+#include "core/thermo/estimated.hpp"
+
+#include <array>
+
+#include "core/base/number_text.hpp"
+#include "core/estimate/context_model.hpp"
+#include "core/estimate/context_molecule.hpp"
+
+namespace heatledger::thermo {
+namespace {
+
+using estimate::ContextMolecule;
+using estimate::ContextModel;
+using estimate::ContextTerm;
+using estimate::Prediction;
+using estimate::Property;
+using estimate::Reading;
+using facts::Species;
+using molecule::Phase;
+
+constexpr double kJ = 1000.0;
+
+Error no_estimate(const Species& species, const std::string& why) {
+  return Error{"thermo.no_estimate", "No estimate for " + species.name + ": " + why, species.text, "Type a value with its source."};
+}
+
+Result<Sourced> estimated(const Species& species, Property property, const std::string& what) {
+  if (!species.graph) return no_estimate(species, "it has no structure here.");
+  const Result<ContextMolecule> read = estimate::context_molecule(*species.graph);
+  if (!read.ok()) return no_estimate(species, read.error().message);
+  const std::array<ContextTerm, 1> one = {ContextTerm{1, &*read}};
+  const ContextModel& model = ContextModel::embedded();
+  const Result<Prediction> prediction = model.predict(property, *read);
+  Result<uncertainty::Quantity> quantity = model.quantity(property, one);
+  if (!prediction.ok()) return no_estimate(species, prediction.error().message);
+  if (!quantity.ok()) return no_estimate(species, quantity.error().message);
+  Sourced result;
+  result.value = std::move(quantity).value();
+  result.route = "estimate";
+  result.source = "bonds in context";
+  result.working.push_back(what + " of " + species.name + ", bonds in context: " + display_signed(prediction->value / kJ, 1) + " ± " +
+                           display_number(prediction->u95 / kJ, 1) + " kJ/mol");
+  if (prediction->reading == Reading::None) {
+    result.cautions.push_back(species.name + ": the structure alone gives no reliable figure (± " + display_number(prediction->u95 / kJ, 0) +
+                              " kJ/mol); measure this.");
+  }
+  return result;
+}
+
+}  // namespace
+
+Result<Sourced> estimated_gas_to_phase(const Species& species, Phase to) {
+  if (to != Phase::Liquid) return no_estimate(species, "only vaporisation can be estimated.");
+  Result<Sourced> evaporation = estimated(species, Property::Vaporisation298, "vaporisation enthalpy");
+  if (!evaporation.ok()) return evaporation;
+  Sourced result = std::move(evaporation).value();
+  result.value = result.value.scaled(-1);
+  return result;
+}
+
+Result<Sourced> estimated_formation(const Species& species, Phase phase) {
+  if (phase != Phase::Gas && phase != Phase::Unstated && phase != Phase::Liquid) {
+    return no_estimate(species, "the model gives gas and liquid only.");
+  }
+  Result<Sourced> gas = estimated(species, Property::GasFormation, "ΔfH(g)");
+  if (!gas.ok() || phase != Phase::Liquid) return gas;
+  const Result<Sourced> change = estimated_gas_to_phase(species, phase);
+  if (!change.ok()) return change;
+  Sourced result = std::move(gas).value();
+  result.value.add(change->value);
+  result.working.insert(result.working.end(), change->working.begin(), change->working.end());
+  return result;
+}
+
+Result<Sourced> best_formation(const Species& species, Phase phase, const std::optional<molecule::Strength>& strength) {
+  Result<Sourced> table = tabulated_formation(species, phase, strength);
+  if (table.ok()) return table;
+  if (phase == Phase::Liquid) {
+    Result<Sourced> gas = tabulated_formation(species, Phase::Gas);
+    const Result<Sourced> change = gas.ok() ? estimated_gas_to_phase(species, phase) : gas;
+    if (gas.ok() && change.ok()) {
+      Sourced result = std::move(gas).value();
+      result.value.add(change->value);
+      result.route = "estimate";
+      result.source += "; vaporisation by bonds in context";
+      result.working.insert(result.working.end(), change->working.begin(), change->working.end());
+      return result;
+    }
+  }
+  Result<Sourced> estimate = estimated_formation(species, phase);
+  return estimate.ok() ? std::move(estimate) : std::move(table);
+}
+
+Result<Sourced> best_gas_to_phase(const Species& species, Phase to, const std::optional<molecule::Strength>& strength) {
+  Result<Sourced> table = gas_to_phase(species, to, strength);
+  if (table.ok()) return table;
+  Result<Sourced> estimate = estimated_gas_to_phase(species, to);
+  return estimate.ok() ? std::move(estimate) : std::move(table);
+}
+
+}  // namespace heatledger::thermo
