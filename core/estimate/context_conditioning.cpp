@@ -4,6 +4,7 @@
 #include <cmath>
 
 #include "core/base/check.hpp"
+#include "core/estimate/feature_code.hpp"
 
 namespace heatledger::estimate {
 namespace {
@@ -12,6 +13,41 @@ double dot(const std::vector<double>& a, const std::vector<double>& b) {
   double sum = 0;
   for (std::size_t i = 0; i < a.size(); ++i) sum += a[i] * b[i];
   return sum;
+}
+
+using Parts = std::vector<std::pair<std::uint64_t, double>>;
+
+Parts merged(Parts parts) {
+  std::stable_sort(parts.begin(), parts.end(), [](const auto& a, const auto& b) { return a.first < b.first; });
+  std::size_t kept = 0;
+  for (std::size_t i = 0; i < parts.size(); ++i) {
+    if (kept != 0 && parts[kept - 1].first == parts[i].first) {
+      parts[kept - 1].second += parts[i].second;
+    } else {
+      parts[kept++] = parts[i];
+    }
+  }
+  parts.resize(kept);
+  return parts;
+}
+
+double product(const Parts& a, const Parts& b) {
+  double sum = 0;
+  for (std::size_t i = 0, k = 0; i < a.size() && k < b.size();) {
+    if (a[i].first < b[k].first) {
+      ++i;
+    } else if (b[k].first < a[i].first) {
+      ++k;
+    } else {
+      sum += a[i++].second * b[k++].second;
+    }
+  }
+  return sum;
+}
+
+void subtract(Parts& from, double factor, const Parts& what) {
+  for (const auto& part : what) from.emplace_back(part.first, -factor * part.second);
+  from = merged(std::move(from));
 }
 
 }  // namespace
@@ -82,6 +118,7 @@ Conditioning::Conditioning(const ContextFit& fit, std::vector<std::uint32_t> wit
     spread[i * m + i] += measured[i].variance;
   }
   measured_factor_.factor(std::move(spread), m);
+  for (const MeasuredDirection& one : measured) measured_variance_.push_back(one.variance);
   for (std::size_t i = 0; i < m; ++i) {
     measured_pull_.push_back(measured[i].figure - mean_before_measurements(measured_[i], 0));
   }
@@ -116,6 +153,42 @@ std::vector<double> Conditioning::onto_measurements(const Direction& direction) 
 double Conditioning::mean(const Direction& direction, std::size_t right_hand_side) const {
   const double before = mean_before_measurements(direction, right_hand_side);
   return measured_.empty() ? before : before + dot(onto_measurements(direction), measured_pull_);
+}
+
+Conditioning::Parts Conditioning::parts_before_measurements(const Direction& direction) const {
+  Parts parts;
+  for (std::size_t j = 0; j < direction.z.size(); ++j) {
+    if (direction.z[j] != 0) parts.emplace_back(mix(j, 0x21), direction.z[j]);
+  }
+  std::uint64_t set = 0;
+  for (const std::uint32_t row : without_) set = mix(set, row);
+  for (std::size_t i = 0; i < direction.widened.size(); ++i) parts.emplace_back(mix(set, mix(i, 0x22)), direction.widened[i]);
+  for (const Functional::Latent& latent : direction.functional.latents) parts.emplace_back(latent.key, latent.coefficient);
+  // A row ties its unknowns u together: their covariance is 1 - u u'/variance, whose root is 1 - a u u'.
+  for (const Functional::RowShare& share : direction.functional.rows) {
+    double squares = 0;
+    const Parts latents = fit_.row_latents(share.row);
+    for (const auto& latent : latents) squares += latent.second * latent.second;
+    const double a = (1 - std::sqrt(std::max(0.0, 1 - squares / fit_.row_variance(share.row)))) / squares;
+    for (const auto& [key, in_row] : latents) parts.emplace_back(key, -a * in_row * share.share);
+  }
+  return merged(std::move(parts));
+}
+
+std::vector<std::pair<std::uint64_t, double>> Conditioning::parts(const Direction& direction) const {
+  // Measurements one after the other: each takes m m'/variance off, in parts 1 - a m m' of what is left.
+  Parts out = parts_before_measurements(direction);
+  std::vector<Parts> measured;
+  for (const Direction& one : measured_) measured.push_back(parts_before_measurements(one));
+  for (std::size_t o = 0; o < measured.size(); ++o) {
+    const double squares = product(measured[o], measured[o]), variance = squares + measured_variance_[o];
+    if (squares == 0) continue;
+    const double a = (1 - std::sqrt(std::max(0.0, 1 - squares / variance))) / squares;
+    const Parts known = measured[o];
+    for (std::size_t later = o + 1; later < measured.size(); ++later) subtract(measured[later], a * product(measured[later], known), known);
+    subtract(out, a * product(out, known), known);
+  }
+  return out;
 }
 
 std::vector<double> Conditioning::row_weights(const Direction& direction) const {

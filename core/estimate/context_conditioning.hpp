@@ -50,9 +50,13 @@ class Conditioning {
   double covariance(const Direction& a, const Direction& b) const;
   /// What the mean changes by when the figure of each row changes by one.
   std::vector<double> row_weights(const Direction& direction) const;
+  /// The direction as independent parts: their squares add up to the variance, products of equal keys to a covariance.
+  std::vector<std::pair<std::uint64_t, double>> parts(const Direction& direction) const;
   const std::vector<std::uint32_t>& without() const { return without_; }
 
  private:
+  using Parts = std::vector<std::pair<std::uint64_t, double>>;  // sorted by key
+  Parts parts_before_measurements(const Direction& direction) const;
   double before_measurements(const Direction& a, const Direction& b) const;
   double mean_before_measurements(const Direction& direction, std::size_t right_hand_side) const;
   std::vector<double> onto_measurements(const Direction& direction) const;
@@ -63,6 +67,7 @@ class Conditioning {
   std::vector<std::vector<double>> left_out_z_;
   std::vector<std::vector<double>> left_out_pull_;  ///< C⁻¹ (figures − shared features), per right-hand side
   std::vector<Direction> measured_;
+  std::vector<double> measured_variance_;
   SmallCholesky measured_factor_;
   std::vector<double> measured_pull_;
 };

@@ -55,6 +55,9 @@ std::vector<Seen> distinct_features(const ContextSettings& settings, const std::
   return seen;
 }
 
+/// Key of the own deviation of a row's molecule.
+std::uint64_t own_key(std::uint32_t row) { return mix(row, 0xd1); }
+
 bool same_counts(const ContextMolecule& a, const ContextMolecule& b) {
   return std::equal(
       a.features.begin(), a.features.end(), b.features.begin(), b.features.end(),
@@ -208,6 +211,16 @@ std::uint32_t ContextFit::find_row(const ContextMolecule& molecule) const {
   return one_is_silent || same_counts(molecule, row) ? only : kNone;
 }
 
+std::vector<std::pair<std::uint64_t, double>> ContextFit::row_latents(std::uint32_t row) const {
+  std::vector<std::pair<std::uint64_t, double>> latents;
+  for (const FeatureCount& feature : rows_[row].molecule->features) {
+    const FeaturePlace* place = find(feature.key);
+    if (place != nullptr && place->row == row) latents.emplace_back(feature.key, place->in_row);
+  }
+  latents.emplace_back(own_key(row), std::sqrt(rows_[row].own));
+  return latents;
+}
+
 double ContextFit::row_dot(std::uint32_t row, const std::vector<double>& x) const {
   double sum = 0;
   for (std::uint32_t e = row_start_[row]; e < row_start_[row + 1]; ++e)
@@ -267,7 +280,7 @@ Functional ContextFit::functional(const std::vector<Term>& terms,
     const double own = std::sqrt(own_variance(settings_, term.molecule->measures));
     const std::uint32_t row = term.own_row ? find_row(*term.molecule) : kNone;
     const std::uint64_t identity =
-        row != kNone ? mix(row, 0xd1) : mix(mix(term.molecule->constitution, term.molecule->stereo), 0xd2);
+        row != kNone ? own_key(row) : mix(mix(term.molecule->constitution, term.molecule->stereo), 0xd2);
     add_latent(identity, term.coefficient * own, row, own, true);
   }
   // Equal unknowns of several terms net before anything is squared.

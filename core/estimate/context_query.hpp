@@ -35,6 +35,8 @@ class Query {
   bool plain() const { return conditioning_ == fitted_.plain.get(); }
 
   ContextEstimate estimate() const;
+  /// Independent parts of the estimate's deviation, in the unit of the fit.
+  std::vector<std::pair<std::uint64_t, double>> parts() const { return conditioning_->parts(direction()); }
   /// Rows that carry the estimate, greatest weight first.
   std::vector<ReferenceRow> reference_rows(std::size_t most) const;
 

@@ -1,6 +1,8 @@
 #include "core/uncertainty/quantity.hpp"
 
+#include <algorithm>
 #include <cmath>
+#include <utility>
 
 #include "core/base/check.hpp"
 
@@ -9,6 +11,19 @@ namespace heatledger::uncertainty {
 Quantity::Quantity(double value, double u95, SourceKey source) : value_(value) {
   CHECK(u95 >= 0, "a half width is not negative");
   if (u95 > 0) parts_.push_back({source, u95});
+}
+
+Quantity::Quantity(double value, std::vector<Part> parts) : value_(value), parts_(std::move(parts)) {
+  std::stable_sort(parts_.begin(), parts_.end(), [](const Part& a, const Part& b) { return a.source < b.source; });
+  std::size_t kept = 0;
+  for (std::size_t i = 0; i < parts_.size(); ++i) {
+    if (kept != 0 && parts_[kept - 1].source == parts_[i].source) {
+      parts_[kept - 1].u95 += parts_[i].u95;
+    } else {
+      parts_[kept++] = parts_[i];
+    }
+  }
+  parts_.resize(kept);
 }
 
 double Quantity::u95() const {

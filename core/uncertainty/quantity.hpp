@@ -36,6 +36,8 @@ class Quantity {
   Quantity() = default;
   explicit Quantity(double value) : value_(value) {}
   Quantity(double value, double u95, SourceKey source);
+  /// Parts in any order; equal sources are added, in the order given.
+  Quantity(double value, std::vector<Part> parts);
 
   double value() const { return value_; }
   /// Half width of the 95 % interval: root of the sum of squares over the independent parts.

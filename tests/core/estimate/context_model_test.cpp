@@ -2,6 +2,7 @@
 
 #include <algorithm>
 #include <cmath>
+#include <memory>
 #include <random>
 
 #include "core/estimate/context_fit.hpp"
@@ -133,6 +134,37 @@ TEST(ContextModel, AddsAReactionSplitInTwo) {
   const Equation split({{-1, "CC=O"}, {-1, "[H][H]"}, {1, "CCO"}, {-1, "CCO"}, {1, "C=C"}, {1, "O"}});
   EXPECT_NEAR(whole.predict().value, split.predict().value, 1e-6);  // as above
   EXPECT_NEAR(whole.predict().u95, split.predict().u95, 1e-6);
+}
+
+TEST(ContextModel, GivesQuantitiesThatKeepTheirCorrelation) {
+  Observations observations;
+  Measurement measurement;
+  measurement.terms.push_back({1, std::make_shared<const ContextMolecule>(molecule_of("CCCC(=O)OCCCl"))});
+  measurement.value = -560000;
+  measurement.u95 = 3000;
+  ASSERT_TRUE(observations.add(measurement).ok());
+  measurement.terms[0].molecule = std::make_shared<const ContextMolecule>(molecule_of("CCCC(=O)OCCO"));
+  measurement.value = -720000;
+  ASSERT_TRUE(observations.add(measurement).ok());
+  const ContextMolecule left = molecule_of("CCO");
+  const std::vector<const ContextMolecule*> leave{&left};
+  const std::vector<ContextOptions> all = {{}, {.leave_out = leave}, {.observations = &observations}, {.leave_out = leave, .observations = &observations}};
+  for (const ContextOptions& options : all) {
+    for (const Property property : {Property::GasFormation, Property::Vaporisation298, Property::GasHeatCapacity, Property::LiquidHeatCapacity298}) {
+      const Equation reaction({{-1, "CCO"}, {-1, "CCCC(=O)O"}, {1, "CCCC(=O)OCC"}, {1, "O"}, {0.5, "CCCC(=O)OCCCl"}});
+      uncertainty::Quantity sum;
+      for (const ContextTerm& term : reaction.terms) {
+        const ContextTerm one{1, term.molecule};
+        Result<uncertainty::Quantity> quantity = model().quantity(property, std::span<const ContextTerm>(&one, 1), options);
+        ASSERT_TRUE(quantity.ok());
+        EXPECT_NEAR(quantity->u95(), model().predict(property, *term.molecule, options)->u95, 1e-6);  // one figure, two ways
+        sum.add(*quantity, term.coefficient);
+      }
+      const Prediction whole = reaction.predict(options, property);
+      EXPECT_NEAR(sum.value(), whole.value, 1e-5);        // sums near 1e6 J/mol
+      EXPECT_NEAR(sum.u95(), whole.u95, 1e-5 * whole.u95);  // differences of squares near 1e8
+    }
+  }
 }
 
 /// Leaving rows out by the small update against a fit that never saw them.
