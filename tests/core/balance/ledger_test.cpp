@@ -88,7 +88,7 @@ TEST(Ledger, LetsCorrelatedErrorsOfTheEstimateCancel) {
   const Route* context = find_route(sheet, kContextRoute);
   ASSERT_TRUE(context != nullptr && context->gas_298.has_value());
   // Two molecules that share most of their bonds are known better together than each alone.
-  const Ledger one = with_options("\"CCC(C)(Cl)CC(F)CC\"(g) + 13 O2(g) -> 9 CO2(g) + 8 H2O(g) + HCl(g) + HF(g)", options);
+  const Ledger one = with_options("\"CCC(C)(Cl)CC(F)CC\"(g) + 11.5 O2(g) -> 8 CO2(g) + 7 H2O(g) + HCl(g) + HF(g)", options);
   EXPECT_LT(context->gas_298->u95(), 1.5 * find_route(one, kContextRoute)->gas_298->u95());
   const Ledger nothing = with_options("\"CCC(C)(Cl)CC(F)CC\"(l) -> \"CCC(C)(Cl)CC(F)CC\"(l)", options);
   EXPECT_EQ(find_route(nothing, kContextRoute)->as_written->value(), 0);
