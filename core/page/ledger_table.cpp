@@ -1,6 +1,7 @@
 // The ledger as a table: a row per species that unfolds to its bond lines, the spine between broken and formed, totals,
 // corrections, the figure as written.
 #include "core/balance/bond_words.hpp"
+#include "core/balance/checker.hpp"
 #include "core/base/number_text.hpp"
 #include "core/page/cells.hpp"
 #include "core/page/figures.hpp"
@@ -12,7 +13,7 @@ namespace {
 /// Columns left of the ± that a label of a total spans: species, ×, structure, kJ/mol, bonds − table, broken.
 constexpr int kLabelSpan = 6;
 
-std::vector<Column> ledger_columns() {
+std::vector<Column> ledger_columns(bool checker) {
   std::vector<Column> columns{column("species", "Species"),
                               column("times", "\u00d7", Align::Right),
                               column("structure", "Structure"),
@@ -22,6 +23,10 @@ std::vector<Column> ledger_columns() {
                               column("formed", "Formed, kJ", Align::Right),
                               column("u95", "\u00b1", Align::Right)};
   columns[5].spine_after = true;
+  if (checker) {
+    columns.push_back(column("review", "Under review", Align::Right));
+    columns.push_back(column("finding", "Finding"));
+  }
   return columns;
 }
 
@@ -32,13 +37,13 @@ std::string structure_text(const balance::ReactionSpecies& entry) {
 
 class LedgerTable {
  public:
-  LedgerTable(const ReactionView& view)
-      : view_(view), ledger_(*view.result.ledger), decimals_(ledger_decimals(ledger_)) {}
+  LedgerTable(const ReactionView& view, const balance::Review* review)
+      : view_(view), ledger_(*view.result.ledger), review_(review), decimals_(ledger_decimals(ledger_)) {}
 
   Table build() {
     table_.id = view_.sheet.id + ".ledger";
     table_.look = TableLook::Ledger;
-    table_.columns = ledger_columns();
+    table_.columns = ledger_columns(review_ != nullptr);
     for (std::size_t i = 0; i < ledger_.rows.size(); ++i) add_species(i);
     add_sums();
     add_totals();
@@ -86,7 +91,7 @@ class LedgerTable {
     row.cells.push_back(figure_cell(
         id + ".u95", entry.in_equation ? half_width_kj(entry.in_equation->u95(), decimals_) : "", Tone::Quiet));
     const bool open = row.open;
-    table_.rows.push_back(std::move(row));
+    finish(std::move(row), "row." + std::to_string(index) + ".in_equation");
     if (open) {
       for (std::size_t line = 0; line < entry.lines.size(); ++line) add_line(index, line);
     }
@@ -122,28 +127,66 @@ class LedgerTable {
     row.cells.push_back(figure_cell(id + ".total", written.product ? "" : total, Tone::Quiet));
     row.cells.push_back(figure_cell(id + ".total", written.product ? total : "", Tone::Quiet));
     row.cells.push_back(label_cell(""));
+    finish(std::move(row), "row." + std::to_string(index) + ".line." + std::to_string(line_index) + ".per_mole");
+  }
+
+  /// Puts a row into the table; with the checker's column shown, adds the figure under review and what it turned out
+  /// to be. @param figure  what it is held against, see balance/checker.hpp; empty: nothing
+  void finish(Row row, const std::string& figure) {
+    if (review_ != nullptr) {
+      if (figure.empty()) {
+        row.cells.push_back(label_cell(""));
+        row.cells.push_back(label_cell(""));
+      } else {
+        const auto typed = view_.sheet.checker.find(figure);
+        row.cells.push_back(typed_cell(view_.sheet.id + ".check." + figure,
+                                       typed == view_.sheet.checker.end() ? "" : typed->second, "\u2013",
+                                       CellKind::Number));
+        row.cells.push_back(finding_cell(figure));
+      }
+    }
     table_.rows.push_back(std::move(row));
+  }
+
+  Cell finding_cell(const std::string& figure) const {
+    for (const balance::CheckedLine& line : review_->lines) {
+      if (line.cell != figure) continue;
+      const bool fine = line.verdict == balance::Verdict::Agrees;
+      return label_cell(line.finding.empty() && fine ? "agrees" : line.finding, fine ? Tone::Good : Tone::Caution);
+    }
+    return label_cell("");
   }
 
   void add_remark(const std::string& id, const std::string& remark) {
     Row row = row_of(id + ".remark", RowRole::Detail);
     row.cells = {label_cell(remark, Tone::Quiet, kLabelSpan - 1), label_cell(""), label_cell(""), label_cell("")};
-    table_.rows.push_back(std::move(row));
+    finish(std::move(row), "");
   }
 
+  /// One row for both sums; with the checker's column shown a row for each, since each has its own figure there.
   void add_sums() {
+    const std::string broken = ledger_.broken ? kj(ledger_.broken->value(), decimals_) : "";
+    const std::string formed = ledger_.formed ? kj(ledger_.formed->value(), decimals_) : "";
+    if (review_ == nullptr) {
+      add_sum("Sum of bonds", RowRole::Subtotal, broken, formed, "");
+    } else {
+      add_sum("Sum of bonds broken", RowRole::Subtotal, broken, "", "broken");
+      add_sum("Sum of bonds formed", RowRole::Body, "", formed, "formed");
+    }
+  }
+
+  void add_sum(const std::string& what, RowRole role, const std::string& broken, const std::string& formed,
+               const std::string& figure) {
     const std::string id = view_.sheet.id + ".sum";
-    Row row = row_of(id, RowRole::Subtotal);
-    row.cells = {label_cell("Sum of bonds", Tone::Strong, kLabelSpan - 1),
-                 figure_cell(id + ".broken", ledger_.broken ? kj(ledger_.broken->value(), decimals_) : "", Tone::Broken),
-                 figure_cell(id + ".formed", ledger_.formed ? kj(ledger_.formed->value(), decimals_) : "", Tone::Formed),
-                 label_cell("")};
-    table_.rows.push_back(std::move(row));
+    Row row = row_of(figure.empty() ? id : id + "." + figure + ".row", role);
+    row.cells = {label_cell(what, Tone::Strong, kLabelSpan - 1), figure_cell(id + ".broken", broken, Tone::Broken),
+                 figure_cell(id + ".formed", formed, Tone::Formed), label_cell("")};
+    finish(std::move(row), figure);
   }
 
   /// One line under the sums: what, figure, ±.
   void add_total(const std::string& id, const std::string& what, const std::optional<uncertainty::Quantity>& value,
-                 double factor, RowRole role, const std::string& why_not) {
+                 double factor, RowRole role, const std::string& why_not, const std::string& figure) {
     Row row = row_of(id, role);
     const Tone tone = role == RowRole::Result ? Tone::Strong : Tone::Plain;
     row.cells.push_back(label_cell(what, tone, kLabelSpan));
@@ -159,7 +202,7 @@ class LedgerTable {
       row.cells.push_back(std::move(missing));
       row.cells.push_back(label_cell(""));
     }
-    table_.rows.push_back(std::move(row));
+    finish(std::move(row), figure);
   }
 
   int total_decimals(const uncertainty::Quantity& total) const {
@@ -176,17 +219,17 @@ class LedgerTable {
     const bool scaled = basis.kind != balance::Basis::Kind::AsWritten;
     if (scaled) {
       add_total(id + ".difference", "Broken \u2212 formed, as written, kJ", ledger_.gas_298, 1, RowRole::Subtotal,
-                missing_words());
+                missing_words(), "gas_298");
     }
     add_total(id + ".gas_298", "Broken \u2212 formed, " + (scaled ? basis.text + ", " : "") + basis.unit, ledger_.gas_298,
-              basis.factor, RowRole::Result, missing_words());
+              basis.factor, RowRole::Result, missing_words(), scaled ? "gas_298.on_basis" : "gas_298");
     for (std::size_t i = 0; i < ledger_.corrections.size(); ++i) {
       const balance::Correction& correction = ledger_.corrections[i];
       add_total(id + ".correction." + std::to_string(i), correction.what, correction.value, basis.factor, RowRole::Correction,
-                correction.why_not);
+                correction.why_not, "correction." + std::to_string(i));
     }
     add_total(id + ".as_written", "As written, 25 \u00b0C, " + basis.unit, ledger_.as_written, basis.factor,
-              RowRole::Result, "A line above has no value.");
+              RowRole::Result, "A line above has no value.", scaled ? "as_written.on_basis" : "as_written");
   }
 
   /// Which bonds the set does not price, for the total that is missing because of them.
@@ -204,12 +247,13 @@ class LedgerTable {
 
   const ReactionView& view_;
   const balance::Ledger& ledger_;
+  const balance::Review* review_;  ///< null: the checker's column is not shown
   int decimals_;
   Table table_;
 };
 
 }  // namespace
 
-Table ledger_table(const ReactionView& view) { return LedgerTable(view).build(); }
+Table ledger_table(const ReactionView& view, const balance::Review* review) { return LedgerTable(view, review).build(); }
 
 }  // namespace heatledger::page

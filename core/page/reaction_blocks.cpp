@@ -211,12 +211,33 @@ Table move_table(const ReactionView& view) {
   return table;
 }
 
+void add_review_notes(const ReactionView& view, const balance::Review& review, std::vector<Block>& blocks) {
+  const std::string id = view.sheet.id + ".review";
+  if (view.sheet.checker.empty()) {
+    blocks.push_back(note_block(id, NoteKind::Info,
+                                "Checker's column: type the figures that stand on the sheet under review; a difference is "
+                                "traced to the slip that makes it."));
+    return;
+  }
+  blocks.push_back(note_block(id, review.agrees ? NoteKind::Info : NoteKind::Disagreement, review.summary));
+  for (std::size_t i = 0; i < review.alternatives.size(); ++i) {
+    blocks.push_back(note_block(id + "." + std::to_string(i), NoteKind::Info,
+                                "The same figures would come from: " + review.alternatives[i].words + "."));
+  }
+}
+
 void add_ledger_blocks(const ReactionView& view, std::vector<Block>& blocks) {
   const std::string& id = view.sheet.id;
   const balance::Ledger& ledger = *view.result.ledger;
   blocks.push_back(heading_block(id + ".ledger.heading", "Bond ledger", "gas, 25 \u00b0C \u00b7 " + ledger.basis.text));
   blocks.push_back(options_table(view));
-  blocks.push_back(ledger_table(view));
+  if (view.sheet.show_checker) {
+    const balance::Review review = balance::review_sheet(ledger, view.sheet.checker);
+    blocks.push_back(ledger_table(view, &review));
+    add_review_notes(view, review, blocks);
+  } else {
+    blocks.push_back(ledger_table(view, nullptr));
+  }
   for (std::size_t i = 0; i < ledger.notes.size(); ++i) {
     blocks.push_back(note_block(id + ".note." + std::to_string(i), NoteKind::Info, ledger.notes[i]));
   }

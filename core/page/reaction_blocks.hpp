@@ -7,6 +7,7 @@
 #include <string>
 #include <vector>
 
+#include "core/balance/checker.hpp"
 #include "core/document/computation.hpp"
 #include "core/page/page.hpp"
 
@@ -32,7 +33,8 @@ std::vector<Block> reaction_blocks(const ReactionView& view);
 /// "r1.row.0" in "r1.row.0.broken".
 std::string row_id(const document::ReactionSheet& sheet, std::size_t row);
 
-Table ledger_table(const ReactionView& view);
+/// @param review  of the figures typed in the checker's column; null: the column is not shown
+Table ledger_table(const ReactionView& view, const balance::Review* review);
 /// Boxes with the figure taken and what it is per mole and per kilogram.
 Table result_table(const ReactionView& view);
 /// Each route with its figure and ±, or the reason why it has none.
