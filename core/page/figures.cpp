@@ -32,10 +32,17 @@ std::string half_width_kj(double joule, int decimals) {
 }
 
 std::string figure_kj(const uncertainty::Figure& joule) {
-  return units::figure_text({joule.value / 1000, joule.u95 / 1000}, 1);
+  const int decimals = decimals_kj(joule.u95);
+  std::string text = kj(joule.value, decimals);
+  if (joule.u95 > 0) text += " \u00b1 " + kj(joule.u95, decimals);
+  return text;
 }
 
-int decimals_kj(double u95_joule) { return units::decimals_for(u95_joule / 1000, 1); }
+int decimals_kj(double u95_joule) {
+  // One decimal is all that anyone reads off, but a ± must not print as zero.
+  const bool vanishes = u95_joule > 0 && u95_joule < 50;
+  return units::decimals_for(u95_joule / 1000, vanishes ? 2 : 1);
+}
 
 int ledger_decimals(const balance::Ledger& ledger) {
   if (ledger.gas_298 && ledger.gas_298->u95() >= 9950) return 0;

@@ -17,7 +17,7 @@ std::string half_width_kj(double joule, int decimals);
 /// "−552.6 ± 3.0" from [J], decimals after the ±; "−552.6" when the ± is zero.
 std::string figure_kj(const uncertainty::Figure& joule);
 
-/// Decimals of one figure in kJ: two digits of its ±, at most one.
+/// Decimals of one figure in kJ: two digits of its ±, at most one; two where the ± would print as zero.
 int decimals_kj(double u95_joule);
 /// Decimals of a ledger's columns: none where every price is a whole number of kJ or the total is vaguer than that.
 int ledger_decimals(const balance::Ledger& ledger);

@@ -217,7 +217,7 @@ class LedgerTable {
     const std::string& id = view_.sheet.id;
     const balance::Basis& basis = ledger_.basis;
     const bool scaled = basis.kind != balance::Basis::Kind::AsWritten;
-    if (scaled) {
+    if (basis.factor != 1) {
       add_total(id + ".difference", "Broken \u2212 formed, as written, kJ", ledger_.gas_298, 1, RowRole::Subtotal,
                 missing_words(), "gas_298");
     }

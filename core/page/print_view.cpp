@@ -24,11 +24,12 @@ void blank_buttons(Row& row) {
 
 }  // namespace
 
-Page print_view(const Page& page) {
+Page print_view(const Page& page, bool drawings) {
   Page out;
   out.title = page.title;
   out.revision = page.revision;
   for (const Block& block : page.blocks) {
+    if (!drawings && std::get_if<Drawing>(&block) != nullptr) continue;
     if (const Table* table = std::get_if<Table>(&block)) {
       Table kept = *table;
       kept.rows.clear();

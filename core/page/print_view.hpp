@@ -5,6 +5,7 @@
 
 namespace heatledger::page {
 
-Page print_view(const Page& page);
+/// @param drawings  false: without them, for a terminal
+Page print_view(const Page& page, bool drawings = true);
 
 }  // namespace heatledger::page

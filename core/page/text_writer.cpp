@@ -174,8 +174,18 @@ class TextWriter {
 
   static std::size_t indent(const Row& row) { return row.role == RowRole::Detail || row.role == RowRole::Correction ? 2 : 0; }
 
+  /// A last column of texts gives way: it is wrapped into what the line has left for it.
+  void narrow_last(const Table& table, std::vector<std::size_t>& widths) const {
+    if (table.columns.back().align != Align::Left) return;
+    std::size_t before = 0;
+    for (std::size_t i = 0; i + 1 < widths.size(); ++i) before += widths[i] + kGap;
+    const std::size_t room = width_ > before + kLeastLast ? width_ - before : kLeastLast;
+    widths.back() = std::min(widths.back(), room);
+  }
+
   void add_grid(const Table& table) {
-    const std::vector<std::size_t> widths = column_widths(table);
+    std::vector<std::size_t> widths = column_widths(table);
+    narrow_last(table, widths);
     const bool headed = std::any_of(table.columns.begin(), table.columns.end(),
                                     [](const Column& column) { return !column.heading.empty(); });
     std::size_t total = 0;
@@ -202,22 +212,30 @@ class TextWriter {
 
   void add_row(const Table& table, const Row& row, const std::vector<std::size_t>& widths) {
     std::string line;
-    std::size_t at = 0;
+    std::vector<std::string> rest;  // further lines of a last cell that was wrapped
+    std::size_t at = 0, indent_of_rest = 0;
     for (const Cell& cell : row.cells) {
       const auto span = static_cast<std::size_t>(std::max(cell.span, 1));
       const std::size_t last = std::min(at + span, widths.size()) - 1;
       std::size_t room = kGap * (last - at);
       for (std::size_t i = at; i <= last; ++i) room += widths[i];
-      const std::string text = (at == 0 ? std::string(indent(row), ' ') : "") + cell.text;
+      std::string text = (at == 0 ? std::string(indent(row), ' ') : "") + cell.text;
+      if (at > 0 && last + 1 == widths.size() && width_of(text) > room) {
+        rest = wrapped(text, room);
+        text = rest.front();
+        rest.erase(rest.begin());
+        indent_of_rest = width_of(line);
+      }
       line += padded(text, room, span > 1 ? Align::Left : table.columns[last].align);
       line += gap(table, last);
       at = last + 1;
       if (at >= widths.size()) break;
     }
     add_line(out_, line);
+    for (const std::string& more : rest) add_line(out_, std::string(indent_of_rest, ' ') + more);
   }
 
-  static constexpr std::size_t kGap = 3, kMostPush = 60;
+  static constexpr std::size_t kGap = 3, kMostPush = 60, kLeastLast = 24;
   std::size_t width_;
   std::string out_;
 };
@@ -225,7 +243,7 @@ class TextWriter {
 }  // namespace
 
 std::string write_text(const Page& page, int width) {
-  return TextWriter(static_cast<std::size_t>(std::clamp(width, 40, 400))).write(print_view(page));
+  return TextWriter(static_cast<std::size_t>(std::clamp(width, 40, 400))).write(print_view(page, false));
 }
 
 }  // namespace heatledger::page

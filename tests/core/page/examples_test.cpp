@@ -60,8 +60,8 @@ TEST_P(Example, SavesToTheSameBytes) {
   EXPECT_EQ(session_.save(), text);
 }
 
-INSTANTIATE_TEST_SUITE_P(Worksheets, Example, ::testing::ValuesIn(example_names()), [](const auto& info) {
-  std::string name = info.param;
+INSTANTIATE_TEST_SUITE_P(Worksheets, Example, ::testing::ValuesIn(example_names()), [](const auto& example) {
+  std::string name = example.param;
   for (char& c : name) c = c == '-' ? '_' : c;
   return name;
 });
