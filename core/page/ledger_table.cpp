@@ -31,8 +31,13 @@ std::vector<Column> ledger_columns(bool checker) {
 }
 
 std::string structure_text(const balance::ReactionSpecies& entry) {
-  if (entry.species->composition) return molecule::display_formula(*entry.species->composition);
-  return "no formula";
+  if (!entry.species->composition) return "no formula";
+  std::string formula = molecule::display_formula(*entry.species->composition);
+  // Hill order puts H behind a halogen without carbon; nobody writes an acid so.
+  for (const char* acid : {"ClH", "BrH", "FH"}) {
+    if (formula == acid) formula = "H" + formula.substr(0, formula.size() - 1);
+  }
+  return formula;
 }
 
 class LedgerTable {
@@ -222,14 +227,14 @@ class LedgerTable {
                 missing_words(), "gas_298");
     }
     add_total(id + ".gas_298", "Broken \u2212 formed, " + (scaled ? basis.text + ", " : "") + basis.unit, ledger_.gas_298,
-              basis.factor, RowRole::Result, missing_words(), scaled ? "gas_298.on_basis" : "gas_298");
+              basis.factor, RowRole::Result, missing_words(), basis.factor != 1 ? "gas_298.on_basis" : "gas_298");
     for (std::size_t i = 0; i < ledger_.corrections.size(); ++i) {
       const balance::Correction& correction = ledger_.corrections[i];
       add_total(id + ".correction." + std::to_string(i), correction.what, correction.value, basis.factor, RowRole::Correction,
                 correction.why_not, "correction." + std::to_string(i));
     }
     add_total(id + ".as_written", "As written, 25 \u00b0C, " + basis.unit, ledger_.as_written, basis.factor,
-              RowRole::Result, "A line above has no value.", scaled ? "as_written.on_basis" : "as_written");
+              RowRole::Result, "A line above has no value.", basis.factor != 1 ? "as_written.on_basis" : "as_written");
   }
 
   /// Which bonds the set does not price, for the total that is missing because of them.

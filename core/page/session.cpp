@@ -260,12 +260,16 @@ std::vector<Session::Suggestion> Session::suggest(std::string_view text, std::si
   const std::size_t start = last_name_start(text);
   const std::string_view name = text.substr(start);
   if (name.empty() || limit == 0) return list;
-  for (const facts::Library::Completion& found : facts::Library::embedded().complete(name, limit)) {
+  // Several synonyms of one compound are one suggestion: its name goes in, the synonym that matched stands beside it.
+  std::set<const facts::Compound*> seen;
+  for (const facts::Library::Completion& found : facts::Library::embedded().complete(name, 4 * limit)) {
+    if (list.size() == limit) break;
+    if (!seen.insert(found.compound).second) continue;
     Suggestion suggestion;
-    suggestion.name = std::string(found.matched);
+    suggestion.name = std::string(found.compound->name);
     suggestion.insert = std::string(text.substr(0, start)) + suggestion.name;
     suggestion.remark = std::string(found.compound->formula);
-    if (found.matched != found.compound->name) suggestion.remark = std::string(found.compound->name) + ", " + suggestion.remark;
+    if (found.matched != found.compound->name) suggestion.remark = std::string(found.matched) + ", " + suggestion.remark;
     list.push_back(std::move(suggestion));
   }
   return list;

@@ -80,7 +80,7 @@ TEST_F(Requests, CommandsTakeArguments) {
 }
 
 TEST_F(Requests, MarginAndSuggestions) {
-  about("edit", R"("cell":"r1.equation","text":"H2(g) + Cl2(g) -> 2 HCl(g)")");
+  about("edit", R"j("cell":"r1.equation","text":"H2(g) + Cl2(g) -> 2 HCl(g)")j");
   const file::Json margin = about("margin", R"("cell":"r1.gas_298")");
   ASSERT_TRUE(is_ok(margin));
   EXPECT_FALSE(margin.find("value")->find("steps")->items().empty());
@@ -93,7 +93,7 @@ TEST_F(Requests, MarginAndSuggestions) {
 }
 
 TEST_F(Requests, ReportsInEveryForm) {
-  about("edit", R"("cell":"r1.equation","text":"H2(g) + Cl2(g) -> 2 HCl(g)")");
+  about("edit", R"j("cell":"r1.equation","text":"H2(g) + Cl2(g) -> 2 HCl(g)")j");
   for (const char* verb : {"report", "text", "csv"}) {
     const file::Json answer = about(verb);
     ASSERT_TRUE(is_ok(answer)) << verb;
