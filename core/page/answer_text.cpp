@@ -1,0 +1,281 @@
+#include "core/page/answer_text.hpp"
+
+#include <algorithm>
+#include <cmath>
+#include <utility>
+
+#include "core/base/number_text.hpp"
+#include "core/molecule/elements.hpp"
+#include "core/page/page.hpp"
+#include "core/page/writers.hpp"
+#include "core/units/display.hpp"
+
+namespace heatledger::page {
+namespace {
+
+constexpr int kMostDecimals = 1;
+
+Cell cell(std::string text, CellKind kind = CellKind::Label, Tone tone = Tone::Plain) {
+  Cell made;
+  made.text = std::move(text);
+  made.kind = kind;
+  made.tone = tone;
+  return made;
+}
+
+Cell number(std::string text, Tone tone = Tone::Plain) { return cell(std::move(text), CellKind::Number, tone); }
+
+/// Value and ± of a figure in J, set in kJ to the decimals that the ± justifies.
+struct KilojouleText {
+  std::string value, interval;
+};
+
+KilojouleText kilojoules(const uncertainty::Figure& joules, bool with_sign = false) {
+  const int decimals = units::decimals_for(joules.u95 / 1000, kMostDecimals);
+  return {with_sign ? display_signed(joules.value / 1000, decimals) : display_number(joules.value / 1000, decimals),
+          joules.u95 > 0 ? display_number(joules.u95 / 1000, decimals) : std::string()};
+}
+
+std::string coefficient_text(double value) {
+  const double whole = std::round(value);
+  // Fractions such as 1/3 are shown to three decimals; the working keeps them exact.
+  return std::fabs(value - whole) < 1e-9 ? display_number(whole, 0) : machine_number(value, 4);
+}
+
+std::string element_line(const molecule::BalanceCheck& balance) {
+  std::string text;
+  for (const molecule::ElementBalance& element : balance.elements) {
+    if (!text.empty()) text += ", ";
+    text += element_text(element.key) + " " + coefficient_text(element.left);
+  }
+  return text;
+}
+
+Note note(NoteKind kind, std::string text) {
+  Note made;
+  made.kind = kind;
+  made.text = std::move(text);
+  return made;
+}
+
+Heading heading(std::string text, std::string aside, int level) {
+  Heading made;
+  made.text = std::move(text);
+  made.aside = std::move(aside);
+  made.level = level;
+  return made;
+}
+
+Column column(std::string title, Align align, bool spine = false) {
+  Column made;
+  made.heading = std::move(title);
+  made.align = align;
+  made.spine_after = spine;
+  return made;
+}
+
+Row row(RowRole role, std::vector<Cell> cells) {
+  Row made;
+  made.role = role;
+  made.cells = std::move(cells);
+  return made;
+}
+
+Table ledger_table(const balance::Ledger& ledger) {
+  Table table;
+  table.look = TableLook::Ledger;
+  table.columns = {column("Species", Align::Left),       column("×", Align::Right),
+                   column("kJ/mol", Align::Right),       column("broken, kJ", Align::Right, true),
+                   column("formed, kJ", Align::Right),   column("±", Align::Right)};
+  for (const balance::LedgerRow& line : ledger.rows) {
+    const balance::ReactionSpecies& entry = ledger.reaction->species[line.species];
+    std::string name = entry.species->name;
+    const std::string_view phase = molecule::phase_text(entry.term.phase);
+    if (!phase.empty()) name += "(" + std::string(phase) + ")";
+    Row body = row(RowRole::Body, {cell(name), number(coefficient_text(entry.coefficient()))});
+    if (line.per_mole && line.in_equation) {
+      const KilojouleText each = kilojoules(line.per_mole->figure());
+      const KilojouleText total = kilojoules(line.in_equation->figure());
+      body.cells.push_back(number(each.value));
+      body.cells.push_back(number(entry.product ? "" : total.value, Tone::Broken));
+      body.cells.push_back(number(entry.product ? total.value : "", Tone::Formed));
+      body.cells.push_back(number(total.interval, Tone::Quiet));
+    } else {
+      body.cells.push_back(cell("no sum", CellKind::Label, Tone::Caution));
+      for (int i = 0; i < 3; ++i) body.cells.push_back(cell(""));
+    }
+    table.rows.push_back(std::move(body));
+    for (const balance::BondLine& bond : line.lines) {
+      const std::string label = bond.label.empty() ? molecule::spelling(bond.type) : bond.label;
+      Row detail = row(RowRole::Detail, {cell("  " + label, CellKind::Label, Tone::Quiet), number(std::to_string(bond.count))});
+      const double factor = entry.coefficient() / 1000;
+      detail.cells.push_back(number(bond.price != nullptr ? display_number(bond.price->value / 1000, 0) : "none"));
+      const std::string total = bond.price != nullptr ? display_number(bond.per_mole * factor, 0) : "";
+      detail.cells.push_back(number(entry.product ? "" : total));
+      detail.cells.push_back(number(entry.product ? total : ""));
+      detail.cells.push_back(cell(""));
+      table.rows.push_back(std::move(detail));
+    }
+  }
+  const auto side = [](const std::optional<uncertainty::Quantity>& sum) {
+    return sum ? kilojoules(sum->figure()).value : std::string("none");
+  };
+  table.rows.push_back(row(RowRole::Subtotal, {cell("Sum of bonds", CellKind::Label, Tone::Strong), cell(""), cell(""),
+                                               number(side(ledger.broken), Tone::Broken),
+                                               number(side(ledger.formed), Tone::Formed), cell("")}));
+  const auto result = [&](std::string what, const std::optional<uncertainty::Quantity>& value, RowRole role) {
+    Row line = row(role, {cell(std::move(what)), cell(""), cell(""), cell("")});
+    if (value) {
+      const KilojouleText text = kilojoules(value->figure(), true);
+      line.cells.push_back(number(text.value));
+      line.cells.push_back(number(text.interval, Tone::Quiet));
+    } else {
+      line.cells.push_back(cell("none", CellKind::Label, Tone::Caution));
+      line.cells.push_back(cell(""));
+    }
+    table.rows.push_back(std::move(line));
+  };
+  result("Broken − formed, gas, 25 °C", ledger.gas_298, RowRole::Result);
+  for (const balance::Correction& line : ledger.corrections) result(line.what, line.value, RowRole::Correction);
+  result("As written, 25 °C", ledger.as_written, RowRole::Result);
+  return table;
+}
+
+Table routes_table(const balance::Ledger& ledger) {
+  Table table;
+  table.columns = {column("Route", Align::Left), column("as written, kJ", Align::Right), column("±", Align::Right),
+                   column("", Align::Left)};
+  for (const balance::Route& route : ledger.routes) {
+    const bool taken = route.name == ledger.taken;
+    Row line = row(RowRole::Body, {cell(route.name)});
+    if (route.as_written) {
+      const KilojouleText text = kilojoules(route.as_written->figure(), true);
+      line.cells.push_back(number(text.value));
+      line.cells.push_back(number(text.interval, Tone::Quiet));
+      line.cells.push_back(cell(taken ? "taken" : ""));
+    } else {
+      line.cells.push_back(cell("none"));
+      line.cells.push_back(cell(""));
+      line.cells.push_back(cell(route.why_not, CellKind::Label, Tone::Quiet));
+    }
+    table.rows.push_back(std::move(line));
+  }
+  return table;
+}
+
+/// The figure taken on the basis that was asked for.
+std::string basis_line(const balance::Ledger& ledger) {
+  for (const balance::Route& route : ledger.routes) {
+    if (route.name != ledger.taken || !route.as_written) continue;
+    const uncertainty::Figure figure = route.as_written->scaled(ledger.basis.factor / 1000).figure();
+    return units::figure_text(figure, kMostDecimals) + " " + ledger.basis.unit + " " + ledger.basis.text + ", by " + route.name;
+  }
+  return {};
+}
+
+void add_source(std::vector<std::string>& sources, const std::string& source) {
+  if (!source.empty() && std::find(sources.begin(), sources.end(), source) == sources.end()) sources.push_back(source);
+}
+
+}  // namespace
+
+std::string element_text(int key) {
+  if (key < 0) return "charge";
+  const int element = key % 1000;
+  const int mass = key / 1000;
+  if (element == 1 && mass == 2) return "D";
+  if (element == 1 && mass == 3) return "T";
+  return (mass > 0 ? std::to_string(mass) : std::string()) + std::string(molecule::symbol(element));
+}
+
+std::string ledger_text(const balance::Ledger& ledger) {
+  Page page;
+  page.blocks.push_back(heading(balance::display_equation(*ledger.reaction), {}, 1));
+  page.blocks.push_back(note(NoteKind::Info, ledger.reaction->checkable
+                                                 ? "balanced: " + element_line(ledger.reaction->balance)
+                                                 : "balance not checkable: a species has no composition"));
+  page.blocks.push_back(heading("Bond ledger", ledger.set->title(), 2));
+  page.blocks.push_back(ledger_table(ledger));
+  page.blocks.push_back(heading("Routes", {}, 2));
+  page.blocks.push_back(routes_table(ledger));
+  const std::string on_basis = basis_line(ledger);
+  if (!on_basis.empty()) page.blocks.push_back(note(NoteKind::Info, "Taken: " + on_basis));
+  std::vector<std::string> sources;
+  for (const balance::LedgerRow& line : ledger.rows) {
+    for (const balance::BondLine& bond : line.lines) {
+      if (bond.price != nullptr) add_source(sources, bond.price->source);
+    }
+  }
+  for (const balance::Correction& line : ledger.corrections) add_source(sources, line.source);
+  for (const balance::LedgerRow& line : ledger.rows) add_source(sources, line.table_source);
+  for (const std::string& source : sources) page.blocks.push_back(note(NoteKind::Info, "source: " + source));
+  for (const std::string& text : ledger.notes) page.blocks.push_back(note(NoteKind::Info, text));
+  for (const std::string& text : ledger.cautions) page.blocks.push_back(note(NoteKind::Caution, text));
+  return write_text(page);
+}
+
+std::string unbalanced_text(const balance::Reaction& reaction) {
+  Page page;
+  page.blocks.push_back(heading(balance::display_equation(reaction), {}, 1));
+  Table table;
+  table.columns = {column("Element", Align::Left), column("left", Align::Right), column("right", Align::Right)};
+  for (const molecule::ElementBalance& element : reaction.balance.elements) {
+    table.rows.push_back(row(RowRole::Body, {cell(element_text(element.key)), number(coefficient_text(element.left)),
+                                             number(coefficient_text(element.right))}));
+  }
+  page.blocks.push_back(std::move(table));
+  if (!reaction.why_unbalanced.empty()) page.blocks.push_back(note(NoteKind::Error, reaction.why_unbalanced));
+  for (const std::string& proposal : reaction.proposals) page.blocks.push_back(note(NoteKind::Info, "balances as: " + proposal));
+  return write_text(page);
+}
+
+std::string species_text(const SpeciesFigures& figures) {
+  const facts::Species& species = *figures.species;
+  Page page;
+  std::string identity;
+  if (species.composition) identity = molecule::display_formula(*species.composition);
+  if (species.molar_mass > 0) identity += ", " + display_number(species.molar_mass * 1000, 3) + " g/mol";
+  if (species.compound != nullptr && !species.compound->cas.empty()) identity += ", CAS " + std::string(species.compound->cas);
+  page.blocks.push_back(heading(species.name, identity, 1));
+  if (!species.canonical.empty()) page.blocks.push_back(note(NoteKind::Info, "structure: " + species.canonical));
+
+  Table table;
+  table.columns = {column("25 °C", Align::Left), column("value", Align::Right), column("±", Align::Right),
+                   column("unit", Align::Left), column("route", Align::Left), column("source", Align::Left)};
+  const auto add = [&](std::string what, const StatedFigure& stated, double divisor, std::string unit) {
+    if (!stated.figure) {
+      table.rows.push_back(row(RowRole::Body, {cell(std::move(what)), cell("none"), cell(""), cell(""), cell(""),
+                                               cell(stated.reason, CellKind::Label, Tone::Quiet)}));
+      return;
+    }
+    const int decimals = units::decimals_for(stated.figure->u95 / divisor, 2);
+    table.rows.push_back(row(RowRole::Body, {cell(std::move(what)), number(display_number(stated.figure->value / divisor, decimals)),
+                                             number(display_number(stated.figure->u95 / divisor, decimals), Tone::Quiet),
+                                             cell(std::move(unit)), cell(stated.route), cell(stated.source, CellKind::Label, Tone::Quiet)}));
+  };
+  add("formation enthalpy, gas", figures.gas_formation, 1000, "kJ/mol");
+  if (figures.average_gas_formation) add("  the same by average bonds", *figures.average_gas_formation, 1000, "kJ/mol");
+  add("formation enthalpy, liquid", figures.liquid_formation, 1000, "kJ/mol");
+  if (figures.solid_formation.figure) add("formation enthalpy, solid", figures.solid_formation, 1000, "kJ/mol");
+  add("enthalpy of vaporisation", figures.vaporisation_298, 1000, "kJ/mol");
+  for (const HeatCapacityAt& point : figures.cp_gas) {
+    if (!point.figure.figure && point.temperature > 299) continue;
+    add("heat capacity, gas, " + machine_number(point.temperature) + " K", point.figure, 1, "J/(mol K)");
+  }
+  add("heat capacity, liquid", figures.cp_liquid_298, 1, "J/(mol K)");
+  page.blocks.push_back(std::move(table));
+
+  if (!species.bonds.empty()) {
+    Table bonds;
+    bonds.columns = {column("bond", Align::Left), column("count", Align::Right)};
+    for (const molecule::BondCount& bond : species.bonds) {
+      bonds.rows.push_back(row(RowRole::Body, {cell(molecule::spelling(bond.type)), number(std::to_string(bond.count))}));
+    }
+    page.blocks.push_back(std::move(bonds));
+  }
+  for (const std::string& text : figures.notes) page.blocks.push_back(note(NoteKind::Info, text));
+  for (const std::string& text : figures.cautions) page.blocks.push_back(note(NoteKind::Caution, text));
+  return write_text(page);
+}
+
+}  // namespace heatledger::page

@@ -1,0 +1,248 @@
+#include <memory>
+#include <utility>
+
+#include "core/balance/ledger.hpp"
+#include "core/estimate/bond_set.hpp"
+#include "core/page/answers.hpp"
+#include "core/page/answer_text.hpp"
+#include "core/page/tally_figures.hpp"
+
+namespace heatledger::page {
+namespace {
+
+/// Hands every species on as SMILES, for equations that hold nothing else.
+class QuotedSpecies : public balance::SpeciesSource {
+ public:
+  explicit QuotedSpecies(balance::SpeciesSource& source) : source_(source) {}
+  Result<std::shared_ptr<const facts::Species>> species(std::string_view text, bool) override {
+    return source_.species(text, true);
+  }
+
+ private:
+  balance::SpeciesSource& source_;
+};
+
+std::string_view side_text(bool product) { return product ? "product" : "reactant"; }
+
+std::string_view route_text(balance::RowRoute route) {
+  switch (route) {
+    case balance::RowRoute::Bonds: return "bonds";
+    case balance::RowRoute::AtomsFromElement: return "atoms from the element";
+    case balance::RowRoute::Formation: return "formation";
+    case balance::RowRoute::Missing: return "missing";
+  }
+  return "missing";
+}
+
+MaybeFigure figure_of(const std::optional<uncertainty::Quantity>& quantity) {
+  if (!quantity) return std::nullopt;
+  return quantity->figure();
+}
+
+std::string missing_reason(const balance::LedgerRow& row) {
+  if (row.missing.empty()) return row.remark.empty() ? "no structure and no formation enthalpy" : row.remark;
+  std::string text = "no value in the bond set for ";
+  for (std::size_t i = 0; i < row.missing.size(); ++i) {
+    if (i > 0) text += ", ";
+    text += molecule::spelling(row.missing[i]);
+  }
+  return text;
+}
+
+/// Why a total of the ledger is empty: the rows without a bond sum, named.
+std::string columns_reason(const balance::Ledger& ledger) {
+  std::string text;
+  for (const balance::LedgerRow& row : ledger.rows) {
+    if (row.in_equation) continue;
+    if (!text.empty()) text += "; ";
+    text += ledger.reaction->species[row.species].species->name + ": " + missing_reason(row);
+  }
+  return text;
+}
+
+std::string corrections_reason(const balance::Ledger& ledger) {
+  std::string text;
+  for (const balance::Correction& line : ledger.corrections) {
+    if (line.value) continue;
+    if (!text.empty()) text += "; ";
+    text += line.what + ": " + line.why_not;
+  }
+  return text.empty() ? columns_reason(ledger) : text;
+}
+
+void write_row(JsonText& json, const balance::Ledger& ledger, const balance::LedgerRow& row) {
+  const balance::ReactionSpecies& entry = ledger.reaction->species[row.species];
+  json.open_object();
+  json.key("side").string(side_text(entry.product));
+  json.key("coefficient").number(entry.coefficient());
+  json.key("species").string(entry.species->name);
+  json.key("phase").string(molecule::phase_text(entry.term.phase));
+  json.key("formula");
+  if (entry.species->composition) {
+    json.string(molecule::hill_formula(*entry.species->composition));
+  } else {
+    json.null();
+  }
+  json.key("smiles");
+  if (entry.species->canonical.empty()) {
+    json.null();
+  } else {
+    json.string(entry.species->canonical);
+  }
+  json.key("route").string(route_text(row.route));
+  const std::string reason = row.per_mole ? std::string() : missing_reason(row);
+  json.key("per_mole");
+  write_kilojoules(json, figure_of(row.per_mole), reason);
+  json.key("in_equation");
+  write_kilojoules(json, figure_of(row.in_equation), reason);
+  json.key("table");
+  write_kilojoules(json, figure_of(row.table));
+  if (row.table) json.key("table_source").string(row.table_source);
+  json.key("bonds").open_array();
+  for (const balance::BondLine& line : row.lines) {
+    json.open_object();
+    json.key("bond").string(molecule::spelling(line.type));
+    json.key("label").string(line.label);
+    json.key("count").integer(line.count);
+    json.key("each");
+    if (line.price != nullptr) {
+      json.number(line.price->value / 1000).key("each_u95").number(line.price->u95 / 1000);
+      json.key("subtotal").number(line.per_mole / 1000).key("source").string(line.price->source);
+    } else {
+      json.null().key("each_u95").null().key("subtotal").null().key("source").null();
+    }
+    if (!line.remark.empty()) json.key("remark").string(line.remark);
+    json.close_object();
+  }
+  json.close_array();
+  if (!row.remark.empty()) json.key("remark").string(row.remark);
+  json.close_object();
+}
+
+void write_texts(JsonText& json, std::string_view name, const std::vector<std::string>& texts) {
+  json.key(name).open_array();
+  for (const std::string& text : texts) json.string(text);
+  json.close_array();
+}
+
+void write_basis(JsonText& json, const balance::Ledger& ledger, const TallyFigures& figures) {
+  json.key("per_mole_of");
+  const balance::Basis& basis = ledger.basis;
+  const bool names_species =
+      basis.kind == balance::Basis::Kind::MoleOf || basis.kind == balance::Basis::Kind::KilogramOf;
+  json.open_object().key("species");
+  if (names_species) {
+    json.string(ledger.reaction->species[basis.species].species->name);
+  } else {
+    json.null();
+  }
+  const MaybeFigure& whole = figures.taken ? figures.taken : figures.as_written;
+  if (whole) {
+    json.key("value").number(whole->value * basis.factor / 1000);
+    json.key("u95").number(whole->u95 * basis.factor / 1000);
+  } else {
+    json.key("value").null().key("u95").null().key("reason").string(corrections_reason(ledger));
+  }
+  json.key("basis").string(basis.text).key("unit").string(basis.unit);
+  json.close_object();
+}
+
+std::string ledger_json(const balance::Ledger& ledger) {
+  const balance::Reaction& reaction = *ledger.reaction;
+  const TallyFigures figures = tally_figures(ledger);
+  std::string text;
+  JsonText json(text);
+  json.open_object();
+  json.key("balanced").boolean(reaction.balance.balanced);
+  json.key("equation").string(balance::plain_equation(reaction));
+  write_columns(json, figures);
+  json.key("gas_298");
+  write_kilojoules(json, figures.gas_298, figures.gas_298 ? std::string() : columns_reason(ledger));
+  json.key("corrections").open_array();
+  for (const balance::Correction& line : ledger.corrections) {
+    json.open_object().key("what").string(line.what);
+    if (line.value) {
+      json.key("value").number(line.value->value() / 1000).key("u95").number(line.value->u95() / 1000);
+      json.key("source").string(line.source);
+    } else {
+      json.key("value").null().key("u95").null().key("reason").string(line.why_not);
+    }
+    json.close_object();
+  }
+  json.close_array();
+  json.key("as_written");
+  write_kilojoules(json, figures.as_written, figures.as_written ? std::string() : corrections_reason(ledger));
+  json.key("as_run");
+  write_kilojoules(json, std::nullopt, "the equation states no temperatures");
+  write_basis(json, ledger, figures);
+  json.key("routes").open_object();
+  write_routes(json, figures);
+  json.close_object();
+  json.key("route_reasons").open_object();
+  bool context_named = false;
+  for (const balance::Route& route : ledger.routes) {
+    if (route.name == "context") context_named = true;
+    if (!route.as_written) json.key(route.name).string(route.why_not);
+  }
+  if (!context_named) json.key("context").string("no estimate by bonds in context for this equation");
+  json.close_object();
+  json.key("bond_set").string(ledger.set->title());
+  json.key("rows").open_array();
+  for (const balance::LedgerRow& row : ledger.rows) write_row(json, ledger, row);
+  json.close_array();
+  write_texts(json, "notes", ledger.notes);
+  write_texts(json, "cautions", ledger.cautions);
+  json.close_object();
+  text += '\n';
+  return text;
+}
+
+/// An equation that does not balance has no ledger: the element count and every way to balance it instead.
+std::string unbalanced_json(const balance::Reaction& reaction, const Error& error) {
+  std::string text;
+  JsonText json(text);
+  json.open_object();
+  json.key("balanced").boolean(false);
+  json.key("equation").string(balance::plain_equation(reaction));
+  json.key("elements").open_array();
+  for (const molecule::ElementBalance& element : reaction.balance.elements) {
+    json.open_object().key("element").string(element_text(element.key));
+    json.key("left").number(element.left).key("right").number(element.right).close_object();
+  }
+  json.close_array();
+  write_texts(json, "proposals", reaction.proposals);
+  json.key("error");
+  write_error(json, error);
+  json.close_object();
+  text += '\n';
+  return text;
+}
+
+}  // namespace
+
+Result<Answer> answer_tally(const TallyQuestion& question, AnswerShape shape, balance::SpeciesSource& source) {
+  QuotedSpecies quoted(source);
+  balance::SpeciesSource& reader = question.smiles ? static_cast<balance::SpeciesSource&>(quoted) : source;
+  Result<balance::Reaction> read = balance::read_reaction(question.equation, reader);
+  if (!read.ok()) return read.error();
+  const auto reaction = std::make_shared<const balance::Reaction>(std::move(read.value()));
+
+  const std::string_view set_name =
+      question.set.empty() ? std::string_view(estimate::BondSet::names().front()) : question.set;
+  Result<estimate::BondSet> set = estimate::BondSet::published(set_name);
+  if (!set.ok()) return set.error();
+  balance::LedgerOptions options;
+  options.set = std::make_shared<const estimate::BondSet>(std::move(set.value()));
+  options.basis = std::string(question.basis);
+  Result<balance::Ledger> ledger = balance::make_ledger(reaction, options);
+  if (!ledger.ok()) {
+    if (ledger.error().code != "ledger.not_balanced") return ledger.error();
+    const Error& error = ledger.error();
+    std::string text = shape == AnswerShape::Json ? unbalanced_json(*reaction, error) : unbalanced_text(*reaction);
+    return Answer{std::move(text), error};
+  }
+  std::string text = shape == AnswerShape::Json ? ledger_json(*ledger) : ledger_text(*ledger);
+  return Answer{std::move(text), std::nullopt};
+}
+
+}  // namespace heatledger::page
