@@ -89,10 +89,7 @@ Table ledger_table(const balance::Ledger& ledger) {
                    column("formed, kJ", Align::Right),   column("±", Align::Right)};
   for (const balance::LedgerRow& line : ledger.rows) {
     const balance::ReactionSpecies& entry = ledger.reaction->species[line.species];
-    std::string name = entry.species->name;
-    const std::string_view phase = molecule::phase_text(entry.term.phase);
-    if (!phase.empty()) name += "(" + std::string(phase) + ")";
-    Row body = row(RowRole::Body, {cell(name), number(coefficient_text(entry.coefficient()))});
+    Row body = row(RowRole::Body, {cell(balance::display_species(entry) + balance::phase_suffix(entry.term)), number(coefficient_text(entry.coefficient()))});
     if (line.per_mole && line.in_equation) {
       const KilojouleText each = kilojoules(line.per_mole->figure());
       const KilojouleText total = kilojoules(line.in_equation->figure());
@@ -107,10 +104,8 @@ Table ledger_table(const balance::Ledger& ledger) {
     table.rows.push_back(std::move(body));
     for (const balance::BondLine& bond : line.lines) {
       const std::string label = bond.label.empty() ? molecule::spelling(bond.type) : bond.label;
-      Row detail = row(RowRole::Detail, {cell("  " + label, CellKind::Label, Tone::Quiet), number(std::to_string(bond.count))});
-      const double factor = entry.coefficient() / 1000;
-      detail.cells.push_back(number(bond.price != nullptr ? display_number(bond.price->value / 1000, 0) : "none"));
-      const std::string total = bond.price != nullptr ? display_number(bond.per_mole * factor, 0) : "";
+      Row detail = row(RowRole::Detail, {cell("  " + label, CellKind::Label, Tone::Quiet), number(bond.count_text), number(bond.price_text)});
+      const std::string total = bond.priced() ? display_number(bond.per_mole * entry.coefficient() / 1000, 0) : "";
       detail.cells.push_back(number(entry.product ? "" : total));
       detail.cells.push_back(number(entry.product ? total : ""));
       detail.cells.push_back(cell(""));

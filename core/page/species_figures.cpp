@@ -1,11 +1,14 @@
 #include "core/page/species_figures.hpp"
 
 #include <array>
+#include <cmath>
 #include <utility>
 
 #include "core/estimate/bond_set.hpp"
+#include "core/estimate/context_model.hpp"
 #include "core/facts/atoms.hpp"
 #include "core/thermo/species_enthalpy.hpp"
+#include "core/base/number_text.hpp"
 #include "core/units/constants.hpp"
 
 namespace heatledger::page {
@@ -52,38 +55,91 @@ StatedFigure average_formation(const facts::Species& species) {
   return {sum.figure(), "average", set->title(), {}};
 }
 
+/// The estimates by bonds in context of one molecule, each made when it is asked for.
+class ContextEstimates {
+ public:
+  ContextEstimates(const facts::Species& species, bool estimate_only) : estimate_only_(estimate_only) {
+    if (!species.graph) {
+      reason_ = "no structure to estimate from";
+      return;
+    }
+    Result<estimate::ContextMolecule> molecule = estimate::context_molecule(*species.graph);
+    if (molecule.ok()) {
+      molecule_ = std::move(molecule.value());
+    } else {
+      reason_ = molecule.error().message;
+    }
+  }
+
+  StatedFigure operator()(estimate::Property property, double temperature = units::kReferenceTemperature) const {
+    if (!molecule_) return none(reason_);
+    estimate::ContextOptions options;
+    options.temperature = temperature;
+    options.estimate_only = estimate_only_;
+    const Result<estimate::Prediction> made = estimate::ContextModel::embedded().predict(property, *molecule_, options);
+    if (!made.ok()) return none(made.error().message);
+    if (made->reading == estimate::Reading::None) {
+      return none("structure alone gives no reliable figure here (± " + machine_number(std::round(made->u95 / 1000), 3) +
+                  " kJ/mol): measure it, or compute it");
+    }
+    return {uncertainty::Figure{made->value, made->u95}, "context", "bonds in context, fitted to published values", {}};
+  }
+
+ private:
+  std::optional<estimate::ContextMolecule> molecule_;
+  std::string reason_;
+  bool estimate_only_;
+};
+
+/// What a table says, else the estimate; where both fail, both reasons.
+StatedFigure table_or(StatedFigure table, const StatedFigure& estimate) {
+  if (table.figure) return table;
+  if (estimate.figure) return estimate;
+  return none(table.reason == estimate.reason ? table.reason : table.reason + "; " + estimate.reason);
+}
+
+/// Liquid from gas: minus the enthalpy of vaporisation; the two errors taken as independent.
+StatedFigure liquid_from(const StatedFigure& gas, const StatedFigure& vaporisation) {
+  if (!gas.figure) return none(gas.reason);
+  if (!vaporisation.figure) return none(vaporisation.reason);
+  const uncertainty::Figure figure{gas.figure->value - vaporisation.figure->value,
+                                   std::sqrt(gas.figure->u95 * gas.figure->u95 + vaporisation.figure->u95 * vaporisation.figure->u95)};
+  const bool same = gas.route == vaporisation.route;
+  return {figure, same ? gas.route : gas.route + " and " + vaporisation.route, "gas minus vaporisation", {}};
+}
+
 }  // namespace
 
 SpeciesFigures species_figures(std::shared_ptr<const facts::Species> species, bool estimate_only) {
+  using estimate::Property;
   SpeciesFigures figures;
   const facts::Species& it = *species;
   const facts::Compound* compound = estimate_only ? nullptr : it.compound;
-  const StatedFigure average = average_formation(it);
+  const ContextEstimates in_context(it, estimate_only);
   const std::string not_tabulated = estimate_only ? "tabulated values are left aside" : "no tabulated value";
+  const StatedFigure nothing = none(not_tabulated);
 
+  StatedFigure gas = nothing, liquid = nothing, vaporisation = nothing, cp_liquid = nothing, cp_gas = nothing;
+  figures.solid_formation = nothing;
   if (compound != nullptr) {
-    figures.gas_formation = stated(thermo::tabulated_formation(it, molecule::Phase::Gas), 1, figures.cautions);
-    figures.liquid_formation = stated(thermo::tabulated_formation(it, molecule::Phase::Liquid), 1, figures.cautions);
+    gas = stated(thermo::tabulated_formation(it, molecule::Phase::Gas), 1, figures.cautions);
+    liquid = stated(thermo::tabulated_formation(it, molecule::Phase::Liquid), 1, figures.cautions);
     figures.solid_formation = stated(thermo::tabulated_formation(it, molecule::Phase::Solid), 1, figures.cautions);
     // Gas to liquid gives heat off; the enthalpy of vaporisation is its opposite.
-    figures.vaporisation_298 = stated(thermo::gas_to_phase(it, molecule::Phase::Liquid), -1, figures.cautions);
-    figures.cp_liquid_298 = from_table(compound->liquid.heat_capacity, not_tabulated);
-  } else {
-    figures.gas_formation = figures.liquid_formation = figures.solid_formation = none(not_tabulated);
-    figures.vaporisation_298 = figures.cp_liquid_298 = none(not_tabulated);
+    vaporisation = stated(thermo::gas_to_phase(it, molecule::Phase::Liquid), -1, figures.cautions);
+    cp_liquid = from_table(compound->liquid.heat_capacity, not_tabulated);
+    cp_gas = from_table(compound->gas.heat_capacity, not_tabulated);
   }
-  if (!figures.gas_formation.figure) {
-    const std::string reason = figures.gas_formation.reason;
-    figures.gas_formation = average;
-    if (!average.figure) figures.gas_formation.reason = reason + "; " + average.reason;
-  } else if (average.figure) {
-    figures.average_gas_formation = average;
-  }
+  const StatedFigure average = average_formation(it);
+  figures.gas_formation = table_or(table_or(gas, in_context(Property::GasFormation)), average);
+  if (average.figure && figures.gas_formation.route != "average") figures.average_gas_formation = average;
+  figures.vaporisation_298 = table_or(vaporisation, in_context(Property::Vaporisation298));
+  figures.liquid_formation = table_or(liquid, liquid_from(figures.gas_formation, figures.vaporisation_298));
+  figures.cp_liquid_298 = table_or(cp_liquid, in_context(Property::LiquidHeatCapacity298));
   for (const double temperature : kGasTemperatures) {
     const bool reference = temperature == units::kReferenceTemperature;
-    figures.cp_gas.push_back({temperature, reference && compound != nullptr
-                                               ? from_table(compound->gas.heat_capacity, not_tabulated)
-                                               : none(not_tabulated)});
+    figures.cp_gas.push_back(
+        {temperature, table_or(reference ? cp_gas : nothing, in_context(Property::GasHeatCapacity, temperature))});
   }
   if (!it.note.empty()) figures.notes.push_back(it.note);
   if (compound != nullptr && compound->vapour_associates) {

@@ -70,6 +70,24 @@ std::string corrections_reason(const balance::Ledger& ledger) {
   return text.empty() ? columns_reason(ledger) : text;
 }
 
+/// One type of bond of a line; the joined line of a nitro group gives two.
+void write_bond(JsonText& json, const balance::BondLine& line, const molecule::BondType& type, int count,
+                const estimate::BondValue* price) {
+  json.open_object();
+  json.key("bond").string(molecule::spelling(type));
+  json.key("label").string(line.label);
+  json.key("count").integer(count);
+  json.key("each");
+  if (price != nullptr) {
+    json.number(price->value / 1000).key("each_u95").number(price->u95 / 1000);
+    json.key("subtotal").number(count * price->value / 1000).key("source").string(price->source);
+  } else {
+    json.null().key("each_u95").null().key("subtotal").null().key("source").null();
+  }
+  if (!line.remark.empty()) json.key("remark").string(line.remark);
+  json.close_object();
+}
+
 void write_row(JsonText& json, const balance::Ledger& ledger, const balance::LedgerRow& row) {
   const balance::ReactionSpecies& entry = ledger.reaction->species[row.species];
   json.open_object();
@@ -100,19 +118,8 @@ void write_row(JsonText& json, const balance::Ledger& ledger, const balance::Led
   if (row.table) json.key("table_source").string(row.table_source);
   json.key("bonds").open_array();
   for (const balance::BondLine& line : row.lines) {
-    json.open_object();
-    json.key("bond").string(molecule::spelling(line.type));
-    json.key("label").string(line.label);
-    json.key("count").integer(line.count);
-    json.key("each");
-    if (line.price != nullptr) {
-      json.number(line.price->value / 1000).key("each_u95").number(line.price->u95 / 1000);
-      json.key("subtotal").number(line.per_mole / 1000).key("source").string(line.price->source);
-    } else {
-      json.null().key("each_u95").null().key("subtotal").null().key("source").null();
-    }
-    if (!line.remark.empty()) json.key("remark").string(line.remark);
-    json.close_object();
+    write_bond(json, line, line.type, line.count, line.price);
+    if (line.second) write_bond(json, line, line.second->type, line.second->count, line.second->price);
   }
   json.close_array();
   if (!row.remark.empty()) json.key("remark").string(row.remark);

@@ -21,21 +21,6 @@ struct Options {
   bool json = false;
 };
 
-/// Workings of every figure that has one, in the order of the sheet.
-std::vector<page::Margin> workings(page::Session& session, const page::Page& shown) {
-  std::vector<page::Margin> margins;
-  for (const page::Block& block : shown.blocks) {
-    const auto* table = std::get_if<page::Table>(&block);
-    if (table == nullptr) continue;
-    for (const page::Row& row : table->rows) {
-      for (const page::Cell& cell : row.cells) {
-        if (cell.has_working && !cell.id.empty()) margins.push_back(session.margin(cell.id));
-      }
-    }
-  }
-  return margins;
-}
-
 Status write_drawings(const page::Page& shown, const std::string& folder, std::vector<std::string>& written) {
   std::error_code problem;
   std::filesystem::create_directories(folder, problem);
@@ -79,7 +64,7 @@ int run(const Options& options) {
   const page::Page& shown = session.page();
   std::vector<std::string> written;
   if (!options.html.empty()) {
-    const Status status = write_file(options.html, page::write_html(shown, workings(session, shown)));
+    const Status status = write_file(options.html, page::write_html(shown, session.workings()));
     if (!status.ok()) return fail(status.error());
     written.push_back(options.html);
   }
