@@ -67,6 +67,21 @@ void App::open(const std::string& path) {
 
 void App::select(const std::string& cell) { select_cell(layout().find(cell)); }
 
+std::string App::cell_places() {
+  std::string text;
+  layout();
+  const Point origin = content_origin();
+  for (const PlacedCell& placed : layout_.cells) {
+    if (!can_select(placed)) continue;
+    text += placed.cell->id;
+    for (const float value : {placed.area.x + origin.x, placed.area.y + origin.y, placed.area.width, placed.area.height}) {
+      text += '\t' + std::to_string(static_cast<int>(std::lround(value * fonts_.scale())));
+    }
+    text += '\n';
+  }
+  return text;
+}
+
 void App::run() {
   while (!closing_) {
     if (dirty_) {

@@ -25,6 +25,8 @@ class App final : public Listener {
   void open(const std::string& path);
   /// Selects a cell by id, for pictures.
   void select(const std::string& cell);
+  /// A line for each cell that can be pointed at: id, x, y, width, height [pixels], tabs between.
+  std::string cell_places();
   /// Draws, sleeps, listens, until the window is closed.
   void run();
   /// Draws one frame.

@@ -30,6 +30,8 @@ int main(int argc, char** argv) {
   options.add_option("--scale", scale, "Pixels per point; as the display says if not given")->check(CLI::Range(0.5, 4.0));
   options.add_option("--screenshot", picture, "Draw once, write the picture and end")->type_name("OUT.png");
   options.add_option("--select", selected, "Select a cell by its id, for a picture with its working")->type_name("CELL");
+  bool cells = false;
+  options.add_flag("--cells", cells, "Print where each cell stands (id, x, y, width, height in pixels) and end");
   try {
     options.parse(argc, argv);
   } catch (const CLI::ParseError& problem) {
@@ -42,12 +44,16 @@ int main(int argc, char** argv) {
     return 2;
   }
   how.scale = scale;
-  how.visible = picture.empty();
+  how.visible = picture.empty() && !cells;
   Result<std::unique_ptr<heatledger::window::Backend>> backend = heatledger::window::make_backend(how);
   if (!backend.ok()) return complain(backend.error());
   heatledger::window::App app(**backend);
   if (!sheet.empty()) app.open(sheet);
   if (!selected.empty()) app.select(selected);
+  if (cells) {
+    std::fputs(app.cell_places().c_str(), stdout);
+    return 0;
+  }
   if (picture.empty()) {
     app.run();
     return 0;
