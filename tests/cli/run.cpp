@@ -70,6 +70,7 @@ Ran run(const std::vector<std::string>& command, const std::string& input, const
   Pipe in, out, err;
   const pid_t child = ::fork();
   if (child == 0) {
+    std::signal(SIGPIPE, SIG_DFL);
     ::dup2(in.read, STDIN_FILENO);
     ::dup2(out.write, STDOUT_FILENO);
     ::dup2(err.write, STDERR_FILENO);
