@@ -2,7 +2,7 @@
 
 #include <utility>
 
-#include "core/balance/ledger.hpp"
+#include "core/balance/quick_tally.hpp"
 #include "core/estimate/bond_set.hpp"
 #include "core/page/json_line.hpp"
 #include "core/page/json_text.hpp"
@@ -33,9 +33,11 @@ void write_failure(std::string_view id, const Error& error, std::string& out) {
 }  // namespace
 
 struct Bulk::State {
+  State(const BulkOptions& how, std::shared_ptr<const estimate::BondSet> set) : options(how), tally(std::move(set)) {}
+
   BulkOptions options;
-  balance::CachedSpecies species;
-  std::shared_ptr<const estimate::BondSet> set;
+  balance::QuickTally tally;
+  balance::CachedSpecies species;  ///< of questions for one compound, and of whole answers
   LineQuestion question;
 
   void answer_equation(std::string& out);
@@ -60,14 +62,9 @@ void Bulk::State::answer_equation(std::string& out) {
     answer.ok() ? with_id(*answer, out) : write_failure(question.id, answer.error(), out);
     return;
   }
-  Result<balance::Reaction> read = balance::read_reaction(*question.equation, species);
-  if (!read.ok()) return write_failure(question.id, read.error(), out);
-  balance::LedgerOptions ledger_options;
-  ledger_options.set = set;
-  const Result<balance::Ledger> ledger =
-      balance::make_ledger(std::make_shared<const balance::Reaction>(std::move(read.value())), ledger_options);
-  if (!ledger.ok()) return write_failure(question.id, ledger.error(), out);
-  const TallyFigures figures = tally_figures(*ledger);
+  const Result<balance::QuickAnswer> answer = tally.tally(*question.equation);
+  if (!answer.ok()) return write_failure(question.id, answer.error(), out);
+  const TallyFigures figures = tally_figures(*answer);
   JsonText json(out);
   json.open_object().key("id");
   question.id.empty() ? json.null() : json.raw(question.id);
@@ -97,11 +94,10 @@ void Bulk::State::answer_species(std::string& out) {
   out += '\n';
 }
 
-Bulk::Bulk(const BulkOptions& options) : state_(std::make_unique<State>()) {
-  state_->options = options;
+Bulk::Bulk(const BulkOptions& options) {
   Result<estimate::BondSet> set = estimate::BondSet::published(estimate::BondSet::names().front());
   CHECK(set.ok(), "the primary bond set is always there");
-  state_->set = std::make_shared<const estimate::BondSet>(std::move(set.value()));
+  state_ = std::make_unique<State>(options, std::make_shared<const estimate::BondSet>(std::move(set.value())));
 }
 
 Bulk::~Bulk() = default;

@@ -84,7 +84,7 @@ JsonText& JsonText::string(std::string_view text) {
 
 JsonText& JsonText::number(double value) {
   separate();
-  out_ += machine_number(value);
+  append_machine_number(out_, value);
   return *this;
 }
 

@@ -40,6 +40,18 @@ TallyFigures tally_figures(const balance::Ledger& ledger) {
   return figures;
 }
 
+TallyFigures tally_figures(const balance::QuickAnswer& answer) {
+  TallyFigures figures;
+  figures.broken = answer.broken;
+  figures.formed = answer.formed;
+  figures.gas_298 = answer.gas_298;
+  figures.as_written = figures.average = answer.as_written;
+  figures.formation = answer.formation;
+  figures.taken_route = answer.taken;
+  figures.taken = answer.taken == balance::kFormationRoute ? answer.formation : answer.as_written;
+  return figures;
+}
+
 void write_kilojoules(JsonText& json, const MaybeFigure& joules) {
   if (!joules) {
     json.null();

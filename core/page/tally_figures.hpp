@@ -6,6 +6,7 @@
 #include <string_view>
 
 #include "core/balance/ledger.hpp"
+#include "core/balance/quick_tally.hpp"
 #include "core/page/json_text.hpp"
 #include "core/uncertainty/quantity.hpp"
 
@@ -23,6 +24,7 @@ struct TallyFigures {
 
 /// @param ledger  must outlive the figures
 TallyFigures tally_figures(const balance::Ledger& ledger);
+TallyFigures tally_figures(const balance::QuickAnswer& answer);
 
 /// {"value","u95"} in kJ, or null.
 void write_kilojoules(JsonText& json, const MaybeFigure& joules);
