@@ -18,7 +18,8 @@ double dot(const std::vector<double>& a, const std::vector<double>& b) {
 using Parts = std::vector<std::pair<std::uint64_t, double>>;
 
 Parts merged(Parts parts) {
-  std::stable_sort(parts.begin(), parts.end(), [](const auto& a, const auto& b) { return a.first < b.first; });
+  std::stable_sort(parts.begin(), parts.end(),
+                   [](const auto& a, const auto& b) { return a.first < b.first; });
   std::size_t kept = 0;
   for (std::size_t i = 0; i < parts.size(); ++i) {
     if (kept != 0 && parts[kept - 1].first == parts[i].first) {
@@ -162,8 +163,10 @@ Conditioning::Parts Conditioning::parts_before_measurements(const Direction& dir
   }
   std::uint64_t set = 0;
   for (const std::uint32_t row : without_) set = mix(set, row);
-  for (std::size_t i = 0; i < direction.widened.size(); ++i) parts.emplace_back(mix(set, mix(i, 0x22)), direction.widened[i]);
-  for (const Functional::Latent& latent : direction.functional.latents) parts.emplace_back(latent.key, latent.coefficient);
+  for (std::size_t i = 0; i < direction.widened.size(); ++i)
+    parts.emplace_back(mix(set, mix(i, 0x22)), direction.widened[i]);
+  for (const Functional::Latent& latent : direction.functional.latents)
+    parts.emplace_back(latent.key, latent.coefficient);
   // A row ties its unknowns u together: their covariance is 1 - u u'/variance, whose root is 1 - a u u'.
   for (const Functional::RowShare& share : direction.functional.rows) {
     double squares = 0;
@@ -185,7 +188,8 @@ std::vector<std::pair<std::uint64_t, double>> Conditioning::parts(const Directio
     if (squares == 0) continue;
     const double a = (1 - std::sqrt(std::max(0.0, 1 - squares / variance))) / squares;
     const Parts known = measured[o];
-    for (std::size_t later = o + 1; later < measured.size(); ++later) subtract(measured[later], a * product(measured[later], known), known);
+    for (std::size_t later = o + 1; later < measured.size(); ++later)
+      subtract(measured[later], a * product(measured[later], known), known);
     subtract(out, a * product(out, known), known);
   }
   return out;

@@ -50,7 +50,8 @@ class Conditioning {
   double covariance(const Direction& a, const Direction& b) const;
   /// What the mean changes by when the figure of each row changes by one.
   std::vector<double> row_weights(const Direction& direction) const;
-  /// The direction as independent parts: their squares add up to the variance, products of equal keys to a covariance.
+  /// The direction as independent parts: their squares add up to the variance, products of equal keys to a
+  /// covariance.
   std::vector<std::pair<std::uint64_t, double>> parts(const Direction& direction) const;
   const std::vector<std::uint32_t>& without() const { return without_; }
 

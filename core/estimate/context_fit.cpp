@@ -56,7 +56,9 @@ std::vector<Seen> distinct_features(const ContextSettings& settings, const std::
 }
 
 /// Key of the own deviation of a row's molecule.
-std::uint64_t own_key(std::uint32_t row) { return mix(row, 0xd1); }
+std::uint64_t own_key(std::uint32_t row) {
+  return mix(row, 0xd1);
+}
 
 bool same_counts(const ContextMolecule& a, const ContextMolecule& b) {
   return std::equal(

@@ -79,7 +79,8 @@ class ContextFit {
   /// Shared features of a row, scaled, as a dense vector.
   void row_vector(std::uint32_t row, std::vector<double>& x) const;
   double row_dot(std::uint32_t row, const std::vector<double>& x) const;
-  /// The unknowns that only this row tells of: its own features and its own deviation, each with its part in the row.
+  /// The unknowns that only this row tells of: its own features and its own deviation, each with its part in
+  /// the row.
   std::vector<std::pair<std::uint64_t, double>> row_latents(std::uint32_t row) const;
   /// Figure of a row minus its shared features at the posterior mean.
   double row_residual(std::uint32_t row, std::size_t right_hand_side) const {

@@ -113,11 +113,13 @@ Result<Prediction> ContextModel::predict(Property property, const ContextMolecul
   return predict(property, std::span<const ContextTerm>(&term, 1), options);
 }
 
-Result<uncertainty::Quantity> ContextModel::quantity(Property property, std::span<const ContextTerm> terms, const ContextOptions& options) const {
+Result<uncertainty::Quantity> ContextModel::quantity(Property property, std::span<const ContextTerm> terms,
+                                                     const ContextOptions& options) const {
   Result<Prediction> prediction = predict(property, terms, options);
   if (!prediction) return prediction.error();
   // A gas heat capacity between two fits takes the shape of its deviation from the nearer one.
-  const bool above = property == Property::GasHeatCapacity && options.temperature > (gas_nodes[0] + gas_nodes[1]) / 2;
+  const bool above =
+      property == Property::GasHeatCapacity && options.temperature > (gas_nodes[0] + gas_nodes[1]) / 2;
   const FitKind kind = above ? FitKind::GasAbove : fit_kind_of(property);
   const Query query(kind, terms, options);
   double squares = 0;
@@ -127,7 +129,9 @@ Result<uncertainty::Quantity> ContextModel::quantity(Property property, std::spa
   std::vector<uncertainty::Part> parts;
   for (const auto& part : found) {
     if (part.second == 0) continue;
-    parts.push_back({uncertainty::source_key(uncertainty::SourceKind::Estimate, mix(part.first, static_cast<std::uint64_t>(kind))), scale * part.second});
+    parts.push_back({uncertainty::source_key(uncertainty::SourceKind::Estimate,
+                                             mix(part.first, static_cast<std::uint64_t>(kind))),
+                     scale * part.second});
   }
   return uncertainty::Quantity(prediction->value, std::move(parts));
 }

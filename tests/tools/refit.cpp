@@ -6,6 +6,7 @@
 #include <string>
 
 #include "core/base/number_text.hpp"
+#include "core/estimate/bond_calibration.hpp"
 #include "core/estimate/context_accuracy.hpp"
 #include "core/estimate/context_report.hpp"
 #include "core/estimate/context_robust.hpp"
@@ -19,6 +20,8 @@ int usage() {
       "heatledger_refit accuracy        fit all properties, leave each compound out, print the tables of "
       "accuracy.txt\n"
       "heatledger_refit folds N         the same by N folds with a refit each\n"
+      "heatledger_refit bonds           ± of average bonds: prints "
+      "core/estimate/tables/bond_spread_factors.tsv\n"
       "heatledger_refit weights         row weights iterated anew: compound, property, weight\n"
       "heatledger_refit worst N         the N rows furthest from their prediction, in units of its spread\n"
       "All read the tables that are compiled in: change core/estimate/tables/, build, run again.\n",
@@ -56,6 +59,8 @@ int main(int argc, char** argv) {
     std::fputs(accuracy_report().c_str(), stdout);
   } else if (what == "folds" && number >= 2) {
     std::fputs(folds_report(static_cast<unsigned>(number)).c_str(), stdout);
+  } else if (what == "bonds") {
+    std::fputs(bond_spread_table().c_str(), stdout);
   } else if (what == "weights") {
     return print_weights();
   } else if (what == "worst" && number > 0) {

@@ -148,20 +148,27 @@ TEST(ContextModel, GivesQuantitiesThatKeepTheirCorrelation) {
   ASSERT_TRUE(observations.add(measurement).ok());
   const ContextMolecule left = molecule_of("CCO");
   const std::vector<const ContextMolecule*> leave{&left};
-  const std::vector<ContextOptions> all = {{}, {.leave_out = leave}, {.observations = &observations}, {.leave_out = leave, .observations = &observations}};
+  const std::vector<ContextOptions> all = {{},
+                                           {.leave_out = leave},
+                                           {.observations = &observations},
+                                           {.leave_out = leave, .observations = &observations}};
   for (const ContextOptions& options : all) {
-    for (const Property property : {Property::GasFormation, Property::Vaporisation298, Property::GasHeatCapacity, Property::LiquidHeatCapacity298}) {
-      const Equation reaction({{-1, "CCO"}, {-1, "CCCC(=O)O"}, {1, "CCCC(=O)OCC"}, {1, "O"}, {0.5, "CCCC(=O)OCCCl"}});
+    for (const Property property : {Property::GasFormation, Property::Vaporisation298,
+                                    Property::GasHeatCapacity, Property::LiquidHeatCapacity298}) {
+      const Equation reaction(
+          {{-1, "CCO"}, {-1, "CCCC(=O)O"}, {1, "CCCC(=O)OCC"}, {1, "O"}, {0.5, "CCCC(=O)OCCCl"}});
       uncertainty::Quantity sum;
       for (const ContextTerm& term : reaction.terms) {
         const ContextTerm one{1, term.molecule};
-        Result<uncertainty::Quantity> quantity = model().quantity(property, std::span<const ContextTerm>(&one, 1), options);
+        Result<uncertainty::Quantity> quantity =
+            model().quantity(property, std::span<const ContextTerm>(&one, 1), options);
         ASSERT_TRUE(quantity.ok());
-        EXPECT_NEAR(quantity->u95(), model().predict(property, *term.molecule, options)->u95, 1e-6);  // one figure, two ways
+        EXPECT_NEAR(quantity->u95(), model().predict(property, *term.molecule, options)->u95,
+                    1e-6);  // one figure, two ways
         sum.add(*quantity, term.coefficient);
       }
       const Prediction whole = reaction.predict(options, property);
-      EXPECT_NEAR(sum.value(), whole.value, 1e-5);        // sums near 1e6 J/mol
+      EXPECT_NEAR(sum.value(), whole.value, 1e-5);          // sums near 1e6 J/mol
       EXPECT_NEAR(sum.u95(), whole.u95, 1e-5 * whole.u95);  // differences of squares near 1e8
     }
   }
