@@ -1,5 +1,5 @@
 // Every worksheet in worksheets/ prints the same text natively and in WebAssembly: this suite is compiled to both.
-// The texts in tests/data/worksheets were written by `heatledger work SHEET` on the native build and read line by line
+// The texts in tests/data/worksheets were written by print_examples.cpp on the native build and read line by line
 // by a person; they pin the whole chain from file to print.
 #include <gtest/gtest.h>
 
