@@ -58,25 +58,39 @@ Query::Query(FitKind kind, std::span<const ContextTerm> terms, const ContextOpti
   conditioning_ = own_.get();
 }
 
-Direction Query::direction() const {
+std::vector<ContextFit::Term> Query::parts_of_terms() const {
   std::vector<ContextFit::Term> parts;
   parts.reserve(terms_.size());
   for (const ContextTerm& term : terms_) parts.push_back({term.coefficient, term.molecule});
-  return conditioning_->direction(parts);
+  return parts;
+}
+
+Direction Query::direction() const {
+  return conditioning_->direction(parts_of_terms());
 }
 
 ContextEstimate Query::estimate() const {
-  const Direction direction = this->direction();
   ContextEstimate out;
-  // Rounding may leave a variance of nothing a hair below zero.
-  out.variance = std::max(0.0, conditioning_->variance(direction));
-  out.unseen = direction.functional.unseen;
-  out.in_table = direction.functional.in_table;
-  for (std::size_t k = 0; k < fitted_.temperatures.size(); ++k) {
-    double value = conditioning_->mean(direction, k);
-    for (const ContextTerm& term : terms_)
-      value += term.coefficient * offset(kind_, *term.molecule, fitted_.temperatures[k]);
-    out.value.push_back(sign_of(kind_) * value);
+  const auto take = [&](const Functional& functional, double variance, const auto& mean) {
+    // Rounding may leave a variance of nothing a hair below zero.
+    out.variance = std::max(0.0, variance);
+    out.unseen = functional.unseen;
+    out.in_table = functional.in_table;
+    for (std::size_t k = 0; k < fitted_.temperatures.size(); ++k) {
+      double value = mean(k);
+      for (const ContextTerm& term : terms_)
+        value += term.coefficient * offset(kind_, *term.molecule, fitted_.temperatures[k]);
+      out.value.push_back(sign_of(kind_) * value);
+    }
+  };
+  if (plain()) {
+    const Functional functional = fitted_.fit->functional(parts_of_terms(), {});
+    take(functional, fitted_.fit->variance(functional),
+         [&](std::size_t k) { return fitted_.fit->mean(functional, k); });
+  } else {
+    const Direction direction = this->direction();
+    take(direction.functional, conditioning_->variance(direction),
+         [&](std::size_t k) { return conditioning_->mean(direction, k); });
   }
   return out;
 }

@@ -42,6 +42,7 @@ class Query {
 
  private:
   Direction direction() const;
+  std::vector<ContextFit::Term> parts_of_terms() const;
   FitKind kind_;
   std::vector<ContextTerm> terms_;
   const FittedProperty& fitted_;
