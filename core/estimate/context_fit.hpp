@@ -61,8 +61,6 @@ class ContextFit {
   std::size_t features() const { return entries_.size(); }
   std::size_t factor_entries() const { return cholesky_.nonzeros(); }
   std::size_t right_hand_sides() const { return beta_.size(); }
-  /// For bulk work: see SparseCholesky::tabulate().
-  void tabulate() { cholesky_.tabulate(); }
   const SparseCholesky& cholesky() const { return cholesky_; }
 
   /// nullptr: no row has this feature.

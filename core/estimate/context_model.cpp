@@ -136,9 +136,4 @@ Result<uncertainty::Quantity> ContextModel::quantity(Property property, std::spa
   return uncertainty::Quantity(prediction->value, std::move(parts));
 }
 
-void ContextModel::prepare_for_bulk(Property property) const {
-  embedded_fit(fit_kind_of(property)).fit->tabulate();
-  if (property == Property::GasHeatCapacity) embedded_fit(FitKind::GasAbove).fit->tabulate();
-}
-
 }  // namespace heatledger::estimate

@@ -77,11 +77,6 @@ class ContextModel {
   Result<uncertainty::Quantity> quantity(Property property, std::span<const ContextTerm> terms,
                                          const ContextOptions& options = {}) const;
 
-  /// Tabulates the covariance of often-seen features: costs some tenths of a second once, after which a
-  /// single estimate with nothing left out and nothing measured is several times faster. Worth it from some
-  /// thousand estimates on. The ± may move in digits far beyond those printed.
-  void prepare_for_bulk(Property property) const;
-
  private:
   ContextModel() = default;
 };

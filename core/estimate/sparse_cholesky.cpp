@@ -108,7 +108,6 @@ void subtract4(double* __restrict y, const double* __restrict p, const double* _
 
 void SparseCholesky::factor(const LowerTriangle& matrix) {
   place_ = sparse_order(matrix);
-  inverse_.clear();
   const LowerTriangle ordered = permuted(matrix, place_);
   dense_ = size() - dense_begin(column_counts(ordered));
   column_start_.resize(dense_);
@@ -269,59 +268,11 @@ void SparseCholesky::backward(std::vector<double> z, std::vector<double>& x) con
 }
 
 double SparseCholesky::squared_norm(const std::vector<double>& x) const {
-  CHECK(x.size() == size(), "one entry per unknown");
-  std::vector<double> z(size());
-  for (std::size_t j = 0; j < size(); ++j) z[at(place_[j])] = x[j];
-  forward_sparse(z);
-  const std::size_t begin = size() - dense_;
+  std::vector<double> z;
+  forward(x, z);
   double sum = 0;
-  for (std::size_t j = 0; j < begin; ++j) sum += z[j] * z[j];
-  if (inverse_.empty()) {
-    forward_dense(z.data() + begin);
-    for (std::size_t j = begin; j < size(); ++j) sum += z[j] * z[j];
-    return sum;
-  }
-  std::vector<std::size_t> touched;
-  for (std::size_t j = 0; j < dense_; ++j) {
-    if (z[begin + j] != 0) touched.push_back(j);
-  }
-  for (std::size_t a = 0; a < touched.size(); ++a) {
-    const double* row = inverse_.data() + touched[a] * dense_;
-    double part = 0;
-    for (std::size_t b = 0; b < a; ++b) part += row[touched[b]] * z[begin + touched[b]];
-    sum += z[begin + touched[a]] * (2 * part + row[touched[a]] * z[begin + touched[a]]);
-  }
+  for (const double entry : z) sum += entry * entry;
   return sum;
-}
-
-void SparseCholesky::tabulate() {
-  if (!inverse_.empty() || dense_ == 0) return;
-  // Column j of the inverse by one forward and one backward solve, only its part from j on; the rest by
-  // symmetry.
-  inverse_.assign(dense_ * dense_, 0.0);
-  std::vector<double> z(dense_);
-  for (std::size_t j = 0; j < dense_; ++j) {
-    std::fill(z.begin(), z.end(), 0.0);
-    z[j] = 1;
-    forward_dense(z.data());
-    double* row = inverse_.data() + j * dense_;
-    std::copy(z.begin(), z.end(), row);
-  }
-  // row j now holds column j of L⁻¹; the inverse is its Gram matrix, of which the lower triangle is read.
-  std::vector<double> gram(dense_ * dense_, 0.0);
-  for (std::size_t a = 0; a < dense_; ++a) {
-    for (std::size_t b = 0; b <= a; ++b) {
-      const double *p = inverse_.data() + a * dense_, *q = inverse_.data() + b * dense_;
-      double sums[4] = {0, 0, 0, 0};  // four fixed strands
-      std::size_t i = a;
-      for (; i + 4 <= dense_; i += 4) {
-        for (std::size_t k = 0; k < 4; ++k) sums[k] += p[i + k] * q[i + k];
-      }
-      for (; i < dense_; ++i) sums[0] += p[i] * q[i];
-      gram[a * dense_ + b] = (sums[0] + sums[1]) + (sums[2] + sums[3]);
-    }
-  }
-  inverse_ = std::move(gram);
 }
 
 }  // namespace heatledger::estimate

@@ -34,10 +34,8 @@ class SparseCholesky {
   /// x = Πᵀ L⁻ᵀ z
   void backward(std::vector<double> z, std::vector<double>& x) const;
 
-  /// x'P⁻¹x. After tabulate() its cost follows the unknowns touched, no longer the dense block.
+  /// x'P⁻¹x
   double squared_norm(const std::vector<double>& x) const;
-  /// Inverts the dense block, for bulk work: cubic in its size, once.
-  void tabulate();
 
  private:
   void factor_sparse(const LowerTriangle& permuted);
@@ -51,8 +49,7 @@ class SparseCholesky {
   LowerTriangle sparse_;       ///< columns before the block, rows down to the end
   std::vector<double> block_;  ///< lower triangle of the block by columns, each from its diagonal down
   std::vector<std::size_t> column_start_;
-  std::vector<double> inverse_;  ///< full inverse of block × blockᵀ; empty until tabulated
-  std::vector<int> place_;       ///< place_[j]: row of L that stands for unknown j
+  std::vector<int> place_;  ///< place_[j]: row of L that stands for unknown j
 };
 
 }  // namespace heatledger::estimate

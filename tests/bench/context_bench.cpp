@@ -66,19 +66,6 @@ void ContextEstimate(benchmark::State& state) {
 }
 BENCHMARK(ContextEstimate)->ArgName("without_own_row")->Arg(0)->Arg(1)->Unit(benchmark::kMillisecond);
 
-/// The same once the covariance of often-seen features is tabulated; registered last, for the table stays.
-void ContextEstimateInBulk(benchmark::State& state) {
-  const std::vector<molecule::Graph> all = graphs();
-  ContextModel::embedded().prepare_for_bulk(Property::GasFormation);
-  for (auto _ : state) {
-    for (const molecule::Graph& graph : all) {
-      const Result<ContextMolecule> molecule = context_molecule(graph);
-      benchmark::DoNotOptimize(ContextModel::embedded().predict(Property::GasFormation, *molecule)->u95);
-    }
-  }
-  state.SetItemsProcessed(static_cast<std::int64_t>(state.iterations() * kMolecules));
-}
-
 /// One measurement added and a related estimate read.
 void ContextMeasurement(benchmark::State& state) {
   const std::vector<ContextMolecule> all = molecules();
@@ -96,7 +83,6 @@ void ContextMeasurement(benchmark::State& state) {
   }
 }
 BENCHMARK(ContextMeasurement)->Unit(benchmark::kMicrosecond);
-BENCHMARK(ContextEstimateInBulk)->Unit(benchmark::kMillisecond);
 
 }  // namespace
 }  // namespace heatledger::estimate

@@ -187,7 +187,7 @@ TEST(ContextRefit, AgreesWithEliminationOfTheDual) {
   }
 }
 
-TEST(SparseCholesky, SolvesAndTabulatesASmallMatrix) {
+TEST(SparseCholesky, SolvesASmallMatrix) {
   // A chain of 40 unknowns with a dense corner: positive definite because the diagonal dominates.
   LowerTriangle matrix;
   matrix.start.push_back(0);
@@ -219,9 +219,9 @@ TEST(SparseCholesky, SolvesAndTabulatesASmallMatrix) {
   }
   for (std::size_t j = 0; j < back.size(); ++j)
     EXPECT_NEAR(back[j], x[j], 1e-12);  // one solve of a well-conditioned matrix
-  const double before = cholesky.squared_norm(x);
-  cholesky.tabulate();
-  EXPECT_NEAR(cholesky.squared_norm(x), before, 1e-12 * before);
+  double product = 0;
+  for (std::size_t j = 0; j < x.size(); ++j) product += x[j] * solved[j];
+  EXPECT_NEAR(cholesky.squared_norm(x), product, 1e-12 * product);
 }
 
 /// Weights, values and structures of the embedded table are usable: every row, not a sample.

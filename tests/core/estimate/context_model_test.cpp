@@ -281,18 +281,6 @@ Measurement measured(const std::vector<std::pair<double, std::string>>& terms, d
   return out;
 }
 
-TEST(ContextModel, GivesTheSameFiguresInBulk) {
-  const char* all[] = {"CCOC(C)=O", "OCC(O)CO", "CC(C)(C)c1ccccc1", "ClCCBr", "C1CCC2CCCCC2C1"};
-  std::vector<Prediction> before;
-  for (const char* smiles : all) before.push_back(predicted(Property::LiquidHeatCapacity298, smiles));
-  model().prepare_for_bulk(Property::LiquidHeatCapacity298);
-  for (std::size_t i = 0; i < before.size(); ++i) {
-    const Prediction after = predicted(Property::LiquidHeatCapacity298, all[i]);
-    EXPECT_EQ(after.value, before[i].value) << all[i];
-    EXPECT_NEAR(after.s, before[i].s, 1e-8) << all[i];  // sums of squares near 1e3 whose remainder is below 1
-  }
-}
-
 TEST(ContextObservations, SharpenRelatedEstimatesAndLeaveNoTrace) {
   const std::string target = "COC(=O)C12C3C4C1C5C2C3C45", relative = "CCOC(=O)C12C3C4C1C5C2C3C45";
   const Prediction before = predicted(Property::GasFormation, relative);
