@@ -3,6 +3,7 @@
 
 #include <algorithm>
 #include <cmath>
+#include <ostream>
 
 #include "tests/core/balance/sheets.hpp"
 
@@ -17,6 +18,9 @@ struct Sides {
   std::vector<const char*> left, right;
   const char* set = "";
 };
+
+/// Keeps the names of the tests free of memory addresses.
+void PrintTo(const Sides& sides, std::ostream* out) { *out << sides.name; }
 
 std::string join(const std::vector<std::string>& terms) {
   std::string text;

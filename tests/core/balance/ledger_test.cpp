@@ -187,8 +187,9 @@ TEST(Ledger, SaysWhichPhasesNobodyWrote) {
   EXPECT_FALSE(any_contains(ledger("methane(g) + 2 O2(g) -> CO2(g) + 2 H2O(g)").notes, "No phase is written"));
 }
 
-TEST(Ledger, SaysThatTheSpreadUnderstates) {
-  EXPECT_TRUE(any_contains(ledger("methane(g) + 2 O2(g) -> CO2(g) + 2 H2O(g)").notes, "understates"));
+TEST(Ledger, SaysWhatTheIntervalOfTheAverageSetCovers) {
+  const std::string remark(estimate::BondSet::spread_remark());
+  EXPECT_TRUE(any_contains(ledger("methane(g) + 2 O2(g) -> CO2(g) + 2 H2O(g)").notes, remark));
 }
 
 TEST(Ledger, LetsSharedBondsCancelInTheInterval) {
