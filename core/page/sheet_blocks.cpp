@@ -115,8 +115,7 @@ std::vector<Block> convention_blocks() {
       "unasked. (aq) without a strength is infinite dilution.",
       "\u00b1 is the half width of a 95 % interval of the data of what is written. What stands on both sides cancels. Not "
       "covered: reactions that are not listed, decomposition, mixing that is not listed, human error.",
-      "An average bond enthalpy is a mean over many molecules; \u00b1 from the spread of published tables understates how far "
-      "a single molecule lies from it.",
+      "An average bond enthalpy is a mean over many molecules; a single molecule can lie well away from it.",
       "A typed value without \u00b1 counts as exact.",
       "Figures are added before they are rounded for print, so that a printed sum may differ by one in its last digit.",
       "Figures for drafting: what can hurt someone is measured, and local codes and licensed practice govern."};
