@@ -7,6 +7,7 @@
 #include "core/estimate/bond_set.hpp"
 #include "core/estimate/context_model.hpp"
 #include "core/facts/atoms.hpp"
+#include "core/facts/polynomials.hpp"
 #include "core/thermo/species_enthalpy.hpp"
 #include "core/base/number_text.hpp"
 #include "core/units/constants.hpp"
@@ -91,6 +92,22 @@ class ContextEstimates {
   bool estimate_only_;
 };
 
+/// The temperature polynomial of a gas, found by the compound's own names; nullptr when it has none.
+const facts::Polynomial* gas_polynomial(const facts::Compound& compound) {
+  if (const facts::Polynomial* found = facts::find_polynomial(compound.name, 'g')) return found;
+  for (const std::string_view synonym : compound.synonyms) {
+    if (const facts::Polynomial* found = facts::find_polynomial(synonym, 'g')) return found;
+  }
+  return nullptr;
+}
+
+StatedFigure from_polynomial(const facts::Polynomial& polynomial, double temperature) {
+  const Result<facts::PolynomialValue> value = facts::evaluate(polynomial, temperature);
+  if (!value.ok()) return none(value.error().message);
+  // 1 per cent: the default of that table for gases.
+  return {uncertainty::Figure{value->cp, 0.01 * value->cp}, "table", "NASA TM-4513 (1993), polynomial", {}};
+}
+
 /// What a table says, else the estimate; where both fail, both reasons.
 StatedFigure table_or(StatedFigure table, const StatedFigure& estimate) {
   if (table.figure) return table;
@@ -119,6 +136,7 @@ SpeciesFigures species_figures(std::shared_ptr<const facts::Species> species, bo
   const std::string not_tabulated = estimate_only ? "tabulated values are left aside" : "no tabulated value";
   const StatedFigure nothing = none(not_tabulated);
 
+  const facts::Polynomial* polynomial = compound != nullptr ? gas_polynomial(*compound) : nullptr;
   StatedFigure gas = nothing, liquid = nothing, vaporisation = nothing, cp_liquid = nothing, cp_gas = nothing;
   figures.solid_formation = nothing;
   if (compound != nullptr) {
@@ -137,9 +155,9 @@ SpeciesFigures species_figures(std::shared_ptr<const facts::Species> species, bo
   figures.liquid_formation = table_or(liquid, liquid_from(figures.gas_formation, figures.vaporisation_298));
   figures.cp_liquid_298 = table_or(cp_liquid, in_context(Property::LiquidHeatCapacity298));
   for (const double temperature : kGasTemperatures) {
-    const bool reference = temperature == units::kReferenceTemperature;
-    figures.cp_gas.push_back(
-        {temperature, table_or(reference ? cp_gas : nothing, in_context(Property::GasHeatCapacity, temperature))});
+    StatedFigure table = temperature == units::kReferenceTemperature ? cp_gas : nothing;
+    if (!table.figure && polynomial != nullptr) table = from_polynomial(*polynomial, temperature);
+    figures.cp_gas.push_back({temperature, table_or(table, in_context(Property::GasHeatCapacity, temperature))});
   }
   if (!it.note.empty()) figures.notes.push_back(it.note);
   if (compound != nullptr && compound->vapour_associates) {

@@ -57,7 +57,7 @@ App::App(Backend& backend)
 void App::open(const std::string& path) {
   std::error_code problem;
   if (std::filesystem::exists(path, problem)) {
-    load(path);
+    load(path);  // a folder is refused there with its reason
     return;
   }
   path_ = path;

@@ -19,7 +19,7 @@ using Colour = std::uint32_t;  ///< as ImGui packs it
 namespace ink {
 constexpr Colour rgb(unsigned r, unsigned g, unsigned b) { return 0xFF000000u | b << 16 | g << 8 | r; }
 inline constexpr Colour kDesk = rgb(232, 230, 221), kPaper = rgb(252, 251, 247), kEdge = rgb(190, 184, 160);
-inline constexpr Colour kText = rgb(32, 33, 36), kQuiet = rgb(104, 108, 116), kFaint = rgb(214, 212, 202);
+inline constexpr Colour kText = rgb(32, 33, 36), kQuiet = rgb(104, 108, 116), kFaint = rgb(214, 212, 202), kHint = rgb(150, 148, 138);
 inline constexpr Colour kBroken = rgb(156, 68, 18), kFormed = rgb(20, 92, 114), kTyped = rgb(30, 58, 152);
 inline constexpr Colour kCaution = rgb(138, 84, 0), kGood = rgb(36, 104, 46), kError = rgb(158, 26, 26);
 inline constexpr Colour kBand = rgb(240, 238, 226), kBox = rgb(255, 255, 255);

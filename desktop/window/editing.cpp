@@ -38,7 +38,9 @@ Rect App::edit_box() {
   Rect box = {placed->area.x + origin.x, placed->area.y + origin.y, placed->area.width, placed->area.height};
   if (editing_.empty()) return box;
   // A narrow cell lends its editor room: to the left for figures, to the right for words.
-  const float wanted = std::min(std::max(box.width, 110.0f), content_width());
+  // An equation takes the whole line.
+  const bool whole = placed->cell->kind == page::CellKind::Equation;
+  const float wanted = whole ? content_width() : std::min(std::max(box.width, 110.0f), content_width());
   if (placed->align == page::Align::Right) box.x = std::max(origin.x, box.right() - wanted);
   box.width = wanted;
   if (box.right() > origin.x + content_width()) box.x = origin.x + content_width() - wanted;

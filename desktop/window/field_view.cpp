@@ -31,7 +31,7 @@ void FieldView::draw(Canvas& canvas, const TextField& field, Rect box, Type type
   }
   const Rect line_box{left, top, inner + scroll_, line};
   if (text.empty()) {
-    canvas.text_in(line_box, type, ink::kEdge, page::Align::Left, hint);
+    canvas.text_in(line_box, type, ink::kHint, page::Align::Left, hint);
   } else {
     canvas.text_in(line_box, type, ink::kTyped, page::Align::Left, text);
   }

@@ -126,11 +126,12 @@ class Builder {
   void add_title(const page::Table& banner, const page::Table& form) {
     const float form_width = std::min(natural_form_width(form, fonts_), layout_.width * 0.5f);
     const float top = y_;
-    add(form, layout_.width - form_width, form_width);
-    const float form_bottom = y_;
-    y_ = top;
+    // The title first: reading order is the order in which Tab goes.
     add(banner, 0, layout_.width - form_width - kGap);
-    y_ = std::max(y_, form_bottom) + 10;
+    const float banner_bottom = y_;
+    y_ = top;
+    add(form, layout_.width - form_width, form_width);
+    y_ = std::max(y_, banner_bottom) + 10;
     layout_.fills.push_back({{0, y_, layout_.width, 2}, ink::kText});
     y_ += 2 + kAfterBlock;
   }

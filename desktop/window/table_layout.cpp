@@ -7,6 +7,7 @@ namespace heatledger::window {
 namespace {
 
 constexpr float kPad = 7;      // left and right of a cell's text
+constexpr float kHeadingRoom = 74;  // of a column's heading before it takes a second line
 constexpr float kIndent = 15;  // of the fold mark, and of detail lines under it
 
 std::string_view shown_text(const page::Cell& cell) { return cell.text.empty() ? cell.hint : cell.text; }
@@ -47,7 +48,7 @@ Type type_of(const page::Cell& cell, const page::Row& row, page::TableLook look)
 }
 
 Colour colour_of_cell(const page::Cell& cell) {
-  if (shows_hint(cell)) return ink::kEdge;
+  if (shows_hint(cell)) return ink::kHint;
   if (cell.kind == page::CellKind::Button) return ink::kText;
   if (cell.tone == page::Tone::Plain && cell.origin == page::Origin::Typed &&
       (cell.kind == page::CellKind::Number || cell.kind == page::CellKind::Choice)) {
@@ -78,7 +79,11 @@ float widest_word(const Fonts& fonts, Type type, std::string_view text) {
 std::vector<float> column_widths(const page::Table& table, const Fonts& fonts, float width) {
   const std::size_t count = table.columns.size();
   std::vector<float> natural(count, 0);
-  for (std::size_t i = 0; i < count; ++i) natural[i] = widest_word(fonts, Type::Small, table.columns[i].heading) + 2 * kPad;
+  for (std::size_t i = 0; i < count; ++i) {
+    // A heading may take two lines, but it is not broken into single words for the sake of a narrow figure.
+    const float whole = text_width(fonts, Type::Small, table.columns[i].heading);
+    natural[i] = std::max(std::min(whole, kHeadingRoom), widest_word(fonts, Type::Small, table.columns[i].heading)) + 2 * kPad + 1;
+  }
   bool folds = false;
   for (const page::Row& row : table.rows) folds = folds || !row.fold_id.empty();
   for (const page::Row& row : table.rows) {
@@ -155,7 +160,10 @@ class Grid {
       x += width;
     }
     lefts_.push_back(x);
-    for (const page::Row& row : table.rows) folds_ = folds_ || !row.fold_id.empty();
+    for (const page::Row& row : table.rows) {
+      folds_ = folds_ || !row.fold_id.empty();
+      for (const page::Cell& cell : row.cells) ruled_rows_ = ruled_rows_ || cell.editable || cell.kind == page::CellKind::Number;
+    }
   }
 
   float build() {
@@ -202,7 +210,8 @@ class Grid {
 
   void add_row(const page::Row& row, const page::Row* next) {
     const RowStyle style = style_of(row.role, table_.look);
-    if (row.role == page::RowRole::Subtotal) {
+    const bool first_sum = row.role == page::RowRole::Subtotal && !summed_;
+    if (first_sum) {
       rule(y_ - 1, 2, ink::kText);
       y_ += 1;
     }
@@ -234,9 +243,11 @@ class Grid {
     }
     if (row.role == page::RowRole::Result) layout_.fills.push_back({{place_.x, top, place_.width, height}, ink::kBand});
     y_ += height;
-    if (row.role == page::RowRole::Body || row.role == page::RowRole::Detail || row.role == page::RowRole::Subtotal) spine_end_ = y_;
+    // The spine parts broken from formed down to their sums; what follows is one figure.
+    if (first_sum || (!summed_ && (row.role == page::RowRole::Body || row.role == page::RowRole::Detail))) spine_end_ = y_;
+    summed_ = summed_ || first_sum;
     const bool before_detail = next != nullptr && next->role == page::RowRole::Detail;
-    const bool ruled = row.role == page::RowRole::Body || row.role == page::RowRole::Result ||
+    const bool ruled = (row.role == page::RowRole::Body && ruled_rows_) || row.role == page::RowRole::Result ||
                        (row.role == page::RowRole::Detail && !before_detail);
     if (ruled && !(row.role == page::RowRole::Body && before_detail)) {
       rule(y_, 1, ink::kFaint);
@@ -251,6 +262,8 @@ class Grid {
   float y_;
   std::vector<float> widths_, lefts_;
   bool folds_ = false;
+  bool summed_ = false;      ///< the first sum has been passed
+  bool ruled_rows_ = false;  ///< rows are parted by rules: not so in a list of plain sentences
   float spine_end_ = 0;
 };
 
@@ -273,7 +286,8 @@ float lay_out_form(const page::Table& table, const Fonts& fonts, Rect place, Lay
       if (placed.lines.lines.size() > 1) placed.lines.lines.resize(1);
       placed.area = {x, y, width, height};
       placed.text = {x + kPad, y + 3, width - 2 * kPad, line_height(Type::Small)};
-      if (!buttons) layout.frames.push_back({{x, y, width + 1, height + 1}, ink::kEdge});
+      const bool blank = cell.text.empty() && !cell.editable;
+      if (!buttons && !blank) layout.frames.push_back({{x, y, width + 1, height + 1}, ink::kEdge});
       if (width > 0) layout.cells.push_back(std::move(placed));
       x += width + (buttons && width > 0 ? 8 : 0);
     }

@@ -76,6 +76,15 @@ TEST(Species, EstimateOnlyLeavesTheTablesAside) {
   EXPECT_NEAR(estimated["gas_formation"]["value"].get<double>(), -444.5, estimated["gas_formation"]["u95"].get<double>());
 }
 
+TEST(Species, HeatCapacityOfAGasRisesAlongItsPolynomial) {
+  const json points = species_json("methane")["cp_gas"];
+  // NIST-JANAF, 4th ed. (1998), methane: 298.15 K 35.639, 1000 K 71.795 J/(mol K). The tolerances: 1 per cent, and at
+  // 1000 K the 1.2 per cent by which JANAF and the polynomials of NASA TM-4513 are known to differ, rounded up.
+  EXPECT_NEAR(points[0]["value"].get<double>(), 35.639, 0.36);
+  EXPECT_NEAR(points[5]["value"].get<double>(), 71.795, 1.2);
+  EXPECT_FALSE(points[6]["value"].is_null()) << "1500 K lies inside the polynomial";
+}
+
 TEST(Species, SmilesOptionDecidesBetweenTwoReadings) {
   EXPECT_EQ(species_json("CO")["formula"], "CO");
   EXPECT_EQ(species_json("CO", {"--smiles"})["formula"], "CH4O");
