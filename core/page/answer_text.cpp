@@ -133,6 +133,12 @@ Table ledger_table(const balance::Ledger& ledger) {
   result("Broken − formed, gas, 25 °C", ledger.gas_298, RowRole::Result);
   for (const balance::Correction& line : ledger.corrections) result(line.what, line.value, RowRole::Correction);
   result("As written, 25 °C", ledger.as_written, RowRole::Result);
+  if (!ledger.to_temperature.empty()) {
+    const balance::Route* taken = balance::find_route(ledger, ledger.taken);
+    if (taken != nullptr) result("The figure taken, by " + taken->name, taken->as_written, RowRole::Result);
+    for (const balance::Correction& line : ledger.to_temperature) result(line.what, line.value, RowRole::Correction);
+    result("As run", ledger.as_run, RowRole::Result);
+  }
   return table;
 }
 

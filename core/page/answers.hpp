@@ -13,7 +13,7 @@ namespace heatledger::page {
 
 enum class AnswerShape : std::uint8_t { Text, Json };
 
-/// Which route fills the two columns of the ledger.
+/// Whose figures the answer states as gas_298 and as_written. The two columns exist by average bonds only.
 enum class BondRoute : std::uint8_t { Average, Context };
 
 struct TallyQuestion {
@@ -22,6 +22,7 @@ struct TallyQuestion {
   BondRoute route = BondRoute::Average;
   std::string_view set;    ///< id of a published bond set; empty: the primary one
   std::string_view basis;  ///< see balance::LedgerOptions::basis
+  std::string_view reactants_at, products_at;  ///< temperatures as typed, "80 degC"; empty: 25 °C
 };
 
 struct SpeciesQuestion {
@@ -40,7 +41,7 @@ struct Answer {
 /// The ledger of one equation. JSON keys, energies in kJ for the written coefficients:
 /// balanced, equation, broken, broken_u95, formed, formed_u95, gas_298, corrections, as_written, as_run, per_mole_of,
 /// routes (null where a route has no figure; route_reasons says why), rows, cautions.
-/// @errors equation.*, species.*, smiles.*, formula.*, bond_set.unknown, ledger.basis_unknown
+/// @errors equation.*, species.*, smiles.*, formula.*, bond_set.unknown, ledger.basis_unknown, unit.*
 Result<Answer> answer_tally(const TallyQuestion& question, AnswerShape shape, balance::SpeciesSource& source);
 
 /// The figures of one compound: kJ/mol, J/(mol K), K. JSON keys: name, smiles, formula, molar_mass_g_mol,

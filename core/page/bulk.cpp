@@ -33,7 +33,9 @@ void write_failure(std::string_view id, const Error& error, std::string& out) {
 }  // namespace
 
 struct Bulk::State {
-  State(const BulkOptions& how, std::shared_ptr<const estimate::BondSet> set) : options(how), tally(std::move(set)) {}
+  State(const BulkOptions& how, std::shared_ptr<const estimate::BondSet> set) : options(how),
+        // By the average set the context route is left out: it costs fifty times the rest of the answer.
+        tally(std::move(set), how.route == BondRoute::Context ? balance::ContextUse::Always : balance::ContextUse::WhereNeeded) {}
 
   BulkOptions options;
   balance::QuickTally tally;
@@ -64,7 +66,8 @@ void Bulk::State::answer_equation(std::string& out) {
   }
   const Result<balance::QuickAnswer> answer = tally.tally(*question.equation);
   if (!answer.ok()) return write_failure(question.id, answer.error(), out);
-  const TallyFigures figures = tally_figures(*answer);
+  TallyFigures figures = tally_figures(*answer);
+  if (options.route == BondRoute::Context) figures = in_context(std::move(figures));
   JsonText json(out);
   json.open_object().key("id");
   question.id.empty() ? json.null() : json.raw(question.id);

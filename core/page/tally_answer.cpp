@@ -6,6 +6,7 @@
 #include "core/page/answers.hpp"
 #include "core/page/answer_text.hpp"
 #include "core/page/tally_figures.hpp"
+#include "core/units/quantity_text.hpp"
 
 namespace heatledger::page {
 namespace {
@@ -154,19 +155,10 @@ void write_basis(JsonText& json, const balance::Ledger& ledger, const TallyFigur
   json.close_object();
 }
 
-std::string ledger_json(const balance::Ledger& ledger) {
-  const balance::Reaction& reaction = *ledger.reaction;
-  const TallyFigures figures = tally_figures(ledger);
-  std::string text;
-  JsonText json(text);
-  json.open_object();
-  json.key("balanced").boolean(reaction.balance.balanced);
-  json.key("equation").string(balance::plain_equation(reaction));
-  write_columns(json, figures);
-  json.key("gas_298");
-  write_kilojoules(json, figures.gas_298, figures.gas_298 ? std::string() : columns_reason(ledger));
-  json.key("corrections").open_array();
-  for (const balance::Correction& line : ledger.corrections) {
+/// Each line {what, value, u95, source} in kJ, or with null and the reason.
+void write_lines(JsonText& json, std::string_view name, const std::vector<balance::Correction>& lines) {
+  json.key(name).open_array();
+  for (const balance::Correction& line : lines) {
     json.open_object().key("what").string(line.what);
     if (line.value) {
       json.key("value").number(line.value->value() / 1000).key("u95").number(line.value->u95() / 1000);
@@ -177,21 +169,49 @@ std::string ledger_json(const balance::Ledger& ledger) {
     json.close_object();
   }
   json.close_array();
+}
+
+std::string as_run_reason(const balance::Ledger& ledger) {
+  if (ledger.to_temperature.empty()) return "no temperatures were given";
+  for (const balance::Correction& line : ledger.to_temperature) {
+    if (!line.value) return line.what + ": " + line.why_not;
+  }
+  return "no figure to take as written";
+}
+
+std::string context_reason(const balance::Ledger& ledger) {
+  const balance::Route* route = balance::find_route(ledger, balance::kContextRoute);
+  return route != nullptr ? route->why_not : "no estimate by bonds in context for this equation";
+}
+
+std::string ledger_json(const balance::Ledger& ledger, BondRoute by) {
+  const balance::Reaction& reaction = *ledger.reaction;
+  const bool context = by == BondRoute::Context;
+  const TallyFigures figures = context ? in_context(tally_figures(ledger)) : tally_figures(ledger);
+  std::string text;
+  JsonText json(text);
+  json.open_object();
+  json.key("balanced").boolean(reaction.balance.balanced);
+  json.key("equation").string(balance::plain_equation(reaction));
+  write_columns(json, figures);
+  if (context) json.key("columns_reason").string("bonds in context are given as a whole; the columns belong to the average set");
+  json.key("gas_298");
+  write_kilojoules(json, figures.gas_298, context ? context_reason(ledger) : columns_reason(ledger));
+  write_lines(json, "corrections", ledger.corrections);
   json.key("as_written");
-  write_kilojoules(json, figures.as_written, figures.as_written ? std::string() : corrections_reason(ledger));
+  write_kilojoules(json, figures.as_written, context ? context_reason(ledger) : corrections_reason(ledger));
+  write_lines(json, "to_temperature", ledger.to_temperature);
   json.key("as_run");
-  write_kilojoules(json, std::nullopt, "the equation states no temperatures");
+  write_kilojoules(json, figure_of(ledger.as_run), as_run_reason(ledger));
   write_basis(json, ledger, figures);
   json.key("routes").open_object();
   write_routes(json, figures);
   json.close_object();
   json.key("route_reasons").open_object();
-  bool context_named = false;
   for (const balance::Route& route : ledger.routes) {
-    if (route.name == "context") context_named = true;
-    if (!route.as_written) json.key(route.name).string(route.why_not);
+    if (!route.as_written && route.name != balance::kContextRoute) json.key(route.name).string(route.why_not);
   }
-  if (!context_named) json.key("context").string("no estimate by bonds in context for this equation");
+  if (!figures.context) json.key("context").string(context_reason(ledger));
   json.close_object();
   json.key("bond_set").string(ledger.set->title());
   json.key("rows").open_array();
@@ -241,6 +261,20 @@ Result<Answer> answer_tally(const TallyQuestion& question, AnswerShape shape, ba
   balance::LedgerOptions options;
   options.set = std::make_shared<const estimate::BondSet>(std::move(set.value()));
   options.basis = std::string(question.basis);
+  options.context = balance::ContextUse::Always;
+  const auto read_temperature = [](std::string_view typed, std::string_view name, std::optional<double>& kelvin) -> Status {
+    if (typed.empty()) return success();
+    const Result<units::TypedValue> value = units::parse_quantity(typed, units::dimension::kTemperature);
+    if (!value.ok()) {
+      Error error = value.error();
+      error.where = std::string(name) + ", " + error.where;
+      return error;
+    }
+    kelvin = value->value;
+    return success();
+  };
+  if (const Status status = read_temperature(question.reactants_at, "reactants_at", options.reactants_at); !status.ok()) return status.error();
+  if (const Status status = read_temperature(question.products_at, "products_at", options.products_at); !status.ok()) return status.error();
   Result<balance::Ledger> ledger = balance::make_ledger(reaction, options);
   if (!ledger.ok()) {
     if (ledger.error().code != "ledger.not_balanced") return ledger.error();
@@ -248,7 +282,7 @@ Result<Answer> answer_tally(const TallyQuestion& question, AnswerShape shape, ba
     std::string text = shape == AnswerShape::Json ? unbalanced_json(*reaction, error) : unbalanced_text(*reaction);
     return Answer{std::move(text), error};
   }
-  std::string text = shape == AnswerShape::Json ? ledger_json(*ledger) : ledger_text(*ledger);
+  std::string text = shape == AnswerShape::Json ? ledger_json(*ledger, question.route) : ledger_text(*ledger);
   return Answer{std::move(text), std::nullopt};
 }
 

@@ -31,7 +31,10 @@ TallyFigures tally_figures(const balance::Ledger& ledger) {
   for (const balance::Route& route : ledger.routes) {
     const MaybeFigure figure = figure_of(route.as_written);
     if (route.name == "average") figures.average = figure;
-    if (route.name == "context") figures.context = figure;
+    if (route.name == balance::kContextRoute) {
+      figures.context = figure;
+      figures.context_gas_298 = figure_of(route.gas_298);
+    }
     if (route.name == "formation") figures.formation = figure;
     if (route.name == "measured") figures.measured = figure;
     if (route.name == ledger.taken) figures.taken = figure;
@@ -47,8 +50,20 @@ TallyFigures tally_figures(const balance::QuickAnswer& answer) {
   figures.gas_298 = answer.gas_298;
   figures.as_written = figures.average = answer.as_written;
   figures.formation = answer.formation;
+  figures.context = answer.context;
+  figures.context_gas_298 = answer.context_gas_298;
   figures.taken_route = answer.taken;
-  figures.taken = answer.taken == balance::kFormationRoute ? answer.formation : answer.as_written;
+  figures.taken = answer.taken == balance::kFormationRoute ? answer.formation
+                  : answer.taken == balance::kContextRoute ? answer.context
+                                                           : answer.as_written;
+  return figures;
+}
+
+TallyFigures in_context(TallyFigures figures) {
+  figures.broken.reset();
+  figures.formed.reset();
+  figures.gas_298 = figures.context_gas_298;
+  figures.as_written = figures.context;
   return figures;
 }
 

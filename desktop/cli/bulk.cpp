@@ -133,7 +133,7 @@ void add_bulk(CLI::App& app, Chosen& chosen) {
   CLI::App* command = app.add_subcommand(
       "bulk", "Answers questions from standard input, one JSON object a line in, one out, in order");
   const auto options = std::make_shared<Options>();
-  command->add_option("--set", options->set, "How bonds are priced: average bonds, or bonds in context")
+  command->add_option("--set", options->set, "Whose figures to state: average bonds (routes.context is left out), or bonds in context")
       ->check(CLI::IsMember({"average", "context"}))
       ->capture_default_str();
   command->add_flag("--full", options->full, "Whole answers, as `tally --json` and `species --json` give them");

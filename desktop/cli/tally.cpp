@@ -11,7 +11,7 @@ namespace heatledger::cli {
 namespace {
 
 struct Options {
-  std::string equation, set = "average", table, basis;
+  std::string equation, set = "average", table, basis, reactants_at, products_at;
   bool json = false, smiles = false;
 };
 
@@ -28,6 +28,8 @@ int run(const Options& options) {
   question.route = options.set == "context" ? page::BondRoute::Context : page::BondRoute::Average;
   question.set = options.table;
   question.basis = options.basis;
+  question.reactants_at = options.reactants_at;
+  question.products_at = options.products_at;
   balance::CachedSpecies source;
   const Result<page::Answer> answer =
       page::answer_tally(question, options.json ? page::AnswerShape::Json : page::AnswerShape::Text, source);
@@ -47,11 +49,13 @@ void add_tally(CLI::App& app, Chosen& chosen) {
                       "\"nitrobenzene(l) + 3 H2 -> aniline(l) + 2 H2O(l)\": names, formulas, SMILES in double quotes; "
                       "- reads it from standard input")
       ->required();
-  command->add_option("--set", options->set, "How bonds are priced: average bonds, or bonds in context")
+  command->add_option("--set", options->set, "Whose figures to state: average bonds, or bonds in context")
       ->check(CLI::IsMember({"average", "context"}))
       ->capture_default_str();
   command->add_option("--table", options->table, "Published table of average bonds; the primary one if not given");
   command->add_option("--basis", options->basis, "Also state it per mole of SPECIES, or per \"kg SPECIES\", or per \"kg reactants\"");
+  command->add_option("--reactants-at", options->reactants_at, "Temperature of what goes in, \"80 degC\"; 25 degC if not given")->type_name("T");
+  command->add_option("--products-at", options->products_at, "Temperature of what comes out")->type_name("T");
   command->add_flag("--smiles", options->smiles, "Every species is SMILES, as if in double quotes");
   command->add_flag("--json", options->json, "One JSON object: kJ for the written coefficients");
   command->callback([options, &chosen] { chosen = [options] { return run(*options); }; });

@@ -131,11 +131,28 @@ TEST(Tally, TextIsTheSameLedger) {
   }
 }
 
-TEST(Tally, ContextFillsItsRoute) {
+TEST(Tally, ContextStatesItsOwnFigures) {
   const json answer = tally_json(kHydrogenation, {"--set", "context"});
-  const bool figure = !answer["routes"]["context"].is_null();
-  const bool reason = answer["route_reasons"].contains("context") && !answer["route_reasons"]["context"].get<std::string>().empty();
-  EXPECT_NE(figure, reason) << "either a figure or the reason why there is none";
+  ASSERT_FALSE(answer["routes"]["context"].is_null());
+  EXPECT_EQ(answer["as_written"]["value"], answer["routes"]["context"]["value"]);
+  EXPECT_TRUE(answer["broken"].is_null());
+  // -552.6 kJ/mol from CRC formation enthalpies; the estimate's own 95 % interval must reach it.
+  EXPECT_NEAR(answer["as_written"]["value"].get<double>(), -552.6, answer["as_written"]["u95"].get<double>());
+}
+
+TEST(Tally, TemperaturesGiveTheFigureAsRun) {
+  const json cold = tally_json("CH4 + 2 O2 -> CO2 + 2 H2O");
+  EXPECT_TRUE(cold["as_run"]["value"].is_null());
+  EXPECT_FALSE(cold["as_run"]["reason"].get<std::string>().empty());
+  const json hot = tally_json("CH4 + 2 O2 -> CO2 + 2 H2O", {"--products-at", "1000 K"});
+  double sum = hot["routes"]["taken"]["value"].get<double>();
+  for (const json& line : hot["to_temperature"]) sum += line["value"].get<double>();
+  EXPECT_NEAR(hot["as_run"]["value"].get<double>(), sum, 1e-5);
+  // NIST-JANAF, 4th ed.: H(1000 K) - H(298.15 K) of CO2 33.397, of H2O 26.000 kJ/mol; together 85.40 with two of water.
+  // The tolerance is the 1 per cent between that table and the polynomials.
+  EXPECT_NEAR(hot["as_run"]["value"].get<double>() - hot["routes"]["taken"]["value"].get<double>(), 85.40, 0.9);
+  const Ran bare = heatledger({"tally", "H2 -> H2", "--products-at", "80"});
+  EXPECT_EQ(bare.status, 1);
 }
 
 }  // namespace
