@@ -168,8 +168,9 @@ Table routes_table(const balance::Ledger& ledger) {
 std::string basis_line(const balance::Ledger& ledger) {
   for (const balance::Route& route : ledger.routes) {
     if (route.name != ledger.taken || !route.as_written) continue;
-    const uncertainty::Figure figure = route.as_written->scaled(ledger.basis.factor / 1000).figure();
-    return units::figure_text(figure, kMostDecimals) + " " + ledger.basis.unit + " " + ledger.basis.text + ", by " + route.name;
+    const KilojouleText text = kilojoules(balance::on_basis(*route.as_written, ledger.basis).figure());
+    const std::string figure = text.interval.empty() ? text.value : text.value + " ± " + text.interval;
+    return figure + " " + ledger.basis.unit + " " + ledger.basis.text + ", by " + route.name;
   }
   return {};
 }

@@ -148,12 +148,17 @@ SpeciesFigures species_figures(std::shared_ptr<const facts::Species> species, bo
     cp_liquid = from_table(compound->liquid.heat_capacity, not_tabulated);
     cp_gas = from_table(compound->gas.heat_capacity, not_tabulated);
   }
+  // Nothing is estimated of a liquid that cannot be there.
+  const bool no_liquid = it.compound != nullptr && it.compound->critical_temperature &&
+                         it.compound->critical_temperature->value < units::kReferenceTemperature;
+  const StatedFigure above_critical = none("no liquid at 298.15 K: that is above its critical temperature");
+  const auto of_liquid = [&](Property property) { return no_liquid ? above_critical : in_context(property); };
   const StatedFigure average = average_formation(it);
   figures.gas_formation = table_or(table_or(gas, in_context(Property::GasFormation)), average);
   if (average.figure && figures.gas_formation.route != "average") figures.average_gas_formation = average;
-  figures.vaporisation_298 = table_or(vaporisation, in_context(Property::Vaporisation298));
+  figures.vaporisation_298 = table_or(vaporisation, of_liquid(Property::Vaporisation298));
   figures.liquid_formation = table_or(liquid, liquid_from(figures.gas_formation, figures.vaporisation_298));
-  figures.cp_liquid_298 = table_or(cp_liquid, in_context(Property::LiquidHeatCapacity298));
+  figures.cp_liquid_298 = table_or(cp_liquid, of_liquid(Property::LiquidHeatCapacity298));
   for (const double temperature : kGasTemperatures) {
     StatedFigure table = temperature == units::kReferenceTemperature ? cp_gas : nothing;
     if (!table.figure && polynomial != nullptr) table = from_polynomial(*polynomial, temperature);
