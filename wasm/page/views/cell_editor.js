@@ -120,7 +120,7 @@ export class CellEditor {
     const {list, field} = at;
     /** @type {(() => void) | null} */
     let act = null;
-    if (event.key === "Enter") act = () => list.take() || this.finish(field.readOnly ? "stay" : "down");
+    if (event.key === "Enter") act = () => list.take() || this.finish(cellData(at.td)?.kind === "number" ? "down" : "stay");
     else if (event.key === "Tab") act = () => this.finish(event.shiftKey ? "previous" : "next");
     else if (event.key === "Escape") act = () => (list.open && !field.readOnly ? list.close() : this.cancel());
     else if (event.key === "ArrowDown" || event.key === "ArrowUp") {
