@@ -19,10 +19,15 @@ std::string& answer() {
 
 extern "C" {
 
-/// Room for a request of `size` bytes; the caller writes UTF-8 there and gives it back with heatledger_release.
-char* heatledger_allocate(std::size_t size) { return static_cast<char*>(std::malloc(size > 0 ? size : 1)); }
+/// Room for a request of `size` bytes; the caller writes UTF-8 there and gives it back with
+/// heatledger_release.
+char* heatledger_allocate(std::size_t size) {
+  return static_cast<char*>(std::malloc(size > 0 ? size : 1));
+}
 
-void heatledger_release(char* bytes) { std::free(bytes); }
+void heatledger_release(char* bytes) {
+  std::free(bytes);
+}
 
 /// Answers one request. @return first byte of the answer (UTF-8 JSON), valid until the next call
 const char* heatledger_handle_request(const char* text, std::size_t size) {
@@ -31,5 +36,7 @@ const char* heatledger_handle_request(const char* text, std::size_t size) {
 }
 
 /// Length of the last answer in bytes.
-std::size_t heatledger_answer_size() { return answer().size(); }
+std::size_t heatledger_answer_size() {
+  return answer().size();
+}
 }

@@ -32,7 +32,9 @@ std::optional<std::size_t> find_species(const Reaction& reaction, std::string_vi
 }
 
 Error no_mass(const ReactionSpecies& entry) {
-  return Error{"ledger.no_molar_mass", "The molar mass of " + entry.species->name + " is not known, so nothing can be stated per kilogram of it.",
+  return Error{"ledger.no_molar_mass",
+               "The molar mass of " + entry.species->name +
+                   " is not known, so nothing can be stated per kilogram of it.",
                "basis", "State the figure per mole, or give the species a formula or a molar mass."};
 }
 
@@ -70,7 +72,8 @@ Result<Basis> find_basis(const Reaction& reaction, std::string_view name) {
     for (const BasisChoice& choice : basis_choices(reaction)) {
       if (!choice.name.empty()) known += (known.empty() ? "" : ", ") + choice.name;
     }
-    return Error{"ledger.basis_unknown", "\"" + std::string(name) + "\" is no species of this equation.", "basis", "Choose one of: " + known + "."};
+    return Error{"ledger.basis_unknown", "\"" + std::string(name) + "\" is no species of this equation.",
+                 "basis", "Choose one of: " + known + "."};
   }
   const ReactionSpecies& entry = reaction.species[*found];
   basis.species = *found;

@@ -27,22 +27,37 @@ int spoken_place(int element) {
 
 std::string bond_label(const BondType& type) {
   switch (type.setting) {
-    case Setting::CarbonDioxide: return "C=O of CO₂";
-    case Setting::CarbonMonoxide: return "C≡O of CO";
-    case Setting::NitricOxide: return "NO, order 2.5";
-    case Setting::NitrogenDioxide: return "each bond of NO₂";
-    case Setting::Ozone: return "each bond of O₃";
-    case Setting::AromaticRing: return type.first == 6 && type.second == 6 ? "C–C in aromatic ring" : "C–N in aromatic ring";
-    default: break;
+    case Setting::CarbonDioxide:
+      return "C=O of CO₂";
+    case Setting::CarbonMonoxide:
+      return "C≡O of CO";
+    case Setting::NitricOxide:
+      return "NO, order 2.5";
+    case Setting::NitrogenDioxide:
+      return "each bond of NO₂";
+    case Setting::Ozone:
+      return "each bond of O₃";
+    case Setting::AromaticRing:
+      return type.first == 6 && type.second == 6 ? "C–C in aromatic ring" : "C–N in aromatic ring";
+    default:
+      break;
   }
   int left = type.first, right = type.second;
   if (spoken_place(right) < spoken_place(left)) std::swap(left, right);
   std::string label(molecule::symbol(left));
   switch (type.order) {
-    case Order::Double: label += "="; break;
-    case Order::Triple: label += "≡"; break;
-    case Order::Quadruple: label += "≣"; break;
-    default: label += "–"; break;
+    case Order::Double:
+      label += "=";
+      break;
+    case Order::Triple:
+      label += "≡";
+      break;
+    case Order::Quadruple:
+      label += "≣";
+      break;
+    default:
+      label += "–";
+      break;
   }
   label += molecule::symbol(right);
   return label;
@@ -54,7 +69,9 @@ std::string ledger_kj(double joules) {
   return display_number(value, whole ? 0 : 1);
 }
 
-std::string fine_kj(double joules) { return display_signed(joules / kJ, 2); }
+std::string fine_kj(double joules) {
+  return display_signed(joules / kJ, 2);
+}
 
 std::string kj_with_u95(const uncertainty::Quantity& quantity, const std::string& unit) {
   const double u95 = quantity.u95() / kJ;
@@ -64,6 +81,8 @@ std::string kj_with_u95(const uncertainty::Quantity& quantity, const std::string
   return text + " " + unit;
 }
 
-std::string times_text(double coefficient) { return machine_number(coefficient, 6); }
+std::string times_text(double coefficient) {
+  return machine_number(coefficient, 6);
+}
 
 }  // namespace heatledger::balance

@@ -13,7 +13,9 @@ namespace {
 /// Beyond this many pairs the search for two slips stops: it is then only said that there is more than one.
 constexpr std::size_t kMostPairs = 200000;
 
-bool matches(const TypedCell& cell, double value) { return std::fabs(cell.theirs - value) <= cell.tolerance; }
+bool matches(const TypedCell& cell, double value) {
+  return std::fabs(cell.theirs - value) <= cell.tolerance;
+}
 
 class Search {
  public:
@@ -26,7 +28,8 @@ class Search {
   const std::vector<TypedCell>& typed() const { return typed_; }
 
   bool explained_by(const std::vector<double>& values) const {
-    return std::all_of(typed_.begin(), typed_.end(), [&values](const TypedCell& cell) { return matches(cell, values[cell.node]); });
+    return std::all_of(typed_.begin(), typed_.end(),
+                       [&values](const TypedCell& cell) { return matches(cell, values[cell.node]); });
   }
   bool agrees() const { return explained_by(base_); }
 
@@ -56,7 +59,8 @@ class Search {
     return found;
   }
 
-  /// Two slips that together explain every typed figure; empty when none do or too many would have to be tried.
+  /// Two slips that together explain every typed figure; empty when none do or too many would have to be
+  /// tried.
   std::vector<Slip> pair() {
     std::vector<Candidate> all = candidates();
     for (Candidate& candidate : mixed_tables(ledger_, model_)) all.push_back(std::move(candidate));
@@ -120,7 +124,8 @@ std::vector<TypedCell> read_entries(const Ledger& ledger, const SheetModel& mode
     cell.cell = entry.first;
     cell.node = *node;
     cell.theirs = figure->kilojoules;
-    // Half a unit of the last digit typed. Below the phase corrections each of them may have been rounded too.
+    // Half a unit of the last digit typed. Below the phase corrections each of them may have been rounded
+    // too.
     cell.tolerance = 0.5 * figure->last_digit * (1 + 1e-6) + 1e-6;
     if (*node == model.as_written || *node == model.as_written_on_basis) {
       cell.tolerance += 0.5 * figure->last_digit * static_cast<double>(model.phases.size()) *
@@ -128,7 +133,8 @@ std::vector<TypedCell> read_entries(const Ledger& ledger, const SheetModel& mode
     }
     typed.push_back(std::move(cell));
   }
-  std::sort(typed.begin(), typed.end(), [](const TypedCell& a, const TypedCell& b) { return a.node < b.node; });
+  std::sort(typed.begin(), typed.end(),
+            [](const TypedCell& a, const TypedCell& b) { return a.node < b.node; });
   return typed;
 }
 
@@ -170,7 +176,8 @@ void write_lines(const Search& search, const SheetModel& model, Review& review) 
         line.verdict = first ? Verdict::Slip : Verdict::Follows;
         line.finding = first ? capital(review.slips[0].words) : "follows from the slip above";
       }
-      if (is_price(model, cell.node) && line.verdict == Verdict::MoreThanOneSlip) line.finding = "another price: " + line.difference_text;
+      if (is_price(model, cell.node) && line.verdict == Verdict::MoreThanOneSlip)
+        line.finding = "another price: " + line.difference_text;
       first = false;
     }
     review.lines.push_back(std::move(line));
@@ -201,7 +208,8 @@ bool try_other_tables(const Ledger& ledger, const std::vector<TypedCell>& typed,
   }
   if (with_slip.empty()) return false;
   review.slips.assign(1, with_slip[0]);
-  review.summary = "A different table, \"" + with_slip_table + "\", and one slip: " + with_slip[0].words + ".";
+  review.summary =
+      "A different table, \"" + with_slip_table + "\", and one slip: " + with_slip[0].words + ".";
   return true;
 }
 
@@ -223,13 +231,16 @@ void explain(const Ledger& ledger, Search& search, Review& review) {
     review.slips.assign(1, singles[0]);
     review.alternatives.assign(singles.begin() + 1, singles.end());
     review.summary = capital(singles[0].words) + ".";
-    if (!review.alternatives.empty()) review.summary += " The figures typed would also allow: " + review.alternatives[0].words + ".";
+    if (!review.alternatives.empty())
+      review.summary += " The figures typed would also allow: " + review.alternatives[0].words + ".";
     return;
   }
   review.more_than_one = true;
   review.slips = search.pair();
   review.summary = "No single slip explains the sheet: there is more than one.";
-  if (!review.slips.empty()) review.summary = "More than one slip; two that fit: " + review.slips[0].words + ", and " + review.slips[1].words + ".";
+  if (!review.slips.empty())
+    review.summary =
+        "More than one slip; two that fit: " + review.slips[0].words + ", and " + review.slips[1].words + ".";
 }
 
 }  // namespace

@@ -10,8 +10,12 @@ using molecule::Phase;
 using molecule::Strength;
 using molecule::Term;
 
-bool is_digit(char c) { return c >= '0' && c <= '9'; }
-bool is_letter(char c) { return (c >= 'A' && c <= 'Z') || (c >= 'a' && c <= 'z'); }
+bool is_digit(char c) {
+  return c >= '0' && c <= '9';
+}
+bool is_letter(char c) {
+  return (c >= 'A' && c <= 'Z') || (c >= 'a' && c <= 'z');
+}
 
 /// Whether a typed text is the formula of the species, so that its digits are counts to be set low.
 bool reads_as_formula(const ReactionSpecies& entry) {
@@ -85,10 +89,17 @@ std::string phase_suffix(const Term& term) {
   std::string text = "(" + std::string(molecule::phase_text(term.phase));
   if (term.strength) {
     switch (term.strength->kind) {
-      case Strength::Kind::InfiniteDilution: break;
-      case Strength::Kind::MassFraction: text += ", " + machine_number(term.strength->value * 100, 8) + " wt%"; break;
-      case Strength::Kind::WaterRatio: text += ", r=" + machine_number(term.strength->value, 8); break;
-      case Strength::Kind::Molality: text += ", " + machine_number(term.strength->value, 8) + " mol/kg"; break;
+      case Strength::Kind::InfiniteDilution:
+        break;
+      case Strength::Kind::MassFraction:
+        text += ", " + machine_number(term.strength->value * 100, 8) + " wt%";
+        break;
+      case Strength::Kind::WaterRatio:
+        text += ", r=" + machine_number(term.strength->value, 8);
+        break;
+      case Strength::Kind::Molality:
+        text += ", " + machine_number(term.strength->value, 8) + " mol/kg";
+        break;
     }
   }
   return text + ")";
@@ -100,7 +111,8 @@ std::string display_species(const ReactionSpecies& entry) {
 }
 
 std::string display_equation(const Reaction& reaction) {
-  return join(reaction, reaction.reversible ? "⇌" : "→", [](const ReactionSpecies& entry) { return display_species(entry); });
+  return join(reaction, reaction.reversible ? "⇌" : "→",
+              [](const ReactionSpecies& entry) { return display_species(entry); });
 }
 
 std::string plain_equation(const Reaction& reaction) {

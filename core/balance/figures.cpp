@@ -22,7 +22,8 @@ void add_to(std::optional<Quantity>& sum, const std::optional<Quantity>& part, d
   }
 }
 
-/// Elements and what the model does not cover keep their table value; the rest is estimated as gas and brought into its phase.
+/// Elements and what the model does not cover keep their table value; the rest is estimated as gas and
+/// brought into its phase.
 void add_context(const facts::Species& species, bool by_bonds, SpeciesFigures& figures) {
   const bool element = species.compound != nullptr && species.compound->reference_element;
   const Result<thermo::Sourced> gas = thermo::estimated_formation(species, Phase::Gas);
@@ -38,10 +39,12 @@ void add_context(const facts::Species& species, bool by_bonds, SpeciesFigures& f
 
 }  // namespace
 
-SpeciesFigures species_figures(const facts::Species& species, const molecule::Term& written, const estimate::BondSet& set, ContextUse context) {
+SpeciesFigures species_figures(const facts::Species& species, const molecule::Term& written,
+                               const estimate::BondSet& set, ContextUse context) {
   const bool may_estimate = context != ContextUse::Never;
   const auto formation_of = [&](Phase phase) {
-    return may_estimate ? thermo::best_formation(species, phase, written.strength) : thermo::tabulated_formation(species, phase, written.strength);
+    return may_estimate ? thermo::best_formation(species, phase, written.strength)
+                        : thermo::tabulated_formation(species, phase, written.strength);
   };
   SpeciesFigures figures;
   figures.priced = price_species(species, written, set);
@@ -82,7 +85,8 @@ EquationFigures add_up(const std::vector<Entry>& entries) {
   sums.gas_298->add(*sums.formed, -1);
   sums.as_written = sums.gas_298;
   for (const Entry& entry : entries) {
-    if (entry.figures->corrected) add_to(sums.as_written, entry.figures->to_phase, entry.signed_coefficient());
+    if (entry.figures->corrected)
+      add_to(sums.as_written, entry.figures->to_phase, entry.signed_coefficient());
   }
   return sums;
 }

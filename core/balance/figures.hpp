@@ -1,5 +1,5 @@
-// The arithmetic of a ledger without its texts: shared by make_ledger and by the quick tally, so that both give the same
-// digits.
+// The arithmetic of a ledger without its texts: shared by make_ledger and by the quick tally, so that both
+// give the same digits.
 #pragma once
 
 #include <optional>
@@ -12,15 +12,18 @@ namespace heatledger::balance {
 /// Figures of one species in one phase that do not depend on the reaction it stands in; per mole.
 struct SpeciesFigures {
   PricedSpecies priced;
-  bool corrected = false;                              ///< the phase written is not the one its bond sum belongs to
-  std::optional<uncertainty::Quantity> to_phase;       ///< gas to the phase written [J/mol]; empty: no data
-  std::optional<uncertainty::Quantity> formation;      ///< ΔfH in the phase taken [J/mol]
-  std::optional<uncertainty::Quantity> formation_row;  ///< ΔfH in the phase that the bond sum belongs to [J/mol]
-  bool formation_estimated = false;                    ///< no table has `formation`: bonds in context
-  std::optional<uncertainty::Quantity> context, context_row;  ///< as `formation`, by bonds in context (ContextUse::Always)
+  bool corrected = false;  ///< the phase written is not the one its bond sum belongs to
+  std::optional<uncertainty::Quantity> to_phase;   ///< gas to the phase written [J/mol]; empty: no data
+  std::optional<uncertainty::Quantity> formation;  ///< ΔfH in the phase taken [J/mol]
+  std::optional<uncertainty::Quantity>
+      formation_row;                 ///< ΔfH in the phase that the bond sum belongs to [J/mol]
+  bool formation_estimated = false;  ///< no table has `formation`: bonds in context
+  std::optional<uncertainty::Quantity> context,
+      context_row;  ///< as `formation`, by bonds in context (ContextUse::Always)
 };
 
-SpeciesFigures species_figures(const facts::Species& species, const molecule::Term& written, const estimate::BondSet& set, ContextUse context);
+SpeciesFigures species_figures(const facts::Species& species, const molecule::Term& written,
+                               const estimate::BondSet& set, ContextUse context);
 
 /// One species of an equation with its figures.
 struct Entry {

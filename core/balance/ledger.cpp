@@ -15,18 +15,20 @@ namespace {
 using molecule::Phase;
 using uncertainty::Quantity;
 
-Correction phase_correction(const Reaction& reaction, std::size_t index, const SpeciesFigures& figures, bool may_estimate,
-                            std::vector<std::string>& cautions) {
+Correction phase_correction(const Reaction& reaction, std::size_t index, const SpeciesFigures& figures,
+                            bool may_estimate, std::vector<std::string>& cautions) {
   const ReactionSpecies& entry = reaction.species[index];
   const Phase phase = figures.priced.phase;
   Correction correction;
   correction.species = index;
   correction.times = entry.coefficient();
   const std::string gas = "gas", other(thermo::phase_word(phase));
-  correction.what = display_species(entry) + ", " + (entry.product ? gas + " to " + other : other + " to " + gas);
+  correction.what =
+      display_species(entry) + ", " + (entry.product ? gas + " to " + other : other + " to " + gas);
   if (correction.times != 1) correction.what += ", " + times_text(correction.times) + " ×";
-  const Result<thermo::Sourced> change = may_estimate ? thermo::best_gas_to_phase(*entry.species, phase, entry.term.strength)
-                                                      : thermo::gas_to_phase(*entry.species, phase, entry.term.strength);
+  const Result<thermo::Sourced> change =
+      may_estimate ? thermo::best_gas_to_phase(*entry.species, phase, entry.term.strength)
+                   : thermo::gas_to_phase(*entry.species, phase, entry.term.strength);
   if (!change.ok()) {
     correction.why_not = change.error().message;
     return correction;
@@ -35,8 +37,9 @@ Correction phase_correction(const Reaction& reaction, std::size_t index, const S
   correction.value = change->value.scaled(times);
   correction.source = change->source;
   correction.working = change->working;
-  correction.working.push_back(times_text(correction.times) + " × " + fine_kj((entry.product ? 1 : -1) * change->value.value()) +
-                               " = " + fine_kj(correction.value->value()) + " kJ");
+  correction.working.push_back(times_text(correction.times) + " × " +
+                               fine_kj((entry.product ? 1 : -1) * change->value.value()) + " = " +
+                               fine_kj(correction.value->value()) + " kJ");
   cautions.insert(cautions.end(), change->cautions.begin(), change->cautions.end());
   return correction;
 }
@@ -50,7 +53,8 @@ void note_phases(Ledger& ledger) {
     if (row.phase == Phase::Gas) {
       gas += (gas.empty() ? "" : ", ") + display_species(entry);
     } else {
-      other += (other.empty() ? "" : ", ") + display_species(entry) + " as " + std::string(thermo::phase_word(row.phase));
+      other += (other.empty() ? "" : ", ") + display_species(entry) + " as " +
+               std::string(thermo::phase_word(row.phase));
     }
   }
   if (gas.empty() && other.empty()) return;
@@ -66,24 +70,28 @@ void note_set(Ledger& ledger) {
     for (const BondLine& line : row.lines) {
       priced = priced || line.price != nullptr;
       typed = typed || (line.price != nullptr && line.price->origin == estimate::BondOrigin::User) ||
-              (line.second && line.second->price != nullptr && line.second->price->origin == estimate::BondOrigin::User);
+              (line.second && line.second->price != nullptr &&
+               line.second->price->origin == estimate::BondOrigin::User);
     }
   }
   if (priced) ledger.notes.emplace_back(estimate::BondSet::spread_remark());
-  if (typed) ledger.notes.emplace_back("Typed bond values act in this ledger; the lines that use them say so.");
+  if (typed)
+    ledger.notes.emplace_back("Typed bond values act in this ledger; the lines that use them say so.");
 }
 
 }  // namespace
 
-Quantity on_basis(const Quantity& quantity, const Basis& basis) { return quantity.scaled(basis.factor); }
+Quantity on_basis(const Quantity& quantity, const Basis& basis) {
+  return quantity.scaled(basis.factor);
+}
 
 Result<Ledger> make_ledger(std::shared_ptr<const Reaction> reaction, const LedgerOptions& options) {
   CHECK(reaction != nullptr && options.set != nullptr, "a ledger has a reaction and a bond set");
   if (reaction->checkable && !reaction->balance.balanced) return not_balanced(*reaction);
-  if (!options.pinned_route.empty() && options.pinned_route != kAverageRoute && options.pinned_route != kFormationRoute &&
-      options.pinned_route != kContextRoute) {
-    return Error{"ledger.route_unknown", "There is no route \"" + options.pinned_route + "\".", "pinned_route",
-                 "Choose average, context or formation, or leave it empty."};
+  if (!options.pinned_route.empty() && options.pinned_route != kAverageRoute &&
+      options.pinned_route != kFormationRoute && options.pinned_route != kContextRoute) {
+    return Error{"ledger.route_unknown", "There is no route \"" + options.pinned_route + "\".",
+                 "pinned_route", "Choose average, context or formation, or leave it empty."};
   }
   Result<Basis> basis = find_basis(*reaction, options.basis);
   if (!basis.ok()) return basis.error();
@@ -102,7 +110,9 @@ Result<Ledger> make_ledger(std::shared_ptr<const Reaction> reaction, const Ledge
     entries[i].product = species[i].product;
     entries[i].figures = &figures[i];
     ledger.rows.push_back(describe_row(species[i], i, figures[i].priced, *options.set));
-    if (figures[i].corrected) ledger.corrections.push_back(phase_correction(*ledger.reaction, i, figures[i], options.context != ContextUse::Never, ledger.cautions));
+    if (figures[i].corrected)
+      ledger.corrections.push_back(phase_correction(*ledger.reaction, i, figures[i],
+                                                    options.context != ContextUse::Never, ledger.cautions));
     if (!species[i].species->note.empty()) ledger.notes.push_back(species[i].species->note);
   }
   const EquationFigures sums = add_up(entries);
@@ -110,7 +120,8 @@ Result<Ledger> make_ledger(std::shared_ptr<const Reaction> reaction, const Ledge
   ledger.formed = sums.formed;
   ledger.gas_298 = sums.gas_298;
   ledger.as_written = sums.as_written;
-  if (!ledger.reaction->checkable) ledger.notes.emplace_back("Element balance not checkable: a species has no formula.");
+  if (!ledger.reaction->checkable)
+    ledger.notes.emplace_back("Element balance not checkable: a species has no formula.");
   note_phases(ledger);
   add_routes(ledger, entries, sums, options);
   if (options.reactants_at || options.products_at) run_at_temperatures(ledger, options);

@@ -1,4 +1,5 @@
-// The ledger of one reaction: bonds broken and formed, corrections to the phases written, totals with ±, routes.
+// The ledger of one reaction: bonds broken and formed, corrections to the phases written, totals with ±,
+// routes.
 #pragma once
 
 #include <cstdint>
@@ -14,7 +15,8 @@
 
 namespace heatledger::balance {
 
-/// One kind of bond in one species row. The bonds of nitro groups share one line: `type` is the N-O, `second` the N=O.
+/// One kind of bond in one species row. The bonds of nitro groups share one line: `type` is the N-O, `second`
+/// the N=O.
 struct BondLine {
   /// The other half of a line that joins two types of bond.
   struct Half {
@@ -24,15 +26,16 @@ struct BondLine {
   };
 
   molecule::BondType type;
-  int count = 0;                        ///< per molecule
-  const estimate::BondValue* price = nullptr;  ///< null: the set has no value; the row has no sum and says which is missing
+  int count = 0;  ///< per molecule
+  const estimate::BondValue* price =
+      nullptr;  ///< null: the set has no value; the row has no sum and says which is missing
   std::optional<Half> second;
-  double per_mole = 0;                  ///< Σ count × price [J/mol]; 0 without price
-  std::string label;                    ///< in words where that is clearer than the spelling: "N–O and N=O of nitro"
-  std::string count_text;               ///< "5", "1 + 1"
-  std::string price_text;               ///< kJ/mol: "413", "201, 607"; "no value"
+  double per_mole = 0;     ///< Σ count × price [J/mol]; 0 without price
+  std::string label;       ///< in words where that is clearer than the spelling: "N–O and N=O of nitro"
+  std::string count_text;  ///< "5", "1 + 1"
+  std::string price_text;  ///< kJ/mol: "413", "201, 607"; "no value"
   std::string source;
-  std::string remark;                   ///< a typed value in use, Kekulé counting, one molecule's own value
+  std::string remark;  ///< a typed value in use, Kekulé counting, one molecule's own value
 
   bool priced() const { return price != nullptr && (!second || second->price != nullptr); }
 };
@@ -41,22 +44,24 @@ struct BondLine {
 enum class RowRoute : std::uint8_t {
   Bonds,             ///< sum over bonds
   AtomsFromElement,  ///< element in its reference state (graphite, sulfur, metals): atoms from the element
-  Formation,         ///< atoms minus formation enthalpy (ions, salts): gas atoms that the structure cannot reach
-  Missing            ///< no sum: a bond without value, or no structure and no formation enthalpy
+  Formation,  ///< atoms minus formation enthalpy (ions, salts): gas atoms that the structure cannot reach
+  Missing     ///< no sum: a bond without value, or no structure and no formation enthalpy
 };
 
 struct LedgerRow {
-  std::size_t species = 0;   ///< index into Reaction::species
+  std::size_t species = 0;  ///< index into Reaction::species
   RowRoute route = RowRoute::Bonds;
   std::vector<BondLine> lines;
-  std::optional<uncertainty::Quantity> per_mole;    ///< bond sum of one mole [J/mol]
-  std::optional<uncertainty::Quantity> in_equation; ///< times the coefficient [J]
-  std::vector<molecule::BondType> missing;          ///< bond types without a value
-  molecule::Phase phase = molecule::Phase::Gas;     ///< the phase reckoned with; bonds are always of the gas
-  std::optional<uncertainty::Quantity> table;       ///< bond sum that the tabulated formation enthalpy implies [J/mol]
+  std::optional<uncertainty::Quantity> per_mole;     ///< bond sum of one mole [J/mol]
+  std::optional<uncertainty::Quantity> in_equation;  ///< times the coefficient [J]
+  std::vector<molecule::BondType> missing;           ///< bond types without a value
+  molecule::Phase phase = molecule::Phase::Gas;      ///< the phase reckoned with; bonds are always of the gas
+  std::optional<uncertainty::Quantity>
+      table;  ///< bond sum that the tabulated formation enthalpy implies [J/mol]
   std::string table_source;
-  std::string remark;                ///< how a row without bonds came about, which bond is missing and which set has it
-  std::vector<std::string> strains;  ///< what average bonds do not hold in this structure: "aromatic ring", "nitro group"
+  std::string remark;  ///< how a row without bonds came about, which bond is missing and which set has it
+  std::vector<std::string>
+      strains;  ///< what average bonds do not hold in this structure: "aromatic ring", "nitro group"
   std::vector<std::string> working;
 };
 
@@ -65,13 +70,15 @@ struct Correction {
   std::string what;  ///< "nitrobenzene, liquid to gas"
   std::size_t species = 0;
   double times = 1;
-  std::optional<uncertainty::Quantity> value;  ///< for the written coefficients [J]; empty: `why_not` says why
+  std::optional<uncertainty::Quantity>
+      value;  ///< for the written coefficients [J]; empty: `why_not` says why
   std::string source;
   std::string why_not;
   std::vector<std::string> working;
 };
 
-/// A reaction enthalpy by one route for the written coefficients [J]; empty with the reason when the route ends early.
+/// A reaction enthalpy by one route for the written coefficients [J]; empty with the reason when the route
+/// ends early.
 struct Route {
   std::string name;  ///< "average", "context", "formation", "measured"
   std::optional<uncertainty::Quantity> gas_298;
@@ -83,11 +90,16 @@ struct Route {
 
 /// What the figures are stated per.
 struct Basis {
-  enum class Kind : std::uint8_t { AsWritten, MoleOf, KilogramOf, KilogramOfReactants } kind = Kind::AsWritten;
+  enum class Kind : std::uint8_t {
+    AsWritten,
+    MoleOf,
+    KilogramOf,
+    KilogramOfReactants
+  } kind = Kind::AsWritten;
   std::size_t species = 0;
-  double factor = 1;   ///< figure as written × factor = figure on this basis
-  std::string text;    ///< "per mol nitrobenzene"
-  std::string unit;    ///< "kJ", "kJ/mol", "kJ/kg"
+  double factor = 1;  ///< figure as written × factor = figure on this basis
+  std::string text;   ///< "per mol nitrobenzene"
+  std::string unit;   ///< "kJ", "kJ/mol", "kJ/kg"
 };
 
 /// A basis that a reaction can be stated on: what to type, and how it reads.
@@ -97,7 +109,8 @@ struct BasisChoice {
 };
 std::vector<BasisChoice> basis_choices(const Reaction& reaction);
 
-/// @param name  see LedgerOptions::basis; a species by its text on the sheet or its library name, case forgiven
+/// @param name  see LedgerOptions::basis; a species by its text on the sheet or its library name, case
+/// forgiven
 /// @errors ledger.basis_unknown, ledger.no_molar_mass
 Result<Basis> find_basis(const Reaction& reaction, std::string_view name);
 
@@ -108,17 +121,19 @@ struct Ledger {
   std::optional<uncertainty::Quantity> broken, formed;  ///< sums of the two columns [J]
   std::optional<uncertainty::Quantity> gas_298;         ///< broken − formed by the chosen bond set [J]
   std::vector<Correction> corrections;
-  std::optional<uncertainty::Quantity> as_written;      ///< phases as written, 25 °C [J], by bonds
+  std::optional<uncertainty::Quantity> as_written;  ///< phases as written, 25 °C [J], by bonds
   std::vector<Route> routes;
   std::string taken;  ///< name of the route whose figure goes on
   /// Species brought from 25 °C to their real temperature; empty when none was given.
   std::vector<Correction> to_temperature;
-  std::optional<uncertainty::Quantity> as_run;  ///< the figure taken plus these [J]; empty without temperatures or data
+  std::optional<uncertainty::Quantity>
+      as_run;  ///< the figure taken plus these [J]; empty without temperatures or data
   Basis basis;
   std::vector<std::string> notes, cautions;
 };
 
-/// When bonds in context are asked. The first question of a program run fits the model, which takes part of a second.
+/// When bonds in context are asked. The first question of a program run fits the model, which takes part of a
+/// second.
 enum class ContextUse : std::uint8_t {
   Never,
   WhereNeeded,  ///< for species that no table has
@@ -127,14 +142,15 @@ enum class ContextUse : std::uint8_t {
 
 struct LedgerOptions {
   std::shared_ptr<const estimate::BondSet> set;  ///< required
-  std::string basis;  ///< "" as written, "NAME" per mole of a species, "kg NAME", "kg reactants"
+  std::string basis;         ///< "" as written, "NAME" per mole of a species, "kg NAME", "kg reactants"
   std::string pinned_route;  ///< empty: the best
   ContextUse context = ContextUse::WhereNeeded;
   std::optional<double> reactants_at, products_at;  ///< [K] > 0; empty: 298.15 K
 };
 
 /// Names of the routes.
-inline constexpr std::string_view kAverageRoute = "average", kFormationRoute = "formation", kContextRoute = "context";
+inline constexpr std::string_view kAverageRoute = "average", kFormationRoute = "formation",
+                                  kContextRoute = "context";
 
 /// A figure on the chosen basis [J, J/mol or J/kg].
 uncertainty::Quantity on_basis(const uncertainty::Quantity& quantity, const Basis& basis);
@@ -142,7 +158,8 @@ uncertainty::Quantity on_basis(const uncertainty::Quantity& quantity, const Basi
 /// The route of that name; null when the ledger has none.
 const Route* find_route(const Ledger& ledger, std::string_view name);
 
-/// @errors ledger.not_balanced (hint lists proposals), ledger.basis_unknown, ledger.no_molar_mass, ledger.route_unknown
+/// @errors ledger.not_balanced (hint lists proposals), ledger.basis_unknown, ledger.no_molar_mass,
+/// ledger.route_unknown
 Result<Ledger> make_ledger(std::shared_ptr<const Reaction> reaction, const LedgerOptions& options);
 
 }  // namespace heatledger::balance

@@ -12,7 +12,9 @@ namespace {
 using molecule::Composition;
 
 /// A count without trailing zeros: "4", "2.5".
-std::string count_text(double count) { return machine_number(count, 6); }
+std::string count_text(double count) {
+  return machine_number(count, 6);
+}
 
 std::string element_name(int key) {
   if (key < 0) return "charge";
@@ -84,22 +86,28 @@ void explain_imbalance(Reaction& reaction) {
   }
   const Result<std::vector<std::vector<std::int64_t>>> ways = molecule::balance(left, right);
   if (ways.ok()) {
-    for (const std::vector<std::int64_t>& counts : *ways) reaction.proposals.push_back(with_coefficients(reaction, counts));
+    for (const std::vector<std::int64_t>& counts : *ways)
+      reaction.proposals.push_back(with_coefficients(reaction, counts));
     return;
   }
-  if (const std::string what = forgotten(reaction.balance); !what.empty()) reaction.why_unbalanced += "; " + what;
+  if (const std::string what = forgotten(reaction.balance); !what.empty())
+    reaction.why_unbalanced += "; " + what;
   reaction.why_unbalanced += ". " + ways.error().message;
 }
 
-
 Error not_balanced(const Reaction& reaction) {
-  Error error{"ledger.not_balanced", "The equation does not balance: " + reaction.why_unbalanced + ".", "equation", ""};
-  if (error.message.size() > 2 && error.message.compare(error.message.size() - 2, 2, "..") == 0) error.message.pop_back();
+  Error error{"ledger.not_balanced", "The equation does not balance: " + reaction.why_unbalanced + ".",
+              "equation", ""};
+  if (error.message.size() > 2 && error.message.compare(error.message.size() - 2, 2, "..") == 0)
+    error.message.pop_back();
   if (reaction.proposals.size() == 1) {
     error.hint = "Balanced it reads: " + reaction.proposals[0];
   } else if (!reaction.proposals.empty()) {
-    error.hint = "It can be balanced in independent ways; write the one that is meant, or each as a reaction of its own: ";
-    for (std::size_t i = 0; i < reaction.proposals.size(); ++i) error.hint += (i == 0 ? "" : "; ") + reaction.proposals[i];
+    error.hint =
+        "It can be balanced in independent ways; write the one that is meant, or each as a reaction of its "
+        "own: ";
+    for (std::size_t i = 0; i < reaction.proposals.size(); ++i)
+      error.hint += (i == 0 ? "" : "; ") + reaction.proposals[i];
   } else {
     error.hint = "Write the species that is missing.";
   }

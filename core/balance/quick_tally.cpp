@@ -109,7 +109,8 @@ struct QuickTally::State {
     const auto found = older.find(text);
     if (found == older.end()) return nullptr;
     std::shared_ptr<const KnownTerm> term = found->second;
-    if (newer.size() >= capacity) return term.get();  // renewing would drop the half that this equation is read from
+    if (newer.size() >= capacity)
+      return term.get();  // renewing would drop the half that this equation is read from
     return newer.emplace(std::string(text), std::move(term)).first->second.get();
   }
 
@@ -177,7 +178,8 @@ struct QuickTally::State {
           term->whole = term->whole && count == static_cast<double>(static_cast<long long>(count));
           term->atoms.emplace_back(atom.first, count);
         }
-        if (entry.species->composition->charge != 0) term->atoms.emplace_back(-1, entry.species->composition->charge * term->coefficient);
+        if (entry.species->composition->charge != 0)
+          term->atoms.emplace_back(-1, entry.species->composition->charge * term->coefficient);
       }
       Entry sum;
       sum.coefficient = term->coefficient;
@@ -195,7 +197,8 @@ struct QuickTally::State {
   }
 };
 
-QuickTally::QuickTally(std::shared_ptr<const estimate::BondSet> set, ContextUse context, std::size_t capacity) : state_(std::make_unique<State>()) {
+QuickTally::QuickTally(std::shared_ptr<const estimate::BondSet> set, ContextUse context, std::size_t capacity)
+    : state_(std::make_unique<State>()) {
   CHECK(set != nullptr && capacity > 0, "a quick tally has a bond set and a memory");
   state_->set = std::move(set);
   state_->context = context;

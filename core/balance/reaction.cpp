@@ -19,7 +19,8 @@ Error placed(Error error, std::string_view equation, const Term& term) {
   std::size_t inside = 0;
   constexpr std::string_view kOffset = "offset ";
   if (error.where.compare(0, kOffset.size(), kOffset) == 0) {
-    if (const std::optional<double> number = parse_number(std::string_view(error.where).substr(kOffset.size()))) {
+    if (const std::optional<double> number =
+            parse_number(std::string_view(error.where).substr(kOffset.size()))) {
       inside = static_cast<std::size_t>(*number);
     }
   }
@@ -59,8 +60,10 @@ Result<Reaction> read_reaction(std::string_view text, SpeciesSource& source) {
   reaction.text = text;
   reaction.reversible = equation.reversible;
   reaction.species.reserve(equation.reactants.size() + equation.products.size());
-  if (Status status = add_side(equation.reactants, false, source, reaction); !status.ok()) return status.error();
-  if (Status status = add_side(equation.products, true, source, reaction); !status.ok()) return status.error();
+  if (Status status = add_side(equation.reactants, false, source, reaction); !status.ok())
+    return status.error();
+  if (Status status = add_side(equation.products, true, source, reaction); !status.ok())
+    return status.error();
   if (reaction.checkable) {
     check(reaction);
     if (!reaction.balance.balanced) explain_imbalance(reaction);

@@ -25,7 +25,8 @@ struct Reaction {
   std::vector<ReactionSpecies> species;  ///< reactants, then products, in order of writing
   bool reversible = false;
   molecule::BalanceCheck balance;
-  bool checkable = true;  ///< false when a species has no composition: the element balance reads "not checkable"
+  bool checkable =
+      true;  ///< false when a species has no composition: the element balance reads "not checkable"
   /// When not balanced: every independent way to balance it, as equation texts; empty when there is none.
   std::vector<std::string> proposals;
   std::string why_unbalanced;  ///< which element is short on which side
@@ -38,8 +39,9 @@ class SpeciesSource {
   virtual Result<std::shared_ptr<const facts::Species>> species(std::string_view text, bool quoted) = 0;
 };
 
-/// Remembers what it resolved; bounded, so that bulk work stays in constant memory: when `capacity` texts are held they
-/// become the older half, which is let go when the newer half is full too. What is used keeps moving to the newer half.
+/// Remembers what it resolved; bounded, so that bulk work stays in constant memory: when `capacity` texts are
+/// held they become the older half, which is let go when the newer half is full too. What is used keeps
+/// moving to the newer half.
 class CachedSpecies : public SpeciesSource {
  public:
   /// @param capacity  texts in each half, at least 1
@@ -55,7 +57,8 @@ class CachedSpecies : public SpeciesSource {
 /// @errors equation.*, species.*, smiles.*, formula.*; `where` is "offset N" into the equation text
 Result<Reaction> read_reaction(std::string_view text, SpeciesSource& source);
 
-/// The name a term goes by on the sheet: as typed, formulas with subscripts, SMILES in quotes; phase not included.
+/// The name a term goes by on the sheet: as typed, formulas with subscripts, SMILES in quotes; phase not
+/// included.
 std::string display_species(const ReactionSpecies& species);
 /// "(l)", "(aq, 96 wt%)", "" when no phase was written.
 std::string phase_suffix(const molecule::Term& term);

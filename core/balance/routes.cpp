@@ -23,10 +23,12 @@ Route average_route(const Ledger& ledger, const EquationFigures& sums) {
     if (!correction.value && route.why_not.empty()) route.why_not = correction.why_not;
   }
   if (!route.gas_298) return route;
-  route.working.push_back("broken − formed = " + ledger_kj(sums.broken->value()) + " − " + ledger_kj(sums.formed->value()) +
-                          " = " + ledger_kj(sums.gas_298->value()) + " kJ, all as gas at 25 °C");
+  route.working.push_back("broken − formed = " + ledger_kj(sums.broken->value()) + " − " +
+                          ledger_kj(sums.formed->value()) + " = " + ledger_kj(sums.gas_298->value()) +
+                          " kJ, all as gas at 25 °C");
   for (const Correction& correction : ledger.corrections) {
-    if (correction.value) route.working.push_back(correction.what + "  " + fine_kj(correction.value->value()) + " kJ");
+    if (correction.value)
+      route.working.push_back(correction.what + "  " + fine_kj(correction.value->value()) + " kJ");
   }
   if (route.as_written) {
     route.working.push_back("as written, 25 °C: " + kj_with_u95(*route.as_written, "kJ"));
@@ -34,7 +36,8 @@ Route average_route(const Ledger& ledger, const EquationFigures& sums) {
   return route;
 }
 
-Route formation_route(const Ledger& ledger, const std::vector<Entry>& entries, const EquationFigures& sums, bool may_estimate) {
+Route formation_route(const Ledger& ledger, const std::vector<Entry>& entries, const EquationFigures& sums,
+                      bool may_estimate) {
   Route route;
   route.name = kFormationRoute;
   route.gas_298 = sums.formation_gas_298;
@@ -42,17 +45,19 @@ Route formation_route(const Ledger& ledger, const std::vector<Entry>& entries, c
   for (std::size_t i = 0; i < ledger.rows.size(); ++i) {
     const ReactionSpecies& entry = ledger.reaction->species[i];
     const molecule::Phase phase = ledger.rows[i].phase;
-    const Result<thermo::Sourced> formation = may_estimate ? thermo::best_formation(*entry.species, phase, entry.term.strength)
-                                                           : thermo::tabulated_formation(*entry.species, phase, entry.term.strength);
+    const Result<thermo::Sourced> formation =
+        may_estimate ? thermo::best_formation(*entry.species, phase, entry.term.strength)
+                     : thermo::tabulated_formation(*entry.species, phase, entry.term.strength);
     if (entries[i].figures->formation_estimated) route.estimated.push_back(i);
     if (!formation.ok()) {
       if (route.why_not.empty()) route.why_not = formation.error().message;
       continue;
     }
     const double times = entry.product ? entry.coefficient() : -entry.coefficient();
-    route.working.push_back(display_species(entry) + phase_suffix(entry.term) + "  " + display_number(times, times == std::round(times) ? 0 : 4) +
-                            " × (" + fine_kj(formation->value.value()) + ") = " + fine_kj(times * formation->value.value()) +
-                            " kJ; " + formation->source);
+    route.working.push_back(display_species(entry) + phase_suffix(entry.term) + "  " +
+                            display_number(times, times == std::round(times) ? 0 : 4) + " × (" +
+                            fine_kj(formation->value.value()) +
+                            ") = " + fine_kj(times * formation->value.value()) + " kJ; " + formation->source);
   }
   if (route.as_written) {
     route.working.push_back("sum: " + kj_with_u95(*route.as_written, "kJ"));
@@ -74,10 +79,13 @@ Route context_route(const Ledger& ledger, const std::vector<Entry>& entries, con
       continue;
     }
     const double value = entries[i].figures->context->value(), times = entries[i].signed_coefficient();
-    route.working.push_back(display_species(entry) + phase_suffix(entry.term) + "  " + display_number(times, times == std::round(times) ? 0 : 4) + " × (" +
+    route.working.push_back(display_species(entry) + phase_suffix(entry.term) + "  " +
+                            display_number(times, times == std::round(times) ? 0 : 4) + " × (" +
                             fine_kj(value) + ") = " + fine_kj(times * value) + " kJ");
   }
-  if (route.as_written) route.working.push_back("sum: " + kj_with_u95(*route.as_written, "kJ") + ", what both sides share cancelled");
+  if (route.as_written)
+    route.working.push_back("sum: " + kj_with_u95(*route.as_written, "kJ") +
+                            ", what both sides share cancelled");
   return route;
 }
 
@@ -86,7 +94,8 @@ void note_estimates(Ledger& ledger) {
   const Route* formation = find_route(ledger, kFormationRoute);
   if (!formation->as_written || formation->estimated.empty()) return;
   std::string names;
-  for (const std::size_t i : formation->estimated) names += (names.empty() ? "" : ", ") + display_species(ledger.reaction->species[i]);
+  for (const std::size_t i : formation->estimated)
+    names += (names.empty() ? "" : ", ") + display_species(ledger.reaction->species[i]);
   ledger.notes.push_back("No table has " + names + ": estimated from bonds in context.");
 }
 
@@ -98,7 +107,8 @@ const LedgerRow* widest_gap(const Ledger& ledger, double& gap) {
     const LedgerRow& row = ledger.rows[i];
     if (!row.table || !row.per_mole) continue;
     const ReactionSpecies& entry = ledger.reaction->species[i];
-    const double here = (entry.product ? -1 : 1) * entry.coefficient() * (row.per_mole->value() - row.table->value());
+    const double here =
+        (entry.product ? -1 : 1) * entry.coefficient() * (row.per_mole->value() - row.table->value());
     if (std::fabs(here) > std::fabs(gap)) {
       gap = here;
       widest = &row;
@@ -111,14 +121,17 @@ void note_disagreement(Ledger& ledger) {
   const Route *average = find_route(ledger, kAverageRoute), *formation = find_route(ledger, kFormationRoute);
   if (!average->gas_298 || !formation->gas_298) return;
   const double apart = average->gas_298->value() - formation->gas_298->value();
-  const double allowed = std::sqrt(average->gas_298->u95() * average->gas_298->u95() + formation->gas_298->u95() * formation->gas_298->u95());
+  const double allowed = std::sqrt(average->gas_298->u95() * average->gas_298->u95() +
+                                   formation->gas_298->u95() * formation->gas_298->u95());
   if (std::fabs(apart) <= allowed) return;
-  std::string text = "Average bonds give " + kj_with_u95(*average->gas_298, "kJ") + ", formation enthalpies " +
-                     kj_with_u95(*formation->gas_298, "kJ") + " for the gas: " + ledger_kj(std::fabs(apart)) + " kJ apart, beyond their ±.";
+  std::string text = "Average bonds give " + kj_with_u95(*average->gas_298, "kJ") +
+                     ", formation enthalpies " + kj_with_u95(*formation->gas_298, "kJ") +
+                     " for the gas: " + ledger_kj(std::fabs(apart)) + " kJ apart, beyond their ±.";
   double gap = 0;
   if (const LedgerRow* row = widest_gap(ledger, gap)) {
     const ReactionSpecies& entry = ledger.reaction->species[row->species];
-    text += " Most of it stands on the row of " + display_species(entry) + " (" + ledger_kj(std::fabs(gap)) + " kJ).";
+    text += " Most of it stands on the row of " + display_species(entry) + " (" + ledger_kj(std::fabs(gap)) +
+            " kJ).";
     for (const std::string& strain : row->strains) {
       std::string sentence = strain;
       if (sentence[0] >= 'a' && sentence[0] <= 'z') sentence[0] = static_cast<char>(sentence[0] - 'a' + 'A');
@@ -137,7 +150,8 @@ const Route* find_route(const Ledger& ledger, std::string_view name) {
   return nullptr;
 }
 
-void add_routes(Ledger& ledger, const std::vector<Entry>& entries, const EquationFigures& sums, const LedgerOptions& options) {
+void add_routes(Ledger& ledger, const std::vector<Entry>& entries, const EquationFigures& sums,
+                const LedgerOptions& options) {
   const std::string_view pinned = options.pinned_route;
   ledger.routes.push_back(average_route(ledger, sums));
   if (options.context == ContextUse::Always) ledger.routes.push_back(context_route(ledger, entries, sums));
@@ -150,8 +164,9 @@ void add_routes(Ledger& ledger, const std::vector<Entry>& entries, const Equatio
     }
   }
   if (!pinned.empty() && ledger.taken != pinned) {
-    ledger.notes.push_back("The pinned route (" + std::string(pinned) + ") has no figure for this reaction" +
-                           (ledger.taken.empty() ? std::string(".") : "; the figure by " + ledger.taken + " is taken instead."));
+    ledger.notes.push_back(
+        "The pinned route (" + std::string(pinned) + ") has no figure for this reaction" +
+        (ledger.taken.empty() ? std::string(".") : "; the figure by " + ledger.taken + " is taken instead."));
   } else if (!pinned.empty()) {
     ledger.notes.push_back("The figure taken is pinned to the route by " + ledger.taken + ".");
   }

@@ -21,13 +21,14 @@ using molecule::Order;
 using molecule::Phase;
 using molecule::Setting;
 using uncertainty::Quantity;
-using uncertainty::SourceKind;
 using uncertainty::source_key;
+using uncertainty::SourceKind;
 
 constexpr double kJ = 1000.0;
 
 /// Gas atoms of one mole [J/mol]; empty with the element that has no figure.
-std::optional<Quantity> gas_atoms(const Species& species, std::string& lacking, std::vector<std::string>* working) {
+std::optional<Quantity> gas_atoms(const Species& species, std::string& lacking,
+                                  std::vector<std::string>* working) {
   if (!species.composition) {
     lacking = "composition";
     return std::nullopt;
@@ -40,11 +41,14 @@ std::optional<Quantity> gas_atoms(const Species& species, std::string& lacking, 
       lacking = std::string(molecule::symbol(element));
       return std::nullopt;
     }
-    sum.add(Quantity(figure->value, figure->u95, source_key(SourceKind::Atom, static_cast<std::uint64_t>(element))), atom.second);
+    sum.add(Quantity(figure->value, figure->u95,
+                     source_key(SourceKind::Atom, static_cast<std::uint64_t>(element))),
+            atom.second);
     if (working != nullptr) {
       working->push_back(std::string(molecule::symbol(element)) + "(g)  " + times_text(atom.second) + " × " +
-                         display_number(figure->value / kJ, 2) + " = " + display_number(figure->value * atom.second / kJ, 2) +
-                         " kJ/mol, " + std::string(figure->source));
+                         display_number(figure->value / kJ, 2) + " = " +
+                         display_number(figure->value * atom.second / kJ, 2) + " kJ/mol, " +
+                         std::string(figure->source));
     }
   }
   return sum;
@@ -59,7 +63,8 @@ bool sum_bonds(const Species& species, const BondSet& set, PricedSpecies& priced
       priced.missing.push_back(bond.type);
       continue;
     }
-    sum.add(Quantity(price->value, price->u95, source_key(SourceKind::BondValue, price->type.packed())), bond.count);
+    sum.add(Quantity(price->value, price->u95, source_key(SourceKind::BondValue, price->type.packed())),
+            bond.count);
   }
   if (!priced.missing.empty()) return false;
   priced.per_mole = std::move(sum);
@@ -90,7 +95,9 @@ std::string price_remark(const BondValue& price, const BondSet& set, const BondT
   return price.remark;
 }
 
-std::string price_text(const BondValue* price) { return price == nullptr ? "no value" : ledger_kj(price->value); }
+std::string price_text(const BondValue* price) {
+  return price == nullptr ? "no value" : ledger_kj(price->value);
+}
 
 /// Joins bonds that one price serves, and the two bonds of a nitro group, into lines.
 std::vector<BondLine> bond_lines(const Species& species, const BondSet& set) {
@@ -106,13 +113,17 @@ std::vector<BondLine> bond_lines(const Species& species, const BondSet& set) {
         continue;
       }
     }
-    const bool kekule = bond.type.setting == Setting::AromaticRing && price != nullptr && price->type.setting == Setting::Plain;
+    const bool kekule = bond.type.setting == Setting::AromaticRing && price != nullptr &&
+                        price->type.setting == Setting::Plain;
     const auto same = std::find_if(lines.begin(), lines.end(), [&](const BondLine& line) {
-      return price != nullptr && line.price == price && line.type.setting != Setting::Nitro && bond.type.setting != Setting::Nitro;
+      return price != nullptr && line.price == price && line.type.setting != Setting::Nitro &&
+             bond.type.setting != Setting::Nitro;
     });
     if (same != lines.end()) {
       same->count += bond.count;
-      if (kekule) same->remark = std::to_string(bond.count) + " of them in the aromatic ring, counted as Kekulé draws it";
+      if (kekule)
+        same->remark =
+            std::to_string(bond.count) + " of them in the aromatic ring, counted as Kekulé draws it";
       continue;
     }
     BondLine line;
@@ -138,7 +149,8 @@ std::vector<BondLine> bond_lines(const Species& species, const BondSet& set) {
     if (line.second->price != nullptr) {
       line.per_mole += line.second->count * line.second->price->value;
       const std::string remark = price_remark(*line.second->price, set, line.second->type);
-      if (line.second->price->origin == BondOrigin::User) line.remark += (line.remark.empty() ? "" : "; ") + ("N=O: " + remark);
+      if (line.second->price->origin == BondOrigin::User)
+        line.remark += (line.remark.empty() ? "" : "; ") + ("N=O: " + remark);
     }
     if (line.remark.empty()) line.remark = "one of each by convention; in truth the two bonds are equal";
   }
@@ -154,7 +166,8 @@ void explain_missing(LedgerRow& row, const Species& species) {
   for (const BondType& type : row.missing) {
     text += (text.empty() ? "" : "; ") + bond_label(type) + ": no value in this set";
     const std::vector<std::string> others = BondSet::sets_with(type);
-    for (std::size_t i = 0; i < others.size(); ++i) text += (i == 0 ? " (sets that have it: " : ", ") + others[i];
+    for (std::size_t i = 0; i < others.size(); ++i)
+      text += (i == 0 ? " (sets that have it: " : ", ") + others[i];
     text += others.empty() ? " (nor in another; type one with its source)" : ")";
   }
   row.remark = species.name + ": " + text;
@@ -167,7 +180,8 @@ void add_bond_working(LedgerRow& row) {
       continue;
     }
     std::string text = line.label + "  " + std::to_string(line.count) + " × " + ledger_kj(line.price->value);
-    if (line.second) text += " + " + std::to_string(line.second->count) + " × " + ledger_kj(line.second->price->value);
+    if (line.second)
+      text += " + " + std::to_string(line.second->count) + " × " + ledger_kj(line.second->price->value);
     text += " = " + ledger_kj(line.per_mole);
     if (line.price->origin == BondOrigin::User) text += ", typed: " + line.price->source;
     row.working.push_back(std::move(text));
@@ -175,15 +189,18 @@ void add_bond_working(LedgerRow& row) {
 }
 
 /// Atoms minus formation enthalpy: the bond sum of what no bond set reaches.
-void add_formation_working(LedgerRow& row, const Species& species, const std::optional<molecule::Strength>& strength) {
+void add_formation_working(LedgerRow& row, const Species& species,
+                           const std::optional<molecule::Strength>& strength) {
   std::string lacking;
   gas_atoms(species, lacking, &row.working);
   const Result<thermo::Sourced> formation = thermo::tabulated_formation(species, row.phase, strength);
   if (!formation.ok()) return;
   row.working.insert(row.working.end(), formation->working.begin(), formation->working.end());
   row.remark = row.route == RowRoute::AtomsFromElement
-                   ? "atoms from the element in its reference state (" + std::string(thermo::phase_word(row.phase)) + ")"
-                   : "by formation enthalpy as " + std::string(thermo::phase_word(row.phase)) + ": no bond set reaches ions and salts";
+                   ? "atoms from the element in its reference state (" +
+                         std::string(thermo::phase_word(row.phase)) + ")"
+                   : "by formation enthalpy as " + std::string(thermo::phase_word(row.phase)) +
+                         ": no bond set reaches ions and salts";
 }
 
 void add_table(LedgerRow& row, const Species& species) {
@@ -209,8 +226,9 @@ bool reachable_by_bonds(const Species& species, Phase phase) {
       species.compound->reference_phase == 's' && species.bonds.size() != 1) {
     return false;  // graphite, metals; iodine has its one bond and a sublimation enthalpy
   }
-  const bool solid_sulfur_or_phosphorus = species.compound != nullptr && species.compound->reference_element &&
-                                          phase == Phase::Solid && species.graph->atoms.size() > 2;
+  const bool solid_sulfur_or_phosphorus = species.compound != nullptr &&
+                                          species.compound->reference_element && phase == Phase::Solid &&
+                                          species.graph->atoms.size() > 2;
   return !solid_sulfur_or_phosphorus && !has_charged_fragment(*species.graph);
 }
 
@@ -221,19 +239,22 @@ PricedSpecies price_species(const Species& species, const molecule::Term& writte
     if (sum_bonds(species, set, priced)) priced.route = RowRoute::Bonds;
     return priced;
   }
-  const Result<thermo::Sourced> formation = thermo::tabulated_formation(species, priced.phase, written.strength);
+  const Result<thermo::Sourced> formation =
+      thermo::tabulated_formation(species, priced.phase, written.strength);
   std::string lacking;
   std::optional<Quantity> atoms = gas_atoms(species, lacking, nullptr);
   if (!formation.ok() || !atoms) return priced;
   atoms->add(formation->value, -1);
   priced.per_mole = std::move(atoms);
-  const bool element = species.compound != nullptr && species.compound->reference_element &&
-                       molecule::phase_text(priced.phase) == std::string_view(&species.compound->reference_phase, 1);
+  const bool element =
+      species.compound != nullptr && species.compound->reference_element &&
+      molecule::phase_text(priced.phase) == std::string_view(&species.compound->reference_phase, 1);
   priced.route = element ? RowRoute::AtomsFromElement : RowRoute::Formation;
   return priced;
 }
 
-LedgerRow describe_row(const ReactionSpecies& entry, std::size_t index, const PricedSpecies& priced, const BondSet& set) {
+LedgerRow describe_row(const ReactionSpecies& entry, std::size_t index, const PricedSpecies& priced,
+                       const BondSet& set) {
   const Species& species = *entry.species;
   LedgerRow row;
   row.species = index;
@@ -255,12 +276,14 @@ LedgerRow describe_row(const ReactionSpecies& entry, std::size_t index, const Pr
   if (row.per_mole) {
     row.working.push_back("sum " + ledger_kj(row.per_mole->value()) + " kJ/mol");
     row.working.push_back(times_text(entry.coefficient()) + " × " + ledger_kj(row.per_mole->value()) + " = " +
-                          ledger_kj(row.in_equation->value()) + " kJ " + (entry.product ? "formed" : "broken"));
+                          ledger_kj(row.in_equation->value()) + " kJ " +
+                          (entry.product ? "formed" : "broken"));
   }
   if (row.table && row.per_mole) {
     const double gap = row.per_mole->value() - row.table->value();
-    row.working.push_back("the table implies " + ledger_kj(row.table->value()) + " kJ/mol (gas atoms minus ΔfH of the gas, " +
-                          row.table_source + "); bonds − table = " + ledger_kj(gap));
+    row.working.push_back("the table implies " + ledger_kj(row.table->value()) +
+                          " kJ/mol (gas atoms minus ΔfH of the gas, " + row.table_source +
+                          "); bonds − table = " + ledger_kj(gap));
   }
   return row;
 }

@@ -11,7 +11,8 @@ constexpr double kJ = 1000.0;
 std::optional<std::size_t> take_index(std::string_view& text, std::string_view word) {
   if (text.substr(0, word.size()) != word) return std::nullopt;
   std::size_t at = word.size(), value = 0;
-  while (at < text.size() && text[at] >= '0' && text[at] <= '9' && value < 100000) value = value * 10 + static_cast<std::size_t>(text[at++] - '0');
+  while (at < text.size() && text[at] >= '0' && text[at] <= '9' && value < 100000)
+    value = value * 10 + static_cast<std::size_t>(text[at++] - '0');
   if (at == word.size()) return std::nullopt;
   text.remove_prefix(at);
   return value;
@@ -47,9 +48,11 @@ std::optional<SheetModel> SheetModel::of(const Ledger& ledger, const estimate::B
     if (from.lines.empty()) {
       row.fixed = from.per_mole ? from.per_mole->value() / kJ : 0;
     } else {
-      // A table with a value for aromatic rings prices bonds apart that share a line here: the row as a whole is right.
+      // A table with a value for aromatic rings prices bonds apart that share a line here: the row as a whole
+      // is right.
       double lines = 0;
-      for (const Line& line : row.lines) lines += line.count_value * line.price_value + line.count2_value * line.price2_value;
+      for (const Line& line : row.lines)
+        lines += line.count_value * line.price_value + line.count2_value * line.price2_value;
       const PricedSpecies priced = price_species(*entry.species, entry.term, prices);
       if (priced.per_mole) row.fixed = priced.per_mole->value() / kJ - lines;
       if (row.fixed > -1e-6 && row.fixed < 1e-6) row.fixed = 0;
@@ -69,7 +72,8 @@ std::optional<SheetModel> SheetModel::of(const Ledger& ledger, const estimate::B
     phase.times = next++;
     phase.value = next++;
     phase.product = entry.product;
-    phase.per_mole = correction.value ? correction.value->value() / kJ / ((entry.product ? 1 : -1) * correction.times) : 0;
+    phase.per_mole =
+        correction.value ? correction.value->value() / kJ / ((entry.product ? 1 : -1) * correction.times) : 0;
     model.phases.push_back(phase);
   }
   model.as_written = next++;
@@ -87,9 +91,15 @@ void SheetModel::evaluate(const std::vector<Change>& changes, std::vector<double
     for (const Change& change : changes) {
       if (change.node != node) continue;
       switch (change.op) {
-        case Change::Op::Add: value += change.number; break;
-        case Change::Op::Multiply: value *= change.number; break;
-        case Change::Op::Replace: value = change.number; break;
+        case Change::Op::Add:
+          value += change.number;
+          break;
+        case Change::Op::Multiply:
+          value *= change.number;
+          break;
+        case Change::Op::Replace:
+          value = change.number;
+          break;
       }
     }
     out[node] = value;

@@ -1,5 +1,5 @@
-// A ledger as plain arithmetic that can be recomputed with something changed in the middle: what the checker holds typed
-// figures against. Figures are kJ, as on paper.
+// A ledger as plain arithmetic that can be recomputed with something changed in the middle: what the checker
+// holds typed figures against. Figures are kJ, as on paper.
 #pragma once
 
 #include <cstdint>

@@ -22,7 +22,8 @@ std::string figure(double value) {
 
 class Collector {
  public:
-  Collector(const Ledger& ledger, const SheetModel& model, const std::vector<double>& base, const std::vector<TypedCell>& typed)
+  Collector(const Ledger& ledger, const SheetModel& model, const std::vector<double>& base,
+            const std::vector<TypedCell>& typed)
       : ledger_(ledger), model_(model), base_(base), typed_(typed) {}
 
   std::vector<Candidate> collect() {
@@ -44,7 +45,8 @@ class Collector {
   }
 
  private:
-  void add(SlipKind kind, std::size_t row, std::size_t line, std::string words, std::vector<Change> changes, bool only_here = false) {
+  void add(SlipKind kind, std::size_t row, std::size_t line, std::string words, std::vector<Change> changes,
+           bool only_here = false) {
     Candidate candidate;
     candidate.slip.kind = kind;
     candidate.slip.row = row;
@@ -55,19 +57,23 @@ class Collector {
     found_.push_back(std::move(candidate));
   }
 
-  std::string name(std::size_t row) const { return display_species(ledger_.reaction->species[ledger_.rows[row].species]); }
+  std::string name(std::size_t row) const {
+    return display_species(ledger_.reaction->species[ledger_.rows[row].species]);
+  }
   std::string phase_name(std::size_t p) const { return name(model_.phases[p].row); }
 
   void coefficient(std::size_t r) {
     const SheetModel::Row& row = model_.rows[r];
     if (row.coefficient_value == 1) return;
-    const std::string left_out = "the coefficient " + times_text(row.coefficient_value) + " of " + name(r) + " left out";
+    const std::string left_out =
+        "the coefficient " + times_text(row.coefficient_value) + " of " + name(r) + " left out";
     add(SlipKind::CoefficientLeftOut, r, 0, left_out, {{Op::Replace, row.coefficient, 1}});
     for (const SheetModel::Phase& phase : model_.phases) {
       if (phase.row != r) continue;
       add(SlipKind::CoefficientLeftOut, r, 0, left_out + ", in the bonds and in the phase",
           {{Op::Replace, row.coefficient, 1}, {Op::Replace, phase.times, 1}});
-      add(SlipKind::CoefficientLeftOut, r, 0, left_out + " where it changes phase", {{Op::Replace, phase.times, 1}});
+      add(SlipKind::CoefficientLeftOut, r, 0, left_out + " where it changes phase",
+          {{Op::Replace, phase.times, 1}});
     }
   }
 
@@ -92,10 +98,12 @@ class Collector {
     }
     const std::string one = "one " + bond.label + of;
     add(SlipKind::BondMissed, r, l, one + " missed: " + count(at.count_value - 1), {{Op::Add, at.count, -1}});
-    add(SlipKind::BondTwice, r, l, one + " counted twice: " + count(at.count_value + 1), {{Op::Add, at.count, 1}});
+    add(SlipKind::BondTwice, r, l, one + " counted twice: " + count(at.count_value + 1),
+        {{Op::Add, at.count, 1}});
     if (at.count_value > 1) {
       add(SlipKind::LineLeftOut, r, l, "all " + bond.label + of + " left out", {{Op::Multiply, at.sum, 0}});
-      add(SlipKind::LineTwice, r, l, "all " + bond.label + of + " entered twice", {{Op::Multiply, at.sum, 2}});
+      add(SlipKind::LineTwice, r, l, "all " + bond.label + of + " entered twice",
+          {{Op::Multiply, at.sum, 2}});
     }
   }
 
@@ -109,7 +117,8 @@ class Collector {
   void wrong_price(std::size_t r, std::size_t l, const SheetModel::Line& at, const BondLine& bond) {
     const auto instead = [&](SlipKind kind, const std::string& what, std::optional<double> wrong) {
       if (!wrong || std::fabs(*wrong - at.price_value) < 0.5) return;
-      add(kind, r, l, what + ": " + figure(*wrong) + " instead of " + figure(at.price_value), {{Op::Replace, at.price, *wrong}});
+      add(kind, r, l, what + ": " + figure(*wrong) + " instead of " + figure(at.price_value),
+          {{Op::Replace, at.price, *wrong}});
     };
     const auto mean = [](std::optional<double> a, std::optional<double> b) -> std::optional<double> {
       if (!a || !b) return std::nullopt;
@@ -125,7 +134,8 @@ class Collector {
         instead(SlipKind::AverageForSpecific, "carbon monoxide taken as a C=O double bond", ketone);
         return;
       case Setting::NitricOxide:
-        instead(SlipKind::AverageForSpecific, "the average N=O in place of that of NO", price(7, 8, Order::Double));
+        instead(SlipKind::AverageForSpecific, "the average N=O in place of that of NO",
+                price(7, 8, Order::Double));
         return;
       case Setting::NitrogenDioxide:
         instead(SlipKind::AverageForSpecific, "NO₂ priced as one N=O and one N–O",
@@ -140,10 +150,12 @@ class Collector {
         instead(SlipKind::AverageForSpecific, "the aromatic ring" + of + " priced as alternating C–C and C=C",
                 mean(price(6, 6, Order::Single), price(6, 6, Order::Double)));
         return;
-      default: break;
+      default:
+        break;
     }
     if (bond.type == molecule::make_bond_type(6, 8, Order::Double)) {
-      instead(SlipKind::AverageForSpecific, "the C=O" + of + " priced with the value of CO₂", price(6, 8, Order::Double, Setting::CarbonDioxide));
+      instead(SlipKind::AverageForSpecific, "the C=O" + of + " priced with the value of CO₂",
+              price(6, 8, Order::Double, Setting::CarbonDioxide));
     }
     if (bond.type == molecule::make_bond_type(8, 8, Order::Double)) {
       if (const std::optional<double> single = price(8, 8, Order::Single)) {
@@ -169,9 +181,11 @@ class Collector {
     for (std::size_t p = 0; p < model_.phases.size(); ++p) {
       const SheetModel::Phase& phase = model_.phases[p];
       const std::string word(thermo::phase_word(ledger_.rows[phase.row].phase));
-      add(SlipKind::PhaseLeftOut, phase.row, 0, "the gas value taken for " + phase_name(p) + ", which is written as " + word,
+      add(SlipKind::PhaseLeftOut, phase.row, 0,
+          "the gas value taken for " + phase_name(p) + ", which is written as " + word,
           {{Op::Multiply, phase.value, 0}});
-      add(SlipKind::Sign, phase.row, 0, "the sign of \"" + ledger_.corrections[p].what + "\" turned round", {{Op::Multiply, phase.value, -1}});
+      add(SlipKind::Sign, phase.row, 0, "the sign of \"" + ledger_.corrections[p].what + "\" turned round",
+          {{Op::Multiply, phase.value, -1}});
       all_out.push_back({Op::Multiply, phase.value, 0});
       all_turned.push_back({Op::Multiply, phase.value, -1});
     }
@@ -186,7 +200,8 @@ class Collector {
       for (const Candidate& known : found_) {
         if (known.slip.kind == SlipKind::WrongBasis && known.changes[0].number == factor) return;
       }
-      add(SlipKind::WrongBasis, 0, 0, words + " instead of " + ledger_.basis.text, {{Op::Replace, model_.basis, factor}});
+      add(SlipKind::WrongBasis, 0, 0, words + " instead of " + ledger_.basis.text,
+          {{Op::Replace, model_.basis, factor}});
     };
     for (const BasisChoice& choice : basis_choices(*ledger_.reaction)) {
       const Result<Basis> basis = find_basis(*ledger_.reaction, choice.name);
@@ -196,9 +211,12 @@ class Collector {
 
   void unit(Node node, const std::string& what, std::size_t row, std::size_t line) {
     add(SlipKind::JouleForKilojoule, row, line, what + " in J where kJ stand", {{Op::Multiply, node, 1000}});
-    add(SlipKind::JouleForKilojoule, row, line, what + " divided by 1000 once too often", {{Op::Multiply, node, 0.001}});
-    add(SlipKind::CalorieForJoule, row, line, what + " in kcal where kJ stand", {{Op::Multiply, node, 1 / kCalorie}});
-    add(SlipKind::CalorieForJoule, row, line, what + " turned from kcal to kJ though it was kJ", {{Op::Multiply, node, kCalorie}});
+    add(SlipKind::JouleForKilojoule, row, line, what + " divided by 1000 once too often",
+        {{Op::Multiply, node, 0.001}});
+    add(SlipKind::CalorieForJoule, row, line, what + " in kcal where kJ stand",
+        {{Op::Multiply, node, 1 / kCalorie}});
+    add(SlipKind::CalorieForJoule, row, line, what + " turned from kcal to kJ though it was kJ",
+        {{Op::Multiply, node, kCalorie}});
   }
 
   void units() {
@@ -206,7 +224,8 @@ class Collector {
     for (std::size_t r = 0; r < model_.rows.size(); ++r) {
       const SheetModel::Row& row = model_.rows[r];
       for (std::size_t l = 0; l < row.lines.size(); ++l) {
-        if (!ledger_.rows[r].lines[l].second) unit(row.lines[l].price, ledger_.rows[r].lines[l].label + " of " + name(r), r, l);
+        if (!ledger_.rows[r].lines[l].second)
+          unit(row.lines[l].price, ledger_.rows[r].lines[l].label + " of " + name(r), r, l);
       }
       unit(row.per_mole, "the bond sum of " + name(r), r, 0);
       all.push_back({Op::Multiply, row.per_mole, 1 / kCalorie});
@@ -224,26 +243,33 @@ class Collector {
 
   void signs() {
     add(SlipKind::Sign, 0, 0, "formed − broken instead of broken − formed", {{Op::Multiply, model_.gas, -1}});
-    if (!model_.phases.empty()) add(SlipKind::Sign, 0, 0, "the sign of the figure as written turned round", {{Op::Multiply, model_.as_written, -1}});
+    if (!model_.phases.empty())
+      add(SlipKind::Sign, 0, 0, "the sign of the figure as written turned round",
+          {{Op::Multiply, model_.as_written, -1}});
     const double broken = base_[model_.broken], formed = base_[model_.formed];
     if (broken == 0 || formed == 0) return;
-    std::vector<Change> exchanged = {{Op::Multiply, model_.broken, formed / broken}, {Op::Multiply, model_.formed, broken / formed}};
+    std::vector<Change> exchanged = {{Op::Multiply, model_.broken, formed / broken},
+                                     {Op::Multiply, model_.formed, broken / formed}};
     add(SlipKind::SidesExchanged, 0, 0, "broken and formed exchanged", exchanged);
     for (const SheetModel::Phase& phase : model_.phases) exchanged.push_back({Op::Multiply, phase.value, -1});
-    if (!model_.phases.empty()) add(SlipKind::SidesExchanged, 0, 0, "reactants and products exchanged", exchanged);
+    if (!model_.phases.empty())
+      add(SlipKind::SidesExchanged, 0, 0, "reactants and products exchanged", exchanged);
   }
 
   void swapped(Node node, const std::string& what, std::size_t row, std::size_t line) {
     const double right = base_[node];
-    // Whole kJ as prices and bond sums stand on paper; a figure with decimals has them transposed where it is typed.
-    if (std::fabs(right) < 10 || std::fabs(right) > 1e9 || std::fabs(right - std::round(right)) > 1e-9) return;
+    // Whole kJ as prices and bond sums stand on paper; a figure with decimals has them transposed where it is
+    // typed.
+    if (std::fabs(right) < 10 || std::fabs(right) > 1e9 || std::fabs(right - std::round(right)) > 1e-9)
+      return;
     const std::string from = std::to_string(static_cast<long long>(std::round(std::fabs(right))));
     for (std::size_t i = 0; i + 1 < from.size(); ++i) {
       if (from[i] == from[i + 1]) continue;
       std::string turned = from;
       std::swap(turned[i], turned[i + 1]);
       const double wrong = std::copysign(*parse_number(turned), right);
-      add(SlipKind::DigitsTransposed, row, line, "digits transposed in " + what + ": " + figure(wrong) + " instead of " + figure(right),
+      add(SlipKind::DigitsTransposed, row, line,
+          "digits transposed in " + what + ": " + figure(wrong) + " instead of " + figure(right),
           {{Op::Replace, node, wrong}});
     }
   }
@@ -253,10 +279,12 @@ class Collector {
       for (std::size_t l = 0; l < model_.rows[r].lines.size(); ++l) {
         const std::string what = ledger_.rows[r].lines[l].label + " of " + name(r);
         swapped(model_.rows[r].lines[l].price, "the price of " + what, r, l);
-        if (model_.rows[r].lines[l].count_value > 1) swapped(model_.rows[r].lines[l].sum, "the sum of " + what, r, l);
+        if (model_.rows[r].lines[l].count_value > 1)
+          swapped(model_.rows[r].lines[l].sum, "the sum of " + what, r, l);
       }
       swapped(model_.rows[r].per_mole, "the bond sum of " + name(r), r, 0);
-      if (model_.rows[r].coefficient_value != 1) swapped(model_.rows[r].in_equation, "the figure of " + name(r), r, 0);
+      if (model_.rows[r].coefficient_value != 1)
+        swapped(model_.rows[r].in_equation, "the figure of " + name(r), r, 0);
     }
     swapped(model_.broken, "broken", 0, 0);
     swapped(model_.formed, "formed", 0, 0);
@@ -269,8 +297,10 @@ class Collector {
     if (std::fabs(cell.theirs - ours) <= cell.tolerance) return;
     if (transposed(ours, cell.theirs)) {
       const std::string words = "digits transposed: " + figure(cell.theirs) + " instead of " + figure(ours);
-      if (std::fabs(ours - std::round(ours)) > 1e-9) add(SlipKind::DigitsTransposed, 0, 0, words, {{Op::Add, cell.node, cell.theirs - ours}});
-      add(SlipKind::DigitsTransposed, 0, 0, words + ", in this place only", {{Op::Add, cell.node, cell.theirs - ours}}, true);
+      if (std::fabs(ours - std::round(ours)) > 1e-9)
+        add(SlipKind::DigitsTransposed, 0, 0, words, {{Op::Add, cell.node, cell.theirs - ours}});
+      add(SlipKind::DigitsTransposed, 0, 0, words + ", in this place only",
+          {{Op::Add, cell.node, cell.theirs - ours}}, true);
     }
     const auto here = [&](SlipKind kind, double factor, const char* words) {
       add(kind, 0, 0, words, {{Op::Multiply, cell.node, factor}}, true);
@@ -283,12 +313,16 @@ class Collector {
       for (std::size_t l = 0; l < model_.rows[r].lines.size(); ++l) {
         const SheetModel::Line& at = model_.rows[r].lines[l];
         if (at.price == cell.node && !ledger_.rows[r].lines[l].second) {
-          add(SlipKind::OtherPrice, r, l, ledger_.rows[r].lines[l].label + " of " + name(r) + " priced with " + figure(cell.theirs) +
-              ", which no table here has", {{Op::Replace, at.price, cell.theirs}});
-        } else if (at.count == cell.node && std::fabs(cell.theirs - at.count_value) > 1.5 && !ledger_.rows[r].lines[l].second) {
+          add(SlipKind::OtherPrice, r, l,
+              ledger_.rows[r].lines[l].label + " of " + name(r) + " priced with " + figure(cell.theirs) +
+                  ", which no table here has",
+              {{Op::Replace, at.price, cell.theirs}});
+        } else if (at.count == cell.node && std::fabs(cell.theirs - at.count_value) > 1.5 &&
+                   !ledger_.rows[r].lines[l].second) {
           add(cell.theirs < at.count_value ? SlipKind::BondMissed : SlipKind::BondTwice, r, l,
-              ledger_.rows[r].lines[l].label + " of " + name(r) + " counted " + figure(cell.theirs) + " × instead of " +
-                  figure(at.count_value) + " ×", {{Op::Replace, at.count, cell.theirs}});
+              ledger_.rows[r].lines[l].label + " of " + name(r) + " counted " + figure(cell.theirs) +
+                  " × instead of " + figure(at.count_value) + " ×",
+              {{Op::Replace, at.count, cell.theirs}});
         }
       }
     }
@@ -299,7 +333,8 @@ class Collector {
     for (const double scale : {1.0, 10.0, 100.0}) {
       const double a = std::round(std::fabs(right) * scale), b = std::round(std::fabs(wrong) * scale);
       if (std::fabs(std::fabs(wrong) * scale - b) > 1e-6 * scale || a > 1e12 || b > 1e12 || a == b) continue;
-      const std::string from = std::to_string(static_cast<long long>(a)), to = std::to_string(static_cast<long long>(b));
+      const std::string from = std::to_string(static_cast<long long>(a)),
+                        to = std::to_string(static_cast<long long>(b));
       for (std::size_t i = 0; i + 1 < from.size(); ++i) {
         std::string swapped = from;
         std::swap(swapped[i], swapped[i + 1]);
@@ -318,8 +353,8 @@ class Collector {
 
 }  // namespace
 
-std::vector<Candidate> candidate_slips(const Ledger& ledger, const SheetModel& model, const std::vector<double>& base,
-                                       const std::vector<TypedCell>& typed) {
+std::vector<Candidate> candidate_slips(const Ledger& ledger, const SheetModel& model,
+                                       const std::vector<double>& base, const std::vector<TypedCell>& typed) {
   return Collector(ledger, model, base, typed).collect();
 }
 
@@ -335,11 +370,13 @@ std::vector<Candidate> mixed_tables(const Ledger& ledger, const SheetModel& mode
         const std::optional<double> value = estimate::BondSet::value_in(set, type);
         if (set == ledger.set->name() || !value) continue;
         Candidate candidate;
-        candidate.slip = Slip{SlipKind::OtherPrice, r, l, ledger.rows[r].lines[l].label + " priced with " + figure(*value / kJ) +
-                              " of the table \"" + set + "\""};
+        candidate.slip = Slip{SlipKind::OtherPrice, r, l,
+                              ledger.rows[r].lines[l].label + " priced with " + figure(*value / kJ) +
+                                  " of the table \"" + set + "\""};
         for (std::size_t r2 = 0; r2 < model.rows.size(); ++r2) {
           for (std::size_t l2 = 0; l2 < model.rows[r2].lines.size(); ++l2) {
-            if (ledger.rows[r2].lines[l2].type == type) candidate.changes.push_back({Op::Replace, model.rows[r2].lines[l2].price, *value / kJ});
+            if (ledger.rows[r2].lines[l2].type == type)
+              candidate.changes.push_back({Op::Replace, model.rows[r2].lines[l2].price, *value / kJ});
           }
         }
         found.push_back(std::move(candidate));

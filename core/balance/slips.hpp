@@ -25,8 +25,8 @@ struct TypedCell {
 /// All candidates, the kinds met most often first.
 /// @param base   the sheet without a slip
 /// @param typed  figures whose own digits suggest a slip (transposition, a price of unknown origin)
-std::vector<Candidate> candidate_slips(const Ledger& ledger, const SheetModel& model, const std::vector<double>& base,
-                                       const std::vector<TypedCell>& typed);
+std::vector<Candidate> candidate_slips(const Ledger& ledger, const SheetModel& model,
+                                       const std::vector<double>& base, const std::vector<TypedCell>& typed);
 
 /// Prices of one bond type taken from another published table: no slip, but what mixing tables does.
 std::vector<Candidate> mixed_tables(const Ledger& ledger, const SheetModel& model);

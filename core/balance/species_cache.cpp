@@ -1,7 +1,7 @@
 #include <unordered_map>
 
-#include "core/base/check.hpp"
 #include "core/balance/reaction.hpp"
+#include "core/base/check.hpp"
 
 namespace heatledger::balance {
 
@@ -29,7 +29,8 @@ CachedSpecies::~CachedSpecies() = default;
 
 Result<std::shared_ptr<const facts::Species>> CachedSpecies::species(std::string_view text, bool quoted) {
   Store& store = *store_;
-  store.key.assign(1, quoted ? '"' : ' ').append(text);  // a quoted text means something else than the bare one
+  store.key.assign(1, quoted ? '"' : ' ')
+      .append(text);  // a quoted text means something else than the bare one
   if (const auto found = store.newer.find(store.key); found != store.newer.end()) return found->second;
   if (const auto found = store.older.find(store.key); found != store.older.end()) {
     std::shared_ptr<const facts::Species> species = found->second;

@@ -33,7 +33,8 @@ std::vector<std::string> strains_of(const facts::Species& species) {
   std::vector<std::string> found;
   if (!species.graph) return found;
   const Graph& graph = *species.graph;
-  if (std::any_of(graph.bonds.begin(), graph.bonds.end(), [](const molecule::Bond& bond) { return bond.aromatic; })) {
+  if (std::any_of(graph.bonds.begin(), graph.bonds.end(),
+                  [](const molecule::Bond& bond) { return bond.aromatic; })) {
     found.emplace_back("aromatic ring: its resonance is not in average bonds, so the bond sum is too small");
   }
   for (const molecule::Ring& ring : molecule::relevant_cycles(graph)) {
@@ -42,9 +43,12 @@ std::vector<std::string> strains_of(const facts::Species& species) {
                        ": its strain is not in average bonds, so the bond sum is too large");
     break;
   }
-  if (std::any_of(species.bonds.begin(), species.bonds.end(),
-                  [](const molecule::BondCount& bond) { return bond.type.setting == molecule::Setting::Nitro; })) {
-    found.emplace_back("nitro group: its two N–O bonds are equal, and together stronger than one single plus one double bond");
+  if (std::any_of(species.bonds.begin(), species.bonds.end(), [](const molecule::BondCount& bond) {
+        return bond.type.setting == molecule::Setting::Nitro;
+      })) {
+    found.emplace_back(
+        "nitro group: its two N–O bonds are equal, and together stronger than one single plus one double "
+        "bond");
   }
   Adjacency around;
   molecule::build_adjacency(graph, around);

@@ -8,9 +8,10 @@
 
 namespace heatledger::balance {
 
-/// Groups of the structure that a sum of average bonds misses, in plain words, the heaviest first; empty for plain ones.
-/// @source size and sign of each: gas atomisation enthalpies (ATcT 1.112, CRC Handbook 95th ed.) against bond sums of
-/// the primary set; test Strains, NamesWhatTheBondSumMisses
+/// Groups of the structure that a sum of average bonds misses, in plain words, the heaviest first; empty for
+/// plain ones.
+/// @source size and sign of each: gas atomisation enthalpies (ATcT 1.112, CRC Handbook 95th ed.) against bond
+/// sums of the primary set; test Strains, NamesWhatTheBondSumMisses
 std::vector<std::string> strains_of(const facts::Species& species);
 
 }  // namespace heatledger::balance

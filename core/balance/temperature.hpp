@@ -5,8 +5,8 @@
 
 namespace heatledger::balance {
 
-/// Fills `to_temperature` and `as_run` of a ledger whose routes are known: ΔH(run) = ΔH(25 °C) + Σ products ν Δh(T) −
-/// Σ reactants ν Δh(T), every species kept in the phase written.
+/// Fills `to_temperature` and `as_run` of a ledger whose routes are known: ΔH(run) = ΔH(25 °C) + Σ products ν
+/// Δh(T) − Σ reactants ν Δh(T), every species kept in the phase written.
 void run_at_temperatures(Ledger& ledger, const LedgerOptions& options);
 
 }  // namespace heatledger::balance

@@ -7,12 +7,16 @@
 namespace heatledger::balance {
 namespace {
 
-bool is_digit(char c) { return c >= '0' && c <= '9'; }
+bool is_digit(char c) {
+  return c >= '0' && c <= '9';
+}
 
-/// Length of a blank that may stand between thousands: blank, comma, thin or narrow or no-break space, apostrophe.
+/// Length of a blank that may stand between thousands: blank, comma, thin or narrow or no-break space,
+/// apostrophe.
 std::size_t separator_at(std::string_view text, std::size_t at) {
-  for (const std::string_view mark : {std::string_view(" "), std::string_view(","), std::string_view("'"), std::string_view("\u2009"),
-                                      std::string_view("\u202f"), std::string_view("\u00a0")}) {
+  for (const std::string_view mark :
+       {std::string_view(" "), std::string_view(","), std::string_view("'"), std::string_view("\u2009"),
+        std::string_view("\u202f"), std::string_view("\u00a0")}) {
     if (text.substr(at, mark.size()) == mark) return mark.size();
   }
   return 0;
@@ -22,8 +26,9 @@ std::string without_separators(std::string_view text) {
   std::string plain;
   for (std::size_t i = 0; i < text.size();) {
     const std::size_t length = separator_at(text, i);
-    const bool between = length > 0 && i > 0 && is_digit(text[i - 1]) && i + length + 2 < text.size() && is_digit(text[i + length]) &&
-                         is_digit(text[i + length + 1]) && is_digit(text[i + length + 2]);
+    const bool between = length > 0 && i > 0 && is_digit(text[i - 1]) && i + length + 2 < text.size() &&
+                         is_digit(text[i + length]) && is_digit(text[i + length + 1]) &&
+                         is_digit(text[i + length + 2]);
     if (between) {
       i += length;
     } else {
@@ -37,7 +42,8 @@ std::optional<double> kilojoules_per_unit(std::string_view unit) {
   while (!unit.empty() && unit.front() == ' ') unit.remove_prefix(1);
   while (!unit.empty() && unit.back() == ' ') unit.remove_suffix(1);
   for (const std::string_view per : {"/mol", "/kg"}) {
-    if (unit.size() > per.size() && unit.substr(unit.size() - per.size()) == per) unit.remove_suffix(per.size());
+    if (unit.size() > per.size() && unit.substr(unit.size() - per.size()) == per)
+      unit.remove_suffix(per.size());
   }
   if (unit.empty() || unit == "kJ") return 1.0;
   if (unit == "J") return 0.001;

@@ -11,8 +11,8 @@ struct TypedFigure {
   double last_digit = 1;  ///< value of one unit of the last digit typed, same unit
 };
 
-/// Reads a number with thin spaces, blanks or commas between thousands, true minus, then nothing, J, kJ, MJ, cal or
-/// kcal, optionally per mol or kg. @return empty when the text is no such figure
+/// Reads a number with thin spaces, blanks or commas between thousands, true minus, then nothing, J, kJ, MJ,
+/// cal or kcal, optionally per mol or kg. @return empty when the text is no such figure
 std::optional<TypedFigure> read_typed_figure(std::string_view text);
 
 }  // namespace heatledger::balance

@@ -6,7 +6,8 @@
 namespace heatledger {
 
 void check_failed(const char* file, int line, const char* condition, const char* expected) {
-  std::fprintf(stderr, "heatledger: internal error at %s:%d: expected %s (%s)\n", file, line, expected, condition);
+  std::fprintf(stderr, "heatledger: internal error at %s:%d: expected %s (%s)\n", file, line, expected,
+               condition);
   std::abort();
 }
 

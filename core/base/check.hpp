@@ -5,9 +5,10 @@ namespace heatledger {
 [[noreturn]] void check_failed(const char* file, int line, const char* condition, const char* expected);
 }
 
-/// CHECK(condition, "what was expected"): stops the program with place and expectation when condition is false.
-#define CHECK(condition, expected)                                                   \
-  do {                                                                               \
-    if (!(condition)) [[unlikely]]                                                   \
-      ::heatledger::check_failed(__FILE__, __LINE__, #condition, expected);          \
+/// CHECK(condition, "what was expected"): stops the program with place and expectation when condition is
+/// false.
+#define CHECK(condition, expected)                                          \
+  do {                                                                      \
+    if (!(condition)) [[unlikely]]                                          \
+      ::heatledger::check_failed(__FILE__, __LINE__, #condition, expected); \
   } while (false)

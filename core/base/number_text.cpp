@@ -15,7 +15,9 @@ namespace {
 constexpr std::string_view kMinus = "\u2212";
 constexpr std::string_view kThinSpace = "\u2009";
 
-bool is_digit(char c) { return c >= '0' && c <= '9'; }
+bool is_digit(char c) {
+  return c >= '0' && c <= '9';
+}
 
 /// printf and strtod follow the C locale only; a face that calls setlocale must not change a figure.
 std::string c_locale(std::string text) {
@@ -46,12 +48,14 @@ constexpr std::array<std::uint64_t, 19> kPowers = {1,
                                                    1000000000000000000};
 
 /// Where the number of digits before the point changes.
-constexpr std::array<double, 20> kBorders = {1e-5, 1e-4, 1e-3, 1e-2, 1e-1, 1e0, 1e1, 1e2, 1e3, 1e4,
+constexpr std::array<double, 20> kBorders = {1e-5, 1e-4, 1e-3, 1e-2, 1e-1, 1e0,  1e1,  1e2,  1e3,  1e4,
                                              1e5,  1e6,  1e7,  1e8,  1e9,  1e10, 1e11, 1e12, 1e13, 1e14};
 
-/// |value| · 10^places rounded to the nearest whole number, ties to even, exactly as printf rounds: the double is a
-/// whole number of at most 53 bits times a power of two, so the product is formed without error in 128 bits.
-/// @return empty when the answer would pass 10^18 or places lie outside 0 to 18; the caller then takes the slow way
+/// |value| · 10^places rounded to the nearest whole number, ties to even, exactly as printf rounds: the
+/// double is a whole number of at most 53 bits times a power of two, so the product is formed without error
+/// in 128 bits.
+/// @return empty when the answer would pass 10^18 or places lie outside 0 to 18; the caller then takes the
+/// slow way
 std::optional<std::uint64_t> scaled_exactly(double value, int places) {
   if (places < 0 || places > 18 || !(std::fabs(value) < 1e18)) return std::nullopt;
   int exponent = 0;
@@ -99,7 +103,8 @@ std::string fixed(double value, int decimals) {
   return c_locale(std::string(buffer.data(), static_cast<std::size_t>(length)));
 }
 
-/// Up to 15 digits and a power of ten up to 22: both are exact doubles, so one division or product rounds correctly.
+/// Up to 15 digits and a power of ten up to 22: both are exact doubles, so one division or product rounds
+/// correctly.
 /// @source W. D. Clinger, How to read floating point numbers accurately (PLDI 1990), fast path
 std::optional<double> short_number(const std::string& plain) {
   std::uint64_t digits = 0;
@@ -222,7 +227,8 @@ void append_machine_number(std::string& text, double value, int digits) {
   }
   const double size = std::fabs(value);
   if (size >= 1e-6 && size < 1e15) {
-    // Decimals that leave `digits` significant ones. At a border rounding may give one digit more: then all are zeros.
+    // Decimals that leave `digits` significant ones. At a border rounding may give one digit more: then all
+    // are zeros.
     int places = digits + 5;
     for (const double border : kBorders) {
       if (size < border) break;

@@ -16,8 +16,8 @@ std::optional<double> parse_number(std::string_view text);
 /// As parse_number, but reads a prefix; `length` receives the bytes taken.
 std::optional<double> parse_number_prefix(std::string_view text, std::size_t& length);
 
-/// `value` rounded to at most `digits` significant digits (1 to 15), shortest form, '.' as point, '-' as minus:
-/// the text for files and JSON. Exponent form outside 1e-6 .. 1e15. Zero is "0", never "-0".
+/// `value` rounded to at most `digits` significant digits (1 to 15), shortest form, '.' as point, '-' as
+/// minus: the text for files and JSON. Exponent form outside 1e-6 .. 1e15. Zero is "0", never "-0".
 /// @validity finite values; CHECKs otherwise (a value that cannot be computed is never a number)
 /// Exact: from 1e-6 to 1e9 in whole numbers of 128 bits, elsewhere by printf; both give the same text.
 std::string machine_number(double value, int digits = 10);

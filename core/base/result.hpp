@@ -12,7 +12,8 @@ namespace heatledger {
 
 /// What went wrong, where, and what to do next: the one error shape of every face.
 struct Error {
-  std::string code;     ///< stable dotted word such as `smiles.unclosed_ring`; the list is core/base/error_codes.md
+  std::string
+      code;  ///< stable dotted word such as `smiles.unclosed_ring`; the list is core/base/error_codes.md
   std::string message;  ///< one calm sentence
   std::string where;    ///< field path ("reactions[0].equation"), line, or byte offset ("offset 7")
   std::string hint;     ///< what to do next
@@ -60,6 +61,8 @@ class [[nodiscard]] Result {
 
 /// The Result of something that only succeeds or fails.
 using Status = Result<std::monostate>;
-inline Status success() { return std::monostate{}; }
+inline Status success() {
+  return std::monostate{};
+}
 
 }  // namespace heatledger

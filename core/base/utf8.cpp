@@ -7,13 +7,20 @@ namespace {
 
 constexpr std::array<std::string_view, 5> kWideBlanks = {"\u00A0", "\u2009", "\u2007", "\u202F", "\u3000"};
 
-bool is_plain(char c) { return static_cast<unsigned char>(c) < 0x80; }
-bool is_plain_blank(char c) { return c == ' ' || c == '\t' || c == '\n' || c == '\r'; }
+bool is_plain(char c) {
+  return static_cast<unsigned char>(c) < 0x80;
+}
+bool is_plain_blank(char c) {
+  return c == ' ' || c == '\t' || c == '\n' || c == '\r';
+}
 
-bool is_continuation(char c) { return (static_cast<unsigned char>(c) & 0xC0u) == 0x80u; }
+bool is_continuation(char c) {
+  return (static_cast<unsigned char>(c) & 0xC0u) == 0x80u;
+}
 
 bool is_combining(std::uint32_t c) {
-  return (c >= 0x0300 && c <= 0x036F) || (c >= 0x20D0 && c <= 0x20FF) || c == 0x200B || c == 0x200D || c == 0xFE0F;
+  return (c >= 0x0300 && c <= 0x036F) || (c >= 0x20D0 && c <= 0x20FF) || c == 0x200B || c == 0x200D ||
+         c == 0xFE0F;
 }
 
 bool is_wide(std::uint32_t c) {

@@ -9,7 +9,8 @@
 namespace heatledger::document {
 namespace {
 
-/// Remembered results beyond those on the sheet: enough for undo and redo over the last edits without recomputing.
+/// Remembered results beyond those on the sheet: enough for undo and redo over the last edits without
+/// recomputing.
 constexpr std::size_t kSpareResults = 512;
 
 /// The inputs of one ledger; typed bonds enter by the identity of their list.
@@ -56,7 +57,8 @@ Overlay read_typed_bonds(const TypedBonds& typed) {
       continue;
     }
     if (figure->value <= 0) {
-      overlay.errors.push_back({"typed_bond.not_positive", "A bond enthalpy is a positive figure.", path + ".value",
+      overlay.errors.push_back({"typed_bond.not_positive", "A bond enthalpy is a positive figure.",
+                                path + ".value",
                                 "Breaking a bond takes heat: type the figure without a sign."});
       continue;
     }

@@ -11,12 +11,13 @@
 
 namespace heatledger::document {
 
-/// A reaction of the sheet computed: a ledger, or the error that stands in its place. Immutable: the same inputs give
-/// the same object, so that a page can tell by identity what an edit reached.
+/// A reaction of the sheet computed: a ledger, or the error that stands in its place. Immutable: the same
+/// inputs give the same object, so that a page can tell by identity what an edit reached.
 struct ReactionResult {
-  std::shared_ptr<const balance::Reaction> reaction;  ///< null when the equation is empty or could not be read
-  std::shared_ptr<const balance::Ledger> ledger;      ///< null when not balanced or not readable
-  std::optional<Error> error;                         ///< of the equation or the ledger
+  std::shared_ptr<const balance::Reaction>
+      reaction;                                   ///< null when the equation is empty or could not be read
+  std::shared_ptr<const balance::Ledger> ledger;  ///< null when not balanced or not readable
+  std::optional<Error> error;                     ///< of the equation or the ledger
   std::optional<Error> option_error;  ///< of basis, bond set or route; the ledger then stands on the default
 };
 

@@ -33,7 +33,11 @@ bool History::redo() {
   return true;
 }
 
-std::string History::undo_label() const { return can_undo() ? entries_[at_].label : std::string(); }
-std::string History::redo_label() const { return can_redo() ? entries_[at_ + 1].label : std::string(); }
+std::string History::undo_label() const {
+  return can_undo() ? entries_[at_].label : std::string();
+}
+std::string History::redo_label() const {
+  return can_redo() ? entries_[at_ + 1].label : std::string();
+}
 
 }  // namespace heatledger::document

@@ -54,8 +54,8 @@ std::optional<double> take_number(std::string_view text, std::size_t& at) {
       continue;
     }
     const std::size_t next = end + blank;
-    const bool thousands = end > at && is_digit(text, end - 1) && is_digit(text, next) && is_digit(text, next + 1) &&
-                           is_digit(text, next + 2) && !is_digit(text, next + 3);
+    const bool thousands = end > at && is_digit(text, end - 1) && is_digit(text, next) &&
+                           is_digit(text, next + 1) && is_digit(text, next + 2) && !is_digit(text, next + 3);
     if (!thousands) break;
     end = next;
   }
@@ -108,7 +108,8 @@ Result<uncertainty::Figure> parse_molar_energy(std::string_view text) {
       if (known.name == unit) factor = known.joule_per_mole;
     }
     if (factor == 0) {
-      return Error{"typed_energy.unit", "The unit \"" + std::string(unit) + "\" is not one of energy per mole.",
+      return Error{"typed_energy.unit",
+                   "The unit \"" + std::string(unit) + "\" is not one of energy per mole.",
                    "offset " + std::to_string(at), "Use kJ/mol, J/mol, kcal/mol, cal/mol or eV."};
     }
   }

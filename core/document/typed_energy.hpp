@@ -8,8 +8,9 @@
 
 namespace heatledger::document {
 
-/// Reads a number, an optional ± and an optional unit: kJ/mol (when none is given), J/mol, kcal/mol, cal/mol, eV.
-/// Thin spaces between thousands and the true minus sign are understood, so that a printed figure reads back.
+/// Reads a number, an optional ± and an optional unit: kJ/mol (when none is given), J/mol, kcal/mol, cal/mol,
+/// eV. Thin spaces between thousands and the true minus sign are understood, so that a printed figure reads
+/// back.
 /// @return [J/mol] value and ± (zero when none is typed: taken as exact)
 /// @errors typed_energy.not_a_number, typed_energy.unit; `where` is "offset N"
 Result<uncertainty::Figure> parse_molar_energy(std::string_view text);

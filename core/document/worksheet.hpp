@@ -1,5 +1,6 @@
-// The worksheet: what a person typed, nothing derived. Parts are shared between states, so that copying a sheet for
-// an edit is cheap. Edits and undo stand in history.hpp, results in computation.hpp, the file in core/file.
+// The worksheet: what a person typed, nothing derived. Parts are shared between states, so that copying a
+// sheet for an edit is cheap. Edits and undo stand in history.hpp, results in computation.hpp, the file in
+// core/file.
 #pragma once
 
 #include <map>
@@ -50,7 +51,8 @@ struct Worksheet {
   Shared<TypedBonds> typed_bonds;
   Shared<Lines> notes;        ///< free notes
   Shared<Lines> assumptions;  ///< numbered on the sheet
-  /// JSON object text of the keys of this level that this version does not know, kept for the round trip; or empty.
+  /// JSON object text of the keys of this level that this version does not know, kept for the round trip; or
+  /// empty.
   Shared<std::string> unknown;
 };
 

@@ -27,19 +27,23 @@ BondType plain(BondType type) {
   return type;
 }
 
-/// Which column prices this row in a set: its own, else the molecule's own figure for a molecule-specific row.
+/// Which column prices this row in a set: its own, else the molecule's own figure for a molecule-specific
+/// row.
 std::optional<BondColumn> pricing_column(const BondTableRow& row, std::size_t set) {
   if (row.value[set]) return static_cast<BondColumn>(set);
-  const bool of_one_molecule = row.type.setting != Setting::Plain && row.type.setting != Setting::AromaticRing;
+  const bool of_one_molecule =
+      row.type.setting != Setting::Plain && row.type.setting != Setting::AromaticRing;
   const auto molecule = static_cast<std::size_t>(BondColumn::Molecule);
   if (of_one_molecule && row.value[molecule]) return BondColumn::Molecule;
   return std::nullopt;
 }
 
 bool is_specific(const BondType& type) {
-  const bool diatomic_element = type.first == type.second && (type.order == Order::Triple || type.first == 1 ||
-                                                              (type.first == 8 && type.order == Order::Double));
-  return (type.setting != Setting::Plain && type.setting != Setting::AromaticRing) || (diatomic_element && type.first != 6);
+  const bool diatomic_element =
+      type.first == type.second &&
+      (type.order == Order::Triple || type.first == 1 || (type.first == 8 && type.order == Order::Double));
+  return (type.setting != Setting::Plain && type.setting != Setting::AromaticRing) ||
+         (diatomic_element && type.first != 6);
 }
 
 std::optional<std::size_t> set_index(std::string_view name) {
@@ -52,8 +56,9 @@ std::optional<std::size_t> set_index(std::string_view name) {
 
 const BondTableRow* table_row(const BondType& type) {
   const std::vector<BondTableRow>& rows = bond_table();
-  const auto at = std::lower_bound(rows.begin(), rows.end(), type,
-                                   [](const BondTableRow& row, const BondType& wanted) { return row.type < wanted; });
+  const auto at =
+      std::lower_bound(rows.begin(), rows.end(), type,
+                       [](const BondTableRow& row, const BondType& wanted) { return row.type < wanted; });
   return at != rows.end() && at->type == type ? &*at : nullptr;
 }
 
@@ -62,14 +67,23 @@ const BondTableRow* table_row(const BondType& type) {
 BondType priced_type(const BondType& type) {
   BondType result = type;
   switch (type.setting) {
-    case Setting::Nitro: result.setting = Setting::Plain; break;
-    case Setting::AromaticRing: result.order = Order::Single; break;
+    case Setting::Nitro:
+      result.setting = Setting::Plain;
+      break;
+    case Setting::AromaticRing:
+      result.order = Order::Single;
+      break;
     case Setting::NitrogenDioxide:
     case Setting::Ozone:
     case Setting::NitricOxide:
-    case Setting::CarbonDioxide: result.order = Order::Double; break;
-    case Setting::CarbonMonoxide: result.order = Order::Triple; break;
-    default: break;
+    case Setting::CarbonDioxide:
+      result.order = Order::Double;
+      break;
+    case Setting::CarbonMonoxide:
+      result.order = Order::Triple;
+      break;
+    default:
+      break;
   }
   return result;
 }
@@ -77,7 +91,8 @@ BondType priced_type(const BondType& type) {
 const std::vector<std::string>& BondSet::names() {
   static const std::vector<std::string> ids = [] {
     std::vector<std::string> list;
-    for (std::size_t i = 0; i < kBondTables; ++i) list.emplace_back(bond_table_info(static_cast<BondColumn>(i)).id);
+    for (std::size_t i = 0; i < kBondTables; ++i)
+      list.emplace_back(bond_table_info(static_cast<BondColumn>(i)).id);
     return list;
   }();
   return ids;
@@ -88,7 +103,8 @@ Result<BondSet> BondSet::published(std::string_view name) {
   if (!index) {
     std::string known;
     for (const std::string& id : names()) known += (known.empty() ? "" : ", ") + id;
-    return Error{"bond_set.unknown", "There is no bond set \"" + std::string(name) + "\".", "", "Choose one of: " + known + "."};
+    return Error{"bond_set.unknown", "There is no bond set \"" + std::string(name) + "\".", "",
+                 "Choose one of: " + known + "."};
   }
   BondSet set;
   const BondTableInfo& info = bond_table_info(static_cast<BondColumn>(*index));
@@ -147,7 +163,8 @@ std::optional<double> BondSet::value_in(std::string_view set, const BondType& ty
   for (const BondType& wanted : {priced_type(type), plain(type)}) {
     const BondTableRow* row = table_row(wanted);
     if (row == nullptr) continue;
-    if (const std::optional<BondColumn> column = pricing_column(*row, *index)) return row->value[static_cast<std::size_t>(*column)];
+    if (const std::optional<BondColumn> column = pricing_column(*row, *index))
+      return row->value[static_cast<std::size_t>(*column)];
   }
   return std::nullopt;
 }
@@ -161,7 +178,8 @@ std::vector<std::string> BondSet::sets_with(const BondType& type) {
 }
 
 std::string_view BondSet::spread_remark() {
-  return "The ± of the average set is a 95 % half width, one for each bond type, fitted to compounds with evaluated formation "
+  return "The ± of the average set is a 95 % half width, one for each bond type, fitted to compounds with "
+         "evaluated formation "
          "enthalpies: 95 of 100 bond sums of molecules left out of that fit lie within it.";
 }
 

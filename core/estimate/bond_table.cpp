@@ -23,7 +23,8 @@ constexpr double kJ = 1000.0;
 constexpr BondTableInfo kInfo[kBondColumns] = {
     {"zumdahl", "Zumdahl, average bond energies", "Zumdahl, Chemistry, average bond energies"},
     {"atkins", "Atkins, mean bond enthalpies", "Atkins, Physical Chemistry, mean bond enthalpies"},
-    {"huheey", "Huheey, after Darwent and Cottrell", "Huheey, Inorganic Chemistry, after Darwent and Cottrell"},
+    {"huheey", "Huheey, after Darwent and Cottrell",
+     "Huheey, Inorganic Chemistry, after Darwent and Cottrell"},
     {"reusch", "Reusch, table in kcal/mol", "Reusch, average bond energies, kcal/mol × 4.184"},
     {"molecule", "one molecule", "atomisation of the molecule, ATcT 1.112 and CODATA"},
 };
@@ -104,10 +105,12 @@ std::vector<BondTableRow> read_tables() {
     row.spread_u95 = spread_half_width(row.value);
     rows.push_back(row);
   });
-  std::sort(rows.begin(), rows.end(), [](const BondTableRow& a, const BondTableRow& b) { return a.type < b.type; });
+  std::sort(rows.begin(), rows.end(),
+            [](const BondTableRow& a, const BondTableRow& b) { return a.type < b.type; });
   for_each_row(tables::bond_spread_factors, 6, [&rows](const std::vector<std::string_view>& cells) {
     const BondType type = type_of(cells);
-    const auto row = std::find_if(rows.begin(), rows.end(), [&type](const BondTableRow& r) { return r.type == type; });
+    const auto row =
+        std::find_if(rows.begin(), rows.end(), [&type](const BondTableRow& r) { return r.type == type; });
     const std::optional<double> factor = parse_number(cells[4]), molecules = parse_number(cells[5]);
     CHECK(row != rows.end() && factor && molecules, "a spread factor belongs to a bond of the tables");
     row->factor = *factor;
@@ -118,7 +121,9 @@ std::vector<BondTableRow> read_tables() {
 
 }  // namespace
 
-const BondTableInfo& bond_table_info(BondColumn column) { return kInfo[static_cast<std::size_t>(column)]; }
+const BondTableInfo& bond_table_info(BondColumn column) {
+  return kInfo[static_cast<std::size_t>(column)];
+}
 
 const std::vector<BondTableRow>& bond_table() {
   static const std::vector<BondTableRow> rows = read_tables();

@@ -13,8 +13,10 @@ namespace {
 std::uint32_t letters_of(std::string_view key) {
   std::uint32_t bits = 0;
   for (const char c : key) {
-    if (c >= 'a' && c <= 'z') bits |= 1u << (c - 'a');
-    else if (c >= '0' && c <= '9') bits |= 1u << (26 + (c - '0') % 6);
+    if (c >= 'a' && c <= 'z')
+      bits |= 1u << (c - 'a');
+    else if (c >= '0' && c <= '9')
+      bits |= 1u << (26 + (c - '0') % 6);
   }
   return bits;
 }
@@ -22,13 +24,16 @@ std::uint32_t letters_of(std::string_view key) {
 /// First eight bytes, the first highest; shorter texts are filled up with zero.
 std::uint64_t head_of(std::string_view text) {
   std::uint64_t head = 0;
-  for (std::size_t i = 0; i < 8; ++i) head = (head << 8) | (i < text.size() ? static_cast<unsigned char>(text[i]) : 0u);
+  for (std::size_t i = 0; i < 8; ++i)
+    head = (head << 8) | (i < text.size() ? static_cast<unsigned char>(text[i]) : 0u);
   return head;
 }
 
 bool begins_word(std::string_view name, std::size_t at) {
   if (at == 0) return true;
-  const auto is_letter = [](char c) { return (c >= 'a' && c <= 'z') || (c >= 'A' && c <= 'Z') || (c & 0x80) != 0; };
+  const auto is_letter = [](char c) {
+    return (c >= 'a' && c <= 'z') || (c >= 'A' && c <= 'Z') || (c & 0x80) != 0;
+  };
   return is_letter(name[at]) && !is_letter(name[at - 1]);
 }
 
@@ -36,7 +41,8 @@ bool begins_word(std::string_view name, std::size_t at) {
 
 EditPattern::EditPattern(std::string_view pattern) : length_(static_cast<int>(pattern.size())) {
   CHECK(!pattern.empty() && pattern.size() <= 64, "a pattern of one machine word");
-  for (std::size_t i = 0; i < pattern.size(); ++i) match_[static_cast<unsigned char>(pattern[i])] |= 1ULL << i;
+  for (std::size_t i = 0; i < pattern.size(); ++i)
+    match_[static_cast<unsigned char>(pattern[i])] |= 1ULL << i;
 }
 
 int EditPattern::distance_to_beginning(std::string_view text) const {
@@ -106,8 +112,9 @@ std::vector<NameEntry> CompletionIndex::complete(std::string_view text, std::siz
     }
   };
   std::vector<Hit> hits;
-  const auto from = std::lower_bound(starts_.begin(), starts_.end(), wanted,
-                                     [this](const Start& start, const std::string& key) { return tail(start) < key; });
+  const auto from =
+      std::lower_bound(starts_.begin(), starts_.end(), wanted,
+                       [this](const Start& start, const std::string& key) { return tail(start) < key; });
   for (auto at = from; at != starts_.end() && tail(*at).substr(0, wanted.size()) == wanted; ++at) {
     const std::uint32_t length = keys_[at->entry].length;
     const int group = at->first_word ? (length == wanted.size() ? 0 : 1) : 2;
@@ -118,8 +125,9 @@ std::vector<NameEntry> CompletionIndex::complete(std::string_view text, std::siz
     // The first letter is hardly ever the wrong one; words that begin with it stand side by side.
     const EditPattern pattern(wanted);
     const std::uint32_t letters = letters_of(wanted);
-    const auto first = std::lower_bound(starts_.begin(), starts_.end(), wanted.substr(0, 1),
-                                        [this](const Start& start, const std::string& key) { return tail(start) < key; });
+    const auto first =
+        std::lower_bound(starts_.begin(), starts_.end(), wanted.substr(0, 1),
+                         [this](const Start& start, const std::string& key) { return tail(start) < key; });
     for (auto at = first; at != starts_.end() && tail(*at).substr(0, 1) == wanted.substr(0, 1); ++at) {
       // An edit brings at most one letter that the name does not have.
       const Key& whole = keys_[at->entry];
@@ -133,7 +141,8 @@ std::vector<NameEntry> CompletionIndex::complete(std::string_view text, std::siz
   }
   std::sort(hits.begin(), hits.end());
   for (const Hit& hit : hits) {
-    const bool seen = std::any_of(out.begin(), out.end(), [&](const NameEntry& e) { return e.row == hit.row; });
+    const bool seen =
+        std::any_of(out.begin(), out.end(), [&](const NameEntry& e) { return e.row == hit.row; });
     if (seen) continue;
     out.push_back(entries_[hit.entry]);
     if (out.size() == limit) break;

@@ -29,7 +29,8 @@ class CompletionIndex {
     std::uint32_t letters = 0;            ///< which letters occur, one bit each; digits share bits
   };
   struct Start {
-    std::uint64_t head = 0;   ///< the eight bytes that begin there as one number, so that most comparisons are one step
+    std::uint64_t head =
+        0;  ///< the eight bytes that begin there as one number, so that most comparisons are one step
     std::uint32_t begin = 0;  ///< byte of pool_ where a word of a key begins
     std::uint32_t entry = 0;
     bool first_word = false;

@@ -9,24 +9,26 @@
 
 namespace heatledger::facts {
 
-/// Another table's figure for the same quantity, kept in sight because it lies outside the ± of the one taken.
+/// Another table's figure for the same quantity, kept in sight because it lies outside the ± of the one
+/// taken.
 struct Rival {
   double value = 0;         ///< in the unit of the figure it stands beside
   std::string_view source;  ///< as Datum::source
 };
 
-/// A published figure: value, half width of its 95 % interval (never empty: the table's default where the source
-/// gives none, and then `u95_is_default`), source text.
-/// Where published tables disagree: `spread` is the largest less the smallest of all tables seen, `rivals` are the
-/// figures that were not taken, `why_taken` is one sentence in plain words.
+/// A published figure: value, half width of its 95 % interval (never empty: the table's default where the
+/// source gives none, and then `u95_is_default`), source text. Where published tables disagree: `spread` is
+/// the largest less the smallest of all tables seen, `rivals` are the figures that were not taken,
+/// `why_taken` is one sentence in plain words.
 struct Datum {
   double value = 0;
   double u95 = 0;
   bool u95_is_default = false;
-  double spread = 0;             ///< 0: one table only, or all agree
-  std::string_view source;       ///< short name; source_reference() in sources.hpp spells it out
-  std::string_view remark;       ///< why a row is an exception, a temperature other than 298.15 K; empty: nothing to say
-  std::string_view why_taken;    ///< empty unless tables disagree beyond their ±
+  double spread = 0;        ///< 0: one table only, or all agree
+  std::string_view source;  ///< short name; source_reference() in sources.hpp spells it out
+  std::string_view
+      remark;  ///< why a row is an exception, a temperature other than 298.15 K; empty: nothing to say
+  std::string_view why_taken;  ///< empty unless tables disagree beyond their ±
   std::span<const Rival> rivals;
 };
 
@@ -41,7 +43,8 @@ struct PhaseFacts {
 enum class Structure : std::uint8_t {
   None,      ///< empty: minerals, solid solutions, cages that no valence structure describes
   Molecule,  ///< bonds can be counted
-  Formal,    ///< ions or bare atoms written one after the other; good for finding the compound, not for counting bonds
+  Formal,    ///< ions or bare atoms written one after the other; good for finding the compound, not for
+             ///< counting bonds
 };
 
 /// All text views point into the embedded tables (or the site table that the record came from).
@@ -54,19 +57,21 @@ struct Compound {
   Structure structure = Structure::None;
   std::vector<std::string_view> synonyms;
   PhaseFacts gas, liquid, solid;
-  std::optional<Datum> melting_point;        ///< [K]
-  std::optional<Datum> boiling_point;        ///< [K] at 101.325 kPa
-  std::optional<Datum> fusion_enthalpy;      ///< [J/mol] at the melting point
+  std::optional<Datum> melting_point;                  ///< [K]
+  std::optional<Datum> boiling_point;                  ///< [K] at 101.325 kPa
+  std::optional<Datum> fusion_enthalpy;                ///< [J/mol] at the melting point
   std::optional<Datum> vaporisation_enthalpy_boiling;  ///< [J/mol] at the boiling point
   std::optional<Datum> vaporisation_enthalpy_298;      ///< [J/mol]
-  std::optional<Datum> liquid_density;       ///< [kg/m3] near 298 K
-  std::optional<Datum> critical_temperature; ///< [K]
-  std::optional<Datum> critical_pressure;    ///< [Pa]
+  std::optional<Datum> liquid_density;                 ///< [kg/m3] near 298 K
+  std::optional<Datum> critical_temperature;           ///< [K]
+  std::optional<Datum> critical_pressure;              ///< [Pa]
   bool reference_element = false;  ///< an element, formation enthalpy zero in `reference_phase` by definition
   char reference_phase = 0;        ///< 'g', 'l' or 's'
-  bool vapour_associates = false;  ///< carboxylic acids, HF: the vaporisation enthalpy is not that of single molecules
-  bool usual_of_formula = false;   ///< what a bare formula means in practice although rarer isomers exist (C6H6 is benzene)
-  std::string_view remark;         ///< about the row as a whole: why two phases do not differ by the phase change, …
+  bool vapour_associates =
+      false;  ///< carboxylic acids, HF: the vaporisation enthalpy is not that of single molecules
+  bool usual_of_formula =
+      false;  ///< what a bare formula means in practice although rarer isomers exist (C6H6 is benzene)
+  std::string_view remark;  ///< about the row as a whole: why two phases do not differ by the phase change, …
 };
 
 }  // namespace heatledger::facts

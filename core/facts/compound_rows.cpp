@@ -14,14 +14,23 @@ void read_flags(std::string_view flags, Compound& compound) {
   compound.structure = compound.smiles.empty() ? Structure::None : Structure::Molecule;
   for (const char flag : flags) {
     switch (flag) {
-      case 'f': compound.structure = Structure::Formal; break;
-      case 'a': compound.vapour_associates = true; break;
-      case 'u': compound.usual_of_formula = true; break;
-      case 'g': case 'l': case 's':
+      case 'f':
+        compound.structure = Structure::Formal;
+        break;
+      case 'a':
+        compound.vapour_associates = true;
+        break;
+      case 'u':
+        compound.usual_of_formula = true;
+        break;
+      case 'g':
+      case 'l':
+      case 's':
         compound.reference_element = true;
         compound.reference_phase = flag;
         break;
-      default: CHECK(false, "compounds.tsv uses the flags named at its head");
+      default:
+        CHECK(false, "compounds.tsv uses the flags named at its head");
     }
   }
 }
@@ -38,7 +47,8 @@ CompoundRows::CompoundRows() {
   first_figure_ = table.column(kFigureColumns.front().column);
   heads_.reserve(2500);
   while (table.next()) {
-    heads_.push_back({table.cell(name), table.cell(cas), table.cell(formula), table.cell(synonyms), table.line()});
+    heads_.push_back(
+        {table.cell(name), table.cell(cas), table.cell(formula), table.cell(synonyms), table.line()});
   }
   known_ = std::vector<std::atomic<const Compound*>>(heads_.size());
 }
@@ -57,7 +67,9 @@ void CompoundRows::read(std::uint32_t row, Compound& out) const {
   const Head& head = heads_[row];
   std::vector<std::string_view> cells;
   split_cells(head.line, cells);
-  const auto cell = [&](std::size_t column) { return column < cells.size() ? cells[column] : std::string_view(); };
+  const auto cell = [&](std::size_t column) {
+    return column < cells.size() ? cells[column] : std::string_view();
+  };
   out.id = row;
   out.name = head.name;
   out.cas = head.cas;

@@ -33,8 +33,10 @@ std::size_t branch_size(const Adjacency& around, std::uint32_t start, std::uint3
   return size;
 }
 
-/// Whether the larger group at `end` lies above the double bond to `partner`; empty when the marks do not say.
-std::optional<bool> larger_group_above(const Graph& graph, const Adjacency& around, std::uint32_t end, std::uint32_t partner) {
+/// Whether the larger group at `end` lies above the double bond to `partner`; empty when the marks do not
+/// say.
+std::optional<bool> larger_group_above(const Graph& graph, const Adjacency& around, std::uint32_t end,
+                                       std::uint32_t partner) {
   std::optional<bool> above;  // of the group `marked`
   std::uint32_t marked = 0;
   std::vector<std::uint32_t> groups;

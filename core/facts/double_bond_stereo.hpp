@@ -9,11 +9,13 @@ namespace heatledger::facts {
 struct DoubleBondStereo {
   int cis = 0, trans = 0;
 
-  friend bool operator==(const DoubleBondStereo& a, const DoubleBondStereo& b) { return a.cis == b.cis && a.trans == b.trans; }
+  friend bool operator==(const DoubleBondStereo& a, const DoubleBondStereo& b) {
+    return a.cis == b.cis && a.trans == b.trans;
+  }
 };
 
-/// Counts marked double bonds. The group that counts at an end is the one with more atoms; where two groups have as
-/// many, the bond is left out.
+/// Counts marked double bonds. The group that counts at an end is the one with more atoms; where two groups
+/// have as many, the bond is left out.
 DoubleBondStereo double_bond_stereo(const molecule::Graph& graph);
 
 }  // namespace heatledger::facts

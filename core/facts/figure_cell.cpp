@@ -41,7 +41,8 @@ std::string table_name(std::string_view key) {
 
 FigureCells::FigureCells() {
   TableReader table(tables::defaults);
-  const std::size_t figure = table.column("figure"), source = table.column("source"), value = table.column("u95");
+  const std::size_t figure = table.column("figure"), source = table.column("source"),
+                    value = table.column("u95");
   while (table.next()) {
     Default entry;
     entry.figure = table.cell(figure);
@@ -53,7 +54,8 @@ FigureCells::FigureCells() {
   }
 }
 
-double FigureCells::default_u95(const FigureColumn& column, std::string_view source_keys, double value) const {
+double FigureCells::default_u95(const FigureColumn& column, std::string_view source_keys,
+                                double value) const {
   for (const Default& entry : defaults_) {
     if (entry.figure != column.column) continue;
     if (entry.source != "*" && entry.source != source_keys) continue;

@@ -1,5 +1,5 @@
-// One figure cell of the tables: `-109.16±0.11~7.3 a; -115.9 j (remark)`: value, ±, spread of all tables, source;
-// figures of other tables that were not taken; remark. Source keys: tables/sources.tsv.
+// One figure cell of the tables: `-109.16±0.11~7.3 a; -115.9 j (remark)`: value, ±, spread of all tables,
+// source; figures of other tables that were not taken; remark. Source keys: tables/sources.tsv.
 #pragma once
 
 #include <deque>
@@ -30,7 +30,8 @@ class FigureCells {
     double absolute = 0, relative = 0;
   };
   std::vector<Default> defaults_;
-  std::unordered_map<std::string_view, std::string> names_;  ///< of evaluations from several tables, by key text
+  std::unordered_map<std::string_view, std::string>
+      names_;  ///< of evaluations from several tables, by key text
   std::deque<std::vector<Rival>> rivals_;
   std::deque<std::string> texts_;
 };

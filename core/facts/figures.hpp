@@ -11,11 +11,23 @@
 namespace heatledger::facts {
 
 enum class FigureKind : std::uint8_t {
-  FormationGas, FormationLiquid, FormationSolid,
-  EntropyGas, EntropyLiquid, EntropySolid,
-  HeatCapacityGas, HeatCapacityLiquid, HeatCapacitySolid,
-  MeltingPoint, FusionEnthalpy, BoilingPoint, VaporisationBoiling, Vaporisation298,
-  LiquidDensity, CriticalTemperature, CriticalPressure,
+  FormationGas,
+  FormationLiquid,
+  FormationSolid,
+  EntropyGas,
+  EntropyLiquid,
+  EntropySolid,
+  HeatCapacityGas,
+  HeatCapacityLiquid,
+  HeatCapacitySolid,
+  MeltingPoint,
+  FusionEnthalpy,
+  BoilingPoint,
+  VaporisationBoiling,
+  Vaporisation298,
+  LiquidDensity,
+  CriticalTemperature,
+  CriticalPressure,
 };
 
 struct FigureColumn {

@@ -24,8 +24,8 @@ struct AqueousTable {
                                          {FigureKind::EntropyLiquid, "s_aq", "J/(mol K)", 1},
                                          {FigureKind::HeatCapacityLiquid, "cp_aq", "J/(mol K)", 1}};
     TableReader table(tables::ions);
-    const std::size_t name = table.column("name"), formula = table.column("formula"), synonyms = table.column("synonyms"),
-                      first = table.column(kColumns[0].column);
+    const std::size_t name = table.column("name"), formula = table.column("formula"),
+                      synonyms = table.column("synonyms"), first = table.column(kColumns[0].column);
     const auto read = [&](std::size_t i) -> std::optional<Datum> {
       if (!table.has(first + i)) return std::nullopt;
       return cells.read(table.cell(first + i), kColumns[i]);
@@ -55,7 +55,8 @@ struct AqueousTable {
       const auto put = [&](std::string_view name) {
         const std::string key = name_key(name);
         names.put(key_hash(key), i);
-        if (key.size() > 3 && key.substr(key.size() - 3) == "ion") names.put(key_hash(key.substr(0, key.size() - 3)), i);
+        if (key.size() > 3 && key.substr(key.size() - 3) == "ion")
+          names.put(key_hash(key.substr(0, key.size() - 3)), i);
       };
       put(rows[i].name);
       for (const std::string_view synonym : rows[i].synonyms) put(synonym);
@@ -79,7 +80,9 @@ const AqueousTable& table() {
 
 }  // namespace
 
-const std::vector<AqueousSubstance>& aqueous_substances() { return table().rows; }
+const std::vector<AqueousSubstance>& aqueous_substances() {
+  return table().rows;
+}
 
 const AqueousSubstance* find_aqueous_name(std::string_view name) {
   const std::string key = name_key(name);

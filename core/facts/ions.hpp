@@ -1,5 +1,5 @@
-// Substances dissolved in water at infinite dilution: ions, and some neutral ones. Never mix with another ion table in
-// one reaction.
+// Substances dissolved in water at infinite dilution: ions, and some neutral ones. Never mix with another ion
+// table in one reaction.
 #pragma once
 
 #include <optional>

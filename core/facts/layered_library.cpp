@@ -84,7 +84,8 @@ void LayeredLibrary::State::lay(const SiteRecord& record) {
   }
 }
 
-void LayeredLibrary::State::index(const Compound& compound, std::vector<NameEntry>& entries, std::uint32_t row) {
+void LayeredLibrary::State::index(const Compound& compound, std::vector<NameEntry>& entries,
+                                  std::uint32_t row) {
   const auto add = [&](std::string_view name) {
     if (name.empty()) return;
     names[name_key(name)] = &compound;
@@ -131,10 +132,12 @@ std::vector<const Compound*> LayeredLibrary::find_formula(std::string_view hill)
   return found;
 }
 
-std::vector<const Compound*> LayeredLibrary::find_structures(std::string_view canonical_smiles, std::string_view hill) const {
+std::vector<const Compound*> LayeredLibrary::find_structures(std::string_view canonical_smiles,
+                                                             std::string_view hill) const {
   std::vector<const Compound*> found;
   for (const Compound& mine : state_->compounds) {
-    if (state_->structures.canonical(mine) == canonical_smiles && !canonical_smiles.empty()) found.push_back(&mine);
+    if (state_->structures.canonical(mine) == canonical_smiles && !canonical_smiles.empty())
+      found.push_back(&mine);
   }
   for (const Compound* below : state_->base->find_structures(canonical_smiles, hill)) {
     const Compound* shown = state_->top(below);
@@ -150,7 +153,8 @@ std::vector<Library::Completion> LayeredLibrary::complete(std::string_view text,
   }
   for (Completion& below : state_->base->complete(text, limit)) {
     below.compound = state_->top(below.compound);
-    const bool seen = std::any_of(out.begin(), out.end(), [&](const Completion& c) { return c.compound == below.compound; });
+    const bool seen = std::any_of(out.begin(), out.end(),
+                                  [&](const Completion& c) { return c.compound == below.compound; });
     if (!seen && out.size() < limit) out.push_back(below);
   }
   return out;

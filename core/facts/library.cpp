@@ -50,9 +50,13 @@ const Compound* Library::find_structure(std::string_view canonical_smiles, std::
   return found.empty() ? nullptr : found.front();
 }
 
-const Compound* Library::covered(const Compound&) const { return nullptr; }
+const Compound* Library::covered(const Compound&) const {
+  return nullptr;
+}
 
-std::size_t EmbeddedLibrary::size() const { return state_->rows.size(); }
+std::size_t EmbeddedLibrary::size() const {
+  return state_->rows.size();
+}
 
 const Compound& EmbeddedLibrary::at(std::size_t row) const {
   CHECK(row < size(), "a row of the library");
@@ -80,12 +84,14 @@ std::vector<const Compound*> EmbeddedLibrary::find_formula(std::string_view hill
   };
   collect(hill);
   if (found.empty()) {
-    if (const std::optional<std::string> brought = hill_text(hill); brought.has_value() && *brought != hill) collect(*brought);
+    if (const std::optional<std::string> brought = hill_text(hill); brought.has_value() && *brought != hill)
+      collect(*brought);
   }
   return found;
 }
 
-std::vector<const Compound*> EmbeddedLibrary::find_structures(std::string_view canonical_smiles, std::string_view hill) const {
+std::vector<const Compound*> EmbeddedLibrary::find_structures(std::string_view canonical_smiles,
+                                                              std::string_view hill) const {
   std::string own;
   if (hill.empty()) {
     own = hill_of_smiles(canonical_smiles);

@@ -20,16 +20,18 @@ class Library {
 
   virtual ~Library() = default;
 
-  /// By name, synonym or CAS number; case, hyphens, blanks, commas, brackets and accents forgiven ("Ethyl Acetate",
-  /// "n butanol", "2-propanol"). nullptr when no entry has that name.
+  /// By name, synonym or CAS number; case, hyphens, blanks, commas, brackets and accents forgiven ("Ethyl
+  /// Acetate", "n butanol", "2-propanol"). nullptr when no entry has that name.
   virtual const Compound* find_name(std::string_view text) const = 0;
   /// All compounds of one composition, commonest first.
-  /// @param hill  Hill text as molecule::hill_formula writes it ("C2H6O"); any other formula text is brought into it
+  /// @param hill  Hill text as molecule::hill_formula writes it ("C2H6O"); any other formula text is brought
+  /// into it
   virtual std::vector<const Compound*> find_formula(std::string_view hill) const = 0;
   /// By structure; equal structures match whatever the spelling. Stereo isomers share one canonical text: the
   /// commonest of them comes first.
   /// @param hill  composition of the structure if the caller knows it, saves reading the text
-  virtual std::vector<const Compound*> find_structures(std::string_view canonical_smiles, std::string_view hill = {}) const = 0;
+  virtual std::vector<const Compound*> find_structures(std::string_view canonical_smiles,
+                                                       std::string_view hill = {}) const = 0;
   /// The first of find_structures; nullptr when there is none.
   const Compound* find_structure(std::string_view canonical_smiles, std::string_view hill = {}) const;
 
@@ -37,16 +39,17 @@ class Library {
     const Compound* compound = nullptr;
     std::string_view matched;  ///< the name or synonym that matched
   };
-  /// Names that begin with the text, then names with a word that does, then names within a small edit distance;
-  /// commonest first inside each group; a compound comes once. For completion and for "did you mean".
+  /// Names that begin with the text, then names with a word that does, then names within a small edit
+  /// distance; commonest first inside each group; a compound comes once. For completion and for "did you
+  /// mean".
   virtual std::vector<Completion> complete(std::string_view text, std::size_t limit) const = 0;
 
   /// The published record that a site record lies over; nullptr when it lies over none.
   virtual const Compound* covered(const Compound& compound) const;
 };
 
-/// The tables as compiled in. Names are indexed at first use; the figures of a compound are read when it is first
-/// asked for. May be used from several threads.
+/// The tables as compiled in. Names are indexed at first use; the figures of a compound are read when it is
+/// first asked for. May be used from several threads.
 class EmbeddedLibrary final : public Library {
  public:
   ~EmbeddedLibrary() override;
@@ -58,7 +61,8 @@ class EmbeddedLibrary final : public Library {
 
   const Compound* find_name(std::string_view text) const override;
   std::vector<const Compound*> find_formula(std::string_view hill) const override;
-  std::vector<const Compound*> find_structures(std::string_view canonical_smiles, std::string_view hill = {}) const override;
+  std::vector<const Compound*> find_structures(std::string_view canonical_smiles,
+                                               std::string_view hill = {}) const override;
   std::vector<Completion> complete(std::string_view text, std::size_t limit) const override;
 
  private:

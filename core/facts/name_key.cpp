@@ -10,7 +10,11 @@ namespace {
 char32_t take_code_point(std::string_view& text) {
   const auto byte = [&](std::size_t i) { return static_cast<unsigned char>(text[i]); };
   const unsigned char first = byte(0);
-  const std::size_t length = first < 0x80 ? 1 : first >> 5 == 6 ? 2 : first >> 4 == 14 ? 3 : first >> 3 == 30 ? 4 : 1;
+  const std::size_t length = first < 0x80       ? 1
+                             : first >> 5 == 6  ? 2
+                             : first >> 4 == 14 ? 3
+                             : first >> 3 == 30 ? 4
+                                                : 1;
   if (length == 1 || length > text.size()) {
     text.remove_prefix(1);
     return first;
@@ -22,16 +26,33 @@ char32_t take_code_point(std::string_view& text) {
 }
 
 constexpr std::array<std::string_view, 25> kGreek = {
-    "alpha", "beta", "gamma", "delta", "epsilon", "zeta", "eta", "theta", "iota", "kappa", "lambda", "mu", "nu",
-    "xi", "omicron", "pi", "rho", "sigma", "sigma", "tau", "upsilon", "phi", "chi", "psi", "omega"};
+    "alpha", "beta",   "gamma",   "delta", "epsilon", "zeta",    "eta",  "theta", "iota",
+    "kappa", "lambda", "mu",      "nu",    "xi",      "omicron", "pi",   "rho",   "sigma",
+    "sigma", "tau",    "upsilon", "phi",   "chi",     "psi",     "omega"};
 
 /// Latin letters with marks, U+00C0 to U+00FF, as plain lower case; '-' where there is no letter.
 constexpr std::string_view kLatin1 = "aaaaaaaceeeeiiiidnooooo-ouuuuytsaaaaaaaceeeeiiiidnooooo-ouuuuyty";
 
 bool is_filler(char32_t c) {
   switch (c) {
-    case ' ': case '\t': case '-': case ',': case '\'': case '"': case '(': case ')': case '[': case ']': case '{':
-    case '}': case '.': case '_': case '`': case 0xa0: case 0xb4: case 0xb7:
+    case ' ':
+    case '\t':
+    case '-':
+    case ',':
+    case '\'':
+    case '"':
+    case '(':
+    case ')':
+    case '[':
+    case ']':
+    case '{':
+    case '}':
+    case '.':
+    case '_':
+    case '`':
+    case 0xa0:
+    case 0xb4:
+    case 0xb7:
       return true;
     default:
       return (c >= 0x2000 && c <= 0x2027) || (c >= 0x202f && c <= 0x2037) || c == 0x2212 || c == 0xfeff;
@@ -71,7 +92,8 @@ std::size_t append_name_key(std::string_view text, std::string& out) {
     }
   }
   for (const Spelling& spelling : kSpellings) {
-    for (std::size_t at = start; (at = out.find(spelling.from, at)) != std::string::npos; at += spelling.to.size()) {
+    for (std::size_t at = start; (at = out.find(spelling.from, at)) != std::string::npos;
+         at += spelling.to.size()) {
       out.replace(at, spelling.from.size(), spelling.to);
     }
   }

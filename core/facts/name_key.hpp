@@ -7,8 +7,9 @@
 
 namespace heatledger::facts {
 
-/// Appends the key of a name to `out`: lower case; accents dropped; Greek letters spelt out ("α" is "alpha"); blanks,
-/// hyphens, commas, primes and brackets left out; "sulph" as "sulf", "aluminium" as "aluminum", "caesium" as "cesium".
+/// Appends the key of a name to `out`: lower case; accents dropped; Greek letters spelt out ("α" is "alpha");
+/// blanks, hyphens, commas, primes and brackets left out; "sulph" as "sulf", "aluminium" as "aluminum",
+/// "caesium" as "cesium".
 /// @return number of bytes appended; 0 when the text holds nothing that a name is made of
 std::size_t append_name_key(std::string_view text, std::string& out);
 std::string name_key(std::string_view text);

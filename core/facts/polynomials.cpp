@@ -17,7 +17,9 @@ namespace {
 constexpr double kGasConstantOfReport = 8.314510;  ///< [J/(mol K)], NASA TM-4513; goes with the coefficients
 constexpr double kReference = 298.15;              ///< [K]
 
-std::string keyed(std::string_view name, char phase) { return name_key(name) + '|' + phase; }
+std::string keyed(std::string_view name, char phase) {
+  return name_key(name) + '|' + phase;
+}
 
 struct PolynomialTable {
   std::vector<Polynomial> all;
@@ -25,8 +27,9 @@ struct PolynomialTable {
 
   PolynomialTable() {
     TableReader table(tables::polynomials);
-    const std::size_t name = table.column("name"), phase = table.column("phase"), formula = table.column("formula"),
-                      hf = table.column("hf298"), from = table.column("from"), to = table.column("to"), first = table.column("a1");
+    const std::size_t name = table.column("name"), phase = table.column("phase"),
+                      formula = table.column("formula"), hf = table.column("hf298"),
+                      from = table.column("from"), to = table.column("to"), first = table.column("a1");
     while (table.next()) {
       if (table.has(name)) {
         Polynomial& p = all.emplace_back();
@@ -57,8 +60,10 @@ PolynomialValue value_at(const PolynomialRange& range, double t) {
   const std::array<double, 7>& a = range.a;
   PolynomialValue v;
   v.cp = kGasConstantOfReport * (a[0] + t * (a[1] + t * (a[2] + t * (a[3] + t * a[4]))));
-  v.h = kGasConstantOfReport * (t * (a[0] + t * (a[1] / 2 + t * (a[2] / 3 + t * (a[3] / 4 + t * a[4] / 5)))) + a[5]);
-  v.s = kGasConstantOfReport * (a[0] * std::log(t) + t * (a[1] + t * (a[2] / 2 + t * (a[3] / 3 + t * a[4] / 4))) + a[6]);
+  v.h = kGasConstantOfReport *
+        (t * (a[0] + t * (a[1] / 2 + t * (a[2] / 3 + t * (a[3] / 4 + t * a[4] / 5)))) + a[5]);
+  v.s = kGasConstantOfReport *
+        (a[0] * std::log(t) + t * (a[1] + t * (a[2] / 2 + t * (a[3] / 3 + t * a[4] / 4))) + a[6]);
   return v;
 }
 
@@ -66,12 +71,14 @@ PolynomialValue value_at(const PolynomialRange& range, double t) {
 
 Result<PolynomialValue> evaluate(const Polynomial& polynomial, double temperature) {
   // Ranges that begin at 300 K stand for 298.15 K too: 1.85 K of extrapolation moves Cp by less than 0.1 %.
-  const double low = polynomial.lowest() > kReference && polynomial.lowest() <= 300 ? kReference : polynomial.lowest();
+  const double low =
+      polynomial.lowest() > kReference && polynomial.lowest() <= 300 ? kReference : polynomial.lowest();
   if (!(temperature >= low && temperature <= polynomial.highest())) {
-    const std::string where = std::isfinite(temperature) ? machine_number(temperature, 6) + " K" : "temperature";
+    const std::string where =
+        std::isfinite(temperature) ? machine_number(temperature, 6) + " K" : "temperature";
     return Error{"thermo.temperature_range",
-                 "The polynomial of " + std::string(polynomial.name) + " holds from " + machine_number(low, 6) + " to " +
-                     machine_number(polynomial.highest(), 6) + " K.",
+                 "The polynomial of " + std::string(polynomial.name) + " holds from " +
+                     machine_number(low, 6) + " to " + machine_number(polynomial.highest(), 6) + " K.",
                  where, "Choose a temperature in this range."};
   }
   const PolynomialRange* range = &polynomial.ranges.front();
@@ -81,7 +88,9 @@ Result<PolynomialValue> evaluate(const Polynomial& polynomial, double temperatur
   return value_at(*range, temperature);
 }
 
-const std::vector<Polynomial>& polynomials() { return table().all; }
+const std::vector<Polynomial>& polynomials() {
+  return table().all;
+}
 
 const Polynomial* find_polynomial(std::string_view name, char phase) {
   const Polynomial* found = nullptr;

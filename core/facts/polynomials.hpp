@@ -12,21 +12,22 @@ namespace heatledger::facts {
 
 /// One temperature range of a species.
 struct PolynomialRange {
-  double from = 0, to = 0;       ///< [K]
-  std::array<double, 7> a{};     ///< coefficients as tables/polynomials.tsv defines them
+  double from = 0, to = 0;    ///< [K]
+  std::array<double, 7> a{};  ///< coefficients as tables/polynomials.tsv defines them
 };
 
 /// A species in one phase with its ranges in rising order, joined without gaps.
 struct Polynomial {
   std::string_view name;
-  std::string_view formula;      ///< Hill
-  char phase = 'g';              ///< 'g', 'l', 's'
-  bool stable_at_298 = true;     ///< false: a phase that appears above 298 K; its enthalpy is on the element's scale all the same
-  double formation_enthalpy = 0; ///< [J/mol] at 298.15 K, as the report prints it; 0 when not stable then
+  std::string_view formula;  ///< Hill
+  char phase = 'g';          ///< 'g', 'l', 's'
+  bool stable_at_298 =
+      true;  ///< false: a phase that appears above 298 K; its enthalpy is on the element's scale all the same
+  double formation_enthalpy = 0;  ///< [J/mol] at 298.15 K, as the report prints it; 0 when not stable then
   std::vector<PolynomialRange> ranges;
 
-  double lowest() const { return ranges.front().from; }   ///< [K]
-  double highest() const { return ranges.back().to; }     ///< [K]
+  double lowest() const { return ranges.front().from; }  ///< [K]
+  double highest() const { return ranges.back().to; }    ///< [K]
 };
 
 /// What the polynomial gives at one temperature.

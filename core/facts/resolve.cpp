@@ -28,7 +28,8 @@ bool repeats_a_symbol(std::string_view text) {
       const bool two_letters = i + 1 < text.size() && text[i + 1] >= 'a' && text[i + 1] <= 'z';
       if (!two_letters) return true;  // "CCl" writes two elements, "CCO" carbon twice
     }
-    if (i >= 3 && text[i] == text[i - 2] && text[i - 1] == text[i - 3] && text[i] >= 'a' && text[i] <= 'z') return true;  // "ClCl"
+    if (i >= 3 && text[i] == text[i - 2] && text[i - 1] == text[i - 3] && text[i] >= 'a' && text[i] <= 'z')
+      return true;  // "ClCl"
   }
   return false;
 }
@@ -39,20 +40,22 @@ bool looks_like_smiles(std::string_view text) {
   return text.find_first_of("=#@\\/%") != std::string_view::npos || text.substr(0, 1) == "[";
 }
 
-std::string list_names(const std::vector<const Compound*>& compounds, std::size_t most, std::string_view last_joint) {
+std::string list_names(const std::vector<const Compound*>& compounds, std::size_t most,
+                       std::string_view last_joint) {
   std::string out;
   const std::size_t shown = std::min(compounds.size(), most);
   for (std::size_t i = 0; i < shown; ++i) {
     if (i > 0) out += i + 1 == compounds.size() ? std::string(last_joint) : ", ";
     out += compounds[i]->name;
   }
-  if (compounds.size() > shown) out += " and " + machine_number(static_cast<double>(compounds.size() - shown)) + " more";
+  if (compounds.size() > shown)
+    out += " and " + machine_number(static_cast<double>(compounds.size() - shown)) + " more";
   return out;
 }
 
 Error unknown(std::string_view text, const Library& library) {
-  Error error{"species.unknown", "No name, formula or structure in \"" + std::string(text) + "\".", std::string(text),
-              "Write a name of the library, a formula, or SMILES in double quotes."};
+  Error error{"species.unknown", "No name, formula or structure in \"" + std::string(text) + "\".",
+              std::string(text), "Write a name of the library, a formula, or SMILES in double quotes."};
   std::string names;
   for (const Library::Completion& near : library.complete(text, 3)) {
     names += (names.empty() ? "" : ", ") + std::string(near.matched);
@@ -77,20 +80,25 @@ Error several_isomers(std::string_view text, const std::vector<const Compound*>&
                "Write the name, the condensed formula, or SMILES in double quotes."};
 }
 
-std::string also_same_formula(std::string_view text, const Compound& taken, std::vector<const Compound*> found) {
+std::string also_same_formula(std::string_view text, const Compound& taken,
+                              std::vector<const Compound*> found) {
   found.erase(std::remove(found.begin(), found.end(), &taken), found.end());
-  return std::string(text) + " read as " + std::string(taken.name) + "; the same formula has " + list_names(found, 3, " and ");
+  return std::string(text) + " read as " + std::string(taken.name) + "; the same formula has " +
+         list_names(found, 3, " and ");
 }
 
 /// What the text would be as SMILES, for a note: the library's name, else the formula.
 std::string name_as_smiles(const molecule::Graph& graph, const Library& library) {
   const std::string hill = molecule::hill_formula(molecule::composition(graph));
-  if (const Compound* compound = library.find_structure(molecule::canonical_smiles(graph), hill)) return std::string(compound->name);
+  if (const Compound* compound = library.find_structure(molecule::canonical_smiles(graph), hill))
+    return std::string(compound->name);
   return molecule::typeset_formula(hill);
 }
 
-std::string formula_won(std::string_view text, const Species& species, const molecule::Graph& other, const Library& library) {
-  return "read as formula: " + species.name + "; \"" + std::string(text) + "\" in quotes is " + name_as_smiles(other, library);
+std::string formula_won(std::string_view text, const Species& species, const molecule::Graph& other,
+                        const Library& library) {
+  return "read as formula: " + species.name + "; \"" + std::string(text) + "\" in quotes is " +
+         name_as_smiles(other, library);
 }
 
 /// The readings of one unquoted text.
@@ -126,12 +134,14 @@ class Reader {
     const Compound* taken = found_.size() == 1 ? found_.front() : settled(found_);
     if (taken == nullptr) return several_isomers(text_, found_);
     const std::shared_ptr<Species> species = species_of(text_, *taken);
-    species->note = "read as formula: " + species->name + "; the name also stands for " + std::string(named.name);
+    species->note =
+        "read as formula: " + species->name + "; the name also stands for " + std::string(named.name);
     return Answer(species);
   }
 
   Answer read_aqueous(const AqueousSubstance& substance) {
-    if (const Compound* compound = library_.find_name(substance.name)) return Answer(species_of(text_, *compound));
+    if (const Compound* compound = library_.find_name(substance.name))
+      return Answer(species_of(text_, *compound));
     return Answer(species_of(text_, substance));
   }
 
@@ -139,7 +149,8 @@ class Reader {
     std::shared_ptr<Species> species;
     if (Result<molecule::Graph> line = molecule::parse_line_formula(text_)) {
       species = species_of(text_, std::move(*line), library_);
-      if (species->compound == nullptr && species->aqueous == nullptr) species->name = molecule::typeset_formula(text_);
+      if (species->compound == nullptr && species->aqueous == nullptr)
+        species->name = molecule::typeset_formula(text_);
     } else if (found_.size() == 1) {
       species = species_of(text_, *found_.front());
     } else if (found_.size() > 1) {
@@ -165,12 +176,15 @@ class Reader {
 };
 
 Error empty_species() {
-  return Error{"species.empty", "No species is written here.", "", "Write a name, a formula, or SMILES in double quotes."};
+  return Error{"species.empty", "No species is written here.", "",
+               "Write a name, a formula, or SMILES in double quotes."};
 }
 
 }  // namespace
 
-Answer resolve_species(std::string_view text, bool quoted) { return resolve_species(text, quoted, Library::embedded()); }
+Answer resolve_species(std::string_view text, bool quoted) {
+  return resolve_species(text, quoted, Library::embedded());
+}
 
 Answer resolve_species(std::string_view text, bool quoted, const Library& library) {
   text = trimmed(text);
@@ -193,18 +207,19 @@ Answer make_coded_species(std::string_view name, double molar_mass, std::string_
   }
   const bool typed = molar_mass != 0;
   if (typed && !(std::isfinite(molar_mass) && molar_mass > 0)) {
-    return Error{"species.molar_mass", "The molar mass of " + std::string(name) + " is not a positive number.", std::string(name),
+    return Error{"species.molar_mass",
+                 "The molar mass of " + std::string(name) + " is not a positive number.", std::string(name),
                  "Type a molar mass such as 250 g/mol."};
   }
   if (!typed && formula.empty()) {
-    return Error{"species.molar_mass", std::string(name) + " has neither a molar mass nor a formula.", std::string(name),
-                 "Type one of them."};
+    return Error{"species.molar_mass", std::string(name) + " has neither a molar mass nor a formula.",
+                 std::string(name), "Type one of them."};
   }
   // A formula fixes the mass to five digits; typed masses are rounded to three or four.
   if (typed && !formula.empty() && std::abs(molar_mass - species->molar_mass) > 0.005 * species->molar_mass) {
     return Error{"species.molar_mass",
-                 "The molar mass of " + std::string(name) + " is " + machine_number(molar_mass * 1e3, 6) + " g/mol, its formula gives " +
-                     machine_number(species->molar_mass * 1e3, 6) + " g/mol.",
+                 "The molar mass of " + std::string(name) + " is " + machine_number(molar_mass * 1e3, 6) +
+                     " g/mol, its formula gives " + machine_number(species->molar_mass * 1e3, 6) + " g/mol.",
                  std::string(name), "Correct one of them."};
   }
   species->text = name;

@@ -50,7 +50,8 @@ struct Table {
         curve.infinite = point;
       } else {
         point.ratio = table.number(r);
-        CHECK(curve.points.empty() || curve.points.back().ratio < point.ratio, "a curve of solution heats rises in dilution");
+        CHECK(curve.points.empty() || curve.points.back().ratio < point.ratio,
+              "a curve of solution heats rises in dilution");
         curve.points.push_back(point);
       }
     }
@@ -78,11 +79,13 @@ std::vector<Node> nodes_of(const SolutionHeats& curve) {
 std::vector<double> slopes_of(const std::vector<Node>& nodes) {
   const std::size_t n = nodes.size();
   std::vector<double> secant(n - 1), slope(n);
-  for (std::size_t i = 0; i + 1 < n; ++i) secant[i] = (nodes[i + 1].heat - nodes[i].heat) / (nodes[i + 1].x - nodes[i].x);
+  for (std::size_t i = 0; i + 1 < n; ++i)
+    secant[i] = (nodes[i + 1].heat - nodes[i].heat) / (nodes[i + 1].x - nodes[i].x);
   slope[0] = secant[0];
   slope[n - 1] = secant[n - 2];
   for (std::size_t i = 1; i + 1 < n; ++i) {
-    slope[i] = secant[i - 1] * secant[i] <= 0 ? 0 : 2 * secant[i - 1] * secant[i] / (secant[i - 1] + secant[i]);
+    slope[i] =
+        secant[i - 1] * secant[i] <= 0 ? 0 : 2 * secant[i - 1] * secant[i] / (secant[i - 1] + secant[i]);
   }
   for (std::size_t i = 0; i + 1 < n; ++i) {
     if (secant[i] == 0) {
@@ -102,7 +105,9 @@ std::vector<double> slopes_of(const std::vector<Node>& nodes) {
 
 }  // namespace
 
-const std::vector<SolutionHeats>& solution_heats() { return table().curves; }
+const std::vector<SolutionHeats>& solution_heats() {
+  return table().curves;
+}
 
 const SolutionHeats* find_solution_heats(std::string_view formula, char phase) {
   const std::optional<std::string> hill = hill_text(formula);

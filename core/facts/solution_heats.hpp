@@ -1,4 +1,5 @@
-// Integral heats of solution in water at 25 degC against dilution. Each curve is of one source; curves are never joined.
+// Integral heats of solution in water at 25 degC against dilution. Each curve is of one source; curves are
+// never joined.
 #pragma once
 
 #include <optional>
@@ -17,9 +18,9 @@ struct SolutionHeats {
   std::string_view solute;  ///< formula as typed: "H2SO4"
   char phase = 's';         ///< before dissolving
   std::string_view source;
-  bool from_memory = false; ///< not compared with a copy of the source
-  std::vector<SolutionHeatPoint> points;            ///< rising ratio; empty for salts with infinite dilution only
-  std::optional<SolutionHeatPoint> infinite;        ///< infinite dilution; its ratio is not used
+  bool from_memory = false;                   ///< not compared with a copy of the source
+  std::vector<SolutionHeatPoint> points;      ///< rising ratio; empty for salts with infinite dilution only
+  std::optional<SolutionHeatPoint> infinite;  ///< infinite dilution; its ratio is not used
 };
 
 /// All curves; for a solute with several, the one with the most points first.
@@ -28,10 +29,11 @@ const std::vector<SolutionHeats>& solution_heats();
 /// @param formula  as typed; compared by composition, so that "NaOH" and "HNaO" are one
 const SolutionHeats* find_solution_heats(std::string_view formula, char phase);
 
-/// Heat of dissolving one mole in `ratio` moles of water [J/mol], interpolated between the points, monotone where they
-/// are, in x = ratio / (ratio + 1); a curve with its infinite dilution reaches x = 1.
+/// Heat of dissolving one mole in `ratio` moles of water [J/mol], interpolated between the points, monotone
+/// where they are, in x = ratio / (ratio + 1); a curve with its infinite dilution reaches x = 1.
 /// @param ratio  moles of water per mole of solute
-/// @return empty below the first point, and beyond the last when the curve has no figure for infinite dilution
+/// @return empty below the first point, and beyond the last when the curve has no figure for infinite
+/// dilution
 /// @source F. N. Fritsch and R. E. Carlson, SIAM J. Numer. Anal. 17 (1980) 238: monotone cubic pieces
 std::optional<SolutionHeatPoint> solution_heat_at(const SolutionHeats& curve, double ratio);
 

@@ -10,8 +10,8 @@ namespace {
 std::vector<Source> read_sources() {
   std::vector<Source> all;
   TableReader table(tables::sources);
-  const std::size_t key = table.column("key"), name = table.column("name"), standing = table.column("standing"),
-                    reference = table.column("reference");
+  const std::size_t key = table.column("key"), name = table.column("name"),
+                    standing = table.column("standing"), reference = table.column("reference");
   while (table.next()) {
     Source source;
     source.key = table.cell(key);

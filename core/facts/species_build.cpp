@@ -39,7 +39,9 @@ bool is_repeat_unit(const molecule::Graph& graph) {
   return ends == 2;
 }
 
-bool writes_stereo(std::string_view smiles) { return smiles.find_first_of("/\\@") != std::string_view::npos; }
+bool writes_stereo(std::string_view smiles) {
+  return smiles.find_first_of("/\\@") != std::string_view::npos;
+}
 
 DoubleBondStereo stereo_of(const Compound& compound) {
   const Result<molecule::Graph> graph = molecule::parse_smiles(compound.smiles);
@@ -47,7 +49,8 @@ DoubleBondStereo stereo_of(const Compound& compound) {
 }
 
 /// Of several compounds that differ in stereo only: the one written, else the commonest, with a note.
-const Compound& choose_stereo(std::string_view text, const molecule::Graph& graph, std::vector<const Compound*> found, std::string& note) {
+const Compound& choose_stereo(std::string_view text, const molecule::Graph& graph,
+                              std::vector<const Compound*> found, std::string& note) {
   if (found.size() == 1) return *found.front();
   for (const Compound* candidate : found) {
     if (candidate->smiles == text) return *candidate;
@@ -66,7 +69,8 @@ const Compound& choose_stereo(std::string_view text, const molecule::Graph& grap
   }
   const Compound& taken = *found.front();
   if (found.size() > 1) {
-    note = written ? "stereo marks at rings and centres are not told apart here: taken as " : "no stereo marks written: taken as ";
+    note = written ? "stereo marks at rings and centres are not told apart here: taken as "
+                   : "no stereo marks written: taken as ";
     note += taken.name;
     note += "; the same bonds has ";
     note += found[1]->name;

@@ -1,5 +1,5 @@
-// Species from what was found: a compound of the library, a structure, a composition. Which of them a text means is
-// decided in resolve.cpp.
+// Species from what was found: a compound of the library, a structure, a composition. Which of them a text
+// means is decided in resolve.cpp.
 #pragma once
 
 #include <memory>

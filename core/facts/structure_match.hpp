@@ -14,7 +14,8 @@ namespace heatledger::facts {
 
 class StructureMatcher {
  public:
-  /// Canonical SMILES of a compound of one library; empty when it has no structure. May be called from several threads.
+  /// Canonical SMILES of a compound of one library; empty when it has no structure. May be called from
+  /// several threads.
   const std::string& canonical(const Compound& compound) const;
 
  private:

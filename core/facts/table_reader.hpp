@@ -1,5 +1,6 @@
-// Walks an embedded table: tab-separated cells, '#' lines are comments, the first other line names the columns.
-// The tables are part of the program, so a malformed one is a bug and stops it; the suites read every row.
+// Walks an embedded table: tab-separated cells, '#' lines are comments, the first other line names the
+// columns. The tables are part of the program, so a malformed one is a bug and stops it; the suites read
+// every row.
 #pragma once
 
 #include <cstddef>
@@ -23,7 +24,9 @@ class TableReader {
   /// Next row; cells that stand empty at its end may be left out of the text. False after the last one.
   bool next();
   /// Cell of the present row; empty when the row ends before it.
-  std::string_view cell(std::size_t column) const { return column < cells_.size() ? cells_[column] : std::string_view(); }
+  std::string_view cell(std::size_t column) const {
+    return column < cells_.size() ? cells_[column] : std::string_view();
+  }
   /// A cell that holds one number. CHECKs that it does.
   double number(std::size_t column) const;
   bool has(std::size_t column) const { return !cell(column).empty(); }

@@ -32,7 +32,8 @@ struct Table {
       const Source* named = find_source(table.cell(source));
       CHECK(named != nullptr, "every source key of a table stands in sources.tsv");
       row.source = named->name;
-      for (std::size_t i = 0; i < row.c.size(); ++i) row.c[i] = table.has(first + i) ? table.number(first + i) : 0;
+      for (std::size_t i = 0; i < row.c.size(); ++i)
+        row.c[i] = table.has(first + i) ? table.number(first + i) : 0;
     }
     by_cas.reserve(rows.size());
     for (std::uint32_t i = 0; i < rows.size(); ++i) by_cas.put(key_hash(rows[i].cas), i);
@@ -46,7 +47,9 @@ const Table& table() {
 
 }  // namespace
 
-const std::vector<VapourPressure>& vapour_pressures() { return table().rows; }
+const std::vector<VapourPressure>& vapour_pressures() {
+  return table().rows;
+}
 
 const VapourPressure* find_vapour_pressure(const Compound& compound) {
   if (compound.cas.empty()) return nullptr;
@@ -60,7 +63,8 @@ const VapourPressure* find_vapour_pressure(const Compound& compound) {
 
 Result<PressureValue> vapour_pressure(const VapourPressure& equation, double temperature) {
   if (!(temperature >= equation.from && temperature <= equation.to)) {
-    const std::string where = std::isfinite(temperature) ? machine_number(temperature, 6) + " K" : "temperature";
+    const std::string where =
+        std::isfinite(temperature) ? machine_number(temperature, 6) + " K" : "temperature";
     return Error{"thermo.temperature_range",
                  "The vapour pressure equation holds from " + machine_number(equation.from, 6) + " to " +
                      machine_number(equation.to, 6) + " K.",
@@ -69,9 +73,10 @@ Result<PressureValue> vapour_pressure(const VapourPressure& equation, double tem
   const std::array<double, 5>& c = equation.c;
   const double t = temperature;
   PressureValue value;
-  value.pressure = equation.form == VapourPressure::Form::Logarithmic
-                       ? std::exp(c[0] + c[1] / t + c[2] * std::log(t) + (c[3] == 0 ? 0 : c[3] * std::pow(t, c[4])))
-                       : std::pow(10.0, c[0] - c[1] / (t + c[2]));
+  value.pressure =
+      equation.form == VapourPressure::Form::Logarithmic
+          ? std::exp(c[0] + c[1] / t + c[2] * std::log(t) + (c[3] == 0 ? 0 : c[3] * std::pow(t, c[4])))
+          : std::pow(10.0, c[0] - c[1] / (t + c[2]));
   value.u95 = value.pressure * (value.pressure < 10000 ? 0.05 : 0.02);
   return value;
 }

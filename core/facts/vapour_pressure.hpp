@@ -17,7 +17,7 @@ struct VapourPressure {
   };
   std::string_view cas;
   Form form = Form::Logarithmic;
-  double from = 0, to = 0;      ///< range of validity [K]
+  double from = 0, to = 0;  ///< range of validity [K]
   std::array<double, 5> c{};
   std::string_view source;
 };
@@ -25,7 +25,8 @@ struct VapourPressure {
 /// Pressure with the ± of the equation.
 struct PressureValue {
   double pressure = 0;  ///< [Pa]
-  double u95 = 0;       ///< [Pa]; 2 % of the pressure, 5 % below 10 kPa: the scatter of such equations about measurements
+  double u95 =
+      0;  ///< [Pa]; 2 % of the pressure, 5 % below 10 kPa: the scatter of such equations about measurements
 };
 
 /// All rows of the table.

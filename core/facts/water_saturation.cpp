@@ -25,13 +25,31 @@ double sum(const std::array<Term, N>& terms, double base) {
   return total;
 }
 
-constexpr std::array<Term, 6> kPressure = {{{-7.85951783, 1}, {1.84408259, 1.5}, {-11.7866497, 3}, {22.6807411, 3.5}, {-15.9618719, 4}, {1.80122502, 7.5}}};
-constexpr std::array<Term, 6> kLiquid = {{{1.99274064, 1.0 / 3}, {1.09965342, 2.0 / 3}, {-0.510839303, 5.0 / 3}, {-1.75493479, 16.0 / 3}, {-45.5170352, 43.0 / 3}, {-6.74694450e5, 110.0 / 3}}};
-constexpr std::array<Term, 6> kVapour = {{{-2.03150240, 2.0 / 6}, {-2.68302940, 4.0 / 6}, {-5.38626492, 8.0 / 6}, {-17.2991605, 18.0 / 6}, {-44.7586581, 37.0 / 6}, {-63.9201063, 71.0 / 6}}};
-constexpr std::array<Term, 5> kAlpha = {{{-5.65134998e-8, -19}, {2690.66631, 1}, {127.287297, 4.5}, {-135.003439, 5}, {0.981825814, 54.5}}};
+constexpr std::array<Term, 6> kPressure = {{{-7.85951783, 1},
+                                            {1.84408259, 1.5},
+                                            {-11.7866497, 3},
+                                            {22.6807411, 3.5},
+                                            {-15.9618719, 4},
+                                            {1.80122502, 7.5}}};
+constexpr std::array<Term, 6> kLiquid = {{{1.99274064, 1.0 / 3},
+                                          {1.09965342, 2.0 / 3},
+                                          {-0.510839303, 5.0 / 3},
+                                          {-1.75493479, 16.0 / 3},
+                                          {-45.5170352, 43.0 / 3},
+                                          {-6.74694450e5, 110.0 / 3}}};
+constexpr std::array<Term, 6> kVapour = {{{-2.03150240, 2.0 / 6},
+                                          {-2.68302940, 4.0 / 6},
+                                          {-5.38626492, 8.0 / 6},
+                                          {-17.2991605, 18.0 / 6},
+                                          {-44.7586581, 37.0 / 6},
+                                          {-63.9201063, 71.0 / 6}}};
+constexpr std::array<Term, 5> kAlpha = {
+    {{-5.65134998e-8, -19}, {2690.66631, 1}, {127.287297, 4.5}, {-135.003439, 5}, {0.981825814, 54.5}}};
 constexpr double kAlphaOffset = -1135.905627715;  ///< [kJ/kg]
 
-double log_pressure(double t) { return kCritical / t * sum(kPressure, 1 - t / kCritical); }
+double log_pressure(double t) {
+  return kCritical / t * sum(kPressure, 1 - t / kCritical);
+}
 
 /// d ln(p) / dT, from the same terms.
 double log_pressure_slope(double t) {
@@ -45,8 +63,10 @@ double log_pressure_slope(double t) {
 
 Result<SaturatedWater> saturated_water(double temperature) {
   if (!(temperature >= kTriple && temperature <= kCritical)) {
-    const std::string where = std::isfinite(temperature) ? machine_number(temperature, 6) + " K" : "temperature";
-    return Error{"thermo.temperature_range", "Water and steam stand side by side from 273.16 to 647.096 K only.", where,
+    const std::string where =
+        std::isfinite(temperature) ? machine_number(temperature, 6) + " K" : "temperature";
+    return Error{"thermo.temperature_range",
+                 "Water and steam stand side by side from 273.16 to 647.096 K only.", where,
                  "Choose a temperature between the triple point and the critical point."};
   }
   const double t = temperature, tau = 1 - t / kCritical;

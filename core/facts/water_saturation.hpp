@@ -1,4 +1,5 @@
-// Water and steam on the saturation line. "Steam" here is saturated steam; superheat goes by the ideal-gas polynomial.
+// Water and steam on the saturation line. "Steam" here is saturated steam; superheat goes by the ideal-gas
+// polynomial.
 #pragma once
 
 #include "core/base/result.hpp"
@@ -6,13 +7,13 @@
 namespace heatledger::facts {
 
 struct SaturatedWater {
-  double temperature = 0;        ///< [K]
-  double pressure = 0;           ///< [Pa]
-  double pressure_slope = 0;     ///< dp/dT along the line [Pa/K]
-  double liquid_density = 0;     ///< [kg/m3]
-  double vapour_density = 0;     ///< [kg/m3]
-  double liquid_enthalpy = 0;    ///< [J/kg], zero of internal energy of the liquid at the triple point
-  double vapour_enthalpy = 0;    ///< [J/kg]
+  double temperature = 0;      ///< [K]
+  double pressure = 0;         ///< [Pa]
+  double pressure_slope = 0;   ///< dp/dT along the line [Pa/K]
+  double liquid_density = 0;   ///< [kg/m3]
+  double vapour_density = 0;   ///< [kg/m3]
+  double liquid_enthalpy = 0;  ///< [J/kg], zero of internal energy of the liquid at the triple point
+  double vapour_enthalpy = 0;  ///< [J/kg]
 };
 
 /// @param temperature  [K], 273.16 to 647.096

@@ -29,7 +29,9 @@ class Builder {
   bool boolean(bool value) { return put(Json::boolean(value)); }
   bool number_integer(Source::number_integer_t value) { return put(Json::number(std::to_string(value))); }
   bool number_unsigned(Source::number_unsigned_t value) { return put(Json::number(std::to_string(value))); }
-  bool number_float(Source::number_float_t, const Source::string_t& token) { return put(Json::number(token)); }
+  bool number_float(Source::number_float_t, const Source::string_t& token) {
+    return put(Json::number(token));
+  }
   bool string(Source::string_t& value) { return put(Json::string(std::move(value))); }
   bool binary(Source::binary_t&) { return false; }
   bool start_object(std::size_t) { return open(Json::object()); }
@@ -51,7 +53,8 @@ class Builder {
   bool parse_error(std::size_t offset, const std::string&, const Exception&) {
     const std::size_t at = offset > 0 ? offset - 1 : 0;
     if (at >= text_.size()) {
-      error_ = {"file.not_json", "The text ends before its last bracket is closed.", place(text_, text_.size()),
+      error_ = {"file.not_json", "The text ends before its last bracket is closed.",
+                place(text_, text_.size()),
                 "The file seems to be cut short: get it again from where it came."};
     } else {
       error_ = {"file.not_json", "This is not JSON.", place(text_, at),
@@ -123,13 +126,27 @@ void append_indented(std::string& out, const Json& value, std::size_t level);
 
 void append_scalar(std::string& out, const Json& value) {
   switch (value.kind()) {
-    case Json::Kind::Null: out += "null"; break;
-    case Json::Kind::False: out += "false"; break;
-    case Json::Kind::True: out += "true"; break;
-    case Json::Kind::Number: out += value.text(); break;
-    case Json::Kind::String: append_json_string(out, value.text()); break;
-    case Json::Kind::Array: out += "[]"; break;
-    case Json::Kind::Object: out += "{}"; break;
+    case Json::Kind::Null:
+      out += "null";
+      break;
+    case Json::Kind::False:
+      out += "false";
+      break;
+    case Json::Kind::True:
+      out += "true";
+      break;
+    case Json::Kind::Number:
+      out += value.text();
+      break;
+    case Json::Kind::String:
+      append_json_string(out, value.text());
+      break;
+    case Json::Kind::Array:
+      out += "[]";
+      break;
+    case Json::Kind::Object:
+      out += "{}";
+      break;
   }
 }
 
@@ -240,11 +257,21 @@ void append_json_string(std::string& out, std::string_view text) {
       }
     } else {
       switch (c) {
-        case '"': out += "\\\""; break;
-        case '\\': out += "\\\\"; break;
-        case '\n': out += "\\n"; break;
-        case '\t': out += "\\t"; break;
-        case '\r': out += "\\r"; break;
+        case '"':
+          out += "\\\"";
+          break;
+        case '\\':
+          out += "\\\\";
+          break;
+        case '\n':
+          out += "\\n";
+          break;
+        case '\t':
+          out += "\\t";
+          break;
+        case '\r':
+          out += "\\r";
+          break;
         default: {
           char buffer[8];
           std::snprintf(buffer, sizeof buffer, "\\u%04x", static_cast<unsigned>(code));

@@ -1,5 +1,6 @@
-// A JSON value of our own: order of keys and spelling of numbers kept, so that what a version does not know goes
-// back into the file as it came. Reading goes through a guarded parser (json.cpp); nothing here can abort.
+// A JSON value of our own: order of keys and spelling of numbers kept, so that what a version does not know
+// goes back into the file as it came. Reading goes through a guarded parser (json.cpp); nothing here can
+// abort.
 #pragma once
 
 #include <cstdint>
@@ -56,10 +57,12 @@ class Json {
 };
 
 /// Reads one JSON text (UTF-8, RFC 8259; a byte order mark is skipped).
-/// @errors file.not_json, file.too_deep (more than 64 levels), file.duplicate_key; `where` is "offset N, line L"
+/// @errors file.not_json, file.too_deep (more than 64 levels), file.duplicate_key; `where` is "offset N, line
+/// L"
 Result<Json> read_json(std::string_view text);
 
-/// Two-space indent, one member a line, no newline at the end; arrays of plain values that fit stand on one line.
+/// Two-space indent, one member a line, no newline at the end; arrays of plain values that fit stand on one
+/// line.
 std::string write_json_text(const Json& value);
 
 /// Appends `text` as a JSON string with its quotes; bytes that are no UTF-8 become U+FFFD.

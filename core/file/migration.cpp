@@ -12,7 +12,8 @@ namespace {
 /// Takes a member out of an object; a Null value when there is none.
 Json take(Json& object, std::string_view key, bool& found) {
   auto& members = object.members();
-  const auto at = std::find_if(members.begin(), members.end(), [&](const Json::Member& m) { return m.first == key; });
+  const auto at =
+      std::find_if(members.begin(), members.end(), [&](const Json::Member& m) { return m.first == key; });
   found = at != members.end();
   if (!found) return Json();
   Json value = std::move(at->second);

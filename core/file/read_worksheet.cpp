@@ -13,7 +13,10 @@ namespace {
 class Fields {
  public:
   Fields(const Json& object, std::string path, std::vector<Error>& problems)
-      : path_(std::move(path)), problems_(problems), members_(object.members()), taken_(members_.size(), false) {}
+      : path_(std::move(path)),
+        problems_(problems),
+        members_(object.members()),
+        taken_(members_.size(), false) {}
 
   void text(std::string_view key, std::string& out) {
     if (const Json* value = take(key, Json::Kind::String, "a text")) out = value->text();
@@ -27,7 +30,8 @@ class Fields {
     out = value->is_true();
   }
 
-  /// A member of the kind wanted; nullptr when it is missing or of another kind, which is then kept and reported.
+  /// A member of the kind wanted; nullptr when it is missing or of another kind, which is then kept and
+  /// reported.
   const Json* take(std::string_view key, Json::Kind kind, const char* wanted) {
     const Json* value = peek(key);
     if (value == nullptr) return nullptr;
@@ -42,8 +46,9 @@ class Fields {
   void skip(std::string_view key) { mark(key); }
 
   void complain(std::string_view key, const std::string& wanted) {
-    problems_.push_back({"file.wrong_kind", "\"" + at(key) + "\" should be " + wanted + "; it was kept but not used.",
-                         at(key), "Compare with worksheets/worksheet.schema.json."});
+    problems_.push_back({"file.wrong_kind",
+                         "\"" + at(key) + "\" should be " + wanted + "; it was kept but not used.", at(key),
+                         "Compare with worksheets/worksheet.schema.json."});
   }
 
   std::string at(std::string_view key) const {
@@ -100,7 +105,8 @@ bool usable_id(const std::string& id) {
   return std::all_of(id.begin() + 1, id.end(), [](char c) { return c >= '0' && c <= '9'; });
 }
 
-document::ReactionSheet read_reaction_sheet(const Json& object, const std::string& path, std::vector<Error>& problems) {
+document::ReactionSheet read_reaction_sheet(const Json& object, const std::string& path,
+                                            std::vector<Error>& problems) {
   document::ReactionSheet reaction;
   Fields fields(object, path, problems);
   fields.text("id", reaction.id);
@@ -117,7 +123,8 @@ document::ReactionSheet read_reaction_sheet(const Json& object, const std::strin
       if (member.second.is_string()) {
         reaction.checker[member.first] = member.second.text();
       } else {
-        problems.push_back({"file.wrong_kind", "A figure of the checker's column should be a text; it was left out.",
+        problems.push_back({"file.wrong_kind",
+                            "A figure of the checker's column should be a text; it was left out.",
                             path + ".checker." + member.first, "Write figures as texts: \"-518 kJ\"."});
       }
     }
@@ -126,7 +133,8 @@ document::ReactionSheet read_reaction_sheet(const Json& object, const std::strin
   return reaction;
 }
 
-document::TypedBond read_typed_bond(const Json& object, const std::string& path, std::vector<Error>& problems) {
+document::TypedBond read_typed_bond(const Json& object, const std::string& path,
+                                    std::vector<Error>& problems) {
   document::TypedBond bond;
   Fields fields(object, path, problems);
   fields.text("bond", bond.bond);
@@ -183,7 +191,8 @@ Error not_a_worksheet(const std::string& where) {
 Result<int> file_version(const Json& root) {
   if (!root.is_object()) return not_a_worksheet("top level");
   const Json* format = root.find("format");
-  if (format == nullptr || !format->is_string() || format->text() != kWorksheetFormat) return not_a_worksheet("format");
+  if (format == nullptr || !format->is_string() || format->text() != kWorksheetFormat)
+    return not_a_worksheet("format");
   const Json* version = root.find("version");
   if (version == nullptr || version->kind() != Json::Kind::Number) return not_a_worksheet("version");
   const std::optional<double> number = parse_number(version->text());
@@ -192,8 +201,8 @@ Result<int> file_version(const Json& root) {
   if (*number < kMostChecked && static_cast<int>(*number) != *number) return not_a_worksheet("version");
   if (*number > kWorksheetVersion) {
     return Error{"file.newer_version",
-                 "This worksheet was saved in format version " + version->text() + "; this program reads up to version " +
-                     std::to_string(kWorksheetVersion) + ".",
+                 "This worksheet was saved in format version " + version->text() +
+                     "; this program reads up to version " + std::to_string(kWorksheetVersion) + ".",
                  "version", "Open it with a newer copy of the program; nothing was changed."};
   }
   return static_cast<int>(*number);

@@ -1,5 +1,5 @@
-// The worksheet file: JSON text in and out. Schema: worksheets/worksheet.schema.json; older versions are brought up
-// to date in migration.hpp.
+// The worksheet file: JSON text in and out. Schema: worksheets/worksheet.schema.json; older versions are
+// brought up to date in migration.hpp.
 #pragma once
 
 #include <map>
@@ -23,13 +23,15 @@ struct SavedResults {
 
 struct Opened {
   document::Worksheet sheet;
-  int version = kWorksheetVersion;     ///< of the file, before migration
-  std::vector<Error> not_understood;   ///< parts that were kept but not understood, each with its field path
+  int version = kWorksheetVersion;    ///< of the file, before migration
+  std::vector<Error> not_understood;  ///< parts that were kept but not understood, each with its field path
   SavedResults results;
 };
 
-/// Keys that this version does not know, and known keys with a value of the wrong kind, are kept and written back.
-/// @errors file.not_json, file.too_deep, file.duplicate_key (offset), file.not_a_worksheet, file.newer_version
+/// Keys that this version does not know, and known keys with a value of the wrong kind, are kept and written
+/// back.
+/// @errors file.not_json, file.too_deep, file.duplicate_key (offset), file.not_a_worksheet,
+/// file.newer_version
 Result<Opened> read_worksheet(std::string_view text);
 
 /// Canonical order, two-space indent, ends with a newline; reading and writing again gives the same bytes.

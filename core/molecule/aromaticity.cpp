@@ -14,31 +14,66 @@ constexpr int not_sp2 = -1;
 // Outer electrons minus normal valence: the electrons of the lone pairs of the neutral atom.
 int lone_electrons(int element) {
   switch (element) {
-    case 7: case 15: case 33: return 2;
-    case 8: case 16: case 34: case 52: return 4;
-    default: return 0;  // B, C, Si
+    case 7:
+    case 15:
+    case 33:
+      return 2;
+    case 8:
+    case 16:
+    case 34:
+    case 52:
+      return 4;
+    default:
+      return 0;  // B, C, Si
   }
 }
 
 int normal_valence(int element) {
   switch (element) {
-    case 5: return 3;
-    case 6: case 14: return 4;
-    case 7: case 15: case 33: return 3;
-    case 8: case 16: case 34: case 52: return 2;
-    default: return 0;
+    case 5:
+      return 3;
+    case 6:
+    case 14:
+      return 4;
+    case 7:
+    case 15:
+    case 33:
+      return 3;
+    case 8:
+    case 16:
+    case 34:
+    case 52:
+      return 2;
+    default:
+      return 0;
   }
 }
 
 // Outer electrons tell which end of a double bond draws the pair; within a column the lighter atom does.
 int outer_electrons(int element) {
   switch (element) {
-    case 5: return 3;
-    case 6: case 14: case 32: return 4;
-    case 7: case 15: case 33: return 5;
-    case 8: case 16: case 34: case 52: return 6;
-    case 9: case 17: case 35: case 53: return 7;
-    default: return 1;
+    case 5:
+      return 3;
+    case 6:
+    case 14:
+    case 32:
+      return 4;
+    case 7:
+    case 15:
+    case 33:
+      return 5;
+    case 8:
+    case 16:
+    case 34:
+    case 52:
+      return 6;
+    case 9:
+    case 17:
+    case 35:
+    case 53:
+      return 7;
+    default:
+      return 1;
   }
 }
 
@@ -55,8 +90,8 @@ struct Surroundings {
   bool multiple_outside = false;
 };
 
-Surroundings look_around(const Graph& graph, const Adjacency& adjacency, const std::vector<std::uint8_t>& in_ring,
-                         std::uint32_t atom) {
+Surroundings look_around(const Graph& graph, const Adjacency& adjacency,
+                         const std::vector<std::uint8_t>& in_ring, std::uint32_t atom) {
   Surroundings around;
   around.degree = around.bonded = graph.atoms[atom].hydrogens;
   for (std::uint32_t e = adjacency.first[atom]; e < adjacency.first[atom + 1]; ++e) {
@@ -97,9 +132,11 @@ int ring_electrons(const Graph& graph, const Adjacency& adjacency, const std::ve
   if (atom.unpaired != 0 && (atom.element != 6 || charge != 0)) return not_sp2;
   const int pairs = lone_electrons(atom.element) - charge;
   int electrons = valence - around.degree + (pairs > 0 ? pairs : 0) - atom.unpaired;
-  if (electrons > 1 && around.bonded - around.degree > 1) electrons = 1;  // a triple bond in the ring: benzyne
+  if (electrons > 1 && around.bonded - around.degree > 1)
+    electrons = 1;  // a triple bond in the ring: benzyne
   if (electrons < 0) return not_sp2;
-  const bool drawn_out = around.multiple_outside && draws_from(graph.atoms[around.outside].element, atom.element);
+  const bool drawn_out =
+      around.multiple_outside && draws_from(graph.atoms[around.outside].element, atom.element);
   if (electrons == 0) {
     if (around.multiple_outside) return 0;
     return around.multiple_in_ring ? 1 : not_sp2;

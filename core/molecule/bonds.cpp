@@ -16,7 +16,8 @@ std::array<std::uint8_t, 119> make_ranks() {
   std::array<std::uint8_t, 119> order{}, ranks{};
   for (std::size_t z = 0; z < order.size(); ++z) order[z] = static_cast<std::uint8_t>(z);
   std::sort(order.begin(), order.end(), [](std::uint8_t a, std::uint8_t b) { return symbol(a) < symbol(b); });
-  for (std::size_t place = 0; place < order.size(); ++place) ranks[order[place]] = static_cast<std::uint8_t>(place);
+  for (std::size_t place = 0; place < order.size(); ++place)
+    ranks[order[place]] = static_cast<std::uint8_t>(place);
   return ranks;
 }
 
@@ -30,8 +31,12 @@ struct SettingWord {
   std::string_view word;
 };
 constexpr SettingWord setting_words[] = {
-    {Setting::Nitro, "nitro"},        {Setting::CarbonDioxide, "CO2"},   {Setting::CarbonMonoxide, "CO"},
-    {Setting::NitricOxide, "NO"},     {Setting::NitrogenDioxide, "NO2"}, {Setting::Ozone, "O3"},
+    {Setting::Nitro, "nitro"},
+    {Setting::CarbonDioxide, "CO2"},
+    {Setting::CarbonMonoxide, "CO"},
+    {Setting::NitricOxide, "NO"},
+    {Setting::NitrogenDioxide, "NO2"},
+    {Setting::Ozone, "O3"},
     {Setting::AromaticRing, "aromatic ring"},
 };
 
@@ -87,7 +92,9 @@ class Settings {
   }
 
  private:
-  std::uint32_t degree(std::uint32_t atom) const { return adjacency_.first[atom + 1] - adjacency_.first[atom]; }
+  std::uint32_t degree(std::uint32_t atom) const {
+    return adjacency_.first[atom + 1] - adjacency_.first[atom];
+  }
   bool bare(std::uint32_t atom, std::uint32_t bonds) const {
     return degree(atom) == bonds && graph_.atoms[atom].hydrogens == 0;
   }
@@ -198,7 +205,8 @@ bool count_quickly(const Graph& graph, BondTally& out) {
       const auto passes_on = [](int element) { return element != 6 && element != 8 && element != 16; };
       if (passes_on(a) && passes_on(b)) return false;
     }
-    if (bond.order == Order::Zero || graph.atoms[bond.a].charge * graph.atoms[bond.b].charge < 0) return false;
+    if (bond.order == Order::Zero || graph.atoms[bond.a].charge * graph.atoms[bond.b].charge < 0)
+      return false;
     sums[bond.a] = static_cast<std::uint16_t>(sums[bond.a] + add);
     sums[bond.b] = static_cast<std::uint16_t>(sums[bond.b] + add);
     counter.add(a, b, bond.order, 1);
@@ -206,7 +214,7 @@ bool count_quickly(const Graph& graph, BondTally& out) {
   for (std::size_t i = 0; i < graph.atoms.size(); ++i) {
     const Atom& atom = graph.atoms[i];
     if (atom.element >= 6 && atom.element <= 8) {
-      if (atom.unpaired != 0) return false;                     // NO, NO2, CO written as radicals
+      if (atom.unpaired != 0) return false;                       // NO, NO2, CO written as radicals
       if (atom.element == 6 && sums[i] >= 2 * 256) return false;  // CO2
       const int octet = 10 - atom.element + atom.charge;
       if (atom.element != 6 && (sums[i] & 255) + atom.hydrogens > octet) return false;
@@ -236,9 +244,11 @@ BondTally count_bonds_with_rings(const Graph& graph) {
 }
 
 BondType make_bond_type(int element_a, int element_b, Order order, Setting setting) {
-  CHECK(element_a >= 0 && element_a <= 118 && element_b >= 0 && element_b <= 118, "atomic numbers from 0 to 118");
+  CHECK(element_a >= 0 && element_a <= 118 && element_b >= 0 && element_b <= 118,
+        "atomic numbers from 0 to 118");
   BondType type;
-  const bool swapped = ranks()[static_cast<std::size_t>(element_b)] < ranks()[static_cast<std::size_t>(element_a)];
+  const bool swapped =
+      ranks()[static_cast<std::size_t>(element_b)] < ranks()[static_cast<std::size_t>(element_a)];
   type.first = static_cast<std::uint8_t>(swapped ? element_b : element_a);
   type.second = static_cast<std::uint8_t>(swapped ? element_a : element_b);
   type.order = order;

@@ -13,7 +13,9 @@ namespace {
 // Label of a bond that may be single or double, depending on who drew the ring.
 constexpr std::uint8_t mobile_label = 5;
 
-bool is_plain_hydrogen(const Atom& atom) { return atom.element == 1 && atom.charge == 0 && atom.isotope == 0; }
+bool is_plain_hydrogen(const Atom& atom) {
+  return atom.element == 1 && atom.charge == 0 && atom.isotope == 0;
+}
 
 // Hydrogens written as atoms become counts; [H][H], ions, isotopes and bridging hydrogens stay atoms.
 Graph with_hydrogens_counted(const Graph& graph) {

@@ -7,7 +7,9 @@
 namespace heatledger::molecule {
 namespace {
 
-bool is_digit(char c) { return c >= '0' && c <= '9'; }
+bool is_digit(char c) {
+  return c >= '0' && c <= '9';
+}
 
 enum class Joint : std::uint8_t { None, Plus, Arrow, ReversibleArrow, NotAnArrow };
 
@@ -23,10 +25,12 @@ class EquationReader {
 
   Result<EquationText> read() {
     if (const std::size_t bad = utf8::first_malformed(text_); bad < text_.size()) {
-      return error_at("equation.not_utf8", "The equation holds bytes that are no text.", bad, "Type the equation again here.");
+      return error_at("equation.not_utf8", "The equation holds bytes that are no text.", bad,
+                      "Type the equation again here.");
     }
     if (utf8::skip_blanks(text_, 0) >= text_.size()) {
-      return error_at("equation.empty", "There is no equation yet.", 0, "Write one such as: ethene + H2 -> ethane");
+      return error_at("equation.empty", "There is no equation yet.", 0,
+                      "Write one such as: ethene + H2 -> ethane");
     }
     std::size_t term = 0;  // where the present term begins
     std::size_t at = 0;
@@ -45,7 +49,8 @@ class EquationReader {
       if (c == ')' || c == ']' || c == '}') {
         const char opener = c == ')' ? '(' : c == ']' ? '[' : '{';
         if (open_.empty() || text_[open_.back()] != opener) {
-          return error_at("equation.stray_bracket", "This bracket closes nothing that is open.", at, "Remove it, or add the opening bracket.");
+          return error_at("equation.stray_bracket", "This bracket closes nothing that is open.", at,
+                          "Remove it, or add the opening bracket.");
         }
         open_.pop_back();
         ++at;
@@ -63,7 +68,8 @@ class EquationReader {
       if (std::optional<Error> failed = add_term(term, at)) return *failed;
       if (mark.joint != Joint::Plus) {
         if (arrow_seen_) {
-          return error_at("equation.two_arrows", "There is a second arrow here.", at, "Write each step as a reaction of its own.");
+          return error_at("equation.two_arrows", "There is a second arrow here.", at,
+                          "Write each step as a reaction of its own.");
         }
         if (sides_[0].empty()) return empty_side("left", at);
         arrow_seen_ = true;
@@ -75,7 +81,8 @@ class EquationReader {
       term = at;
     }
     if (!open_.empty()) {
-      return error_at("equation.unclosed_bracket", "This bracket is never closed.", open_.back(), "Add the closing bracket.");
+      return error_at("equation.unclosed_bracket", "This bracket is never closed.", open_.back(),
+                      "Add the closing bracket.");
     }
     if (!arrow_seen_) return no_arrow();
     if (std::optional<Error> failed = add_term(term, text_.size())) return *failed;
@@ -86,7 +93,9 @@ class EquationReader {
   }
 
  private:
-  bool starts(std::size_t at, std::string_view word) const { return text_.compare(at, word.size(), word) == 0; }
+  bool starts(std::size_t at, std::string_view word) const {
+    return text_.compare(at, word.size(), word) == 0;
+  }
   bool blank_or_end(std::size_t at) const { return at >= text_.size() || utf8::blank_at(text_, at) > 0; }
   bool blank_or_start(std::size_t at) const { return at == 0 || utf8::blank_before(text_, at) > 0; }
 
@@ -111,13 +120,15 @@ class EquationReader {
         if (end - at == 1 && blank_or_start(at) && blank_or_end(end)) return {Joint::Arrow, 1};
         return {};
       }
-      default: break;
+      default:
+        break;
     }
     if (static_cast<unsigned char>(text_[at]) != 0xE2) return {};
     if (starts(at, "\u2212>") || starts(at, "\u2013>")) return {Joint::Arrow, 4};
     if (starts(at, "\u2192") || starts(at, "\u27F6")) return {Joint::Arrow, 3};
     if (starts(at, "\u21CC") || starts(at, "\u21C4")) return {Joint::ReversibleArrow, 3};
-    if (starts(at, "\u2190") || starts(at, "\u2194") || starts(at, "\u27F5") || starts(at, "\u27F7")) return {Joint::NotAnArrow, 3};
+    if (starts(at, "\u2190") || starts(at, "\u2194") || starts(at, "\u27F5") || starts(at, "\u27F7"))
+      return {Joint::NotAnArrow, 3};
     return {};
   }
 
@@ -140,7 +151,8 @@ class EquationReader {
     const bool has_digits = next > digits;
     const std::size_t past = utf8::skip_blanks(text_, next);
     if (past == next && past < text_.size() && !has_digits) return false;  // text on both sides
-    return past >= text_.size() || text_[past] == '+' || phase_begins(past) || arrow_at(past).joint != Joint::None;
+    return past >= text_.size() || text_[past] == '+' || phase_begins(past) ||
+           arrow_at(past).joint != Joint::None;
   }
 
   /// A phase in parentheses begins at `at`; looks no further than the longest phase that makes sense.
@@ -154,12 +166,14 @@ class EquationReader {
   std::optional<Error> add_term(std::size_t begin, std::size_t end) {
     std::vector<Term>& side = sides_[arrow_seen_ ? 1 : 0];
     std::size_t from = utf8::skip_blanks(text_.substr(0, end), begin);
-    while (const std::size_t blank = end > from ? utf8::blank_before(text_.substr(0, end), end) : 0) end -= blank;
+    while (const std::size_t blank = end > from ? utf8::blank_before(text_.substr(0, end), end) : 0)
+      end -= blank;
     if (from >= end) {
       const bool nothing_yet = side.empty() && !pending_plus_;
-      if (nothing_yet && !(begin < text_.size() && from < text_.size() && text_[from] == '+')) return std::nullopt;
-      return error_at("equation.empty_term", "A species is missing beside this plus sign.", std::min(from, text_.size()),
-                      "Write a species on both sides of each plus sign.");
+      if (nothing_yet && !(begin < text_.size() && from < text_.size() && text_[from] == '+'))
+        return std::nullopt;
+      return error_at("equation.empty_term", "A species is missing beside this plus sign.",
+                      std::min(from, text_.size()), "Write a species on both sides of each plus sign.");
     }
     Result<Term> term = parse_term(text_.substr(from, end - from), from);
     if (!term) return term.error();
@@ -168,18 +182,20 @@ class EquationReader {
   }
 
   Error empty_side(const char* side, std::size_t at) const {
-    return error_at("equation.empty_side", std::string("Nothing stands on the ") + side + " of the arrow.", at,
-                    "Write at least one species on each side.");
+    return error_at("equation.empty_side", std::string("Nothing stands on the ") + side + " of the arrow.",
+                    at, "Write at least one species on each side.");
   }
 
   Error no_arrow() const {
     const bool has_equals = text_.find('=') != std::string_view::npos;
     return error_at("equation.no_arrow", "The equation has no arrow.", text_.size(),
-                    has_equals ? "Put blanks around = to make it an arrow, or write ->." : "Write -> between reactants and products.");
+                    has_equals ? "Put blanks around = to make it an arrow, or write ->."
+                               : "Write -> between reactants and products.");
   }
 
   Error unclosed_quote(std::size_t at) const {
-    return error_at("equation.unclosed_quote", "This quotation mark is never closed.", at, "Close the SMILES with a second mark.");
+    return error_at("equation.unclosed_quote", "This quotation mark is never closed.", at,
+                    "Close the SMILES with a second mark.");
   }
 
   std::string_view text_;
@@ -194,16 +210,24 @@ class EquationReader {
 
 std::string_view phase_text(Phase phase) {
   switch (phase) {
-    case Phase::Gas: return "g";
-    case Phase::Liquid: return "l";
-    case Phase::Solid: return "s";
-    case Phase::Aqueous: return "aq";
-    case Phase::Dissolved: return "diss";
-    case Phase::Unstated: break;
+    case Phase::Gas:
+      return "g";
+    case Phase::Liquid:
+      return "l";
+    case Phase::Solid:
+      return "s";
+    case Phase::Aqueous:
+      return "aq";
+    case Phase::Dissolved:
+      return "diss";
+    case Phase::Unstated:
+      break;
   }
   return "";
 }
 
-Result<EquationText> parse_equation(std::string_view text) { return EquationReader(text).read(); }
+Result<EquationText> parse_equation(std::string_view text) {
+  return EquationReader(text).read();
+}
 
 }  // namespace heatledger::molecule

@@ -12,16 +12,29 @@
 namespace heatledger::molecule {
 namespace {
 
-bool is_digit(char c) { return c >= '0' && c <= '9'; }
+bool is_digit(char c) {
+  return c >= '0' && c <= '9';
+}
 
 struct Vulgar {
   std::string_view text;
   int numerator, denominator;
 };
-constexpr std::array<Vulgar, 15> kVulgar = {{{"\u00BD", 1, 2}, {"\u00BC", 1, 4}, {"\u00BE", 3, 4}, {"\u2153", 1, 3},
-                                             {"\u2154", 2, 3}, {"\u2155", 1, 5}, {"\u2156", 2, 5}, {"\u2157", 3, 5},
-                                             {"\u2158", 4, 5}, {"\u2159", 1, 6}, {"\u215A", 5, 6}, {"\u215B", 1, 8},
-                                             {"\u215C", 3, 8}, {"\u215D", 5, 8}, {"\u215E", 7, 8}}};
+constexpr std::array<Vulgar, 15> kVulgar = {{{"\u00BD", 1, 2},
+                                             {"\u00BC", 1, 4},
+                                             {"\u00BE", 3, 4},
+                                             {"\u2153", 1, 3},
+                                             {"\u2154", 2, 3},
+                                             {"\u2155", 1, 5},
+                                             {"\u2156", 2, 5},
+                                             {"\u2157", 3, 5},
+                                             {"\u2158", 4, 5},
+                                             {"\u2159", 1, 6},
+                                             {"\u215A", 5, 6},
+                                             {"\u215B", 1, 8},
+                                             {"\u215C", 3, 8},
+                                             {"\u215D", 5, 8},
+                                             {"\u215E", 7, 8}}};
 
 struct PhaseWord {
   std::string_view word;
@@ -49,12 +62,13 @@ std::size_t last_group(std::string_view text) {
   if (text.empty() || text.back() != ')') return std::string_view::npos;
   // A phase holds no parentheses of its own, so the nearest opening one is its own.
   const std::size_t open = text.find_last_of('(');
-  return open != std::string_view::npos && text.find(')', open) == text.size() - 1 ? open : std::string_view::npos;
+  return open != std::string_view::npos && text.find(')', open) == text.size() - 1 ? open
+                                                                                   : std::string_view::npos;
 }
 
 struct Number {
   Coefficient value;
-  std::size_t bytes = 0;       ///< 0: no number begins here
+  std::size_t bytes = 0;  ///< 0: no number begins here
   bool too_long = false, zero_below = false;
 };
 
@@ -152,7 +166,8 @@ Result<Strength> read_strength(std::string_view text, std::size_t offset) {
   Strength strength;
   if (!text.empty() && (text[0] == 'r' || text[0] == 'R')) {
     const std::size_t equals = utf8::skip_blanks(text, 1);
-    if (equals >= text.size() || text[equals] != '=') return bad_strength(offset, "This strength of the solution cannot be read.");
+    if (equals >= text.size() || text[equals] != '=')
+      return bad_strength(offset, "This strength of the solution cannot be read.");
     const std::optional<double> ratio = parse_number(utf8::trim(text.substr(equals + 1)));
     if (!ratio || !(*ratio > 0) || !(*ratio <= 1e9)) {
       return bad_strength(offset, "The moles of water per mole are to be a positive number.");
@@ -165,14 +180,17 @@ Result<Strength> read_strength(std::string_view text, std::size_t offset) {
   const std::optional<double> value = parse_number_prefix(text, length);
   if (!value) return bad_strength(offset, "This strength of the solution cannot be read.");
   const std::string_view unit = utf8::trim(text.substr(length));
-  if (unit == "wt%" || unit == "wt.%" || unit == "wt %" || unit == "wt.-%" || unit == "wt-%" || unit == "% w/w") {
-    if (!(*value > 0) || !(*value < 100)) return bad_strength(offset, "A mass fraction lies between 0 and 100 wt%.");
+  if (unit == "wt%" || unit == "wt.%" || unit == "wt %" || unit == "wt.-%" || unit == "wt-%" ||
+      unit == "% w/w") {
+    if (!(*value > 0) || !(*value < 100))
+      return bad_strength(offset, "A mass fraction lies between 0 and 100 wt%.");
     strength.kind = Strength::Kind::MassFraction;
     strength.value = *value / 100;
     return strength;
   }
   if (unit == "mol/kg" || unit == "molal") {
-    if (!(*value > 0) || !(*value <= 1e3)) return bad_strength(offset, "A molality lies above 0 and below 1000 mol/kg.");
+    if (!(*value > 0) || !(*value <= 1e3))
+      return bad_strength(offset, "A molality lies above 0 and below 1000 mol/kg.");
     strength.kind = Strength::Kind::Molality;
     strength.value = *value;
     return strength;
@@ -187,8 +205,8 @@ Result<Strength> read_strength(std::string_view text, std::size_t offset) {
 /// The inside of a pair of parentheses, split at its first comma.
 struct PhaseInside {
   Phase phase = Phase::Unstated;
-  std::string_view rest;          ///< after the comma
-  std::size_t rest_offset = 0;    ///< bytes from the opening parenthesis
+  std::string_view rest;        ///< after the comma
+  std::size_t rest_offset = 0;  ///< bytes from the opening parenthesis
   bool has_comma = false;
 };
 
@@ -216,7 +234,9 @@ std::size_t closing_quote(std::string_view text, std::size_t at) {
   return close == std::string_view::npos ? close : close + kCloseQuote.size();
 }
 
-bool is_phase(std::string_view parentheses) { return look_inside(parentheses).phase != Phase::Unstated; }
+bool is_phase(std::string_view parentheses) {
+  return look_inside(parentheses).phase != Phase::Unstated;
+}
 
 Result<Term> parse_term(std::string_view text, std::size_t offset) {
   Term term;
@@ -229,15 +249,18 @@ Result<Term> parse_term(std::string_view text, std::size_t offset) {
     const PhaseInside inside = look_inside(rest.substr(open));
     if (inside.phase != Phase::Unstated) {
       if (inside.has_comma) {
-        if (inside.phase != Phase::Aqueous) return bad_strength(offset + open, "Only (aq) carries a strength.");
+        if (inside.phase != Phase::Aqueous)
+          return bad_strength(offset + open, "Only (aq) carries a strength.");
         Result<Strength> strength = read_strength(inside.rest, offset + open + inside.rest_offset);
         if (!strength) return strength.error();
         term.strength = *strength;
       }
       term.phase = inside.phase;
       rest = utf8::trim(rest.substr(0, open));
-      if (const std::size_t again = last_group(rest); again != std::string_view::npos && is_phase(rest.substr(again))) {
-        return error_at("equation.two_phases", "This species has two phases.", offset + open, "Keep one of them.");
+      if (const std::size_t again = last_group(rest);
+          again != std::string_view::npos && is_phase(rest.substr(again))) {
+        return error_at("equation.two_phases", "This species has two phases.", offset + open,
+                        "Keep one of them.");
       }
     }
   }
@@ -247,32 +270,39 @@ Result<Term> parse_term(std::string_view text, std::size_t offset) {
   if (number.bytes > 0) {
     const std::string_view after = rest.substr(number.bytes);
     const bool blank = utf8::blank_at(after, 0) > 0;
-    const bool quote = !after.empty() && (after[0] == '"' || after.substr(0, kOpenQuote.size()) == kOpenQuote);
+    const bool quote =
+        !after.empty() && (after[0] == '"' || after.substr(0, kOpenQuote.size()) == kOpenQuote);
     bool taken = blank || quote || after.empty();
-    if (!taken && !number.too_long && after[0] != '-' && after[0] != ',' && after[0] != '\'') taken = parse_formula(after).ok();
+    if (!taken && !number.too_long && after[0] != '-' && after[0] != ',' && after[0] != '\'')
+      taken = parse_formula(after).ok();
     if (taken) {
       if (number.too_long) {
-        return error_at("equation.bad_coefficient", "This coefficient has too many digits.", offset, "Use up to twelve digits.");
+        return error_at("equation.bad_coefficient", "This coefficient has too many digits.", offset,
+                        "Use up to twelve digits.");
       }
       if (number.zero_below) {
-        return error_at("equation.bad_coefficient", "A fraction cannot have zero below the line.", offset, "Write the coefficient again.");
+        return error_at("equation.bad_coefficient", "A fraction cannot have zero below the line.", offset,
+                        "Write the coefficient again.");
       }
       if (after.empty()) {
         return error_at("equation.only_number", "Here is a number without a species.", offset,
                         "Write the species after its coefficient; a charge such as Fe^3+ needs no blank.");
       }
       if (number.value.numerator == 0) {
-        return error_at("equation.zero_coefficient", "A coefficient cannot be zero.", offset, "Leave the species out instead.");
+        return error_at("equation.zero_coefficient", "A coefficient cannot be zero.", offset,
+                        "Leave the species out instead.");
       }
       term.coefficient = number.value;
       rest = utf8::trim(after);
     }
   }
   if (rest.size() > 1 && rest[0] == '-' && (is_digit(rest[1]) || utf8::blank_at(rest, 1) > 0)) {
-    return error_at("equation.bad_coefficient", "A coefficient cannot be negative.", offset, "Move the species to the other side of the arrow.");
+    return error_at("equation.bad_coefficient", "A coefficient cannot be negative.", offset,
+                    "Move the species to the other side of the arrow.");
   }
   if (rest.size() > 2 && rest[0] == '0' && rest[1] == ',' && is_digit(rest[2])) {
-    return error_at("equation.bad_coefficient", "A comma is no decimal point here.", offset, "Write the coefficient with a point: 0.5.");
+    return error_at("equation.bad_coefficient", "A comma is no decimal point here.", offset,
+                    "Write the coefficient with a point: 0.5.");
   }
 
   // What is left is the species.
@@ -282,19 +312,22 @@ Result<Term> parse_term(std::string_view text, std::size_t offset) {
     const std::size_t close = closing_quote(rest, 0);
     if (close != rest.size()) {
       const std::size_t at = term.species_offset + utf8::skip_blanks(rest, close);
-      return error_at("equation.text_after_quote", "After a quoted SMILES only a phase may stand.", at, "Join further species with +.");
+      return error_at("equation.text_after_quote", "After a quoted SMILES only a phase may stand.", at,
+                      "Join further species with +.");
     }
     const std::size_t mark = plain_quote ? 1 : kOpenQuote.size();
     const std::string_view inner = rest.substr(mark, rest.size() - 2 * mark);
     term.species_offset += mark + utf8::skip_blanks(inner, 0);
     term.quoted = true;
     rest = utf8::trim(inner);
-  } else if (const std::size_t quote = std::min(rest.find('"'), rest.find(kOpenQuote)); quote != std::string_view::npos) {
-    return error_at("equation.misplaced_quote", "A quotation mark begins in the middle of a species.", term.species_offset + quote,
-                    "Put the whole SMILES in quotation marks, or none of it.");
+  } else if (const std::size_t quote = std::min(rest.find('"'), rest.find(kOpenQuote));
+             quote != std::string_view::npos) {
+    return error_at("equation.misplaced_quote", "A quotation mark begins in the middle of a species.",
+                    term.species_offset + quote, "Put the whole SMILES in quotation marks, or none of it.");
   }
   if (rest.empty()) {
-    return error_at("equation.empty_species", "A species is missing here.", term.species_offset, "Write a name, a formula or SMILES.");
+    return error_at("equation.empty_species", "A species is missing here.", term.species_offset,
+                    "Write a name, a formula or SMILES.");
   }
   term.species = std::string(rest);
   return term;

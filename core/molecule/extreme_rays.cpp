@@ -13,7 +13,9 @@ __extension__ typedef __int128 Wide;
 constexpr std::size_t kMostColumns = 40;
 constexpr std::size_t kMostRays = 512;
 
-Wide absolute(Wide value) { return value < 0 ? -value : value; }
+Wide absolute(Wide value) {
+  return value < 0 ? -value : value;
+}
 
 Wide common_divisor(Wide a, Wide b) {
   a = absolute(a), b = absolute(b);
@@ -89,7 +91,8 @@ std::optional<WholeVector> whole_row(const std::vector<double>& row) {
   return whole;
 }
 
-std::optional<std::vector<WholeVector>> extreme_rays(const std::vector<WholeVector>& rows, std::size_t columns) {
+std::optional<std::vector<WholeVector>> extreme_rays(const std::vector<WholeVector>& rows,
+                                                     std::size_t columns) {
   if (columns > kMostColumns) return std::nullopt;
   std::vector<WholeVector> rays;
   for (std::size_t i = 0; i < columns; ++i) {
@@ -173,7 +176,8 @@ std::vector<std::size_t> wrong_side(const std::vector<WholeVector>& rows, std::s
   std::vector<bool> is_pivot(columns, false);
   for (const std::size_t pivot : rank.pivots()) is_pivot[pivot] = true;
   WholeVector solution(columns, 0);
-  solution[static_cast<std::size_t>(std::find(is_pivot.begin(), is_pivot.end(), false) - is_pivot.begin())] = 1;
+  solution[static_cast<std::size_t>(std::find(is_pivot.begin(), is_pivot.end(), false) - is_pivot.begin())] =
+      1;
   for (std::size_t i = rank.reduced().size(); i-- > 0;) {
     const WholeVector& row = rank.reduced()[i];
     const std::size_t pivot = rank.pivots()[i];

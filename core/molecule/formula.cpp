@@ -32,9 +32,15 @@ constexpr std::array<VulgarFraction, 7> kVulgar = {{{"\u00BD", 0.5},
                                                     {"\u2155", 0.2},
                                                     {"\u215B", 0.125}}};
 
-bool is_digit(char c) { return c >= '0' && c <= '9'; }
-bool is_upper(char c) { return c >= 'A' && c <= 'Z'; }
-bool is_lower(char c) { return c >= 'a' && c <= 'z'; }
+bool is_digit(char c) {
+  return c >= '0' && c <= '9';
+}
+bool is_upper(char c) {
+  return c >= 'A' && c <= 'Z';
+}
+bool is_lower(char c) {
+  return c >= 'a' && c <= 'z';
+}
 
 /// Elements whose bare "X2+" or "X3-" is used for more than one ion: everything that is no metal.
 bool is_nonmetal(int element) {
@@ -63,7 +69,8 @@ class FormulaReader {
   FormulaMarks& marks() { return marks_; }
 
   Result<Composition> read() {
-    if (at_ >= end_) return error("formula.empty", "There is no formula here.", at_, "Write a formula such as C2H5OH.");
+    if (at_ >= end_)
+      return error("formula.empty", "There is no formula here.", at_, "Write a formula such as C2H5OH.");
     if (is_digit(text_[at_])) {
       return error("formula.leading_number", "A formula does not begin with a number.", at_,
                    "Put a blank between a coefficient and its formula.");
@@ -102,11 +109,14 @@ class FormulaReader {
   }
 
   Error unexpected() const {
-    return error("formula.unexpected", "A formula cannot hold \"" + shown_at(at_) + "\" here.", at_,
-                 "A formula is element symbols with counts, brackets, a dot for a hydrate and a charge at the end.");
+    return error(
+        "formula.unexpected", "A formula cannot hold \"" + shown_at(at_) + "\" here.", at_,
+        "A formula is element symbols with counts, brackets, a dot for a hydrate and a charge at the end.");
   }
 
-  bool starts(std::size_t at, std::string_view word) const { return text_.compare(at, word.size(), word) == 0; }
+  bool starts(std::size_t at, std::string_view word) const {
+    return text_.compare(at, word.size(), word) == 0;
+  }
 
   std::size_t dot_at(std::size_t at) const {
     for (const std::string_view dot : kDots) {
@@ -149,13 +159,18 @@ class FormulaReader {
     if (digits > 0 && at_ + 1 < end_ && text_[at_] == '.' && is_digit(text_[at_ + 1])) {
       double place = 1;
       double decimals = 0;
-      for (++at_; at_ < end_ && is_digit(text_[at_]); ++at_) decimals = decimals * 10 + (text_[at_] - '0'), place *= 10;
-      if (place > 1e9) return error("formula.too_large", "This number has too many decimals.", begin, "Use up to nine decimals.");
+      for (++at_; at_ < end_ && is_digit(text_[at_]); ++at_)
+        decimals = decimals * 10 + (text_[at_] - '0'), place *= 10;
+      if (place > 1e9)
+        return error("formula.too_large", "This number has too many decimals.", begin,
+                     "Use up to nine decimals.");
       whole += decimals / place;
     } else if (digits > 0 && at_ + 1 < end_ && text_[at_] == '/' && is_digit(text_[at_ + 1])) {
       double below = 0;
       for (++at_; at_ < end_ && is_digit(text_[at_]); ++at_) below = below * 10 + (text_[at_] - '0');
-      if (below == 0) return error("formula.zero_count", "A fraction cannot have zero below the line.", begin, "Write the fraction again.");
+      if (below == 0)
+        return error("formula.zero_count", "A fraction cannot have zero below the line.", begin,
+                     "Write the fraction again.");
       whole /= below;
     } else {
       for (const VulgarFraction& fraction : kVulgar) {
@@ -168,7 +183,9 @@ class FormulaReader {
       }
     }
     if (digits > 0) {
-      if (whole == 0) return error("formula.zero_count", "A count cannot be zero.", begin, "Leave the part out, or write its number.");
+      if (whole == 0)
+        return error("formula.zero_count", "A count cannot be zero.", begin,
+                     "Leave the part out, or write its number.");
       if (!(whole <= kMostAtoms)) return too_large(begin);
       part_ = whole;
       at_ = std::min(utf8::skip_blanks(text_, at_), end_);
@@ -177,7 +194,8 @@ class FormulaReader {
   }
 
   static Error too_large(std::size_t at) {
-    return error("formula.too_large", "This count is too large for a formula.", at, "Counts reach to a thousand million atoms.");
+    return error("formula.too_large", "This count is too large for a formula.", at,
+                 "Counts reach to a thousand million atoms.");
   }
 
   /// One part between dots, and the charge when it is the last.
@@ -190,7 +208,8 @@ class FormulaReader {
         failed = read_element();
       } else if (c == '(' || c == '[' || c == '{') {
         if (levels_.size() > kMostLevels) {
-          return error("formula.too_deep", "Brackets are nested too deeply.", at_, "Formulas may nest 64 brackets.");
+          return error("formula.too_deep", "Brackets are nested too deeply.", at_,
+                       "Formulas may nest 64 brackets.");
         }
         levels_.push_back({{}, at_, c});
         ++at_;
@@ -206,8 +225,8 @@ class FormulaReader {
         failed = read_charge();
         if (!failed && at_ < end_) failed = unexpected();
       } else if (is_lower(c)) {
-        return error("formula.unknown_element", "No element symbol begins with \"" + shown_at(at_) + "\".", at_,
-                     "Element symbols begin with a capital letter.");
+        return error("formula.unknown_element", "No element symbol begins with \"" + shown_at(at_) + "\".",
+                     at_, "Element symbols begin with a capital letter.");
       } else {
         break;
       }
@@ -216,11 +235,13 @@ class FormulaReader {
     }
     if (levels_.size() > 1) {
       if (at_ < end_) return unexpected();
-      return error("formula.unclosed_bracket", "This bracket is never closed.", levels_.back().open, "Add the closing bracket.");
+      return error("formula.unclosed_bracket", "This bracket is never closed.", levels_.back().open,
+                   "Add the closing bracket.");
     }
     if (!any) {
       if (at_ < end_ && dot_at(at_) == 0) return unexpected();
-      return error("formula.empty_part", "A part of the formula is missing beside the dot.", at_, "Write a formula on both sides of the dot.");
+      return error("formula.empty_part", "A part of the formula is missing beside the dot.", at_,
+                   "Write a formula on both sides of the dot.");
     }
     for (const auto& [key, count] : levels_.front().atoms) {
       double& total = result_.atoms[key];
@@ -277,7 +298,8 @@ class FormulaReader {
                    "Use element symbols; groups such as Ph or Et are written out, C6H5 or C2H5.");
     }
     if (mass != 0 && (mass < *element || mass > 3 * *element + 4 || mass > 300)) {
-      return error("formula.bad_isotope", "This element has no isotope of mass number " + std::to_string(mass) + ".", begin,
+      return error("formula.bad_isotope",
+                   "This element has no isotope of mass number " + std::to_string(mass) + ".", begin,
                    "Write the mass number in front of the symbol: [13C].");
     }
     at_ += length;
@@ -291,14 +313,16 @@ class FormulaReader {
     const char c = text_[at_];
     const char opener = c == ')' ? '(' : c == ']' ? '[' : '{';
     if (levels_.size() == 1) {
-      return error("formula.stray_bracket", "This bracket closes nothing.", at_, "Remove it, or add the opening bracket.");
+      return error("formula.stray_bracket", "This bracket closes nothing.", at_,
+                   "Remove it, or add the opening bracket.");
     }
     if (levels_.back().bracket != opener) {
       return error("formula.stray_bracket", "This bracket does not match the one that was opened.", at_,
                    std::string("The open one is \"") + levels_.back().bracket + "\".");
     }
     if (levels_.back().atoms.empty()) {
-      return error("formula.empty_bracket", "There is nothing between these brackets.", levels_.back().open, "Remove them, or write the group.");
+      return error("formula.empty_bracket", "There is nothing between these brackets.", levels_.back().open,
+                   "Remove them, or write the group.");
     }
     const Level group = std::move(levels_.back());
     levels_.pop_back();
@@ -322,7 +346,8 @@ class FormulaReader {
 
   std::optional<Error> read_count(const Before& before, double& count) {
     const std::size_t begin = at_;
-    if (before.bracket == '[' && at_ < end_ && is_digit(text_[begin]) && levels_.size() == 1 && before.start == start_) {
+    if (before.bracket == '[' && at_ < end_ && is_digit(text_[begin]) && levels_.size() == 1 &&
+        before.start == start_) {
       std::size_t at = at_;
       while (at < end_ && is_digit(text_[at])) ++at;
       if (only_signs_from(at)) return std::nullopt;  // the digits belong to the charge: "[Fe(CN)6]3-"
@@ -333,8 +358,11 @@ class FormulaReader {
       while (at_ < end_ && is_digit(text_[at_])) value = value * 10 + (text_[at_++] - '0'), ++digits;
       if (value == 0 && digits == 1 && at_ + 1 < end_ && text_[at_] == '.' && is_digit(text_[at_ + 1])) {
         double place = 1;
-        for (++at_; at_ < end_ && is_digit(text_[at_]); ++at_) value = value * 10 + (text_[at_] - '0'), place *= 10;
-        if (place > 1e9) return error("formula.too_large", "This number has too many decimals.", begin, "Use up to nine decimals.");
+        for (++at_; at_ < end_ && is_digit(text_[at_]); ++at_)
+          value = value * 10 + (text_[at_] - '0'), place *= 10;
+        if (place > 1e9)
+          return error("formula.too_large", "This number has too many decimals.", begin,
+                       "Use up to nine decimals.");
         value /= place;
       } else if (before.bracket != 0 && at_ + 1 < end_ && text_[at_] == '/' && is_digit(text_[at_ + 1])) {
         double below = 0;
@@ -357,7 +385,9 @@ class FormulaReader {
   }
 
   std::optional<Error> take_count(double value, std::size_t begin, double& count) {
-    if (value == 0) return error("formula.zero_count", "A count cannot be zero.", begin, "Leave the element out, or write its number.");
+    if (value == 0)
+      return error("formula.zero_count", "A count cannot be zero.", begin,
+                   "Leave the element out, or write its number.");
     if (!(value <= kMostAtoms)) return too_large(begin);
     count = value;
     marks_.counts.emplace_back(begin, at_);
@@ -365,14 +395,16 @@ class FormulaReader {
   }
 
   /// Digits [begin, at_) stand between an atom or group and a final sign: how many of them are the count?
-  std::optional<Error> split_charge(const Before& before, std::size_t begin, std::size_t digits, double& count) {
+  std::optional<Error> split_charge(const Before& before, std::size_t begin, std::size_t digits,
+                                    double& count) {
     const auto [sign, bytes] = sign_at(at_);
     const bool one_sign = at_ + bytes == end_;
     const bool whole = before.start == start_ && result_.atoms.empty();
     const int first = text_[begin] - '0';
     const int second = digits == 2 ? text_[begin + 1] - '0' : 0;
     const bool second_is_charge = second >= 2 && second <= 4 && first >= 2;
-    if (one_sign && whole && before.bracket == 0 && digits == 1 && first > 0 && sign > 0 && !is_nonmetal(before.element)) {
+    if (one_sign && whole && before.bracket == 0 && digits == 1 && first > 0 && sign > 0 &&
+        !is_nonmetal(before.element)) {
       at_ = begin;  // "Fe3+": a metal alone, the digit is its charge
       return std::nullopt;
     }
@@ -386,8 +418,8 @@ class FormulaReader {
       const std::string number(text_.substr(begin, digits));
       const std::string other = digits == 1 ? base + "^" + number + mark
                                             : base + number.substr(0, 1) + "^" + number.substr(1) + mark;
-      return error("formula.ambiguous_charge", "The number before the sign can be a count or a charge.", begin,
-                   "Write " + base + number + "^" + mark + " or " + other + ".");
+      return error("formula.ambiguous_charge", "The number before the sign can be a count or a charge.",
+                   begin, "Write " + base + number + "^" + mark + " or " + other + ".");
     }
     double value = 0;
     for (std::size_t i = begin; i < at_; ++i) value = value * 10 + (text_[i] - '0');
@@ -443,7 +475,8 @@ class FormulaReader {
       if (at_ >= end_ || text_[at_] != '}') return bad_charge(begin);
       ++at_;
     }
-    if (sign == 0 || (digits > 0 && (signs > 1 || number == 0 || number > 99)) || signs > 99 || at_ < end_) return bad_charge(begin);
+    if (sign == 0 || (digits > 0 && (signs > 1 || number == 0 || number > 99)) || signs > 99 || at_ < end_)
+      return bad_charge(begin);
     charge_ = sign * (digits > 0 ? number : signs);
     return std::nullopt;
   }
@@ -464,7 +497,9 @@ class FormulaReader {
 
 }  // namespace
 
-Result<Composition> parse_formula(std::string_view text) { return FormulaReader(text).read(); }
+Result<Composition> parse_formula(std::string_view text) {
+  return FormulaReader(text).read();
+}
 
 std::optional<FormulaMarks> formula_marks(std::string_view text, int& charge) {
   FormulaReader reader(text);

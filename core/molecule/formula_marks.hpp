@@ -11,9 +11,10 @@ namespace heatledger::molecule {
 
 struct FormulaMarks {
   static constexpr std::size_t kNone = static_cast<std::size_t>(-1);
-  std::vector<std::pair<std::size_t, std::size_t>> counts;  ///< byte ranges of counts and multipliers, ascending
-  std::vector<std::size_t> dots;                            ///< where hydrate dots stand, ascending
-  std::size_t charge = kNone;                               ///< where the charge begins; the size of the text without one
+  std::vector<std::pair<std::size_t, std::size_t>>
+      counts;                     ///< byte ranges of counts and multipliers, ascending
+  std::vector<std::size_t> dots;  ///< where hydrate dots stand, ascending
+  std::size_t charge = kNone;     ///< where the charge begins; the size of the text without one
 };
 
 /// @param charge  receives the charge

@@ -107,15 +107,20 @@ std::string formula_text(const Composition& composition, bool display) {
     text += display ? lowered(number) : number;
   }
   if (denominator > 1) text = "(" + text + ")1/" + std::to_string(denominator);
-  if (composition.charge != 0) text += display ? raised(charge_text(composition.charge)) : "^" + charge_text(composition.charge);
+  if (composition.charge != 0)
+    text += display ? raised(charge_text(composition.charge)) : "^" + charge_text(composition.charge);
   return text;
 }
 
 }  // namespace
 
-std::string hill_formula(const Composition& composition) { return formula_text(composition, false); }
+std::string hill_formula(const Composition& composition) {
+  return formula_text(composition, false);
+}
 
-std::string display_formula(const Composition& composition) { return formula_text(composition, true); }
+std::string display_formula(const Composition& composition) {
+  return formula_text(composition, true);
+}
 
 std::string typeset_formula(std::string_view text) {
   text = utf8::trim(text);

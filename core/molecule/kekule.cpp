@@ -37,9 +37,9 @@ class AtomList {
 using Needs = AtomList<Need>;
 using Flags = AtomList<std::uint8_t>;
 
-// OpenSMILES counts an aromatic atom one above its written bonds where a valence asks for it: c with two ring bonds
-// has a double bond and one hydrogen, n with three has neither. Brackets state hydrogens, so a missing electron there
-// may be a double bond or stay unpaired ([c] of phenyl).
+// OpenSMILES counts an aromatic atom one above its written bonds where a valence asks for it: c with two ring
+// bonds has a double bond and one hydrogen, n with three has neither. Brackets state hydrogens, so a missing
+// electron there may be a double bond or stay unpaired ([c] of phenyl).
 Need need_of(const Atom& atom) {
   if (atom.element == 0) return Need::May;
   if (atom.hydrogens == hydrogens_unfilled) {
@@ -61,9 +61,10 @@ void fill_atom(Atom& atom, int ring_double_bonds) {
 }
 
 // Clears the flag of bonds that no ring holds; false, nothing settled, where the molecule is too large.
-// In the order of writing every atom but the first of a fragment hangs on an earlier one by the first bond that names it
-// second; the others are ring closures, one bit each. Summing the bits of both ends of each closure from the last atom
-// to the first leaves on every hanging bond the closures that pass over it: none means a bridge.
+// In the order of writing every atom but the first of a fragment hangs on an earlier one by the first bond
+// that names it second; the others are ring closures, one bit each. Summing the bits of both ends of each
+// closure from the last atom to the first leaves on every hanging bond the closures that pass over it: none
+// means a bridge.
 bool mark_bridges_quickly(const Graph& graph, Flags& in_ring) {
   constexpr std::size_t most_atoms = 128, most_closures = 64;
   const std::size_t atoms = graph.atoms.size();
@@ -95,7 +96,8 @@ bool mark_bridges_quickly(const Graph& graph, Flags& in_ring) {
   return true;
 }
 
-// Bonds between aromatic atoms that no ring holds (biphenyl) are single. Systems of lone cycles need no search.
+// Bonds between aromatic atoms that no ring holds (biphenyl) are single. Systems of lone cycles need no
+// search.
 void drop_bonds_outside_rings(Graph& graph) {
   Flags degree(graph.atoms.size(), 0);
   const auto count = [&](std::uint32_t atom) {
@@ -151,7 +153,8 @@ std::optional<std::uint32_t> match_rest(Graph& graph, Needs& need) {
   // Then as few unpaired electrons as can be; '*' has none to pair.
   for (std::uint32_t i = 0; i < graph.atoms.size(); ++i) {
     const Atom& atom = graph.atoms[i];
-    if (!atom.aromatic || need[i] != Need::May || atom.element == 0 || matching.mate(i) != Matching::none) continue;
+    if (!atom.aromatic || need[i] != Need::May || atom.element == 0 || matching.mate(i) != Matching::none)
+      continue;
     matching.augment(i, false);
   }
   for (const std::uint32_t at : edge_bond) {

@@ -77,8 +77,8 @@ bool rematch(Matching& matching, const std::vector<std::uint32_t>& atoms) {
   return true;
 }
 
-// Leaves as few hetero pairs joined as any Kekulé structure of this system needs; the others are forbidden after it.
-// Of several sets with that number the first in the order of the pairs is taken.
+// Leaves as few hetero pairs joined as any Kekulé structure of this system needs; the others are forbidden
+// after it. Of several sets with that number the first in the order of the pairs is taken.
 void thin_out(Matching& matching, const System& system) {
   constexpr std::size_t exhaustive = 12;
   const std::vector<Edge>& pairs = system.hetero_pairs;
@@ -103,7 +103,8 @@ void thin_out(Matching& matching, const System& system) {
   }
 }
 
-// Fixes partners one atom after the other: lowest rank first, with the lowest partner that still lets all be matched.
+// Fixes partners one atom after the other: lowest rank first, with the lowest partner that still lets all be
+// matched.
 void match_by_rank(Matching& matching, const System& system) {
   for (const std::uint32_t atom : system.atoms) {
     if (matching.removed(atom)) continue;
@@ -201,6 +202,8 @@ void choose_kekule_bonds(Graph& graph) {
   if (has_double_hetero_pair(graph)) choose(graph, nullptr);
 }
 
-void choose_kekule_bonds(Graph& graph, const std::vector<std::uint32_t>& ranks) { choose(graph, &ranks); }
+void choose_kekule_bonds(Graph& graph, const std::vector<std::uint32_t>& ranks) {
+  choose(graph, &ranks);
+}
 
 }  // namespace heatledger::molecule

@@ -19,33 +19,43 @@ namespace {
 constexpr std::size_t kMostAtoms = 10000;
 constexpr int kMostLevels = 32;
 
-bool is_digit(char c) { return c >= '0' && c <= '9'; }
-bool is_lower(char c) { return c >= 'a' && c <= 'z'; }
-bool is_halogen(int element) { return element == 9 || element == 17 || element == 35 || element == 53; }
+bool is_digit(char c) {
+  return c >= '0' && c <= '9';
+}
+bool is_lower(char c) {
+  return c >= 'a' && c <= 'z';
+}
+bool is_halogen(int element) {
+  return element == 9 || element == 17 || element == 35 || element == 53;
+}
 
 Error not_condensed(std::size_t at, std::string message) {
-  return error_at("line_formula.not_condensed", std::move(message), at, "Write a name, SMILES, or a condensed formula such as CH3CH2OH.");
+  return error_at("line_formula.not_condensed", std::move(message), at,
+                  "Write a name, SMILES, or a condensed formula such as CH3CH2OH.");
 }
 
 Error molecular(std::size_t at) {
   return not_condensed(at, "This is a molecular formula: it does not say how its atoms are bound.");
 }
 
-Error crowded(std::size_t at) { return not_condensed(at, "There are more atoms here than the chain can bind."); }
+Error crowded(std::size_t at) {
+  return not_condensed(at, "There are more atoms here than the chain can bind.");
+}
 
 Error ambiguous(std::size_t at, std::string message) {
-  return error_at("line_formula.ambiguous", std::move(message), at, "Write the name, SMILES, or a formula that shows the chain.");
+  return error_at("line_formula.ambiguous", std::move(message), at,
+                  "Write the name, SMILES, or a formula that shows the chain.");
 }
 
 /// A bracket or the whole text while it is read.
 struct Level {
   LineFragment chain;
-  int front_hydrogens = 0;                                  ///< wait for the next atom
-  std::vector<std::pair<LineFragment, int>> front_pieces;   ///< so do these, each so many times
-  int mark = 0;                                             ///< order written before the next atom; 0: none
+  int front_hydrogens = 0;                                 ///< wait for the next atom
+  std::vector<std::pair<LineFragment, int>> front_pieces;  ///< so do these, each so many times
+  int mark = 0;                                            ///< order written before the next atom; 0: none
   std::size_t mark_at = 0;
-  std::uint32_t last = kNoAtom;                             ///< hydrogens belong to it
-  bool bare = false;                                        ///< the last atom has got nothing since it came
+  std::uint32_t last = kNoAtom;  ///< hydrogens belong to it
+  bool bare = false;             ///< the last atom has got nothing since it came
 
   bool started() const { return chain.current != kNoAtom; }
   bool waiting() const { return front_hydrogens > 0 || !front_pieces.empty(); }
@@ -62,22 +72,29 @@ class LineReader {
     LineFragment whole;
     if (std::optional<Error> failed = read_level(0, whole)) return *failed;
     if (at_ < text_.size()) return not_condensed(at_, "This bracket closes nothing.");
-    if (prefix_ != 0 && !prefix_used_) return not_condensed(0, "This prefix belongs to no group of the formula.");
+    if (prefix_ != 0 && !prefix_used_)
+      return not_condensed(0, "This prefix belongs to no group of the formula.");
     const bool any = std::any_of(whole.graph.atoms.begin(), whole.graph.atoms.end(), [](const Atom& atom) {
       return atom.element == 6 || atom.hydrogens > 0 || is_halogen(atom.element);
     });
     // Without carbon or hydrogen ("OO", "NN") the text says nothing about its bonds.
-    if (!any || !whole.close_valences()) return not_condensed(begin, "The valences of this formula do not close in one single way.");
-    if (is_also_molecular(whole.graph)) return ambiguous(begin, "This is also a molecular formula, and isomers have it.");
+    if (!any || !whole.close_valences())
+      return not_condensed(begin, "The valences of this formula do not close in one single way.");
+    if (is_also_molecular(whole.graph))
+      return ambiguous(begin, "This is also a molecular formula, and isomers have it.");
     return std::move(whole.graph);
   }
 
  private:
-  /// "CH3NO" reads as nitrosomethane, but whoever writes it in Hill order most likely means formamide. The sign of it: Hill
-  /// order, and a bond between two atoms that are neither carbon nor halogen, outside a nitro group.
+  /// "CH3NO" reads as nitrosomethane, but whoever writes it in Hill order most likely means formamide. The
+  /// sign of it: Hill order, and a bond between two atoms that are neither carbon nor halogen, outside a
+  /// nitro group.
   bool is_also_molecular(const Graph& graph) const {
-    auto odd = [&](std::uint32_t i) { return graph.atoms[i].element != 6 && !is_halogen(graph.atoms[i].element) && graph.atoms[i].charge == 0; };
-    const bool suspect = std::any_of(graph.bonds.begin(), graph.bonds.end(), [&](const Bond& bond) { return odd(bond.a) && odd(bond.b); });
+    auto odd = [&](std::uint32_t i) {
+      return graph.atoms[i].element != 6 && !is_halogen(graph.atoms[i].element) && graph.atoms[i].charge == 0;
+    };
+    const bool suspect = std::any_of(graph.bonds.begin(), graph.bonds.end(),
+                                     [&](const Bond& bond) { return odd(bond.a) && odd(bond.b); });
     return suspect && hill_formula(composition(graph)) == text_;
   }
 
@@ -89,8 +106,16 @@ class LineReader {
       std::string_view text;
       char kind;
     };
-    constexpr std::array<Prefix, 10> kPrefixes = {{{"n-", 'n'}, {"i-", 'i'}, {"iso-", 'i'}, {"s-", 's'}, {"sec-", 's'},
-                                                  {"t-", 't'}, {"tert-", 't'}, {"o-", 'o'}, {"m-", 'm'}, {"p-", 'p'}}};
+    constexpr std::array<Prefix, 10> kPrefixes = {{{"n-", 'n'},
+                                                   {"i-", 'i'},
+                                                   {"iso-", 'i'},
+                                                   {"s-", 's'},
+                                                   {"sec-", 's'},
+                                                   {"t-", 't'},
+                                                   {"tert-", 't'},
+                                                   {"o-", 'o'},
+                                                   {"m-", 'm'},
+                                                   {"p-", 'p'}}};
     for (const Prefix& prefix : kPrefixes) {
       if (!starts(prefix.text)) continue;
       prefix_ = prefix.kind;
@@ -128,7 +153,8 @@ class LineReader {
       std::string_view text;
       int order;
     };
-    constexpr std::array<Mark, 6> kMarks = {{{"-", 1}, {"=", 2}, {"#", 3}, {"\u2261", 3}, {"\u2013", 1}, {"\u2212", 1}}};
+    constexpr std::array<Mark, 6> kMarks = {
+        {{"-", 1}, {"=", 2}, {"#", 3}, {"\u2261", 3}, {"\u2013", 1}, {"\u2212", 1}}};
     for (const Mark& mark : kMarks) {
       if (!starts(mark.text)) continue;
       order = mark.order;
@@ -142,10 +168,12 @@ class LineReader {
     if (depth > kMostLevels) return not_condensed(at_, "Brackets are nested too deeply.");
     Level level;
     while (at_ < text_.size() && peek() != ')' && peek() != ']') {
-      if (level.chain.graph.atoms.size() > kMostAtoms) return not_condensed(at_, "This formula stands for too many atoms.");
+      if (level.chain.graph.atoms.size() > kMostAtoms)
+        return not_condensed(at_, "This formula stands for too many atoms.");
       int order = 0;
       if (const std::size_t bytes = bond_mark(order); bytes > 0) {
-        if (level.mark != 0 || !level.started()) return not_condensed(at_, "This bond mark has no atom before it.");
+        if (level.mark != 0 || !level.started())
+          return not_condensed(at_, "This bond mark has no atom before it.");
         level.mark = order;
         level.mark_at = at_;
         level.bare = false;
@@ -153,7 +181,8 @@ class LineReader {
         continue;
       }
       const bool bracket = peek() == '(' || peek() == '[';
-      if (std::optional<Error> failed = bracket ? read_bracket(level, depth) : read_symbol(level)) return failed;
+      if (std::optional<Error> failed = bracket ? read_bracket(level, depth) : read_symbol(level))
+        return failed;
     }
     if (level.mark != 0) return not_condensed(level.mark_at, "Nothing stands after this bond mark.");
     if (std::optional<Error> failed = use_up(level)) return failed;
@@ -164,7 +193,9 @@ class LineReader {
   /// What still waits for an atom at the end: two equal halves, "(C6H5)2", or nothing that makes a molecule.
   std::optional<Error> use_up(Level& level) {
     if (!level.waiting()) return std::nullopt;
-    if (level.started() || level.front_hydrogens > 0 || level.front_pieces.size() != 1 || level.front_pieces[0].second != 2) return molecular(0);
+    if (level.started() || level.front_hydrogens > 0 || level.front_pieces.size() != 1 ||
+        level.front_pieces[0].second != 2)
+      return molecular(0);
     const LineFragment half = level.front_pieces[0].first;
     level.front_pieces.clear();
     const std::uint32_t one = level.chain.append(half), two = level.chain.append(half);
@@ -190,11 +221,13 @@ class LineReader {
     if (static_cast<std::size_t>(count) * piece.graph.atoms.size() > kMostAtoms) {
       return not_condensed(begin, "This formula stands for too many atoms.");
     }
-    if (level.mark != 0) return not_condensed(level.mark_at, "A bond mark in front of a bracket has no single meaning.");
+    if (level.mark != 0)
+      return not_condensed(level.mark_at, "A bond mark in front of a bracket has no single meaning.");
     if (content == "O" && count == 1 && level.started()) {
       // "CH3C(O)CH3": on an atom with two valences free an oxygen in brackets is double bonded.
       const int centre = level.chain.graph.atoms[level.chain.current].element;
-      if ((centre == 6 && level.chain.free[level.chain.current] >= 2) || centre == 15 || centre == 16) written = 2;
+      if ((centre == 6 && level.chain.free[level.chain.current] >= 2) || centre == 15 || centre == 16)
+        written = 2;
     }
     return attach(level, piece, count, true, written, begin);
   }
@@ -210,20 +243,25 @@ class LineReader {
     if (*element == 1) return add_hydrogens(level, count, begin);
     if (is_halogen(*element)) return add_halogens(level, *element, count, begin);
     if (*element == 6 && count > 1) return add_carbon_group(level, count, begin);
-    if (*element == 8 && level.bare && level.mark == 0 && adds_double_oxygen(level, count)) return add_double_oxygen(level, count, begin);
-    if (*element == 16 && count == 2 && level.bare && level.mark == 0 && !level.started()) return molecular(begin);
-    if (*element == 16 && count == 2 && level.bare && level.mark == 0 && level.chain.free[level.chain.current] == 4) {
+    if (*element == 8 && level.bare && level.mark == 0 && adds_double_oxygen(level, count))
+      return add_double_oxygen(level, count, begin);
+    if (*element == 16 && count == 2 && level.bare && level.mark == 0 && !level.started())
+      return molecular(begin);
+    if (*element == 16 && count == 2 && level.bare && level.mark == 0 &&
+        level.chain.free[level.chain.current] == 4) {
       for (int i = 0; i < 2; ++i) level.chain.bind(level.chain.current, level.chain.add_atom(16, 2), 2, true);
       level.bare = false;
       return std::nullopt;
     }
-    const bool front_nitro = *element == 8 && count == 2 && !level.started() && peek() == 'N' && !is_lower(peek(1));
+    const bool front_nitro =
+        *element == 8 && count == 2 && !level.started() && peek() == 'N' && !is_lower(peek(1));
     const bool nitro = *element == 7 && count == 1 && starts("O2") && !is_digit(peek(2)) && peek(2) != 'H';
     if ((front_nitro || nitro) && level.front_hydrogens == 0) {
       at_ += front_nitro ? 1 : 2;
       return attach(level, nitro_piece(), 1, false, 0, begin);
     }
-    if (*element == 8 && count == 1 && level.front_hydrogens == 1 && !level.started() && starts("OC") && peek(2) != 'H' && !is_lower(peek(2))) {
+    if (*element == 8 && count == 1 && level.front_hydrogens == 1 && !level.started() && starts("OC") &&
+        peek(2) != 'H' && !is_lower(peek(2))) {
       at_ += 2;
       level.front_hydrogens = 0;
       return attach(level, carboxyl_piece(), 1, false, 0, begin);
@@ -243,7 +281,8 @@ class LineReader {
       level.front_hydrogens = count;
       return std::nullopt;
     }
-    const std::uint32_t to = level.last != kNoAtom && level.chain.free[level.last] > 0 ? level.last : level.chain.free_end();
+    const std::uint32_t to =
+        level.last != kNoAtom && level.chain.free[level.last] > 0 ? level.last : level.chain.free_end();
     if (to == kNoAtom || level.mark != 0 || !level.chain.add_hydrogens(to, count)) {
       return not_condensed(begin, "There are more hydrogens here than the atom can bind.");
     }
@@ -262,17 +301,22 @@ class LineReader {
     return std::nullopt;
   }
 
-  /// Oxygen directly after a bare C, S or P: double bonded, unless the valence is used up or a hydrogen follows.
+  /// Oxygen directly after a bare C, S or P: double bonded, unless the valence is used up or a hydrogen
+  /// follows.
   bool adds_double_oxygen(const Level& level, int count) const {
     const std::uint32_t centre = level.chain.current;
     if (centre == kNoAtom) return false;
     const int free = level.chain.free[centre];
     const bool hydrogen_follows = peek() == 'H' && !is_lower(peek(1));
     switch (level.chain.graph.atoms[centre].element) {
-      case 6: return count == 1 ? free >= 2 && !hydrogen_follows : count == 2 && free >= 3;
-      case 16: return hydrogen_follows ? count == 3 : count <= 2;
-      case 15: return count == 1 && (free == 0 || starts("Cl") || starts("Br") || starts("F"));
-      default: return false;
+      case 6:
+        return count == 1 ? free >= 2 && !hydrogen_follows : count == 2 && free >= 3;
+      case 16:
+        return hydrogen_follows ? count == 3 : count <= 2;
+      case 15:
+        return count == 1 && (free == 0 || starts("Cl") || starts("Br") || starts("F"));
+      default:
+        return false;
     }
   }
 
@@ -320,8 +364,10 @@ class LineReader {
       return put(phenylene_piece(prefix_ == 'o' ? 1 : prefix_ == 'm' ? 2 : 3));
     }
     if (hydrogens == 2 * carbons + 1) {
-      const bool named = prefix_ == 'n' || (prefix_ == 'i' && carbons <= 4) || ((prefix_ == 's' || prefix_ == 't') && carbons == 4);
-      if (!named || prefix_used_ || carbons > 100) return ambiguous(begin, group + " can be a straight or a branched group.");
+      const bool named = prefix_ == 'n' || (prefix_ == 'i' && carbons <= 4) ||
+                         ((prefix_ == 's' || prefix_ == 't') && carbons == 4);
+      if (!named || prefix_used_ || carbons > 100)
+        return ambiguous(begin, group + " can be a straight or a branched group.");
       prefix_used_ = true;
       return put(alkyl_piece(carbons, prefix_));
     }
@@ -331,7 +377,8 @@ class LineReader {
 
   /// Binds a piece `count` times to the chain, or keeps it for the next atom.
   /// @param written  bond order that stands inside the bracket before it; 0: none
-  std::optional<Error> attach(Level& level, const LineFragment& piece, int count, bool bracket, int written, std::size_t begin) {
+  std::optional<Error> attach(Level& level, const LineFragment& piece, int count, bool bracket, int written,
+                              std::size_t begin) {
     LineFragment& chain = level.chain;
     level.bare = false;
     const bool link = piece.is_link() && written == 0;
@@ -356,7 +403,8 @@ class LineReader {
         if (piece.first != piece.current && !bracket) chain.spare = first;
       } else {
         // Beyond the chain valence only for =O on sulfur and phosphorus.
-        const int centre = to == kNoAtom ? chain.graph.atoms[chain.current].element : chain.graph.atoms[to].element;
+        const int centre =
+            to == kNoAtom ? chain.graph.atoms[chain.current].element : chain.graph.atoms[to].element;
         std::uint32_t end = to;
         if (written == 2 && (centre == 15 || centre == 16) && piece.graph.atoms[piece.first].element == 8) {
           end = chain.current;
@@ -368,7 +416,8 @@ class LineReader {
       if (starts_chain || link || !bracket) {
         chain.current = base + piece.current;
         level.last = chain.current;
-        if (piece.current != piece.first && chain.parent[chain.current] == kNoAtom) chain.parent[chain.current] = first;
+        if (piece.current != piece.first && chain.parent[chain.current] == kNoAtom)
+          chain.parent[chain.current] = first;
       } else {
         level.last = chain.current;
       }
@@ -401,6 +450,8 @@ class LineReader {
 
 }  // namespace
 
-Result<Graph> parse_line_formula(std::string_view text) { return LineReader(text).read(); }
+Result<Graph> parse_line_formula(std::string_view text) {
+  return LineReader(text).read();
+}
 
 }  // namespace heatledger::molecule

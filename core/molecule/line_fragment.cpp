@@ -9,11 +9,23 @@ namespace heatledger::molecule {
 
 int chain_valence(int element) {
   switch (element) {
-    case 6: case 14: return 4;
-    case 7: case 15: return 3;
-    case 8: case 16: return 2;
-    case 1: case 9: case 17: case 35: case 53: return 1;
-    default: return 0;
+    case 6:
+    case 14:
+      return 4;
+    case 7:
+    case 15:
+      return 3;
+    case 8:
+    case 16:
+      return 2;
+    case 1:
+    case 9:
+    case 17:
+    case 35:
+    case 53:
+      return 1;
+    default:
+      return 0;
   }
 }
 
@@ -210,7 +222,8 @@ LineFragment alkyl_piece(int carbons, char kind) {
     default:
       for (int i = 1; i < carbons; ++i) end = grow(end);
   }
-  for (std::uint32_t i = 0; i < piece.graph.atoms.size(); ++i) piece.add_hydrogens(i, piece.free[i] - (i == piece.first ? 1 : 0));
+  for (std::uint32_t i = 0; i < piece.graph.atoms.size(); ++i)
+    piece.add_hydrogens(i, piece.free[i] - (i == piece.first ? 1 : 0));
   return piece;
 }
 

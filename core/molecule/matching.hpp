@@ -7,7 +7,8 @@
 
 namespace heatledger::molecule {
 
-/// A matching that grows by augmenting paths. Odd rings make the graphs non-bipartite, so blossoms are contracted.
+/// A matching that grows by augmenting paths. Odd rings make the graphs non-bipartite, so blossoms are
+/// contracted.
 /// @source J. Edmonds, Can. J. Math. 17 (1965) 449
 /// @complexity one augmentation is linear in the component it runs in, times the number of nested odd rings
 class Matching {
@@ -33,8 +34,8 @@ class Matching {
   /// Forbids or allows an edge; a matched one is parted.
   void set_forbidden(std::uint32_t a, std::uint32_t b, bool forbidden);
 
-  /// Matches a free vertex by one augmenting path that keeps all others matched, except that an optional vertex may
-  /// be freed instead if `displace_optional`. False, and nothing changed, when there is none.
+  /// Matches a free vertex by one augmenting path that keeps all others matched, except that an optional
+  /// vertex may be freed instead if `displace_optional`. False, and nothing changed, when there is none.
   bool augment(std::uint32_t root, bool displace_optional);
 
  private:

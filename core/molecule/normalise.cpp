@@ -10,14 +10,25 @@
 namespace heatledger::molecule {
 namespace {
 
-// Which of several neighbours takes part first; equal elements give equal bonds, so their order does not matter.
+// Which of several neighbours takes part first; equal elements give equal bonds, so their order does not
+// matter.
 int partner_class(int element) {
   switch (element) {
-    case 8: return 0;
-    case 16: case 34: case 52: return 1;
-    case 9: case 17: case 35: case 53: return 2;
-    case 7: return 3;
-    default: return 4;
+    case 8:
+      return 0;
+    case 16:
+    case 34:
+    case 52:
+      return 1;
+    case 9:
+    case 17:
+    case 35:
+    case 53:
+      return 2;
+    case 7:
+      return 3;
+    default:
+      return 4;
   }
 }
 constexpr int partner_classes = 5;
@@ -39,7 +50,9 @@ bool any_charge(const Graph& graph) {
   return false;
 }
 
-int octet_bonds(const Atom& atom) { return atom.element == 7 ? 3 : atom.element == 8 ? 2 : 1000; }
+int octet_bonds(const Atom& atom) {
+  return atom.element == 7 ? 3 : atom.element == 8 ? 2 : 1000;
+}
 
 // By how many bonds each atom stands above its octet; 0 for elements that may expand it.
 std::vector<int> octet_excess(const Graph& graph) {
@@ -74,7 +87,8 @@ int giving_class(const Graph& graph, const Adjacency& adjacency, const Adjacency
 }
 
 // CO and isocyanides keep their triple bond; only the charges come back. Empty where this is no such atom.
-std::optional<std::uint32_t> carbon_of_triple_bond(const Graph& graph, const Adjacency& adjacency, std::uint32_t atom) {
+std::optional<std::uint32_t> carbon_of_triple_bond(const Graph& graph, const Adjacency& adjacency,
+                                                   std::uint32_t atom) {
   for (std::uint32_t e = adjacency.first[atom]; e < adjacency.first[atom + 1]; ++e) {
     const Adjacency::Entry& entry = adjacency.entries[e];
     if (graph.bonds[entry.bond].order == Order::Triple && graph.atoms[entry.atom].element == 6 &&
@@ -101,7 +115,9 @@ void return_to_octet(Graph& graph, const Adjacency& adjacency, const std::vector
     const Adjacency::Entry& entry = adjacency.entries[e];
     const int kind = giving_class(graph, adjacency, entry);
     if (kind < 0 || excess[entry.atom] > 0 || (best != nullptr && kind > best_class)) continue;
-    if (best != nullptr && kind == best_class && (ranks == nullptr || (*ranks)[entry.atom] > (*ranks)[best->atom])) continue;
+    if (best != nullptr && kind == best_class &&
+        (ranks == nullptr || (*ranks)[entry.atom] > (*ranks)[best->atom]))
+      continue;
     best = &entry;
     best_class = kind;
   }
@@ -125,7 +141,9 @@ void join_charges(Graph& graph, bool keep_adducts) {
         if (!opposite(a, b)) continue;
         Atom& plus = a.charge > 0 ? a : b;
         Atom& minus = a.charge > 0 ? b : a;
-        if (partner_class(minus.element) != turn || !can_give_pair(minus, excess[&minus - graph.atoms.data()])) continue;
+        if (partner_class(minus.element) != turn ||
+            !can_give_pair(minus, excess[&minus - graph.atoms.data()]))
+          continue;
         if (keep_adducts && (minus.element == 5 || minus.element == 13)) continue;
         --plus.charge;
         ++minus.charge;
@@ -140,7 +158,9 @@ void join_charges(Graph& graph, bool keep_adducts) {
 
 }  // namespace
 
-void neutralise_charges(Graph& graph) { join_charges(graph, false); }
+void neutralise_charges(Graph& graph) {
+  join_charges(graph, false);
+}
 
 void take_octet_form(Graph& graph, const TieBreaker* ties) {
   for (Bond& bond : graph.bonds) bond.aromatic = false;
@@ -156,7 +176,8 @@ void take_octet_form(Graph& graph, const TieBreaker* ties) {
     std::vector<std::uint32_t> ranks;
     if (ties != nullptr) {
       ranks = (*ties)(graph);
-      std::sort(over.begin(), over.end(), [&](std::uint32_t a, std::uint32_t b) { return ranks[a] < ranks[b]; });
+      std::sort(over.begin(), over.end(),
+                [&](std::uint32_t a, std::uint32_t b) { return ranks[a] < ranks[b]; });
     }
     for (const std::uint32_t atom : over) {
       return_to_octet(graph, adjacency, excess, ties != nullptr ? &ranks : nullptr, atom);
@@ -165,6 +186,8 @@ void take_octet_form(Graph& graph, const TieBreaker* ties) {
   choose_kekule_bonds(graph);
 }
 
-void take_octet_form(Graph& graph) { take_octet_form(graph, nullptr); }
+void take_octet_form(Graph& graph) {
+  take_octet_form(graph, nullptr);
+}
 
 }  // namespace heatledger::molecule

@@ -11,11 +11,11 @@ namespace {
 constexpr std::size_t most_searched_atoms = 1000;
 constexpr std::size_t most_trials = 5000;
 
-// Colours 0, 1, 2, ... with their atoms. A split gives the larger part the old colour, so that an atom is looked at
-// again only a logarithmic number of times.
+// Colours 0, 1, 2, ... with their atoms. A split gives the larger part the old colour, so that an atom is
+// looked at again only a logarithmic number of times.
 struct Partition {
-  std::vector<std::uint32_t> colour;               // per atom
-  std::vector<std::vector<std::uint32_t>> cells;   // per colour
+  std::vector<std::uint32_t> colour;              // per atom
+  std::vector<std::vector<std::uint32_t>> cells;  // per colour
   bool discrete() const { return cells.size() == colour.size(); }
 };
 
@@ -36,13 +36,15 @@ class Ranking {
     refine(start, std::move(all));
     // Refinement finds the symmetry classes of trees exactly; only rings can hide a difference.
     const bool tree = graph_.bonds.size() < graph_.atoms.size() && connected_without_rings();
-    if (start.discrete() || tree || graph_.atoms.size() > most_searched_atoms) return dive(std::move(start)).colour;
+    if (start.discrete() || tree || graph_.atoms.size() > most_searched_atoms)
+      return dive(std::move(start)).colour;
     Explored whole = explore(start);
     return whole.best.colour;
   }
 
  private:
-  // A leaf written out: the class of the atom at each rank, then the bonds. Equal only for leaves that a symmetry joins.
+  // A leaf written out: the class of the atom at each rank, then the bonds. Equal only for leaves that a
+  // symmetry joins.
   using Picture = std::vector<std::array<std::uint32_t, 3>>;
   struct Explored {
     Partition first, best;
@@ -167,8 +169,9 @@ class Ranking {
     }
     if (!unchanged.empty()) {
       const Signature common = signature(partition, unchanged.front());
-      const auto at = std::lower_bound(parts.begin(), parts.end(), common,
-                                       [](const auto& part, const Signature& wanted) { return part.first < wanted; });
+      const auto at =
+          std::lower_bound(parts.begin(), parts.end(), common,
+                           [](const auto& part, const Signature& wanted) { return part.first < wanted; });
       if (at != parts.end() && at->first == common) {
         at->second.insert(at->second.end(), unchanged.begin(), unchanged.end());
       } else {
@@ -217,7 +220,8 @@ class Ranking {
   Picture picture_of(const Partition& leaf) const {
     Picture picture;
     picture.reserve(graph_.atoms.size() + graph_.bonds.size());
-    for (const std::vector<std::uint32_t>& cell : leaf.cells) picture.push_back({classes_[cell.front()], 0, 0});
+    for (const std::vector<std::uint32_t>& cell : leaf.cells)
+      picture.push_back({classes_[cell.front()], 0, 0});
     for (std::size_t i = 0; i < graph_.bonds.size(); ++i) {
       const std::uint32_t a = leaf.colour[graph_.bonds[i].a];
       const std::uint32_t b = leaf.colour[graph_.bonds[i].b];
@@ -234,8 +238,8 @@ class Ranking {
     return map;
   }
 
-  // Leaves below a node: the first, the best, and the symmetries met. Depth is the number of ties to break, at most
-  // the number of atoms searched.
+  // Leaves below a node: the first, the best, and the symmetries met. Depth is the number of ties to break,
+  // at most the number of atoms searched.
   Explored explore(const Partition& node) {
     Explored found;
     if (node.discrete()) {

@@ -19,8 +19,8 @@ struct System {
   std::size_t bonds = 0;
 };
 
-// One family of rings of Vismara's construction: two shortest paths from `root`, joined at p and q directly (odd) or
-// over the atom `over` (even). Any member represents it in the test for independence.
+// One family of rings of Vismara's construction: two shortest paths from `root`, joined at p and q directly
+// (odd) or over the atom `over` (even). Any member represents it in the test for independence.
 struct Family {
   std::uint32_t size = 0;
   std::uint32_t root = 0, p = 0, q = 0, over = none;
@@ -28,7 +28,9 @@ struct Family {
 
 using BondSet = std::vector<std::uint64_t>;
 
-void toggle(BondSet& set, std::size_t bond) { set[bond >> 6] ^= std::uint64_t{1} << (bond & 63); }
+void toggle(BondSet& set, std::size_t bond) {
+  set[bond >> 6] ^= std::uint64_t{1} << (bond & 63);
+}
 
 // Rows in echelon form over the field of two elements: which bond sets are sums of those seen before.
 class Independence {
@@ -174,7 +176,8 @@ class RelevantCycles {
 
   BondSet bonds_of(const Ring& ring) const {
     BondSet set((system_.bonds + 63) / 64, 0);
-    for (std::size_t i = 0; i < ring.size(); ++i) toggle(set, bond_between(ring[i], ring[(i + 1) % ring.size()]));
+    for (std::size_t i = 0; i < ring.size(); ++i)
+      toggle(set, bond_between(ring[i], ring[(i + 1) % ring.size()]));
     return set;
   }
 
@@ -207,7 +210,8 @@ class RelevantCycles {
     return join(family, path_p_, path_q_);
   }
 
-  static Ring join(const Family& family, const std::vector<std::uint32_t>& p, const std::vector<std::uint32_t>& q) {
+  static Ring join(const Family& family, const std::vector<std::uint32_t>& p,
+                   const std::vector<std::uint32_t>& q) {
     Ring ring(p.begin(), p.end());
     ring.push_back(family.root);
     ring.insert(ring.end(), q.rbegin(), q.rend());
@@ -263,12 +267,14 @@ class RelevantCycles {
   std::vector<std::vector<Adjacency::Entry>> parents_;
 };
 
-// Blocks of ring bonds that share atoms (spiro) stay one system: rings never cross from one to the other anyway.
+// Blocks of ring bonds that share atoms (spiro) stay one system: rings never cross from one to the other
+// anyway.
 std::vector<System> ring_systems(const Graph& graph) {
   std::vector<std::uint8_t> in_ring;
   find_ring_bonds(graph, in_ring);
   std::vector<System> systems;
-  if (std::none_of(in_ring.begin(), in_ring.end(), [](std::uint8_t flag) { return flag != 0; })) return systems;
+  if (std::none_of(in_ring.begin(), in_ring.end(), [](std::uint8_t flag) { return flag != 0; }))
+    return systems;
   Adjacency adjacency;
   build_adjacency(graph, adjacency);
   std::vector<std::uint32_t> local(graph.atoms.size(), none), bond_local(graph.bonds.size(), none);

@@ -136,10 +136,17 @@ bool Reader::add_bond(std::uint32_t a, std::uint32_t b, const PendingBond& pendi
       bond.aromatic = true;
       any_aromatic_ = true;
       break;
-    case Written::Single: break;
-    case Written::Double: order = 2; break;
-    case Written::Triple: order = 3; break;
-    case Written::Quadruple: order = 4; break;
+    case Written::Single:
+      break;
+    case Written::Double:
+      order = 2;
+      break;
+    case Written::Triple:
+      order = 3;
+      break;
+    case Written::Quadruple:
+      order = 4;
+      break;
   }
   if (first.unpaired > most_bond_orders - order || second.unpaired > most_bond_orders - order) {
     return fail(SmilesFault::TooManyBonds, offset);
@@ -216,13 +223,26 @@ bool Reader::read_bracket_symbol(Atom& atom) {
     return true;
   }
   switch (c) {
-    case 'b': atom.element = 5; break;
-    case 'c': atom.element = 6; break;
-    case 'n': atom.element = 7; break;
-    case 'o': atom.element = 8; break;
-    case 'p': atom.element = 15; break;
-    case 's': atom.element = 16; break;
-    default: return fail(at_ < text_.size() ? SmilesFault::UnknownElement : SmilesFault::UnclosedBracket, at_);
+    case 'b':
+      atom.element = 5;
+      break;
+    case 'c':
+      atom.element = 6;
+      break;
+    case 'n':
+      atom.element = 7;
+      break;
+    case 'o':
+      atom.element = 8;
+      break;
+    case 'p':
+      atom.element = 15;
+      break;
+    case 's':
+      atom.element = 16;
+      break;
+    default:
+      return fail(at_ < text_.size() ? SmilesFault::UnknownElement : SmilesFault::UnclosedBracket, at_);
   }
   ++at_;
   return true;
@@ -240,7 +260,8 @@ bool Reader::read_chirality(Atom& atom) {
     char first, second;
     int count, base;
   };
-  constexpr Class classes[] = {{'T', 'H', 2, 3}, {'A', 'L', 2, 5}, {'S', 'P', 3, 7}, {'T', 'B', 20, 10}, {'O', 'H', 30, 30}};
+  constexpr Class classes[] = {
+      {'T', 'H', 2, 3}, {'A', 'L', 2, 5}, {'S', 'P', 3, 7}, {'T', 'B', 20, 10}, {'O', 'H', 30, 30}};
   atom.chirality = 1;
   for (const Class& kind : classes) {
     if (peek() != kind.first || peek(1) != kind.second) continue;
@@ -348,12 +369,14 @@ bool Reader::close_ring(std::size_t number, std::size_t offset) {
       }
     }
   } else {
-    late_closures_.push_back({static_cast<std::uint32_t>(graph_.bonds.size()), static_cast<std::uint32_t>(offset)});
+    late_closures_.push_back(
+        {static_cast<std::uint32_t>(graph_.bonds.size()), static_cast<std::uint32_t>(offset)});
   }
   return add_bond(ring.atom, previous_, bond, offset);
 }
 
-// Looking through all bonds at each closure would take quadratic time where there are thousands; those are sorted.
+// Looking through all bonds at each closure would take quadratic time where there are thousands; those are
+// sorted.
 bool Reader::check_late_closures() {
   std::vector<std::pair<std::uint64_t, std::uint32_t>> sorted;
   sorted.reserve(graph_.bonds.size());
@@ -366,7 +389,8 @@ bool Reader::check_late_closures() {
   std::sort(sorted.begin(), sorted.end());
   std::uint32_t first_repeat = no_atom;
   for (std::size_t i = 1; i < sorted.size(); ++i) {
-    if (sorted[i].first == sorted[i - 1].first && sorted[i].second < first_repeat) first_repeat = sorted[i].second;
+    if (sorted[i].first == sorted[i - 1].first && sorted[i].second < first_repeat)
+      first_repeat = sorted[i].second;
   }
   for (const LateClosure& closure : late_closures_) {
     if (closure.bond == first_repeat) return fail(SmilesFault::RingRepeatsBond, closure.offset);
@@ -416,7 +440,8 @@ std::size_t Reader::atom_offset(std::uint32_t atom) const {
     if (seen++ == atom) return i;
     if (c == '[') {
       i = text_.find(']', i);
-    } else if (i + 1 < text_.size() && ((c == 'C' && text_[i + 1] == 'l') || (c == 'B' && text_[i + 1] == 'r'))) {
+    } else if (i + 1 < text_.size() &&
+               ((c == 'C' && text_[i + 1] == 'l') || (c == 'B' && text_[i + 1] == 'r'))) {
       ++i;
     }
   }
@@ -459,34 +484,78 @@ bool Reader::read() {
       case 'B':
         ok = peek(1) == 'r' ? add_organic(35, false, 2) : add_organic(5, false, 1);
         break;
-      case 'N': ok = add_organic(7, false, 1); break;
-      case 'O': ok = add_organic(8, false, 1); break;
-      case 'P': ok = add_organic(15, false, 1); break;
-      case 'S': ok = add_organic(16, false, 1); break;
-      case 'F': ok = add_organic(9, false, 1); break;
-      case 'I': ok = add_organic(53, false, 1); break;
-      case 'b': ok = add_organic(5, true, 1); break;
-      case 'c': ok = add_organic(6, true, 1); break;
-      case 'n': ok = add_organic(7, true, 1); break;
-      case 'o': ok = add_organic(8, true, 1); break;
-      case 'p': ok = add_organic(15, true, 1); break;
-      case 's': ok = add_organic(16, true, 1); break;
+      case 'N':
+        ok = add_organic(7, false, 1);
+        break;
+      case 'O':
+        ok = add_organic(8, false, 1);
+        break;
+      case 'P':
+        ok = add_organic(15, false, 1);
+        break;
+      case 'S':
+        ok = add_organic(16, false, 1);
+        break;
+      case 'F':
+        ok = add_organic(9, false, 1);
+        break;
+      case 'I':
+        ok = add_organic(53, false, 1);
+        break;
+      case 'b':
+        ok = add_organic(5, true, 1);
+        break;
+      case 'c':
+        ok = add_organic(6, true, 1);
+        break;
+      case 'n':
+        ok = add_organic(7, true, 1);
+        break;
+      case 'o':
+        ok = add_organic(8, true, 1);
+        break;
+      case 'p':
+        ok = add_organic(15, true, 1);
+        break;
+      case 's':
+        ok = add_organic(16, true, 1);
+        break;
       case '*': {
         Atom any;
         const std::size_t offset = at_++;
         ok = add_atom(any, offset);
         break;
       }
-      case '[': ok = read_bracket(); break;
-      case '(': ok = open_branch(); break;
-      case ')': ok = close_branch(); break;
-      case '-': ok = set_bond(Written::Single, BondMark::None); break;
-      case '=': ok = set_bond(Written::Double, BondMark::None); break;
-      case '#': ok = set_bond(Written::Triple, BondMark::None); break;
-      case '$': ok = set_bond(Written::Quadruple, BondMark::None); break;
-      case ':': ok = set_bond(Written::Aromatic, BondMark::None); break;
-      case '/': ok = set_bond(Written::Single, BondMark::Up); break;
-      case '\\': ok = set_bond(Written::Single, BondMark::Down); break;
+      case '[':
+        ok = read_bracket();
+        break;
+      case '(':
+        ok = open_branch();
+        break;
+      case ')':
+        ok = close_branch();
+        break;
+      case '-':
+        ok = set_bond(Written::Single, BondMark::None);
+        break;
+      case '=':
+        ok = set_bond(Written::Double, BondMark::None);
+        break;
+      case '#':
+        ok = set_bond(Written::Triple, BondMark::None);
+        break;
+      case '$':
+        ok = set_bond(Written::Quadruple, BondMark::None);
+        break;
+      case ':':
+        ok = set_bond(Written::Aromatic, BondMark::None);
+        break;
+      case '/':
+        ok = set_bond(Written::Single, BondMark::Up);
+        break;
+      case '\\':
+        ok = set_bond(Written::Single, BondMark::Down);
+        break;
       case '.':
         if (pending_.order != Written::Nothing) return fail(SmilesFault::BondWithoutAtom, pending_.offset);
         if (previous_ == no_atom) return fail(SmilesFault::DotWithoutAtom, at_);
@@ -494,16 +563,30 @@ bool Reader::read() {
         after_dot_ = true;
         ++at_;
         break;
-      case '0': case '1': case '2': case '3': case '4': case '5': case '6': case '7': case '8': case '9': case '%':
+      case '0':
+      case '1':
+      case '2':
+      case '3':
+      case '4':
+      case '5':
+      case '6':
+      case '7':
+      case '8':
+      case '9':
+      case '%':
         ok = read_ring();
         break;
-      case ' ': case '\t': case '\r': case '\n':
+      case ' ':
+      case '\t':
+      case '\r':
+      case '\n':
         if (graph_.atoms.empty() && branches_.empty()) {
           ++at_;
           break;
         }
         return finish();
-      default: return fail(SmilesFault::UnexpectedCharacter, at_);
+      default:
+        return fail(SmilesFault::UnexpectedCharacter, at_);
     }
     if (!ok) return false;
   }

@@ -14,8 +14,19 @@ constexpr std::uint32_t none = 0xFFFFFFFF;
 
 bool in_organic_subset(int element) {
   switch (element) {
-    case 5: case 6: case 7: case 8: case 9: case 15: case 16: case 17: case 35: case 53: return true;
-    default: return false;
+    case 5:
+    case 6:
+    case 7:
+    case 8:
+    case 9:
+    case 15:
+    case 16:
+    case 17:
+    case 35:
+    case 53:
+      return true;
+    default:
+      return false;
   }
 }
 
@@ -29,8 +40,13 @@ void append_charge(std::string& text, int charge) {
 class Writer {
  public:
   Writer(const Graph& graph, const std::vector<std::uint32_t>& ranks)
-      : graph_(graph), ranks_(ranks), children_(graph.atoms.size()), opens_(graph.atoms.size()),
-        closes_(graph.atoms.size()), parent_bond_(graph.atoms.size(), none), size_(graph.atoms.size(), 1),
+      : graph_(graph),
+        ranks_(ranks),
+        children_(graph.atoms.size()),
+        opens_(graph.atoms.size()),
+        closes_(graph.atoms.size()),
+        parent_bond_(graph.atoms.size(), none),
+        size_(graph.atoms.size(), 1),
         bonded_(graph.atoms.size(), 0) {
     build_adjacency(graph, adjacency_);
     for (std::uint32_t i = 0; i < graph.atoms.size(); ++i) {
@@ -49,7 +65,8 @@ class Writer {
   std::string write() {
     std::vector<std::uint32_t> by_rank(graph_.atoms.size());
     for (std::uint32_t i = 0; i < by_rank.size(); ++i) by_rank[i] = i;
-    std::sort(by_rank.begin(), by_rank.end(), [&](std::uint32_t a, std::uint32_t b) { return ranks_[a] < ranks_[b]; });
+    std::sort(by_rank.begin(), by_rank.end(),
+              [&](std::uint32_t a, std::uint32_t b) { return ranks_[a] < ranks_[b]; });
     std::vector<std::uint8_t> seen(graph_.atoms.size(), 0);
     for (const std::uint32_t start : by_rank) {
       if (seen[start]) continue;
@@ -61,7 +78,8 @@ class Writer {
   }
 
  private:
-  // Depth-first tree of one fragment; a bond back to an atom on the way opens a ring there and closes it here.
+  // Depth-first tree of one fragment; a bond back to an atom on the way opens a ring there and closes it
+  // here.
   void span(std::uint32_t start, std::vector<std::uint8_t>& seen) {
     std::vector<std::uint32_t> order, stack{start};
     std::vector<std::uint32_t>& next = next_;
@@ -129,20 +147,28 @@ class Writer {
 
   void emit_order(std::uint32_t bond) {
     switch (graph_.bonds[bond].order) {
-      case Order::Double: text_ += '='; break;
-      case Order::Triple: text_ += '#'; break;
-      case Order::Quadruple: text_ += '$'; break;
-      default: break;
+      case Order::Double:
+        text_ += '=';
+        break;
+      case Order::Triple:
+        text_ += '#';
+        break;
+      case Order::Quadruple:
+        text_ += '$';
+        break;
+      default:
+        break;
     }
   }
 
   void emit_atom(std::uint32_t index) {
     const Atom& atom = graph_.atoms[index];
     const int bonded = bonded_[index];
-    const bool plain = atom.charge == 0 && atom.isotope == 0 &&
-                       (atom.element == 0 ? atom.hydrogens == 0
-                                          : in_organic_subset(atom.element) &&
-                                                organic_valence(atom.element, bonded) - bonded == atom.hydrogens);
+    const bool plain =
+        atom.charge == 0 && atom.isotope == 0 &&
+        (atom.element == 0 ? atom.hydrogens == 0
+                           : in_organic_subset(atom.element) &&
+                                 organic_valence(atom.element, bonded) - bonded == atom.hydrogens);
     if (plain) {
       text_ += symbol(atom.element);
     } else {

@@ -53,7 +53,8 @@ std::string join(const std::vector<std::string>& parts) {
 }
 
 bool equal_counts(double a, double b) {
-  // Coefficients such as 1/3 and decimals are binary here; a millionth of an atom is no imbalance that a person writes.
+  // Coefficients such as 1/3 and decimals are binary here; a millionth of an atom is no imbalance that a
+  // person writes.
   return std::fabs(a - b) <= 1e-6 * std::max(1.0, std::max(std::fabs(a), std::fabs(b)));
 }
 
@@ -98,7 +99,8 @@ double times_small(const SmallMolecule& small, const std::map<int, double>& atom
 std::string missing_molecule(const std::map<int, double>& atoms) {
   for (const SmallMolecule& small : kSmall) {
     const double times = times_small(small, atoms);
-    if (times > 0) return (equal_counts(times, 1) ? "one" : machine_number(times, 6)) + " " + std::string(small.text);
+    if (times > 0)
+      return (equal_counts(times, 1) ? "one" : machine_number(times, 6)) + " " + std::string(small.text);
   }
   return {};
 }
@@ -109,7 +111,8 @@ std::string excess_text(const std::map<int, double>& atoms, const char* side) {
   for (const auto& [key, count] : atoms) order.emplace_back(element_order(key), key);
   std::sort(order.begin(), order.end());
   std::vector<std::string> parts;
-  for (const auto& [text, key] : order) parts.push_back(machine_number(atoms.at(key), 6) + " " + symbol_of(key));
+  for (const auto& [text, key] : order)
+    parts.push_back(machine_number(atoms.at(key), 6) + " " + symbol_of(key));
   return join(parts) + " more on the " + side;
 }
 
@@ -136,9 +139,10 @@ BalanceCheck check_balance(const std::vector<std::pair<double, Composition>>& le
     check.balanced = check.balanced && equal_counts(sum.left, sum.right);
     check.elements.push_back(sum);
   }
-  std::sort(check.elements.begin(), check.elements.end(), [](const ElementBalance& a, const ElementBalance& b) {
-    return element_order(a.key) < element_order(b.key);
-  });
+  std::sort(check.elements.begin(), check.elements.end(),
+            [](const ElementBalance& a, const ElementBalance& b) {
+              return element_order(a.key) < element_order(b.key);
+            });
   return check;
 }
 
@@ -162,7 +166,8 @@ std::string describe_imbalance(const BalanceCheck& check) {
   std::string text = join(parts);
   if (charge != 0) {
     if (!text.empty()) text += "; ";
-    text += "the charge on the left is " + std::string(charge > 0 ? "higher" : "lower") + " by " + machine_number(std::fabs(charge), 6);
+    text += "the charge on the left is " + std::string(charge > 0 ? "higher" : "lower") + " by " +
+            machine_number(std::fabs(charge), 6);
   }
   if (text.empty()) return text;
   std::vector<std::string> missing;
@@ -179,7 +184,9 @@ std::string describe_imbalance(const BalanceCheck& check) {
 Result<std::vector<std::vector<std::int64_t>>> balance(const std::vector<Composition>& left,
                                                        const std::vector<Composition>& right) {
   const std::size_t species = left.size() + right.size();
-  auto at = [&](std::size_t i) -> const Composition& { return i < left.size() ? left[i] : right[i - left.size()]; };
+  auto at = [&](std::size_t i) -> const Composition& {
+    return i < left.size() ? left[i] : right[i - left.size()];
+  };
 
   // One row per element; the right side enters negatively. Fractional hydrates make a row fractional.
   struct Seen {
@@ -193,7 +200,8 @@ Result<std::vector<std::vector<std::int64_t>>> balance(const std::vector<Composi
       counts.try_emplace(key, species, 0.0).first->second[i] = i < left.size() ? count : -count;
     }
     if (at(i).charge != 0) {
-      counts.try_emplace(kChargeKey, species, 0.0).first->second[i] = i < left.size() ? at(i).charge : -at(i).charge;
+      counts.try_emplace(kChargeKey, species, 0.0).first->second[i] =
+          i < left.size() ? at(i).charge : -at(i).charge;
     }
   }
   std::vector<std::string> only_left, only_right;
@@ -211,7 +219,8 @@ Result<std::vector<std::vector<std::int64_t>>> balance(const std::vector<Composi
     };
     if (!only_left.empty()) sentences.push_back(stands(only_left, "left"));
     if (!only_right.empty()) sentences.push_back(stands(only_right, "right"));
-    return Error{"balance.missing_element", capital(join(sentences)) + ".", "", "Add the species that holds it on the other side."};
+    return Error{"balance.missing_element", capital(join(sentences)) + ".", "",
+                 "Add the species that holds it on the other side."};
   }
   if (const auto charge = counts.find(kChargeKey); charge != counts.end()) {
     bool positive = false, negative = false;
@@ -228,12 +237,15 @@ Result<std::vector<std::vector<std::int64_t>>> balance(const std::vector<Composi
   std::vector<std::vector<std::int64_t>> rows;
   for (const auto& [key, row] : counts) {
     std::optional<std::vector<std::int64_t>> whole = whole_row(row);
-    if (!whole) return Error{"balance.too_large", "The counts in these formulas are no exact fractions.", "", "Write the coefficients yourself."};
+    if (!whole)
+      return Error{"balance.too_large", "The counts in these formulas are no exact fractions.", "",
+                   "Write the coefficients yourself."};
     rows.push_back(std::move(*whole));
   }
   std::optional<std::vector<std::vector<std::int64_t>>> rays = extreme_rays(rows, species);
   if (!rays) {
-    return Error{"balance.too_large", "There are too many species or ways to list them exactly.", "", "Write the reactions separately."};
+    return Error{"balance.too_large", "There are too many species or ways to list them exactly.", "",
+                 "Write the reactions separately."};
   }
   if (rays->empty()) {
     std::string message = "Every element stands on both sides, yet no positive coefficients balance this";
@@ -243,7 +255,8 @@ Result<std::vector<std::vector<std::int64_t>>> balance(const std::vector<Composi
       for (const std::size_t i : wrong) names.push_back(hill_formula(at(i)));
       message += ": " + join(names) + " would have to stand on the other side";
     }
-    return Error{"balance.impossible", message + ".", "", "Check the formulas and whether a species is missing."};
+    return Error{"balance.impossible", message + ".", "",
+                 "Check the formulas and whether a species is missing."};
   }
 
   struct Way {
@@ -275,7 +288,9 @@ Result<std::vector<std::vector<std::int64_t>>> balance(const std::vector<Composi
   std::vector<std::vector<std::int64_t>> result;
   for (Way& way : ways) {
     const std::optional<bool> grows = rank.add(way.numbers);
-    if (!grows) return Error{"balance.too_large", "The coefficients grow beyond what can be kept exact.", "", "Write the reactions separately."};
+    if (!grows)
+      return Error{"balance.too_large", "The coefficients grow beyond what can be kept exact.", "",
+                   "Write the reactions separately."};
     if (*grows) result.push_back(std::move(way.numbers));
   }
   return result;

@@ -23,7 +23,9 @@ Cell cell(std::string text, CellKind kind = CellKind::Label, Tone tone = Tone::P
   return made;
 }
 
-Cell number(std::string text, Tone tone = Tone::Plain) { return cell(std::move(text), CellKind::Number, tone); }
+Cell number(std::string text, Tone tone = Tone::Plain) {
+  return cell(std::move(text), CellKind::Number, tone);
+}
 
 /// Value and ± of a figure in J, set in kJ to the decimals that the ± justifies.
 struct KilojouleText {
@@ -32,7 +34,8 @@ struct KilojouleText {
 
 KilojouleText kilojoules(const uncertainty::Figure& joules, bool with_sign = false) {
   const int decimals = units::decimals_for(joules.u95 / 1000, kMostDecimals);
-  return {with_sign ? display_signed(joules.value / 1000, decimals) : display_number(joules.value / 1000, decimals),
+  return {with_sign ? display_signed(joules.value / 1000, decimals)
+                    : display_number(joules.value / 1000, decimals),
           joules.u95 > 0 ? display_number(joules.u95 / 1000, decimals) : std::string()};
 }
 
@@ -84,12 +87,13 @@ Row row(RowRole role, std::vector<Cell> cells) {
 Table ledger_table(const balance::Ledger& ledger) {
   Table table;
   table.look = TableLook::Ledger;
-  table.columns = {column("Species", Align::Left),       column("×", Align::Right),
-                   column("kJ/mol", Align::Right),       column("broken, kJ", Align::Right, true),
-                   column("formed, kJ", Align::Right),   column("±", Align::Right)};
+  table.columns = {column("Species", Align::Left),     column("×", Align::Right),
+                   column("kJ/mol", Align::Right),     column("broken, kJ", Align::Right, true),
+                   column("formed, kJ", Align::Right), column("±", Align::Right)};
   for (const balance::LedgerRow& line : ledger.rows) {
     const balance::ReactionSpecies& entry = ledger.reaction->species[line.species];
-    Row body = row(RowRole::Body, {cell(balance::display_species(entry) + balance::phase_suffix(entry.term)), number(coefficient_text(entry.coefficient()))});
+    Row body = row(RowRole::Body, {cell(balance::display_species(entry) + balance::phase_suffix(entry.term)),
+                                   number(coefficient_text(entry.coefficient()))});
     if (line.per_mole && line.in_equation) {
       const KilojouleText each = kilojoules(line.per_mole->figure());
       const KilojouleText total = kilojoules(line.in_equation->figure());
@@ -104,8 +108,10 @@ Table ledger_table(const balance::Ledger& ledger) {
     table.rows.push_back(std::move(body));
     for (const balance::BondLine& bond : line.lines) {
       const std::string label = bond.label.empty() ? molecule::spelling(bond.type) : bond.label;
-      Row detail = row(RowRole::Detail, {cell("  " + label, CellKind::Label, Tone::Quiet), number(bond.count_text), number(bond.price_text)});
-      const std::string total = bond.priced() ? display_number(bond.per_mole * entry.coefficient() / 1000, 0) : "";
+      Row detail = row(RowRole::Detail, {cell("  " + label, CellKind::Label, Tone::Quiet),
+                                         number(bond.count_text), number(bond.price_text)});
+      const std::string total =
+          bond.priced() ? display_number(bond.per_mole * entry.coefficient() / 1000, 0) : "";
       detail.cells.push_back(number(entry.product ? "" : total));
       detail.cells.push_back(number(entry.product ? total : ""));
       detail.cells.push_back(cell(""));
@@ -115,8 +121,8 @@ Table ledger_table(const balance::Ledger& ledger) {
   const auto side = [](const std::optional<uncertainty::Quantity>& sum) {
     return sum ? kilojoules(sum->figure()).value : std::string("none");
   };
-  table.rows.push_back(row(RowRole::Subtotal, {cell("Sum of bonds", CellKind::Label, Tone::Strong), cell(""), cell(""),
-                                               number(side(ledger.broken), Tone::Broken),
+  table.rows.push_back(row(RowRole::Subtotal, {cell("Sum of bonds", CellKind::Label, Tone::Strong), cell(""),
+                                               cell(""), number(side(ledger.broken), Tone::Broken),
                                                number(side(ledger.formed), Tone::Formed), cell("")}));
   const auto result = [&](std::string what, const std::optional<uncertainty::Quantity>& value, RowRole role) {
     Row line = row(role, {cell(std::move(what)), cell(""), cell(""), cell("")});
@@ -131,12 +137,14 @@ Table ledger_table(const balance::Ledger& ledger) {
     table.rows.push_back(std::move(line));
   };
   result("Broken − formed, gas, 25 °C", ledger.gas_298, RowRole::Result);
-  for (const balance::Correction& line : ledger.corrections) result(line.what, line.value, RowRole::Correction);
+  for (const balance::Correction& line : ledger.corrections)
+    result(line.what, line.value, RowRole::Correction);
   result("As written, 25 °C", ledger.as_written, RowRole::Result);
   if (!ledger.to_temperature.empty()) {
     const balance::Route* taken = balance::find_route(ledger, ledger.taken);
     if (taken != nullptr) result("The figure taken, by " + taken->name, taken->as_written, RowRole::Result);
-    for (const balance::Correction& line : ledger.to_temperature) result(line.what, line.value, RowRole::Correction);
+    for (const balance::Correction& line : ledger.to_temperature)
+      result(line.what, line.value, RowRole::Correction);
     result("As run", ledger.as_run, RowRole::Result);
   }
   return table;
@@ -144,8 +152,8 @@ Table ledger_table(const balance::Ledger& ledger) {
 
 Table routes_table(const balance::Ledger& ledger) {
   Table table;
-  table.columns = {column("Route", Align::Left), column("as written, kJ", Align::Right), column("±", Align::Right),
-                   column("", Align::Left)};
+  table.columns = {column("Route", Align::Left), column("as written, kJ", Align::Right),
+                   column("±", Align::Right), column("", Align::Left)};
   for (const balance::Route& route : ledger.routes) {
     const bool taken = route.name == ledger.taken;
     Row line = row(RowRole::Body, {cell(route.name)});
@@ -176,7 +184,8 @@ std::string basis_line(const balance::Ledger& ledger) {
 }
 
 void add_source(std::vector<std::string>& sources, const std::string& source) {
-  if (!source.empty() && std::find(sources.begin(), sources.end(), source) == sources.end()) sources.push_back(source);
+  if (!source.empty() && std::find(sources.begin(), sources.end(), source) == sources.end())
+    sources.push_back(source);
 }
 
 }  // namespace
@@ -220,14 +229,17 @@ std::string unbalanced_text(const balance::Reaction& reaction) {
   Page page;
   page.blocks.push_back(heading(balance::display_equation(reaction), {}, 1));
   Table table;
-  table.columns = {column("Element", Align::Left), column("left", Align::Right), column("right", Align::Right)};
+  table.columns = {column("Element", Align::Left), column("left", Align::Right),
+                   column("right", Align::Right)};
   for (const molecule::ElementBalance& element : reaction.balance.elements) {
-    table.rows.push_back(row(RowRole::Body, {cell(element_text(element.key)), number(coefficient_text(element.left)),
-                                             number(coefficient_text(element.right))}));
+    table.rows.push_back(
+        row(RowRole::Body, {cell(element_text(element.key)), number(coefficient_text(element.left)),
+                            number(coefficient_text(element.right))}));
   }
   page.blocks.push_back(std::move(table));
   if (!reaction.why_unbalanced.empty()) page.blocks.push_back(note(NoteKind::Error, reaction.why_unbalanced));
-  for (const std::string& proposal : reaction.proposals) page.blocks.push_back(note(NoteKind::Info, "balances as: " + proposal));
+  for (const std::string& proposal : reaction.proposals)
+    page.blocks.push_back(note(NoteKind::Info, "balances as: " + proposal));
   return write_text(page);
 }
 
@@ -237,28 +249,35 @@ std::string species_text(const SpeciesFigures& figures) {
   std::string identity;
   if (species.composition) identity = molecule::display_formula(*species.composition);
   if (species.molar_mass > 0) identity += ", " + display_number(species.molar_mass * 1000, 3) + " g/mol";
-  if (species.compound != nullptr && !species.compound->cas.empty()) identity += ", CAS " + std::string(species.compound->cas);
+  if (species.compound != nullptr && !species.compound->cas.empty())
+    identity += ", CAS " + std::string(species.compound->cas);
   page.blocks.push_back(heading(species.name, identity, 1));
-  if (!species.canonical.empty()) page.blocks.push_back(note(NoteKind::Info, "structure: " + species.canonical));
+  if (!species.canonical.empty())
+    page.blocks.push_back(note(NoteKind::Info, "structure: " + species.canonical));
 
   Table table;
-  table.columns = {column("25 °C", Align::Left), column("value", Align::Right), column("±", Align::Right),
-                   column("unit", Align::Left), column("route", Align::Left), column("source", Align::Left)};
+  table.columns = {column("25 °C", Align::Left), column("value", Align::Right),
+                   column("±", Align::Right),    column("unit", Align::Left),
+                   column("route", Align::Left), column("source", Align::Left)};
   const auto add = [&](std::string what, const StatedFigure& stated, double divisor, std::string unit) {
     if (!stated.figure) {
-      table.rows.push_back(row(RowRole::Body, {cell(std::move(what)), cell("none"), cell(""), cell(""), cell(""),
-                                               cell(stated.reason, CellKind::Label, Tone::Quiet)}));
+      table.rows.push_back(row(RowRole::Body, {cell(std::move(what)), cell("none"), cell(""), cell(""),
+                                               cell(""), cell(stated.reason, CellKind::Label, Tone::Quiet)}));
       return;
     }
     const int decimals = units::decimals_for(stated.figure->u95 / divisor, 2);
-    table.rows.push_back(row(RowRole::Body, {cell(std::move(what)), number(display_number(stated.figure->value / divisor, decimals)),
-                                             number(display_number(stated.figure->u95 / divisor, decimals), Tone::Quiet),
-                                             cell(std::move(unit)), cell(stated.route), cell(stated.source, CellKind::Label, Tone::Quiet)}));
+    table.rows.push_back(
+        row(RowRole::Body,
+            {cell(std::move(what)), number(display_number(stated.figure->value / divisor, decimals)),
+             number(display_number(stated.figure->u95 / divisor, decimals), Tone::Quiet),
+             cell(std::move(unit)), cell(stated.route), cell(stated.source, CellKind::Label, Tone::Quiet)}));
   };
   add("formation enthalpy, gas", figures.gas_formation, 1000, "kJ/mol");
-  if (figures.average_gas_formation) add("  the same by average bonds", *figures.average_gas_formation, 1000, "kJ/mol");
+  if (figures.average_gas_formation)
+    add("  the same by average bonds", *figures.average_gas_formation, 1000, "kJ/mol");
   add("formation enthalpy, liquid", figures.liquid_formation, 1000, "kJ/mol");
-  if (figures.solid_formation.figure) add("formation enthalpy, solid", figures.solid_formation, 1000, "kJ/mol");
+  if (figures.solid_formation.figure)
+    add("formation enthalpy, solid", figures.solid_formation, 1000, "kJ/mol");
   add("enthalpy of vaporisation", figures.vaporisation_298, 1000, "kJ/mol");
   for (const HeatCapacityAt& point : figures.cp_gas) {
     if (!point.figure.figure && point.temperature > 299) continue;
@@ -271,7 +290,8 @@ std::string species_text(const SpeciesFigures& figures) {
     Table bonds;
     bonds.columns = {column("bond", Align::Left), column("count", Align::Right)};
     for (const molecule::BondCount& bond : species.bonds) {
-      bonds.rows.push_back(row(RowRole::Body, {cell(molecule::spelling(bond.type)), number(std::to_string(bond.count))}));
+      bonds.rows.push_back(
+          row(RowRole::Body, {cell(molecule::spelling(bond.type)), number(std::to_string(bond.count))}));
     }
     page.blocks.push_back(std::move(bonds));
   }

@@ -18,10 +18,10 @@ enum class BondRoute : std::uint8_t { Average, Context };
 
 struct TallyQuestion {
   std::string_view equation;
-  bool smiles = false;   ///< every species is SMILES, as if quoted
+  bool smiles = false;  ///< every species is SMILES, as if quoted
   BondRoute route = BondRoute::Average;
-  std::string_view set;    ///< id of a published bond set; empty: the primary one
-  std::string_view basis;  ///< see balance::LedgerOptions::basis
+  std::string_view set;                        ///< id of a published bond set; empty: the primary one
+  std::string_view basis;                      ///< see balance::LedgerOptions::basis
   std::string_view reactants_at, products_at;  ///< temperatures as typed, "80 degC"; empty: 25 °C
 };
 
@@ -31,16 +31,16 @@ struct SpeciesQuestion {
   bool estimate_only = false;  ///< leave every tabulated value of this very compound aside
 };
 
-/// An answer, and whether the question was sound: an equation that does not balance is answered (with the ways to
-/// balance it) but counts as wrong input.
+/// An answer, and whether the question was sound: an equation that does not balance is answered (with the
+/// ways to balance it) but counts as wrong input.
 struct Answer {
-  std::string text;           ///< ends with a newline
+  std::string text;  ///< ends with a newline
   std::optional<Error> wrong;
 };
 
 /// The ledger of one equation. JSON keys, energies in kJ for the written coefficients:
-/// balanced, equation, broken, broken_u95, formed, formed_u95, gas_298, corrections, as_written, as_run, per_mole_of,
-/// routes (null where a route has no figure; route_reasons says why), rows, cautions.
+/// balanced, equation, broken, broken_u95, formed, formed_u95, gas_298, corrections, as_written, as_run,
+/// per_mole_of, routes (null where a route has no figure; route_reasons says why), rows, cautions.
 /// @errors equation.*, species.*, smiles.*, formula.*, bond_set.unknown, ledger.basis_unknown, unit.*
 Result<Answer> answer_tally(const TallyQuestion& question, AnswerShape shape, balance::SpeciesSource& source);
 
@@ -48,7 +48,8 @@ Result<Answer> answer_tally(const TallyQuestion& question, AnswerShape shape, ba
 /// gas_formation, vaporisation_298, liquid_formation, cp_gas, cp_liquid_298, bonds, bonds_ledger, cautions.
 /// A value that cannot be given is null with a `reason`.
 /// @errors species.*, smiles.*, formula.*
-Result<Answer> answer_species(const SpeciesQuestion& question, AnswerShape shape, balance::SpeciesSource& source);
+Result<Answer> answer_species(const SpeciesQuestion& question, AnswerShape shape,
+                              balance::SpeciesSource& source);
 
 /// {"error":{"code","message","where","hint"}}, one line.
 std::string error_json(const Error& error);

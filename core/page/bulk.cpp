@@ -33,9 +33,11 @@ void write_failure(std::string_view id, const Error& error, std::string& out) {
 }  // namespace
 
 struct Bulk::State {
-  State(const BulkOptions& how, std::shared_ptr<const estimate::BondSet> set) : options(how),
+  State(const BulkOptions& how, std::shared_ptr<const estimate::BondSet> set)
+      : options(how),
         // By the average set the context route is left out: it costs fifty times the rest of the answer.
-        tally(std::move(set), how.route == BondRoute::Context ? balance::ContextUse::Always : balance::ContextUse::WhereNeeded) {}
+        tally(std::move(set), how.route == BondRoute::Context ? balance::ContextUse::Always
+                                                              : balance::ContextUse::WhereNeeded) {}
 
   BulkOptions options;
   balance::QuickTally tally;
@@ -100,24 +102,29 @@ void Bulk::State::answer_species(std::string& out) {
 Bulk::Bulk(const BulkOptions& options) {
   Result<estimate::BondSet> set = estimate::BondSet::published(estimate::BondSet::names().front());
   CHECK(set.ok(), "the primary bond set is always there");
-  state_ = std::make_unique<State>(options, std::make_shared<const estimate::BondSet>(std::move(set.value())));
+  state_ =
+      std::make_unique<State>(options, std::make_shared<const estimate::BondSet>(std::move(set.value())));
 }
 
 Bulk::~Bulk() = default;
 
 void Bulk::answer(std::string_view line, std::string& out) {
   LineQuestion& question = state_->question;
-  while (!line.empty() && (line.back() == '\r' || line.back() == ' ' || line.back() == '\t')) line.remove_suffix(1);
+  while (!line.empty() && (line.back() == '\r' || line.back() == ' ' || line.back() == '\t'))
+    line.remove_suffix(1);
   if (line.empty()) return;
   if (line.size() > kLongestBulkLine) return answer_too_long(line, out);
   if (const Status status = read_question(line, question); !status.ok()) {
     return write_failure(question.id, status.error(), out);
   }
-  const int asked = question.equation.has_value() + question.species.has_value() + question.smiles.has_value();
+  const int asked =
+      question.equation.has_value() + question.species.has_value() + question.smiles.has_value();
   if (asked == 0) return write_failure(question.id, no_question(question), out);
   if (asked > 1) {
     return write_failure(question.id,
-                         {"bulk.several_questions", "The line asks more than one thing.", "", "Ask each on a line of its own."}, out);
+                         {"bulk.several_questions", "The line asks more than one thing.", "",
+                          "Ask each on a line of its own."},
+                         out);
   }
   question.equation ? state_->answer_equation(out) : state_->answer_species(out);
 }
@@ -127,7 +134,9 @@ void Bulk::answer_too_long(std::string_view beginning, std::string& out) {
   const Status status = read_question(beginning, state_->question);
   (void)status;
   write_failure(state_->question.id,
-                {"bulk.line_too_long", "The line is longer than 1 MiB.", "offset " + std::to_string(kLongestBulkLine), kShape}, out);
+                {"bulk.line_too_long", "The line is longer than 1 MiB.",
+                 "offset " + std::to_string(kLongestBulkLine), kShape},
+                out);
 }
 
 }  // namespace heatledger::page

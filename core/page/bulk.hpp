@@ -1,5 +1,5 @@
-// Many questions in a stream: one line of JSON in, one line out. Reading and writing of the stream is the face's part;
-// memory does not grow with the number of lines.
+// Many questions in a stream: one line of JSON in, one line out. Reading and writing of the stream is the
+// face's part; memory does not grow with the number of lines.
 #pragma once
 
 #include <memory>
@@ -23,9 +23,9 @@ class Bulk {
   explicit Bulk(const BulkOptions& options);
   ~Bulk();
 
-  /// Answers one line (without its newline): appends one line of JSON, newline included. An empty line gives nothing.
-  /// The line is an object with one of "equation", "species", "smiles", and "id" (handed back as it came) and
-  /// "estimate_only" where wanted; other keys are passed over.
+  /// Answers one line (without its newline): appends one line of JSON, newline included. An empty line gives
+  /// nothing. The line is an object with one of "equation", "species", "smiles", and "id" (handed back as it
+  /// came) and "estimate_only" where wanted; other keys are passed over.
   /// @errors inside the answer: bulk.not_json, bulk.not_an_object, bulk.duplicate_key, bulk.no_question,
   ///         bulk.several_questions, bulk.wrong_type, and those of answers.hpp
   void answer(std::string_view line, std::string& out);

@@ -17,7 +17,8 @@ inline Cell label_cell(std::string text, Tone tone = Tone::Plain, int span = 1) 
 }
 
 /// A figure that can be pointed at; an empty text gives an empty cell that cannot.
-inline Cell figure_cell(std::string id, std::string text, Tone tone = Tone::Plain, Origin origin = Origin::Derived) {
+inline Cell figure_cell(std::string id, std::string text, Tone tone = Tone::Plain,
+                        Origin origin = Origin::Derived) {
   Cell cell;
   cell.kind = CellKind::Number;
   cell.tone = tone;

@@ -1,4 +1,5 @@
-// Tables as CSV (RFC 4180): figures a spreadsheet can read, one table after the other with a blank line between.
+// Tables as CSV (RFC 4180): figures a spreadsheet can read, one table after the other with a blank line
+// between.
 #include "core/page/print_view.hpp"
 #include "core/page/writers.hpp"
 
@@ -24,7 +25,8 @@ std::string field(const Cell& cell) {
     if (is_figure(plain)) return plain;
   }
   // A text that begins like a formula would be run by a spreadsheet: it gets an apostrophe before it.
-  if (!text.empty() && std::string_view("=+-@\t\r").find(text[0]) != std::string_view::npos) text.insert(0, "'");
+  if (!text.empty() && std::string_view("=+-@\t\r").find(text[0]) != std::string_view::npos)
+    text.insert(0, "'");
   if (text.find_first_of(",\"\r\n") == std::string::npos) return text;
   replace_all(text, "\"", "\"\"");
   return "\"" + text + "\"";

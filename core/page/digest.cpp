@@ -61,7 +61,8 @@ file::SavedResults results_to_save(const document::Worksheet& sheet, const docum
     add_reaction(digest, result);
     if (result.ledger == nullptr) continue;
     const std::string taken = taken_text(*result.ledger);
-    if (!taken.empty()) saved.figures[sheet.reactions[i]->id] = taken + ", by " + route_words(result.ledger->taken);
+    if (!taken.empty())
+      saved.figures[sheet.reactions[i]->id] = taken + ", by " + route_words(result.ledger->taken);
   }
   saved.digest = digest.hex();
   return saved;
@@ -77,12 +78,14 @@ std::vector<std::string> changed_figures(const document::Worksheet& sheet, const
     const std::string was = before == saved.figures.end() ? "no value" : before->second;
     const std::string is = after == now.figures.end() ? "no value" : after->second;
     if (was == is) continue;
-    sentences.push_back("Reaction " + std::to_string(i + 1) + " read " + was + " when this sheet was saved and reads " + is +
+    sentences.push_back("Reaction " + std::to_string(i + 1) + " read " + was +
+                        " when this sheet was saved and reads " + is +
                         " now: other tables or another version of the program stand behind it.");
   }
   if (sentences.empty()) {
     sentences.push_back(
-        "Some figures of this sheet no longer read as they did when it was saved; the figures taken are the same.");
+        "Some figures of this sheet no longer read as they did when it was saved; the figures taken are the "
+        "same.");
   }
   return sentences;
 }

@@ -10,7 +10,8 @@
 namespace heatledger::page {
 namespace {
 
-Words words_at(double x, double y, std::string text, Ink ink = Ink::Text, Align anchor = Align::Left, double size = 9) {
+Words words_at(double x, double y, std::string text, Ink ink = Ink::Text, Align anchor = Align::Left,
+               double size = 9) {
   Words words;
   words.x = x;
   words.y = y;
@@ -58,7 +59,8 @@ std::vector<RouteFigure> route_figures(const balance::Ledger& ledger) {
   for (const balance::Route& route : ledger.routes) {
     if (!route.as_written) continue;
     const uncertainty::Quantity scaled = route.as_written->scaled(ledger.basis.factor);
-    figures.push_back({route_words(route.name), scaled.value() / 1000, scaled.u95() / 1000, route.name == ledger.taken});
+    figures.push_back(
+        {route_words(route.name), scaled.value() / 1000, scaled.u95() / 1000, route.name == ledger.taken});
   }
   return figures;
 }
@@ -102,7 +104,9 @@ Drawing routes_drawing(const std::string& id, const balance::Ledger& ledger) {
   const double step = tick_step(high - low, 5);
   low = std::floor(low / step) * step;
   high = std::ceil(high / step) * step;
-  const auto x_of = [&](double kj_value) { return kLeft + (kRight - kLeft) * (kj_value - low) / (high - low); };
+  const auto x_of = [&](double kj_value) {
+    return kLeft + (kRight - kLeft) * (kj_value - low) / (high - low);
+  };
 
   const double axis = kTop + kPitch * static_cast<double>(figures.size());
   drawing.width = 500;
@@ -118,8 +122,10 @@ Drawing routes_drawing(const std::string& id, const balance::Ledger& ledger) {
   double y = kTop;
   for (const RouteFigure& figure : figures) {
     const Ink ink = figure.taken ? Ink::Accent : Ink::Plain;
-    drawing.words.push_back(words_at(0, y + 3, figure.label + (figure.taken ? ", taken" : ""), Ink::QuietText));
-    drawing.strokes.push_back(line(x_of(figure.value - figure.u95), y, x_of(figure.value + figure.u95), y, ink, 2));
+    drawing.words.push_back(
+        words_at(0, y + 3, figure.label + (figure.taken ? ", taken" : ""), Ink::QuietText));
+    drawing.strokes.push_back(
+        line(x_of(figure.value - figure.u95), y, x_of(figure.value + figure.u95), y, ink, 2));
     drawing.fills.push_back(dot(x_of(figure.value), y, 3.5, ink));
     y += kPitch;
   }
@@ -156,7 +162,9 @@ Drawing profile_drawing(const std::string& id, const balance::Ledger& ledger) {
   constexpr double kTop = 22, kBottom = 226, kLeft = 40, kMiddle = 200, kFar = 380;
   drawing.width = 500;
   drawing.height = 268;
-  const auto y_of = [&](double joule) { return kBottom - (kBottom - kTop) * (joule - lowest) / (highest - lowest); };
+  const auto y_of = [&](double joule) {
+    return kBottom - (kBottom - kTop) * (joule - lowest) / (highest - lowest);
+  };
   const int decimals = ledger_decimals(ledger);
   const balance::Reaction& reaction = *ledger.reaction;
 
@@ -171,15 +179,17 @@ Drawing profile_drawing(const std::string& id, const balance::Ledger& ledger) {
   down.arrow = true;
   drawing.strokes.push_back(std::move(down));
   const double halfway = (y_of(0) + y_of(broken)) / 2;
-  drawing.words.push_back(words_at(kMiddle - 2, halfway, "broken " + signed_kj(broken, decimals), Ink::Broken));
-  drawing.words.push_back(words_at(kMiddle + 82, halfway, "formed " + signed_kj(-formed, decimals), Ink::Formed));
+  drawing.words.push_back(
+      words_at(kMiddle - 2, halfway, "broken " + signed_kj(broken, decimals), Ink::Broken));
+  drawing.words.push_back(
+      words_at(kMiddle + 82, halfway, "formed " + signed_kj(-formed, decimals), Ink::Formed));
 
   // Levels of the phases as written lie close under those of the gas; labels keep clear of each other.
   const bool phases = known && !ledger.corrections.empty();
   drawing.words.push_back(
       words_at(kLeft, y_of(0) - 5, side_words(reaction, false) + (phases ? ", gas" : ""), Ink::QuietText));
-  drawing.words.push_back(
-      words_at(kMiddle + 82, y_of(products) - 5, side_words(reaction, true) + (phases ? ", gas" : ""), Ink::QuietText));
+  drawing.words.push_back(words_at(kMiddle + 82, y_of(products) - 5,
+                                   side_words(reaction, true) + (phases ? ", gas" : ""), Ink::QuietText));
   if (phases) {
     const auto written_level = [&](double x0, double x1, double joule, double gas) {
       if (joule == gas) return;

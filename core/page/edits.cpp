@@ -17,14 +17,15 @@ Error no_such_cell(std::string_view cell) {
 }
 
 Error not_editable(std::string_view cell) {
-  return {"edit.not_editable", "This cell is worked out by the sheet and cannot be typed over.", std::string(cell),
-          "Change what it is worked out from; its working names it."};
+  return {"edit.not_editable", "This cell is worked out by the sheet and cannot be typed over.",
+          std::string(cell), "Change what it is worked out from; its working names it."};
 }
 
 /// Typed lines lose what would break a line of the sheet; nothing else is touched.
 std::string one_line(std::string_view text) {
   std::string line(text);
-  std::replace_if(line.begin(), line.end(), [](char c) { return c == '\n' || c == '\r' || c == '\t'; }, ' ');
+  std::replace_if(
+      line.begin(), line.end(), [](char c) { return c == '\n' || c == '\r' || c == '\t'; }, ' ');
   const std::size_t first = line.find_first_not_of(' ');
   if (first == std::string::npos) return {};
   return line.substr(first, line.find_last_not_of(' ') - first + 1);
@@ -43,8 +44,9 @@ std::string* header_field(document::Header& header, const std::string& name) {
 }
 
 /// Sets, appends or (with an empty text) removes a line of a list.
-Result<Edited> edit_line(const Worksheet& sheet, document::Shared<document::Lines> Worksheet::*list, std::size_t index,
-                         const std::string& text, std::string_view cell, const std::string& label) {
+Result<Edited> edit_line(const Worksheet& sheet, document::Shared<document::Lines> Worksheet::*list,
+                         std::size_t index, const std::string& text, std::string_view cell,
+                         const std::string& label) {
   Edited edited{sheet, label};
   document::Lines& lines = (edited.sheet.*list).change();
   if (index > lines.size()) return no_such_cell(cell);
@@ -58,7 +60,8 @@ Result<Edited> edit_line(const Worksheet& sheet, document::Shared<document::Line
   return edited;
 }
 
-Result<Edited> edit_bond(const Worksheet& sheet, const IdParts& id, const std::string& text, std::string_view cell) {
+Result<Edited> edit_bond(const Worksheet& sheet, const IdParts& id, const std::string& text,
+                         std::string_view cell) {
   const std::optional<std::size_t> index = id.size() == 3 ? id_index(id[1]) : std::nullopt;
   if (!index || *index > sheet.typed_bonds->size()) return no_such_cell(cell);
   if (id[2] == "remove") return apply_command(sheet, {}, "remove_bond", {{"bond", id[1]}});
@@ -102,7 +105,8 @@ std::string bond_set_from_choice(const std::string& text) {
 
 class ReactionEdit {
  public:
-  ReactionEdit(const Worksheet& sheet, const document::Results& results, std::size_t index, std::string_view cell)
+  ReactionEdit(const Worksheet& sheet, const document::Results& results, std::size_t index,
+               std::string_view cell)
       : sheet_(sheet), results_(results), index_(index), cell_(cell) {}
 
   Result<Edited> apply(const IdParts& id, const std::string& text) {
@@ -113,12 +117,14 @@ class ReactionEdit {
       const balance::Ledger* ledger = result().ledger.get();
       if (!row || ledger == nullptr || *row >= ledger->rows.size()) return no_such_cell(cell_);
       if (id[3] != "times") return not_editable(cell_);
-      const Result<std::string> equation = with_coefficient(*ledger->reaction, ledger->rows[*row].species, text);
+      const Result<std::string> equation =
+          with_coefficient(*ledger->reaction, ledger->rows[*row].species, text);
       if (!equation) return equation.error();
       return set(&document::ReactionSheet::equation, *equation, "edit coefficient");
     }
     if (field == "proposal" && id.size() == 3) {
-      return apply_command(sheet_, results_, "take_proposal", {{"reaction", sheet().id}, {"proposal", id[2]}});
+      return apply_command(sheet_, results_, "take_proposal",
+                           {{"reaction", sheet().id}, {"proposal", id[2]}});
     }
     if (field == "check") return apply_check(id, text);
     return no_such_cell(cell_);
@@ -142,10 +148,11 @@ class ReactionEdit {
     if (field == "basis") {
       return set(&ReactionSheet::basis, basis_from_choice(result().reaction.get(), text), "change basis");
     }
-    if (field == "bond_set") return set(&ReactionSheet::bond_set, bond_set_from_choice(text), "change bond values");
+    if (field == "bond_set")
+      return set(&ReactionSheet::bond_set, bond_set_from_choice(text), "change bond values");
     if (field == "route") {
-      return set(&ReactionSheet::pinned_route, text == "the best there is" ? std::string() : route_from_words(text),
-                 "pin route");
+      return set(&ReactionSheet::pinned_route,
+                 text == "the best there is" ? std::string() : route_from_words(text), "pin route");
     }
     if (field == "show") {
       Edited edited{sheet_, "change what is shown"};
@@ -154,13 +161,15 @@ class ReactionEdit {
       reaction.show_checker = text.find("checker") != std::string::npos;
       return edited;
     }
-    if (field == "remove") return apply_command(sheet_, results_, "remove_reaction", {{"reaction", sheet().id}});
+    if (field == "remove")
+      return apply_command(sheet_, results_, "remove_reaction", {{"reaction", sheet().id}});
     if (field == "move_up" || field == "move_down") {
       return apply_command(sheet_, results_, "move_reaction",
                            {{"reaction", sheet().id}, {"direction", field == "move_up" ? "up" : "down"}});
     }
-    return field == "balance" || field == "gas_298" || field == "as_written" || field == "taken" ? not_editable(cell_)
-                                                                                                 : no_such_cell(cell_);
+    return field == "balance" || field == "gas_298" || field == "as_written" || field == "taken"
+               ? not_editable(cell_)
+               : no_such_cell(cell_);
   }
 
   /// "r1.check.row.2.per_mole": the figure on the sheet under review; an empty text takes it away.
@@ -206,7 +215,8 @@ std::optional<std::size_t> id_index(const std::string& text) {
   return index;
 }
 
-Result<std::string> with_coefficient(const balance::Reaction& reaction, std::size_t species, std::string_view typed) {
+Result<std::string> with_coefficient(const balance::Reaction& reaction, std::size_t species,
+                                     std::string_view typed) {
   const std::string text = one_line(typed);
   const std::size_t slash = text.find('/');
   const std::optional<double> over = parse_number(std::string_view(text).substr(0, slash));
@@ -243,8 +253,9 @@ Result<Edited> apply_edit(const Worksheet& sheet, const document::Results& resul
   if (id[0] == "assumption" || id[0] == "remark") {
     const std::optional<std::size_t> index = id.size() == 2 ? id_index(id[1]) : std::nullopt;
     if (!index) return no_such_cell(cell);
-    return id[0] == "remark" ? edit_line(sheet, &Worksheet::notes, *index, text, cell, "edit note")
-                             : edit_line(sheet, &Worksheet::assumptions, *index, text, cell, "edit assumption");
+    return id[0] == "remark"
+               ? edit_line(sheet, &Worksheet::notes, *index, text, cell, "edit note")
+               : edit_line(sheet, &Worksheet::assumptions, *index, text, cell, "edit assumption");
   }
   if (cell == "reactions.add_reaction") return apply_command(sheet, results, "add_reaction", {});
   const std::size_t index = document::find_reaction(sheet, id[0]);

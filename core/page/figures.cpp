@@ -12,9 +12,9 @@ namespace heatledger::page {
 namespace {
 
 constexpr std::array<std::pair<const char*, const char*>, 4> kRoutes{{{"average", "average bonds"},
-                                                                     {"context", "bonds in context"},
-                                                                     {"formation", "formation enthalpies"},
-                                                                     {"measured", "measured"}}};
+                                                                      {"context", "bonds in context"},
+                                                                      {"formation", "formation enthalpies"},
+                                                                      {"measured", "measured"}}};
 
 bool is_whole_kj(double joule) {
   // A twentieth of a kJ is below what one decimal shows.
@@ -23,8 +23,12 @@ bool is_whole_kj(double joule) {
 
 }  // namespace
 
-std::string kj(double joule, int decimals) { return display_number(joule / 1000, decimals); }
-std::string signed_kj(double joule, int decimals) { return display_signed(joule / 1000, decimals); }
+std::string kj(double joule, int decimals) {
+  return display_number(joule / 1000, decimals);
+}
+std::string signed_kj(double joule, int decimals) {
+  return display_signed(joule / 1000, decimals);
+}
 
 std::string half_width_kj(double joule, int decimals) {
   if (joule <= 0) return {};

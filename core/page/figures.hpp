@@ -1,4 +1,5 @@
-// How figures of a sheet are spelled: kJ, decimals that suit the ±, signs. Every text of a figure is made here.
+// How figures of a sheet are spelled: kJ, decimals that suit the ±, signs. Every text of a figure is made
+// here.
 #pragma once
 
 #include <optional>
@@ -19,7 +20,8 @@ std::string figure_kj(const uncertainty::Figure& joule);
 
 /// Decimals of one figure in kJ: two digits of its ±, at most one; two where the ± would print as zero.
 int decimals_kj(double u95_joule);
-/// Decimals of a ledger's columns: none where every price is a whole number of kJ or the total is vaguer than that.
+/// Decimals of a ledger's columns: none where every price is a whole number of kJ or the total is vaguer than
+/// that.
 int ledger_decimals(const balance::Ledger& ledger);
 
 /// A coefficient as typed: "3", "1/2", "0.25".
@@ -29,7 +31,8 @@ std::string coefficient_text(const molecule::Coefficient& coefficient);
 std::string route_words(const std::string& route);
 std::string route_from_words(const std::string& words);
 
-/// The figure taken as the sheet prints it, with its unit: "−552.6 ± 3.0 kJ/mol nitrobenzene"; empty without one.
+/// The figure taken as the sheet prints it, with its unit: "−552.6 ± 3.0 kJ/mol nitrobenzene"; empty without
+/// one.
 std::string taken_text(const balance::Ledger& ledger);
 
 }  // namespace heatledger::page

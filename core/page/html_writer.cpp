@@ -1,5 +1,5 @@
-// The report: one HTML file that prints as the sheet on A4 and Letter. No script, no outside reference; every text
-// goes through escaped().
+// The report: one HTML file that prints as the sheet on A4 and Letter. No script, no outside reference; every
+// text goes through escaped().
 #include <algorithm>
 
 #include "core/page/markup.hpp"
@@ -11,81 +11,119 @@ namespace {
 
 constexpr std::string_view kStyle =
     "@page{margin:16mm 14mm}"
-    "body{font:10pt/1.4 system-ui,'Segoe UI','DejaVu Sans',sans-serif;color:#23262d;background:#fff;margin:1.5rem auto;"
+    "body{font:10pt/1.4 system-ui,'Segoe UI','DejaVu "
+    "Sans',sans-serif;color:#23262d;background:#fff;margin:1.5rem auto;"
     "max-width:184mm;font-variant-numeric:tabular-nums}"
     "h1{font-size:15pt;margin:0}h2{font-size:9pt;letter-spacing:.08em;text-transform:uppercase;color:#62656c;"
     "display:flex;gap:.8em;align-items:baseline;margin:1.6em 0 .5em;break-after:avoid}"
-    "h2 .rule{flex:1;border-top:.5pt solid #c9c7bc}h2 .aside{letter-spacing:0;text-transform:none;font-weight:400}"
-    "table{border-collapse:collapse;width:100%;margin:.2em 0 .6em}td,th{padding:.22em .5em;vertical-align:baseline}"
+    "h2 .rule{flex:1;border-top:.5pt solid #c9c7bc}h2 "
+    ".aside{letter-spacing:0;text-transform:none;font-weight:400}"
+    "table{border-collapse:collapse;width:100%;margin:.2em 0 .6em}td,th{padding:.22em "
+    ".5em;vertical-align:baseline}"
     "th{font-weight:400;color:#62656c;font-size:8.5pt;text-align:left;border-bottom:.5pt solid #b9b7ac}"
     ".left{text-align:left}.right{text-align:right}.centre{text-align:center}td.right{white-space:nowrap}"
     "tr{break-inside:avoid}.spine{border-right:1.2pt solid #23262d}"
-    ".ledger .body td{border-top:.5pt solid #dddbd0}.ledger .detail td{font-size:8.5pt;padding-top:0;padding-bottom:0}"
-    ".ledger .detail td:first-child{padding-left:1.6em}.ledger .subtotal td{border-top:1pt solid #23262d;font-weight:600}"
-    ".ledger .result td{background:#efeee2;font-weight:600}.ledger .correction td{font-size:9pt;padding-top:.05em;padding-bottom:.05em}"
-    ".form{border:.5pt solid #b9b7ac}.form td{border:.5pt solid #dddbd0}.banner td{padding-left:0;padding-right:0}"
-    ".boxes{display:flex;flex-wrap:wrap;border:.5pt solid #b9b7ac;margin:.2em 0 .6em}.box{flex:1 1 10em;padding:.5em .8em;"
-    "border-right:.5pt solid #dddbd0;break-inside:avoid}.box:last-child{border-right:0}.box .what{font-size:8.5pt}"
+    ".ledger .body td{border-top:.5pt solid #dddbd0}.ledger .detail "
+    "td{font-size:8.5pt;padding-top:0;padding-bottom:0}"
+    ".ledger .detail td:first-child{padding-left:1.6em}.ledger .subtotal td{border-top:1pt solid "
+    "#23262d;font-weight:600}"
+    ".ledger .result td{background:#efeee2;font-weight:600}.ledger .correction "
+    "td{font-size:9pt;padding-top:.05em;padding-bottom:.05em}"
+    ".form{border:.5pt solid #b9b7ac}.form td{border:.5pt solid #dddbd0}.banner "
+    "td{padding-left:0;padding-right:0}"
+    ".boxes{display:flex;flex-wrap:wrap;border:.5pt solid #b9b7ac;margin:.2em 0 .6em}.box{flex:1 1 "
+    "10em;padding:.5em .8em;"
+    "border-right:.5pt solid #dddbd0;break-inside:avoid}.box:last-child{border-right:0}.box "
+    ".what{font-size:8.5pt}"
     ".box .figure{font-size:13pt;font-weight:600}"
-    ".quiet{color:#62656c}.strong{font-weight:600}.broken{color:#98401a}.formed{color:#145a70}.caution{color:#8a3b00}"
+    ".quiet{color:#62656c}.strong{font-weight:600}.broken{color:#98401a}.formed{color:#145a70}.caution{color:"
+    "#8a3b00}"
     ".good{color:#22602c}.typed{color:#2438a8}.state{font-size:.8em;vertical-align:-.2em}"
-    ".note{margin:.25em 0;font-size:9pt}.note.caution,.note.disagreement,.note.error{border-left:2.5pt solid #a8741a;"
+    ".note{margin:.25em 0;font-size:9pt}.note.caution,.note.disagreement,.note.error{border-left:2.5pt solid "
+    "#a8741a;"
     "padding-left:.7em;color:#23262d}.note.error{border-color:#98401a}"
-    ".equation{font-size:12.5pt}figure{margin:.4em 0;break-inside:avoid}svg{max-width:100%;height:auto;font-family:inherit}"
-    ".working{break-inside:avoid;margin:0 0 1em}.working h3{font-size:10pt;margin:0}.working ol{margin:.2em 0;padding-left:1.6em}"
+    ".equation{font-size:12.5pt}figure{margin:.4em "
+    "0;break-inside:avoid}svg{max-width:100%;height:auto;font-family:inherit}"
+    ".working{break-inside:avoid;margin:0 0 1em}.working h3{font-size:10pt;margin:0}.working ol{margin:.2em "
+    "0;padding-left:1.6em}"
     "@media print{body{margin:0;max-width:none}}";
 
 const char* class_of(Tone tone) {
   switch (tone) {
-    case Tone::Plain: return "";
-    case Tone::Quiet: return "quiet";
-    case Tone::Strong: return "strong";
-    case Tone::Broken: return "broken";
-    case Tone::Formed: return "formed";
-    case Tone::Caution: return "caution";
-    case Tone::Good: return "good";
+    case Tone::Plain:
+      return "";
+    case Tone::Quiet:
+      return "quiet";
+    case Tone::Strong:
+      return "strong";
+    case Tone::Broken:
+      return "broken";
+    case Tone::Formed:
+      return "formed";
+    case Tone::Caution:
+      return "caution";
+    case Tone::Good:
+      return "good";
   }
   return "";
 }
 
 const char* class_of(Align align) {
   switch (align) {
-    case Align::Left: return "left";
-    case Align::Right: return "right";
-    case Align::Centre: return "centre";
+    case Align::Left:
+      return "left";
+    case Align::Right:
+      return "right";
+    case Align::Centre:
+      return "centre";
   }
   return "";
 }
 
 const char* class_of(RowRole role) {
   switch (role) {
-    case RowRole::Body: return "body";
-    case RowRole::Detail: return "detail";
-    case RowRole::Subtotal: return "subtotal";
-    case RowRole::Result: return "result";
-    case RowRole::Correction: return "correction";
+    case RowRole::Body:
+      return "body";
+    case RowRole::Detail:
+      return "detail";
+    case RowRole::Subtotal:
+      return "subtotal";
+    case RowRole::Result:
+      return "result";
+    case RowRole::Correction:
+      return "correction";
   }
   return "";
 }
 
 const char* class_of(TableLook look) {
   switch (look) {
-    case TableLook::Ledger: return "ledger";
-    case TableLook::Form: return "form";
-    case TableLook::Boxes: return "boxes";
-    case TableLook::List: return "list";
-    case TableLook::Banner: return "banner";
+    case TableLook::Ledger:
+      return "ledger";
+    case TableLook::Form:
+      return "form";
+    case TableLook::Boxes:
+      return "boxes";
+    case TableLook::List:
+      return "list";
+    case TableLook::Banner:
+      return "banner";
   }
   return "";
 }
 
 const char* class_of(NoteKind kind) {
   switch (kind) {
-    case NoteKind::Info: return "info";
-    case NoteKind::Assumption: return "assumption";
-    case NoteKind::Caution: return "caution";
-    case NoteKind::Disagreement: return "disagreement";
-    case NoteKind::Error: return "error";
+    case NoteKind::Info:
+      return "info";
+    case NoteKind::Assumption:
+      return "assumption";
+    case NoteKind::Caution:
+      return "caution";
+    case NoteKind::Disagreement:
+      return "disagreement";
+    case NoteKind::Error:
+      return "error";
   }
   return "";
 }
@@ -98,7 +136,8 @@ std::string equation_markup(const std::string& text) {
     const std::size_t open = text.find('(', at);
     const std::size_t close = open == std::string::npos ? open : text.find(')', open);
     if (close == std::string::npos) break;
-    const bool state = open > 0 && text[open - 1] != ' ' && open + 1 < close && text[open + 1] >= 'a' && text[open + 1] <= 'z';
+    const bool state = open > 0 && text[open - 1] != ' ' && open + 1 < close && text[open + 1] >= 'a' &&
+                       text[open + 1] <= 'z';
     out += escaped(std::string_view(text).substr(at, open - at));
     const std::string inside = escaped(std::string_view(text).substr(open, close + 1 - open));
     out += state ? "<span class=\"state\">" + inside + "</span>" : inside;
@@ -121,10 +160,11 @@ std::string cell_classes(const Cell& cell, const Column& last) {
 class HtmlWriter {
  public:
   std::string write(const Page& page, const std::vector<Margin>& workings) {
-    out_ = "<!DOCTYPE html>\n<html lang=\"en\"><head><meta charset=\"utf-8\"><meta name=\"viewport\" "
-           "content=\"width=device-width\"><title>" +
-           escaped(page.title) + "</title><style>" + std::string(kStyle) + std::string(ink_style()) +
-           "</style></head><body>\n";
+    out_ =
+        "<!DOCTYPE html>\n<html lang=\"en\"><head><meta charset=\"utf-8\"><meta name=\"viewport\" "
+        "content=\"width=device-width\"><title>" +
+        escaped(page.title) + "</title><style>" + std::string(kStyle) + std::string(ink_style()) +
+        "</style></head><body>\n";
     for (const Block& block : page.blocks) {
       std::visit([this](const auto& any) { add(any); }, block);
       out_ += '\n';
@@ -155,8 +195,8 @@ class HtmlWriter {
     if (headed) {
       out_ += "<thead><tr>";
       for (const Column& column : table.columns) {
-        out_ += "<th class=\"" + std::string(class_of(column.align)) + (column.spine_after ? " spine" : "") + "\">" +
-                escaped(column.heading) + "</th>";
+        out_ += "<th class=\"" + std::string(class_of(column.align)) + (column.spine_after ? " spine" : "") +
+                "\">" + escaped(column.heading) + "</th>";
       }
       out_ += "</tr></thead>";
     }
@@ -205,11 +245,12 @@ class HtmlWriter {
     if (workings.empty()) return;
     out_ += "<h2>Workings<span class=\"rule\"></span></h2>\n";
     for (const Margin& margin : workings) {
-      out_ += "<div class=\"working\"><h3>" + escaped(margin.value) + " <span class=\"quiet\">" + escaped(margin.subject) +
-              "</span></h3><ol>";
+      out_ += "<div class=\"working\"><h3>" + escaped(margin.value) + " <span class=\"quiet\">" +
+              escaped(margin.subject) + "</span></h3><ol>";
       for (const std::string& step : margin.steps) out_ += "<li>" + escaped(step) + "</li>";
       out_ += "</ol>";
-      for (const std::string& source : margin.sources) out_ += "<p class=\"note quiet\">" + escaped(source) + "</p>";
+      for (const std::string& source : margin.sources)
+        out_ += "<p class=\"note quiet\">" + escaped(source) + "</p>";
       out_ += "</div>\n";
     }
   }

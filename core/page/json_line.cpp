@@ -10,7 +10,9 @@ namespace {
 
 constexpr int kDeepest = 64;
 
-bool is_digit(char c) { return c >= '0' && c <= '9'; }
+bool is_digit(char c) {
+  return c >= '0' && c <= '9';
+}
 
 void append_utf8(std::string& out, unsigned code) {
   const auto put = [&](unsigned byte) { out += static_cast<char>(byte); };
@@ -55,7 +57,9 @@ class Reader {
 
   char peek() const { return at_ < line_.size() ? line_[at_] : '\0'; }
   void blanks() {
-    while (at_ < line_.size() && (line_[at_] == ' ' || line_[at_] == '\t' || line_[at_] == '\r' || line_[at_] == '\n')) ++at_;
+    while (at_ < line_.size() &&
+           (line_[at_] == ' ' || line_[at_] == '\t' || line_[at_] == '\r' || line_[at_] == '\n'))
+      ++at_;
   }
   /// The line cannot be read on from here.
   void fail(const char* code, std::string message, const char* hint = kShape) {
@@ -64,7 +68,8 @@ class Reader {
     object(code, std::move(message), hint);
     failed_ = true;
   }
-  /// The line is JSON, but not a question; reading goes on, so that the id is still found. The first objection counts.
+  /// The line is JSON, but not a question; reading goes on, so that the id is still found. The first
+  /// objection counts.
   void object(const char* code, std::string message, const char* hint = kShape) {
     if (doubtful_) return;
     doubtful_ = true;
@@ -105,13 +110,28 @@ class Reader {
     const char c = peek();
     ++at_;
     switch (c) {
-      case '"': case '\\': case '/': out += c; return;
-      case 'b': out += '\b'; return;
-      case 'f': out += '\f'; return;
-      case 'n': out += '\n'; return;
-      case 'r': out += '\r'; return;
-      case 't': out += '\t'; return;
-      case 'u': break;
+      case '"':
+      case '\\':
+      case '/':
+        out += c;
+        return;
+      case 'b':
+        out += '\b';
+        return;
+      case 'f':
+        out += '\f';
+        return;
+      case 'n':
+        out += '\n';
+        return;
+      case 'r':
+        out += '\r';
+        return;
+      case 't':
+        out += '\t';
+        return;
+      case 'u':
+        break;
       default:
         --at_;
         fail("bulk.not_json", "A backslash is followed by something that JSON does not know.");
@@ -120,11 +140,13 @@ class Reader {
     unsigned code = hex4();
     if (failed_) return;
     if (code >= 0xD800 && code < 0xDC00) {
-      if (line_.substr(at_, 2) != "\\u") return fail("bulk.not_json", "Half of a surrogate pair stands alone.");
+      if (line_.substr(at_, 2) != "\\u")
+        return fail("bulk.not_json", "Half of a surrogate pair stands alone.");
       at_ += 2;
       const unsigned low = hex4();
       if (failed_) return;
-      if (low < 0xDC00 || low > 0xDFFF) return fail("bulk.not_json", "Half of a surrogate pair stands alone.");
+      if (low < 0xDC00 || low > 0xDFFF)
+        return fail("bulk.not_json", "Half of a surrogate pair stands alone.");
       code = 0x10000 + ((code - 0xD800) << 10) + (low - 0xDC00);
     } else if (code >= 0xDC00 && code < 0xE000) {
       return fail("bulk.not_json", "Half of a surrogate pair stands alone.");
@@ -201,13 +223,27 @@ class Reader {
     blanks();
     if (depth > kDeepest) return fail("bulk.too_deep", "Values are nested more than 64 deep.");
     switch (peek()) {
-      case '"': text(passed_over_); return;
-      case '{': container('}', depth, true); return;
-      case '[': container(']', depth, false); return;
-      case 't': word("true"); return;
-      case 'f': word("false"); return;
-      case 'n': word("null"); return;
-      default: number(); return;
+      case '"':
+        text(passed_over_);
+        return;
+      case '{':
+        container('}', depth, true);
+        return;
+      case '[':
+        container(']', depth, false);
+        return;
+      case 't':
+        word("true");
+        return;
+      case 'f':
+        word("false");
+        return;
+      case 'n':
+        word("null");
+        return;
+      default:
+        number();
+        return;
     }
   }
 
@@ -276,23 +312,38 @@ class Reader {
       const std::size_t key_at = at_;
       const std::string_view key = text(key_);
       if (failed_) return;
-      const unsigned bit = key == "id" ? kId : key == "equation" ? kEquation : key == "species" ? kSpecies
-                           : key == "smiles" ? kSmiles : key == "estimate_only" ? kEstimate : 0u;
+      const unsigned bit = key == "id"              ? kId
+                           : key == "equation"      ? kEquation
+                           : key == "species"       ? kSpecies
+                           : key == "smiles"        ? kSmiles
+                           : key == "estimate_only" ? kEstimate
+                                                    : 0u;
       const bool twice = bit != 0 ? (seen & bit) != 0 : seen_before(key);
       if (twice) {
         const std::size_t behind = std::exchange(at_, key_at);
-        object("bulk.duplicate_key", "The key \"" + std::string(key) + "\" stands twice on the line.", "Keep one of the two.");
+        object("bulk.duplicate_key", "The key \"" + std::string(key) + "\" stands twice on the line.",
+               "Keep one of the two.");
         at_ = behind;
       }
       seen |= bit;
       expect(':');
       if (failed_) return;
       switch (bit) {
-        case kId: identity(); break;
-        case kEquation: known_text(question_.equation, question_.equation_text, "equation"); break;
-        case kSpecies: known_text(question_.species, question_.species_text, "species"); break;
-        case kSmiles: known_text(question_.smiles, question_.smiles_text, "smiles"); break;
-        case kEstimate: known_flag(); break;
+        case kId:
+          identity();
+          break;
+        case kEquation:
+          known_text(question_.equation, question_.equation_text, "equation");
+          break;
+        case kSpecies:
+          known_text(question_.species, question_.species_text, "species");
+          break;
+        case kSmiles:
+          known_text(question_.smiles, question_.smiles_text, "smiles");
+          break;
+        case kEstimate:
+          known_flag();
+          break;
         default:
           if (question_.first_unknown.empty()) question_.first_unknown = key;
           value(1);
@@ -304,9 +355,7 @@ class Reader {
     }
   }
 
-  bool seen_before(std::string_view key) {
-    return !others_.emplace(key).second;
-  }
+  bool seen_before(std::string_view key) { return !others_.emplace(key).second; }
 
   std::string_view line_;
   LineQuestion& question_;

@@ -40,7 +40,8 @@ class JsonText {
 /// {"code","message","where","hint"}: the one error shape.
 void write_error(JsonText& json, const Error& error);
 
-/// Bytes of the UTF-8 character that begins at `at`, 0 when there is none (overlong, surrogate, cut off, stray).
+/// Bytes of the UTF-8 character that begins at `at`, 0 when there is none (overlong, surrogate, cut off,
+/// stray).
 /// @source The Unicode Standard 15.0, table 3-7
 std::size_t utf8_length(std::string_view text, std::size_t at);
 

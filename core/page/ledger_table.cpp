@@ -1,5 +1,5 @@
-// The ledger as a table: a row per species that unfolds to its bond lines, the spine between broken and formed, totals,
-// corrections, the figure as written.
+// The ledger as a table: a row per species that unfolds to its bond lines, the spine between broken and
+// formed, totals, corrections, the figure as written.
 #include "core/balance/bond_words.hpp"
 #include "core/balance/checker.hpp"
 #include "core/base/number_text.hpp"
@@ -81,7 +81,8 @@ class LedgerTable {
     if (entry.per_mole) {
       row.cells.push_back(figure_cell(id + ".per_mole", kj(entry.per_mole->value(), decimals_)));
     } else {
-      Cell missing = figure_cell(id + ".per_mole", entry.missing.empty() ? "no value" : "bond missing", Tone::Caution);
+      Cell missing =
+          figure_cell(id + ".per_mole", entry.missing.empty() ? "no value" : "bond missing", Tone::Caution);
       missing.kind = CellKind::Label;
       row.cells.push_back(std::move(missing));
     }
@@ -93,14 +94,16 @@ class LedgerTable {
     const std::string in_equation = entry.in_equation ? kj(entry.in_equation->value(), decimals_) : "";
     row.cells.push_back(figure_cell(id + ".broken", written.product ? "" : in_equation, Tone::Broken));
     row.cells.push_back(figure_cell(id + ".formed", written.product ? in_equation : "", Tone::Formed));
-    row.cells.push_back(figure_cell(
-        id + ".u95", entry.in_equation ? half_width_kj(entry.in_equation->u95(), decimals_) : "", Tone::Quiet));
+    row.cells.push_back(
+        figure_cell(id + ".u95", entry.in_equation ? half_width_kj(entry.in_equation->u95(), decimals_) : "",
+                    Tone::Quiet));
     const bool open = row.open;
     finish(std::move(row), "row." + std::to_string(index) + ".in_equation");
     if (open) {
       for (std::size_t line = 0; line < entry.lines.size(); ++line) add_line(index, line);
     }
-    if (!entry.remark.empty() && (open || entry.route != balance::RowRoute::Bonds)) add_remark(id, entry.remark);
+    if (!entry.remark.empty() && (open || entry.route != balance::RowRoute::Bonds))
+      add_remark(id, entry.remark);
   }
 
   Cell times_cell(const std::string& id, const balance::ReactionSpecies& written) const {
@@ -125,18 +128,20 @@ class LedgerTable {
     const std::string times = coefficient_text(written.term.coefficient);
     row.cells.push_back(label_cell(line.count_text + (times == "1" ? "" : " \u00d7 " + times), Tone::Quiet));
     const bool user = line.price != nullptr && line.price->origin == estimate::BondOrigin::User;
-    row.cells.push_back(figure_cell(id + ".each", line.price_text, line.priced() ? Tone::Quiet : Tone::Caution,
+    row.cells.push_back(figure_cell(id + ".each", line.price_text,
+                                    line.priced() ? Tone::Quiet : Tone::Caution,
                                     user ? Origin::Typed : Origin::Published));
     row.cells.push_back(label_cell(user ? "typed" : "", Tone::Quiet));
     const std::string total = line.priced() ? balance::ledger_kj(line.per_mole * written.coefficient()) : "";
     row.cells.push_back(figure_cell(id + ".total", written.product ? "" : total, Tone::Quiet));
     row.cells.push_back(figure_cell(id + ".total", written.product ? total : "", Tone::Quiet));
     row.cells.push_back(label_cell(""));
-    finish(std::move(row), "row." + std::to_string(index) + ".line." + std::to_string(line_index) + ".per_mole");
+    finish(std::move(row),
+           "row." + std::to_string(index) + ".line." + std::to_string(line_index) + ".per_mole");
   }
 
-  /// Puts a row into the table; with the checker's column shown, adds the figure under review and what it turned out
-  /// to be. @param figure  what it is held against, see balance/checker.hpp; empty: nothing
+  /// Puts a row into the table; with the checker's column shown, adds the figure under review and what it
+  /// turned out to be. @param figure  what it is held against, see balance/checker.hpp; empty: nothing
   void finish(Row row, const std::string& figure) {
     if (review_ != nullptr) {
       if (figure.empty()) {
@@ -157,18 +162,21 @@ class LedgerTable {
     for (const balance::CheckedLine& line : review_->lines) {
       if (line.cell != figure) continue;
       const bool fine = line.verdict == balance::Verdict::Agrees;
-      return label_cell(line.finding.empty() && fine ? "agrees" : line.finding, fine ? Tone::Good : Tone::Caution);
+      return label_cell(line.finding.empty() && fine ? "agrees" : line.finding,
+                        fine ? Tone::Good : Tone::Caution);
     }
     return label_cell("");
   }
 
   void add_remark(const std::string& id, const std::string& remark) {
     Row row = row_of(id + ".remark", RowRole::Detail);
-    row.cells = {label_cell(remark, Tone::Quiet, kLabelSpan - 1), label_cell(""), label_cell(""), label_cell("")};
+    row.cells = {label_cell(remark, Tone::Quiet, kLabelSpan - 1), label_cell(""), label_cell(""),
+                 label_cell("")};
     finish(std::move(row), "");
   }
 
-  /// One row for both sums; with the checker's column shown a row for each, since each has its own figure there.
+  /// One row for both sums; with the checker's column shown a row for each, since each has its own figure
+  /// there.
   void add_sums() {
     const std::string broken = ledger_.broken ? kj(ledger_.broken->value(), decimals_) : "";
     const std::string formed = ledger_.formed ? kj(ledger_.formed->value(), decimals_) : "";
@@ -184,14 +192,16 @@ class LedgerTable {
                const std::string& figure) {
     const std::string id = view_.sheet.id + ".sum";
     Row row = row_of(figure.empty() ? id : id + "." + figure + ".row", role);
-    row.cells = {label_cell(what, Tone::Strong, kLabelSpan - 1), figure_cell(id + ".broken", broken, Tone::Broken),
+    row.cells = {label_cell(what, Tone::Strong, kLabelSpan - 1),
+                 figure_cell(id + ".broken", broken, Tone::Broken),
                  figure_cell(id + ".formed", formed, Tone::Formed), label_cell("")};
     finish(std::move(row), figure);
   }
 
   /// One line under the sums: what, figure, ±.
-  void add_total(const std::string& id, const std::string& what, const std::optional<uncertainty::Quantity>& value,
-                 double factor, RowRole role, const std::string& why_not, const std::string& figure) {
+  void add_total(const std::string& id, const std::string& what,
+                 const std::optional<uncertainty::Quantity>& value, double factor, RowRole role,
+                 const std::string& why_not, const std::string& figure) {
     Row row = row_of(id, role);
     const Tone tone = role == RowRole::Result ? Tone::Strong : Tone::Plain;
     row.cells.push_back(label_cell(what, tone, kLabelSpan));
@@ -223,18 +233,20 @@ class LedgerTable {
     const balance::Basis& basis = ledger_.basis;
     const bool scaled = basis.kind != balance::Basis::Kind::AsWritten;
     if (basis.factor != 1) {
-      add_total(id + ".difference", "Broken \u2212 formed, as written, kJ", ledger_.gas_298, 1, RowRole::Subtotal,
-                missing_words(), "gas_298");
+      add_total(id + ".difference", "Broken \u2212 formed, as written, kJ", ledger_.gas_298, 1,
+                RowRole::Subtotal, missing_words(), "gas_298");
     }
-    add_total(id + ".gas_298", "Broken \u2212 formed, " + (scaled ? basis.text + ", " : "") + basis.unit, ledger_.gas_298,
-              basis.factor, RowRole::Result, missing_words(), basis.factor != 1 ? "gas_298.on_basis" : "gas_298");
+    add_total(id + ".gas_298", "Broken \u2212 formed, " + (scaled ? basis.text + ", " : "") + basis.unit,
+              ledger_.gas_298, basis.factor, RowRole::Result, missing_words(),
+              basis.factor != 1 ? "gas_298.on_basis" : "gas_298");
     for (std::size_t i = 0; i < ledger_.corrections.size(); ++i) {
       const balance::Correction& correction = ledger_.corrections[i];
-      add_total(id + ".correction." + std::to_string(i), correction.what, correction.value, basis.factor, RowRole::Correction,
-                correction.why_not, "correction." + std::to_string(i));
+      add_total(id + ".correction." + std::to_string(i), correction.what, correction.value, basis.factor,
+                RowRole::Correction, correction.why_not, "correction." + std::to_string(i));
     }
     add_total(id + ".as_written", "As written, 25 \u00b0C, " + basis.unit, ledger_.as_written, basis.factor,
-              RowRole::Result, "A line above has no value.", basis.factor != 1 ? "as_written.on_basis" : "as_written");
+              RowRole::Result, "A line above has no value.",
+              basis.factor != 1 ? "as_written.on_basis" : "as_written");
   }
 
   /// Which bonds the set does not price, for the total that is missing because of them.
@@ -259,6 +271,8 @@ class LedgerTable {
 
 }  // namespace
 
-Table ledger_table(const ReactionView& view, const balance::Review* review) { return LedgerTable(view, review).build(); }
+Table ledger_table(const ReactionView& view, const balance::Review* review) {
+  return LedgerTable(view, review).build();
+}
 
 }  // namespace heatledger::page

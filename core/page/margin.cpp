@@ -23,7 +23,8 @@ void add_source(Margin& margin, const std::string& source) {
 }
 
 /// Adds a section of plain notes; nothing when there are none.
-void add_section(Margin& margin, const std::string& heading, const std::vector<std::string>& texts, NoteKind kind) {
+void add_section(Margin& margin, const std::string& heading, const std::vector<std::string>& texts,
+                 NoteKind kind) {
   if (texts.empty()) return;
   Margin::Section section;
   section.heading = heading;
@@ -91,19 +92,23 @@ class LedgerMargin {
     const auto add = [&](const std::string& label, int count, const estimate::BondValue* price) {
       if (price == nullptr || price->u95 <= 0) return;
       const double u95 = count * price->u95 * times;
-      shares.push_back(Share{label + "  " + std::to_string(count) + " \u00d7 " + balance::times_text(times) + " \u00d7 " +
-                                 balance::ledger_kj(price->u95) + " = " + balance::ledger_kj(u95),
+      shares.push_back(Share{label + "  " + std::to_string(count) + " \u00d7 " + balance::times_text(times) +
+                                 " \u00d7 " + balance::ledger_kj(price->u95) + " = " +
+                                 balance::ledger_kj(u95),
                              u95});
     };
     for (const balance::BondLine& line : row.lines) {
       add(balance::bond_label(line.type), line.count, line.price);
       if (line.second) add(balance::bond_label(line.second->type), line.second->count, line.second->price);
     }
-    std::stable_sort(shares.begin(), shares.end(), [](const Share& a, const Share& b) { return a.u95 > b.u95; });
+    std::stable_sort(shares.begin(), shares.end(),
+                     [](const Share& a, const Share& b) { return a.u95 > b.u95; });
     for (const Share& share : shares) margin_.steps.push_back(share.text);
-    margin_.steps.push_back("root of the sum of squares: \u00b1 " + balance::ledger_kj(row.in_equation->u95()) + " kJ");
+    margin_.steps.push_back("root of the sum of squares: \u00b1 " +
+                            balance::ledger_kj(row.in_equation->u95()) + " kJ");
     add_section(margin_, "How \u00b1 adds up",
-                {"Errors of one bond value are the same error wherever that bond stands: in the totals, what is broken and "
+                {"Errors of one bond value are the same error wherever that bond stands: in the totals, what "
+                 "is broken and "
                  "formed again cancels."},
                 NoteKind::Info);
   }
@@ -129,8 +134,9 @@ class LedgerMargin {
     if (line.priced()) {
       if (line.second) margin_.steps.push_back("sum " + balance::ledger_kj(line.per_mole));
       if (entry.coefficient() != 1) {
-        margin_.steps.push_back(coefficient_text(entry.term.coefficient) + " \u00d7 " + balance::ledger_kj(line.per_mole) +
-                                " = " + balance::ledger_kj(line.per_mole * entry.coefficient()) + " kJ");
+        margin_.steps.push_back(coefficient_text(entry.term.coefficient) + " \u00d7 " +
+                                balance::ledger_kj(line.per_mole) + " = " +
+                                balance::ledger_kj(line.per_mole * entry.coefficient()) + " kJ");
       }
     }
     if (!line.remark.empty()) add_section(margin_, "About this bond", {line.remark}, NoteKind::Info);
@@ -142,8 +148,9 @@ class LedgerMargin {
     for (std::size_t i = 0; i < ledger_.rows.size(); ++i) {
       if (species(i).product != formed) continue;
       const balance::LedgerRow& row = ledger_.rows[i];
-      margin_.steps.push_back(balance::display_species(species(i)) + "  " +
-                              (row.in_equation ? balance::ledger_kj(row.in_equation->value()) : std::string("no value")));
+      margin_.steps.push_back(
+          balance::display_species(species(i)) + "  " +
+          (row.in_equation ? balance::ledger_kj(row.in_equation->value()) : std::string("no value")));
     }
     const std::optional<Quantity>& sum = formed ? ledger_.formed : ledger_.broken;
     if (sum) margin_.steps.push_back("sum " + balance::ledger_kj(sum->value()) + " kJ");
@@ -158,10 +165,15 @@ class LedgerMargin {
     std::string by;
     const balance::ReactionSpecies& entry = ledger_.reaction->species[basis.species];
     switch (basis.kind) {
-      case balance::Basis::Kind::AsWritten: break;
-      case balance::Basis::Kind::MoleOf: by = coefficient_text(entry.term.coefficient) + " mol"; break;
+      case balance::Basis::Kind::AsWritten:
+        break;
+      case balance::Basis::Kind::MoleOf:
+        by = coefficient_text(entry.term.coefficient) + " mol";
+        break;
       case balance::Basis::Kind::KilogramOf:
-      case balance::Basis::Kind::KilogramOfReactants: by = machine_number(1 / basis.factor, 6) + " kg"; break;
+      case balance::Basis::Kind::KilogramOfReactants:
+        by = machine_number(1 / basis.factor, 6) + " kg";
+        break;
     }
     margin_.steps.push_back(basis.text + ": " + balance::ledger_kj(as_written.value()) + " / " + by + " = " +
                             balance::kj_with_u95(scaled, basis.unit));
@@ -198,7 +210,8 @@ class LedgerMargin {
     margin_.steps = correction.working;
     if (correction.value) add_basis_step(*correction.value);
     add_source(margin_, correction.source);
-    if (!correction.value) add_section(margin_, "Why there is no value", {correction.why_not}, NoteKind::Caution);
+    if (!correction.value)
+      add_section(margin_, "Why there is no value", {correction.why_not}, NoteKind::Caution);
     return true;
   }
 
@@ -206,7 +219,8 @@ class LedgerMargin {
     margin_.subject = "phases as written, 25 \u00b0C, by bonds";
     if (const balance::Route* route = balance::find_route(ledger_, balance::kAverageRoute)) {
       margin_.steps = route->working;
-      if (!route->why_not.empty()) add_section(margin_, "Why there is no value", {route->why_not}, NoteKind::Caution);
+      if (!route->why_not.empty())
+        add_section(margin_, "Why there is no value", {route->why_not}, NoteKind::Caution);
     }
     if (ledger_.as_written) add_basis_step(*ledger_.as_written);
     add_source(margin_, ledger_.set->title());
@@ -217,10 +231,12 @@ class LedgerMargin {
 
   bool explain_taken(const std::string& which) {
     const balance::Route* route = balance::find_route(ledger_, ledger_.taken);
-    margin_.subject = which == "taken" ? "the figure this sheet goes on with" : "the figure taken, " + mass_words(which);
+    margin_.subject =
+        which == "taken" ? "the figure this sheet goes on with" : "the figure taken, " + mass_words(which);
     if (route == nullptr) {
       std::vector<std::string> reasons;
-      for (const balance::Route& other : ledger_.routes) reasons.push_back(route_words(other.name) + ": " + other.why_not);
+      for (const balance::Route& other : ledger_.routes)
+        reasons.push_back(route_words(other.name) + ": " + other.why_not);
       add_section(margin_, "Why there is no value", reasons, NoteKind::Caution);
       return true;
     }
@@ -230,8 +246,9 @@ class LedgerMargin {
     } else {
       add_mass_step(which, *route->as_written);
     }
-    add_source(margin_, "by " + route_words(route->name) +
-                            (sheet_.pinned_route.empty() ? ", the best route there is" : ", pinned on this sheet"));
+    add_source(margin_,
+               "by " + route_words(route->name) +
+                   (sheet_.pinned_route.empty() ? ", the best route there is" : ", pinned on this sheet"));
     add_why_different();
     return true;
   }
@@ -253,20 +270,22 @@ class LedgerMargin {
       const balance::ReactionSpecies& entry = ledger_.reaction->species[i];
       if (which == "per_kg" ? i != mass_species() : entry.product) continue;
       const double part = entry.species->molar_mass * entry.coefficient();
-      margin_.steps.push_back(balance::display_species(entry) + "  " + coefficient_text(entry.term.coefficient) +
-                              " \u00d7 " + machine_number(1000 * entry.species->molar_mass, 6) + " g/mol = " +
-                              machine_number(part, 6) + " kg");
+      margin_.steps.push_back(balance::display_species(entry) + "  " +
+                              coefficient_text(entry.term.coefficient) + " \u00d7 " +
+                              machine_number(1000 * entry.species->molar_mass, 6) +
+                              " g/mol = " + machine_number(part, 6) + " kg");
       mass += part;
     }
     if (mass <= 0) return;
-    margin_.steps.push_back(balance::ledger_kj(figure.value()) + " / " + machine_number(mass, 6) + " kg = " +
-                            balance::kj_with_u95(figure.scaled(1 / mass), "kJ/kg"));
+    margin_.steps.push_back(balance::ledger_kj(figure.value()) + " / " + machine_number(mass, 6) +
+                            " kg = " + balance::kj_with_u95(figure.scaled(1 / mass), "kJ/kg"));
   }
 
   bool explain_route(const std::string& name, bool gas) {
     const balance::Route* route = balance::find_route(ledger_, name);
     if (route == nullptr) return false;
-    margin_.subject = route_words(name) + (gas ? ", all as gas, 25 \u00b0C" : ", phases as written, 25 \u00b0C");
+    margin_.subject =
+        route_words(name) + (gas ? ", all as gas, 25 \u00b0C" : ", phases as written, 25 \u00b0C");
     margin_.steps = route->working;
     const std::optional<Quantity>& figure = gas ? route->gas_298 : route->as_written;
     if (figure) add_basis_step(*figure);
@@ -282,9 +301,9 @@ class LedgerMargin {
     std::vector<std::string> texts;
     if (average != nullptr && formation != nullptr && average->gas_298 && formation->gas_298) {
       const double apart = average->gas_298->value() - formation->gas_298->value();
-      texts.push_back("Average bonds give " + balance::kj_with_u95(*average->gas_298, "kJ") + ", formation enthalpies " +
-                      balance::kj_with_u95(*formation->gas_298, "kJ") + " for the gas: " +
-                      balance::ledger_kj(std::fabs(apart)) + " kJ apart.");
+      texts.push_back("Average bonds give " + balance::kj_with_u95(*average->gas_298, "kJ") +
+                      ", formation enthalpies " + balance::kj_with_u95(*formation->gas_298, "kJ") +
+                      " for the gas: " + balance::ledger_kj(std::fabs(apart)) + " kJ apart.");
       add_gaps(texts);
     }
     add_section(margin_, "Why the routes differ", texts, NoteKind::Disagreement);
@@ -308,7 +327,8 @@ class LedgerMargin {
     constexpr std::size_t kShown = 3;
     for (std::size_t i = 0; i < gaps.size() && i < kShown; ++i) {
       if (std::fabs(gaps[i].joule) < 1000) break;  // below a kJ there is nothing to explain
-      std::string text = balance::display_species(species(gaps[i].row)) + ": " + signed_kj(gaps[i].joule, 0) + " kJ";
+      std::string text =
+          balance::display_species(species(gaps[i].row)) + ": " + signed_kj(gaps[i].joule, 0) + " kJ";
       for (const std::string& strain : ledger_.rows[gaps[i].row].strains) text += "; " + strain;
       texts.push_back(text + ".");
     }
@@ -328,7 +348,8 @@ void explain_balance(const balance::Reaction& reaction, Margin& margin) {
   for (const molecule::ElementBalance& element : reaction.balance.elements) {
     const std::string name = element.key == -1 ? "charge" : std::string(molecule::symbol(element.key % 1000));
     margin.steps.push_back(name + "  " + machine_number(element.left, 6) +
-                           (element.left == element.right ? " = " : " \u2260 ") + machine_number(element.right, 6));
+                           (element.left == element.right ? " = " : " \u2260 ") +
+                           machine_number(element.right, 6));
   }
   if (!reaction.why_unbalanced.empty()) {
     add_section(margin, "What is missing", {reaction.why_unbalanced}, NoteKind::Error);
@@ -337,7 +358,8 @@ void explain_balance(const balance::Reaction& reaction, Margin& margin) {
 
 }  // namespace
 
-Result<Margin> make_margin(const document::Worksheet& sheet, const document::Results& results, const Cell& cell) {
+Result<Margin> make_margin(const document::Worksheet& sheet, const document::Results& results,
+                           const Cell& cell) {
   Margin margin;
   margin.cell = cell.id;
   margin.value = cell.text;

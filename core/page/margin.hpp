@@ -1,4 +1,5 @@
-// The margin of the sheet: value, working with the figures put in, sources, why routes differ, cautions, for one cell.
+// The margin of the sheet: value, working with the figures put in, sources, why routes differ, cautions, for
+// one cell.
 #pragma once
 
 #include <string_view>
@@ -10,6 +11,7 @@
 namespace heatledger::page {
 
 /// @errors edit.no_such_cell
-Result<Margin> make_margin(const document::Worksheet& sheet, const document::Results& results, const Cell& cell);
+Result<Margin> make_margin(const document::Worksheet& sheet, const document::Results& results,
+                           const Cell& cell);
 
 }  // namespace heatledger::page

@@ -1,5 +1,6 @@
-// What a face shows: blocks of cells and drawings with every text final. A face draws these and sends back edits;
-// it adds no rows, rounds no numbers and knows no chemistry. Ids of cells, edits and commands: page/README.md.
+// What a face shows: blocks of cells and drawings with every text final. A face draws these and sends back
+// edits; it adds no rows, rounds no numbers and knows no chemistry. Ids of cells, edits and commands:
+// page/README.md.
 #pragma once
 
 #include <cstdint>
@@ -19,24 +20,24 @@ enum class Origin : std::uint8_t { None, Typed, Published, Estimated, Derived };
 enum class Align : std::uint8_t { Left, Right, Centre };
 
 struct Cell {
-  std::string id;         ///< stable: "r1.row.0.broken"; empty for cells that nobody can point at
-  std::string text;       ///< final text, UTF-8; figures carry true minus and thin spaces
-  std::string edit_text;  ///< what stands in the editor when editing starts (raw as typed)
-  std::string hint;       ///< placeholder of an empty editable cell, or a tip
+  std::string id;                    ///< stable: "r1.row.0.broken"; empty for cells that nobody can point at
+  std::string text;                  ///< final text, UTF-8; figures carry true minus and thin spaces
+  std::string edit_text;             ///< what stands in the editor when editing starts (raw as typed)
+  std::string hint;                  ///< placeholder of an empty editable cell, or a tip
   std::vector<std::string> choices;  ///< of a Choice: the texts; `text` is the one chosen
   CellKind kind = CellKind::Label;
   Tone tone = Tone::Plain;
   Origin origin = Origin::None;
   bool editable = false;
   bool has_working = false;
-  int span = 1;           ///< columns taken
+  int span = 1;  ///< columns taken
   bool operator==(const Cell&) const = default;
 };
 
 struct Column {
   std::string id, heading;
   Align align = Align::Left;
-  double width = 0;        ///< share of the table width; 0: as wide as its content
+  double width = 0;          ///< share of the table width; 0: as wide as its content
   bool spine_after = false;  ///< the rule between broken and formed stands to the right of this column
   bool operator==(const Column&) const = default;
 };
@@ -46,10 +47,10 @@ enum class RowRole : std::uint8_t { Body, Detail, Subtotal, Result, Correction }
 struct Row {
   std::string id;
   RowRole role = RowRole::Body;
-  std::string fold_id;    ///< set on a row that unfolds; the edit {fold_id, "open"|"closed"} changes it
+  std::string fold_id;  ///< set on a row that unfolds; the edit {fold_id, "open"|"closed"} changes it
   bool open = false;
   bool screen_only = false;  ///< buttons and choices of view: a printed sheet leaves the row out
-  std::vector<Cell> cells;  ///< spans add up to the number of columns
+  std::vector<Cell> cells;   ///< spans add up to the number of columns
   bool operator==(const Row&) const = default;
 };
 
@@ -127,11 +128,11 @@ struct Command {
 };
 
 struct Page {
-  std::string title;         ///< for the window's title bar
+  std::string title;  ///< for the window's title bar
   std::vector<Block> blocks;
   std::vector<Command> commands;
-  /// Counts up with every change; `changed[i]` is the revision that last changed blocks[i], so that a face draws again
-  /// only what an edit reached.
+  /// Counts up with every change; `changed[i]` is the revision that last changed blocks[i], so that a face
+  /// draws again only what an edit reached.
   std::uint64_t revision = 0;
   std::vector<std::uint64_t> changed;
 };
@@ -142,8 +143,11 @@ struct Margin {
   std::string value, subject;      ///< "808 kJ/mol", "nitro group, nitrobenzene"
   std::vector<std::string> steps;  ///< numbered lines with the figures put in
   std::vector<std::string> sources;
-  struct Section { std::string heading; std::vector<Note> notes; };
-  std::vector<Section> sections;   ///< "Why the routes differ", "Cautions", …
+  struct Section {
+    std::string heading;
+    std::vector<Note> notes;
+  };
+  std::vector<Section> sections;  ///< "Why the routes differ", "Cautions", …
 };
 
 }  // namespace heatledger::page

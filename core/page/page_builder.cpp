@@ -40,7 +40,8 @@ std::vector<Block> add_reaction_blocks() {
 
 }  // namespace
 
-/// Takes over an unchanged section's blocks, or builds them and keeps the revision of those that came out equal.
+/// Takes over an unchanged section's blocks, or builds them and keeps the revision of those that came out
+/// equal.
 template <typename Build>
 void PageBuilder::add_section(const std::string& name, std::vector<std::shared_ptr<const void>> inputs,
                               std::string state, Build make) {
@@ -90,20 +91,24 @@ const Page& PageBuilder::build(PageInput input) {
   add_section("title", {sheet.header.handle()}, "", [&] { return title_blocks(*sheet.header); });
   std::string opening = errors_state(*input.not_understood);
   for (const std::string& figure : *input.changed_figures) opening += figure + "\n";
-  add_section("opening", {}, opening, [&] { return opening_blocks(*input.not_understood, *input.changed_figures); });
+  add_section("opening", {}, opening,
+              [&] { return opening_blocks(*input.not_understood, *input.changed_figures); });
   for (std::size_t i = 0; i < sheet.reactions.size(); ++i) {
     const document::ReactionSheet& reaction = *sheet.reactions[i];
-    add_section(reaction.id, {sheet.reactions[i].handle(), input.results->reactions[i]},
-                reaction_state(input, reaction.id, i), [&] {
-                  const ReactionView view{reaction,           *input.results->reactions[i], i + 1, sheet.reactions.size(),
-                                          *input.open_rows, *input.rejected};
-                  return reaction_blocks(view);
-                });
+    add_section(
+        reaction.id, {sheet.reactions[i].handle(), input.results->reactions[i]},
+        reaction_state(input, reaction.id, i), [&] {
+          const ReactionView view{
+              reaction,       *input.results->reactions[i], i + 1, sheet.reactions.size(), *input.open_rows,
+              *input.rejected};
+          return reaction_blocks(view);
+        });
   }
   add_section("+add", {}, "", add_reaction_blocks);
   add_section("+bonds", {sheet.typed_bonds.handle()}, errors_state(input.results->errors),
               [&] { return typed_bond_blocks(*sheet.typed_bonds, input.results->errors); });
-  add_section("+assumptions", {sheet.assumptions.handle()}, "", [&] { return assumption_blocks(*sheet.assumptions); });
+  add_section("+assumptions", {sheet.assumptions.handle()}, "",
+              [&] { return assumption_blocks(*sheet.assumptions); });
   add_section("+notes", {sheet.notes.handle()}, "", [&] { return note_blocks(*sheet.notes); });
   add_section("+conventions", {}, "", convention_blocks);
 
@@ -112,7 +117,8 @@ const Page& PageBuilder::build(PageInput input) {
   sections_ = std::move(next_sections_);
   ++page_.revision;
   bool same_order = old_order.size() == page_.blocks.size();
-  for (std::size_t i = 0; same_order && i < old_order.size(); ++i) same_order = old_order[i] == block_id(page_.blocks[i]);
+  for (std::size_t i = 0; same_order && i < old_order.size(); ++i)
+    same_order = old_order[i] == block_id(page_.blocks[i]);
   if (!same_order) order_changed_ = page_.revision;
   page_.title = sheet.header->title.empty() ? "Untitled sheet" : sheet.header->title;
   page_.commands = std::move(input.commands);

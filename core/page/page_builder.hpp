@@ -1,5 +1,5 @@
-// Puts the page together and keeps it: a section is built anew only when what it shows changed, and a block counts as
-// changed only when its content did.
+// Puts the page together and keeps it: a section is built anew only when what it shows changed, and a block
+// counts as changed only when its content did.
 #pragma once
 
 #include <cstdint>
@@ -19,8 +19,8 @@ struct PageInput {
   const document::Results* results = nullptr;
   const std::set<std::string>* open_rows = nullptr;
   const std::map<std::string, RejectedText>* rejected = nullptr;
-  const std::vector<Error>* not_understood = nullptr;           ///< on opening
-  const std::vector<std::string>* changed_figures = nullptr;    ///< since the file was saved
+  const std::vector<Error>* not_understood = nullptr;         ///< on opening
+  const std::vector<std::string>* changed_figures = nullptr;  ///< since the file was saved
   std::vector<Command> commands;
 };
 
@@ -35,13 +35,13 @@ class PageBuilder {
   /// What a section was built from; equal keys give equal blocks.
   struct Section {
     std::vector<std::shared_ptr<const void>> inputs;
-    std::string state;  ///< place, open rows, rejected texts
+    std::string state;                  ///< place, open rows, rejected texts
     std::size_t first = 0, blocks = 0;  ///< in page_.blocks
   };
 
   template <typename Build>
-  void add_section(const std::string& name, std::vector<std::shared_ptr<const void>> inputs, std::string state,
-                   Build make);
+  void add_section(const std::string& name, std::vector<std::shared_ptr<const void>> inputs,
+                   std::string state, Build make);
 
   Page page_;
   std::uint64_t order_changed_ = 0;

@@ -1,4 +1,5 @@
-// The part of the JSON encoding that only requests use: what changed since a revision. Whole pages: writers.hpp.
+// The part of the JSON encoding that only requests use: what changed since a revision. Whole pages:
+// writers.hpp.
 #pragma once
 
 #include <cstdint>

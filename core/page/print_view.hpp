@@ -1,4 +1,5 @@
-// The page as it prints: without buttons, empty lines to type into, choices of view and headings over nothing.
+// The page as it prints: without buttons, empty lines to type into, choices of view and headings over
+// nothing.
 #pragma once
 
 #include "core/page/page.hpp"

@@ -20,7 +20,9 @@ std::string element_words(int key) {
   return std::to_string(mass) + words;
 }
 
-std::string amount(double value) { return machine_number(value, 6); }
+std::string amount(double value) {
+  return machine_number(value, 6);
+}
 
 /// "balanced: C 6, H 11, N 1, O 2", or what each side has where they differ.
 std::string balance_words(const balance::Reaction& reaction) {
@@ -60,8 +62,9 @@ Table reaction_table(const ReactionView& view) {
     table.rows.push_back(std::move(title));
   }
   Row row = row_of(id + ".reaction.equation", RowRole::Result);
-  Cell equation = typed_cell(id + ".equation", view.sheet.equation, "type a reaction: nitrobenzene(l) + 3 H2 -> aniline(l) + 2 H2O(l)",
-                             CellKind::Equation);
+  Cell equation =
+      typed_cell(id + ".equation", view.sheet.equation,
+                 "type a reaction: nitrobenzene(l) + 3 H2 -> aniline(l) + 2 H2O(l)", CellKind::Equation);
   const std::shared_ptr<const balance::Reaction>& reaction = view.result.reaction;
   if (reaction != nullptr) {
     equation.text = balance::display_equation(*reaction);
@@ -82,7 +85,8 @@ Table reaction_table(const ReactionView& view) {
       const std::string cell = id + ".proposal." + std::to_string(i);
       Row proposal = row_of(cell + ".row");
       proposal.screen_only = true;
-      proposal.cells = {button_cell(cell, "Take " + reaction->proposals[i], "balances the equation"), label_cell("")};
+      proposal.cells = {button_cell(cell, "Take " + reaction->proposals[i], "balances the equation"),
+                        label_cell("")};
       table.rows.push_back(std::move(proposal));
     }
   }
@@ -93,20 +97,23 @@ Table reaction_table(const ReactionView& view) {
 void add_equation_notes(const ReactionView& view, std::vector<Block>& blocks) {
   const std::string& id = view.sheet.id;
   if (view.result.error && view.result.error->code != "ledger.not_balanced") {
-    blocks.push_back(note_block(id + ".error", NoteKind::Error, error_words(*view.result.error), {id + ".equation"}));
+    blocks.push_back(
+        note_block(id + ".error", NoteKind::Error, error_words(*view.result.error), {id + ".equation"}));
   }
   if (view.result.reaction != nullptr) {
     const balance::Reaction& reaction = *view.result.reaction;
     if (!reaction.balance.balanced && reaction.checkable) {
       std::string text = reaction.why_unbalanced;
       if (text.empty() && view.result.error) text = error_words(*view.result.error);
-      if (!text.empty()) blocks.push_back(note_block(id + ".unbalanced", NoteKind::Error, text, {id + ".equation"}));
+      if (!text.empty())
+        blocks.push_back(note_block(id + ".unbalanced", NoteKind::Error, text, {id + ".equation"}));
     }
     // A ledger lists these among its own notes.
     for (std::size_t i = 0; view.result.ledger == nullptr && i < reaction.species.size(); ++i) {
       const std::string& note = reaction.species[i].species->note;
       if (!note.empty()) {
-        blocks.push_back(note_block(id + ".species." + std::to_string(i), NoteKind::Info, note, {id + ".equation"}));
+        blocks.push_back(
+            note_block(id + ".species." + std::to_string(i), NoteKind::Info, note, {id + ".equation"}));
       }
     }
   }
@@ -117,9 +124,9 @@ void add_equation_notes(const ReactionView& view, std::vector<Block>& blocks) {
   }
   for (auto entry = view.rejected.lower_bound(id + "."); entry != view.rejected.end(); ++entry) {
     if (entry->first.compare(0, id.size() + 1, id + ".") != 0) break;
-    blocks.push_back(note_block(entry->first + ".rejected", NoteKind::Error,
-                                "\"" + entry->second.text + "\" was not taken: " + error_words(entry->second.error),
-                                {entry->first}));
+    blocks.push_back(note_block(
+        entry->first + ".rejected", NoteKind::Error,
+        "\"" + entry->second.text + "\" was not taken: " + error_words(entry->second.error), {entry->first}));
   }
 }
 
@@ -147,7 +154,8 @@ Cell bond_set_cell(const ReactionView& view) {
   std::vector<std::string> choices;
   for (const auto& title : bond_set_titles()) {
     choices.push_back(title.second);
-    if (title.first == view.sheet.bond_set || (view.sheet.bond_set.empty() && choices.size() == 1)) shown = title.second;
+    if (title.first == view.sheet.bond_set || (view.sheet.bond_set.empty() && choices.size() == 1))
+      shown = title.second;
   }
   return choice_cell(view.sheet.id + ".bond_set", shown, shown, std::move(choices));
 }
@@ -181,8 +189,8 @@ Table options_table(const ReactionView& view) {
   table.look = TableLook::Form;
   table.columns = {column("name", ""), column("value", ""), column("name_2", ""), column("value_2", "")};
   Row first = row_of(id + ".options.1");
-  first.cells = {label_cell("Bond values", Tone::Quiet), bond_set_cell(view), label_cell("Figures", Tone::Quiet),
-                 basis_cell(view)};
+  first.cells = {label_cell("Bond values", Tone::Quiet), bond_set_cell(view),
+                 label_cell("Figures", Tone::Quiet), basis_cell(view)};
   Row second = row_of(id + ".options.2");
   second.cells = {label_cell("Figure taken", Tone::Quiet), route_cell(view), label_cell("", Tone::Quiet, 2)};
   Row third = row_of(id + ".options.3");
@@ -214,9 +222,10 @@ Table move_table(const ReactionView& view) {
 void add_review_notes(const ReactionView& view, const balance::Review& review, std::vector<Block>& blocks) {
   const std::string id = view.sheet.id + ".review";
   if (view.sheet.checker.empty()) {
-    blocks.push_back(note_block(id, NoteKind::Info,
-                                "Checker's column: type the figures that stand on the sheet under review; a difference is "
-                                "traced to the slip that makes it."));
+    blocks.push_back(
+        note_block(id, NoteKind::Info,
+                   "Checker's column: type the figures that stand on the sheet under review; a difference is "
+                   "traced to the slip that makes it."));
     return;
   }
   blocks.push_back(note_block(id, review.agrees ? NoteKind::Info : NoteKind::Disagreement, review.summary));
@@ -229,7 +238,8 @@ void add_review_notes(const ReactionView& view, const balance::Review& review, s
 void add_ledger_blocks(const ReactionView& view, std::vector<Block>& blocks) {
   const std::string& id = view.sheet.id;
   const balance::Ledger& ledger = *view.result.ledger;
-  blocks.push_back(heading_block(id + ".ledger.heading", "Bond ledger", "gas, 25 \u00b0C \u00b7 " + ledger.basis.text));
+  blocks.push_back(
+      heading_block(id + ".ledger.heading", "Bond ledger", "gas, 25 \u00b0C \u00b7 " + ledger.basis.text));
   blocks.push_back(options_table(view));
   if (view.sheet.show_checker) {
     const balance::Review review = balance::review_sheet(ledger, view.sheet.checker);
@@ -243,9 +253,10 @@ void add_ledger_blocks(const ReactionView& view, std::vector<Block>& blocks) {
   }
   blocks.push_back(heading_block(id + ".result.heading", "Result"));
   blocks.push_back(result_table(view));
-  blocks.push_back(note_block(id + ".covers", NoteKind::Info,
-                              "\u00b1 covers the data of the reaction written above. Side reactions, decomposition and the rate "
-                              "are not in it."));
+  blocks.push_back(note_block(
+      id + ".covers", NoteKind::Info,
+      "\u00b1 covers the data of the reaction written above. Side reactions, decomposition and the rate "
+      "are not in it."));
   blocks.push_back(heading_block(id + ".routes.heading", "What each route says"));
   blocks.push_back(routes_table(view));
   Drawing routes = routes_drawing(id + ".routes.drawing", ledger);
@@ -282,7 +293,8 @@ std::string row_id(const document::ReactionSheet& sheet, std::size_t row) {
 std::vector<Block> reaction_blocks(const ReactionView& view) {
   const std::string& id = view.sheet.id;
   std::vector<Block> blocks;
-  blocks.push_back(heading_block(id + ".heading", view.count > 1 ? "Reaction " + std::to_string(view.number) : "Reaction"));
+  blocks.push_back(heading_block(id + ".heading",
+                                 view.count > 1 ? "Reaction " + std::to_string(view.number) : "Reaction"));
   blocks.push_back(reaction_table(view));
   add_equation_notes(view, blocks);
   if (view.result.ledger != nullptr) add_ledger_blocks(view, blocks);

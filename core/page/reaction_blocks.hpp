@@ -1,5 +1,5 @@
-// The blocks of one reaction: equation, ledger, result, routes, profile, cautions. Built anew only when the reaction
-// or its result changed; the parts stand in ledger_table.cpp, result_blocks.cpp and drawings.cpp.
+// The blocks of one reaction: equation, ledger, result, routes, profile, cautions. Built anew only when the
+// reaction or its result changed; the parts stand in ledger_table.cpp, result_blocks.cpp and drawings.cpp.
 #pragma once
 
 #include <map>
@@ -17,14 +17,16 @@ namespace heatledger::page {
 struct RejectedText {
   std::string text;
   Error error;
-  friend bool operator==(const RejectedText& a, const RejectedText& b) { return a.text == b.text && a.error == b.error; }
+  friend bool operator==(const RejectedText& a, const RejectedText& b) {
+    return a.text == b.text && a.error == b.error;
+  }
 };
 
 struct ReactionView {
   const document::ReactionSheet& sheet;
   const document::ReactionResult& result;
-  std::size_t number = 1, count = 1;                  ///< place among the reactions of the sheet, from 1
-  const std::set<std::string>& open_rows;             ///< fold ids that are open
+  std::size_t number = 1, count = 1;                    ///< place among the reactions of the sheet, from 1
+  const std::set<std::string>& open_rows;               ///< fold ids that are open
   const std::map<std::string, RejectedText>& rejected;  ///< by cell id
 };
 

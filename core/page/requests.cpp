@@ -11,7 +11,8 @@
 namespace heatledger::page {
 namespace {
 
-/// Faces open a handful of sheets; a caller that opens more without closing any is at fault and must not fill memory.
+/// Faces open a handful of sheets; a caller that opens more without closing any is at fault and must not fill
+/// memory.
 constexpr std::size_t kMostSheets = 64;
 
 struct Sheets {
@@ -24,7 +25,9 @@ Sheets& sheets() {
   return all;
 }
 
-std::string ok(std::string_view value) { return "{\"ok\":true,\"value\":" + std::string(value) + "}"; }
+std::string ok(std::string_view value) {
+  return "{\"ok\":true,\"value\":" + std::string(value) + "}";
+}
 
 std::string ok_text(std::string_view text) {
   std::string value;
@@ -45,7 +48,8 @@ std::string failed(const Error& error) {
 }
 
 Error not_understood(const std::string& message, const std::string& where) {
-  return {"request.not_understood", message, where, "Requests and their members stand in core/page/requests.hpp."};
+  return {"request.not_understood", message, where,
+          "Requests and their members stand in core/page/requests.hpp."};
 }
 
 /// A whole number from 0 to 2^53 as JSON spells it.
@@ -65,12 +69,14 @@ class Request {
 
   std::string answer() {
     const file::Json* verb = json_.find("do");
-    if (verb == nullptr || !verb->is_string()) return failed(not_understood("A request names what to do.", "do"));
+    if (verb == nullptr || !verb->is_string())
+      return failed(not_understood("A request names what to do.", "do"));
     const std::string& name = verb->text();
     if (name == "new") return open_new();
     if (name == "open") return open_file();
     const std::optional<std::uint64_t> number = whole_number(json_.find("sheet"));
-    const auto found = number && *number < 0x7fffffff ? sheets().open.find(static_cast<int>(*number)) : sheets().open.end();
+    const auto found =
+        number && *number < 0x7fffffff ? sheets().open.find(static_cast<int>(*number)) : sheets().open.end();
     if (found == sheets().open.end()) {
       return failed({"request.no_such_sheet", "There is no open sheet of that number.", "sheet",
                      "\"new\" and \"open\" answer the number of a sheet."});
@@ -160,10 +166,12 @@ class Request {
     if (!required("name", name)) return failed(problem_);
     std::map<std::string, std::string> arguments;
     if (const file::Json* list = json_.find("arguments")) {
-      if (!list->is_object()) return failed(not_understood("\"arguments\" should be an object of texts.", "arguments"));
+      if (!list->is_object())
+        return failed(not_understood("\"arguments\" should be an object of texts.", "arguments"));
       for (const file::Json::Member& member : list->members()) {
         if (!member.second.is_string()) {
-          return failed(not_understood("An argument should be a text.", "arguments." + member.first.substr(0, 80)));
+          return failed(
+              not_understood("An argument should be a text.", "arguments." + member.first.substr(0, 80)));
         }
         arguments[member.first] = member.second.text();
       }

@@ -26,9 +26,10 @@ namespace heatledger::page {
 ///   svg       sheet, drawing                      SVG text
 ///   close     sheet                               true
 ///
-/// Page: {"title","revision","blocks":[…],"commands":[…]}; members that hold their default are left out. With "since":
-/// {"title","since","revision","blocks":[changed ones],"commands":[…]} and, when blocks came, went or moved, "order":
-/// the ids of all blocks in order; a block that is not in "order" is gone.
+/// Page: {"title","revision","blocks":[…],"commands":[…]}; members that hold their default are left out. With
+/// "since":
+/// {"title","since","revision","blocks":[changed ones],"commands":[…]} and, when blocks came, went or moved,
+/// "order": the ids of all blocks in order; a block that is not in "order" is gone.
 /// @errors request.not_understood, request.no_such_sheet, request.too_many_sheets and those of session.hpp
 std::string handle_request(std::string_view request);
 

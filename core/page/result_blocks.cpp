@@ -1,4 +1,5 @@
-// The figures that go on from a reaction: the one taken, what it is per mole and per kilogram, and every route.
+// The figures that go on from a reaction: the one taken, what it is per mole and per kilogram, and every
+// route.
 #include "core/base/number_text.hpp"
 #include "core/page/cells.hpp"
 #include "core/page/figures.hpp"
@@ -12,7 +13,8 @@ class ResultTable {
   explicit ResultTable(const ReactionView& view) : view_(view), ledger_(*view.result.ledger) {
     table_.id = view.sheet.id + ".result";
     table_.look = TableLook::Boxes;
-    table_.columns = {column("what", ""), column("figure", "", Align::Right), column("unit", ""), column("u95", "")};
+    table_.columns = {column("what", ""), column("figure", "", Align::Right), column("unit", ""),
+                      column("u95", "")};
   }
 
   Table build() {
@@ -21,20 +23,24 @@ class ResultTable {
       Row row = row_of(view_.sheet.id + ".taken.row");
       Cell why = figure_cell(view_.sheet.id + ".taken", "no value", Tone::Caution);
       why.kind = CellKind::Label;
-      why.hint = route != nullptr ? route->why_not : "No route reaches a figure: see the reasons beside each route.";
-      row.cells = {label_cell("Taken here", Tone::Quiet), std::move(why), label_cell(""), label_cell(why.hint, Tone::Quiet)};
+      why.hint =
+          route != nullptr ? route->why_not : "No route reaches a figure: see the reasons beside each route.";
+      row.cells = {label_cell("Taken here", Tone::Quiet), std::move(why), label_cell(""),
+                   label_cell(why.hint, Tone::Quiet)};
       table_.rows.push_back(std::move(row));
       return std::move(table_);
     }
     const uncertainty::Quantity& figure = *route->as_written;
-    add("taken", "Taken here, by " + route_words(route->name) + (view_.sheet.pinned_route.empty() ? "" : ", pinned"),
+    add("taken",
+        "Taken here, by " + route_words(route->name) + (view_.sheet.pinned_route.empty() ? "" : ", pinned"),
         figure.scaled(ledger_.basis.factor), ledger_.basis.unit);
     add_per_kilogram(figure);
     return std::move(table_);
   }
 
  private:
-  void add(const std::string& name, const std::string& what, const uncertainty::Quantity& value, const std::string& unit) {
+  void add(const std::string& name, const std::string& what, const uncertainty::Quantity& value,
+           const std::string& unit) {
     const std::string id = view_.sheet.id + "." + name;
     const int decimals = decimals_kj(value.u95());
     Row row = row_of(id + ".row");
@@ -75,17 +81,21 @@ class ResultTable {
 
 }  // namespace
 
-Table result_table(const ReactionView& view) { return ResultTable(view).build(); }
+Table result_table(const ReactionView& view) {
+  return ResultTable(view).build();
+}
 
 Table routes_table(const ReactionView& view) {
   const balance::Ledger& ledger = *view.result.ledger;
   const std::string id = view.sheet.id + ".route";
   Table table;
   table.id = view.sheet.id + ".routes";
-  table.columns = {column("route", "Route"), column("gas", "gas, 25 \u00b0C, " + ledger.basis.unit, Align::Right),
+  table.columns = {column("route", "Route"),
+                   column("gas", "gas, 25 \u00b0C, " + ledger.basis.unit, Align::Right),
                    column("gas_u95", "\u00b1", Align::Right),
                    column("as_written", "as written, " + ledger.basis.unit, Align::Right),
-                   column("u95", "\u00b1", Align::Right), column("remark", "")};
+                   column("u95", "\u00b1", Align::Right),
+                   column("remark", "")};
   for (const balance::Route& route : ledger.routes) {
     const std::string row_name = id + "." + route.name;
     Row row = row_of(row_name);
@@ -99,8 +109,10 @@ Table routes_table(const ReactionView& view) {
       }
       const uncertainty::Quantity scaled = value->scaled(ledger.basis.factor);
       const int decimals = decimals_kj(scaled.u95());
-      row.cells.push_back(figure_cell(row_name + "." + name, kj(scaled.value(), decimals), taken ? Tone::Strong : Tone::Plain));
-      row.cells.push_back(figure_cell(row_name + "." + name + ".u95", half_width_kj(scaled.u95(), decimals), Tone::Quiet));
+      row.cells.push_back(figure_cell(row_name + "." + name, kj(scaled.value(), decimals),
+                                      taken ? Tone::Strong : Tone::Plain));
+      row.cells.push_back(
+          figure_cell(row_name + "." + name + ".u95", half_width_kj(scaled.u95(), decimals), Tone::Quiet));
     };
     add("gas_298", route.gas_298);
     add("as_written", route.as_written);

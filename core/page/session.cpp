@@ -12,20 +12,24 @@ namespace {
 
 using document::State;
 
-State make_state(document::Worksheet sheet) { return std::make_shared<const document::Worksheet>(std::move(sheet)); }
+State make_state(document::Worksheet sheet) {
+  return std::make_shared<const document::Worksheet>(std::move(sheet));
+}
 
 /// The part of a half-typed equation that names the last species, by what parts terms: where it begins.
 std::size_t last_name_start(std::string_view text) {
   std::size_t start = 0;
-  for (const std::string_view mark : {std::string_view("+ "), std::string_view("-> "), std::string_view("= "),
-                                      std::string_view("\u2192 "), std::string_view("=> "), std::string_view("\u21cc ")}) {
+  for (const std::string_view mark :
+       {std::string_view("+ "), std::string_view("-> "), std::string_view("= "), std::string_view("\u2192 "),
+        std::string_view("=> "), std::string_view("\u21cc ")}) {
     const std::size_t at = text.rfind(mark);
     if (at != std::string_view::npos) start = std::max(start, at + mark.size());
   }
   while (start < text.size() && text[start] == ' ') ++start;
   // A coefficient stands before a blank: "3 nitro" asks for names that begin with "nitro".
   std::size_t digits = start;
-  while (digits < text.size() && ((text[digits] >= '0' && text[digits] <= '9') || text[digits] == '.' || text[digits] == '/')) {
+  while (digits < text.size() &&
+         ((text[digits] >= '0' && text[digits] <= '9') || text[digits] == '.' || text[digits] == '/')) {
     ++digits;
   }
   if (digits > start && digits < text.size() && text[digits] == ' ') {
@@ -152,9 +156,7 @@ struct Session::State {
     return success();
   }
 
-  std::string file_text() const {
-    return file::write_worksheet(sheet(), results_to_save(sheet(), results));
-  }
+  std::string file_text() const { return file::write_worksheet(sheet(), results_to_save(sheet(), results)); }
 };
 
 Session::Session() : state_(std::make_unique<State>(document::empty_worksheet())) {}
@@ -181,9 +183,13 @@ std::string Session::save() {
   return state_->file_text();
 }
 
-std::string Session::file_text() const { return state_->file_text(); }
+std::string Session::file_text() const {
+  return state_->file_text();
+}
 
-bool Session::changed_since_save() const { return state_->saved != state_->history.current(); }
+bool Session::changed_since_save() const {
+  return state_->saved != state_->history.current();
+}
 
 Status Session::edit(std::string_view cell, std::string_view text) {
   if (state_->can_unfold(cell)) return state_->fold(std::string(cell), std::string(text));
@@ -207,7 +213,8 @@ Status Session::command(std::string_view name, const std::map<std::string, std::
   if (name == "undo" || name == "redo") {
     const bool moved = name == "undo" ? state.history.undo() : state.history.redo();
     if (!moved) {
-      return Error{"command.nothing_to_" + std::string(name), "There is nothing to " + std::string(name) + ".", "name", ""};
+      return Error{"command.nothing_to_" + std::string(name),
+                   "There is nothing to " + std::string(name) + ".", "name", ""};
     }
     state.rejected.clear();
     state.refresh();
@@ -227,14 +234,18 @@ Status Session::command(std::string_view name, const std::map<std::string, std::
   return success();
 }
 
-const Page& Session::page() { return state_->page(); }
-std::uint64_t Session::order_changed() const { return state_->builder.order_changed(); }
+const Page& Session::page() {
+  return state_->page();
+}
+std::uint64_t Session::order_changed() const {
+  return state_->builder.order_changed();
+}
 
 Result<Margin> Session::margin(std::string_view id) {
   const Cell* cell = state_->find_cell(id);
   if (cell == nullptr) {
-    return Error{"edit.no_such_cell", "The sheet has no cell \"" + std::string(id.substr(0, 80)) + "\".", "cell",
-                 "Ask for the page again: the sheet may have changed since."};
+    return Error{"edit.no_such_cell", "The sheet has no cell \"" + std::string(id.substr(0, 80)) + "\".",
+                 "cell", "Ask for the page again: the sheet may have changed since."};
   }
   return make_margin(state_->sheet(), state_->results, *cell);
 }
@@ -260,7 +271,8 @@ std::vector<Session::Suggestion> Session::suggest(std::string_view text, std::si
   const std::size_t start = last_name_start(text);
   const std::string_view name = text.substr(start);
   if (name.empty() || limit == 0) return list;
-  // Several synonyms of one compound are one suggestion: its name goes in, the synonym that matched stands beside it.
+  // Several synonyms of one compound are one suggestion: its name goes in, the synonym that matched stands
+  // beside it.
   std::set<const facts::Compound*> seen;
   for (const facts::Library::Completion& found : facts::Library::embedded().complete(name, 4 * limit)) {
     if (list.size() == limit) break;
@@ -269,7 +281,8 @@ std::vector<Session::Suggestion> Session::suggest(std::string_view text, std::si
     suggestion.name = std::string(found.compound->name);
     suggestion.insert = std::string(text.substr(0, start)) + suggestion.name;
     suggestion.remark = std::string(found.compound->formula);
-    if (found.matched != found.compound->name) suggestion.remark = std::string(found.matched) + ", " + suggestion.remark;
+    if (found.matched != found.compound->name)
+      suggestion.remark = std::string(found.matched) + ", " + suggestion.remark;
     list.push_back(std::move(suggestion));
   }
   return list;

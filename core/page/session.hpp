@@ -1,5 +1,5 @@
-// A sheet being worked on: history, results, folds. Every face talks to a sheet through this and nothing else;
-// requests.hpp gives the same as JSON text.
+// A sheet being worked on: history, results, folds. Every face talks to a sheet through this and nothing
+// else; requests.hpp gives the same as JSON text.
 #pragma once
 
 #include <map>
@@ -23,8 +23,8 @@ class Session {
   /// Replaces the sheet by the file's; on error the present sheet stays.
   /// @errors file.*
   Status open(std::string_view file_text);
-  std::string save();               ///< file text; marks the sheet as saved
-  std::string file_text() const;    ///< the same without the mark: for recovery copies
+  std::string save();             ///< file text; marks the sheet as saved
+  std::string file_text() const;  ///< the same without the mark: for recovery copies
   bool changed_since_save() const;
 
   /// The text typed into an editable cell. An unreadable text is kept and shown with its error, never lost.
@@ -44,8 +44,8 @@ class Session {
   /// Margins of every cell that has a working, in reading order: the appendix of a report.
   std::vector<Margin> workings();
 
-  /// Completions of the species name that a half-typed equation (or name) ends with: the whole text with the name
-  /// put in, the name alone for the list, and a quiet remark each.
+  /// Completions of the species name that a half-typed equation (or name) ends with: the whole text with the
+  /// name put in, the name alone for the list, and a quiet remark each.
   struct Suggestion {
     std::string insert, name, remark;
   };

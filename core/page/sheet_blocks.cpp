@@ -49,12 +49,15 @@ std::vector<Block> title_blocks(const document::Header& header) {
   form.look = TableLook::Form;
   form.columns = {column("name", ""), column("value", ""), column("name_2", ""), column("value_2", "")};
   form.rows = {
-      form_row("header.1", label_cell("Sheet", Tone::Quiet), typed_cell("header.sheet_number", header.sheet_number, "no."),
-               label_cell("Rev", Tone::Quiet), typed_cell("header.revision", header.revision, "\u2013")),
-      form_row("header.2", label_cell("Prepared", Tone::Quiet), typed_cell("header.prepared", header.prepared, "name"),
-               label_cell("on", Tone::Quiet), typed_cell("header.prepared_date", header.prepared_date, "date")),
-      form_row("header.3", label_cell("Checked", Tone::Quiet), typed_cell("header.checked", header.checked, "open"),
-               label_cell("on", Tone::Quiet), typed_cell("header.checked_date", header.checked_date, "date"))};
+      form_row("header.1", label_cell("Sheet", Tone::Quiet),
+               typed_cell("header.sheet_number", header.sheet_number, "no."), label_cell("Rev", Tone::Quiet),
+               typed_cell("header.revision", header.revision, "\u2013")),
+      form_row("header.2", label_cell("Prepared", Tone::Quiet),
+               typed_cell("header.prepared", header.prepared, "name"), label_cell("on", Tone::Quiet),
+               typed_cell("header.prepared_date", header.prepared_date, "date")),
+      form_row("header.3", label_cell("Checked", Tone::Quiet),
+               typed_cell("header.checked", header.checked, "open"), label_cell("on", Tone::Quiet),
+               typed_cell("header.checked_date", header.checked_date, "date"))};
   return {std::move(banner), std::move(form)};
 }
 
@@ -111,14 +114,18 @@ std::vector<Block> note_blocks(const document::Lines& notes) {
 std::vector<Block> convention_blocks() {
   static const std::vector<std::string> lines{
       "Heat of reaction below zero is exothermic. Bonds broken take heat, bonds formed give it.",
-      "Reference state 25 \u00b0C (298.15 K) and 100 kPa. The phase written is the phase meant; nothing is boiled or condensed "
+      "Reference state 25 \u00b0C (298.15 K) and 100 kPa. The phase written is the phase meant; nothing is "
+      "boiled or condensed "
       "unasked. (aq) without a strength is infinite dilution.",
-      "\u00b1 is the half width of a 95 % interval of the data of what is written. What stands on both sides cancels. Not "
+      "\u00b1 is the half width of a 95 % interval of the data of what is written. What stands on both sides "
+      "cancels. Not "
       "covered: reactions that are not listed, decomposition, mixing that is not listed, human error.",
       "An average bond enthalpy is a mean over many molecules; a single molecule can lie well away from it.",
       "A typed value without \u00b1 counts as exact.",
-      "Figures are added before they are rounded for print, so that a printed sum may differ by one in its last digit.",
-      "Figures for drafting: what can hurt someone is measured, and local codes and licensed practice govern."};
+      "Figures are added before they are rounded for print, so that a printed sum may differ by one in its "
+      "last digit.",
+      "Figures for drafting: what can hurt someone is measured, and local codes and licensed practice "
+      "govern."};
   Table table;
   table.id = "conventions";
   table.columns = {column("text", "")};

@@ -1,4 +1,5 @@
-// The blocks of a sheet that belong to no single reaction: title, typed bond values, assumptions, notes, conventions.
+// The blocks of a sheet that belong to no single reaction: title, typed bond values, assumptions, notes,
+// conventions.
 #pragma once
 
 #include <map>

@@ -11,7 +11,8 @@ using document::Worksheet;
 using Arguments = std::map<std::string, std::string>;
 
 Error bad_argument(const std::string& name, const std::string& message) {
-  return {"command.argument", message, "arguments." + name, "The arguments of every command stand in core/page/README.md."};
+  return {"command.argument", message, "arguments." + name,
+          "The arguments of every command stand in core/page/README.md."};
 }
 
 std::string argument(const Arguments& arguments, const char* name) {
@@ -24,7 +25,8 @@ Result<std::size_t> reaction_argument(const Worksheet& sheet, const Arguments& a
   const std::string id = argument(arguments, "reaction");
   if (id.empty() && sheet.reactions.size() == 1) return std::size_t{0};
   const std::size_t index = document::find_reaction(sheet, id);
-  if (index == sheet.reactions.size()) return bad_argument("reaction", "The sheet has no reaction \"" + id + "\".");
+  if (index == sheet.reactions.size())
+    return bad_argument("reaction", "The sheet has no reaction \"" + id + "\".");
   return index;
 }
 
@@ -53,7 +55,8 @@ Result<Edited> remove_reaction(const Worksheet& sheet, std::size_t index) {
 }
 
 Result<Edited> move_reaction(const Worksheet& sheet, std::size_t index, const std::string& direction) {
-  if (direction != "up" && direction != "down") return bad_argument("direction", "A reaction moves \"up\" or \"down\".");
+  if (direction != "up" && direction != "down")
+    return bad_argument("direction", "A reaction moves \"up\" or \"down\".");
   const bool up = direction == "up";
   Edited edited{sheet, "move reaction"};
   if (up ? index > 0 : index + 1 < sheet.reactions.size()) {
@@ -87,7 +90,8 @@ Result<Edited> add_bond(const Worksheet& sheet, const Arguments& arguments) {
 
 Result<Edited> remove_bond(const Worksheet& sheet, const Arguments& arguments) {
   const std::optional<std::size_t> index = id_index(argument(arguments, "bond"));
-  if (!index || *index >= sheet.typed_bonds->size()) return bad_argument("bond", "The sheet has no such bond value.");
+  if (!index || *index >= sheet.typed_bonds->size())
+    return bad_argument("bond", "The sheet has no such bond value.");
   Edited edited{sheet, "remove bond value"};
   document::TypedBonds& bonds = edited.sheet.typed_bonds.change();
   bonds.erase(bonds.begin() + static_cast<std::ptrdiff_t>(*index));
@@ -98,7 +102,8 @@ Result<Edited> show(const Worksheet& sheet, std::size_t index, bool document::Re
                     const std::string& state) {
   Edited edited{sheet, "change what is shown"};
   bool& shown = edited.sheet.reactions[index].change().*flag;
-  if (!state.empty() && state != "on" && state != "off") return bad_argument("state", "The state is \"on\" or \"off\".");
+  if (!state.empty() && state != "on" && state != "off")
+    return bad_argument("state", "The state is \"on\" or \"off\".");
   shown = state.empty() ? !shown : state == "on";
   return edited;
 }
@@ -113,8 +118,8 @@ Result<Edited> apply_command(const Worksheet& sheet, const document::Results& re
   const bool of_reaction = name == "remove_reaction" || name == "move_reaction" || name == "take_proposal" ||
                            name == "show_profile" || name == "show_checker";
   if (!of_reaction) {
-    return Error{"command.unknown", "There is no command \"" + std::string(name.substr(0, 80)) + "\".", "name",
-                 "The commands stand in core/page/README.md."};
+    return Error{"command.unknown", "There is no command \"" + std::string(name.substr(0, 80)) + "\".",
+                 "name", "The commands stand in core/page/README.md."};
   }
   const Result<std::size_t> index = reaction_argument(sheet, arguments);
   if (!index) return index.error();
@@ -122,7 +127,8 @@ Result<Edited> apply_command(const Worksheet& sheet, const document::Results& re
   if (name == "move_reaction") return move_reaction(sheet, *index, argument(arguments, "direction"));
   if (name == "take_proposal") return take_proposal(sheet, results, *index, argument(arguments, "proposal"));
   return show(sheet, *index,
-              name == "show_profile" ? &document::ReactionSheet::show_profile : &document::ReactionSheet::show_checker,
+              name == "show_profile" ? &document::ReactionSheet::show_profile
+                                     : &document::ReactionSheet::show_checker,
               argument(arguments, "state"));
 }
 

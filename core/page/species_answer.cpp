@@ -58,7 +58,8 @@ void write_species_keys(JsonText& json, const SpeciesFigures& figures) {
   json.key("name").string(species.name);
   write_text_or_null(json, "cas", species.compound != nullptr ? species.compound->cas : std::string_view());
   write_text_or_null(json, "smiles", species.canonical);
-  write_text_or_null(json, "formula", species.composition ? molecule::hill_formula(*species.composition) : std::string());
+  write_text_or_null(json, "formula",
+                     species.composition ? molecule::hill_formula(*species.composition) : std::string());
   json.key("molar_mass_g_mol");
   if (species.molar_mass > 0) {
     json.number(species.molar_mass * 1000);
@@ -86,7 +87,8 @@ void write_species_keys(JsonText& json, const SpeciesFigures& figures) {
   write_texts(json, "cautions", figures.cautions);
 }
 
-Result<Answer> answer_species(const SpeciesQuestion& question, AnswerShape shape, balance::SpeciesSource& source) {
+Result<Answer> answer_species(const SpeciesQuestion& question, AnswerShape shape,
+                              balance::SpeciesSource& source) {
   Result<std::shared_ptr<const facts::Species>> species = source.species(question.species, question.smiles);
   if (!species.ok()) return species.error();
   const SpeciesFigures figures = species_figures(std::move(species.value()), question.estimate_only);

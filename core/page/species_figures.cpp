@@ -4,20 +4,23 @@
 #include <cmath>
 #include <utility>
 
+#include "core/base/number_text.hpp"
 #include "core/estimate/bond_set.hpp"
 #include "core/estimate/context_model.hpp"
 #include "core/facts/atoms.hpp"
 #include "core/facts/polynomials.hpp"
 #include "core/thermo/species_enthalpy.hpp"
-#include "core/base/number_text.hpp"
 #include "core/units/constants.hpp"
 
 namespace heatledger::page {
 namespace {
 
-constexpr std::array kGasTemperatures{units::kReferenceTemperature, 400.0, 500.0, 600.0, 800.0, 1000.0, 1500.0};
+constexpr std::array kGasTemperatures{
+    units::kReferenceTemperature, 400.0, 500.0, 600.0, 800.0, 1000.0, 1500.0};
 
-StatedFigure none(std::string reason) { return {std::nullopt, {}, {}, std::move(reason)}; }
+StatedFigure none(std::string reason) {
+  return {std::nullopt, {}, {}, std::move(reason)};
+}
 
 StatedFigure from_table(const std::optional<facts::Datum>& datum, std::string reason) {
   if (!datum) return none(std::move(reason));
@@ -40,8 +43,9 @@ StatedFigure average_formation(const facts::Species& species) {
   for (const molecule::BondCount& bond : species.bonds) {
     const estimate::BondValue* price = set->find(bond.type);
     if (price == nullptr) return none("the bond set has no value for " + molecule::spelling(bond.type));
-    sum.add(uncertainty::Quantity(price->value, price->u95,
-                                  uncertainty::source_key(uncertainty::SourceKind::BondValue, price->type.packed())),
+    sum.add(uncertainty::Quantity(
+                price->value, price->u95,
+                uncertainty::source_key(uncertainty::SourceKind::BondValue, price->type.packed())),
             -bond.count);
   }
   if (species.bonds.empty()) return none("no bonds in it");
@@ -49,8 +53,9 @@ StatedFigure average_formation(const facts::Species& species) {
   for (const auto& [key, count] : species.composition->atoms) {
     const std::optional<facts::Datum> atom = facts::gas_atom_formation(key % 1000);
     if (!atom) return none("no formation enthalpy of its gaseous atoms in the table");
-    sum.add(uncertainty::Quantity(atom->value, atom->u95,
-                                  uncertainty::source_key(uncertainty::SourceKind::Atom, static_cast<std::uint64_t>(key))),
+    sum.add(uncertainty::Quantity(
+                atom->value, atom->u95,
+                uncertainty::source_key(uncertainty::SourceKind::Atom, static_cast<std::uint64_t>(key))),
             count);
   }
   return {sum.figure(), "average", set->title(), {}};
@@ -72,18 +77,23 @@ class ContextEstimates {
     }
   }
 
-  StatedFigure operator()(estimate::Property property, double temperature = units::kReferenceTemperature) const {
+  StatedFigure operator()(estimate::Property property,
+                          double temperature = units::kReferenceTemperature) const {
     if (!molecule_) return none(reason_);
     estimate::ContextOptions options;
     options.temperature = temperature;
     options.estimate_only = estimate_only_;
-    const Result<estimate::Prediction> made = estimate::ContextModel::embedded().predict(property, *molecule_, options);
+    const Result<estimate::Prediction> made =
+        estimate::ContextModel::embedded().predict(property, *molecule_, options);
     if (!made.ok()) return none(made.error().message);
     if (made->reading == estimate::Reading::None) {
-      return none("structure alone gives no reliable figure here (± " + machine_number(std::round(made->u95 / 1000), 3) +
-                  " kJ/mol): measure it, or compute it");
+      return none("structure alone gives no reliable figure here (± " +
+                  machine_number(std::round(made->u95 / 1000), 3) + " kJ/mol): measure it, or compute it");
     }
-    return {uncertainty::Figure{made->value, made->u95}, "context", "bonds in context, fitted to published values", {}};
+    return {uncertainty::Figure{made->value, made->u95},
+            "context",
+            "bonds in context, fitted to published values",
+            {}};
   }
 
  private:
@@ -119,8 +129,9 @@ StatedFigure table_or(StatedFigure table, const StatedFigure& estimate) {
 StatedFigure liquid_from(const StatedFigure& gas, const StatedFigure& vaporisation) {
   if (!gas.figure) return none(gas.reason);
   if (!vaporisation.figure) return none(vaporisation.reason);
-  const uncertainty::Figure figure{gas.figure->value - vaporisation.figure->value,
-                                   std::sqrt(gas.figure->u95 * gas.figure->u95 + vaporisation.figure->u95 * vaporisation.figure->u95)};
+  const uncertainty::Figure figure{
+      gas.figure->value - vaporisation.figure->value,
+      std::sqrt(gas.figure->u95 * gas.figure->u95 + vaporisation.figure->u95 * vaporisation.figure->u95)};
   const bool same = gas.route == vaporisation.route;
   return {figure, same ? gas.route : gas.route + " and " + vaporisation.route, "gas minus vaporisation", {}};
 }
@@ -142,7 +153,8 @@ SpeciesFigures species_figures(std::shared_ptr<const facts::Species> species, bo
   if (compound != nullptr) {
     gas = stated(thermo::tabulated_formation(it, molecule::Phase::Gas), 1, figures.cautions);
     liquid = stated(thermo::tabulated_formation(it, molecule::Phase::Liquid), 1, figures.cautions);
-    figures.solid_formation = stated(thermo::tabulated_formation(it, molecule::Phase::Solid), 1, figures.cautions);
+    figures.solid_formation =
+        stated(thermo::tabulated_formation(it, molecule::Phase::Solid), 1, figures.cautions);
     // Gas to liquid gives heat off; the enthalpy of vaporisation is its opposite.
     vaporisation = stated(thermo::gas_to_phase(it, molecule::Phase::Liquid), -1, figures.cautions);
     cp_liquid = from_table(compound->liquid.heat_capacity, not_tabulated);
@@ -162,11 +174,13 @@ SpeciesFigures species_figures(std::shared_ptr<const facts::Species> species, bo
   for (const double temperature : kGasTemperatures) {
     StatedFigure table = temperature == units::kReferenceTemperature ? cp_gas : nothing;
     if (!table.figure && polynomial != nullptr) table = from_polynomial(*polynomial, temperature);
-    figures.cp_gas.push_back({temperature, table_or(table, in_context(Property::GasHeatCapacity, temperature))});
+    figures.cp_gas.push_back(
+        {temperature, table_or(table, in_context(Property::GasHeatCapacity, temperature))});
   }
   if (!it.note.empty()) figures.notes.push_back(it.note);
   if (compound != nullptr && compound->vapour_associates) {
-    figures.cautions.push_back("The real vapour is partly associated; the figures for the gas are for single molecules.");
+    figures.cautions.push_back(
+        "The real vapour is partly associated; the figures for the gas are for single molecules.");
   }
   figures.species = std::move(species);
   return figures;

@@ -1,5 +1,5 @@
-// The figures of one compound as `species` states them: the best that tables or an estimate give, each with its route
-// and source, or the reason why there is none.
+// The figures of one compound as `species` states them: the best that tables or an estimate give, each with
+// its route and source, or the reason why there is none.
 #pragma once
 
 #include <memory>
@@ -15,7 +15,7 @@ namespace heatledger::page {
 /// One figure, SI; empty with the reason.
 struct StatedFigure {
   std::optional<uncertainty::Figure> figure;
-  std::string route;   ///< "table", "average", "context"
+  std::string route;  ///< "table", "average", "context"
   std::string source;
   std::string reason;  ///< why there is no figure
 };
@@ -31,7 +31,8 @@ struct SpeciesFigures {
   StatedFigure solid_formation;                                    ///< [J/mol]
   std::vector<HeatCapacityAt> cp_gas;  ///< at 298.15, 400, 500, 600, 800, 1000, 1500 K
   StatedFigure cp_liquid_298;          ///< [J/(mol K)]
-  std::optional<StatedFigure> average_gas_formation;  ///< by the average bond set, beside what a table says [J/mol]
+  std::optional<StatedFigure>
+      average_gas_formation;  ///< by the average bond set, beside what a table says [J/mol]
   std::vector<std::string> notes, cautions;
 };
 

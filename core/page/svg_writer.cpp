@@ -24,14 +24,19 @@ std::string arrow_head(double x0, double y0, double x1, double y1, const std::st
   const double ux = (x1 - x0) / length, uy = (y1 - y0) / length;
   const double bx = x1 - kLong * ux, by = y1 - kLong * uy;
   return "<polygon class=\"fill " + ink + "\" points=\"" +
-         points({x1, y1, bx - kHalfWide * uy, by + kHalfWide * ux, bx + kHalfWide * uy, by - kHalfWide * ux}) + "\"/>";
+         points(
+             {x1, y1, bx - kHalfWide * uy, by + kHalfWide * ux, bx + kHalfWide * uy, by - kHalfWide * ux}) +
+         "\"/>";
 }
 
 std::string_view anchor_word(Align align) {
   switch (align) {
-    case Align::Left: return "start";
-    case Align::Centre: return "middle";
-    case Align::Right: return "end";
+    case Align::Left:
+      return "start";
+    case Align::Centre:
+      return "middle";
+    case Align::Right:
+      return "end";
   }
   return "start";
 }
@@ -43,11 +48,21 @@ std::string escaped(std::string_view text) {
   out.reserve(text.size() + 16);
   for (const char c : text) {
     switch (c) {
-      case '&': out += "&amp;"; break;
-      case '<': out += "&lt;"; break;
-      case '>': out += "&gt;"; break;
-      case '"': out += "&quot;"; break;
-      case '\'': out += "&#39;"; break;
+      case '&':
+        out += "&amp;";
+        break;
+      case '<':
+        out += "&lt;";
+        break;
+      case '>':
+        out += "&gt;";
+        break;
+      case '"':
+        out += "&quot;";
+        break;
+      case '\'':
+        out += "&#39;";
+        break;
       default:
         if (static_cast<unsigned char>(c) >= 0x20 || c == '\n' || c == '\t') out += c;
     }
@@ -57,16 +72,26 @@ std::string escaped(std::string_view text) {
 
 std::string ink_class(Ink ink) {
   switch (ink) {
-    case Ink::Axis: return "ink-axis";
-    case Ink::Grid: return "ink-grid";
-    case Ink::Text: return "ink-text";
-    case Ink::QuietText: return "ink-quiet";
-    case Ink::Broken: return "ink-broken";
-    case Ink::Formed: return "ink-formed";
-    case Ink::Typed: return "ink-typed";
-    case Ink::Plain: return "ink-plain";
-    case Ink::Accent: return "ink-accent";
-    case Ink::Band: return "ink-band";
+    case Ink::Axis:
+      return "ink-axis";
+    case Ink::Grid:
+      return "ink-grid";
+    case Ink::Text:
+      return "ink-text";
+    case Ink::QuietText:
+      return "ink-quiet";
+    case Ink::Broken:
+      return "ink-broken";
+    case Ink::Formed:
+      return "ink-formed";
+    case Ink::Typed:
+      return "ink-typed";
+    case Ink::Plain:
+      return "ink-plain";
+    case Ink::Accent:
+      return "ink-accent";
+    case Ink::Band:
+      return "ink-band";
   }
   return {};
 }
@@ -78,15 +103,17 @@ std::string coordinate(double value) {
 
 std::string_view ink_style() {
   return ".line{fill:none;stroke:currentColor}.fill{fill:currentColor;stroke:none}svg text{fill:currentColor}"
-         ".ink-axis{color:#6b6b66}.ink-grid{color:#d9d7cd}.ink-text,.ink-plain{color:#23262d}.ink-quiet{color:#62656c}"
-         ".ink-broken{color:#98401a}.ink-formed{color:#145a70}.ink-typed{color:#2438a8}.ink-accent{color:#8a5a00}"
+         ".ink-axis{color:#6b6b66}.ink-grid{color:#d9d7cd}.ink-text,.ink-plain{color:#23262d}.ink-quiet{"
+         "color:#62656c}"
+         ".ink-broken{color:#98401a}.ink-formed{color:#145a70}.ink-typed{color:#2438a8}.ink-accent{color:#"
+         "8a5a00}"
          ".ink-band{color:#efeee2}";
 }
 
 std::string svg_element(const Drawing& drawing) {
-  std::string out = "<svg xmlns=\"http://www.w3.org/2000/svg\" viewBox=\"0 0 " + coordinate(drawing.width) + " " +
-                    coordinate(drawing.height) + "\" width=\"" + coordinate(drawing.width) + "pt\" height=\"" +
-                    coordinate(drawing.height) + "pt\" role=\"img\">";
+  std::string out = "<svg xmlns=\"http://www.w3.org/2000/svg\" viewBox=\"0 0 " + coordinate(drawing.width) +
+                    " " + coordinate(drawing.height) + "\" width=\"" + coordinate(drawing.width) +
+                    "pt\" height=\"" + coordinate(drawing.height) + "pt\" role=\"img\">";
   out += "<title>" + escaped(drawing.title) + "</title>";
   for (const Fill& fill : drawing.fills) {
     if (fill.ink == Ink::Band) out += "<polygon class=\"fill ink-band\" points=\"" + points(fill.xy) + "\"/>";
@@ -107,9 +134,9 @@ std::string svg_element(const Drawing& drawing) {
     }
   }
   for (const Words& words : drawing.words) {
-    out += "<text class=\"" + ink_class(words.ink) + "\" x=\"" + coordinate(words.x) + "\" y=\"" + coordinate(words.y) +
-           "\" font-size=\"" + coordinate(words.size) + "\" text-anchor=\"" + std::string(anchor_word(words.anchor)) +
-           "\">" + escaped(words.text) + "</text>";
+    out += "<text class=\"" + ink_class(words.ink) + "\" x=\"" + coordinate(words.x) + "\" y=\"" +
+           coordinate(words.y) + "\" font-size=\"" + coordinate(words.size) + "\" text-anchor=\"" +
+           std::string(anchor_word(words.anchor)) + "\">" + escaped(words.text) + "</text>";
   }
   return out + "</svg>";
 }

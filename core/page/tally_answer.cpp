@@ -3,8 +3,8 @@
 
 #include "core/balance/ledger.hpp"
 #include "core/estimate/bond_set.hpp"
-#include "core/page/answers.hpp"
 #include "core/page/answer_text.hpp"
+#include "core/page/answers.hpp"
 #include "core/page/tally_figures.hpp"
 #include "core/units/quantity_text.hpp"
 
@@ -23,14 +23,20 @@ class QuotedSpecies : public balance::SpeciesSource {
   balance::SpeciesSource& source_;
 };
 
-std::string_view side_text(bool product) { return product ? "product" : "reactant"; }
+std::string_view side_text(bool product) {
+  return product ? "product" : "reactant";
+}
 
 std::string_view route_text(balance::RowRoute route) {
   switch (route) {
-    case balance::RowRoute::Bonds: return "bonds";
-    case balance::RowRoute::AtomsFromElement: return "atoms from the element";
-    case balance::RowRoute::Formation: return "formation";
-    case balance::RowRoute::Missing: return "missing";
+    case balance::RowRoute::Bonds:
+      return "bonds";
+    case balance::RowRoute::AtomsFromElement:
+      return "atoms from the element";
+    case balance::RowRoute::Formation:
+      return "formation";
+    case balance::RowRoute::Missing:
+      return "missing";
   }
   return "missing";
 }
@@ -194,7 +200,9 @@ std::string ledger_json(const balance::Ledger& ledger, BondRoute by) {
   json.key("balanced").boolean(reaction.balance.balanced);
   json.key("equation").string(balance::plain_equation(reaction));
   write_columns(json, figures);
-  if (context) json.key("columns_reason").string("bonds in context are given as a whole; the columns belong to the average set");
+  if (context)
+    json.key("columns_reason")
+        .string("bonds in context are given as a whole; the columns belong to the average set");
   json.key("gas_298");
   write_kilojoules(json, figures.gas_298, context ? context_reason(ledger) : columns_reason(ledger));
   write_lines(json, "corrections", ledger.corrections);
@@ -247,7 +255,8 @@ std::string unbalanced_json(const balance::Reaction& reaction, const Error& erro
 
 }  // namespace
 
-Result<Answer> answer_tally(const TallyQuestion& question, AnswerShape shape, balance::SpeciesSource& source) {
+Result<Answer> answer_tally(const TallyQuestion& question, AnswerShape shape,
+                            balance::SpeciesSource& source) {
   QuotedSpecies quoted(source);
   balance::SpeciesSource& reader = question.smiles ? static_cast<balance::SpeciesSource&>(quoted) : source;
   Result<balance::Reaction> read = balance::read_reaction(question.equation, reader);
@@ -262,7 +271,8 @@ Result<Answer> answer_tally(const TallyQuestion& question, AnswerShape shape, ba
   options.set = std::make_shared<const estimate::BondSet>(std::move(set.value()));
   options.basis = std::string(question.basis);
   options.context = balance::ContextUse::Always;
-  const auto read_temperature = [](std::string_view typed, std::string_view name, std::optional<double>& kelvin) -> Status {
+  const auto read_temperature = [](std::string_view typed, std::string_view name,
+                                   std::optional<double>& kelvin) -> Status {
     if (typed.empty()) return success();
     const Result<units::TypedValue> value = units::parse_quantity(typed, units::dimension::kTemperature);
     if (!value.ok()) {
@@ -273,13 +283,18 @@ Result<Answer> answer_tally(const TallyQuestion& question, AnswerShape shape, ba
     kelvin = value->value;
     return success();
   };
-  if (const Status status = read_temperature(question.reactants_at, "reactants_at", options.reactants_at); !status.ok()) return status.error();
-  if (const Status status = read_temperature(question.products_at, "products_at", options.products_at); !status.ok()) return status.error();
+  if (const Status status = read_temperature(question.reactants_at, "reactants_at", options.reactants_at);
+      !status.ok())
+    return status.error();
+  if (const Status status = read_temperature(question.products_at, "products_at", options.products_at);
+      !status.ok())
+    return status.error();
   Result<balance::Ledger> ledger = balance::make_ledger(reaction, options);
   if (!ledger.ok()) {
     if (ledger.error().code != "ledger.not_balanced") return ledger.error();
     const Error& error = ledger.error();
-    std::string text = shape == AnswerShape::Json ? unbalanced_json(*reaction, error) : unbalanced_text(*reaction);
+    std::string text =
+        shape == AnswerShape::Json ? unbalanced_json(*reaction, error) : unbalanced_text(*reaction);
     return Answer{std::move(text), error};
   }
   std::string text = shape == AnswerShape::Json ? ledger_json(*ledger, question.route) : ledger_text(*ledger);

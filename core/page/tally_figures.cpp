@@ -12,7 +12,8 @@ void write_value_and_interval(JsonText& json, const uncertainty::Figure& joules)
   json.key("value").number(joules.value / 1000).key("u95").number(joules.u95 / 1000);
 }
 
-void write_column(JsonText& json, std::string_view name, std::string_view interval, const MaybeFigure& joules) {
+void write_column(JsonText& json, std::string_view name, std::string_view interval,
+                  const MaybeFigure& joules) {
   if (joules) {
     json.key(name).number(joules->value / 1000).key(interval).number(joules->u95 / 1000);
   } else {

@@ -1,4 +1,5 @@
-// The figures of one equation as `tally` and `bulk` state them: one writer for both, so that they agree to the digit.
+// The figures of one equation as `tally` and `bulk` state them: one writer for both, so that they agree to
+// the digit.
 #pragma once
 
 #include <optional>
@@ -18,7 +19,7 @@ using MaybeFigure = std::optional<uncertainty::Figure>;
 struct TallyFigures {
   MaybeFigure broken, formed, gas_298, as_written;
   MaybeFigure average, context, formation, measured;  ///< as written, 25 °C, by each route
-  MaybeFigure context_gas_298;                          ///< gas, 25 °C, by bonds in context
+  MaybeFigure context_gas_298;                        ///< gas, 25 °C, by bonds in context
   MaybeFigure taken;
   std::string_view taken_route;
 };
@@ -26,8 +27,8 @@ struct TallyFigures {
 /// @param ledger  must outlive the figures
 TallyFigures tally_figures(const balance::Ledger& ledger);
 TallyFigures tally_figures(const balance::QuickAnswer& answer);
-/// The same with bonds in context in charge: gas_298 and as_written are that route's, and the two columns, which belong
-/// to the average set, are empty.
+/// The same with bonds in context in charge: gas_298 and as_written are that route's, and the two columns,
+/// which belong to the average set, are empty.
 TallyFigures in_context(TallyFigures figures);
 
 /// {"value","u95"} in kJ, or null.

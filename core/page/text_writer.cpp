@@ -1,5 +1,5 @@
-// A page for a terminal: columns lined up by what a character takes on screen, the spine drawn between broken and
-// formed, long texts wrapped.
+// A page for a terminal: columns lined up by what a character takes on screen, the spine drawn between broken
+// and formed, long texts wrapped.
 #include <algorithm>
 
 #include "core/base/utf8.hpp"
@@ -18,12 +18,16 @@ std::string repeat(std::string_view piece, std::size_t times) {
   return out;
 }
 
-std::size_t width_of(std::string_view text) { return utf8::display_width(text); }
+std::size_t width_of(std::string_view text) {
+  return utf8::display_width(text);
+}
 
 std::string padded(const std::string& text, std::size_t width, Align align) {
   const std::size_t taken = width_of(text);
   if (taken >= width) return text;
-  const std::size_t left = align == Align::Right ? width - taken : align == Align::Centre ? (width - taken) / 2 : 0;
+  const std::size_t left = align == Align::Right    ? width - taken
+                           : align == Align::Centre ? (width - taken) / 2
+                                                    : 0;
   return std::string(left, ' ') + text + std::string(width - taken - left, ' ');
 }
 
@@ -78,9 +82,11 @@ class TextWriter {
 
   void add(const Heading& heading) {
     blank_line();
-    const std::size_t taken = width_of(heading.text) + (heading.aside.empty() ? 0 : width_of(heading.aside) + 1);
+    const std::size_t taken =
+        width_of(heading.text) + (heading.aside.empty() ? 0 : width_of(heading.aside) + 1);
     const std::size_t rule = taken + 3 < width_ ? width_ - taken - 1 : 2;
-    add_line(out_, heading.text + " " + repeat(kRule, rule) + (heading.aside.empty() ? "" : " " + heading.aside));
+    add_line(out_,
+             heading.text + " " + repeat(kRule, rule) + (heading.aside.empty() ? "" : " " + heading.aside));
   }
 
   void add(const Drawing&) {}  // its figures stand in the tables beside it
@@ -88,18 +94,28 @@ class TextWriter {
   void add(const Note& note) {
     std::string lead;
     switch (note.kind) {
-      case NoteKind::Info: break;
-      case NoteKind::Assumption: lead = "Assumed: "; break;
-      case NoteKind::Caution: lead = "Caution: "; break;
-      case NoteKind::Disagreement: lead = "Differs: "; break;
-      case NoteKind::Error: lead = "Error: "; break;
+      case NoteKind::Info:
+        break;
+      case NoteKind::Assumption:
+        lead = "Assumed: ";
+        break;
+      case NoteKind::Caution:
+        lead = "Caution: ";
+        break;
+      case NoteKind::Disagreement:
+        lead = "Differs: ";
+        break;
+      case NoteKind::Error:
+        lead = "Error: ";
+        break;
     }
     for (const std::string& line : wrapped(lead + note.text, width_)) add_line(out_, line);
   }
 
   void add(const Table& table) {
     if (table.look == TableLook::Banner) return add_banner(table);
-    if (table.columns.size() == 1 || (table.look == TableLook::List && table.columns.size() == 2)) return add_lines(table);
+    if (table.columns.size() == 1 || (table.look == TableLook::List && table.columns.size() == 2))
+      return add_lines(table);
     add_grid(table);
   }
 
@@ -134,14 +150,16 @@ class TextWriter {
     for (const Row& row : table.rows) {
       const std::string lead = row.cells.size() > 1 ? padded(row.cells[0].text, mark, Align::Left) : "";
       bool first = true;
-      for (const std::string& line : wrapped(row.cells.back().text, width_ > mark + 20 ? width_ - mark : 20)) {
+      for (const std::string& line :
+           wrapped(row.cells.back().text, width_ > mark + 20 ? width_ - mark : 20)) {
         add_line(out_, (first ? lead : std::string(mark, ' ')) + line);
         first = false;
       }
     }
   }
 
-  /// Widest text of each column among the cells that take one column; wide ones push the last column they take.
+  /// Widest text of each column among the cells that take one column; wide ones push the last column they
+  /// take.
   static std::vector<std::size_t> column_widths(const Table& table) {
     std::vector<std::size_t> widths;
     for (const Column& column : table.columns) widths.push_back(width_of(column.heading));
@@ -172,7 +190,9 @@ class TextWriter {
     return widths;
   }
 
-  static std::size_t indent(const Row& row) { return row.role == RowRole::Detail || row.role == RowRole::Correction ? 2 : 0; }
+  static std::size_t indent(const Row& row) {
+    return row.role == RowRole::Detail || row.role == RowRole::Correction ? 2 : 0;
+  }
 
   /// A last column of texts gives way: it is wrapped into what the line has left for it.
   void narrow_last(const Table& table, std::vector<std::size_t>& widths) const {

@@ -19,8 +19,8 @@ constexpr double kJ = 1000.0;
 constexpr double kWaterMolarMass = 0.018015;  ///< [kg/mol] IUPAC 2021, abridged
 
 Error no_solution(const Species& species, const std::string& what) {
-  return Error{"thermo.no_solution_data", "No table here has " + species.name + " in water" + what + ".", species.text,
-               "Write another strength or phase, or type a measured heat."};
+  return Error{"thermo.no_solution_data", "No table here has " + species.name + " in water" + what + ".",
+               species.text, "Write another strength or phase, or type a measured heat."};
 }
 
 Sourced from_table_of_ions(const facts::AqueousSubstance& row, const Species& species) {
@@ -30,22 +30,28 @@ Sourced from_table_of_ions(const facts::AqueousSubstance& row, const Species& sp
   result.route = "table";
   result.source = std::string(datum.source);
   result.working.push_back("ΔfH(aq) " + species.name + " = " + display_signed(datum.value / kJ, 2) + " ± " +
-                           display_number(datum.u95 / kJ, 2) + " kJ/mol at infinite dilution, " + result.source);
+                           display_number(datum.u95 / kJ, 2) + " kJ/mol at infinite dilution, " +
+                           result.source);
   return result;
 }
 
 /// The pure solute that a curve starts from, and the heat of dissolving it.
 Result<Sourced> from_curve(const Species& species, const SolutionHeats& curve, std::optional<double> ratio) {
-  const std::optional<SolutionHeatPoint> heat = ratio ? facts::solution_heat_at(curve, *ratio) : curve.infinite;
-  if (!heat) return no_solution(species, ratio ? " with " + machine_number(*ratio, 4) + " mol of water per mole" : " at infinite dilution");
+  const std::optional<SolutionHeatPoint> heat =
+      ratio ? facts::solution_heat_at(curve, *ratio) : curve.infinite;
+  if (!heat)
+    return no_solution(species, ratio ? " with " + machine_number(*ratio, 4) + " mol of water per mole"
+                                      : " at infinite dilution");
   const Phase pure = curve.phase == 'g' ? Phase::Gas : curve.phase == 'l' ? Phase::Liquid : Phase::Solid;
   Result<Sourced> solute = tabulated_formation(species, pure);
   if (!solute.ok()) return solute;
   Sourced result = std::move(solute).value();
   result.value.add(Quantity(heat->heat, heat->u95, figure_key(SourceKind::Phase, species, Phase::Aqueous)));
   result.source += "; heat of solution " + std::string(curve.source);
-  result.working.push_back("plus heat of solution " + display_signed(heat->heat / kJ, 2) + " ± " + display_number(heat->u95 / kJ, 2) + " kJ/mol " +
-                           (ratio ? "with " + machine_number(*ratio, 4) + " mol of water per mole, " : std::string("at infinite dilution, ")) +
+  result.working.push_back("plus heat of solution " + display_signed(heat->heat / kJ, 2) + " ± " +
+                           display_number(heat->u95 / kJ, 2) + " kJ/mol " +
+                           (ratio ? "with " + machine_number(*ratio, 4) + " mol of water per mole, "
+                                  : std::string("at infinite dilution, ")) +
                            std::string(curve.source) + (curve.from_memory ? " (from memory)" : ""));
   return result;
 }
@@ -63,8 +69,10 @@ const SolutionHeats* curve_of(const Species& species, bool infinite) {
 
 std::optional<double> water_ratio(const Strength& strength, double molar_mass) {
   switch (strength.kind) {
-    case Strength::Kind::InfiniteDilution: return std::nullopt;
-    case Strength::Kind::WaterRatio: return strength.value;
+    case Strength::Kind::InfiniteDilution:
+      return std::nullopt;
+    case Strength::Kind::WaterRatio:
+      return strength.value;
     case Strength::Kind::MassFraction:
       if (!(strength.value > 0) || !(molar_mass > 0)) return std::nullopt;
       return (1 - strength.value) / strength.value * molar_mass / kWaterMolarMass;
@@ -77,7 +85,8 @@ std::optional<double> water_ratio(const Strength& strength, double molar_mass) {
 
 Result<Sourced> dissolved_formation(const Species& species, const std::optional<Strength>& strength) {
   const std::optional<double> ratio = strength ? water_ratio(*strength, species.molar_mass) : std::nullopt;
-  if (!ratio && species.aqueous != nullptr && species.aqueous->formation_enthalpy) return from_table_of_ions(*species.aqueous, species);
+  if (!ratio && species.aqueous != nullptr && species.aqueous->formation_enthalpy)
+    return from_table_of_ions(*species.aqueous, species);
   const SolutionHeats* curve = curve_of(species, !ratio);
   if (curve == nullptr) return no_solution(species, ratio ? " at that strength" : "");
   return from_curve(species, *curve, ratio);

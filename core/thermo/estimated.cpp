@@ -9,8 +9,8 @@
 namespace heatledger::thermo {
 namespace {
 
-using estimate::ContextMolecule;
 using estimate::ContextModel;
+using estimate::ContextMolecule;
 using estimate::ContextTerm;
 using estimate::Prediction;
 using estimate::Property;
@@ -21,7 +21,8 @@ using molecule::Phase;
 constexpr double kJ = 1000.0;
 
 Error no_estimate(const Species& species, const std::string& why) {
-  return Error{"thermo.no_estimate", "No estimate for " + species.name + ": " + why, species.text, "Type a value with its source."};
+  return Error{"thermo.no_estimate", "No estimate for " + species.name + ": " + why, species.text,
+               "Type a value with its source."};
 }
 
 Result<Sourced> estimated(const Species& species, Property property, const std::string& what) {
@@ -38,11 +39,12 @@ Result<Sourced> estimated(const Species& species, Property property, const std::
   result.value = std::move(quantity).value();
   result.route = "estimate";
   result.source = "bonds in context";
-  result.working.push_back(what + " of " + species.name + ", bonds in context: " + display_signed(prediction->value / kJ, 1) + " ± " +
+  result.working.push_back(what + " of " + species.name +
+                           ", bonds in context: " + display_signed(prediction->value / kJ, 1) + " ± " +
                            display_number(prediction->u95 / kJ, 1) + " kJ/mol");
   if (prediction->reading == Reading::None) {
-    result.cautions.push_back(species.name + ": the structure alone gives no reliable figure (± " + display_number(prediction->u95 / kJ, 0) +
-                              " kJ/mol); measure this.");
+    result.cautions.push_back(species.name + ": the structure alone gives no reliable figure (± " +
+                              display_number(prediction->u95 / kJ, 0) + " kJ/mol); measure this.");
   }
   return result;
 }
@@ -72,7 +74,8 @@ Result<Sourced> estimated_formation(const Species& species, Phase phase) {
   return result;
 }
 
-Result<Sourced> best_formation(const Species& species, Phase phase, const std::optional<molecule::Strength>& strength) {
+Result<Sourced> best_formation(const Species& species, Phase phase,
+                               const std::optional<molecule::Strength>& strength) {
   Result<Sourced> table = tabulated_formation(species, phase, strength);
   if (table.ok()) return table;
   if (phase == Phase::Liquid) {
@@ -91,7 +94,8 @@ Result<Sourced> best_formation(const Species& species, Phase phase, const std::o
   return estimate.ok() ? std::move(estimate) : std::move(table);
 }
 
-Result<Sourced> best_gas_to_phase(const Species& species, Phase to, const std::optional<molecule::Strength>& strength) {
+Result<Sourced> best_gas_to_phase(const Species& species, Phase to,
+                                  const std::optional<molecule::Strength>& strength) {
   Result<Sourced> table = gas_to_phase(species, to, strength);
   if (table.ok()) return table;
   Result<Sourced> estimate = estimated_gas_to_phase(species, to);

@@ -19,15 +19,20 @@ constexpr double kJ = 1000.0;
 
 const facts::PhaseFacts* facts_of(const Compound& compound, Phase phase) {
   switch (phase) {
-    case Phase::Gas: return &compound.gas;
-    case Phase::Liquid: return &compound.liquid;
-    case Phase::Solid: return &compound.solid;
-    default: return nullptr;
+    case Phase::Gas:
+      return &compound.gas;
+    case Phase::Liquid:
+      return &compound.liquid;
+    case Phase::Solid:
+      return &compound.solid;
+    default:
+      return nullptr;
   }
 }
 
 bool is_reference(const Compound& compound, Phase phase) {
-  return compound.reference_element && molecule::phase_text(phase) == std::string_view(&compound.reference_phase, 1);
+  return compound.reference_element &&
+         molecule::phase_text(phase) == std::string_view(&compound.reference_phase, 1);
 }
 
 bool has_formation(const Compound& compound, Phase phase) {
@@ -48,8 +53,8 @@ Sourced from_datum(const Species& species, Phase phase, const Datum& datum) {
   result.route = "table";
   result.source = std::string(datum.source);
   std::string line = "ΔfH(" + std::string(molecule::phase_text(phase)) + ") " + species.name + " = " +
-                     display_signed(datum.value / kJ, 2) + " ± " + display_number(datum.u95 / kJ, 2) + " kJ/mol, " +
-                     result.source;
+                     display_signed(datum.value / kJ, 2) + " ± " + display_number(datum.u95 / kJ, 2) +
+                     " kJ/mol, " + result.source;
   if (datum.u95_is_default) line += " (± is the table's default)";
   result.working.push_back(std::move(line));
   if (!datum.remark.empty()) result.cautions.push_back(species.name + ": " + std::string(datum.remark));
@@ -58,7 +63,8 @@ Sourced from_datum(const Species& species, Phase phase, const Datum& datum) {
 
 Error no_formation(const Species& species, Phase phase) {
   return Error{"thermo.no_formation_data",
-               "No table here has a formation enthalpy of " + species.name + " as " + std::string(phase_word(phase)) + ".",
+               "No table here has a formation enthalpy of " + species.name + " as " +
+                   std::string(phase_word(phase)) + ".",
                species.text, "Write another phase, or type a value with its source."};
 }
 
@@ -67,21 +73,28 @@ Error no_formation(const Species& species, Phase phase) {
 std::string_view phase_word(Phase phase) {
   switch (phase) {
     case Phase::Unstated:
-    case Phase::Gas: return "gas";
-    case Phase::Liquid: return "liquid";
-    case Phase::Solid: return "solid";
-    case Phase::Aqueous: return "solution";
-    case Phase::Dissolved: return "dissolved";
+    case Phase::Gas:
+      return "gas";
+    case Phase::Liquid:
+      return "liquid";
+    case Phase::Solid:
+      return "solid";
+    case Phase::Aqueous:
+      return "solution";
+    case Phase::Dissolved:
+      return "dissolved";
   }
   return "gas";
 }
 
 uncertainty::SourceKey figure_key(SourceKind kind, const Species& species, Phase phase) {
-  // Library rows use the low half of the index; hashes of other species set the top bit so that they never meet.
+  // Library rows use the low half of the index; hashes of other species set the top bit so that they never
+  // meet.
   constexpr std::uint64_t kHashed = 1ULL << 55;
-  const std::uint64_t which = species.compound != nullptr
-                                  ? std::uint64_t{species.compound->id}
-                                  : (kHashed >> 3) | (text_hash(species.canonical.empty() ? species.text : species.canonical) >> 13);
+  const std::uint64_t which =
+      species.compound != nullptr
+          ? std::uint64_t{species.compound->id}
+          : (kHashed >> 3) | (text_hash(species.canonical.empty() ? species.text : species.canonical) >> 13);
   return uncertainty::source_key(kind, (which << 3) | static_cast<std::uint64_t>(phase));
 }
 
@@ -90,14 +103,16 @@ PhaseChoice phase_taken(const Species& species, Phase written) {
   const Compound* compound = species.compound;
   if (compound == nullptr) return {species.aqueous != nullptr ? Phase::Aqueous : Phase::Gas, true};
   if (compound->reference_element && compound->reference_phase == 's') return {Phase::Solid, true};
-  if (has_formation(*compound, Phase::Gas) || (species.graph && has_formation(*compound, Phase::Liquid))) return {Phase::Gas, true};
+  if (has_formation(*compound, Phase::Gas) || (species.graph && has_formation(*compound, Phase::Liquid)))
+    return {Phase::Gas, true};
   const bool liquid = has_formation(*compound, Phase::Liquid), solid = has_formation(*compound, Phase::Solid);
   if (liquid != solid) return {liquid ? Phase::Liquid : Phase::Solid, true};
   if (solid && !species.graph) return {Phase::Solid, true};
   return {Phase::Gas, true};
 }
 
-Result<Sourced> tabulated_formation(const Species& species, Phase phase, const std::optional<molecule::Strength>& strength) {
+Result<Sourced> tabulated_formation(const Species& species, Phase phase,
+                                    const std::optional<molecule::Strength>& strength) {
   if (phase == Phase::Unstated) phase = Phase::Gas;
   if (phase == Phase::Aqueous) return dissolved_formation(species, strength);
   const Compound* compound = species.compound;
@@ -107,11 +122,13 @@ Result<Sourced> tabulated_formation(const Species& species, Phase phase, const s
     zero.value = Quantity(0);
     zero.route = "table";
     zero.source = "element in its reference state, zero by definition";
-    zero.working.push_back("ΔfH(" + std::string(molecule::phase_text(phase)) + ") " + species.name + " = 0, element in its reference state");
+    zero.working.push_back("ΔfH(" + std::string(molecule::phase_text(phase)) + ") " + species.name +
+                           " = 0, element in its reference state");
     return zero;
   }
   const facts::PhaseFacts* facts = facts_of(*compound, phase);
-  if (facts != nullptr && facts->formation_enthalpy) return from_datum(species, phase, *facts->formation_enthalpy);
+  if (facts != nullptr && facts->formation_enthalpy)
+    return from_datum(species, phase, *facts->formation_enthalpy);
 
   // One of gas and liquid is tabulated, and what lies between them: the other follows.
   const bool to_gas = phase == Phase::Gas && has_formation(*compound, Phase::Liquid);
@@ -121,12 +138,14 @@ Result<Sourced> tabulated_formation(const Species& species, Phase phase, const s
     Result<Sourced> known = tabulated_formation(species, to_gas ? Phase::Liquid : Phase::Gas);
     if (!known.ok()) return known;
     Sourced result = std::move(known).value();
-    result.value.add(Quantity(evaporation.value, evaporation.u95, figure_key(SourceKind::Phase, species, Phase::Liquid)),
-                     to_gas ? 1 : -1);
+    result.value.add(
+        Quantity(evaporation.value, evaporation.u95, figure_key(SourceKind::Phase, species, Phase::Liquid)),
+        to_gas ? 1 : -1);
     result.source += "; vaporisation at 298.15 K " + std::string(evaporation.source);
     result.working.push_back(std::string(to_gas ? "plus" : "minus") + " vaporisation at 298.15 K " +
-                             display_number(evaporation.value / kJ, 2) + " ± " + display_number(evaporation.u95 / kJ, 2) +
-                             " kJ/mol, " + std::string(evaporation.source));
+                             display_number(evaporation.value / kJ, 2) + " ± " +
+                             display_number(evaporation.u95 / kJ, 2) + " kJ/mol, " +
+                             std::string(evaporation.source));
     return result;
   }
   return no_formation(species, phase);

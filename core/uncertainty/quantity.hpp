@@ -1,5 +1,5 @@
-// A value with its ±, kept as the list of independent sources that the ± comes from, so that what stands on both
-// sides of a difference cancels. Display of figures stands in core/units.
+// A value with its ±, kept as the list of independent sources that the ± comes from, so that what stands on
+// both sides of a difference cancels. Display of figures stands in core/units.
 #pragma once
 
 #include <cstdint>
@@ -15,16 +15,28 @@ struct Figure {
   double u95 = 0;  ///< >= 0
 };
 
-/// One independent source of error: a bond value, one table row, one typed figure. Equal keys are the same error.
+/// One independent source of error: a bond value, one table row, one typed figure. Equal keys are the same
+/// error.
 using SourceKey = std::uint64_t;
 
 /// Kinds of source; the upper bits of a SourceKey, so that keys of different kinds never meet.
-enum class SourceKind : std::uint8_t { BondValue = 1, Compound, Phase, HeatCapacity, Atom, Typed, Estimate, Measurement, Other };
+enum class SourceKind : std::uint8_t {
+  BondValue = 1,
+  Compound,
+  Phase,
+  HeatCapacity,
+  Atom,
+  Typed,
+  Estimate,
+  Measurement,
+  Other
+};
 constexpr SourceKey source_key(SourceKind kind, std::uint64_t index) {
   return (static_cast<SourceKey>(kind) << 56) | (index & 0x00ffffffffffffffULL);
 }
 
-/// Sensitivity of a quantity to one source times that source's 95 % half width; the sign matters for cancelling.
+/// Sensitivity of a quantity to one source times that source's 95 % half width; the sign matters for
+/// cancelling.
 struct Part {
   SourceKey source = 0;
   double u95 = 0;

@@ -54,7 +54,8 @@ const Named* find(const Dimension& dimension) {
 }
 
 void add_base(std::string& text, std::string_view name, int exponent) {
-  constexpr std::array<std::string_view, 10> kRaised = {"\u2070", "", "\u00B2", "\u00B3", "\u2074", "\u2075", "\u2076", "\u2077", "\u2078", "\u2079"};
+  constexpr std::array<std::string_view, 10> kRaised = {"\u2070", "",       "\u00B2", "\u00B3", "\u2074",
+                                                        "\u2075", "\u2076", "\u2077", "\u2078", "\u2079"};
   if (exponent <= 0) return;
   if (!text.empty()) text += ' ';
   text += name;
@@ -66,8 +67,11 @@ void add_base(std::string& text, std::string_view name, int exponent) {
 std::string describe(const Dimension& dimension) {
   if (const Named* entry = find(dimension)) return std::string(entry->words);
   std::string above, below;
-  const std::array<std::pair<std::string_view, int>, 5> bases = {
-      {{"kg", dimension.kg}, {"m", dimension.m}, {"mol", dimension.mol}, {"K", dimension.K}, {"s", dimension.s}}};
+  const std::array<std::pair<std::string_view, int>, 5> bases = {{{"kg", dimension.kg},
+                                                                  {"m", dimension.m},
+                                                                  {"mol", dimension.mol},
+                                                                  {"K", dimension.K},
+                                                                  {"s", dimension.s}}};
   for (const auto& [name, exponent] : bases) {
     add_base(above, name, exponent);
     add_base(below, name, -exponent);

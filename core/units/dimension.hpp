@@ -1,5 +1,5 @@
-// What kind of thing a number measures: exponents of the SI base units, and a kind that keeps apart what has equal
-// exponents. Units of measure stand in unit.hpp.
+// What kind of thing a number measures: exponents of the SI base units, and a kind that keeps apart what has
+// equal exponents. Units of measure stand in unit.hpp.
 #pragma once
 
 #include <cstdint>
@@ -62,13 +62,15 @@ constexpr Dimension kMolarHeatCapacity{1, 2, -2, -1, -1, Kind::Plain};
 constexpr Dimension kMassHeatCapacity{0, 2, -2, -1, 0, Kind::Plain};
 constexpr Dimension kHeatTransferCoefficient{1, 0, -3, -1, 0, Kind::Plain};  ///< U
 constexpr Dimension kHeatTransferPerKelvin{1, 2, -3, -1, 0, Kind::Plain};    ///< UA
-constexpr Dimension kEnergyPerVolume{1, -1, -2, 0, 0, Kind::Plain};          ///< the same exponents as a pressure
+constexpr Dimension kEnergyPerVolume{1, -1, -2, 0, 0, Kind::Plain};  ///< the same exponents as a pressure
 }  // namespace dimension
 
-/// "an energy per mole", "a gauge pressure"; for dimensions without a name their SI unit, "a figure in kg m²/s".
+/// "an energy per mole", "a gauge pressure"; for dimensions without a name their SI unit, "a figure in kg
+/// m²/s".
 std::string describe(const Dimension& dimension);
 
-/// Units that suit a dimension, the one to print in first: for hints and for completion. Empty for those without a name.
+/// Units that suit a dimension, the one to print in first: for hints and for completion. Empty for those
+/// without a name.
 std::vector<std::string_view> suggested_units(const Dimension& dimension);
 
 }  // namespace heatledger::units

@@ -7,7 +7,8 @@
 
 namespace heatledger::units {
 
-/// Decimals that an uncertainty justifies: two significant digits of u95, at most `most`; `most` when u95 is zero.
+/// Decimals that an uncertainty justifies: two significant digits of u95, at most `most`; `most` when u95 is
+/// zero.
 int decimals_for(double u95, int most);
 
 /// A figure with its ± for running text: "−552.6 ± 3.0"; the ± is left out when it is zero.

@@ -18,12 +18,17 @@ constexpr std::array<std::string_view, 10> kSuperscripts = {"\u2070", "\u00B9", 
 constexpr std::string_view kRaisedMinus = "\u207B";
 constexpr std::string_view kMinus = "\u2212";
 
-bool is_digit(char c) { return c >= '0' && c <= '9'; }
-bool is_letter(char c) { return (c >= 'a' && c <= 'z') || (c >= 'A' && c <= 'Z') || c == '_'; }
+bool is_digit(char c) {
+  return c >= '0' && c <= '9';
+}
+bool is_letter(char c) {
+  return (c >= 'a' && c <= 'z') || (c >= 'A' && c <= 'Z') || c == '_';
+}
 
 std::string raised(int exponent) {
   std::string text = exponent < 0 ? std::string(kRaisedMinus) : "";
-  for (const char c : std::to_string(std::abs(exponent))) text += kSuperscripts[static_cast<std::size_t>(c - '0')];
+  for (const char c : std::to_string(std::abs(exponent)))
+    text += kSuperscripts[static_cast<std::size_t>(c - '0')];
   return text;
 }
 
@@ -32,7 +37,8 @@ class UnitReader {
   explicit UnitReader(std::string_view text) : text_(text) {}
 
   Result<Unit> read() {
-    if (text_.size() > kLongestText) return error_at("unit.too_long", "This is too long for a unit.", 0, "Write a unit such as kJ/mol.");
+    if (text_.size() > kLongestText)
+      return error_at("unit.too_long", "This is too long for a unit.", 0, "Write a unit such as kJ/mol.");
     at_ = utf8::skip_blanks(text_, 0);
     if (at_ < text_.size()) {
       if (std::optional<Error> failed = read_product(1, false)) return *failed;
@@ -64,12 +70,15 @@ class UnitReader {
     for (;;) {
       at_ = utf8::skip_blanks(text_, at_);
       if (at_ >= text_.size() || (inside && text_[at_] == ')')) {
-        if (expects_factor) return error_at("unit.unexpected", "A unit is missing here.", at_, "Write a unit such as kJ/mol.");
+        if (expects_factor)
+          return error_at("unit.unexpected", "A unit is missing here.", at_, "Write a unit such as kJ/mol.");
         bracket_below();
         return std::nullopt;
       }
       if (text_[at_] == '/') {
-        if (expects_factor) return error_at("unit.unexpected", "A unit is missing before this slash.", at_, "Write 1/h or a unit in front.");
+        if (expects_factor)
+          return error_at("unit.unexpected", "A unit is missing before this slash.", at_,
+                          "Write 1/h or a unit in front.");
         here = -sign;
         bracket_below();
         factors_below = 0;
@@ -99,13 +108,18 @@ class UnitReader {
 
   std::optional<Error> read_factor(int sign) {
     const std::size_t begin = at_;
-    if (at_ >= text_.size()) return error_at("unit.unexpected", "A unit is missing here.", at_, "Write a unit such as kJ/mol.");
+    if (at_ >= text_.size())
+      return error_at("unit.unexpected", "A unit is missing here.", at_, "Write a unit such as kJ/mol.");
     if (text_[at_] == '(') {
-      if (++depth_ > 8) return error_at("unit.unexpected", "Brackets are nested too deeply.", begin, "Write a unit such as kJ/(kg K).");
+      if (++depth_ > 8)
+        return error_at("unit.unexpected", "Brackets are nested too deeply.", begin,
+                        "Write a unit such as kJ/(kg K).");
       ++at_;
       unit_.display += '(';
       if (std::optional<Error> failed = read_product(sign, true)) return failed;
-      if (at_ >= text_.size()) return error_at("unit.unclosed_bracket", "This bracket is never closed.", begin, "Add the closing bracket.");
+      if (at_ >= text_.size())
+        return error_at("unit.unclosed_bracket", "This bracket is never closed.", begin,
+                        "Add the closing bracket.");
       ++at_;
       --depth_;
       unit_.display += ')';
@@ -122,7 +136,8 @@ class UnitReader {
     const UnitName* name = find_unit_name(rest);
     const AmbiguousName* two = find_ambiguous_name(rest);
     if (two != nullptr && (name == nullptr || two->text.size() > name->text.size())) {
-      return error_at("unit.ambiguous", "\"" + std::string(two->text) + "\" has more than one meaning.", begin, std::string(two->hint));
+      return error_at("unit.ambiguous", "\"" + std::string(two->text) + "\" has more than one meaning.",
+                      begin, std::string(two->hint));
     }
     if (name == nullptr) return unknown(begin);
     at_ += name->text.size();
@@ -145,7 +160,8 @@ class UnitReader {
     const std::size_t sign_bytes = starts("-") ? 1 : starts(kMinus) || starts(kRaisedMinus) ? 3 : 0;
     if (sign_bytes > 0) {
       const std::size_t after = at_ + sign_bytes;
-      const bool digit = after < text_.size() && (is_digit(text_[after]) || static_cast<unsigned char>(text_[after]) >= 0xC2);
+      const bool digit = after < text_.size() &&
+                         (is_digit(text_[after]) || static_cast<unsigned char>(text_[after]) >= 0xC2);
       if (!digit && !caret) return std::nullopt;  // a hyphen that joins two units
       negative = true;
       at_ = after;
@@ -155,7 +171,8 @@ class UnitReader {
       std::size_t bytes = 1;
       if (is_digit(text_[at_])) digit = text_[at_] - '0';
       for (int i = 0; i < 10 && digit < 0; ++i) {
-        if (starts(kSuperscripts[static_cast<std::size_t>(i)])) digit = i, bytes = kSuperscripts[static_cast<std::size_t>(i)].size();
+        if (starts(kSuperscripts[static_cast<std::size_t>(i)]))
+          digit = i, bytes = kSuperscripts[static_cast<std::size_t>(i)].size();
       }
       if (digit < 0) break;
       value = std::min(value * 10 + digit, 100);
@@ -172,11 +189,13 @@ class UnitReader {
   }
 
   static Error bad_exponent(std::size_t at) {
-    return error_at("unit.bad_exponent", "This exponent cannot be read.", at, "Write exponents as m2, m^2 or s-1, from 1 to 9.");
+    return error_at("unit.bad_exponent", "This exponent cannot be read.", at,
+                    "Write exponents as m2, m^2 or s-1, from 1 to 9.");
   }
 
   std::optional<Error> multiply(const UnitName& name, int exponent, std::size_t begin) {
-    for (int i = 0; i < std::abs(exponent); ++i) unit_.factor = exponent > 0 ? unit_.factor * name.factor : unit_.factor / name.factor;
+    for (int i = 0; i < std::abs(exponent); ++i)
+      unit_.factor = exponent > 0 ? unit_.factor * name.factor : unit_.factor / name.factor;
     auto grow = [&](std::int8_t& total, std::int8_t one) {
       const int sum = total + one * exponent;
       if (std::abs(sum) > 4 * kMostExponent) return false;
@@ -185,21 +204,25 @@ class UnitReader {
     };
     Dimension& sum = unit_.dimension;
     const Dimension& one = name.dimension;
-    const bool fits = grow(sum.kg, one.kg) && grow(sum.m, one.m) && grow(sum.s, one.s) && grow(sum.K, one.K) && grow(sum.mol, one.mol);
+    const bool fits = grow(sum.kg, one.kg) && grow(sum.m, one.m) && grow(sum.s, one.s) &&
+                      grow(sum.K, one.K) && grow(sum.mol, one.mol);
     if (!fits || !std::isfinite(unit_.factor) || unit_.factor == 0) return bad_exponent(begin);
     return std::nullopt;
   }
 
   Error unknown(std::size_t begin) const {
     std::size_t end = begin;
-    while (end < text_.size() && (is_letter(text_[end]) || is_digit(text_[end]) || static_cast<unsigned char>(text_[end]) >= 0x80)) ++end;
+    while (end < text_.size() &&
+           (is_letter(text_[end]) || is_digit(text_[end]) || static_cast<unsigned char>(text_[end]) >= 0x80))
+      ++end;
     if (end == begin) end = std::min(text_.size(), begin + 1);
     const std::string_view word = text_.substr(begin, end - begin);
     std::string_view letters = word;
     while (!letters.empty() && is_digit(letters.back())) letters.remove_suffix(1);
     const std::string_view near = nearest_unit_name(letters);
     return error_at("unit.unknown", "There is no unit \"" + std::string(word) + "\" here.", begin,
-                    near.empty() ? "Write a unit such as kJ/mol, kg/h, bar or °C." : "Did you mean " + std::string(near) + "?");
+                    near.empty() ? "Write a unit such as kJ/mol, kg/h, bar or °C."
+                                 : "Did you mean " + std::string(near) + "?");
   }
 
   std::string_view text_;
@@ -211,6 +234,8 @@ class UnitReader {
 
 }  // namespace
 
-Result<Unit> parse_unit(std::string_view text) { return UnitReader(text).read(); }
+Result<Unit> parse_unit(std::string_view text) {
+  return UnitReader(text).read();
+}
 
 }  // namespace heatledger::units

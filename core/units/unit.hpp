@@ -21,10 +21,12 @@ struct Unit {
   double from_si(double value) const { return (value - offset) / factor; }
 };
 
-/// Reads a unit: names of the table with exponents, joined by blank, "·", "*" or "-", divided by "/". What follows a
-/// slash up to the next one is below the line: "J/mol K" is "J/(mol K)". Exponents as "m2", "m^2", "m²", "s-1".
-/// A scale of temperature within a product is the difference: "kJ/(kg °C)". The empty text is a plain number.
-/// @errors unit.unknown (hint: the nearest name), unit.ambiguous (standard m3, ton, gal, ppm, %: lists what to write),
+/// Reads a unit: names of the table with exponents, joined by blank, "·", "*" or "-", divided by "/". What
+/// follows a slash up to the next one is below the line: "J/mol K" is "J/(mol K)". Exponents as "m2", "m^2",
+/// "m²", "s-1". A scale of temperature within a product is the difference: "kJ/(kg °C)". The empty text is a
+/// plain number.
+/// @errors unit.unknown (hint: the nearest name), unit.ambiguous (standard m3, ton, gal, ppm, %: lists what
+/// to write),
 ///         unit.bad_exponent, unit.unclosed_bracket, unit.unexpected, unit.too_long; `where` is "offset N"
 /// @example Units.ReadsEverySpellingOfProducts
 Result<Unit> parse_unit(std::string_view text);

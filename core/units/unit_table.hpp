@@ -14,7 +14,8 @@ struct UnitName {
   Dimension dimension;
 };
 
-/// The longest name that stands at the beginning of the text and ends at a boundary; nullptr when there is none.
+/// The longest name that stands at the beginning of the text and ends at a boundary; nullptr when there is
+/// none.
 const UnitName* find_unit_name(std::string_view text);
 
 /// Names that have two meanings in use, with what to write instead; empty when the text begins with none.

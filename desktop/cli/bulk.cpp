@@ -21,12 +21,14 @@ struct Options {
 
 constexpr std::size_t kChunk = 1 << 16;
 
-/// Standard input in lines, with one buffer that is never longer than the longest line allowed plus one chunk.
+/// Standard input in lines, with one buffer that is never longer than the longest line allowed plus one
+/// chunk.
 class Lines {
  public:
   enum class Got : std::uint8_t { Line, TooLong, WouldWait, End };
 
-  /// The next line, or WouldWait when the buffer holds no whole line: the caller then flushes and calls fill().
+  /// The next line, or WouldWait when the buffer holds no whole line: the caller then flushes and calls
+  /// fill().
   Got next(std::string_view& line) {
     while (true) {
       const std::string_view rest(buffer_.data() + from_, filled_ - from_);
@@ -92,7 +94,8 @@ bool write_out(std::string& text) {
     const ssize_t written = ::write(STDOUT_FILENO, rest.data(), rest.size());
     if (written < 0 && errno == EINTR) continue;
     if (written <= 0) {
-      complain({"file.cannot_write", std::string("Standard output cannot be written: ") + std::strerror(errno) + ".", "", ""});
+      complain({"file.cannot_write",
+                std::string("Standard output cannot be written: ") + std::strerror(errno) + ".", "", ""});
       return false;
     }
     rest.remove_prefix(static_cast<std::size_t>(written));
@@ -111,17 +114,23 @@ int run(const Options& options) {
   std::string_view line;
   while (true) {
     switch (lines.next(line)) {
-      case Lines::Got::Line: bulk.answer(line, answers); break;
-      case Lines::Got::TooLong: bulk.answer_too_long(line, answers); break;
+      case Lines::Got::Line:
+        bulk.answer(line, answers);
+        break;
+      case Lines::Got::TooLong:
+        bulk.answer_too_long(line, answers);
+        break;
       case Lines::Got::WouldWait:
         // A program that asks line by line through a pipe gets its answers before more is read.
         if (!write_out(answers)) return kWrongInput;
         if (!lines.fill()) {
-          complain({"file.cannot_read", std::string("Standard input cannot be read: ") + std::strerror(errno) + ".", "", ""});
+          complain({"file.cannot_read",
+                    std::string("Standard input cannot be read: ") + std::strerror(errno) + ".", "", ""});
           return kWrongInput;
         }
         break;
-      case Lines::Got::End: return write_out(answers) ? kDone : kWrongInput;
+      case Lines::Got::End:
+        return write_out(answers) ? kDone : kWrongInput;
     }
     if (answers.size() >= kChunk && !write_out(answers)) return kWrongInput;
   }
@@ -133,15 +142,19 @@ void add_bulk(CLI::App& app, Chosen& chosen) {
   CLI::App* command = app.add_subcommand(
       "bulk", "Answers questions from standard input, one JSON object a line in, one out, in order");
   const auto options = std::make_shared<Options>();
-  command->add_option("--set", options->set, "Whose figures to state: average bonds (routes.context is left out), or bonds in context")
+  command
+      ->add_option("--set", options->set,
+                   "Whose figures to state: average bonds (routes.context is left out), or bonds in context")
       ->check(CLI::IsMember({"average", "context"}))
       ->capture_default_str();
-  command->add_flag("--full", options->full, "Whole answers, as `tally --json` and `species --json` give them");
+  command->add_flag("--full", options->full,
+                    "Whole answers, as `tally --json` and `species --json` give them");
   command->footer(
       "Lines:  {\"id\": 1, \"equation\": \"H2 + Cl2 -> 2 HCl\"}\n"
       "        {\"id\": 2, \"species\": \"ethyl acetate\", \"estimate_only\": true}\n"
       "        {\"id\": 3, \"smiles\": \"CCO\"}\n"
-      "A line that cannot be answered gives {\"id\", \"error\"} in its place; the run goes on and ends with status 0.");
+      "A line that cannot be answered gives {\"id\", \"error\"} in its place; the run goes on and ends with "
+      "status 0.");
   command->callback([options, &chosen] { chosen = [options] { return run(*options); }; });
 }
 

@@ -9,7 +9,8 @@ namespace heatledger::cli {
 /// Exit status of every command.
 enum ExitStatus : int { kDone = 0, kWrongInput = 1, kUsage = 2 };
 
-/// What the parser found: the chosen command, to be run once everything is parsed. The answer is the exit status.
+/// What the parser found: the chosen command, to be run once everything is parsed. The answer is the exit
+/// status.
 using Chosen = std::function<int()>;
 
 void add_tally(CLI::App& app, Chosen& chosen);

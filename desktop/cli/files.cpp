@@ -15,7 +15,8 @@ namespace heatledger::cli {
 namespace {
 
 Error cannot(const char* code, const char* what, const std::string& path) {
-  return {code, std::string(what) + ": " + std::strerror(errno) + ".", path, "Check the path and its permissions."};
+  return {code, std::string(what) + ": " + std::strerror(errno) + ".", path,
+          "Check the path and its permissions."};
 }
 
 bool write_all(int file, std::string_view text) {

@@ -9,7 +9,8 @@ namespace {
 
 constexpr const char* kAbout =
     "Heats of reaction with their ± and their working: bonds broken and formed, formation enthalpies,\n"
-    "corrections to the phases written. Figures are drafts: measure before a design or a safety file rests on them.";
+    "corrections to the phases written. Figures are drafts: measure before a design or a safety file rests "
+    "on them.";
 
 constexpr const char* kFooter =
     "Examples:\n"
@@ -44,7 +45,8 @@ int run(int argc, char** argv) {
 }  // namespace
 
 int main(int argc, char** argv) {
-  // A reader that closes the pipe ends the program without a word, also when the parent had ignored the signal.
+  // A reader that closes the pipe ends the program without a word, also when the parent had ignored the
+  // signal.
   std::signal(SIGPIPE, SIG_DFL);
   try {
     return run(argc, argv);

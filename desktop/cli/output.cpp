@@ -10,8 +10,10 @@
 namespace heatledger::cli {
 
 bool print(std::string_view text) {
-  const bool written = std::fwrite(text.data(), 1, text.size(), stdout) == text.size() && std::fflush(stdout) == 0;
-  if (!written) std::fprintf(stderr, "heatledger: standard output cannot be written: %s\n", std::strerror(errno));
+  const bool written =
+      std::fwrite(text.data(), 1, text.size(), stdout) == text.size() && std::fflush(stdout) == 0;
+  if (!written)
+    std::fprintf(stderr, "heatledger: standard output cannot be written: %s\n", std::strerror(errno));
   return written;
 }
 
@@ -20,6 +22,8 @@ void complain(const Error& error) {
   std::fwrite(text.data(), 1, text.size(), stderr);
 }
 
-void complain_json(const Error& error) { print(page::error_json(error)); }
+void complain_json(const Error& error) {
+  print(page::error_json(error));
+}
 
 }  // namespace heatledger::cli

@@ -43,18 +43,26 @@ int run(const Options& options) {
 }  // namespace
 
 void add_tally(CLI::App& app, Chosen& chosen) {
-  CLI::App* command = app.add_subcommand("tally", "The ledger of one equation: bonds broken and formed, routes, ±");
+  CLI::App* command =
+      app.add_subcommand("tally", "The ledger of one equation: bonds broken and formed, routes, ±");
   const auto options = std::make_shared<Options>();
-  command->add_option("equation", options->equation,
-                      "\"nitrobenzene(l) + 3 H2 -> aniline(l) + 2 H2O(l)\": names, formulas, SMILES in double quotes; "
-                      "- reads it from standard input")
+  command
+      ->add_option(
+          "equation", options->equation,
+          "\"nitrobenzene(l) + 3 H2 -> aniline(l) + 2 H2O(l)\": names, formulas, SMILES in double quotes; "
+          "- reads it from standard input")
       ->required();
   command->add_option("--set", options->set, "Whose figures to state: average bonds, or bonds in context")
       ->check(CLI::IsMember({"average", "context"}))
       ->capture_default_str();
-  command->add_option("--table", options->table, "Published table of average bonds; the primary one if not given");
-  command->add_option("--basis", options->basis, "Also state it per mole of SPECIES, or per \"kg SPECIES\", or per \"kg reactants\"");
-  command->add_option("--reactants-at", options->reactants_at, "Temperature of what goes in, \"80 degC\"; 25 degC if not given")->type_name("T");
+  command->add_option("--table", options->table,
+                      "Published table of average bonds; the primary one if not given");
+  command->add_option("--basis", options->basis,
+                      "Also state it per mole of SPECIES, or per \"kg SPECIES\", or per \"kg reactants\"");
+  command
+      ->add_option("--reactants-at", options->reactants_at,
+                   "Temperature of what goes in, \"80 degC\"; 25 degC if not given")
+      ->type_name("T");
   command->add_option("--products-at", options->products_at, "Temperature of what comes out")->type_name("T");
   command->add_flag("--smiles", options->smiles, "Every species is SMILES, as if in double quotes");
   command->add_flag("--json", options->json, "One JSON object: kJ for the written coefficients");

@@ -14,8 +14,8 @@
 namespace heatledger::cli {
 namespace {
 
-/// Hands over to heatledger-window beside this program, else on PATH. A program of its own, so that the command line
-/// runs where there is no display and no graphics library.
+/// Hands over to heatledger-window beside this program, else on PATH. A program of its own, so that the
+/// command line runs where there is no display and no graphics library.
 int run(const std::string& sheet) {
   std::vector<char*> arguments;
   std::string program = "heatledger-window";
@@ -24,7 +24,8 @@ int run(const std::string& sheet) {
   const std::filesystem::path here = std::filesystem::read_symlink("/proc/self/exe", problem);
   if (!problem) {
     const std::filesystem::path folder = here.parent_path();
-    for (const std::filesystem::path& candidate : {folder / program, folder.parent_path() / "window" / program}) {
+    for (const std::filesystem::path& candidate :
+         {folder / program, folder.parent_path() / "window" / program}) {
       if (std::filesystem::exists(candidate, problem)) {
         program = candidate.string();
         break;
@@ -35,8 +36,8 @@ int run(const std::string& sheet) {
   if (!file.empty()) arguments.push_back(file.data());
   arguments.push_back(nullptr);
   ::execvp(program.c_str(), arguments.data());
-  complain({"window.not_found", std::string("The window could not be started: ") + std::strerror(errno) + ".", program,
-            "Install heatledger-window beside heatledger."});
+  complain({"window.not_found", std::string("The window could not be started: ") + std::strerror(errno) + ".",
+            program, "Install heatledger-window beside heatledger."});
   return kWrongInput;
 }
 

@@ -88,18 +88,23 @@ int run(const Options& options) {
   }
   const int errors = count_errors(shown);
   if (errors == 0) return kDone;
-  complain({"work.errors_on_sheet",
-            errors == 1 ? "The sheet shows an error." : "The sheet shows " + std::to_string(errors) + " errors.",
-            options.sheet, "The text of the sheet names each place."});
+  complain(
+      {"work.errors_on_sheet",
+       errors == 1 ? "The sheet shows an error." : "The sheet shows " + std::to_string(errors) + " errors.",
+       options.sheet, "The text of the sheet names each place."});
   return kWrongInput;
 }
 
 }  // namespace
 
 void add_work(CLI::App& app, Chosen& chosen) {
-  CLI::App* command = app.add_subcommand("work", "Computes a worksheet: prints it, or writes its report, tables and drawings");
+  CLI::App* command = app.add_subcommand(
+      "work", "Computes a worksheet: prints it, or writes its report, tables and drawings");
   const auto options = std::make_shared<Options>();
-  command->add_option("sheet", options->sheet, "Worksheet file (*.heatledger.json); - reads it from standard input")->required();
+  command
+      ->add_option("sheet", options->sheet,
+                   "Worksheet file (*.heatledger.json); - reads it from standard input")
+      ->required();
   command->add_option("--html", options->html, "Write a report that prints as it stands")->type_name("OUT");
   command->add_option("--csv", options->csv, "Write every table as comma-separated values")->type_name("OUT");
   command->add_option("--svg", options->svg, "Write every drawing into this folder")->type_name("DIR");

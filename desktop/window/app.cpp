@@ -15,13 +15,15 @@
 namespace heatledger::window {
 namespace {
 
-constexpr float kEdge = 22;         // desk around the paper
-constexpr float kPaperPad = 32;     // paper around the content
+constexpr float kEdge = 22;      // desk around the paper
+constexpr float kPaperPad = 32;  // paper around the content
 constexpr float kWidestPaper = 960, kNarrowestPaper = 480;
 constexpr float kMessageHeight = 28;
-constexpr double kBlink = 0.53;     // [s]
+constexpr double kBlink = 0.53;  // [s]
 
-std::string file_name(const std::string& path) { return std::filesystem::path(path).filename().string(); }
+std::string file_name(const std::string& path) {
+  return std::filesystem::path(path).filename().string();
+}
 
 std::string clock_text() {
   const std::time_t now = std::time(nullptr);
@@ -49,8 +51,10 @@ std::string beside(const std::string& path, const std::string& ending) {
 
 App::App(Backend& backend)
     : backend_(backend),
-      field_({[&backend] { return backend.clipboard(); }, [&backend](const std::string& text) { backend.set_clipboard(text); }}),
-      prompt_({[&backend] { return backend.clipboard(); }, [&backend](const std::string& text) { backend.set_clipboard(text); }}) {
+      field_({[&backend] { return backend.clipboard(); },
+              [&backend](const std::string& text) { backend.set_clipboard(text); }}),
+      prompt_({[&backend] { return backend.clipboard(); },
+               [&backend](const std::string& text) { backend.set_clipboard(text); }}) {
   update_bar();
 }
 
@@ -65,7 +69,9 @@ void App::open(const std::string& path) {
   page_changed();
 }
 
-void App::select(const std::string& cell) { select_cell(layout().find(cell)); }
+void App::select(const std::string& cell) {
+  select_cell(layout().find(cell));
+}
 
 std::string App::cell_places() {
   std::string text;
@@ -74,7 +80,8 @@ std::string App::cell_places() {
   for (const PlacedCell& placed : layout_.cells) {
     if (!can_select(placed)) continue;
     text += placed.cell->id;
-    for (const float value : {placed.area.x + origin.x, placed.area.y + origin.y, placed.area.width, placed.area.height}) {
+    for (const float value :
+         {placed.area.x + origin.x, placed.area.y + origin.y, placed.area.width, placed.area.height}) {
       text += '\t' + std::to_string(static_cast<int>(std::lround(value * fonts_.scale())));
     }
     text += '\n';
@@ -100,7 +107,8 @@ void App::run() {
   }
 }
 
-// --- layout -----------------------------------------------------------------------------------------------------------
+// --- layout
+// -----------------------------------------------------------------------------------------------------------
 
 Rect App::paper() const {
   const Point size = backend_.size();
@@ -115,7 +123,8 @@ Rect App::margin_area() const {
   const Point size = backend_.size();
   const Rect sheet = paper();
   const float x = sheet.right() + kEdge;
-  return {x, sheet.y + 8, std::max(0.0f, std::min(300.0f, size.x - x - kEdge)), size.y - sheet.y - 8 - kMessageHeight};
+  return {x, sheet.y + 8, std::max(0.0f, std::min(300.0f, size.x - x - kEdge)),
+          size.y - sheet.y - 8 - kMessageHeight};
 }
 
 Point App::content_origin() const {
@@ -123,7 +132,9 @@ Point App::content_origin() const {
   return {sheet.x + kPaperPad, sheet.y + 26 - scroll_};
 }
 
-float App::content_width() const { return paper().width - 2 * kPaperPad; }
+float App::content_width() const {
+  return paper().width - 2 * kPaperPad;
+}
 
 const Layout& App::layout() {
   const float scale = backend_.scale() * zoom_;
@@ -177,7 +188,9 @@ void App::update_bar() {
   buttons.push_back({"tables", "Tables", "Ctrl+T", true});
   const bool changed = session_.changed_since_save();
   const std::string file = path_.empty() ? "new sheet" : file_name(path_);
-  const std::string state = changed ? "changed" : saved_at_.empty() ? (path_.empty() ? "empty" : "as opened") : "saved " + saved_at_;
+  const std::string state = changed             ? "changed"
+                            : saved_at_.empty() ? (path_.empty() ? "empty" : "as opened")
+                                                : "saved " + saved_at_;
   const std::string title = (changed ? "● " : "") + page.title + " – Heatledger";
   if (title != title_) {
     title_ = title;
@@ -199,7 +212,8 @@ void App::say(const Error& error) {
   say(std::move(text), true);
 }
 
-// --- files ------------------------------------------------------------------------------------------------------------
+// --- files
+// ------------------------------------------------------------------------------------------------------------
 
 bool App::save(const std::string& path) {
   finish_edit();
@@ -257,16 +271,22 @@ void App::guard(Pending what, const std::string& path) {
   pending_path_ = path;
   if (!session_.changed_since_save()) return go_on();
   const std::string name = path_.empty() ? "This sheet" : file_name(path_);
-  question_.ask(name + " has changes that are not saved.", {{"save", "Save"}, {"drop", "Leave without saving"}, {"stay", "Go back"}});
+  question_.ask(name + " has changes that are not saved.",
+                {{"save", "Save"}, {"drop", "Leave without saving"}, {"stay", "Go back"}});
   dirty_ = true;
 }
 
 void App::go_on() {
   const Pending what = std::exchange(pending_, Pending::None);
   switch (what) {
-    case Pending::None: break;
-    case Pending::Close: closing_ = true; break;
-    case Pending::New: new_sheet(); break;
+    case Pending::None:
+      break;
+    case Pending::Close:
+      closing_ = true;
+      break;
+    case Pending::New:
+      new_sheet();
+      break;
     case Pending::Open:
       if (pending_path_.empty()) {
         start_prompt(FilePrompt::Purpose::Open);
@@ -298,9 +318,15 @@ void App::start_prompt(FilePrompt::Purpose purpose) {
       text = folder.empty() ? "" : folder.string() + "/";
       break;
     }
-    case FilePrompt::Purpose::Save: text = path_.empty() ? "sheet.heatledger.json" : path_; break;
-    case FilePrompt::Purpose::Report: text = beside(path_, ".html"); break;
-    case FilePrompt::Purpose::Tables: text = beside(path_, ".csv"); break;
+    case FilePrompt::Purpose::Save:
+      text = path_.empty() ? "sheet.heatledger.json" : path_;
+      break;
+    case FilePrompt::Purpose::Report:
+      text = beside(path_, ".html");
+      break;
+    case FilePrompt::Purpose::Tables:
+      text = beside(path_, ".csv");
+      break;
   }
   prompt_.start(purpose, text);
   dirty_ = true;
@@ -311,7 +337,9 @@ void App::finish_prompt(FilePrompt::Outcome outcome) {
   if (outcome == FilePrompt::Outcome::Cancelled) pending_ = Pending::None;
   if (outcome != FilePrompt::Outcome::Chosen) return;
   switch (prompt_.purpose()) {
-    case FilePrompt::Purpose::Open: load(prompt_.path()); break;
+    case FilePrompt::Purpose::Open:
+      load(prompt_.path());
+      break;
     case FilePrompt::Purpose::Save:
       if (save(prompt_.path())) {
         go_on();
@@ -319,8 +347,12 @@ void App::finish_prompt(FilePrompt::Outcome outcome) {
         pending_ = Pending::None;
       }
       break;
-    case FilePrompt::Purpose::Report: write_report(prompt_.path()); break;
-    case FilePrompt::Purpose::Tables: write_tables(prompt_.path()); break;
+    case FilePrompt::Purpose::Report:
+      write_report(prompt_.path());
+      break;
+    case FilePrompt::Purpose::Tables:
+      write_tables(prompt_.path());
+      break;
   }
 }
 
@@ -334,7 +366,8 @@ void App::write_tables(const std::string& path) {
   written.ok() ? say("Wrote " + path + ".") : say(written.error());
 }
 
-// --- frame ------------------------------------------------------------------------------------------------------------
+// --- frame
+// ------------------------------------------------------------------------------------------------------------
 
 void App::draw() {
   layout();
@@ -343,7 +376,8 @@ void App::draw() {
     margin_scroll_ = 0;
     margin_ = {};
     if (!selected_.empty()) {
-      if (Result<page::Margin> margin = session_.margin(selected_); margin.ok()) margin_ = std::move(margin.value());
+      if (Result<page::Margin> margin = session_.margin(selected_); margin.ok())
+        margin_ = std::move(margin.value());
     }
   }
   if (!backend_.begin_frame()) return;
@@ -355,14 +389,16 @@ void App::draw() {
 
   canvas.clip(desk);
   const Rect sheet = paper();
-  const Rect page_box{sheet.x, sheet.y - scroll_, sheet.width, std::max(layout_.height + 26 + 44, size.y - sheet.y - kEdge)};
+  const Rect page_box{sheet.x, sheet.y - scroll_, sheet.width,
+                      std::max(layout_.height + 26 + 44, size.y - sheet.y - kEdge)};
   canvas.fill(page_box, ink::kPaper);
   canvas.frame(page_box, ink::kEdge);
   draw_sheet(canvas, layout_, content_origin(), {selected_, hovered_, editing_});
   if (!editing_.empty()) {
     const PlacedCell* placed = layout_.find(editing_);
     const Type type = placed != nullptr ? placed->type : Type::Body;
-    field_view_.draw(canvas, field_, edit_box(), type, caret_on_, placed != nullptr ? placed->cell->hint : std::string());
+    field_view_.draw(canvas, field_, edit_box(), type, caret_on_,
+                     placed != nullptr ? placed->cell->hint : std::string());
   }
   canvas.unclip();
 
@@ -391,7 +427,8 @@ void App::draw_message(Canvas& canvas) {
   canvas.line({0, strip.y}, {size.x, strip.y}, ink::kEdge);
   const Colour colour = message_is_problem_ ? ink::kError : ink::kText;
   if (message_is_problem_) canvas.fill({0, strip.y, 4, height}, colour);
-  canvas.lines_in({20, strip.y + 5, size.x - 40, height - 10}, Type::Detail, colour, page::Align::Left, lines);
+  canvas.lines_in({20, strip.y + 5, size.x - 40, height - 10}, Type::Detail, colour, page::Align::Left,
+                  lines);
 }
 
 void App::draw_scroll_bars(Canvas& canvas) {
@@ -401,7 +438,8 @@ void App::draw_scroll_bars(Canvas& canvas) {
   const float track = size.y - TopBar::kHeight - 8;
   const float thumb = std::max(30.0f, track * room / whole);
   const float at = (track - thumb) * scroll_ / std::max(1.0f, whole - room);
-  canvas.fill({size.x - 9, TopBar::kHeight + 4 + at, 5, thumb}, drag_from_ >= 0 ? ink::kQuiet : ink::kEdge, 2.5f);
+  canvas.fill({size.x - 9, TopBar::kHeight + 4 + at, 5, thumb}, drag_from_ >= 0 ? ink::kQuiet : ink::kEdge,
+              2.5f);
 }
 
 }  // namespace heatledger::window

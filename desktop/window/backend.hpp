@@ -25,7 +25,8 @@ class Backend {
   virtual float scale() const = 0;
   virtual Point size() const = 0;  ///< of the drawing area [points]
 
-  /// Sleeps until something happens, at most `seconds` (negative: as long as it takes), and tells the listener all of it.
+  /// Sleeps until something happens, at most `seconds` (negative: as long as it takes), and tells the
+  /// listener all of it.
   virtual void wait(Listener& listener, double seconds) = 0;
   /// Starts a frame; false while there is nothing to draw on (window minimised).
   virtual bool begin_frame() = 0;

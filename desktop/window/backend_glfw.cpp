@@ -1,8 +1,8 @@
-// GLFW and OpenGL 3. Keys and characters come through callbacks of our own and go straight to the listener in order:
-// the state that Dear ImGui polls once a frame would lose presses shorter than a frame.
+// GLFW and OpenGL 3. Keys and characters come through callbacks of our own and go straight to the listener in
+// order: the state that Dear ImGui polls once a frame would lose presses shorter than a frame.
 #include <GLFW/glfw3.h>
-#include <imgui/imgui.h>
 #include <imgui/backends/imgui_impl_opengl3.h>
+#include <imgui/imgui.h>
 #include <stb/stb_image_write.h>
 
 #include <algorithm>
@@ -23,23 +23,39 @@ std::string last_glfw_error() {
 
 Key key_of(int glfw_key) {
   switch (glfw_key) {
-    case GLFW_KEY_LEFT: return Key::Left;
-    case GLFW_KEY_RIGHT: return Key::Right;
-    case GLFW_KEY_UP: return Key::Up;
-    case GLFW_KEY_DOWN: return Key::Down;
-    case GLFW_KEY_HOME: return Key::Home;
-    case GLFW_KEY_END: return Key::End;
-    case GLFW_KEY_PAGE_UP: return Key::PageUp;
-    case GLFW_KEY_PAGE_DOWN: return Key::PageDown;
-    case GLFW_KEY_TAB: return Key::Tab;
+    case GLFW_KEY_LEFT:
+      return Key::Left;
+    case GLFW_KEY_RIGHT:
+      return Key::Right;
+    case GLFW_KEY_UP:
+      return Key::Up;
+    case GLFW_KEY_DOWN:
+      return Key::Down;
+    case GLFW_KEY_HOME:
+      return Key::Home;
+    case GLFW_KEY_END:
+      return Key::End;
+    case GLFW_KEY_PAGE_UP:
+      return Key::PageUp;
+    case GLFW_KEY_PAGE_DOWN:
+      return Key::PageDown;
+    case GLFW_KEY_TAB:
+      return Key::Tab;
     case GLFW_KEY_ENTER:
-    case GLFW_KEY_KP_ENTER: return Key::Enter;
-    case GLFW_KEY_ESCAPE: return Key::Escape;
-    case GLFW_KEY_BACKSPACE: return Key::Backspace;
-    case GLFW_KEY_DELETE: return Key::Delete;
-    case GLFW_KEY_F1: return Key::F1;
-    case GLFW_KEY_F2: return Key::F2;
-    default: return Key::Other;
+    case GLFW_KEY_KP_ENTER:
+      return Key::Enter;
+    case GLFW_KEY_ESCAPE:
+      return Key::Escape;
+    case GLFW_KEY_BACKSPACE:
+      return Key::Backspace;
+    case GLFW_KEY_DELETE:
+      return Key::Delete;
+    case GLFW_KEY_F1:
+      return Key::F1;
+    case GLFW_KEY_F2:
+      return Key::F2;
+    default:
+      return Key::Other;
   }
 }
 
@@ -151,7 +167,9 @@ class GlfwBackend final : public Backend {
   }
 
   void set_title(const std::string& title) override { glfwSetWindowTitle(window_, title.c_str()); }
-  void set_pointer(Pointer pointer) override { glfwSetCursor(window_, cursors_[static_cast<std::size_t>(pointer)]); }
+  void set_pointer(Pointer pointer) override {
+    glfwSetCursor(window_, cursors_[static_cast<std::size_t>(pointer)]);
+  }
 
   std::string clipboard() override {
     const char* text = glfwGetClipboardString(window_);
@@ -185,12 +203,15 @@ class GlfwBackend final : public Backend {
     picture_.clear();
     stbi_write_png_to_func(
         [](void* out, void* data, int length) {
-          static_cast<std::string*>(out)->append(static_cast<const char*>(data), static_cast<std::size_t>(length));
+          static_cast<std::string*>(out)->append(static_cast<const char*>(data),
+                                                 static_cast<std::size_t>(length));
         },
         &picture_, width, height, 3, pixels.data(), width * 3);
   }
 
-  static GlfwBackend& self(GLFWwindow* window) { return *static_cast<GlfwBackend*>(glfwGetWindowUserPointer(window)); }
+  static GlfwBackend& self(GLFWwindow* window) {
+    return *static_cast<GlfwBackend*>(glfwGetWindowUserPointer(window));
+  }
 
   /// Window coordinates to points: on some platforms a window unit is more than one pixel.
   Point point(double x, double y) const {
@@ -213,10 +234,12 @@ class GlfwBackend final : public Backend {
       self(window).listener_->on_key(press);
     });
     glfwSetCharCallback(window_, [](GLFWwindow* window, unsigned code) {
-      if (self(window).listener_ != nullptr) self(window).listener_->on_character(static_cast<char32_t>(code));
+      if (self(window).listener_ != nullptr)
+        self(window).listener_->on_character(static_cast<char32_t>(code));
     });
     glfwSetMouseButtonCallback(window_, [](GLFWwindow* window, int button, int action, int mods) {
-      if (button == GLFW_MOUSE_BUTTON_LEFT) self(window).mouse_button(action == GLFW_PRESS, (mods & GLFW_MOD_SHIFT) != 0);
+      if (button == GLFW_MOUSE_BUTTON_LEFT)
+        self(window).mouse_button(action == GLFW_PRESS, (mods & GLFW_MOD_SHIFT) != 0);
     });
     glfwSetCursorPosCallback(window_, [](GLFWwindow* window, double x, double y) {
       GlfwBackend& me = self(window);

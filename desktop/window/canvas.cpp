@@ -10,11 +10,13 @@
 namespace heatledger::window {
 namespace {
 
-constexpr float kLine = 1.45f;        // distance of lines over the em
+constexpr float kLine = 1.45f;         // distance of lines over the em
 constexpr float kHeightOfEm = 1.164f;  // ascent + descent of the typeface over the em
-constexpr float kLetterSpace = 1.2f;  // [points], between capitals of headings
+constexpr float kLetterSpace = 1.2f;   // [points], between capitals of headings
 
-ImVec2 pixels(Point p, float scale) { return {p.x * scale, p.y * scale}; }
+ImVec2 pixels(Point p, float scale) {
+  return {p.x * scale, p.y * scale};
+}
 
 float pixel_width(const ImFont* font, std::string_view text) {
   return font->CalcTextSizeA(font->FontSize, FLT_MAX, 0, text.data(), text.data() + text.size()).x;
@@ -46,35 +48,52 @@ std::vector<Run> equation_runs(std::string_view text) {
   return runs;
 }
 
-bool is_break(char c) { return c == ' '; }
+bool is_break(char c) {
+  return c == ' ';
+}
 
 }  // namespace
 
 Colour colour_of(page::Tone tone) {
   switch (tone) {
     case page::Tone::Plain:
-    case page::Tone::Strong: return ink::kText;
-    case page::Tone::Quiet: return ink::kQuiet;
-    case page::Tone::Broken: return ink::kBroken;
-    case page::Tone::Formed: return ink::kFormed;
-    case page::Tone::Caution: return ink::kCaution;
-    case page::Tone::Good: return ink::kGood;
+    case page::Tone::Strong:
+      return ink::kText;
+    case page::Tone::Quiet:
+      return ink::kQuiet;
+    case page::Tone::Broken:
+      return ink::kBroken;
+    case page::Tone::Formed:
+      return ink::kFormed;
+    case page::Tone::Caution:
+      return ink::kCaution;
+    case page::Tone::Good:
+      return ink::kGood;
   }
   return ink::kText;
 }
 
 Colour colour_of(page::Ink role) {
   switch (role) {
-    case page::Ink::Axis: return ink::kEdge;
-    case page::Ink::Grid: return ink::kFaint;
+    case page::Ink::Axis:
+      return ink::kEdge;
+    case page::Ink::Grid:
+      return ink::kFaint;
     case page::Ink::Text:
-    case page::Ink::Plain: return ink::kText;
-    case page::Ink::QuietText: return ink::kQuiet;
-    case page::Ink::Broken: return ink::kBroken;
-    case page::Ink::Formed: return ink::kFormed;
-    case page::Ink::Typed: return ink::kTyped;
-    case page::Ink::Accent: return ink::kSelectedEdge;
-    case page::Ink::Band: return ink::kBand;
+    case page::Ink::Plain:
+      return ink::kText;
+    case page::Ink::QuietText:
+      return ink::kQuiet;
+    case page::Ink::Broken:
+      return ink::kBroken;
+    case page::Ink::Formed:
+      return ink::kFormed;
+    case page::Ink::Typed:
+      return ink::kTyped;
+    case page::Ink::Accent:
+      return ink::kSelectedEdge;
+    case page::Ink::Band:
+      return ink::kBand;
   }
   return ink::kText;
 }
@@ -83,7 +102,9 @@ float text_width(const Fonts& fonts, Type type, std::string_view text) {
   return pixel_width(fonts.font(type), text) / fonts.scale();
 }
 
-float line_height(Type type) { return std::ceil(Fonts::size(type) * kLine); }
+float line_height(Type type) {
+  return std::ceil(Fonts::size(type) * kLine);
+}
 
 Wrapped wrap(const Fonts& fonts, Type type, std::string_view text, float width) {
   Wrapped wrapped;
@@ -144,7 +165,8 @@ std::size_t offset_at(const Fonts& fonts, Type type, std::string_view text, floa
 
 float equation_width(const Fonts& fonts, Type type, std::string_view text) {
   float width = 0;
-  for (const Run& run : equation_runs(text)) width += text_width(fonts, run.phase ? Type::Detail : type, run.text);
+  for (const Run& run : equation_runs(text))
+    width += text_width(fonts, run.phase ? Type::Detail : type, run.text);
   return width;
 }
 
@@ -160,9 +182,10 @@ void Canvas::frame(Rect area, Colour colour, float width, float corner) {
   const float s = fonts_.scale();
   const float pen = std::max(1.0f, std::round(width * s));
   // Half a pixel inwards: an outline of whole pixels, drawn sharp.
-  list_->AddRect({std::round(area.x * s) + 0.5f * (pen - 1), std::round(area.y * s) + 0.5f * (pen - 1)},
-                 {std::round(area.right() * s) - 0.5f * (pen - 1), std::round(area.bottom() * s) - 0.5f * (pen - 1)}, colour,
-                 corner * s, 0, pen);
+  list_->AddRect(
+      {std::round(area.x * s) + 0.5f * (pen - 1), std::round(area.y * s) + 0.5f * (pen - 1)},
+      {std::round(area.right() * s) - 0.5f * (pen - 1), std::round(area.bottom() * s) - 0.5f * (pen - 1)},
+      colour, corner * s, 0, pen);
 }
 
 void Canvas::line(Point from, Point to, Colour colour, float width) {
@@ -198,7 +221,8 @@ void Canvas::polyline(const std::vector<Point>& points, Colour colour, float wid
       const float step = std::max(0.05f, std::min(length - at, drawn ? kDash - phase : kDash + kGap - phase));
       if (drawn) {
         const Point a{points[i - 1].x + dx * at / length, points[i - 1].y + dy * at / length};
-        const Point b{points[i - 1].x + dx * (at + step) / length, points[i - 1].y + dy * (at + step) / length};
+        const Point b{points[i - 1].x + dx * (at + step) / length,
+                      points[i - 1].y + dy * (at + step) / length};
         list_->AddLine(pixels(a, s), pixels(b, s), colour, width * s);
       }
       at += step;
@@ -218,27 +242,32 @@ void Canvas::arrow_head(Point from, Point to, Colour colour, float size) {
   const float length = std::hypot(dx, dy);
   if (length <= 0) return;
   const float ux = dx / length * size, uy = dy / length * size;
-  polygon({to, {to.x - ux - uy * 0.5f, to.y - uy + ux * 0.5f}, {to.x - ux + uy * 0.5f, to.y - uy - ux * 0.5f}}, colour);
+  polygon(
+      {to, {to.x - ux - uy * 0.5f, to.y - uy + ux * 0.5f}, {to.x - ux + uy * 0.5f, to.y - uy - ux * 0.5f}},
+      colour);
 }
 
 void Canvas::text(Point at, Type type, Colour colour, std::string_view text) {
   if (text.empty()) return;
   ImFont* font = fonts_.font(type);
   const float s = fonts_.scale();
-  list_->AddText(font, font->FontSize, {std::round(at.x * s), std::round(at.y * s)}, colour, text.data(), text.data() + text.size());
+  list_->AddText(font, font->FontSize, {std::round(at.x * s), std::round(at.y * s)}, colour, text.data(),
+                 text.data() + text.size());
 }
 
 void Canvas::text_in(Rect area, Type type, Colour colour, page::Align align, std::string_view text) {
   const float width = align == page::Align::Left ? 0 : text_width(fonts_, type, text);
-  const float x = align == page::Align::Left ? area.x : align == page::Align::Right ? area.right() - width
-                                                                                    : area.x + (area.width - width) / 2;
+  const float x = align == page::Align::Left    ? area.x
+                  : align == page::Align::Right ? area.right() - width
+                                                : area.x + (area.width - width) / 2;
   this->text({x, area.y + (area.height - Fonts::size(type) * kHeightOfEm) / 2}, type, colour, text);
 }
 
 void Canvas::lines_in(Rect area, Type type, Colour colour, page::Align align, const Wrapped& wrapped) {
   const float step = line_height(type);
   for (std::size_t i = 0; i < wrapped.lines.size(); ++i) {
-    text_in({area.x, area.y + step * static_cast<float>(i), area.width, step}, type, colour, align, wrapped.lines[i]);
+    text_in({area.x, area.y + step * static_cast<float>(i), area.width, step}, type, colour, align,
+            wrapped.lines[i]);
   }
 }
 
@@ -246,7 +275,8 @@ float Canvas::spaced_capitals(Point at, Colour colour, std::string_view text) {
   const float begin = at.x;
   for (std::size_t i = 0; i < text.size();) {
     unsigned code = 0;
-    const auto length = static_cast<std::size_t>(std::max(1, ImTextCharFromUtf8(&code, text.data() + i, text.data() + text.size())));
+    const auto length = static_cast<std::size_t>(
+        std::max(1, ImTextCharFromUtf8(&code, text.data() + i, text.data() + text.size())));
     char capital = text[i];
     if (capital >= 'a' && capital <= 'z') capital = static_cast<char>(capital - 'a' + 'A');
     const std::string_view glyph = length == 1 ? std::string_view(&capital, 1) : text.substr(i, length);
@@ -268,7 +298,8 @@ void Canvas::equation(Point at, Type type, Colour colour, std::string_view text)
 
 void Canvas::clip(Rect area) {
   const float s = fonts_.scale();
-  list_->PushClipRect({std::floor(area.x * s), std::floor(area.y * s)}, {std::ceil(area.right() * s), std::ceil(area.bottom() * s)}, true);
+  list_->PushClipRect({std::floor(area.x * s), std::floor(area.y * s)},
+                      {std::ceil(area.right() * s), std::ceil(area.bottom() * s)}, true);
   clips_.push_back(area);
 }
 

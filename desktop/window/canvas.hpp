@@ -1,4 +1,5 @@
-// Draws in points on the frame under way: text, rules, fills. The only part besides the backend that knows Dear ImGui.
+// Draws in points on the frame under way: text, rules, fills. The only part besides the backend that knows
+// Dear ImGui.
 #pragma once
 
 #include <string>
@@ -17,13 +18,17 @@ using Colour = std::uint32_t;  ///< as ImGui packs it
 
 /// Ink on paper. Broken, formed and typed carry meaning and are always doubled by position, sign or mark.
 namespace ink {
-constexpr Colour rgb(unsigned r, unsigned g, unsigned b) { return 0xFF000000u | b << 16 | g << 8 | r; }
+constexpr Colour rgb(unsigned r, unsigned g, unsigned b) {
+  return 0xFF000000u | b << 16 | g << 8 | r;
+}
 inline constexpr Colour kDesk = rgb(232, 230, 221), kPaper = rgb(252, 251, 247), kEdge = rgb(190, 184, 160);
-inline constexpr Colour kText = rgb(32, 33, 36), kQuiet = rgb(104, 108, 116), kFaint = rgb(214, 212, 202), kHint = rgb(150, 148, 138);
+inline constexpr Colour kText = rgb(32, 33, 36), kQuiet = rgb(104, 108, 116), kFaint = rgb(214, 212, 202),
+                        kHint = rgb(150, 148, 138);
 inline constexpr Colour kBroken = rgb(156, 68, 18), kFormed = rgb(20, 92, 114), kTyped = rgb(30, 58, 152);
 inline constexpr Colour kCaution = rgb(138, 84, 0), kGood = rgb(36, 104, 46), kError = rgb(158, 26, 26);
 inline constexpr Colour kBand = rgb(240, 238, 226), kBox = rgb(255, 255, 255);
-inline constexpr Colour kSelected = rgb(253, 243, 205), kSelectedEdge = rgb(214, 160, 26), kHover = rgb(246, 243, 230);
+inline constexpr Colour kSelected = rgb(253, 243, 205), kSelectedEdge = rgb(214, 160, 26),
+                        kHover = rgb(246, 243, 230);
 inline constexpr Colour kBar = rgb(44, 46, 53), kBarText = rgb(232, 232, 232), kBarQuiet = rgb(170, 172, 178),
                         kBarHover = rgb(66, 69, 78);
 inline constexpr Colour kSelection = rgb(180, 205, 250);

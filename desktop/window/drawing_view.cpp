@@ -9,7 +9,8 @@ namespace {
 std::vector<Point> placed(const std::vector<double>& xy, Rect area, float scale) {
   std::vector<Point> points;
   for (std::size_t i = 0; i + 1 < xy.size(); i += 2) {
-    points.push_back({area.x + static_cast<float>(xy[i]) * scale, area.y + static_cast<float>(xy[i + 1]) * scale});
+    points.push_back(
+        {area.x + static_cast<float>(xy[i]) * scale, area.y + static_cast<float>(xy[i + 1]) * scale});
   }
   return points;
 }
@@ -17,7 +18,8 @@ std::vector<Point> placed(const std::vector<double>& xy, Rect area, float scale)
 }  // namespace
 
 void draw_drawing(Canvas& canvas, const page::Drawing& drawing, Rect area, float scale) {
-  for (const page::Fill& fill : drawing.fills) canvas.polygon(placed(fill.xy, area, scale), colour_of(fill.ink));
+  for (const page::Fill& fill : drawing.fills)
+    canvas.polygon(placed(fill.xy, area, scale), colour_of(fill.ink));
   for (const page::Stroke& stroke : drawing.strokes) {
     std::vector<Point> points = placed(stroke.xy, area, scale);
     if (points.size() < 2) continue;
@@ -32,9 +34,12 @@ void draw_drawing(Canvas& canvas, const page::Drawing& drawing, Rect area, float
     const Type type = words.size >= 13 ? Type::Detail : words.size >= 12 ? Type::Small : Type::Label;
     const float width = text_width(canvas.fonts(), type, words.text);
     const float x = area.x + static_cast<float>(words.x) * scale;
-    const float left = words.anchor == page::Align::Left ? x : words.anchor == page::Align::Right ? x - width : x - width / 2;
+    const float left = words.anchor == page::Align::Left    ? x
+                       : words.anchor == page::Align::Right ? x - width
+                                                            : x - width / 2;
     // The anchor stands on the base line; the typeface rises 0.928 em above it.
-    canvas.text({left, area.y + static_cast<float>(words.y) * scale - 0.928f * Fonts::size(type)}, type, colour_of(words.ink), words.text);
+    canvas.text({left, area.y + static_cast<float>(words.y) * scale - 0.928f * Fonts::size(type)}, type,
+                colour_of(words.ink), words.text);
   }
 }
 

@@ -15,13 +15,18 @@ bool takes_text(const page::Cell& cell) {
 }
 
 /// Cells whose text ends in a species name that the library can complete.
-bool completes(const page::Cell& cell) { return cell.kind == page::CellKind::Equation; }
+bool completes(const page::Cell& cell) {
+  return cell.kind == page::CellKind::Equation;
+}
 
 }  // namespace
 
-// --- the cell selected and the cell edited --------------------------------------------------------------------------
+// --- the cell selected and the cell edited
+// --------------------------------------------------------------------------
 
-const PlacedCell* App::selected_cell() { return layout().find(selected_); }
+const PlacedCell* App::selected_cell() {
+  return layout().find(selected_);
+}
 
 void App::select_cell(const PlacedCell* placed) {
   if (placed == nullptr || placed->cell->id == selected_) return;
@@ -120,7 +125,8 @@ void App::refresh_suggestions() {
   if (field_.caret() != field_.text().size() || field_.text().empty() || field_.text().back() == ' ') return;
   std::vector<ListItem> items;
   for (page::Session::Suggestion& suggestion : session_.suggest(field_.text(), kMostSuggestions)) {
-    if (suggestion.insert != field_.text()) items.push_back({std::move(suggestion.insert), std::move(suggestion.remark)});
+    if (suggestion.insert != field_.text())
+      items.push_back({std::move(suggestion.insert), std::move(suggestion.remark)});
   }
   list_.show(std::move(items), -1);
 }
@@ -133,7 +139,10 @@ void App::take_suggestion(const ListItem& item) {
 
 void App::copy_cell() {
   const PlacedCell* placed = selected_cell();
-  if (placed != nullptr) backend_.set_clipboard(placed->cell->editable && !placed->cell->edit_text.empty() ? placed->cell->edit_text : placed->cell->text);
+  if (placed != nullptr)
+    backend_.set_clipboard(placed->cell->editable && !placed->cell->edit_text.empty()
+                               ? placed->cell->edit_text
+                               : placed->cell->text);
 }
 
 void App::paste_into_cell() {
@@ -143,7 +152,8 @@ void App::paste_into_cell() {
   edit_cell(cell, one_line(backend_.clipboard()));
 }
 
-// --- keys -----------------------------------------------------------------------------------------------------------
+// --- keys
+// -----------------------------------------------------------------------------------------------------------
 
 void App::on_key(const KeyPress& press) {
   dirty_ = true;
@@ -152,10 +162,18 @@ void App::on_key(const KeyPress& press) {
   if (!editing_.empty()) return edit_key(press);
   if (!choosing_.empty()) {
     switch (press.key) {
-      case Key::Up: list_.move(-1); break;
-      case Key::Down: list_.move(1); break;
-      case Key::Home: list_.move(-1 - list_.selected()); break;
-      case Key::Escape: cancel_edit(); break;
+      case Key::Up:
+        list_.move(-1);
+        break;
+      case Key::Down:
+        list_.move(1);
+        break;
+      case Key::Home:
+        list_.move(-1 - list_.selected());
+        break;
+      case Key::Escape:
+        cancel_edit();
+        break;
       case Key::Enter:
       case Key::Tab:
         if (const ListItem* item = list_.chosen()) {
@@ -166,7 +184,8 @@ void App::on_key(const KeyPress& press) {
           cancel_edit();
         }
         break;
-      default: break;
+      default:
+        break;
     }
     return;
   }
@@ -195,11 +214,13 @@ void App::edit_key(const KeyPress& press) {
       select_cell(next_entry(layout(), cell, press.shift));
       return;
     }
-    default: break;
+    default:
+      break;
   }
   const std::string before = field_.text();
   if (!field_.key(press)) {
-    const bool of_sheet = press.control && (press.letter == 's' || press.letter == 'o' || press.letter == 'n' || press.letter == 'p');
+    const bool of_sheet = press.control && (press.letter == 's' || press.letter == 'o' ||
+                                            press.letter == 'n' || press.letter == 'p');
     if (of_sheet) {
       finish_edit();
       shortcut(press);
@@ -219,20 +240,45 @@ bool App::shortcut(const KeyPress& press) {
         save_or_ask();
       }
       return true;
-    case 'o': run_command("open"); return true;
-    case 'n': run_command("new"); return true;
-    case 'p': run_command("report"); return true;
-    case 't': run_command("tables"); return true;
+    case 'o':
+      run_command("open");
+      return true;
+    case 'n':
+      run_command("new");
+      return true;
+    case 'p':
+      run_command("report");
+      return true;
+    case 't':
+      run_command("tables");
+      return true;
     case 'q':
-    case 'w': guard(Pending::Close); return true;
-    case 'c': copy_cell(); return true;
-    case 'v': paste_into_cell(); return true;
-    case 'z': run_command(press.shift ? "page:redo" : "page:undo"); return true;
-    case 'y': run_command("page:redo"); return true;
-    case '+': zoom_ = std::min(3.0f, zoom_ * 1.1f); break;
-    case '-': zoom_ = std::max(0.5f, zoom_ / 1.1f); break;
-    case '0': zoom_ = 1; break;
-    default: return false;
+    case 'w':
+      guard(Pending::Close);
+      return true;
+    case 'c':
+      copy_cell();
+      return true;
+    case 'v':
+      paste_into_cell();
+      return true;
+    case 'z':
+      run_command(press.shift ? "page:redo" : "page:undo");
+      return true;
+    case 'y':
+      run_command("page:redo");
+      return true;
+    case '+':
+      zoom_ = std::min(3.0f, zoom_ * 1.1f);
+      break;
+    case '-':
+      zoom_ = std::max(0.5f, zoom_ / 1.1f);
+      break;
+    case '0':
+      zoom_ = 1;
+      break;
+    default:
+      return false;
   }
   layout_stale_ = true;
   return true;
@@ -264,25 +310,38 @@ void App::browse_key(const KeyPress& press) {
       const Direction direction = press.key == Key::Left ? Direction::Left : Direction::Right;
       const PlacedCell* next = neighbour(layout(), selected_, direction);
       // At the end of a line the arrows open and close its bond lines.
-      if (next == nullptr && placed != nullptr && !placed->row->fold_id.empty() && placed->row->open == (direction == Direction::Left)) {
+      if (next == nullptr && placed != nullptr && !placed->row->fold_id.empty() &&
+          placed->row->open == (direction == Direction::Left)) {
         return toggle_fold(*placed);
       }
       return select_cell(next);
     }
-    case Key::Up: return select_cell(neighbour(layout(), selected_, Direction::Up));
-    case Key::Down: return select_cell(neighbour(layout(), selected_, Direction::Down));
-    case Key::Tab: return select_cell(next_entry(layout(), selected_, press.shift));
-    case Key::PageDown: scroll_ += page_height; return clamp_scroll();
-    case Key::PageUp: scroll_ -= page_height; return clamp_scroll();
-    case Key::Home: scroll_ = 0; return;
-    case Key::End: scroll_ = layout().height; return clamp_scroll();
+    case Key::Up:
+      return select_cell(neighbour(layout(), selected_, Direction::Up));
+    case Key::Down:
+      return select_cell(neighbour(layout(), selected_, Direction::Down));
+    case Key::Tab:
+      return select_cell(next_entry(layout(), selected_, press.shift));
+    case Key::PageDown:
+      scroll_ += page_height;
+      return clamp_scroll();
+    case Key::PageUp:
+      scroll_ -= page_height;
+      return clamp_scroll();
+    case Key::Home:
+      scroll_ = 0;
+      return;
+    case Key::End:
+      scroll_ = layout().height;
+      return clamp_scroll();
     case Key::Enter:
     case Key::F2:
       if (placed != nullptr) activate(*placed);
       return;
     case Key::Backspace:
     case Key::Delete:
-      if (placed != nullptr && takes_text(*placed->cell) && !placed->cell->edit_text.empty()) edit_cell(selected_, "");
+      if (placed != nullptr && takes_text(*placed->cell) && !placed->cell->edit_text.empty())
+        edit_cell(selected_, "");
       return;
     case Key::Escape:
       if (message_.empty()) {
@@ -291,7 +350,8 @@ void App::browse_key(const KeyPress& press) {
       }
       message_.clear();
       return;
-    default: return;
+    default:
+      return;
   }
 }
 
@@ -312,7 +372,8 @@ void App::on_character(char32_t code) {
   refresh_suggestions();
 }
 
-// --- mouse ----------------------------------------------------------------------------------------------------------
+// --- mouse
+// ----------------------------------------------------------------------------------------------------------
 
 void App::on_mouse_down(Point at, int clicks, bool shift) {
   dirty_ = true;
@@ -363,7 +424,8 @@ void App::on_mouse_down(Point at, int clicks, bool shift) {
   placed = selected_cell();
   if (placed == nullptr) return;
   const page::Cell& cell = *placed->cell;
-  const bool at_once = cell.editable && (cell.kind == page::CellKind::Choice || cell.kind == page::CellKind::Button || cell.text.empty());
+  const bool at_once = cell.editable && (cell.kind == page::CellKind::Choice ||
+                                         cell.kind == page::CellKind::Button || cell.text.empty());
   if (at_once || clicks == 2 || (again && takes_text(cell))) activate(*placed);
 }
 
@@ -398,7 +460,8 @@ void App::on_mouse_move(Point at, bool held) {
     return;
   }
   const Point origin = content_origin();
-  const PlacedCell* placed = at.y < TopBar::kHeight ? nullptr : cell_at(layout(), {at.x - origin.x, at.y - origin.y});
+  const PlacedCell* placed =
+      at.y < TopBar::kHeight ? nullptr : cell_at(layout(), {at.x - origin.x, at.y - origin.y});
   const bool named = placed != nullptr && can_select(*placed);
   const std::string hovered = named ? placed->cell->id : std::string();
   Pointer pointer = Pointer::Arrow;
@@ -431,8 +494,12 @@ void App::on_scroll(Point at, float lines) {
   clamp_scroll();
 }
 
-void App::on_drop(const std::string& path) { guard(Pending::Open, path); }
+void App::on_drop(const std::string& path) {
+  guard(Pending::Open, path);
+}
 
-void App::on_close_asked() { guard(Pending::Close); }
+void App::on_close_asked() {
+  guard(Pending::Close);
+}
 
 }  // namespace heatledger::window

@@ -1,4 +1,5 @@
-// Events as the window's parts see them: in order, none lost, positions in points (pixels divided by the scale).
+// Events as the window's parts see them: in order, none lost, positions in points (pixels divided by the
+// scale).
 #pragma once
 
 #include <cstdint>
@@ -19,13 +20,30 @@ struct Rect {
 };
 
 enum class Key : std::uint8_t {
-  None, Left, Right, Up, Down, Home, End, PageUp, PageDown, Tab, Enter, Escape, Backspace, Delete, F1, F2, Other
+  None,
+  Left,
+  Right,
+  Up,
+  Down,
+  Home,
+  End,
+  PageUp,
+  PageDown,
+  Tab,
+  Enter,
+  Escape,
+  Backspace,
+  Delete,
+  F1,
+  F2,
+  Other
 };
 
 /// A key going down, or repeating. Text arrives apart, as characters.
 struct KeyPress {
   Key key = Key::None;
-  char letter = 0;  ///< 'a' to 'z', '0' to '9', '+', '-' by the keyboard's own layout, for Ctrl combinations; else 0
+  char letter =
+      0;  ///< 'a' to 'z', '0' to '9', '+', '-' by the keyboard's own layout, for Ctrl combinations; else 0
   bool shift = false, control = false, alt = false;
 };
 

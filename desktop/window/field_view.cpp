@@ -9,7 +9,8 @@ constexpr float kPad = 6;
 
 }  // namespace
 
-void FieldView::draw(Canvas& canvas, const TextField& field, Rect box, Type type, bool caret_on, std::string_view hint) {
+void FieldView::draw(Canvas& canvas, const TextField& field, Rect box, Type type, bool caret_on,
+                     std::string_view hint) {
   box_ = box;
   type_ = type;
   const Fonts& fonts = canvas.fonts();
@@ -26,7 +27,8 @@ void FieldView::draw(Canvas& canvas, const TextField& field, Rect box, Type type
   const float left = inside.x - scroll_, line = line_height(type);
   const float top = box.y + (box.height - line) / 2;
   if (field.has_selection()) {
-    const float from = x_of(std::min(field.caret(), field.anchor())), to = x_of(std::max(field.caret(), field.anchor()));
+    const float from = x_of(std::min(field.caret(), field.anchor())),
+                to = x_of(std::max(field.caret(), field.anchor()));
     canvas.fill({left + from, top, to - from, line}, ink::kSelection);
   }
   const Rect line_box{left, top, inner + scroll_, line};

@@ -8,7 +8,8 @@ namespace heatledger::window {
 
 class FieldView {
  public:
-  void draw(Canvas& canvas, const TextField& field, Rect box, Type type, bool caret_on, std::string_view hint = {});
+  void draw(Canvas& canvas, const TextField& field, Rect box, Type type, bool caret_on,
+            std::string_view hint = {});
   /// Byte offset under a point of the box drawn last.
   std::size_t offset_at_point(const Fonts& fonts, const TextField& field, Point at) const;
   const Rect& box() const { return box_; }

@@ -16,20 +16,28 @@ constexpr std::size_t kMostEntries = 500;
 
 const char* title_of(FilePrompt::Purpose purpose) {
   switch (purpose) {
-    case FilePrompt::Purpose::Open: return "Open a worksheet";
-    case FilePrompt::Purpose::Save: return "Save the worksheet as";
-    case FilePrompt::Purpose::Report: return "Write a report (HTML, prints as it stands)";
-    case FilePrompt::Purpose::Tables: return "Write every table (CSV)";
+    case FilePrompt::Purpose::Open:
+      return "Open a worksheet";
+    case FilePrompt::Purpose::Save:
+      return "Save the worksheet as";
+    case FilePrompt::Purpose::Report:
+      return "Write a report (HTML, prints as it stands)";
+    case FilePrompt::Purpose::Tables:
+      return "Write every table (CSV)";
   }
   return "";
 }
 
 std::string_view ending_of(FilePrompt::Purpose purpose) {
   switch (purpose) {
-    case FilePrompt::Purpose::Open: return ".json";
-    case FilePrompt::Purpose::Save: return ".heatledger.json";
-    case FilePrompt::Purpose::Report: return ".html";
-    case FilePrompt::Purpose::Tables: return ".csv";
+    case FilePrompt::Purpose::Open:
+      return ".json";
+    case FilePrompt::Purpose::Save:
+      return ".heatledger.json";
+    case FilePrompt::Purpose::Report:
+      return ".html";
+    case FilePrompt::Purpose::Tables:
+      return ".csv";
   }
   return "";
 }
@@ -132,7 +140,8 @@ FilePrompt::Outcome FilePrompt::accept() {
     return Outcome::Waiting;
   }
   if (purpose_ == Purpose::Open) {
-    if (!fs::exists(path, problem) && fs::exists(path.string() + ".heatledger.json", problem)) path += ".heatledger.json";
+    if (!fs::exists(path, problem) && fs::exists(path.string() + ".heatledger.json", problem))
+      path += ".heatledger.json";
     if (!fs::exists(path, problem)) {
       complaint_ = "There is no such file.";
       return Outcome::Waiting;
@@ -152,11 +161,21 @@ FilePrompt::Outcome FilePrompt::accept() {
 
 FilePrompt::Outcome FilePrompt::key(const KeyPress& press) {
   switch (press.key) {
-    case Key::Escape: active_ = false; return Outcome::Cancelled;
-    case Key::Down: list_.move(1); return Outcome::Waiting;
-    case Key::Up: list_.move(-1); return Outcome::Waiting;
-    case Key::PageDown: list_.move(8); return Outcome::Waiting;
-    case Key::PageUp: list_.move(-8); return Outcome::Waiting;
+    case Key::Escape:
+      active_ = false;
+      return Outcome::Cancelled;
+    case Key::Down:
+      list_.move(1);
+      return Outcome::Waiting;
+    case Key::Up:
+      list_.move(-1);
+      return Outcome::Waiting;
+    case Key::PageDown:
+      list_.move(8);
+      return Outcome::Waiting;
+    case Key::PageUp:
+      list_.move(-8);
+      return Outcome::Waiting;
     case Key::Tab:
       if (list_.chosen() == nullptr) list_.move(1);
       if (const ListItem* item = list_.chosen()) {
@@ -168,7 +187,8 @@ FilePrompt::Outcome FilePrompt::key(const KeyPress& press) {
     case Key::Enter:
       if (const ListItem* item = list_.chosen()) return take(ListItem(*item));
       return accept();
-    default: break;
+    default:
+      break;
   }
   const std::string before = field_.text();
   field_.key(press);
@@ -188,7 +208,8 @@ void FilePrompt::character(char32_t code) {
 }
 
 FilePrompt::Outcome FilePrompt::mouse_down(const Fonts& fonts, Point at, int clicks) {
-  if (const std::optional<int> index = list_.hit(at)) return take(ListItem(list_.items()[static_cast<std::size_t>(*index)]));
+  if (const std::optional<int> index = list_.hit(at))
+    return take(ListItem(list_.items()[static_cast<std::size_t>(*index)]));
   if (view_.box().contains(at)) {
     field_.put_caret(view_.offset_at_point(fonts, field_, at), false);
     if (clicks == 2) field_.select_word(field_.caret());
@@ -200,18 +221,23 @@ FilePrompt::Outcome FilePrompt::mouse_down(const Fonts& fonts, Point at, int cli
 void FilePrompt::draw(Canvas& canvas, Rect bounds, bool caret_on) {
   canvas.fill(bounds, 0x30202224u);
   const float width = std::min(620.0f, bounds.width - 40);
-  Rect panel{bounds.x + (bounds.width - width) / 2, bounds.y + 46, width, complaint_.empty() ? 92.0f : 114.0f};
+  Rect panel{bounds.x + (bounds.width - width) / 2, bounds.y + 46, width,
+             complaint_.empty() ? 92.0f : 114.0f};
   canvas.fill({panel.x + 4, panel.y + 4, panel.width, panel.height}, 0x28000000u);
   canvas.fill(panel, ink::kPaper);
   canvas.frame(panel, ink::kEdge);
-  canvas.text_in({panel.x + 16, panel.y + 10, panel.width - 32, 22}, Type::Strong, ink::kText, page::Align::Left, title_of(purpose_));
-  canvas.text_in({panel.x + 16, panel.y + 10, panel.width - 32, 22}, Type::Small, ink::kQuiet, page::Align::Right, "Enter · Tab completes · Esc");
+  canvas.text_in({panel.x + 16, panel.y + 10, panel.width - 32, 22}, Type::Strong, ink::kText,
+                 page::Align::Left, title_of(purpose_));
+  canvas.text_in({panel.x + 16, panel.y + 10, panel.width - 32, 22}, Type::Small, ink::kQuiet,
+                 page::Align::Right, "Enter · Tab completes · Esc");
   const Rect field{panel.x + 14, panel.y + 44, panel.width - 28, 30};
   view_.draw(canvas, field_, field, Type::Body, caret_on, "path/name" + std::string(ending_of(purpose_)));
   if (!complaint_.empty()) {
-    canvas.text_in({field.x, field.bottom() + 6, field.width, 20}, Type::Small, ink::kCaution, page::Align::Left, complaint_);
+    canvas.text_in({field.x, field.bottom() + 6, field.width, 20}, Type::Small, ink::kCaution,
+                   page::Align::Left, complaint_);
   }
-  list_.draw(canvas, {field.x, field.y, field.width, complaint_.empty() ? field.height : field.height + 26}, bounds);
+  list_.draw(canvas, {field.x, field.y, field.width, complaint_.empty() ? field.height : field.height + 26},
+             bounds);
 }
 
 }  // namespace heatledger::window

@@ -9,7 +9,18 @@ struct ImFont;
 namespace heatledger::window {
 
 /// A kind of text on the sheet: typeface and size.
-enum class Type : std::uint8_t { Body, Detail, Small, Label, Strong, SmallStrong, Heading, Equation, Value, Title };
+enum class Type : std::uint8_t {
+  Body,
+  Detail,
+  Small,
+  Label,
+  Strong,
+  SmallStrong,
+  Heading,
+  Equation,
+  Value,
+  Title
+};
 constexpr std::size_t kTypes = 10;
 
 class Fonts {

@@ -14,7 +14,9 @@ constexpr float kBeforeHeading = 24, kAfterHeading = 8, kAfterBlock = 8, kGap = 
 /// Goes down the page block by block.
 class Builder {
  public:
-  Builder(const page::Page& page, const Fonts& fonts, float width) : page_(page), fonts_(fonts) { layout_.width = width; }
+  Builder(const page::Page& page, const Fonts& fonts, float width) : page_(page), fonts_(fonts) {
+    layout_.width = width;
+  }
 
   Layout build() {
     for (std::size_t i = 0; i < page_.blocks.size(); ++i) {
@@ -24,7 +26,8 @@ class Builder {
       if (const auto* note = std::get_if<page::Note>(&block)) add(*note);
       if (const auto* table = std::get_if<page::Table>(&block)) {
         const auto* form = next != nullptr ? std::get_if<page::Table>(next) : nullptr;
-        if (i == 0 && table->look == page::TableLook::Banner && form != nullptr && form->look == page::TableLook::Form) {
+        if (i == 0 && table->look == page::TableLook::Banner && form != nullptr &&
+            form->look == page::TableLook::Form) {
           add_title(*table, *form);
           ++i;
         } else {
@@ -58,7 +61,8 @@ class Builder {
       PlacedText title;
       title.lines = wrap(fonts_, Type::Title, heading.text, layout_.width);
       title.type = Type::Title;
-      title.area = {0, y_, layout_.width, line_height(Type::Title) * static_cast<float>(title.lines.lines.size())};
+      title.area = {0, y_, layout_.width,
+                    line_height(Type::Title) * static_cast<float>(title.lines.lines.size())};
       y_ = title.area.bottom() + 6;
       layout_.texts.push_back(std::move(title));
       layout_.fills.push_back({{0, y_, layout_.width, 2}, ink::kText});
@@ -89,7 +93,8 @@ class Builder {
     }
     const float rule_begin = text.area.right() + 10;
     if (rule_end > rule_begin) {
-      layout_.fills.push_back({{rule_begin, y_ + std::round(height / 2), rule_end - rule_begin, 1}, ink::kFaint});
+      layout_.fills.push_back(
+          {{rule_begin, y_ + std::round(height / 2), rule_end - rule_begin, 1}, ink::kFaint});
     }
     layout_.texts.push_back(std::move(text));
     y_ += height + kAfterHeading;
@@ -114,13 +119,16 @@ class Builder {
     text.lines = wrap(fonts_, type, note.text, layout_.width - left);
     text.type = type;
     text.colour = note.kind == page::NoteKind::Error ? ink::kError : loud ? ink::kCaution : ink::kQuiet;
-    text.area = {left, y_ + 2, layout_.width - left, line_height(type) * static_cast<float>(text.lines.lines.size())};
+    text.area = {left, y_ + 2, layout_.width - left,
+                 line_height(type) * static_cast<float>(text.lines.lines.size())};
     if (loud) layout_.fills.push_back({{0, y_, 3, text.area.height + 4}, text.colour});
     y_ = text.area.bottom() + 6;
     layout_.texts.push_back(std::move(text));
   }
 
-  void add(const page::Table& table, float x, float width) { y_ = lay_out_table(table, fonts_, {x, y_, width, 0}, layout_); }
+  void add(const page::Table& table, float x, float width) {
+    y_ = lay_out_table(table, fonts_, {x, y_, width, 0}, layout_);
+  }
 
   /// The title on the left, the boxes of sheet number and names on the right, one heavy rule under both.
   void add_title(const page::Table& banner, const page::Table& form) {
@@ -144,7 +152,8 @@ class Builder {
       title.lines = wrap(fonts_, Type::Small, drawing.title, layout_.width - x);
       title.type = Type::Small;
       title.colour = ink::kQuiet;
-      title.area = {x, y_, layout_.width - x, line_height(Type::Small) * static_cast<float>(title.lines.lines.size())};
+      title.area = {x, y_, layout_.width - x,
+                    line_height(Type::Small) * static_cast<float>(title.lines.lines.size())};
       y_ = title.area.bottom() + 4;
       layout_.texts.push_back(std::move(title));
     }
@@ -168,6 +177,8 @@ const PlacedCell* Layout::find(const std::string& id) const {
   return nullptr;
 }
 
-Layout lay_out(const page::Page& page, const Fonts& fonts, float width) { return Builder(page, fonts, width).build(); }
+Layout lay_out(const page::Page& page, const Fonts& fonts, float width) {
+  return Builder(page, fonts, width).build();
+}
 
 }  // namespace heatledger::window

@@ -1,5 +1,5 @@
-// Where everything on the sheet stands: boxes and rules in points, measured from the top left of the paper's content.
-// A page is laid out once for a width; drawing and hit testing read the result.
+// Where everything on the sheet stands: boxes and rules in points, measured from the top left of the paper's
+// content. A page is laid out once for a width; drawing and hit testing read the result.
 #pragma once
 
 #include <optional>
@@ -11,7 +11,8 @@
 
 namespace heatledger::window {
 
-/// A cell of the page in its place. `lines` point into the cell's text or hint, so a layout lives no longer than its page.
+/// A cell of the page in its place. `lines` point into the cell's text or hint, so a layout lives no longer
+/// than its page.
 struct PlacedCell {
   const page::Cell* cell = nullptr;
   const page::Row* row = nullptr;  ///< the row it stands in

@@ -20,7 +20,9 @@ void ListPopup::show(std::vector<ListItem> items, int selected) {
 }
 
 const ListItem* ListPopup::chosen() const {
-  return selected_ >= 0 && selected_ < static_cast<int>(items_.size()) ? &items_[static_cast<std::size_t>(selected_)] : nullptr;
+  return selected_ >= 0 && selected_ < static_cast<int>(items_.size())
+             ? &items_[static_cast<std::size_t>(selected_)]
+             : nullptr;
 }
 
 void ListPopup::move(int by) {
@@ -56,7 +58,8 @@ void ListPopup::keep_selected_in_view() {
 std::optional<int> ListPopup::hit(Point at) const {
   if (!contains(at)) return std::nullopt;
   const int index = first_ + static_cast<int>((at.y - area_.y - 4) / kRow);
-  if (index < first_ || index >= first_ + shown_ || index >= static_cast<int>(items_.size())) return std::nullopt;
+  if (index < first_ || index >= first_ + shown_ || index >= static_cast<int>(items_.size()))
+    return std::nullopt;
   return index;
 }
 
@@ -65,7 +68,8 @@ void ListPopup::point_at(Point at) {
 }
 
 void ListPopup::scroll(float lines) {
-  first_ = std::clamp(first_ - static_cast<int>(lines * 2), 0, std::max(0, static_cast<int>(items_.size()) - shown_));
+  first_ = std::clamp(first_ - static_cast<int>(lines * 2), 0,
+                      std::max(0, static_cast<int>(items_.size()) - shown_));
 }
 
 void ListPopup::draw(Canvas& canvas, Rect anchor, Rect bounds) {
@@ -77,7 +81,8 @@ void ListPopup::draw(Canvas& canvas, Rect anchor, Rect bounds) {
   }
   const float below = bounds.bottom() - anchor.bottom(), above = anchor.y - bounds.y;
   const bool under = below >= kRow * 4 || below >= above;
-  shown_ = std::clamp(static_cast<int>(((under ? below : above) - 14) / kRow), 1, std::min(kMostRows, static_cast<int>(items_.size())));
+  shown_ = std::clamp(static_cast<int>(((under ? below : above) - 14) / kRow), 1,
+                      std::min(kMostRows, static_cast<int>(items_.size())));
   first_ = std::clamp(first_, 0, static_cast<int>(items_.size()) - shown_);
   keep_selected_in_view();
   const float wanted = text + (remark > 0 ? remark + 24 : 0) + 2 * kPad + 6;
@@ -103,7 +108,8 @@ void ListPopup::draw(Canvas& canvas, Rect anchor, Rect bounds) {
     canvas.unclip();
   }
   if (shown_ < static_cast<int>(items_.size())) {
-    const float whole = area_.height - 8, part = whole * static_cast<float>(shown_) / static_cast<float>(items_.size());
+    const float whole = area_.height - 8,
+                part = whole * static_cast<float>(shown_) / static_cast<float>(items_.size());
     const float at = whole * static_cast<float>(first_) / static_cast<float>(items_.size());
     canvas.fill({area_.right() - 4, area_.y + 4 + at, 2, part}, ink::kEdge);
   }

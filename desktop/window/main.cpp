@@ -13,8 +13,8 @@ using heatledger::Result;
 using heatledger::Status;
 
 int complain(const heatledger::Error& error) {
-  std::fprintf(stderr, "heatledger-window: %s%s%s\n%s\n", error.message.c_str(), error.where.empty() ? "" : " ", error.where.c_str(),
-               error.hint.c_str());
+  std::fprintf(stderr, "heatledger-window: %s%s%s\n%s\n", error.message.c_str(),
+               error.where.empty() ? "" : " ", error.where.c_str(), error.hint.c_str());
   return 1;
 }
 
@@ -27,19 +27,22 @@ int main(int argc, char** argv) {
   float scale = 0;
   options.add_option("sheet", sheet, "Worksheet file; an empty sheet if not given");
   options.add_option("--size", size, "Size of the window in pixels")->type_name("WxH")->capture_default_str();
-  options.add_option("--scale", scale, "Pixels per point; as the display says if not given")->check(CLI::Range(0.5, 4.0));
+  options.add_option("--scale", scale, "Pixels per point; as the display says if not given")
+      ->check(CLI::Range(0.5, 4.0));
   options.add_option("--screenshot", picture, "Draw once, write the picture and end")->type_name("OUT.png");
-  options.add_option("--select", selected, "Select a cell by its id, for a picture with its working")->type_name("CELL");
+  options.add_option("--select", selected, "Select a cell by its id, for a picture with its working")
+      ->type_name("CELL");
   bool cells = false;
-  options.add_flag("--cells", cells, "Print where each cell stands (id, x, y, width, height in pixels) and end");
+  options.add_flag("--cells", cells,
+                   "Print where each cell stands (id, x, y, width, height in pixels) and end");
   try {
     options.parse(argc, argv);
   } catch (const CLI::ParseError& problem) {
     return options.exit(problem) == 0 ? 0 : 2;
   }
   heatledger::window::BackendOptions how;
-  if (std::sscanf(size.c_str(), "%dx%d", &how.width, &how.height) != 2 || how.width < 200 || how.height < 200 || how.width > 16000 ||
-      how.height > 16000) {
+  if (std::sscanf(size.c_str(), "%dx%d", &how.width, &how.height) != 2 || how.width < 200 ||
+      how.height < 200 || how.width > 16000 || how.height > 16000) {
     std::fprintf(stderr, "heatledger-window: --size is WIDTHxHEIGHT in pixels, as 1280x900\n");
     return 2;
   }

@@ -28,7 +28,8 @@ class Pen {
   void step(std::size_t number, std::string_view text) {
     const float top = y_;
     paragraph(Type::Detail, ink::kText, text, 20);
-    canvas_.text_in({area_.x, top, 18, line_height(Type::Detail)}, Type::Detail, ink::kQuiet, page::Align::Left, std::to_string(number) + ".");
+    canvas_.text_in({area_.x, top, 18, line_height(Type::Detail)}, Type::Detail, ink::kQuiet,
+                    page::Align::Left, std::to_string(number) + ".");
   }
 
   void rule() {
@@ -38,9 +39,12 @@ class Pen {
   }
 
   void note(const page::Note& note) {
-    const bool loud = note.kind == page::NoteKind::Caution || note.kind == page::NoteKind::Disagreement || note.kind == page::NoteKind::Error;
+    const bool loud = note.kind == page::NoteKind::Caution || note.kind == page::NoteKind::Disagreement ||
+                      note.kind == page::NoteKind::Error;
     const float top = y_;
-    const Colour colour = note.kind == page::NoteKind::Error ? ink::kError : loud ? ink::kCaution : ink::kText;
+    const Colour colour = note.kind == page::NoteKind::Error ? ink::kError
+                          : loud                             ? ink::kCaution
+                                                             : ink::kText;
     paragraph(Type::Detail, colour, note.text, loud ? 12 : 0);
     if (loud) canvas_.fill({area_.x, top, 3, y_ - top}, colour);
     y_ += 8;
@@ -59,7 +63,9 @@ float draw_margin(Canvas& canvas, const page::Margin& margin, Rect area, float s
   const float begin = pen.y();
   pen.heading("Working");
   if (margin.cell.empty()) {
-    pen.paragraph(Type::Detail, ink::kQuiet, "Select a figure to see how it comes about: arrows or the mouse. Enter or F2 edits a cell, Tab goes to the next entry.");
+    pen.paragraph(Type::Detail, ink::kQuiet,
+                  "Select a figure to see how it comes about: arrows or the mouse. Enter or F2 edits a cell, "
+                  "Tab goes to the next entry.");
     return pen.y() - begin;
   }
   pen.space(2);

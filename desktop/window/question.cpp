@@ -15,12 +15,19 @@ void Question::ask(std::string text, std::vector<Answer> answers) {
 std::string Question::key(const KeyPress& press) {
   const std::size_t count = answers_.size();
   switch (press.key) {
-    case Key::Left: marked_ = (marked_ + count - 1) % count; return {};
+    case Key::Left:
+      marked_ = (marked_ + count - 1) % count;
+      return {};
     case Key::Right:
-    case Key::Tab: marked_ = (marked_ + (press.shift ? count - 1 : 1)) % count; return {};
-    case Key::Enter: return answers_[marked_].id;
-    case Key::Escape: return answers_.back().id;
-    default: return {};
+    case Key::Tab:
+      marked_ = (marked_ + (press.shift ? count - 1 : 1)) % count;
+      return {};
+    case Key::Enter:
+      return answers_[marked_].id;
+    case Key::Escape:
+      return answers_.back().id;
+    default:
+      return {};
   }
 }
 
@@ -54,18 +61,22 @@ void Question::draw(Canvas& canvas, Rect bounds) {
   canvas.fill({panel.x + 4, panel.y + 4, panel.width, panel.height}, 0x28000000u);
   canvas.fill(panel, ink::kPaper);
   canvas.frame(panel, ink::kEdge);
-  canvas.lines_in({panel.x + 22, panel.y + 16, panel.width - 44, text_height}, Type::Body, ink::kText, page::Align::Left, lines);
+  canvas.lines_in({panel.x + 22, panel.y + 16, panel.width - 44, text_height}, Type::Body, ink::kText,
+                  page::Align::Left, lines);
   float x = panel.x + 22;
   places_.clear();
   for (std::size_t i = 0; i < answers_.size(); ++i) {
-    const Rect button{x, panel.bottom() - 46, text_width(canvas.fonts(), Type::Detail, answers_[i].text) + 26, 28};
+    const Rect button{x, panel.bottom() - 46, text_width(canvas.fonts(), Type::Detail, answers_[i].text) + 26,
+                      28};
     canvas.fill(button, i == marked_ ? ink::kBar : ink::kBox, 3);
     canvas.frame(button, i == marked_ ? ink::kBar : ink::kEdge, 1, 3);
-    canvas.text_in(button, Type::Detail, i == marked_ ? ink::kBarText : ink::kText, page::Align::Centre, answers_[i].text);
+    canvas.text_in(button, Type::Detail, i == marked_ ? ink::kBarText : ink::kText, page::Align::Centre,
+                   answers_[i].text);
     // The letter that chooses it is underlined.
     const float text_left = button.x + 13;
     const float letter = text_width(canvas.fonts(), Type::Detail, answers_[i].text.substr(0, 1));
-    canvas.line({text_left, button.y + 21}, {text_left + letter, button.y + 21}, i == marked_ ? ink::kBarText : ink::kText);
+    canvas.line({text_left, button.y + 21}, {text_left + letter, button.y + 21},
+                i == marked_ ? ink::kBarText : ink::kText);
     places_.push_back(button);
     x = button.right() + 8;
   }

@@ -9,7 +9,9 @@
 namespace heatledger::window {
 namespace {
 
-Rect moved(Rect area, Point by) { return {area.x + by.x, area.y + by.y, area.width, area.height}; }
+Rect moved(Rect area, Point by) {
+  return {area.x + by.x, area.y + by.y, area.width, area.height};
+}
 
 void draw_cell(Canvas& canvas, const PlacedCell& placed, Point origin, const SheetMarks& marks) {
   const Rect area = moved(placed.area, origin);
@@ -22,10 +24,12 @@ void draw_cell(Canvas& canvas, const PlacedCell& placed, Point origin, const She
   const Rect text = moved(placed.text, origin);
   if (cell.kind == page::CellKind::Button && !cell.text.empty()) {
     const float width = placed.lines.width + 16;
-    const Rect button{placed.align == page::Align::Right ? text.right() - width + 4 : text.x - 8, text.y - 1, width, text.height + 2};
+    const Rect button{placed.align == page::Align::Right ? text.right() - width + 4 : text.x - 8, text.y - 1,
+                      width, text.height + 2};
     canvas.fill(button, selected ? ink::kSelected : hovered ? ink::kHover : ink::kBox, 3);
     canvas.frame(button, selected ? ink::kSelectedEdge : ink::kEdge, 1, 3);
-    canvas.lines_in({button.x + 8, text.y, placed.lines.width, text.height}, placed.type, placed.colour, page::Align::Left, placed.lines);
+    canvas.lines_in({button.x + 8, text.y, placed.lines.width, text.height}, placed.type, placed.colour,
+                    page::Align::Left, placed.lines);
     return;
   }
   if (selected) {
@@ -36,7 +40,8 @@ void draw_cell(Canvas& canvas, const PlacedCell& placed, Point origin, const She
     if (cell.editable) canvas.frame(area, ink::kEdge);
   }
   if (placed.fold_mark) {
-    canvas.text_in({text.x - 15, text.y, 14, text.height}, Type::Small, ink::kQuiet, page::Align::Left, placed.row->open ? "▾" : "▸");
+    canvas.text_in({text.x - 15, text.y, 14, text.height}, Type::Small, ink::kQuiet, page::Align::Left,
+                   placed.row->open ? "▾" : "▸");
   }
   if (cell.kind == page::CellKind::Equation && !cell.text.empty() && placed.lines.lines.size() == 1) {
     canvas.equation({text.x, text.y + 2}, placed.type, placed.colour, placed.lines.lines.front());
@@ -44,7 +49,8 @@ void draw_cell(Canvas& canvas, const PlacedCell& placed, Point origin, const She
   }
   canvas.lines_in(text, placed.type, placed.colour, placed.align, placed.lines);
   if (cell.kind == page::CellKind::Choice && placed.lines.lines.size() == 1) {
-    canvas.text_in({text.x + placed.lines.width + 5, text.y, 10, text.height}, Type::Small, ink::kQuiet, page::Align::Left, "▾");
+    canvas.text_in({text.x + placed.lines.width + 5, text.y, 10, text.height}, Type::Small, ink::kQuiet,
+                   page::Align::Left, "▾");
   }
 }
 
@@ -80,12 +86,15 @@ void draw_sheet(Canvas& canvas, const Layout& layout, Point origin, const SheetM
   }
   // The selected cell's edge stands above the rules around it.
   if (const PlacedCell* selected = layout.find(marks.selected);
-      selected != nullptr && selected->cell->kind != page::CellKind::Button && marks.selected != marks.editing) {
+      selected != nullptr && selected->cell->kind != page::CellKind::Button &&
+      marks.selected != marks.editing) {
     canvas.frame(moved(selected->area, origin), ink::kSelectedEdge, 2);
   }
 }
 
-bool can_select(const PlacedCell& placed) { return !placed.cell->id.empty(); }
+bool can_select(const PlacedCell& placed) {
+  return !placed.cell->id.empty();
+}
 
 const PlacedCell* cell_at(const Layout& layout, Point at) {
   for (const PlacedCell& placed : layout.cells) {
@@ -116,7 +125,9 @@ const PlacedCell* neighbour(const Layout& layout, const std::string& from, Direc
     }
     return nullptr;
   }
-  const auto middle = [](const Rect& area) { return Point{area.x + area.width / 2, area.y + area.height / 2}; };
+  const auto middle = [](const Rect& area) {
+    return Point{area.x + area.width / 2, area.y + area.height / 2};
+  };
   const Point here = middle(start->area);
   const PlacedCell* best = nullptr;
   float least = std::numeric_limits<float>::max();
@@ -131,7 +142,8 @@ const PlacedCell* neighbour(const Layout& layout, const std::string& from, Direc
       if (!beside || distance <= 0) continue;
       cost = distance;
     } else {
-      const float distance = direction == Direction::Down ? area.y - start->area.bottom() : start->area.y - area.bottom();
+      const float distance =
+          direction == Direction::Down ? area.y - start->area.bottom() : start->area.y - area.bottom();
       if (distance < -2) continue;
       // A line further away costs more than standing aside on the next one.
       const float aside = std::max({0.0f, area.x - here.x, here.x - area.right()});

@@ -6,12 +6,16 @@
 namespace heatledger::window {
 namespace {
 
-constexpr float kPad = 7;      // left and right of a cell's text
+constexpr float kPad = 7;           // left and right of a cell's text
 constexpr float kHeadingRoom = 74;  // of a column's heading before it takes a second line
-constexpr float kIndent = 15;  // of the fold mark, and of detail lines under it
+constexpr float kIndent = 15;       // of the fold mark, and of detail lines under it
 
-std::string_view shown_text(const page::Cell& cell) { return cell.text.empty() ? cell.hint : cell.text; }
-bool shows_hint(const page::Cell& cell) { return cell.text.empty() && cell.editable; }
+std::string_view shown_text(const page::Cell& cell) {
+  return cell.text.empty() ? cell.hint : cell.text;
+}
+bool shows_hint(const page::Cell& cell) {
+  return cell.text.empty() && cell.editable;
+}
 
 /// What the role of a row asks of its cells.
 struct RowStyle {
@@ -23,11 +27,16 @@ struct RowStyle {
 RowStyle style_of(page::RowRole role, page::TableLook look) {
   const bool ledger = look == page::TableLook::Ledger;
   switch (role) {
-    case page::RowRole::Body: return {ledger ? Type::Body : Type::Detail, ledger ? 4.0f : 3.0f, false};
-    case page::RowRole::Detail: return {Type::Detail, 0, false};
-    case page::RowRole::Subtotal: return {Type::Body, 4, true};
-    case page::RowRole::Result: return {Type::Body, 4, true};
-    case page::RowRole::Correction: return {Type::Detail, 1, false};
+    case page::RowRole::Body:
+      return {ledger ? Type::Body : Type::Detail, ledger ? 4.0f : 3.0f, false};
+    case page::RowRole::Detail:
+      return {Type::Detail, 0, false};
+    case page::RowRole::Subtotal:
+      return {Type::Body, 4, true};
+    case page::RowRole::Result:
+      return {Type::Body, 4, true};
+    case page::RowRole::Correction:
+      return {Type::Detail, 1, false};
   }
   return {};
 }
@@ -58,7 +67,8 @@ Colour colour_of_cell(const page::Cell& cell) {
 }
 
 float cell_text_width(const Fonts& fonts, const page::Cell& cell, Type type) {
-  if (cell.kind == page::CellKind::Equation && !cell.text.empty()) return equation_width(fonts, type, cell.text);
+  if (cell.kind == page::CellKind::Equation && !cell.text.empty())
+    return equation_width(fonts, type, cell.text);
   float width = text_width(fonts, type, shown_text(cell));
   if (cell.kind == page::CellKind::Choice) width += 14;  // the mark that it opens
   if (cell.kind == page::CellKind::Button) width += 20;  // its frame
@@ -75,14 +85,17 @@ float widest_word(const Fonts& fonts, Type type, std::string_view text) {
   return widest;
 }
 
-/// Widths of the columns of a table: shares first, then content; what is left over goes to the columns of words.
+/// Widths of the columns of a table: shares first, then content; what is left over goes to the columns of
+/// words.
 std::vector<float> column_widths(const page::Table& table, const Fonts& fonts, float width) {
   const std::size_t count = table.columns.size();
   std::vector<float> natural(count, 0);
   for (std::size_t i = 0; i < count; ++i) {
     // A heading may take two lines, but it is not broken into single words for the sake of a narrow figure.
     const float whole = text_width(fonts, Type::Small, table.columns[i].heading);
-    natural[i] = std::max(std::min(whole, kHeadingRoom), widest_word(fonts, Type::Small, table.columns[i].heading)) + 2 * kPad + 1;
+    natural[i] =
+        std::max(std::min(whole, kHeadingRoom), widest_word(fonts, Type::Small, table.columns[i].heading)) +
+        2 * kPad + 1;
   }
   bool folds = false;
   for (const page::Row& row : table.rows) folds = folds || !row.fold_id.empty();
@@ -99,7 +112,8 @@ std::vector<float> column_widths(const page::Table& table, const Fonts& fonts, f
   }
   float total = 0, flexible = 0;
   for (std::size_t i = 0; i < count; ++i) {
-    if (table.columns[i].width > 0) natural[i] = std::max(static_cast<float>(table.columns[i].width) * width, 20.0f);
+    if (table.columns[i].width > 0)
+      natural[i] = std::max(static_cast<float>(table.columns[i].width) * width, 20.0f);
     total += natural[i];
     if (table.columns[i].align == page::Align::Left && table.columns[i].width <= 0) flexible += natural[i];
   }
@@ -111,12 +125,15 @@ std::vector<float> column_widths(const page::Table& table, const Fonts& fonts, f
   }
   if (rest >= 0) {
     for (std::size_t i = 0; i < count; ++i) {
-      if (table.columns[i].align == page::Align::Left && table.columns[i].width <= 0) natural[i] += rest * natural[i] / flexible;
+      if (table.columns[i].align == page::Align::Left && table.columns[i].width <= 0)
+        natural[i] += rest * natural[i] / flexible;
     }
     return natural;
   }
   // Too wide: columns of words give way, the widest first, and break their lines.
-  const auto words = [&](std::size_t i) { return table.columns[i].align == page::Align::Left && table.columns[i].width <= 0; };
+  const auto words = [&](std::size_t i) {
+    return table.columns[i].align == page::Align::Left && table.columns[i].width <= 0;
+  };
   float low = 0, high = width;
   for (int step = 0; step < 24; ++step) {
     const float limit = (low + high) / 2;
@@ -130,8 +147,8 @@ std::vector<float> column_widths(const page::Table& table, const Fonts& fonts, f
   return natural;
 }
 
-PlacedCell place_cell(const page::Cell& cell, const page::Row& row, const Fonts& fonts, page::TableLook look, page::Align align,
-                      float width) {
+PlacedCell place_cell(const page::Cell& cell, const page::Row& row, const Fonts& fonts, page::TableLook look,
+                      page::Align align, float width) {
   PlacedCell placed;
   placed.cell = &cell;
   placed.row = &row;
@@ -139,11 +156,13 @@ PlacedCell place_cell(const page::Cell& cell, const page::Row& row, const Fonts&
   placed.colour = colour_of_cell(cell);
   placed.align = align;
   placed.hint = shows_hint(cell);
-  if (cell.kind == page::CellKind::Equation && !cell.text.empty() && equation_width(fonts, placed.type, cell.text) <= width) {
+  if (cell.kind == page::CellKind::Equation && !cell.text.empty() &&
+      equation_width(fonts, placed.type, cell.text) <= width) {
     placed.lines.lines = {cell.text};
     placed.lines.width = equation_width(fonts, placed.type, cell.text);
   } else {
-    placed.lines = wrap(fonts, placed.type, placed.hint ? std::string_view(cell.hint) : std::string_view(cell.text), width);
+    placed.lines = wrap(fonts, placed.type,
+                        placed.hint ? std::string_view(cell.hint) : std::string_view(cell.text), width);
   }
   return placed;
 }
@@ -162,7 +181,8 @@ class Grid {
     lefts_.push_back(x);
     for (const page::Row& row : table.rows) {
       folds_ = folds_ || !row.fold_id.empty();
-      for (const page::Cell& cell : row.cells) ruled_rows_ = ruled_rows_ || cell.editable || cell.kind == page::CellKind::Number;
+      for (const page::Cell& cell : row.cells)
+        ruled_rows_ = ruled_rows_ || cell.editable || cell.kind == page::CellKind::Number;
     }
   }
 
@@ -181,7 +201,9 @@ class Grid {
   }
 
  private:
-  void rule(float y, float thickness, Colour colour) { layout_.fills.push_back({{place_.x, y, place_.width, thickness}, colour}); }
+  void rule(float y, float thickness, Colour colour) {
+    layout_.fills.push_back({{place_.x, y, place_.width, thickness}, colour});
+  }
 
   void add_headings() {
     std::vector<Wrapped> wrapped;
@@ -221,15 +243,19 @@ class Grid {
     std::size_t column = 0;
     for (const page::Cell& cell : row.cells) {
       if (column >= table_.columns.size()) break;
-      const std::size_t last = std::min(column + static_cast<std::size_t>(std::max(cell.span, 1)), table_.columns.size());
+      const std::size_t last =
+          std::min(column + static_cast<std::size_t>(std::max(cell.span, 1)), table_.columns.size());
       float left = lefts_[column] + kPad;
-      if (column == 0 && folds_ && (row.role == page::RowRole::Body || row.role == page::RowRole::Detail)) left += kIndent;
+      if (column == 0 && folds_ && (row.role == page::RowRole::Body || row.role == page::RowRole::Detail))
+        left += kIndent;
       const float right = lefts_[last] - kPad;
-      const page::Align align = cell.kind == page::CellKind::Button ? page::Align::Right : table_.columns[column].align;
+      const page::Align align =
+          cell.kind == page::CellKind::Button ? page::Align::Right : table_.columns[column].align;
       PlacedCell placed = place_cell(cell, row, fonts_, table_.look, align, right - left);
       placed.fold_mark = column == 0 && !row.fold_id.empty();
       placed.area = {lefts_[column], top, lefts_[last] - lefts_[column], 0};
-      placed.text = {left, top + style.pad, right - left, line_height(placed.type) * static_cast<float>(placed.lines.lines.size())};
+      placed.text = {left, top + style.pad, right - left,
+                     line_height(placed.type) * static_cast<float>(placed.lines.lines.size())};
       tallest = std::max(tallest, placed.text.height);
       layout_.cells.push_back(std::move(placed));
       column = last;
@@ -239,15 +265,19 @@ class Grid {
       PlacedCell& placed = layout_.cells[i];
       placed.area.height = height;
       // One line stands in the middle of a row of one line and on the first line of a taller one.
-      if (placed.lines.lines.size() <= 1) placed.text = {placed.text.x, top + style.pad, placed.text.width, line_height(style.type)};
+      if (placed.lines.lines.size() <= 1)
+        placed.text = {placed.text.x, top + style.pad, placed.text.width, line_height(style.type)};
     }
-    if (row.role == page::RowRole::Result) layout_.fills.push_back({{place_.x, top, place_.width, height}, ink::kBand});
+    if (row.role == page::RowRole::Result)
+      layout_.fills.push_back({{place_.x, top, place_.width, height}, ink::kBand});
     y_ += height;
     // The spine parts broken from formed down to their sums; what follows is one figure.
-    if (first_sum || (!summed_ && (row.role == page::RowRole::Body || row.role == page::RowRole::Detail))) spine_end_ = y_;
+    if (first_sum || (!summed_ && (row.role == page::RowRole::Body || row.role == page::RowRole::Detail)))
+      spine_end_ = y_;
     summed_ = summed_ || first_sum;
     const bool before_detail = next != nullptr && next->role == page::RowRole::Detail;
-    const bool ruled = (row.role == page::RowRole::Body && ruled_rows_) || row.role == page::RowRole::Result ||
+    const bool ruled = (row.role == page::RowRole::Body && ruled_rows_) ||
+                       row.role == page::RowRole::Result ||
                        (row.role == page::RowRole::Detail && !before_detail);
     if (ruled && !(row.role == page::RowRole::Body && before_detail)) {
       rule(y_, 1, ink::kFaint);
@@ -274,7 +304,8 @@ float lay_out_form(const page::Table& table, const Fonts& fonts, Rect place, Lay
   float y = place.y;
   for (const page::Row& row : table.rows) {
     bool buttons = true;
-    for (const page::Cell& cell : row.cells) buttons = buttons && (cell.kind == page::CellKind::Button || cell.text.empty());
+    for (const page::Cell& cell : row.cells)
+      buttons = buttons && (cell.kind == page::CellKind::Button || cell.text.empty());
     float x = place.x;
     std::size_t column = 0;
     for (const page::Cell& cell : row.cells) {
@@ -317,10 +348,14 @@ float lay_out_boxes(const page::Table& table, const Fonts& fonts, Rect place, La
         if (cell.text.empty()) continue;
         const bool what = k == 0;
         PlacedCell placed = place_cell(cell, row, fonts, table.look, page::Align::Left, inner);
-        placed.type = what ? Type::Small : k == 1 && cell.kind == page::CellKind::Number ? Type::Value : cell.tone == page::Tone::Quiet ? Type::Small : Type::Body;
+        placed.type = what                                            ? Type::Small
+                      : k == 1 && cell.kind == page::CellKind::Number ? Type::Value
+                      : cell.tone == page::Tone::Quiet                ? Type::Small
+                                                                      : Type::Body;
         if (what) {
           placed.lines = wrap(fonts, placed.type, cell.text, inner);
-          placed.text = {left, line, inner, line_height(placed.type) * static_cast<float>(placed.lines.lines.size())};
+          placed.text = {left, line, inner,
+                         line_height(placed.type) * static_cast<float>(placed.lines.lines.size())};
           placed.area = placed.text;
           line = placed.text.bottom() + 2;
           height = std::max(height, placed.text.bottom() - y);
@@ -334,7 +369,10 @@ float lay_out_boxes(const page::Table& table, const Fonts& fonts, Rect place, La
           own = placed.lines.width;
           const float own_height = line_height(placed.type) * static_cast<float>(placed.lines.lines.size());
           // Unit and ± stand on the base line of the large figure.
-          const float lower = placed.type == Type::Value ? 0 : placed.lines.lines.size() > 1 ? 0 : placed.type == Type::Body ? 4.5f : 6;
+          const float lower = placed.type == Type::Value      ? 0
+                              : placed.lines.lines.size() > 1 ? 0
+                              : placed.type == Type::Body     ? 4.5f
+                                                              : 6;
           placed.text = {x, line + lower, own + 1, own_height};
           placed.area = {x - 4, line - 1, own + 8, std::max(line_height(Type::Value), own_height)};
           x += own + 5;
@@ -375,7 +413,9 @@ float lay_out_banner(const page::Table& table, const Fonts& fonts, Rect place, L
       PlacedCell placed = place_cell(cell, row, fonts, table.look, align, width - 2 * side);
       if (cell.kind == page::CellKind::Button) placed.align = page::Align::Left;
       placed.area = {x, y, width, 0};
-      placed.text = {x + side, y + pad, width - 2 * side, line_height(placed.type) * static_cast<float>(std::max<std::size_t>(1, placed.lines.lines.size()))};
+      placed.text = {
+          x + side, y + pad, width - 2 * side,
+          line_height(placed.type) * static_cast<float>(std::max<std::size_t>(1, placed.lines.lines.size()))};
       if (cell.kind == page::CellKind::Button) placed.text.x += kPad;
       tallest = std::max(tallest, placed.text.height);
       layout.cells.push_back(std::move(placed));
@@ -404,7 +444,8 @@ float natural_form_width(const page::Table& form, const Fonts& fonts) {
     for (const page::Cell& cell : row.cells) {
       if (column >= natural.size()) break;
       // An empty value still needs room to be seen and clicked.
-      natural[column] = std::max({natural[column], cell_text_width(fonts, cell, Type::Small) + 2 * kPad, cell.editable ? 84.0f : 0.0f});
+      natural[column] = std::max({natural[column], cell_text_width(fonts, cell, Type::Small) + 2 * kPad,
+                                  cell.editable ? 84.0f : 0.0f});
       column += static_cast<std::size_t>(std::max(cell.span, 1));
     }
   }
@@ -415,11 +456,15 @@ float natural_form_width(const page::Table& form, const Fonts& fonts) {
 
 float lay_out_table(const page::Table& table, const Fonts& fonts, Rect place, Layout& layout) {
   switch (table.look) {
-    case page::TableLook::Form: return lay_out_form(table, fonts, place, layout);
-    case page::TableLook::Boxes: return lay_out_boxes(table, fonts, place, layout);
-    case page::TableLook::Banner: return lay_out_banner(table, fonts, place, layout);
+    case page::TableLook::Form:
+      return lay_out_form(table, fonts, place, layout);
+    case page::TableLook::Boxes:
+      return lay_out_boxes(table, fonts, place, layout);
+    case page::TableLook::Banner:
+      return lay_out_banner(table, fonts, place, layout);
     case page::TableLook::Ledger:
-    case page::TableLook::List: return Grid(table, fonts, place, layout).build();
+    case page::TableLook::List:
+      return Grid(table, fonts, place, layout).build();
   }
   return place.y;
 }

@@ -8,8 +8,12 @@ namespace {
 
 constexpr std::size_t kDeepest = 1000;
 
-bool continues(char c) { return (static_cast<unsigned char>(c) & 0xC0) == 0x80; }
-bool is_blank(char c) { return c == ' '; }
+bool continues(char c) {
+  return (static_cast<unsigned char>(c) & 0xC0) == 0x80;
+}
+bool is_blank(char c) {
+  return c == ' ';
+}
 
 }  // namespace
 
@@ -69,7 +73,9 @@ void TextField::erase(std::size_t from, std::size_t to) {
   caret_ = anchor_ = from;
 }
 
-void TextField::erase_selection() { erase(std::min(caret_, anchor_), std::max(caret_, anchor_)); }
+void TextField::erase_selection() {
+  erase(std::min(caret_, anchor_), std::max(caret_, anchor_));
+}
 
 void TextField::insert(std::string_view text) {
   remember(false);
@@ -125,7 +131,9 @@ void TextField::move(std::size_t to, bool extend) {
   typing_ = false;
 }
 
-void TextField::put_caret(std::size_t offset, bool extend) { move(std::min(offset, text_.size()), extend); }
+void TextField::put_caret(std::size_t offset, bool extend) {
+  move(std::min(offset, text_.size()), extend);
+}
 
 void TextField::select_word(std::size_t offset) {
   std::size_t from = std::min(offset, text_.size());
@@ -159,8 +167,12 @@ bool TextField::key(const KeyPress& press) {
         move(has_selection() && !press.shift ? high : after(caret_), press.shift);
       }
       return true;
-    case Key::Home: move(0, press.shift); return true;
-    case Key::End: move(text_.size(), press.shift); return true;
+    case Key::Home:
+      move(0, press.shift);
+      return true;
+    case Key::End:
+      move(text_.size(), press.shift);
+      return true;
     case Key::Backspace:
       if (has_selection() || caret_ > 0) remember(false);
       if (has_selection()) {
@@ -177,11 +189,14 @@ bool TextField::key(const KeyPress& press) {
         erase(caret_, press.control ? word_after(caret_) : after(caret_));
       }
       return true;
-    default: break;
+    default:
+      break;
   }
   if (!press.control) return false;
   switch (press.letter) {
-    case 'a': select_all(); return true;
+    case 'a':
+      select_all();
+      return true;
     case 'c':
     case 'x':
       if (has_selection() && clipboard_.set) {
@@ -208,7 +223,8 @@ bool TextField::key(const KeyPress& press) {
       typing_ = false;
       return true;
     }
-    default: return false;
+    default:
+      return false;
   }
 }
 

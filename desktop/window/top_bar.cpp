@@ -25,13 +25,15 @@ void TopBar::draw(Canvas& canvas, float width) {
     places_[i] = {right, 5, wanted, kHeight - 10};
     const bool hovered = buttons_[i].enabled && places_[i].contains(pointer_);
     if (hovered) canvas.fill(places_[i], ink::kBarHover, 3);
-    canvas.text_in(places_[i], Type::Detail, buttons_[i].enabled ? ink::kBarText : ink::rgb(112, 115, 124), page::Align::Centre, buttons_[i].text);
+    canvas.text_in(places_[i], Type::Detail, buttons_[i].enabled ? ink::kBarText : ink::rgb(112, 115, 124),
+                   page::Align::Centre, buttons_[i].text);
   }
   const Rect room{file_left, 0, right - file_left - 10, kHeight};
   canvas.clip(room);
   canvas.text_in(room, Type::Detail, ink::kBarText, page::Align::Left, file_);
   const float after = text_width(fonts, Type::Detail, file_) + 7;
-  canvas.text_in({room.x + after, 0, room.width, kHeight}, Type::Detail, ink::kBarQuiet, page::Align::Left, "· " + state_);
+  canvas.text_in({room.x + after, 0, room.width, kHeight}, Type::Detail, ink::kBarQuiet, page::Align::Left,
+                 "· " + state_);
   canvas.unclip();
   for (std::size_t i = 0; i < buttons_.size(); ++i) {
     if (!places_[i].contains(pointer_) || buttons_[i].key.empty()) continue;

@@ -5,5 +5,5 @@ cd "$(dirname "$0")/../.."
 bad=0
 if git grep -nIE '(^|[^A-Za-z0-9_./-])/(home|Users|work)/[a-z]' -- . ':!scripts/ci/words.sh'; then bad=1; fi
 if git grep -nIE '"resolved": *"https?:' -- '*package-lock.json'; then bad=1; fi
-if git grep -nIE 'TODO|FIXME|XXX|HACK' -- core wasm desktop scripts tests ':!scripts/ci/words.sh'; then bad=1; fi
+if git grep -nIwE 'TODO|FIXME|XXX|HACK' -- core wasm desktop scripts tests ':!scripts/ci/words.sh'; then bad=1; fi
 exit $bad

@@ -11,7 +11,8 @@
 namespace heatledger::facts {
 namespace {
 
-// Runs once in a process: what is read stays read. Registered first, so that nothing has touched the tables before.
+// Runs once in a process: what is read stays read. Registered first, so that nothing has touched the tables
+// before.
 void Facts_FirstUseOfAllTables(benchmark::State& state) {
   for (auto _ : state) {
     benchmark::DoNotOptimize(Library::embedded().find_name("nitrobenzene"));

@@ -1,4 +1,5 @@
-// How long a sheet takes: a first computation of 20 reactions with 60 species, one edit, and equations in bulk.
+// How long a sheet takes: a first computation of 20 reactions with 60 species, one edit, and equations in
+// bulk.
 #include <benchmark/benchmark.h>
 
 #include <string>
@@ -39,10 +40,12 @@ std::shared_ptr<const estimate::BondSet> primary_set() {
   return std::make_shared<const estimate::BondSet>(std::move(estimate::BondSet::published("")).value());
 }
 
-std::shared_ptr<const balance::Ledger> compute(const char* equation, balance::SpeciesSource& species, const balance::LedgerOptions& options) {
+std::shared_ptr<const balance::Ledger> compute(const char* equation, balance::SpeciesSource& species,
+                                               const balance::LedgerOptions& options) {
   Result<balance::Reaction> read = balance::read_reaction(equation, species);
   if (!read.ok()) return nullptr;
-  Result<balance::Ledger> made = balance::make_ledger(std::make_shared<const balance::Reaction>(std::move(read).value()), options);
+  Result<balance::Ledger> made =
+      balance::make_ledger(std::make_shared<const balance::Reaction>(std::move(read).value()), options);
   if (!made.ok()) return nullptr;
   return std::make_shared<const balance::Ledger>(std::move(made).value());
 }
@@ -68,7 +71,8 @@ void one_edit(benchmark::State& state) {
   for (const char* equation : kEquations) compute(equation, species, options);
   std::size_t at = 0;
   for (auto _ : state) {
-    if (compute(kEquations[at % std::size(kEquations)], species, options) == nullptr) state.SkipWithError("no ledger");
+    if (compute(kEquations[at % std::size(kEquations)], species, options) == nullptr)
+      state.SkipWithError("no ledger");
     ++at;
   }
 }
@@ -77,13 +81,16 @@ BENCHMARK(one_edit)->Unit(benchmark::kMicrosecond);
 /// 1 000 different equations of four species each: 40 alkanes burned in 25 amounts.
 std::vector<std::string> many_equations() {
   std::vector<std::string> fuels;
-  for (int chain = 1; chain <= 40; ++chain) fuels.push_back(std::string(static_cast<std::size_t>(chain), 'C'));
+  for (int chain = 1; chain <= 40; ++chain)
+    fuels.push_back(std::string(static_cast<std::size_t>(chain), 'C'));
   std::vector<std::string> equations;
   for (int times = 1; times <= 25; ++times) {
     for (std::size_t i = 0; i < fuels.size(); ++i) {
       const int carbon = static_cast<int>(i) + 1;
-      equations.push_back(std::to_string(2 * times) + " \"" + fuels[i] + "\"(g) + " + std::to_string(times * (3 * carbon + 1)) + " O2(g) -> " +
-                          std::to_string(2 * times * carbon) + " CO2(g) + " + std::to_string(2 * times * (carbon + 1)) + " H2O(g)");
+      equations.push_back(std::to_string(2 * times) + " \"" + fuels[i] + "\"(g) + " +
+                          std::to_string(times * (3 * carbon + 1)) + " O2(g) -> " +
+                          std::to_string(2 * times * carbon) + " CO2(g) + " +
+                          std::to_string(2 * times * (carbon + 1)) + " H2O(g)");
     }
   }
   return equations;

@@ -1,4 +1,5 @@
-// A sheet of 20 reactions over 60 species: first computation, an edit with everything it makes anew, size of the page.
+// A sheet of 20 reactions over 60 species: first computation, an edit with everything it makes anew, size of
+// the page.
 #include <benchmark/benchmark.h>
 
 #include <array>
@@ -59,19 +60,20 @@ page::Session session() {
 /// A balanced equation with coefficients of its own for each turn, so that no result is remembered.
 std::string hydrogenation(std::size_t turn) {
   const auto times = [&](std::size_t factor) { return std::to_string(factor * (1 + turn)) + " "; };
-  return times(1) + "nitrobenzene(l) + " + times(3) + "H2(g) -> " + times(1) + "aniline(l) + " + times(2) + "H2O(l)";
+  return times(1) + "nitrobenzene(l) + " + times(3) + "H2(g) -> " + times(1) + "aniline(l) + " + times(2) +
+         "H2O(l)";
 }
 
-/// The first sheet of a program: reads the library and fits what is fitted at first use. One turn, and it must run
-/// before every other benchmark of this file.
+/// The first sheet of a program: reads the library and fits what is fitted at first use. One turn, and it
+/// must run before every other benchmark of this file.
 void sheet_first_of_the_program(benchmark::State& state) {
   const document::Worksheet twenty = sheet();
   for (auto _ : state) benchmark::DoNotOptimize(document::Calculator().compute(twenty));
 }
 BENCHMARK(sheet_first_of_the_program)->Iterations(1)->Unit(benchmark::kMillisecond);
 
-/// A new calculator each time: equations read, species built, ledgers made. What a program does once, reading the
-/// library and fitting at first use, has its own benchmark above.
+/// A new calculator each time: equations read, species built, ledgers made. What a program does once, reading
+/// the library and fitting at first use, has its own benchmark above.
 void sheet_first_computation(benchmark::State& state) {
   const document::Worksheet twenty = sheet();
   document::Calculator().compute(twenty);
@@ -119,7 +121,8 @@ void sheet_edit_bond_value(benchmark::State& state) {
   std::size_t turn = 0;
   for (auto _ : state) {
     ++turn;
-    CHECK(edited.edit("bond.0.value", std::to_string(400 + turn % 20) + "." + std::to_string(turn)).ok(), "taken");
+    CHECK(edited.edit("bond.0.value", std::to_string(400 + turn % 20) + "." + std::to_string(turn)).ok(),
+          "taken");
     benchmark::DoNotOptimize(edited.page());
   }
 }

@@ -1,7 +1,8 @@
 // SMILES to bond tally, beside RDKit and Open Babel, on the same 2,000 structures on one core.
-// Input: the first 2,000 lines of tests/data/smiles/molecules.tsv (process compounds, 12 characters in the median).
-// Ours: parse_smiles_into and count_bonds with all hydrogens, Kekulé orders, settings marked. RDKit: SmilesToMol with its
-// usual sanitisation, bonds counted by order, hydrogens as counts. Open Babel: ReadString, the same count.
+// Input: the first 2,000 lines of tests/data/smiles/molecules.tsv (process compounds, 12 characters in the
+// median). Ours: parse_smiles_into and count_bonds with all hydrogens, Kekulé orders, settings marked. RDKit:
+// SmilesToMol with its usual sanitisation, bonds counted by order, hydrogens as counts. Open Babel:
+// ReadString, the same count.
 #include <benchmark/benchmark.h>
 
 #include <string>
@@ -33,8 +34,8 @@ const std::vector<std::string>& texts() {
 void report(benchmark::State& state) {
   const auto count = static_cast<double>(texts().size());
   state.counters["molecules/s"] = benchmark::Counter(count, benchmark::Counter::kIsIterationInvariantRate);
-  state.counters["each"] = benchmark::Counter(
-      count, benchmark::Counter::kIsIterationInvariantRate | benchmark::Counter::kInvert);
+  state.counters["each"] =
+      benchmark::Counter(count, benchmark::Counter::kIsIterationInvariantRate | benchmark::Counter::kInvert);
 }
 
 void SmilesToTally_Heatledger(benchmark::State& state) {
@@ -89,7 +90,10 @@ void SmilesToCanonical_Heatledger(benchmark::State& state) {
 BENCHMARK(SmilesToTally_Heatledger)->Unit(benchmark::kMillisecond)->Repetitions(5)->ReportAggregatesOnly();
 BENCHMARK(SmilesToTally_Rdkit)->Unit(benchmark::kMillisecond)->Repetitions(5)->ReportAggregatesOnly();
 BENCHMARK(SmilesToTally_OpenBabel)->Unit(benchmark::kMillisecond)->Repetitions(5)->ReportAggregatesOnly();
-BENCHMARK(SmilesToCanonical_Heatledger)->Unit(benchmark::kMillisecond)->Repetitions(5)->ReportAggregatesOnly();
+BENCHMARK(SmilesToCanonical_Heatledger)
+    ->Unit(benchmark::kMillisecond)
+    ->Repetitions(5)
+    ->ReportAggregatesOnly();
 
 }  // namespace
 }  // namespace heatledger

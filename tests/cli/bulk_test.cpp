@@ -19,15 +19,14 @@ std::vector<std::string> lines_of(const std::string& text) {
 }
 
 const std::vector<std::string>& equations() {
-  static const std::vector<std::string> list{
-      "nitrobenzene(l) + 3 H2 -> aniline(l) + 2 H2O(l)",
-      "CH4 + 2 O2 -> CO2 + 2 H2O",
-      "acetic acid(l) + ethanol(l) -> ethyl acetate(l) + water(l)",
-      "benzene(l) + Cl2 -> chlorobenzene(l) + HCl",
-      "\"CC(=O)O\"(l) + \"CCO\"(l) -> \"CCOC(C)=O\"(l) + water(l)",
-      "N2 + 3 H2 <=> 2 NH3",
-      "toluene(l) + 9 O2 -> 7 CO2 + 4 H2O(l)",
-      "C(s) + O2 -> CO2"};
+  static const std::vector<std::string> list{"nitrobenzene(l) + 3 H2 -> aniline(l) + 2 H2O(l)",
+                                             "CH4 + 2 O2 -> CO2 + 2 H2O",
+                                             "acetic acid(l) + ethanol(l) -> ethyl acetate(l) + water(l)",
+                                             "benzene(l) + Cl2 -> chlorobenzene(l) + HCl",
+                                             "\"CC(=O)O\"(l) + \"CCO\"(l) -> \"CCOC(C)=O\"(l) + water(l)",
+                                             "N2 + 3 H2 <=> 2 NH3",
+                                             "toluene(l) + 9 O2 -> 7 CO2 + 4 H2O(l)",
+                                             "C(s) + O2 -> CO2"};
   return list;
 }
 
@@ -87,7 +86,8 @@ TEST(Bulk, ShortAnswersInContextEqualTallyDigitForDigit) {
 
 TEST(Bulk, FullAnswersEqualTally) {
   std::string input;
-  for (const std::string& equation : equations()) input += json{{"id", "x"}, {"equation", equation}}.dump() + "\n";
+  for (const std::string& equation : equations())
+    input += json{{"id", "x"}, {"equation", equation}}.dump() + "\n";
   const std::vector<std::string> answers = lines_of(heatledger({"bulk", "--full"}, input).out);
   ASSERT_EQ(answers.size(), equations().size());
   for (std::size_t i = 0; i < answers.size(); ++i) {
@@ -99,9 +99,12 @@ TEST(Bulk, FullAnswersEqualTally) {
 }
 
 TEST(Bulk, SpeciesLinesEqualTheSpeciesCommand) {
-  const std::vector<std::string> answers = lines_of(heatledger({"bulk"}, "{\"id\":1,\"species\":\"ethyl acetate\"}\n"
-                                                                         "{\"id\":2,\"smiles\":\"CO\"}\n"
-                                                                         "{\"id\":3,\"species\":\"aniline\",\"estimate_only\":true}\n").out);
+  const std::vector<std::string> answers =
+      lines_of(heatledger({"bulk"},
+                          "{\"id\":1,\"species\":\"ethyl acetate\"}\n"
+                          "{\"id\":2,\"smiles\":\"CO\"}\n"
+                          "{\"id\":3,\"species\":\"aniline\",\"estimate_only\":true}\n")
+                   .out);
   ASSERT_EQ(answers.size(), 3u);
   const auto without_id = [](const std::string& line) {
     json answer = json::parse(line);
@@ -110,7 +113,8 @@ TEST(Bulk, SpeciesLinesEqualTheSpeciesCommand) {
   };
   EXPECT_EQ(without_id(answers[0]), json::parse(heatledger({"species", "ethyl acetate", "--json"}).out));
   EXPECT_EQ(without_id(answers[1]), json::parse(heatledger({"species", "CO", "--smiles", "--json"}).out));
-  EXPECT_EQ(without_id(answers[2]), json::parse(heatledger({"species", "aniline", "--estimate-only", "--json"}).out));
+  EXPECT_EQ(without_id(answers[2]),
+            json::parse(heatledger({"species", "aniline", "--estimate-only", "--json"}).out));
 }
 
 TEST(Bulk, ABadLineGivesAnErrorInItsPlaceAndTheRunGoesOn) {
@@ -135,12 +139,14 @@ TEST(Bulk, ABadLineGivesAnErrorInItsPlaceAndTheRunGoesOn) {
   EXPECT_EQ(json::parse(answers[3])["error"]["code"], "ledger.not_balanced");
   EXPECT_EQ(json::parse(answers[4])["id"], "five");
   EXPECT_EQ(json::parse(answers[4])["error"]["code"], "bulk.wrong_type");
-  EXPECT_NE(json::parse(answers[5])["error"]["message"].get<std::string>().find("equatoin"), std::string::npos);
+  EXPECT_NE(json::parse(answers[5])["error"]["message"].get<std::string>().find("equatoin"),
+            std::string::npos);
   EXPECT_EQ(json::parse(answers[6])["id"], 7);
 }
 
 TEST(Bulk, ALineThatIsTooLongIsSkippedToItsEnd) {
-  const std::string input = "{\"id\":1,\"equation\":\"" + std::string(3u << 20, 'C') + "\"}\n{\"id\":2,\"equation\":\"H2 + Cl2 -> 2 HCl\"}\n";
+  const std::string input = "{\"id\":1,\"equation\":\"" + std::string(3u << 20, 'C') +
+                            "\"}\n{\"id\":2,\"equation\":\"H2 + Cl2 -> 2 HCl\"}\n";
   const std::vector<std::string> answers = lines_of(heatledger({"bulk"}, input).out);
   ASSERT_EQ(answers.size(), 2u);
   EXPECT_EQ(json::parse(answers[0])["error"]["code"], "bulk.line_too_long");
@@ -165,7 +171,8 @@ TEST(Bulk, OrderIsKeptOverManyLines) {
 TEST(Bulk, AnswersBeforeItWaitsForMore) {
   // A program on the other side of two pipes asks, waits for the answer, asks again.
   const Ran ran = run({"bash", "-c",
-                       "coproc \"" HEATLEDGER_PROGRAM "\" bulk; echo '{\"id\":1,\"equation\":\"H2 + Cl2 -> 2 HCl\"}' >&${COPROC[1]}; "
+                       "coproc \"" HEATLEDGER_PROGRAM
+                       "\" bulk; echo '{\"id\":1,\"equation\":\"H2 + Cl2 -> 2 HCl\"}' >&${COPROC[1]}; "
                        "read -t 20 -u ${COPROC[0]} line && echo \"$line\"; exec {COPROC[1]}>&-; wait"});
   EXPECT_NE(ran.out.find("\"id\":1"), std::string::npos) << ran.err;
 }
@@ -174,11 +181,15 @@ TEST(Bulk, AnswersBeforeItWaitsForMore) {
 long peak_kilobytes(int lines) {
   const std::string line = "{\"id\":123456,\"equation\":\"nitrobenzene(l) + 3 H2 -> aniline(l) + 2 H2O(l)\"}";
   // The program's own record is read while it waits for more input: /proc/PID/status, VmHWM.
-  const Ran ran = run({"bash", "-c",
-                       "coproc \"" HEATLEDGER_PROGRAM "\" bulk > /dev/null; "
-                       "yes \"$1\" | head -" + std::to_string(lines) + " >&${COPROC[1]}; "
-                       "while [ \"$(awk '{print $3}' /proc/$COPROC_PID/stat)\" != S ]; do sleep 0.05; done; "
-                       "awk '/VmHWM/ {print $2}' /proc/$COPROC_PID/status; exec {COPROC[1]}>&-; wait", "bash", line});
+  const Ran ran =
+      run({"bash", "-c",
+           "coproc \"" HEATLEDGER_PROGRAM "\" bulk > /dev/null; "
+           "yes \"$1\" | head -" +
+               std::to_string(lines) +
+               " >&${COPROC[1]}; "
+               "while [ \"$(awk '{print $3}' /proc/$COPROC_PID/stat)\" != S ]; do sleep 0.05; done; "
+               "awk '/VmHWM/ {print $2}' /proc/$COPROC_PID/status; exec {COPROC[1]}>&-; wait",
+           "bash", line});
   return std::atol(ran.out.c_str());
 }
 

@@ -29,7 +29,8 @@ std::string code_of(const std::string& line) {
 }
 
 TEST(JsonLine, TakesKeysInAnyOrderAndHandsTheIdBackAsItCame) {
-  const std::string line = R"( { "estimate_only" : true , "note":[1,{"a":null}], "smiles" : "CCO", "id" : 1.50e+2 } )";
+  const std::string line =
+      R"( { "estimate_only" : true , "note":[1,{"a":null}], "smiles" : "CCO", "id" : 1.50e+2 } )";
   const LineQuestion question = read(line);
   EXPECT_EQ(question.id, "1.50e+2");
   EXPECT_EQ(question.smiles.value_or(""), "CCO");
@@ -44,11 +45,30 @@ TEST(JsonLine, UndoesEveryEscape) {
 }
 
 TEST(JsonLine, RefusesWhatIsNotJson) {
-  for (const char* line : {
-           "{", "{\"id\":}", "{\"id\":1,}", "{'id':1}", "{\"id\":01}", "{\"id\":1.}", "{\"id\":1e}", "{\"id\":+1}", "{\"id\":nul}",
-           "{\"id\":1} x", "{\"equation\":\"a", "{\"equation\":\"\\x\"}", "{\"equation\":\"\\u12g4\"}", "{\"equation\":\"\\ud800\"}",
-           "{\"equation\":\"\\udc00\"}", "{\"equation\":\"\\ud800\\u0041\"}", "{\"equation\":\"a\tb\"}", "{\"equation\":\"\xff\"}",
-           "{\"equation\":\"\xc0\xaf\"}", "{\"equation\":\"\xed\xa0\x80\"}", "{\"a\":[1,]}", "{\"a\":[}", "{\"a\" 1}", "{1:2}"}) {
+  for (const char* line : {"{",
+                           "{\"id\":}",
+                           "{\"id\":1,}",
+                           "{'id':1}",
+                           "{\"id\":01}",
+                           "{\"id\":1.}",
+                           "{\"id\":1e}",
+                           "{\"id\":+1}",
+                           "{\"id\":nul}",
+                           "{\"id\":1} x",
+                           "{\"equation\":\"a",
+                           "{\"equation\":\"\\x\"}",
+                           "{\"equation\":\"\\u12g4\"}",
+                           "{\"equation\":\"\\ud800\"}",
+                           "{\"equation\":\"\\udc00\"}",
+                           "{\"equation\":\"\\ud800\\u0041\"}",
+                           "{\"equation\":\"a\tb\"}",
+                           "{\"equation\":\"\xff\"}",
+                           "{\"equation\":\"\xc0\xaf\"}",
+                           "{\"equation\":\"\xed\xa0\x80\"}",
+                           "{\"a\":[1,]}",
+                           "{\"a\":[}",
+                           "{\"a\" 1}",
+                           "{1:2}"}) {
     EXPECT_EQ(code_of(line), "bulk.not_json") << line;
   }
   EXPECT_EQ(code_of("[1]"), "bulk.not_an_object");
@@ -71,7 +91,8 @@ TEST(JsonLine, AgreesWithASecondReaderOnMangledLines) {
   constexpr unsigned kSeed = 4711;
   SCOPED_TRACE("seed " + std::to_string(kSeed));
   std::mt19937 random(kSeed);
-  const std::string sound = R"({"id":-12.5e3,"equation":"H2 + Cl2 \u2192 2 HCl\n","other":[true,false,null,{"k":"v"}],"n":0.5})";
+  const std::string sound =
+      R"({"id":-12.5e3,"equation":"H2 + Cl2 \u2192 2 HCl\n","other":[true,false,null,{"k":"v"}],"n":0.5})";
   const std::string alphabet = "{}[]\",:\\u0123eE+-. tfn\x01\xc3\xa9";
   int accepted = 0;
   for (int round = 0; round < 20000; ++round) {
@@ -81,9 +102,14 @@ TEST(JsonLine, AgreesWithASecondReaderOnMangledLines) {
       const std::size_t at = random() % line.size();
       const char c = alphabet[random() % alphabet.size()];
       switch (random() % 3) {
-        case 0: line[at] = c; break;
-        case 1: line.erase(at, 1); break;
-        default: line.insert(at, 1, c);
+        case 0:
+          line[at] = c;
+          break;
+        case 1:
+          line.erase(at, 1);
+          break;
+        default:
+          line.insert(at, 1, c);
       }
     }
     const nlohmann::json second = nlohmann::json::parse(line, nullptr, false);

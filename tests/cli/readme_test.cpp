@@ -50,8 +50,10 @@ TEST(Readme, ExamplesPrintWhatTheySay) {
   std::filesystem::create_directory_symlink(source + "/worksheets", folder / "worksheets");
   const std::string program = std::filesystem::path(HEATLEDGER_PROGRAM).parent_path().string();
   for (const Example& example : examples) {
-    const Ran ran = run({"sh", "-c", "PATH='" + program + "':\"$PATH\"; " + example.command}, {}, folder.path());
-    EXPECT_EQ(ran.out + ran.err, example.expected) << "README.md line " << example.line << ": " << example.command;
+    const Ran ran =
+        run({"sh", "-c", "PATH='" + program + "':\"$PATH\"; " + example.command}, {}, folder.path());
+    EXPECT_EQ(ran.out + ran.err, example.expected)
+        << "README.md line " << example.line << ": " << example.command;
   }
 }
 

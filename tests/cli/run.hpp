@@ -14,7 +14,8 @@ struct Ran {
 /// Runs the heatledger that was just built. @param input  standard input
 Ran heatledger(const std::vector<std::string>& arguments, const std::string& input = {});
 /// Any program, searched on PATH. @param folder  where it runs; empty: here
-Ran run(const std::vector<std::string>& command, const std::string& input = {}, const std::string& folder = {});
+Ran run(const std::vector<std::string>& command, const std::string& input = {},
+        const std::string& folder = {});
 
 /// A folder for one test, removed with everything in it.
 class TemporaryFolder {

@@ -22,11 +22,12 @@ json tally_json(const std::string& equation, std::vector<std::string> more = {})
 
 TEST(Tally, HasEveryKeyOfTheContract) {
   const json answer = tally_json(kHydrogenation);
-  for (const char* key : {"balanced", "equation", "broken", "formed", "gas_298", "corrections", "as_written", "as_run",
-                          "per_mole_of", "routes", "rows"}) {
+  for (const char* key : {"balanced", "equation", "broken", "formed", "gas_298", "corrections", "as_written",
+                          "as_run", "per_mole_of", "routes", "rows"}) {
     EXPECT_TRUE(answer.contains(key)) << key;
   }
-  for (const char* route : {"average", "context", "formation", "taken"}) EXPECT_TRUE(answer["routes"].contains(route)) << route;
+  for (const char* route : {"average", "context", "formation", "taken"})
+    EXPECT_TRUE(answer["routes"].contains(route)) << route;
   EXPECT_TRUE(answer["balanced"].get<bool>());
   EXPECT_EQ(answer["rows"].size(), 4u);
   EXPECT_EQ(answer["corrections"].size(), 3u);  // nitrobenzene, aniline and water are liquids
@@ -36,7 +37,8 @@ TEST(Tally, FormationRouteAgreesWithPublishedHydrogenation) {
   const json answer = tally_json(kHydrogenation);
   const json& taken = answer["routes"]["taken"];
   EXPECT_EQ(taken["route"], "formation");
-  // -552.6 kJ/mol from CRC formation enthalpies; other tables give -544 to -560, half of that span is the tolerance.
+  // -552.6 kJ/mol from CRC formation enthalpies; other tables give -544 to -560, half of that span is the
+  // tolerance.
   EXPECT_NEAR(taken["value"].get<double>(), -552.6, 8.0);
   EXPECT_GT(taken["u95"].get<double>(), 0);
 }
@@ -148,9 +150,10 @@ TEST(Tally, TemperaturesGiveTheFigureAsRun) {
   double sum = hot["routes"]["taken"]["value"].get<double>();
   for (const json& line : hot["to_temperature"]) sum += line["value"].get<double>();
   EXPECT_NEAR(hot["as_run"]["value"].get<double>(), sum, 1e-5);
-  // NIST-JANAF, 4th ed.: H(1000 K) - H(298.15 K) of CO2 33.397, of H2O 26.000 kJ/mol; together 85.40 with two of water.
-  // The tolerance is the 1 per cent between that table and the polynomials.
-  EXPECT_NEAR(hot["as_run"]["value"].get<double>() - hot["routes"]["taken"]["value"].get<double>(), 85.40, 0.9);
+  // NIST-JANAF, 4th ed.: H(1000 K) - H(298.15 K) of CO2 33.397, of H2O 26.000 kJ/mol; together 85.40 with two
+  // of water. The tolerance is the 1 per cent between that table and the polynomials.
+  EXPECT_NEAR(hot["as_run"]["value"].get<double>() - hot["routes"]["taken"]["value"].get<double>(), 85.40,
+              0.9);
   const Ran bare = heatledger({"tally", "H2 -> H2", "--products-at", "80"});
   EXPECT_EQ(bare.status, 1);
 }

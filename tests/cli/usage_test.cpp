@@ -24,8 +24,12 @@ TEST(Usage, VersionIsOneLine) {
 }
 
 TEST(Usage, AnythingElseIsStatusTwoAndSaysSoOnStandardError) {
-  const std::vector<std::vector<std::string>> wrong{
-      {}, {"ladder"}, {"tally"}, {"tally", "H2 -> H2", "--set", "best"}, {"species", "water", "--frob"}, {"bulk", "file.jsonl"}};
+  const std::vector<std::vector<std::string>> wrong{{},
+                                                    {"ladder"},
+                                                    {"tally"},
+                                                    {"tally", "H2 -> H2", "--set", "best"},
+                                                    {"species", "water", "--frob"},
+                                                    {"bulk", "file.jsonl"}};
   for (const auto& arguments : wrong) {
     const Ran ran = heatledger(arguments);
     EXPECT_EQ(ran.status, 2) << (arguments.empty() ? "(none)" : arguments[0]);
@@ -37,7 +41,8 @@ TEST(Usage, AnythingElseIsStatusTwoAndSaysSoOnStandardError) {
 TEST(Usage, AReaderThatGoesAwayIsNoComplaint) {
   // head takes one line and leaves; the run must end without a word on standard error.
   const Ran ran = run({"sh", "-c",
-                       "yes '{\"equation\":\"H2 + Cl2 -> 2 HCl\"}' | head -20000 | \"" HEATLEDGER_PROGRAM "\" bulk | head -1"});
+                       "yes '{\"equation\":\"H2 + Cl2 -> 2 HCl\"}' | head -20000 | \"" HEATLEDGER_PROGRAM
+                       "\" bulk | head -1"});
   EXPECT_EQ(ran.err, "");
   EXPECT_NE(ran.out.find("\"balanced\":true"), std::string::npos);
 }

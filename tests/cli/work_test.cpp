@@ -34,8 +34,8 @@ TEST(Work, PrintsTheSheet) {
 TEST(Work, WritesReportTablesAndDrawings) {
   const TemporaryFolder folder;
   write_whole(folder / "s.heatledger.json", sheet_text(kHydrogenation));
-  const Ran ran = heatledger({"work", folder / "s.heatledger.json", "--html", folder / "r.html", "--csv", folder / "t.csv", "--svg",
-                              folder / "drawings/new"});
+  const Ran ran = heatledger({"work", folder / "s.heatledger.json", "--html", folder / "r.html", "--csv",
+                              folder / "t.csv", "--svg", folder / "drawings/new"});
   ASSERT_EQ(ran.status, 0) << ran.err;
   EXPECT_NE(read_whole(folder / "r.html").find("<html"), std::string::npos);
   EXPECT_NE(read_whole(folder / "t.csv").find("nitrobenzene"), std::string::npos);
@@ -49,7 +49,8 @@ TEST(Work, WritesReportTablesAndDrawings) {
   // Nothing half-written is left beside the files.
   for (const auto& entry : std::filesystem::directory_iterator(folder.path())) {
     const std::string name = entry.path().filename().string();
-    EXPECT_TRUE(name == "s.heatledger.json" || name == "r.html" || name == "t.csv" || name == "drawings") << name;
+    EXPECT_TRUE(name == "s.heatledger.json" || name == "r.html" || name == "t.csv" || name == "drawings")
+        << name;
   }
 }
 
@@ -83,7 +84,8 @@ TEST(Work, ASheetWithAnErrorIsPrintedAndEndsWithStatusOne) {
 TEST(Work, AFileThatCannotBeWrittenIsReported) {
   const TemporaryFolder folder;
   write_whole(folder / "s.heatledger.json", sheet_text(kHydrogenation));
-  const Ran ran = heatledger({"work", folder / "s.heatledger.json", "--html", folder / "no/such/folder/r.html"});
+  const Ran ran =
+      heatledger({"work", folder / "s.heatledger.json", "--html", folder / "no/such/folder/r.html"});
   EXPECT_EQ(ran.status, 1);
   EXPECT_NE(ran.err.find("r.html"), std::string::npos) << ran.err;
 }

@@ -45,7 +45,9 @@ Display::Display() {
   int ends[2];
   if (::pipe(ends) != 0) std::abort();
   ::fcntl(ends[0], F_SETFD, FD_CLOEXEC);
-  server_ = start({"Xvfb", "-displayfd", std::to_string(ends[1]), "-screen", "0", "1500x1100x24", "-nolisten", "tcp"}, {});
+  server_ = start(
+      {"Xvfb", "-displayfd", std::to_string(ends[1]), "-screen", "0", "1500x1100x24", "-nolisten", "tcp"},
+      {});
   ::close(ends[1]);
   // The server writes its number once it listens.
   char c = 0;
@@ -56,7 +58,9 @@ Display::Display() {
   EXPECT_FALSE(number.empty()) << "Xvfb did not start";
 }
 
-Display::~Display() { stop(server_); }
+Display::~Display() {
+  stop(server_);
+}
 
 Window::Window(const Display& display, std::vector<std::string> arguments) : display_(display.name()) {
   arguments.insert(arguments.begin(), HEATLEDGER_WINDOW);
@@ -68,7 +72,9 @@ Window::Window(const Display& display, std::vector<std::string> arguments) : dis
   tool({"xdotool", "windowfocus", "--sync", id_});
 }
 
-Window::~Window() { stop(program_); }
+Window::~Window() {
+  stop(program_);
+}
 
 std::string Window::tool(std::vector<std::string> command, const std::string& input) {
   command.insert(command.begin(), {"env", "DISPLAY=" + display_});
@@ -83,10 +89,13 @@ void Window::keys(const std::vector<std::string>& names) {
   }
 }
 
-void Window::type(const std::string& text) { tool({"xdotool", "type", "--delay", "40", text}); }
+void Window::type(const std::string& text) {
+  tool({"xdotool", "type", "--delay", "40", text});
+}
 
 void Window::click(const Place& place, int times) {
-  tool({"xdotool", "mousemove", "--window", id_, std::to_string(place.x + place.width / 2), std::to_string(place.y + place.height / 2)});
+  tool({"xdotool", "mousemove", "--window", id_, std::to_string(place.x + place.width / 2),
+        std::to_string(place.y + place.height / 2)});
   tool({"xdotool", "click", "--repeat", std::to_string(times), "--delay", "120", "1"});
 }
 
@@ -95,7 +104,9 @@ void Window::set_clipboard(const std::string& text) {
   tool({"sh", "-c", "xclip -selection clipboard -i > /dev/null 2>&1"}, text);
 }
 
-std::string Window::clipboard() { return tool({"xclip", "-selection", "clipboard", "-o"}); }
+std::string Window::clipboard() {
+  return tool({"xclip", "-selection", "clipboard", "-o"});
+}
 
 std::string Window::title() {
   std::string text = tool({"xdotool", "getwindowname", id_});
@@ -132,7 +143,8 @@ long Window::processor_ticks() const {
 }
 
 std::map<std::string, Place> cell_places(const Display& display, const std::string& sheet) {
-  const Ran ran = run({"env", "DISPLAY=" + display.name(), "LIBGL_ALWAYS_SOFTWARE=1", HEATLEDGER_WINDOW, "--cells", sheet});
+  const Ran ran = run(
+      {"env", "DISPLAY=" + display.name(), "LIBGL_ALWAYS_SOFTWARE=1", HEATLEDGER_WINDOW, "--cells", sheet});
   EXPECT_EQ(ran.status, 0) << ran.err;
   std::map<std::string, Place> places;
   std::istringstream lines(ran.out);

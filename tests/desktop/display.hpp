@@ -1,4 +1,5 @@
-// A display of its own for a test (Xvfb), the window on it, and a hand on keyboard and mouse (xdotool, xclip).
+// A display of its own for a test (Xvfb), the window on it, and a hand on keyboard and mouse (xdotool,
+// xclip).
 #pragma once
 
 #include <sys/types.h>

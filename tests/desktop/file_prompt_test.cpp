@@ -18,7 +18,8 @@ class FilePromptTest : public testing::Test {
     std::string pattern = (std::filesystem::temp_directory_path() / "heatledger-prompt-XXXXXX").string();
     folder_ = ::mkdtemp(pattern.data());
     std::filesystem::create_directory(folder_ + "/archive");
-    for (const char* name : {"/amide.heatledger.json", "/ester.heatledger.json", "/notes.txt"}) std::ofstream(folder_ + name) << "x";
+    for (const char* name : {"/amide.heatledger.json", "/ester.heatledger.json", "/notes.txt"})
+      std::ofstream(folder_ + name) << "x";
   }
   ~FilePromptTest() override { std::filesystem::remove_all(folder_); }
 

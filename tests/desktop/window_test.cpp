@@ -1,4 +1,5 @@
-// The whole window as a person uses it: real keys and clicks on a display of its own, files looked at afterwards.
+// The whole window as a person uses it: real keys and clicks on a display of its own, files looked at
+// afterwards.
 #include <gtest/gtest.h>
 
 #include <filesystem>
@@ -41,7 +42,8 @@ TEST_F(WindowTest, AnEquationTypedByHandIsSavedAndReopened) {
     window.type(kEquation);
     window.keys({"Return"});
     window.keys({"ctrl+s"});
-    ASSERT_TRUE(Window::wait_for([&] { return equation_in(path) == kEquation; })) << "saved: " << equation_in(path);
+    ASSERT_TRUE(Window::wait_for([&] { return equation_in(path) == kEquation; }))
+        << "saved: " << equation_in(path);
   }
   // The terminal computes what the window saved.
   const Ran work = heatledger({"work", path});
@@ -65,7 +67,9 @@ TEST_F(WindowTest, KeysAloneGoThroughTheSheet) {
   window.keys({"Tab"});
   window.type("first draft");
   window.keys({"Return"});
-  ASSERT_TRUE(Window::wait_for([&] { return window.title().find("Nitro group to amine") != std::string::npos; })) << window.title();
+  ASSERT_TRUE(Window::wait_for([&] {
+    return window.title().find("Nitro group to amine") != std::string::npos;
+  })) << window.title();
   window.keys({"ctrl+s"});
   ASSERT_TRUE(Window::wait_for([&] { return saved(path).is_object(); }));
   EXPECT_NE(read_whole(path).find("first draft"), std::string::npos);
@@ -99,7 +103,9 @@ TEST_F(WindowTest, PastesAnEquationOfSeveralLinesAndCopiesAFigure) {
   window.set_clipboard("benzene(l) + Cl2\n\t-> chlorobenzene(l) + HCl\n");
   window.click(places.at("r1.equation"));
   window.keys({"ctrl+v", "Return", "ctrl+s"});
-  ASSERT_TRUE(Window::wait_for([&] { return equation_in(path) == "benzene(l) + Cl2 -> chlorobenzene(l) + HCl"; })) << equation_in(path);
+  ASSERT_TRUE(Window::wait_for([&] {
+    return equation_in(path) == "benzene(l) + Cl2 -> chlorobenzene(l) + HCl";
+  })) << equation_in(path);
   const auto filled = cell_places(display_, path);
   ASSERT_TRUE(filled.count("r1.as_written"));
   window.click(filled.at("r1.as_written"));
@@ -119,7 +125,8 @@ TEST_F(WindowTest, AnExactFractionTypedIntoACoefficientChangesTheEquation) {
   window.click(places.at("r1.row.1.times"));
   window.type("1/2");
   window.keys({"Return", "ctrl+s"});
-  ASSERT_TRUE(Window::wait_for([&] { return equation_in(path).find("1/2 O2") != std::string::npos; })) << equation_in(path);
+  ASSERT_TRUE(Window::wait_for([&] { return equation_in(path).find("1/2 O2") != std::string::npos; }))
+      << equation_in(path);
 }
 
 TEST_F(WindowTest, UnsavedChangesAreNotLostByClosing) {
@@ -128,7 +135,8 @@ TEST_F(WindowTest, UnsavedChangesAreNotLostByClosing) {
   window.keys({"Tab"});
   window.type("unsaved");
   window.keys({"Return", "ctrl+q"});
-  EXPECT_FALSE(Window::wait_for([&] { return !window.running(); }) && !std::filesystem::exists(path)) << "closed without a question";
+  EXPECT_FALSE(Window::wait_for([&] { return !window.running(); }) && !std::filesystem::exists(path))
+      << "closed without a question";
   window.keys({"Escape"});  // back to the sheet
   ASSERT_TRUE(window.running());
   window.keys({"ctrl+q"});
@@ -150,7 +158,8 @@ TEST_F(WindowTest, OpensAFileThroughItsOwnPrompt) {
   window.keys({"ctrl+o"});
   window.type("sec");
   window.keys({"Tab", "Return"});
-  EXPECT_TRUE(Window::wait_for([&] { return window.title().find("The second sheet") != std::string::npos; })) << window.title();
+  EXPECT_TRUE(Window::wait_for([&] { return window.title().find("The second sheet") != std::string::npos; }))
+      << window.title();
 }
 
 TEST_F(WindowTest, SleepsWhenNothingHappens) {
@@ -164,7 +173,8 @@ TEST_F(WindowTest, SleepsWhenNothingHappens) {
 
 TEST_F(WindowTest, DrawsASheetThatIsNotEmpty) {
   const std::string picture = folder_ / "sheet.png";
-  const Ran ran = run({"env", "DISPLAY=" + display_.name(), "LIBGL_ALWAYS_SOFTWARE=1", HEATLEDGER_WINDOW, "--screenshot", picture, "--size", "1280x900"});
+  const Ran ran = run({"env", "DISPLAY=" + display_.name(), "LIBGL_ALWAYS_SOFTWARE=1", HEATLEDGER_WINDOW,
+                       "--screenshot", picture, "--size", "1280x900"});
   EXPECT_EQ(ran.status, 0) << ran.err;
   const std::string png = read_whole(picture);
   EXPECT_EQ(png.substr(1, 3), "PNG");

@@ -26,10 +26,17 @@ std::string written(const Term& term) {
   if (term.strength) {
     const double value = term.strength->value;
     switch (term.strength->kind) {
-      case Strength::Kind::MassFraction: text += ", " + machine_number(value * 100, 15) + " wt%"; break;
-      case Strength::Kind::WaterRatio: text += ", r=" + machine_number(value, 15); break;
-      case Strength::Kind::Molality: text += ", " + machine_number(value, 15) + " mol/kg"; break;
-      case Strength::Kind::InfiniteDilution: break;
+      case Strength::Kind::MassFraction:
+        text += ", " + machine_number(value * 100, 15) + " wt%";
+        break;
+      case Strength::Kind::WaterRatio:
+        text += ", r=" + machine_number(value, 15);
+        break;
+      case Strength::Kind::Molality:
+        text += ", " + machine_number(value, 15) + " mol/kg";
+        break;
+      case Strength::Kind::InfiniteDilution:
+        break;
     }
   }
   return text + ")";
@@ -37,9 +44,11 @@ std::string written(const Term& term) {
 
 std::string written(const EquationText& equation) {
   std::string text;
-  for (std::size_t i = 0; i < equation.reactants.size(); ++i) text += (i > 0 ? " + " : "") + written(equation.reactants[i]);
+  for (std::size_t i = 0; i < equation.reactants.size(); ++i)
+    text += (i > 0 ? " + " : "") + written(equation.reactants[i]);
   text += equation.reversible ? " <=> " : " -> ";
-  for (std::size_t i = 0; i < equation.products.size(); ++i) text += (i > 0 ? " + " : "") + written(equation.products[i]);
+  for (std::size_t i = 0; i < equation.products.size(); ++i)
+    text += (i > 0 ? " + " : "") + written(equation.products[i]);
   return text;
 }
 
@@ -49,15 +58,19 @@ extern "C" int LLVMFuzzerTestOneInput(const std::uint8_t* data, std::size_t size
   const std::string_view text(reinterpret_cast<const char*>(data), size);
   const Result<EquationText> first = parse_equation(text);
   if (!first) {
-    CHECK(!first.error().code.empty() && !first.error().message.empty() && !first.error().where.empty(), "a refusal tells what and where");
+    CHECK(!first.error().code.empty() && !first.error().message.empty() && !first.error().where.empty(),
+          "a refusal tells what and where");
     return 0;
   }
   for (const auto* side : {&first->reactants, &first->products}) {
     CHECK(!side->empty(), "both sides hold species");
     for (const Term& term : *side) {
-      CHECK(!term.species.empty() && term.coefficient.numerator > 0 && term.coefficient.denominator > 0, "a term is complete");
-      CHECK(term.offset + term.length <= text.size() && term.species_offset >= term.offset, "a term knows its place");
-      CHECK(text.substr(term.species_offset, term.species.size()) == term.species, "a species knows its place");
+      CHECK(!term.species.empty() && term.coefficient.numerator > 0 && term.coefficient.denominator > 0,
+            "a term is complete");
+      CHECK(term.offset + term.length <= text.size() && term.species_offset >= term.offset,
+            "a term knows its place");
+      CHECK(text.substr(term.species_offset, term.species.size()) == term.species,
+            "a species knows its place");
     }
   }
   const std::string once = written(*first);

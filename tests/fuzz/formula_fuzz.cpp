@@ -28,7 +28,8 @@ extern "C" int LLVMFuzzerTestOneInput(const std::uint8_t* data, std::size_t size
   const Result<Composition> first = parse_formula(text);
   const std::string set = typeset_formula(text);
   if (!first) {
-    CHECK(!first.error().code.empty() && !first.error().message.empty() && !first.error().where.empty(), "a refusal tells what and where");
+    CHECK(!first.error().code.empty() && !first.error().message.empty() && !first.error().where.empty(),
+          "a refusal tells what and where");
     return 0;
   }
   CHECK(std::isfinite(molar_mass(*first)) && molar_mass(*first) > 0, "a formula has a mass");

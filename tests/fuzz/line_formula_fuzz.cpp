@@ -19,7 +19,8 @@ extern "C" int LLVMFuzzerTestOneInput(const std::uint8_t* data, std::size_t size
   }
   std::vector<int> bonds(graph->atoms.size(), 0);
   for (const Bond& bond : graph->bonds) {
-    CHECK(bond.a < bonds.size() && bond.b < bonds.size() && bond.a != bond.b, "bonds join two atoms of the graph");
+    CHECK(bond.a < bonds.size() && bond.b < bonds.size() && bond.a != bond.b,
+          "bonds join two atoms of the graph");
     bonds[bond.a] += static_cast<int>(bond.order);
     bonds[bond.b] += static_cast<int>(bond.order);
   }
@@ -27,12 +28,24 @@ extern "C" int LLVMFuzzerTestOneInput(const std::uint8_t* data, std::size_t size
     const Atom& atom = graph->atoms[i];
     const int total = bonds[i] + atom.hydrogens;
     switch (atom.element) {
-      case 6: case 14: CHECK(total == 4, "carbon and silicon bind four times"); break;
-      case 7: CHECK(total == 3 + atom.charge, "nitrogen binds three times, in nitro four"); break;
-      case 8: CHECK(total == 2 + atom.charge, "oxygen binds twice, in nitro once"); break;
-      case 15: CHECK(total == 3 || total == 5, "phosphorus binds three or five times"); break;
-      case 16: CHECK(total == 2 || total == 4 || total == 6, "sulfur binds two, four or six times"); break;
-      default: CHECK(total == 1, "halogens bind once");
+      case 6:
+      case 14:
+        CHECK(total == 4, "carbon and silicon bind four times");
+        break;
+      case 7:
+        CHECK(total == 3 + atom.charge, "nitrogen binds three times, in nitro four");
+        break;
+      case 8:
+        CHECK(total == 2 + atom.charge, "oxygen binds twice, in nitro once");
+        break;
+      case 15:
+        CHECK(total == 3 || total == 5, "phosphorus binds three or five times");
+        break;
+      case 16:
+        CHECK(total == 2 || total == 4 || total == 6, "sulfur binds two, four or six times");
+        break;
+      default:
+        CHECK(total == 1, "halogens bind once");
     }
   }
   if (const Result<Composition> plain = parse_formula(text)) {

@@ -1,5 +1,5 @@
-// Requests, one a line, to the boundary of the browser face: every answer is one JSON object with "ok", an error has
-// the one shape, and the page stays in step with its changes.
+// Requests, one a line, to the boundary of the browser face: every answer is one JSON object with "ok", an
+// error has the one shape, and the page stays in step with its changes.
 #include <algorithm>
 #include <cstdint>
 #include <string>

@@ -1,5 +1,5 @@
-// Any bytes as SMILES. A text that is refused names its place; one that is read must survive: canonical text, read again,
-// gives the same canonical text and the same bonds.
+// Any bytes as SMILES. A text that is refused names its place; one that is read must survive: canonical text,
+// read again, gives the same canonical text and the same bonds.
 #include <cstddef>
 #include <cstdint>
 #include <cstdio>
@@ -23,10 +23,11 @@ std::string words(const BondTally& tally) {
   return text;
 }
 
-void require(bool holds, const char* what, std::string_view text, const std::string& first, const std::string& second) {
+void require(bool holds, const char* what, std::string_view text, const std::string& first,
+             const std::string& second) {
   if (holds) return;
-  std::fprintf(stderr, "%s\n  text:   %.*s\n  first:  %s\n  second: %s\n", what, static_cast<int>(text.size()), text.data(),
-               first.c_str(), second.c_str());
+  std::fprintf(stderr, "%s\n  text:   %.*s\n  first:  %s\n  second: %s\n", what,
+               static_cast<int>(text.size()), text.data(), first.c_str(), second.c_str());
   std::abort();
 }
 
@@ -37,13 +38,16 @@ extern "C" int LLVMFuzzerTestOneInput(const std::uint8_t* data, std::size_t size
   Result<Graph> graph = parse_smiles(text);
   if (!graph.ok()) {
     const Error& error = graph.error();
-    require(error.code.rfind("smiles.", 0) == 0 && error.where.rfind("offset ", 0) == 0 && !error.hint.empty(),
-            "an error has a code, a place and a hint", text, error.code, error.where);
-    require(std::strtoull(error.where.c_str() + 7, nullptr, 10) <= size, "the place lies in the text", text, error.where, "");
+    require(
+        error.code.rfind("smiles.", 0) == 0 && error.where.rfind("offset ", 0) == 0 && !error.hint.empty(),
+        "an error has a code, a place and a hint", text, error.code, error.where);
+    require(std::strtoull(error.where.c_str() + 7, nullptr, 10) <= size, "the place lies in the text", text,
+            error.where, "");
     return 0;
   }
   const std::string tally = words(plain_tally(count_bonds(*graph)));
-  require(words(plain_tally(count_bonds_with_rings(*graph))) == tally, "marking rings moves no bond", text, tally, "");
+  require(words(plain_tally(count_bonds_with_rings(*graph))) == tally, "marking rings moves no bond", text,
+          tally, "");
   const std::string canonical = canonical_smiles(*graph);
   // More than 99 rings open at once cannot be written with two digits.
   if (canonical.find("%1") != std::string::npos && graph->bonds.size() > graph->atoms.size() + 90) return 0;

@@ -1,4 +1,5 @@
-// A species that resolves has consistent figures, and its canonical structure and its library name lead back to it.
+// A species that resolves has consistent figures, and its canonical structure and its library name lead back
+// to it.
 #include <cmath>
 #include <cstdint>
 #include <string_view>
@@ -19,11 +20,13 @@ void check_species(const Species& species) {
   CHECK(!species.name.empty(), "a species has a name");
   CHECK(species.composition.has_value(), "what can be read has a composition");
   const bool only_ends = species.composition->atoms.empty();  // "**": two ends and nothing between
-  CHECK(std::isfinite(species.molar_mass) && (species.molar_mass > 0 || only_ends), "a composition has a mass");
+  CHECK(std::isfinite(species.molar_mass) && (species.molar_mass > 0 || only_ends),
+        "a composition has a mass");
   CHECK(species.graph.has_value() == !species.canonical.empty(), "a structure has its canonical text");
   if (species.graph) {
     const molecule::Composition drawn = molecule::composition(*species.graph);
-    CHECK(molecule::hill_formula(drawn) == molecule::hill_formula(*species.composition), "structure and composition agree");
+    CHECK(molecule::hill_formula(drawn) == molecule::hill_formula(*species.composition),
+          "structure and composition agree");
     const auto again = resolve_species(species.canonical, true);
     CHECK(again.ok(), "canonical text reads back");
     CHECK((*again)->canonical == species.canonical, "canonical text is a fixed point");

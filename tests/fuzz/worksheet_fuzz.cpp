@@ -1,4 +1,5 @@
-// A worksheet file that opens, written again, opens again to the same bytes; whatever the bytes, reading ends calmly.
+// A worksheet file that opens, written again, opens again to the same bytes; whatever the bytes, reading ends
+// calmly.
 #include <cstdint>
 #include <string>
 #include <string_view>

@@ -1,9 +1,10 @@
 // Bond counts of every structure of tests/data/smiles/molecules.tsv against two independent toolkits.
 // Their conventions, translated here:
 //  - all hydrogens are made atoms, aromatic rings are given Kekulé orders;
-//  - halogen oxoacids written with charges are counted with the double bonds that they stand for (see the oracles).
-// What then still differs stands in tests/data/smiles/oracle_differences.tsv with its reason. A line there that does
-// not occur any more fails as well.
+//  - halogen oxoacids written with charges are counted with the double bonds that they stand for (see the
+//  oracles).
+// What then still differs stands in tests/data/smiles/oracle_differences.tsv with its reason. A line there
+// that does not occur any more fails as well.
 #include <gtest/gtest.h>
 
 #include <functional>
@@ -32,7 +33,8 @@ OracleTally our_tally(const std::string& smiles) {
 
 std::string words(const OracleTally& tally) {
   std::string text;
-  for (const auto& entry : tally) text += (text.empty() ? "" : " ") + entry.first + " " + std::to_string(entry.second);
+  for (const auto& entry : tally)
+    text += (text.empty() ? "" : " ") + entry.first + " " + std::to_string(entry.second);
   return text;
 }
 
@@ -67,7 +69,8 @@ void compare(const std::string& name, const Oracle& oracle) {
       EXPECT_EQ(their_words, entry->second) << smiles << ": the listed difference is another one";
     }
   }
-  for (const auto& entry : expected) EXPECT_TRUE(met.count(entry.first)) << entry.first << ": listed, but agrees now";
+  for (const auto& entry : expected)
+    EXPECT_TRUE(met.count(entry.first)) << entry.first << ": listed, but agrees now";
   EXPECT_GE(agreed, 1500u);
   testing::Test::RecordProperty("agreed", static_cast<int>(agreed));
 }

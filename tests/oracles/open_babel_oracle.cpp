@@ -1,10 +1,10 @@
+#include <openbabel/atom.h>
 #include <openbabel/bond.h>
 #include <openbabel/elements.h>
 #include <openbabel/mol.h>
 #include <openbabel/obconversion.h>
-#include <openbabel/obiter.h>
 #include <openbabel/oberror.h>
-#include <openbabel/atom.h>
+#include <openbabel/obiter.h>
 
 #include <array>
 #include <utility>
@@ -62,13 +62,15 @@ int open_babel_quick_count(const std::string& smiles) {
   OpenBabel::OBMol molecule;
   if (!conversion().ReadString(&molecule, smiles)) return 0;
   std::array<int, 8> by_order{};
-  FOR_BONDS_OF_MOL(bond, molecule) ++by_order[bond->GetBondOrder() & 7u];
+  FOR_BONDS_OF_MOL(bond, molecule)++ by_order[bond->GetBondOrder() & 7u];
   int sum = 0;
   for (const int count : by_order) sum += count;
   FOR_ATOMS_OF_MOL(atom, molecule) sum += static_cast<int>(atom->GetImplicitHCount());
   return sum;
 }
 
-void silence_open_babel() { OpenBabel::obErrorLog.StopLogging(); }
+void silence_open_babel() {
+  OpenBabel::obErrorLog.StopLogging();
+}
 
 }  // namespace heatledger::test

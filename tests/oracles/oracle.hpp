@@ -14,8 +14,8 @@ using OracleTally = std::map<std::string, int>;
 std::optional<OracleTally> rdkit_tally(const std::string& smiles);
 std::optional<OracleTally> open_babel_tally(const std::string& smiles);
 
-/// For the benchmark: the least work that reads, sanitises and counts, with aromatic bonds left as they are and
-/// hydrogens as counts. Gives the number of bonds, 0 where the text is refused.
+/// For the benchmark: the least work that reads, sanitises and counts, with aromatic bonds left as they are
+/// and hydrogens as counts. Gives the number of bonds, 0 where the text is refused.
 int rdkit_quick_count(const std::string& smiles);
 int open_babel_quick_count(const std::string& smiles);
 

@@ -22,11 +22,16 @@ std::unique_ptr<RDKit::RWMol> read(const std::string& smiles) {
 
 const char* sign(RDKit::Bond::BondType type) {
   switch (type) {
-    case RDKit::Bond::SINGLE: return "-";
-    case RDKit::Bond::DOUBLE: return "=";
-    case RDKit::Bond::TRIPLE: return "#";
-    case RDKit::Bond::QUADRUPLE: return "$";
-    default: return "?";
+    case RDKit::Bond::SINGLE:
+      return "-";
+    case RDKit::Bond::DOUBLE:
+      return "=";
+    case RDKit::Bond::TRIPLE:
+      return "#";
+    case RDKit::Bond::QUADRUPLE:
+      return "$";
+    default:
+      return "?";
   }
 }
 
@@ -67,13 +72,16 @@ int rdkit_quick_count(const std::string& smiles) {
   const std::unique_ptr<RDKit::RWMol> molecule = read(smiles);
   if (!molecule) return 0;
   std::array<int, 32> by_order{};
-  for (const RDKit::Bond* bond : molecule->bonds()) ++by_order[static_cast<unsigned>(bond->getBondType()) & 31u];
+  for (const RDKit::Bond* bond : molecule->bonds())
+    ++by_order[static_cast<unsigned>(bond->getBondType()) & 31u];
   int sum = 0;
   for (const int count : by_order) sum += count;
   for (const RDKit::Atom* atom : molecule->atoms()) sum += static_cast<int>(atom->getTotalNumHs());
   return sum;
 }
 
-void silence_rdkit() { boost::logging::disable_logs("rdApp.*"); }
+void silence_rdkit() {
+  boost::logging::disable_logs("rdApp.*");
+}
 
 }  // namespace heatledger::test

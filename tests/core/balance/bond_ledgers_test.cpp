@@ -44,7 +44,9 @@ TEST_P(PublishedBondLedger, IsReproducedExactlyOrItsSlipAvoided) {
   }
 }
 
-std::vector<std::vector<std::string>> rows() { return test::read_table("tests/data/checks/bond_ledgers.tsv").rows; }
+std::vector<std::vector<std::string>> rows() {
+  return test::read_table("tests/data/checks/bond_ledgers.tsv").rows;
+}
 
 INSTANTIATE_TEST_SUITE_P(Zumdahl, PublishedBondLedger, testing::ValuesIn(rows()), [](const auto& row) {
   std::string name = row.param[0];

@@ -20,7 +20,9 @@ struct Sides {
 };
 
 /// Keeps the names of the tests free of memory addresses.
-void PrintTo(const Sides& sides, std::ostream* out) { *out << sides.name; }
+void PrintTo(const Sides& sides, std::ostream* out) {
+  *out << sides.name;
+}
 
 std::string join(const std::vector<std::string>& terms) {
   std::string text;
@@ -38,7 +40,10 @@ const Sides kSides[] = {
     {"Esterification", {"acetic acid(l)", "ethanol(l)"}, {"ethyl acetate(l)", "water(l)"}},
     {"ChlorinationOfToluene", {"toluene(l)", "chlorine(g)"}, {"benzyl chloride(l)", "hydrogen chloride(g)"}},
     {"WaterGas", {"graphite(s)", "water(g)"}, {"CO(g)", "H2(g)"}},
-    {"Claus", {"2 hydrogen sulfide(g)", "SO2(g)"}, {"3 sulfur(s)", "2 water(g)"}, "huheey"},  // the primary set has no S=O
+    {"Claus",
+     {"2 hydrogen sulfide(g)", "SO2(g)"},
+     {"3 sulfur(s)", "2 water(g)"},
+     "huheey"},  // the primary set has no S=O
     {"NitricOxide", {"2 NO(g)", "O2(g)"}, {"2 NO2(g)"}},
 };
 
@@ -47,7 +52,8 @@ class Invariant : public testing::TestWithParam<Sides> {};
 // 1e-6 J: sums of some ten terms of 1e7 J, rounded differently when the order changes (1e7 × 2⁻⁵² × 10).
 constexpr double kOrderOfSum = 1e-6;
 
-void expect_equal(const std::optional<uncertainty::Quantity>& a, const std::optional<uncertainty::Quantity>& b, double factor) {
+void expect_equal(const std::optional<uncertainty::Quantity>& a,
+                  const std::optional<uncertainty::Quantity>& b, double factor) {
   ASSERT_EQ(a.has_value(), b.has_value());
   if (!a) return;
   EXPECT_NEAR(a->value(), factor * b->value(), kOrderOfSum * std::max(1.0, std::fabs(factor)));
@@ -67,7 +73,8 @@ void expect_scaled(const Ledger& a, const Ledger& b, double factor) {
 
 TEST_P(Invariant, ReversalChangesTheSignOnly) {
   const Sides& s = GetParam();
-  const Ledger forward = ledger(equation(s.left, s.right), "", s.set), backward = ledger(equation(s.right, s.left), "", s.set);
+  const Ledger forward = ledger(equation(s.left, s.right), "", s.set),
+               backward = ledger(equation(s.right, s.left), "", s.set);
   expect_scaled(backward, forward, -1);
   expect_equal(backward.broken, forward.formed, 1);
 }
@@ -77,7 +84,8 @@ TEST_P(Invariant, OrderOfSpeciesIsIrrelevant) {
   Sides turned = s;
   std::reverse(turned.left.begin(), turned.left.end());
   std::reverse(turned.right.begin(), turned.right.end());
-  expect_scaled(ledger(equation(turned.left, turned.right), "", s.set), ledger(equation(s.left, s.right), "", s.set), 1);
+  expect_scaled(ledger(equation(turned.left, turned.right), "", s.set),
+                ledger(equation(s.left, s.right), "", s.set), 1);
 }
 
 TEST_P(Invariant, CoefficientsScaleTheFigures) {
@@ -90,7 +98,8 @@ TEST_P(Invariant, CoefficientsScaleTheFigures) {
     }
     return join(result);
   };
-  expect_scaled(ledger(doubled(s.left) + " -> " + doubled(s.right), "", s.set), ledger(equation(s.left, s.right), "", s.set), 2);
+  expect_scaled(ledger(doubled(s.left) + " -> " + doubled(s.right), "", s.set),
+                ledger(equation(s.left, s.right), "", s.set), 2);
 }
 
 TEST_P(Invariant, NothingHappensWhenBothSidesAreTheSame) {
@@ -122,10 +131,12 @@ TEST_P(Invariant, BasesAgreeWithEachOther) {
     double amount = 1;  // mol or kg that the figure is per
     if (based.basis.kind == Basis::Kind::KilogramOfReactants) {
       amount = 0;
-      for (const ReactionSpecies& entry : based.reaction->species) amount += entry.product ? 0 : entry.coefficient() * entry.species->molar_mass;
+      for (const ReactionSpecies& entry : based.reaction->species)
+        amount += entry.product ? 0 : entry.coefficient() * entry.species->molar_mass;
     } else if (based.basis.kind != Basis::Kind::AsWritten) {
       const ReactionSpecies& entry = based.reaction->species[based.basis.species];
-      amount = entry.coefficient() * (based.basis.kind == Basis::Kind::KilogramOf ? entry.species->molar_mass : 1);
+      amount =
+          entry.coefficient() * (based.basis.kind == Basis::Kind::KilogramOf ? entry.species->molar_mass : 1);
     }
     EXPECT_NEAR(figure * amount, written.gas_298->value(), kOrderOfSum) << choice.text;
   }
@@ -152,15 +163,18 @@ TEST_P(Invariant, LinesAddUpToTheRowAndRowsToTheTotals) {
   EXPECT_NEAR(written, sheet.as_written->value(), kOrderOfSum);
 }
 
-INSTANTIATE_TEST_SUITE_P(Equations, Invariant, testing::ValuesIn(kSides), [](const auto& row) { return std::string(row.param.name); });
+INSTANTIATE_TEST_SUITE_P(Equations, Invariant, testing::ValuesIn(kSides),
+                         [](const auto& row) { return std::string(row.param.name); });
 
 TEST(Splitting, AddsUp) {
-  const Ledger first = ledger("methane(g) + H2O(g) -> CO(g) + 3 H2(g)"), second = ledger("CO(g) + H2O(g) -> CO2(g) + H2(g)"),
+  const Ledger first = ledger("methane(g) + H2O(g) -> CO(g) + 3 H2(g)"),
+               second = ledger("CO(g) + H2O(g) -> CO2(g) + H2(g)"),
                whole = ledger("methane(g) + 2 H2O(g) -> CO2(g) + 4 H2(g)");
   uncertainty::Quantity sum = *first.gas_298;
   sum.add(*second.gas_298);
   EXPECT_NEAR(sum.value(), whole.gas_298->value(), kOrderOfSum);
-  EXPECT_NEAR(sum.u95(), whole.gas_298->u95(), kOrderOfSum);  // carbon monoxide stands on both sides and cancels
+  EXPECT_NEAR(sum.u95(), whole.gas_298->u95(),
+              kOrderOfSum);  // carbon monoxide stands on both sides and cancels
   uncertainty::Quantity formation = *find_route(first, kFormationRoute)->as_written;
   formation.add(*find_route(second, kFormationRoute)->as_written);
   EXPECT_NEAR(formation.value(), find_route(whole, kFormationRoute)->as_written->value(), kOrderOfSum);

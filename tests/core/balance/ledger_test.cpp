@@ -15,18 +15,20 @@ using test_sheets::ledger;
 using test_sheets::try_ledger;
 
 const BondLine* find_line(const LedgerRow& row, const std::string& label) {
-  const auto at = std::find_if(row.lines.begin(), row.lines.end(), [&label](const BondLine& line) { return line.label == label; });
+  const auto at = std::find_if(row.lines.begin(), row.lines.end(),
+                               [&label](const BondLine& line) { return line.label == label; });
   return at == row.lines.end() ? nullptr : &*at;
 }
 
 bool any_contains(const std::vector<std::string>& texts, const std::string& part) {
-  return std::any_of(texts.begin(), texts.end(), [&part](const std::string& text) { return text.find(part) != std::string::npos; });
+  return std::any_of(texts.begin(), texts.end(),
+                     [&part](const std::string& text) { return text.find(part) != std::string::npos; });
 }
 
 const char* const kNitrobenzene = "nitrobenzene(l) + 3 H2(g) -> aniline(l) + 2 H2O(l)";
 
-// By hand with Zumdahl's averages. Nitrobenzene: 5 × 413 + 3 × 347 + 3 × 614 + 305 + 201 + 607 = 6061; hydrogen 432.
-// Aniline: 5 × 413 + 3 × 347 + 3 × 614 + 305 + 2 × 391 = 6035; water 2 × 467 = 934.
+// By hand with Zumdahl's averages. Nitrobenzene: 5 × 413 + 3 × 347 + 3 × 614 + 305 + 201 + 607 = 6061;
+// hydrogen 432. Aniline: 5 × 413 + 3 × 347 + 3 × 614 + 305 + 2 × 391 = 6035; water 2 × 467 = 934.
 TEST(Ledger, AddsNitrobenzeneHydrogenationUp) {
   const Ledger sheet = ledger(kNitrobenzene);
   ASSERT_EQ(sheet.rows.size(), 4u);
@@ -45,9 +47,11 @@ TEST(Ledger, AddsNitrobenzeneHydrogenationUp) {
   EXPECT_NEAR(kj(sheet.as_written), -546 + 55 - 55.8 - 88, 1.2);  // vaporisation enthalpies, each ± 0.6
 }
 
-// CRC Handbook, 95th ed., formation enthalpies: −552.56 kJ/mol; 464.55 with the water as vapour. 8: spread of the tables.
+// CRC Handbook, 95th ed., formation enthalpies: −552.56 kJ/mol; 464.55 with the water as vapour. 8: spread of
+// the tables.
 TEST(Ledger, TakesTheFormationRouteWhereEverySpeciesIsTabulated) {
-  const Ledger liquid = ledger(kNitrobenzene), vapour = ledger("nitrobenzene(l) + 3 H2(g) -> aniline(l) + 2 H2O(g)");
+  const Ledger liquid = ledger(kNitrobenzene),
+               vapour = ledger("nitrobenzene(l) + 3 H2(g) -> aniline(l) + 2 H2O(g)");
   EXPECT_EQ(liquid.taken, "formation");
   EXPECT_NEAR(kj(find_route(liquid, kFormationRoute)->as_written), -552.56, 8);
   EXPECT_NEAR(kj(find_route(vapour, kFormationRoute)->as_written), -464.55, 8);
@@ -88,7 +92,8 @@ TEST(Ledger, LetsCorrelatedErrorsOfTheEstimateCancel) {
   const Route* context = find_route(sheet, kContextRoute);
   ASSERT_TRUE(context != nullptr && context->gas_298.has_value());
   // Two molecules that share most of their bonds are known better together than each alone.
-  const Ledger one = with_options("\"CCC(C)(Cl)CC(F)CC\"(g) + 11.5 O2(g) -> 8 CO2(g) + 7 H2O(g) + HCl(g) + HF(g)", options);
+  const Ledger one =
+      with_options("\"CCC(C)(Cl)CC(F)CC\"(g) + 11.5 O2(g) -> 8 CO2(g) + 7 H2O(g) + HCl(g) + HF(g)", options);
   EXPECT_LT(context->gas_298->u95(), 1.5 * find_route(one, kContextRoute)->gas_298->u95());
   const Ledger nothing = with_options("\"CCC(C)(Cl)CC(F)CC\"(l) -> \"CCC(C)(Cl)CC(F)CC\"(l)", options);
   EXPECT_EQ(find_route(nothing, kContextRoute)->as_written->value(), 0);
@@ -122,7 +127,8 @@ TEST(Ledger, PutsTheTwoBondsOfANitroGroupOnOneLine) {
 }
 
 TEST(Ledger, SharesOneLineBetweenRingAndChainWhereTheSetHasNoAromaticValue) {
-  const Ledger kekule = ledger("toluene(g) -> toluene(g)"), aromatic = ledger("toluene(g) -> toluene(g)", "", "atkins");
+  const Ledger kekule = ledger("toluene(g) -> toluene(g)"),
+               aromatic = ledger("toluene(g) -> toluene(g)", "", "atkins");
   ASSERT_NE(find_line(kekule.rows[0], "C–C"), nullptr);
   EXPECT_EQ(find_line(kekule.rows[0], "C–C")->count, 4);
   EXPECT_EQ(find_line(kekule.rows[0], "C=C")->count, 3);
@@ -153,7 +159,8 @@ TEST(Ledger, NamesAMissingBondAndTheSetThatHasIt) {
 }
 
 TEST(Ledger, ReachesGraphiteAndSulfurThroughTheirAtoms) {
-  const Ledger coal = ledger("graphite(s) + O2(g) -> CO2(g)"), sulfur = ledger("sulfur(s) + O2(g) -> SO2(g)", "", "huheey");
+  const Ledger coal = ledger("graphite(s) + O2(g) -> CO2(g)"),
+               sulfur = ledger("sulfur(s) + O2(g) -> SO2(g)", "", "huheey");
   EXPECT_EQ(coal.rows[0].route, RowRoute::AtomsFromElement);
   // ATcT 1.112: carbon atom 716.87; CODATA: sulfur atom 277.17 kJ/mol.
   EXPECT_NEAR(kj(coal.rows[0].per_mole), 716.9, 0.3);
@@ -176,7 +183,9 @@ TEST(Ledger, TellsWhatATableSaysOfEachSpecies) {
 
 TEST(Ledger, LocatesADisagreementAtTheSpeciesThatCausesIt) {
   const Ledger sheet = ledger("cyclopropane(g) + H2(g) -> propane(g)");
-  const auto note = std::find_if(sheet.notes.begin(), sheet.notes.end(), [](const std::string& text) { return text.find("apart, beyond") != std::string::npos; });
+  const auto note = std::find_if(sheet.notes.begin(), sheet.notes.end(), [](const std::string& text) {
+    return text.find("apart, beyond") != std::string::npos;
+  });
   ASSERT_NE(note, sheet.notes.end());
   EXPECT_NE(note->find("cyclopropane"), std::string::npos) << *note;
   EXPECT_NE(note->find("strain"), std::string::npos) << *note;
@@ -184,7 +193,8 @@ TEST(Ledger, LocatesADisagreementAtTheSpeciesThatCausesIt) {
 
 TEST(Ledger, SaysWhichPhasesNobodyWrote) {
   EXPECT_TRUE(any_contains(ledger("methane + 2 O2 -> CO2 + 2 H2O").notes, "No phase is written"));
-  EXPECT_FALSE(any_contains(ledger("methane(g) + 2 O2(g) -> CO2(g) + 2 H2O(g)").notes, "No phase is written"));
+  EXPECT_FALSE(
+      any_contains(ledger("methane(g) + 2 O2(g) -> CO2(g) + 2 H2O(g)").notes, "No phase is written"));
 }
 
 TEST(Ledger, SaysWhatTheIntervalOfTheAverageSetCovers) {
@@ -193,8 +203,10 @@ TEST(Ledger, SaysWhatTheIntervalOfTheAverageSetCovers) {
 }
 
 TEST(Ledger, LetsSharedBondsCancelInTheInterval) {
-  // Only C–C, H–H and C–H differ between the sides; five C–H and the ring of toluene do not widen the interval.
-  const Ledger plain = ledger("ethane(g) + H2(g) -> 2 methane(g)"), with_ring = ledger("toluene(g) + H2(g) -> benzene(g) + methane(g)");
+  // Only C–C, H–H and C–H differ between the sides; five C–H and the ring of toluene do not widen the
+  // interval.
+  const Ledger plain = ledger("ethane(g) + H2(g) -> 2 methane(g)"),
+               with_ring = ledger("toluene(g) + H2(g) -> benzene(g) + methane(g)");
   EXPECT_DOUBLE_EQ(plain.gas_298->u95(), with_ring.gas_298->u95());
 }
 
@@ -224,7 +236,8 @@ TEST(Ledger, ActsOnATypedBondValueAndSaysSo) {
   set->lay_over(typed);
   LedgerOptions options;
   options.set = std::make_shared<const estimate::BondSet>(std::move(set).value());
-  const Result<Ledger> sheet = make_ledger(test_sheets::reaction("methane(g) + Cl2(g) -> chloromethane(g) + HCl(g)"), options);
+  const Result<Ledger> sheet =
+      make_ledger(test_sheets::reaction("methane(g) + Cl2(g) -> chloromethane(g) + HCl(g)"), options);
   ASSERT_TRUE(sheet.ok());
   // Zumdahl: −114 with C–Cl at 339; 11 kJ/mol more bond makes −125.
   EXPECT_DOUBLE_EQ(kj(sheet->gas_298), -125);

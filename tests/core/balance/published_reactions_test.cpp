@@ -11,8 +11,8 @@
 namespace heatledger::balance {
 namespace {
 
-/// How far the tables of the species of a reaction lie apart [kJ]: what the row taken may differ by from the row behind
-/// the published value.
+/// How far the tables of the species of a reaction lie apart [kJ]: what the row taken may differ by from the
+/// row behind the published value.
 double table_spread(const Ledger& sheet) {
   double sum = 0;
   for (const LedgerRow& row : sheet.rows) {
@@ -40,7 +40,8 @@ TEST(FormationRoute, ReproducesPublishedReactionEnthalpies) {
     }
     LedgerOptions options;
     options.set = test_sheets::bond_set();
-    const Result<Ledger> made = make_ledger(std::make_shared<const Reaction>(std::move(read).value()), options);
+    const Result<Ledger> made =
+        make_ledger(std::make_shared<const Reaction>(std::move(read).value()), options);
     ASSERT_TRUE(made.ok()) << row[0] << ": " << made.error().message;
     const Route* formation = find_route(*made, kFormationRoute);
     ASSERT_NE(formation, nullptr);
@@ -50,7 +51,8 @@ TEST(FormationRoute, ReproducesPublishedReactionEnthalpies) {
       continue;
     }
     ++compared;
-    const double ours = formation->as_written->value() / 1000, value = *parse_number(row[2]), tolerance = *parse_number(row[3]);
+    const double ours = formation->as_written->value() / 1000, value = *parse_number(row[2]),
+                 tolerance = *parse_number(row[3]);
     if (row[4] == "yes") {
       if (std::fabs(ours - value) > tolerance) {
         ++doubtful_off;
@@ -60,12 +62,14 @@ TEST(FormationRoute, ReproducesPublishedReactionEnthalpies) {
     }
     if (std::fabs(ours - value) > tolerance && std::fabs(ours - value) <= tolerance + table_spread(*made)) {
       ++other_table;
-      std::printf("  tables part: %s: %.2f, published %.2f, spread of the tables %.2f\n", row[0].c_str(), ours, value, table_spread(*made));
+      std::printf("  tables part: %s: %.2f, published %.2f, spread of the tables %.2f\n", row[0].c_str(),
+                  ours, value, table_spread(*made));
       continue;
     }
     EXPECT_NEAR(ours, value, tolerance) << row[0] << ", " << row[5];
   }
-  std::printf("formation route: %d reactions compared, %d without data, %d doubtful ones differ\n", compared, without_data, doubtful_off);
+  std::printf("formation route: %d reactions compared, %d without data, %d doubtful ones differ\n", compared,
+              without_data, doubtful_off);
   EXPECT_GE(compared, 60);
   EXPECT_LE(other_table, 4);  // the oxides of nitrogen, whose tables part by up to 1 kJ/mol
 }

@@ -10,7 +10,8 @@ namespace {
 using uncertainty::Figure;
 using uncertainty::Quantity;
 
-void expect_same(const std::optional<Figure>& quick, const std::optional<Quantity>& full, const std::string& equation) {
+void expect_same(const std::optional<Figure>& quick, const std::optional<Quantity>& full,
+                 const std::string& equation) {
   ASSERT_EQ(quick.has_value(), full.has_value()) << equation;
   if (!quick) return;
   EXPECT_EQ(quick->value, full->value()) << equation;  // the very digits: no tolerance
@@ -55,7 +56,8 @@ TEST(QuickTally, RefusesWhatTheLedgerRefuses) {
     ASSERT_FALSE(unbalanced.ok());
     EXPECT_EQ(unbalanced.error(), test_sheets::try_ledger("methane + O2 -> CO2 + 2 H2O").error());
   }
-  for (const char* broken : {"", "methane", "methane + -> CO2", "methane + 2 O2 -> CO2 -> 2 H2O", "no such thing -> CO2"}) {
+  for (const char* broken :
+       {"", "methane", "methane + -> CO2", "methane + 2 O2 -> CO2 -> 2 H2O", "no such thing -> CO2"}) {
     EXPECT_FALSE(quick.tally(broken).ok()) << broken;
   }
 }

@@ -1,5 +1,5 @@
-// Slips seeded by script: a sheet is worked out here by its own arithmetic, with one slip, two or none in it, and typed
-// into the checker's column in three degrees of detail. Rates are printed.
+// Slips seeded by script: a sheet is worked out here by its own arithmetic, with one slip, two or none in it,
+// and typed into the checker's column in three degrees of detail. Rates are printed.
 #include <gtest/gtest.h>
 
 #include <algorithm>
@@ -40,9 +40,17 @@ const Example kExamples[] = {
 
 /// The sheet on paper, kJ. `Ledger` gives counts and prices only; all sums are made here.
 struct Paper {
-  struct Line { double count, price, count2, price2, sum; };
-  struct Row { std::vector<Line> lines; double coefficient, per_mole, in_equation; bool product; };
-  struct Phase { double per_mole, times, value; };
+  struct Line {
+    double count, price, count2, price2, sum;
+  };
+  struct Row {
+    std::vector<Line> lines;
+    double coefficient, per_mole, in_equation;
+    bool product;
+  };
+  struct Phase {
+    double per_mole, times, value;
+  };
   std::vector<Row> rows;
   std::vector<Phase> phases;
   double basis = 1;
@@ -52,14 +60,16 @@ struct Paper {
     for (const LedgerRow& from : ledger.rows) {
       Row row{};
       for (const BondLine& bond : from.lines) {
-        row.lines.push_back({double(bond.count), bond.price->value / 1000, bond.second ? double(bond.second->count) : 0,
+        row.lines.push_back({double(bond.count), bond.price->value / 1000,
+                             bond.second ? double(bond.second->count) : 0,
                              bond.second ? bond.second->price->value / 1000 : 0, 0});
       }
       row.coefficient = ledger.reaction->species[from.species].coefficient();
       row.product = ledger.reaction->species[from.species].product;
       rows.push_back(row);
     }
-    for (const Correction& c : ledger.corrections) phases.push_back({c.value->value() / 1000 / c.times, c.times, 0});
+    for (const Correction& c : ledger.corrections)
+      phases.push_back({c.value->value() / 1000 / c.times, c.times, 0});
   }
 
   std::size_t row_in_joules = SIZE_MAX;
@@ -90,7 +100,9 @@ struct Paper {
 
 enum class Detail { WholeSheet, RowsAndTotals, Totals };
 
-std::string text(double value, int decimals) { return display_number(value, decimals); }
+std::string text(double value, int decimals) {
+  return display_number(value, decimals);
+}
 
 std::map<std::string, std::string> typed(const Paper& paper, Detail detail) {
   std::map<std::string, std::string> entries;
@@ -146,8 +158,12 @@ bool seed(Paper& paper, const Ledger& ledger, SlipKind kind, std::mt19937& rando
   Paper::Line& line = row.lines[out.line];
   const BondLine& bond = ledger.rows[out.row].lines[out.line];
   switch (kind) {
-    case SlipKind::BondMissed: line.count -= 1; return true;
-    case SlipKind::BondTwice: line.count += 1; return true;
+    case SlipKind::BondMissed:
+      line.count -= 1;
+      return true;
+    case SlipKind::BondTwice:
+      line.count += 1;
+      return true;
     case SlipKind::CoefficientLeftOut:
       if (row.coefficient == 1) return false;
       row.coefficient = 1;
@@ -157,10 +173,14 @@ bool seed(Paper& paper, const Ledger& ledger, SlipKind kind, std::mt19937& rando
       line.price = 745;
       return true;
     case SlipKind::AverageForSpecific:
-      if (bond.type.setting == molecule::Setting::CarbonMonoxide) line.price = 745;
-      else if (bond.type.setting == molecule::Setting::NitricOxide) line.price = 607;
-      else if (bond.type.setting == molecule::Setting::NitrogenDioxide) line.price = (607 + 201) / 2.0;
-      else return false;
+      if (bond.type.setting == molecule::Setting::CarbonMonoxide)
+        line.price = 745;
+      else if (bond.type.setting == molecule::Setting::NitricOxide)
+        line.price = 607;
+      else if (bond.type.setting == molecule::Setting::NitrogenDioxide)
+        line.price = (607 + 201) / 2.0;
+      else
+        return false;
       return true;
     case SlipKind::NitroAsTwoDouble:
       if (line.count2 == 0) return false;
@@ -205,13 +225,23 @@ bool seed(Paper& paper, const Ledger& ledger, SlipKind kind, std::mt19937& rando
       out.anywhere = true;
       return true;
     }
-    default: return false;
+    default:
+      return false;
   }
 }
 
-const SlipKind kSeeded[] = {SlipKind::BondMissed, SlipKind::BondTwice, SlipKind::CoefficientLeftOut, SlipKind::CarbonDioxideAsKetone,
-                            SlipKind::AverageForSpecific, SlipKind::NitroAsTwoDouble, SlipKind::PhaseLeftOut, SlipKind::WrongBasis,
-                            SlipKind::JouleForKilojoule, SlipKind::CalorieForJoule, SlipKind::Sign, SlipKind::SidesExchanged,
+const SlipKind kSeeded[] = {SlipKind::BondMissed,
+                            SlipKind::BondTwice,
+                            SlipKind::CoefficientLeftOut,
+                            SlipKind::CarbonDioxideAsKetone,
+                            SlipKind::AverageForSpecific,
+                            SlipKind::NitroAsTwoDouble,
+                            SlipKind::PhaseLeftOut,
+                            SlipKind::WrongBasis,
+                            SlipKind::JouleForKilojoule,
+                            SlipKind::CalorieForJoule,
+                            SlipKind::Sign,
+                            SlipKind::SidesExchanged,
                             SlipKind::DigitsTransposed};
 
 bool names(const Review& review, const Seed& slip) {
@@ -222,12 +252,15 @@ bool names(const Review& review, const Seed& slip) {
 
 std::vector<Ledger> sheets() {
   std::vector<Ledger> result;
-  for (const Example& example : kExamples) result.push_back(test_sheets::ledger(example.equation, example.basis));
+  for (const Example& example : kExamples)
+    result.push_back(test_sheets::ledger(example.equation, example.basis));
   return result;
 }
 
 const char* detail_text(Detail detail) {
-  return detail == Detail::WholeSheet ? "whole sheet" : detail == Detail::RowsAndTotals ? "rows and totals" : "totals only";
+  return detail == Detail::WholeSheet      ? "whole sheet"
+         : detail == Detail::RowsAndTotals ? "rows and totals"
+                                           : "totals only";
 }
 
 constexpr unsigned kSeed = 20240917;
@@ -252,17 +285,19 @@ TEST(SeededSlips, SingleOnesAreNamedFirst) {
       if (names(review, slip)) {
         ++named;
       } else {
-        const bool other = std::any_of(review.alternatives.begin(), review.alternatives.end(), [&slip](const Slip& s) {
-          return s.kind == slip.kind && (slip.anywhere || (s.row == slip.row && s.line == slip.line));
-        });
+        const bool other =
+            std::any_of(review.alternatives.begin(), review.alternatives.end(), [&slip](const Slip& s) {
+              return s.kind == slip.kind && (slip.anywhere || (s.row == slip.row && s.line == slip.line));
+            });
         among += other ? 1 : 0;
         if (++shown <= 5) {
-          std::printf("    missed: kind %d row %zu line %zu of %s: %s\n", static_cast<int>(slip.kind), slip.row, slip.line,
-                      ledger.reaction->text.c_str(), review.summary.c_str());
+          std::printf("    missed: kind %d row %zu line %zu of %s: %s\n", static_cast<int>(slip.kind),
+                      slip.row, slip.line, ledger.reaction->text.c_str(), review.summary.c_str());
         }
       }
     }
-    std::printf("  %s: %d of %d single slips named first, %d more among those that fit (seed %u)\n", detail_text(detail), named, tried, among, kSeed);
+    std::printf("  %s: %d of %d single slips named first, %d more among those that fit (seed %u)\n",
+                detail_text(detail), named, tried, among, kSeed);
     EXPECT_GE(named, tried * 9 / 10) << detail_text(detail);
   }
 }
@@ -289,11 +324,12 @@ TEST(SeededSlips, TwoAreReportedAsMoreThanOne) {
       if (review.more_than_one) {
         ++reported;
       } else if (++shown <= 4) {
-        std::printf("    taken for one: kinds %d and %d of %s: %s\n", static_cast<int>(first.kind), static_cast<int>(second.kind),
-                    ledger.reaction->text.c_str(), review.summary.c_str());
+        std::printf("    taken for one: kinds %d and %d of %s: %s\n", static_cast<int>(first.kind),
+                    static_cast<int>(second.kind), ledger.reaction->text.c_str(), review.summary.c_str());
       }
     }
-    std::printf("  %s: %d of %d double slips reported as more than one\n", detail_text(detail), reported, tried);
+    std::printf("  %s: %d of %d double slips reported as more than one\n", detail_text(detail), reported,
+                tried);
     EXPECT_GE(reported, tried * 9 / 10) << detail_text(detail);
   }
 }
@@ -321,7 +357,8 @@ TEST(SeededSlips, ACorrectSheetByAnotherTableIsNotAccused) {
       bool same_lines = true;
       for (std::size_t r = 0; r < ours.rows.size(); ++r) {
         same_lines = same_lines && ours.rows[r].lines.size() == theirs.rows[r].lines.size();
-        for (std::size_t l = 0; same_lines && l < ours.rows[r].lines.size(); ++l) same_lines = ours.rows[r].lines[l].type == theirs.rows[r].lines[l].type;
+        for (std::size_t l = 0; same_lines && l < ours.rows[r].lines.size(); ++l)
+          same_lines = ours.rows[r].lines[l].type == theirs.rows[r].lines[l].type;
       }
       for (const Detail detail : {Detail::WholeSheet, Detail::RowsAndTotals, Detail::Totals}) {
         if (detail == Detail::WholeSheet && !same_lines) continue;

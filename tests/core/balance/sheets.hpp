@@ -23,7 +23,8 @@ inline std::shared_ptr<const Reaction> reaction(const std::string& equation) {
   return std::make_shared<const Reaction>(std::move(read).value());
 }
 
-inline Result<Ledger> try_ledger(const std::string& equation, const std::string& basis = "", const std::string& set = "") {
+inline Result<Ledger> try_ledger(const std::string& equation, const std::string& basis = "",
+                                 const std::string& set = "") {
   std::shared_ptr<const Reaction> read = reaction(equation);
   if (read == nullptr) return Error{"test.not_read", equation, "", ""};
   LedgerOptions options;
@@ -33,7 +34,8 @@ inline Result<Ledger> try_ledger(const std::string& equation, const std::string&
 }
 
 /// A ledger that must exist; an empty one after a failure, so that the suite goes on.
-inline Ledger ledger(const std::string& equation, const std::string& basis = "", const std::string& set = "") {
+inline Ledger ledger(const std::string& equation, const std::string& basis = "",
+                     const std::string& set = "") {
   Result<Ledger> made = try_ledger(equation, basis, set);
   EXPECT_TRUE(made.ok()) << equation << ": " << (made.ok() ? "" : made.error().message);
   return made.ok() ? std::move(made).value() : Ledger{};

@@ -64,7 +64,9 @@ struct Random {
     z = (z ^ (z >> 27)) * 0x94d049bb133111ebULL;
     return z ^ (z >> 31);
   }
-  double between(double low, double high) { return low + (high - low) * static_cast<double>(next() >> 11) * 0x1p-53; }
+  double between(double low, double high) {
+    return low + (high - low) * static_cast<double>(next() >> 11) * 0x1p-53;
+  }
 };
 
 /// What machine_number promises, spelled with printf alone.
@@ -104,8 +106,29 @@ TEST(NumberText, MachineNumbersEqualPrintfOnAMillionValues) {
 
 TEST(NumberText, RoundsTiesAndBordersAsPrintf) {
   for (const int digits : {1, 2, 3, 10, 15}) {
-    for (const double value : {0.5, 1.5, 2.5, 0.125, 0.375, 9.5, 99.5, 0.95, 9.99999999995, 99999.99999995, 999999999.95, 1e-6, 1e-5,
-                               0.001, 0.1, 1.0, 10.0, 1000000.0, 123456789.5, 4294967296.5, 8.5, 2.25, 1e-6 * (1 - 1e-15) + 1e-20}) {
+    for (const double value : {0.5,
+                               1.5,
+                               2.5,
+                               0.125,
+                               0.375,
+                               9.5,
+                               99.5,
+                               0.95,
+                               9.99999999995,
+                               99999.99999995,
+                               999999999.95,
+                               1e-6,
+                               1e-5,
+                               0.001,
+                               0.1,
+                               1.0,
+                               10.0,
+                               1000000.0,
+                               123456789.5,
+                               4294967296.5,
+                               8.5,
+                               2.25,
+                               1e-6 * (1 - 1e-15) + 1e-20}) {
       if (value < 1e-6 || (value >= 10 && digits < 10)) continue;
       EXPECT_EQ(machine_number(value, digits), by_printf(value, digits)) << value << " at " << digits;
     }
@@ -128,7 +151,8 @@ TEST(NumberText, ReadsAsStrtodDoes) {
   for (int i = 0; i < 200000; ++i) {
     char text[64];
     const int decimals = static_cast<int>(random.next() % 18);
-    std::snprintf(text, sizeof text, "%.*f", decimals, random.between(-1e6, 1e6) * std::exp2(random.between(-40, 20)));
+    std::snprintf(text, sizeof text, "%.*f", decimals,
+                  random.between(-1e6, 1e6) * std::exp2(random.between(-40, 20)));
     const std::optional<double> value = parse_number(text);
     ASSERT_TRUE(value.has_value()) << text;
     ASSERT_EQ(*value, std::strtod(text, nullptr)) << text;

@@ -10,8 +10,10 @@ namespace {
 TEST(Utf8, TellsWhereTextIsMalformed) {
   EXPECT_EQ(first_malformed(""), 0u);
   EXPECT_EQ(first_malformed("H\u2082O \u2192 \U0001F525"), std::string("H\u2082O \u2192 \U0001F525").size());
-  // Overlong, surrogate, beyond the last code point, cut short, lone continuation (RFC 3629, sections 3 and 10).
-  for (const char* bad : {"ab\xC0\xAF", "ab\xE0\x80\xAF", "ab\xED\xA0\x80", "ab\xF4\x90\x80\x80", "ab\xE2\x82", "ab\x80", "ab\xFF"}) {
+  // Overlong, surrogate, beyond the last code point, cut short, lone continuation (RFC 3629, sections 3 and
+  // 10).
+  for (const char* bad : {"ab\xC0\xAF", "ab\xE0\x80\xAF", "ab\xED\xA0\x80", "ab\xF4\x90\x80\x80",
+                          "ab\xE2\x82", "ab\x80", "ab\xFF"}) {
     EXPECT_EQ(first_malformed(bad), 2u) << bad;
   }
 }

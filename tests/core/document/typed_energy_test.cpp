@@ -16,7 +16,7 @@ TEST(TypedEnergy, ReadsUnitsOfEnergyPerMole) {
   EXPECT_DOUBLE_EQ(read("340 kJ/mol").value, 340000);
   EXPECT_DOUBLE_EQ(read("340").value, 340000);
   EXPECT_DOUBLE_EQ(read("340000 J/mol").value, 340000);
-  EXPECT_DOUBLE_EQ(read("81 kcal/mol").value, 81 * 4184.0);  // thermochemical calorie, exactly 4.184 J
+  EXPECT_DOUBLE_EQ(read("81 kcal/mol").value, 81 * 4184.0);   // thermochemical calorie, exactly 4.184 J
   EXPECT_DOUBLE_EQ(read("4.5 eV").value, 4.5 * 96485.33212);  // e N_A, CODATA 2018, exact
 }
 

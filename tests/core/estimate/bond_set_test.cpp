@@ -57,7 +57,8 @@ TEST(BondSet, HasSixtyTypesEachWithItsSource) {
   }
 }
 
-// tests/data/checks/mean_bonds.tsv: the span of the four tables; its own tolerance is 2 % for rounding between editions.
+// tests/data/checks/mean_bonds.tsv: the span of the four tables; its own tolerance is 2 % for rounding
+// between editions.
 TEST(BondSet, EveryPriceLiesInThePublishedSpan) {
   const test::Table table = test::read_table("tests/data/checks/mean_bonds.tsv");
   ASSERT_GE(table.rows.size(), 40u);
@@ -65,8 +66,9 @@ TEST(BondSet, EveryPriceLiesInThePublishedSpan) {
     std::string bond = row[0];
     Setting setting = Setting::Plain;
     if (const std::size_t blank = bond.find(" ("); blank != std::string::npos) {
-      setting = bond.substr(blank) == " (CO2)" ? Setting::CarbonDioxide
-                : bond.substr(blank) == " (CO)" ? Setting::CarbonMonoxide : Setting::AromaticRing;
+      setting = bond.substr(blank) == " (CO2)"  ? Setting::CarbonDioxide
+                : bond.substr(blank) == " (CO)" ? Setting::CarbonMonoxide
+                                                : Setting::AromaticRing;
       bond.resize(blank);
     }
     Result<BondType> type = molecule::parse_bond_type(bond);
@@ -85,8 +87,8 @@ TEST(BondSet, EveryPriceLiesInThePublishedSpan) {
   }
 }
 
-// A cell written down from memory must be supported by another column: within 13 % of one that has the bond (tables
-// part by that much on S-S and C-I). The two values of I-O, 234 and 201, are known to stand apart.
+// A cell written down from memory must be supported by another column: within 13 % of one that has the bond
+// (tables part by that much on S-S and C-I). The two values of I-O, 234 and 201, are known to stand apart.
 TEST(BondSet, RememberedCellsAgreeWithAnotherColumn) {
   int alone = 0, checked = 0;
   for (const BondTableRow& row : bond_table()) {
@@ -109,14 +111,16 @@ TEST(BondSet, RememberedCellsAgreeWithAnotherColumn) {
     }
   }
   EXPECT_GE(checked, 70);
-  EXPECT_LE(alone, 45);  // bonds of B, Ge, Sn, As, Se and others that one table has: nothing to hold them against
+  EXPECT_LE(alone,
+            45);  // bonds of B, Ge, Sn, As, Se and others that one table has: nothing to hold them against
 }
 
 // tests/data/checks/atomisation.tsv (gas atoms minus molecule) against tables that do not use it.
 TEST(BondSet, MeanValuesFollowFromAtomisation) {
   const test::Table table = test::read_table("tests/data/checks/atomisation.tsv");
   for (const auto& row : table.rows) {
-    if (row[0] == "sulfur trioxide" || row[0] == "sulfur dioxide") continue;  // one average S=O cannot serve both: 473 and 536
+    if (row[0] == "sulfur trioxide" || row[0] == "sulfur dioxide")
+      continue;  // one average S=O cannot serve both: 473 and 536
     Result<BondType> type = molecule::parse_bond_type(row[4]);
     ASSERT_TRUE(type.ok()) << row[4];
     if (row[0] == "carbon dioxide") type->setting = Setting::CarbonDioxide;
@@ -137,11 +141,13 @@ TEST(BondSet, KeepsMoleculesApartFromAverages) {
   EXPECT_EQ(price(set, 6, 8, Order::Double, Setting::CarbonDioxide), 799);
   EXPECT_EQ(price(set, 6, 8, Order::Triple, Setting::CarbonMonoxide), 1072);
   EXPECT_EQ(price(set, 7, 8, Order::Double), 607);
-  // ATcT 1.112: D(NO) 630.6; atomisation of NO2 936.9 and of O3 605.9 over two bonds. 0.1 for the last digit of the table.
+  // ATcT 1.112: D(NO) 630.6; atomisation of NO2 936.9 and of O3 605.9 over two bonds. 0.1 for the last digit
+  // of the table.
   EXPECT_NEAR(price(set, 7, 8, Order::Double, Setting::NitricOxide), 630.6, 0.1);
   EXPECT_NEAR(price(set, 7, 8, Order::Double, Setting::NitrogenDioxide), 936.9 / 2, 0.1);
   EXPECT_NEAR(price(set, 8, 8, Order::Double, Setting::Ozone), 605.9 / 2, 0.1);
-  EXPECT_EQ(set.find(make_bond_type(6, 8, Order::Double, Setting::CarbonDioxide))->origin, BondOrigin::TableSpecific);
+  EXPECT_EQ(set.find(make_bond_type(6, 8, Order::Double, Setting::CarbonDioxide))->origin,
+            BondOrigin::TableSpecific);
   EXPECT_EQ(set.find(make_bond_type(6, 8, Order::Double))->origin, BondOrigin::TableMean);
 }
 
@@ -203,10 +209,10 @@ TEST(BondSet, TypedValueFillsAGapOfTheTable) {
 
 TEST(SpreadHalfWidth, FollowsTheRangeWithAFloor) {
   using Values = std::array<std::optional<double>, kBondColumns>;
-  EXPECT_DOUBLE_EQ(spread_half_width(Values{412e3, 413e3}), 4e3);                       // floor
-  EXPECT_DOUBLE_EQ(spread_half_width(Values{200e3, 313e3}), 1.96 * 113e3 / 1.128);      // two tables
+  EXPECT_DOUBLE_EQ(spread_half_width(Values{412e3, 413e3}), 4e3);                   // floor
+  EXPECT_DOUBLE_EQ(spread_half_width(Values{200e3, 313e3}), 1.96 * 113e3 / 1.128);  // two tables
   EXPECT_DOUBLE_EQ(spread_half_width(Values{157e3, 201e3, 201e3, 230e3}), 1.96 * 73e3 / 2.059);
-  EXPECT_DOUBLE_EQ(spread_half_width(Values{234e3}), 10e3);                             // a single table
+  EXPECT_DOUBLE_EQ(spread_half_width(Values{234e3}), 10e3);  // a single table
   EXPECT_DOUBLE_EQ(spread_half_width(Values{600e3}), 18e3);
 }
 

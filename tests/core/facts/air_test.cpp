@@ -20,8 +20,8 @@ TEST(Air, FractionsSumToOneAndComponentsAreInTheLibrary) {
 }
 
 TEST(Air, WeighsWhatPublishedAirWeighs) {
-  // CIPM-2007 (Picard and others, Metrologia 45 (2008) 149): 28.96546 g/mol with 400 ppm CO2. 40 ppm of CO2 in place of
-  // oxygen are 0.0005 g/mol, rounding of the fractions another 0.0005.
+  // CIPM-2007 (Picard and others, Metrologia 45 (2008) 149): 28.96546 g/mol with 400 ppm CO2. 40 ppm of CO2
+  // in place of oxygen are 0.0005 g/mol, rounding of the fractions another 0.0005.
   EXPECT_NEAR(dry_air_molar_mass() * 1e3, 28.9655, 0.001);
 }
 

@@ -25,7 +25,8 @@ TEST(Ions, HoldAtLeastOneHundredAndTwentyIonsEachOnce) {
 }
 
 TEST(Ions, GibbsEnthalpyAndEntropyDifferByPlausibleEntropiesOfFormation) {
-  // (ΔfH - ΔfG)/T is the entropy of formation: for ions in water it lies between -1100 (pyrophosphate) and +250 J/(mol K).
+  // (ΔfH - ΔfG)/T is the entropy of formation: for ions in water it lies between -1100 (pyrophosphate) and
+  // +250 J/(mol K).
   for (const AqueousSubstance& row : aqueous_substances()) {
     if (!row.gibbs_energy) continue;
     const double entropy = (row.formation_enthalpy->value - row.gibbs_energy->value) / 298.15;
@@ -57,7 +58,8 @@ TEST(Ions, TheProtonIsTheZeroOfTheScale) {
 TEST(Ions, KeepTheFigureOfTheOtherSetInSight) {
   const AqueousSubstance* fluoride = find_aqueous_name("fluoride");
   ASSERT_NE(fluoride, nullptr);
-  ASSERT_EQ(fluoride->formation_enthalpy->rivals.size(), 1u);  // CODATA 1989: -335.35, NBS 1982: -332.63 kJ/mol
+  ASSERT_EQ(fluoride->formation_enthalpy->rivals.size(),
+            1u);  // CODATA 1989: -335.35, NBS 1982: -332.63 kJ/mol
   EXPECT_NEAR(fluoride->formation_enthalpy->rivals[0].value, -335350, 1);
 }
 

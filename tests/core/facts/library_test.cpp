@@ -10,7 +10,9 @@
 namespace heatledger::facts {
 namespace {
 
-std::string name_of(const Compound* compound) { return compound == nullptr ? "(none)" : std::string(compound->name); }
+std::string name_of(const Compound* compound) {
+  return compound == nullptr ? "(none)" : std::string(compound->name);
+}
 
 TEST(NameKey, ForgivesWritingAndKeepsLetters) {
   EXPECT_EQ(name_key("Ethyl Acetate"), "ethylacetate");
@@ -26,7 +28,8 @@ TEST(NameKey, ForgivesWritingAndKeepsLetters) {
 
 TEST(Library, FindsNamesHoweverTheyAreWritten) {
   const Library& library = Library::embedded();
-  for (const char* text : {"ethyl acetate", "Ethyl Acetate", "ETHYL-ACETATE", "ethylacetate", "141-78-6", "EtOAc", "ethyl ethanoate"}) {
+  for (const char* text : {"ethyl acetate", "Ethyl Acetate", "ETHYL-ACETATE", "ethylacetate", "141-78-6",
+                           "EtOAc", "ethyl ethanoate"}) {
     EXPECT_EQ(name_of(library.find_name(text)), "ethyl acetate") << text;
   }
   EXPECT_EQ(library.find_name("ethyl acetat"), nullptr);
@@ -57,7 +60,8 @@ TEST(Completion, PutsBeginningsBeforeWordsBeforeSlips) {
   ASSERT_FALSE(hits.empty());
   EXPECT_EQ(hits[0].compound->name, "nitrobenzene");
   hits = library.complete("acetate", 20);
-  EXPECT_TRUE(std::any_of(hits.begin(), hits.end(), [](const auto& h) { return h.compound->name == "ethyl acetate"; }));
+  EXPECT_TRUE(std::any_of(hits.begin(), hits.end(),
+                          [](const auto& h) { return h.compound->name == "ethyl acetate"; }));
   hits = library.complete("nitrotolune", 3);  // a slip in a word after its locant
   ASSERT_FALSE(hits.empty());
   EXPECT_EQ(hits[0].compound->name, "2-nitrotoluene");
@@ -73,7 +77,8 @@ TEST(Completion, EditDistanceToTheNearestBeginning) {
   EXPECT_EQ(EditPattern("ethan").distance_to_beginning("ethanol"), 0);
   EXPECT_EQ(EditPattern("etanol").distance_to_beginning("ethanol"), 1);
   EXPECT_EQ(EditPattern("ethaanol").distance_to_beginning("ethanol"), 1);
-  EXPECT_EQ(EditPattern("kitten").distance_to_beginning("sitting"), 2);  // "sitti" or "sitte": two changes, one deletion saved by the prefix
+  EXPECT_EQ(EditPattern("kitten").distance_to_beginning("sitting"),
+            2);  // "sitti" or "sitte": two changes, one deletion saved by the prefix
   EXPECT_EQ(EditPattern("abc").distance_to_beginning(""), 3);
 }
 

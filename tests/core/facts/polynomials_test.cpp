@@ -16,7 +16,9 @@ PolynomialValue at(const Polynomial& p, double t) {
   return value.ok() ? *value : PolynomialValue();
 }
 
-TEST(Polynomials, HoldAtLeastTwoHundredSpecies) { EXPECT_GE(polynomials().size(), 200u); }
+TEST(Polynomials, HoldAtLeastTwoHundredSpecies) {
+  EXPECT_GE(polynomials().size(), 200u);
+}
 
 TEST(Polynomials, AreContinuousWhereTheirRangesMeet) {
   for (const Polynomial& p : polynomials()) {
@@ -25,7 +27,8 @@ TEST(Polynomials, AreContinuousWhereTheirRangesMeet) {
       const double t = p.ranges[i].from;
       const Polynomial below{p.name, p.formula, p.phase, p.stable_at_298, 0, {p.ranges[i - 1]}};
       const Polynomial above{p.name, p.formula, p.phase, p.stable_at_298, 0, {p.ranges[i]}};
-      // The fits are printed with nine digits and pinned at the joint; what is left is the rounding of the printed figures.
+      // The fits are printed with nine digits and pinned at the joint; what is left is the rounding of the
+      // printed figures.
       EXPECT_NEAR(at(below, t).cp, at(above, t).cp, 0.05) << p.name;
       EXPECT_NEAR(at(below, t).h, at(above, t).h, 20) << p.name;
       EXPECT_NEAR(at(below, t).s, at(above, t).s, 0.05) << p.name;
@@ -62,7 +65,8 @@ TEST(Polynomials, HaveFormulasOfTheirOwn) {
 }
 
 TEST(Polynomials, AgreeWithTheHeatCapacitiesOfTheCompoundTable) {
-  // Two published tables for one figure: 95 % within 3 %, the rest (acids, rotors, fits of solids) within 10 %.
+  // Two published tables for one figure: 95 % within 3 %, the rest (acids, rotors, fits of solids) within 10
+  // %.
   int compared = 0, near = 0;
   for (const Polynomial& p : polynomials()) {
     const Compound* c = Library::embedded().find_name(p.name);

@@ -20,7 +20,8 @@ Error refuse(std::string_view text, bool quoted = false) {
 }
 
 TEST(Resolve, FindsNamesFormulasAndStructures) {
-  for (const char* text : {"nitrobenzene", "Nitro Benzene", "98-95-3", "C6H5NO2", "O=[N+]([O-])c1ccccc1", "O=N(=O)C1=CC=CC=C1"}) {
+  for (const char* text : {"nitrobenzene", "Nitro Benzene", "98-95-3", "C6H5NO2", "O=[N+]([O-])c1ccccc1",
+                           "O=N(=O)C1=CC=CC=C1"}) {
     const auto species = read(text);
     EXPECT_EQ(species->name, "nitrobenzene") << text;
     ASSERT_NE(species->compound, nullptr) << text;
@@ -31,13 +32,19 @@ TEST(Resolve, FindsNamesFormulasAndStructures) {
 }
 
 TEST(Resolve, FormulaWinsWhereTwoReadingsDiffer) {
-  struct Case { const char* text; const char* name; const char* quoted; };
-  for (const Case& c : {Case{"CO", "carbon monoxide", "methanol"}, Case{"NO", "nitric oxide", "hydroxylamine"},
-                        Case{"CS", "carbon monosulfide", "methyl mercaptan"}, Case{"COS", "carbonyl sulfide", ""},
-                        Case{"C", "graphite", "methane"}, Case{"S", "sulfur", "hydrogen sulfide"}}) {
+  struct Case {
+    const char* text;
+    const char* name;
+    const char* quoted;
+  };
+  for (const Case& c :
+       {Case{"CO", "carbon monoxide", "methanol"}, Case{"NO", "nitric oxide", "hydroxylamine"},
+        Case{"CS", "carbon monosulfide", "methyl mercaptan"}, Case{"COS", "carbonyl sulfide", ""},
+        Case{"C", "graphite", "methane"}, Case{"S", "sulfur", "hydrogen sulfide"}}) {
     const auto species = read(c.text);
     EXPECT_EQ(species->name, c.name) << c.text;
-    EXPECT_NE(species->note.find(std::string("\"") + c.text + "\" in quotes is"), std::string::npos) << species->note;
+    EXPECT_NE(species->note.find(std::string("\"") + c.text + "\" in quotes is"), std::string::npos)
+        << species->note;
     EXPECT_NE(species->note.find(c.quoted), std::string::npos) << species->note;
     if (*c.quoted != '\0') {
       EXPECT_EQ(read(c.text, true)->name, c.quoted) << c.text;
@@ -80,7 +87,8 @@ TEST(Resolve, TakesWhatABareFormulaMeansAndSaysWhatElseItCouldBe) {
 }
 
 TEST(Resolve, KnowsElementsInTheirReferenceState) {
-  for (const char* text : {"H2", "O2", "N2", "Cl2", "F2", "Br2", "I2", "S", "Fe", "Na", "C", "P", "Ar", "Hg", "graphite"}) {
+  for (const char* text :
+       {"H2", "O2", "N2", "Cl2", "F2", "Br2", "I2", "S", "Fe", "Na", "C", "P", "Ar", "Hg", "graphite"}) {
     const auto species = read(text);
     ASSERT_NE(species->compound, nullptr) << text;
     EXPECT_TRUE(species->compound->reference_element) << text;
@@ -133,7 +141,8 @@ TEST(Resolve, PrefersFormulaOverANameInAnotherSpelling) {
   EXPECT_EQ(read("tin")->name, "tin");
   EXPECT_EQ(read("TiN")->name, "titanium nitride");
   EXPECT_NE(read("TiN")->note.find("tin"), std::string::npos);
-  for (const char* text : {"THF", "TNT", "DBU", "IPA", "MEK", "DMF", "EDC", "MTBE"}) EXPECT_NE(read(text)->compound, nullptr) << text;
+  for (const char* text : {"THF", "TNT", "DBU", "IPA", "MEK", "DMF", "EDC", "MTBE"})
+    EXPECT_NE(read(text)->compound, nullptr) << text;
 }
 
 TEST(Resolve, HelpsWithWhatItCannotRead) {

@@ -27,8 +27,8 @@ TEST(SolutionHeats, HitTheirPointsAndStayBetweenThem) {
 }
 
 TEST(SolutionHeats, InterpolatePointsLeftOut) {
-  // Each inner point of the sulfuric acid curve from its neighbours. Where a step of the table spans up to a factor of
-  // five in dilution the interpolation has to be within 1.5 kJ/mol, a fiftieth of the whole heat.
+  // Each inner point of the sulfuric acid curve from its neighbours. Where a step of the table spans up to a
+  // factor of five in dilution the interpolation has to be within 1.5 kJ/mol, a fiftieth of the whole heat.
   const SolutionHeats* acid = find_solution_heats("H2SO4", 'l');
   ASSERT_NE(acid, nullptr);
   ASSERT_GE(acid->points.size(), 10u);
@@ -36,7 +36,8 @@ TEST(SolutionHeats, InterpolatePointsLeftOut) {
     SolutionHeats without = *acid;
     without.points.erase(without.points.begin() + static_cast<std::ptrdiff_t>(i));
     if (acid->points[i + 1].ratio > 30) break;  // beyond, the second dissociation shifts over decades
-    EXPECT_NEAR(solution_heat_at(without, acid->points[i].ratio)->heat, acid->points[i].heat, 1500) << acid->points[i].ratio;
+    EXPECT_NEAR(solution_heat_at(without, acid->points[i].ratio)->heat, acid->points[i].heat, 1500)
+        << acid->points[i].ratio;
   }
 }
 
@@ -51,7 +52,8 @@ TEST(SolutionHeats, ApproachInfiniteDilution) {
 TEST(SolutionHeats, GiveNothingOutsideTheCurve) {
   const SolutionHeats* soda = find_solution_heats("NaOH", 's');
   ASSERT_NE(soda, nullptr);
-  EXPECT_FALSE(solution_heat_at(*soda, 1.0).has_value());  // below three waters the table ends: it is no solution
+  EXPECT_FALSE(
+      solution_heat_at(*soda, 1.0).has_value());  // below three waters the table ends: it is no solution
   EXPECT_FALSE(solution_heat_at(*soda, std::nan("")).has_value());
   const SolutionHeats* salt = find_solution_heats("NaCl", 's');
   ASSERT_NE(salt, nullptr);

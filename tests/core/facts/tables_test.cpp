@@ -1,5 +1,5 @@
-// Every row of the compound table against itself: structure against formula, phases against phase changes, heat
-// capacities against what a body of so many atoms can hold. No outside value is needed.
+// Every row of the compound table against itself: structure against formula, phases against phase changes,
+// heat capacities against what a body of so many atoms can hold. No outside value is needed.
 #include <gtest/gtest.h>
 
 #include <cmath>
@@ -39,7 +39,9 @@ double squares(const std::optional<Datum>& a, const std::optional<Datum>& b, con
   return std::sqrt(a->u95 * a->u95 + b->u95 * b->u95 + c->u95 * c->u95);
 }
 
-TEST(CompoundTable, HoldsEnoughRows) { EXPECT_GE(Library::embedded().size(), 2000u); }
+TEST(CompoundTable, HoldsEnoughRows) {
+  EXPECT_GE(Library::embedded().size(), 2000u);
+}
 
 TEST(CompoundTable, EveryStructureGivesTheStatedFormulaAndMass) {
   std::size_t structures = 0;
@@ -133,12 +135,14 @@ TEST(CompoundTable, HeatCapacitiesArePlausible) {
   for_each_row([](const Compound& c) {
     const double n = atoms_in(c);
     if (c.gas.heat_capacity) {
-      // Translation and rotation at least; every vibration fully excited, electronic levels and hindered rotors at most.
+      // Translation and rotation at least; every vibration fully excited, electronic levels and hindered
+      // rotors at most.
       const double modes = n < 2 ? 0 : 3 * n - 5;
       EXPECT_GE(c.gas.heat_capacity->value, 2.49 * kR) << c.name;
       EXPECT_LE(c.gas.heat_capacity->value, (3.5 + modes) * kR + 4) << c.name;
     }
-    // Three oscillators an atom are 24.9 J/(mol K); molecular crystals with C-H excite a third of them at 298 K.
+    // Three oscillators an atom are 24.9 J/(mol K); molecular crystals with C-H excite a third of them at 298
+    // K.
     if (c.solid.heat_capacity) {
       EXPECT_GE(c.solid.heat_capacity->value, 6.0 * n) << c.name;
       EXPECT_LE(c.solid.heat_capacity->value, 31.5 * n + 6) << c.name;
@@ -179,7 +183,8 @@ TEST(CompoundTable, TransitionsStandInTheirOrder) {
     }
     if (c.boiling_point && c.vaporisation_enthalpy_boiling) {
       const double trouton = c.vaporisation_enthalpy_boiling->value / c.boiling_point->value;
-      // 75 to 115 J/(mol K) for most; helium 19 and hydrogen 44 are quantum liquids, chlorides that dissociate reach 141.
+      // 75 to 115 J/(mol K) for most; helium 19 and hydrogen 44 are quantum liquids, chlorides that
+      // dissociate reach 141.
       EXPECT_GT(trouton, 18) << c.name;
       EXPECT_LT(trouton, 145) << c.name;
     }
@@ -190,7 +195,9 @@ TEST(CompoundTable, ElementsInTheirReferenceStateAreZero) {
   std::map<std::string, std::string> seen;
   for_each_row([&](const Compound& c) {
     if (!c.reference_element) return;
-    const PhaseFacts& phase = c.reference_phase == 'g' ? c.gas : c.reference_phase == 'l' ? c.liquid : c.solid;
+    const PhaseFacts& phase = c.reference_phase == 'g'   ? c.gas
+                              : c.reference_phase == 'l' ? c.liquid
+                                                         : c.solid;
     ASSERT_TRUE(phase.formation_enthalpy.has_value()) << c.name;
     EXPECT_EQ(phase.formation_enthalpy->value, 0) << c.name;
     EXPECT_EQ(phase.formation_enthalpy->u95, 0) << c.name;

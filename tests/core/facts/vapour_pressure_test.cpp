@@ -39,7 +39,8 @@ TEST(VapourPressure, EveryRowBelongsToACompoundAndRises) {
     ASSERT_LT(equation.from, equation.to) << c->name;
     double before = 0;
     for (int i = 0; i <= 20; ++i) {
-      const Result<PressureValue> p = vapour_pressure(equation, std::min(equation.to, equation.from + (equation.to - equation.from) * i / 20));
+      const Result<PressureValue> p = vapour_pressure(
+          equation, std::min(equation.to, equation.from + (equation.to - equation.from) * i / 20));
       ASSERT_TRUE(p.ok()) << c->name;
       ASSERT_TRUE(std::isfinite(p->pressure)) << c->name;
       EXPECT_GT(p->pressure, before) << c->name << " step " << i;
@@ -56,7 +57,8 @@ TEST(VapourPressure, RefusesTemperaturesOutsideTheRange) {
     ASSERT_FALSE(p.ok());
     EXPECT_EQ(p.error().code, "thermo.temperature_range");
   }
-  // Ethanol at 25 degC: 7.87 kPa (CRC Handbook 95, vapour pressure of organic liquids); 2 % is the scatter of the equation.
+  // Ethanol at 25 degC: 7.87 kPa (CRC Handbook 95, vapour pressure of organic liquids); 2 % is the scatter of
+  // the equation.
   EXPECT_NEAR(vapour_pressure(*ethanol, 298.15)->pressure, 7870, 0.02 * 7870);
 }
 

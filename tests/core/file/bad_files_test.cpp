@@ -12,7 +12,8 @@ TEST(BadFiles, AreRefusedWithCodeAndPlace) {
   const std::string folder = "tests/data/file/bad";
   const test::Table expected = test::read_table("tests/data/file/bad_expected.tsv");
   const std::vector<std::string> names = test::list_source_folder(folder);
-  EXPECT_EQ(names.size(), expected.rows.size()) << "every file of the folder has its line, and every line its file";
+  EXPECT_EQ(names.size(), expected.rows.size())
+      << "every file of the folder has its line, and every line its file";
   for (const auto& row : expected.rows) {
     const std::string& name = row[expected.column("file")];
     const Result<Opened> opened = read_worksheet(test::read_source_file(folder + "/" + name));

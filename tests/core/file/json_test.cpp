@@ -6,7 +6,8 @@ namespace heatledger::file {
 namespace {
 
 TEST(Json, KeepsOrderOfKeysAndSpellingOfNumbers) {
-  const Result<Json> json = read_json(R"({"z": 12.50, "a": [1, 2.0e3, true, null], "empty": {}, "list": []})");
+  const Result<Json> json =
+      read_json(R"({"z": 12.50, "a": [1, 2.0e3, true, null], "empty": {}, "list": []})");
   ASSERT_TRUE(json.ok());
   EXPECT_EQ(write_json_text(*json),
             "{\n  \"z\": 12.50,\n  \"a\": [1, 2.0e3, true, null],\n  \"empty\": {},\n  \"list\": []\n}");
@@ -36,7 +37,9 @@ TEST(Json, NamesOffsetAndLineOfWhatIsNoJson) {
   EXPECT_EQ(read_json("{\"a\": 1e999}").error().code, "file.not_json");
 }
 
-TEST(Json, SkipsAByteOrderMark) { EXPECT_TRUE(read_json("\xef\xbb\xbf{}").ok()); }
+TEST(Json, SkipsAByteOrderMark) {
+  EXPECT_TRUE(read_json("\xef\xbb\xbf{}").ok());
+}
 
 TEST(Json, RefusesTextThatIsNoUtf8) {
   EXPECT_EQ(read_json("{\"a\": \"\xff\"}").error().code, "file.not_json");

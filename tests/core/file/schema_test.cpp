@@ -1,5 +1,6 @@
-// The published schema against every example worksheet, and against files it must refuse. The validator here knows the
-// keywords that the schema uses and fails on any other, so that the schema cannot outgrow it unseen.
+// The published schema against every example worksheet, and against files it must refuse. The validator here
+// knows the keywords that the schema uses and fails on any other, so that the schema cannot outgrow it
+// unseen.
 #include <gtest/gtest.h>
 
 #include "core/file/json.hpp"
@@ -24,14 +25,20 @@ bool matches(const std::string& pattern, const std::string& text) {
 
 bool has_type(const Json& value, const std::string& type) {
   switch (value.kind()) {
-    case Json::Kind::Object: return type == "object";
-    case Json::Kind::Array: return type == "array";
-    case Json::Kind::String: return type == "string";
+    case Json::Kind::Object:
+      return type == "object";
+    case Json::Kind::Array:
+      return type == "array";
+    case Json::Kind::String:
+      return type == "string";
     case Json::Kind::True:
-    case Json::Kind::False: return type == "boolean";
+    case Json::Kind::False:
+      return type == "boolean";
     case Json::Kind::Number:
-      return type == "number" || (type == "integer" && value.text().find_first_of(".eE") == std::string::npos);
-    case Json::Kind::Null: return type == "null";
+      return type == "number" ||
+             (type == "integer" && value.text().find_first_of(".eE") == std::string::npos);
+    case Json::Kind::Null:
+      return type == "null";
   }
   return false;
 }
@@ -44,7 +51,8 @@ std::string departure(const Json& schema, const Json& value, const std::string& 
     if (key == "type") {
       if (!has_type(value, rule.second.text())) return at + ": not of type " + rule.second.text();
     } else if (key == "const") {
-      if (value.kind() != rule.second.kind() || value.text() != rule.second.text()) return at + ": not the constant";
+      if (value.kind() != rule.second.kind() || value.text() != rule.second.text())
+        return at + ": not the constant";
     } else if (key == "required") {
       for (const Json& name : rule.second.items()) {
         if (value.find(name.text()) == nullptr) return at + ": lacks " + name.text();
@@ -65,7 +73,8 @@ std::string departure(const Json& schema, const Json& value, const std::string& 
       }
     } else if (key == "items") {
       for (std::size_t i = 0; i < value.items().size(); ++i) {
-        const std::string found = departure(rule.second, value.items()[i], at + "[" + std::to_string(i) + "]");
+        const std::string found =
+            departure(rule.second, value.items()[i], at + "[" + std::to_string(i) + "]");
         if (!found.empty()) return found;
       }
     } else {
@@ -114,7 +123,8 @@ TEST(Schema, KnowsEveryKeyThatIsWritten) {
   document::Worksheet sheet = document::empty_worksheet();
   sheet.header.change() = {"a", "b", "c", "d", "e", "f", "g", "h", ""};
   document::ReactionSheet& reaction = sheet.reactions[0].change();
-  reaction.title = reaction.equation = reaction.basis = reaction.bond_set = reaction.pinned_route = reaction.note = "x";
+  reaction.title = reaction.equation = reaction.basis = reaction.bond_set = reaction.pinned_route =
+      reaction.note = "x";
   reaction.show_profile = reaction.show_checker = true;
   reaction.checker["gas_298"] = "1";
   sheet.typed_bonds.change().push_back({"a", "b", "c", ""});
@@ -126,7 +136,8 @@ TEST(Schema, KnowsEveryKeyThatIsWritten) {
   EXPECT_EQ(departure(rules, *written, "sheet"), "");
   // A key that the schema does not describe would pass it unseen.
   const Json& properties = *rules.find("properties");
-  for (const Json::Member& member : written->members()) EXPECT_NE(properties.find(member.first), nullptr) << member.first;
+  for (const Json::Member& member : written->members())
+    EXPECT_NE(properties.find(member.first), nullptr) << member.first;
   const Json& reaction_rules = *properties.find("reactions")->find("items")->find("properties");
   for (const Json::Member& member : written->find("reactions")->items()[0].members()) {
     EXPECT_NE(reaction_rules.find(member.first), nullptr) << member.first;
@@ -135,10 +146,11 @@ TEST(Schema, KnowsEveryKeyThatIsWritten) {
 
 TEST(Schema, RefusesWhatIsNoWorksheet) {
   const Json rules = schema();
-  for (const char* text : {R"([])", R"({"format": "heatledger-worksheet"})", R"({"format": "x", "version": 1})",
-                           R"({"format": "heatledger-worksheet", "version": 2})",
-                           R"({"format": "heatledger-worksheet", "version": 1, "reactions": [{"id": "header"}]})",
-                           R"({"format": "heatledger-worksheet", "version": 1, "notes": [1]})"}) {
+  for (const char* text :
+       {R"([])", R"({"format": "heatledger-worksheet"})", R"({"format": "x", "version": 1})",
+        R"({"format": "heatledger-worksheet", "version": 2})",
+        R"({"format": "heatledger-worksheet", "version": 1, "reactions": [{"id": "header"}]})",
+        R"({"format": "heatledger-worksheet", "version": 1, "notes": [1]})"}) {
     const Result<Json> json = read_json(text);
     ASSERT_TRUE(json.ok());
     EXPECT_NE(departure(rules, *json, "sheet"), "") << text;

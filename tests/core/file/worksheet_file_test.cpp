@@ -112,7 +112,8 @@ TEST(WorksheetFile, KeepsAKnownKeyOfTheWrongKindAndReportsIt) {
   ASSERT_TRUE(opened.ok());
   std::vector<std::string> places;
   for (const Error& error : opened->not_understood) places.push_back(error.where);
-  EXPECT_EQ(places, (std::vector<std::string>{"header.title", "reactions[0].equation", "reactions[1]", "notes"}));
+  EXPECT_EQ(places,
+            (std::vector<std::string>{"header.title", "reactions[0].equation", "reactions[1]", "notes"}));
   const std::string again = write_worksheet(opened->sheet, {});
   EXPECT_NE(again.find("\"title\": 5"), std::string::npos);
   EXPECT_NE(again.find("\"notes\": \"one\""), std::string::npos);

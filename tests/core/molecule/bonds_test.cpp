@@ -26,7 +26,9 @@ std::string words(const BondTally& tally) {
   return text;
 }
 
-std::string tally_of(const std::string& smiles) { return words(count_bonds(read(smiles))); }
+std::string tally_of(const std::string& smiles) {
+  return words(count_bonds(read(smiles)));
+}
 
 TEST(Bonds, HandCountedStructuresAgree) {
   const test::Table table = test::read_table("tests/data/smiles/bond_counts.tsv");
@@ -70,7 +72,8 @@ TEST(Bonds, PlainTallyMergesSettings) {
 }
 
 TEST(Bonds, SpellingsReadBack) {
-  for (const char* text : {"C-H", "C=C", "C#N", "N-O (nitro)", "C=O (CO2)", "O=O (O3)", "C-C (aromatic ring)"}) {
+  for (const char* text :
+       {"C-H", "C=C", "C#N", "N-O (nitro)", "C=O (CO2)", "O=O (O3)", "C-C (aromatic ring)"}) {
     const Result<BondType> type = parse_bond_type(text);
     ASSERT_TRUE(type.ok()) << text;
     EXPECT_EQ(spelling(*type), text);
@@ -86,7 +89,8 @@ TEST(Bonds, RingBondsAreMarkedOnlyOnRequest) {
   EXPECT_EQ(tally_of("Cc1ccncc1"), "C-H 7, C-C 3, C=C 2, C-N 1, C=N 1, ");
   const BondTally marked = count_bonds_with_rings(read("Cc1ccncc1"));
   EXPECT_EQ(words(marked),
-            "C-H 7, C-C 1, C-C (aromatic ring) 2, C=C (aromatic ring) 2, C-N (aromatic ring) 1, C=N (aromatic ring) 1, ");
+            "C-H 7, C-C 1, C-C (aromatic ring) 2, C=C (aromatic ring) 2, C-N (aromatic ring) 1, C=N "
+            "(aromatic ring) 1, ");
   EXPECT_EQ(words(plain_tally(marked)), tally_of("Cc1ccncc1"));
 }
 

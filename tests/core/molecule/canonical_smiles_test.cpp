@@ -58,8 +58,9 @@ TEST(CanonicalSmiles, ReadsBackToItself) {
     const Graph again = read(text);
     EXPECT_EQ(canonical_smiles(again), text) << row[0];
     const BondTally before = count_bonds(graph), after = count_bonds(again);
-    EXPECT_TRUE(std::equal(before.begin(), before.end(), after.begin(), after.end(),
-                           [](const BondCount& a, const BondCount& b) { return a.type == b.type && a.count == b.count; }))
+    EXPECT_TRUE(std::equal(
+        before.begin(), before.end(), after.begin(), after.end(),
+        [](const BondCount& a, const BondCount& b) { return a.type == b.type && a.count == b.count; }))
         << row[0];
   }
 }
@@ -98,9 +99,11 @@ TEST(CanonicalSmiles, KeepsIsotopesAndChargesLeavesStereoOut) {
   EXPECT_EQ(canonical_smiles(read("OCC")), "CCO");
 }
 
-// Found by tests/fuzz/smiles_fuzz: texts that no chemist writes, whose canonical text was not its own canonical text.
+// Found by tests/fuzz/smiles_fuzz: texts that no chemist writes, whose canonical text was not its own
+// canonical text.
 TEST(CanonicalSmiles, StaysItselfForAtomsFarAboveTheirOctet) {
-  for (const char* text : {"O#O#oO", "O$F=C", "[O------------][n+]1ccccc1", "n#1cc1", "CC[O-][n]1=c=ccbc\\C=1I"}) {
+  for (const char* text :
+       {"O#O#oO", "O$F=C", "[O------------][n+]1ccccc1", "n#1cc1", "CC[O-][n]1=c=ccbc\\C=1I"}) {
     const std::string once = canonical_smiles(read(text));
     EXPECT_EQ(canonical_smiles(read(once)), once) << text;
   }

@@ -10,7 +10,8 @@ TEST(Elements, EverySymbolReadsBackToItsNumber) {
 }
 
 TEST(Elements, RefusesWhatIsNoSymbol) {
-  for (const char* text : {"", "X", "cl", "CL", "Cll", "D", "A1", "é"}) EXPECT_FALSE(atomic_number(text)) << text;
+  for (const char* text : {"", "X", "cl", "CL", "Cll", "D", "A1", "é"})
+    EXPECT_FALSE(atomic_number(text)) << text;
 }
 
 TEST(Elements, MassesAreTheAbridgedStandardOnes) {

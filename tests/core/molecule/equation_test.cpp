@@ -22,24 +22,28 @@ std::string shown(std::string_view text) {
   std::string result;
   for (const Term& term : equation->reactants) result += (result.empty() ? "" : " + ") + shown(term);
   result += equation->reversible ? " <=> " : " -> ";
-  for (std::size_t i = 0; i < equation->products.size(); ++i) result += (i > 0 ? " + " : "") + shown(equation->products[i]);
+  for (std::size_t i = 0; i < equation->products.size(); ++i)
+    result += (i > 0 ? " + " : "") + shown(equation->products[i]);
   return result;
 }
 
 TEST(Equation, ReadsNamesFormulasAndSmiles) {
-  EXPECT_EQ(shown("nitrobenzene(l) + 3 H2 -> aniline(l) + 2 H2O(l)"), "1 nitrobenzene(l) + 3 H2 -> 1 aniline(l) + 2 H2O(l)");
+  EXPECT_EQ(shown("nitrobenzene(l) + 3 H2 -> aniline(l) + 2 H2O(l)"),
+            "1 nitrobenzene(l) + 3 H2 -> 1 aniline(l) + 2 H2O(l)");
   EXPECT_EQ(shown("\"CC(=O)O\"(l) + \"CCO\" (l) -> \"CCOC(C)=O\"(l) + water(l)"),
             "1 'CC(=O)O'(l) + 1 'CCO'(l) -> 1 'CCOC(C)=O'(l) + 1 water(l)");
   EXPECT_EQ(shown("\u201CCCO\u201D + O2 -> CH3CHO + H2O"), "1 'CCO' + 1 O2 -> 1 CH3CHO + 1 H2O");
   EXPECT_EQ(shown("C=C + [H][H] -> CC"), "1 C=C + 1 [H][H] -> 1 CC");
-  EXPECT_EQ(shown("ethyl acetate (l) + water -> ethanol + acetic acid"), "1 ethyl acetate(l) + 1 water -> 1 ethanol + 1 acetic acid");
+  EXPECT_EQ(shown("ethyl acetate (l) + water -> ethanol + acetic acid"),
+            "1 ethyl acetate(l) + 1 water -> 1 ethanol + 1 acetic acid");
 }
 
 TEST(Equation, ReadsEveryArrow) {
   for (const char* arrow : {"->", "-->", "--->", "=>", "==>", "=", "\u2192", "\u27F6", "\u2212>"}) {
     EXPECT_EQ(shown(std::string("A ") + arrow + " B"), "1 A -> 1 B") << arrow;
   }
-  for (const char* arrow : {"<=>", "\u21CC", "\u21C4"}) EXPECT_EQ(shown(std::string("A ") + arrow + " B"), "1 A <=> 1 B") << arrow;
+  for (const char* arrow : {"<=>", "\u21CC", "\u21C4"})
+    EXPECT_EQ(shown(std::string("A ") + arrow + " B"), "1 A <=> 1 B") << arrow;
   for (const char* text : {"A->B", "A\u2192B", "A=>B"}) EXPECT_EQ(shown(text), "1 A -> 1 B") << text;
   EXPECT_EQ(shown("A<=>B"), "1 A <=> 1 B");
 }
@@ -83,8 +87,10 @@ TEST(Equation, TellsChargesFromSeparators) {
 }
 
 TEST(Equation, ReadsPhasesAndStrengths) {
-  EXPECT_EQ(shown("A(gas) + B (liq) -> C(solid) + D ( aq ) + E(diss)"), "1 A(g) + 1 B(l) -> 1 C(s) + 1 D(aq) + 1 E(diss)");
-  EXPECT_EQ(shown("iron(III) oxide(s) + benzo(a)pyrene -> Ni(CO)4(g)"), "1 iron(III) oxide(s) + 1 benzo(a)pyrene -> 1 Ni(CO)4(g)");
+  EXPECT_EQ(shown("A(gas) + B (liq) -> C(solid) + D ( aq ) + E(diss)"),
+            "1 A(g) + 1 B(l) -> 1 C(s) + 1 D(aq) + 1 E(diss)");
+  EXPECT_EQ(shown("iron(III) oxide(s) + benzo(a)pyrene -> Ni(CO)4(g)"),
+            "1 iron(III) oxide(s) + 1 benzo(a)pyrene -> 1 Ni(CO)4(g)");
   const Result<EquationText> equation =
       parse_equation("H2SO4(aq, 96 wt%) + NaOH(aq, r=5) + KOH(aq, 2 mol/kg) + HCl(aq) -> X(aq, 20wt%)");
   ASSERT_TRUE(equation.ok()) << equation.error().message;
@@ -133,8 +139,9 @@ TEST(Equation, ReadsLongTextInLinearTime) {
   std::string many = "A";
   for (int i = 0; i < 100000; ++i) many += " + 2 B(g)";
   EXPECT_EQ(parse_equation(many + " -> C")->reactants.size(), 100001u);
-  for (const std::string& piece : {std::string("+"), std::string("("), std::string("+("), std::string("- "), std::string("-"),
-                                   std::string("= "), std::string("+1"), std::string("\""), std::string("+ "), std::string("x+(")}) {
+  for (const std::string& piece :
+       {std::string("+"), std::string("("), std::string("+("), std::string("- "), std::string("-"),
+        std::string("= "), std::string("+1"), std::string("\""), std::string("+ "), std::string("x+(")}) {
     std::string text;
     while (text.size() < 300000) text += piece;
     EXPECT_FALSE(parse_equation(text).ok()) << piece;

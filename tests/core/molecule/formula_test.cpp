@@ -14,7 +14,9 @@ Composition read(std::string_view text) {
   return result.ok() ? *result : Composition{};
 }
 
-std::string hill(std::string_view text) { return hill_formula(read(text)); }
+std::string hill(std::string_view text) {
+  return hill_formula(read(text));
+}
 
 TEST(Formula, ReadsPlainAndNestedFormulas) {
   EXPECT_EQ(hill("H2O"), "H2O");
@@ -34,12 +36,14 @@ TEST(Formula, ReadsPlainAndNestedFormulas) {
 }
 
 TEST(Formula, ReadsHydratesWithEveryDotAndNumber) {
-  for (const char* text : {"CuSO4\u00B75H2O", "CuSO4*5H2O", "CuSO4.5H2O", "CuSO4 \u00B7 5 H2O", "CuSO4\u20225H\u2082O"}) {
+  for (const char* text :
+       {"CuSO4\u00B75H2O", "CuSO4*5H2O", "CuSO4.5H2O", "CuSO4 \u00B7 5 H2O", "CuSO4\u20225H\u2082O"}) {
     EXPECT_EQ(hill(text), "CuH10O9S") << text;
   }
   const Composition half = read("CaSO4\u00B70.5H2O");
   EXPECT_EQ(half.atoms.at(8), 4.5);
-  for (const char* text : {"CaSO4.0.5H2O", "CaSO4*1/2H2O", "CaSO4\u00B7\u00BDH2O"}) EXPECT_TRUE(read(text) == half) << text;
+  for (const char* text : {"CaSO4.0.5H2O", "CaSO4*1/2H2O", "CaSO4\u00B7\u00BDH2O"})
+    EXPECT_TRUE(read(text) == half) << text;
   EXPECT_EQ(hill("MgCl2\u00B7KCl\u00B76H2O"), "Cl3H12KMgO6");
   EXPECT_EQ(read("Fe0.95O").atoms.at(26), 0.95);
 }
@@ -49,14 +53,35 @@ TEST(Formula, ReadsEverySpellingOfACharge) {
     const char* text;
     const char* hill;
   };
-  for (const Case& c : {Case{"NH4+", "H4N^+"}, Case{"SO4^2-", "O4S^2-"}, Case{"SO4^-2", "O4S^2-"}, Case{"SO4-2", "O4S^2-"},
-                        Case{"SO4 2-", "O4S^2-"}, Case{"SO42-", "O4S^2-"}, Case{"SO\u2084\u00B2\u207B", "O4S^2-"},
-                        Case{"SO4--", "O4S^2-"}, Case{"SO4^{2-}", "O4S^2-"}, Case{"PO43-", "O4P^3-"}, Case{"Cr2O72-", "Cr2O7^2-"},
-                        Case{"NO3-", "NO3^-"}, Case{"NO3\u2212", "NO3^-"}, Case{"Fe3+", "Fe^3+"}, Case{"Fe+3", "Fe^3+"},
-                        Case{"Fe+++", "Fe^3+"}, Case{"Na+", "Na^+"}, Case{"Hg2+2", "Hg2^2+"}, Case{"Hg2^2+", "Hg2^2+"},
-                        Case{"[Fe(CN)6]3-", "C6FeN6^3-"}, Case{"[Cu(NH3)4]2+", "CuH12N4^2+"}, Case{"I3^-", "I3^-"},
-                        Case{"S^2-", "S^2-"}, Case{"OH-", "HO^-"}, Case{"HCO3-", "CHO3^-"}, Case{"Fe(CN)6-3", "C6FeN6^3-"},
-                        Case{"Th(OH)2+2", "H2O2Th^2+"}, Case{"C10H16+", "C10H16^+"}, Case{"Fe\u00B3\u207A", "Fe^3+"}}) {
+  for (const Case& c : {Case{"NH4+", "H4N^+"},
+                        Case{"SO4^2-", "O4S^2-"},
+                        Case{"SO4^-2", "O4S^2-"},
+                        Case{"SO4-2", "O4S^2-"},
+                        Case{"SO4 2-", "O4S^2-"},
+                        Case{"SO42-", "O4S^2-"},
+                        Case{"SO\u2084\u00B2\u207B", "O4S^2-"},
+                        Case{"SO4--", "O4S^2-"},
+                        Case{"SO4^{2-}", "O4S^2-"},
+                        Case{"PO43-", "O4P^3-"},
+                        Case{"Cr2O72-", "Cr2O7^2-"},
+                        Case{"NO3-", "NO3^-"},
+                        Case{"NO3\u2212", "NO3^-"},
+                        Case{"Fe3+", "Fe^3+"},
+                        Case{"Fe+3", "Fe^3+"},
+                        Case{"Fe+++", "Fe^3+"},
+                        Case{"Na+", "Na^+"},
+                        Case{"Hg2+2", "Hg2^2+"},
+                        Case{"Hg2^2+", "Hg2^2+"},
+                        Case{"[Fe(CN)6]3-", "C6FeN6^3-"},
+                        Case{"[Cu(NH3)4]2+", "CuH12N4^2+"},
+                        Case{"I3^-", "I3^-"},
+                        Case{"S^2-", "S^2-"},
+                        Case{"OH-", "HO^-"},
+                        Case{"HCO3-", "CHO3^-"},
+                        Case{"Fe(CN)6-3", "C6FeN6^3-"},
+                        Case{"Th(OH)2+2", "H2O2Th^2+"},
+                        Case{"C10H16+", "C10H16^+"},
+                        Case{"Fe\u00B3\u207A", "Fe^3+"}}) {
     EXPECT_EQ(hill(c.text), c.hill) << c.text;
   }
 }
@@ -82,7 +107,8 @@ TEST(Formula, KeepsIsotopesApart) {
 }
 
 TEST(Formula, WeighsMolecules) {
-  // Sums of CIAAW 2021 abridged standard atomic weights: H 1.008, C 12.011, N 14.007, O 15.999, S 32.06, Cu 63.546.
+  // Sums of CIAAW 2021 abridged standard atomic weights: H 1.008, C 12.011, N 14.007, O 15.999, S 32.06,
+  // Cu 63.546.
   EXPECT_NEAR(molar_mass(read("H2O")), 18.015, 1e-9);
   EXPECT_NEAR(molar_mass(read("C6H5NO2")), 6 * 12.011 + 5 * 1.008 + 14.007 + 2 * 15.999, 1e-9);
   EXPECT_NEAR(molar_mass(read("CuSO4\u00B75H2O")), 63.546 + 32.06 + 9 * 15.999 + 10 * 1.008, 1e-9);
@@ -95,13 +121,15 @@ TEST(Formula, DisplaysLoweredDigitsAndRaisedCharges) {
 }
 
 TEST(Formula, HillTextReadsBackToTheSameComposition) {
-  for (const char* text : {"CaSO4\u00B70.5H2O", "Fe0.95O", "NaB(C6H5)4", "[13C]2H6", "PO4^3-", "I3^-", "H2^+", "UO2^2+", "T2O", "CuSO4.5H2O"}) {
+  for (const char* text : {"CaSO4\u00B70.5H2O", "Fe0.95O", "NaB(C6H5)4", "[13C]2H6", "PO4^3-", "I3^-", "H2^+",
+                           "UO2^2+", "T2O", "CuSO4.5H2O"}) {
     const Composition first = read(text);
     const Composition again = read(hill_formula(first));
     EXPECT_EQ(first.charge, again.charge) << text;
     ASSERT_EQ(first.atoms.size(), again.atoms.size()) << text;
     // A fraction such as 0.95 comes back as 19/20: equal up to the last bit or two.
-    for (const auto& [key, count] : first.atoms) EXPECT_NEAR(again.atoms.at(key), count, 1e-12 * count) << text;
+    for (const auto& [key, count] : first.atoms)
+      EXPECT_NEAR(again.atoms.at(key), count, 1e-12 * count) << text;
   }
 }
 

@@ -12,7 +12,8 @@ namespace {
 
 std::string bonds_text(const Graph& graph) {
   std::string text;
-  for (const BondCount& bond : count_bonds(graph)) text += std::to_string(bond.count) + " " + spelling(bond.type) + ", ";
+  for (const BondCount& bond : count_bonds(graph))
+    text += std::to_string(bond.count) + " " + spelling(bond.type) + ", ";
   return text;
 }
 

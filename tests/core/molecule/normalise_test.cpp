@@ -59,7 +59,8 @@ TEST(Normalise, AromaticBondsKeepTheirOrder) {
   perceive_aromaticity(*graph);
   const Graph before = *graph;
   neutralise_charges(*graph);
-  for (std::size_t i = 0; i < graph->bonds.size(); ++i) EXPECT_EQ(graph->bonds[i].order, before.bonds[i].order);
+  for (std::size_t i = 0; i < graph->bonds.size(); ++i)
+    EXPECT_EQ(graph->bonds[i].order, before.bonds[i].order);
   for (const Atom& atom : graph->atoms) EXPECT_EQ(atom.charge, 0);
 }
 
@@ -77,7 +78,7 @@ TEST(Normalise, OctetSpellingIsOneForAllAndStable) {
   EXPECT_EQ(octet("[N-]=[N+]=O"), octet("N#N=O"));
   EXPECT_EQ(octet("[C-]#[O+]"), "C-1 O+1 01:3 ");
   EXPECT_EQ(octet("C[N+](C)(C)[BH3-]"), "C N+1 C C B-1 01:1 12:1 13:1 14:1 ");  // no octet to give back
-  EXPECT_EQ(octet("C#[N+]C"), "C N+1 C 01:3 12:1 ");  // a cation stays one
+  EXPECT_EQ(octet("C#[N+]C"), "C N+1 C 01:3 12:1 ");                            // a cation stays one
   EXPECT_EQ(octet("CS(=O)(=O)C"), "C S O O C 01:1 12:2 13:2 14:1 ");
 }
 

@@ -32,16 +32,17 @@ TEST(Rings, PolyhedraAndSkeletonsHaveTheRingsOfTheirGeometry) {
   EXPECT_EQ(sizes("CCCC"), "");
   EXPECT_EQ(sizes("C1CC1"), "3 ");
   EXPECT_EQ(sizes("C1CCCCC1.C1CC1"), "3 6 ");
-  EXPECT_EQ(sizes("C1CCC2(C1)CCCCC2"), "5 6 ");                       // spiro
-  EXPECT_EQ(sizes("c1ccc2ccccc2c1"), "6 6 ");                         // fused: the rim of ten is their sum
-  EXPECT_EQ(sizes("C1CC2CCC1C2"), "5 5 ");                            // norbornane: the six-ring is their sum
-  EXPECT_EQ(sizes("C1CC2CCC1CC2"), "6 6 6 ");                         // bicyclo[2.2.2]octane: any two make the third
-  EXPECT_EQ(sizes("C1C2CC3CC1CC(C2)C3"), "6 6 6 6 ");                 // adamantane
-  EXPECT_EQ(sizes("C12C3C4C1C5C2C3C45"), "4 4 4 4 4 4 ");             // cubane: six faces
-  EXPECT_EQ(sizes("C12C3C1C1C4C2C4C31"), "3 3 4 4 5 5 ");             // cuneane: six faces
-  EXPECT_EQ(sizes("C12C3C1C23"), "3 3 3 3 ");                         // tetrahedrane: four faces
-  EXPECT_EQ(sizes("C12C3C4C5C1C6C7C2C8C3C9C4C1C5C6C2C7C8C9C12"), "5 5 5 5 5 5 5 5 5 5 5 5 ");  // dodecahedrane
-  EXPECT_EQ(sizes("C1Cc2ccc(cc2)CCc2ccc1cc2"), "6 6 12 12 12 12 ");   // either way round each benzene ring
+  EXPECT_EQ(sizes("C1CCC2(C1)CCCCC2"), "5 6 ");            // spiro
+  EXPECT_EQ(sizes("c1ccc2ccccc2c1"), "6 6 ");              // fused: the rim of ten is their sum
+  EXPECT_EQ(sizes("C1CC2CCC1C2"), "5 5 ");                 // norbornane: the six-ring is their sum
+  EXPECT_EQ(sizes("C1CC2CCC1CC2"), "6 6 6 ");              // bicyclo[2.2.2]octane: any two make the third
+  EXPECT_EQ(sizes("C1C2CC3CC1CC(C2)C3"), "6 6 6 6 ");      // adamantane
+  EXPECT_EQ(sizes("C12C3C4C1C5C2C3C45"), "4 4 4 4 4 4 ");  // cubane: six faces
+  EXPECT_EQ(sizes("C12C3C1C1C4C2C4C31"), "3 3 4 4 5 5 ");  // cuneane: six faces
+  EXPECT_EQ(sizes("C12C3C1C23"), "3 3 3 3 ");              // tetrahedrane: four faces
+  EXPECT_EQ(sizes("C12C3C4C5C1C6C7C2C8C3C9C4C1C5C6C2C7C8C9C12"),
+            "5 5 5 5 5 5 5 5 5 5 5 5 ");                             // dodecahedrane
+  EXPECT_EQ(sizes("C1Cc2ccc(cc2)CCc2ccc1cc2"), "6 6 12 12 12 12 ");  // either way round each benzene ring
 }
 
 TEST(Rings, BuckminsterfullereneHasTwelveFivesAndTwentySixes) {
@@ -57,8 +58,8 @@ TEST(Rings, BuckminsterfullereneHasTwelveFivesAndTwentySixes) {
   FAIL() << "the structure is missing from the table";
 }
 
-// Identities for every molecule: each ring is a cycle of bonds, listed once; there are at least bonds - atoms +
-// fragments of them, and together they cover exactly the bonds that are no bridges.
+// Identities for every molecule: each ring is a cycle of bonds, listed once; there are at least bonds - atoms
+// + fragments of them, and together they cover exactly the bonds that are no bridges.
 TEST(Rings, IdentitiesHoldForEveryMolecule) {
   const test::Table table = test::read_table("tests/data/smiles/molecules.tsv");
   for (const std::vector<std::string>& row : table.rows) {
@@ -80,7 +81,8 @@ TEST(Rings, IdentitiesHoldForEveryMolecule) {
       }
     }
     EXPECT_TRUE(std::adjacent_find(rings.begin(), rings.end()) == rings.end()) << row[0];
-    EXPECT_EQ(covered.size(), static_cast<std::size_t>(std::count(in_ring.begin(), in_ring.end(), 1))) << row[0];
+    EXPECT_EQ(covered.size(), static_cast<std::size_t>(std::count(in_ring.begin(), in_ring.end(), 1)))
+        << row[0];
     std::vector<std::uint32_t> piece(graph.atoms.size());
     std::iota(piece.begin(), piece.end(), 0u);
     std::size_t fragments = piece.size();

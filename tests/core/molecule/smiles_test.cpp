@@ -13,7 +13,8 @@ namespace {
 
 Graph read(const std::string& text) {
   Result<Graph> graph = parse_smiles(text);
-  EXPECT_TRUE(graph.ok()) << text << ": " << (graph.ok() ? "" : graph.error().code + " " + graph.error().where);
+  EXPECT_TRUE(graph.ok()) << text << ": "
+                          << (graph.ok() ? "" : graph.error().code + " " + graph.error().where);
   return graph.ok() ? *graph : Graph{};
 }
 
@@ -55,14 +56,15 @@ TEST(Smiles, EveryPublishedFormulaIsMet) {
   ASSERT_GE(table.rows.size(), 2000u);
   for (const std::vector<std::string>& row : table.rows) {
     Graph graph = read(row[table.column("smiles")]);
-    // D2O and its like state deuterium; the other formulas name natural elements only, whatever isotopes are written.
+    // D2O and its like state deuterium; the other formulas name natural elements only, whatever isotopes are
+    // written.
     const std::string& text = row[table.column("formula")];
     const Result<Composition> formula = parse_formula(text);
     ASSERT_TRUE(formula.ok()) << row[0] << " " << text;
     const bool states_isotopes = formula->atoms.upper_bound(999) != formula->atoms.end();
     for (Atom& atom : graph.atoms) atom.isotope = states_isotopes ? atom.isotope : 0;
-    EXPECT_TRUE(composition(graph) == *formula)
-        << row[0] << " " << row[table.column("smiles")] << ": " << hill_formula(composition(graph)) << ", not " << text;
+    EXPECT_TRUE(composition(graph) == *formula) << row[0] << " " << row[table.column("smiles")] << ": "
+                                                << hill_formula(composition(graph)) << ", not " << text;
   }
 }
 
@@ -75,14 +77,14 @@ TEST(Smiles, FillsHydrogensByTheValenceTable) {
   EXPECT_EQ(hydrogens("P"), 3);
   EXPECT_EQ(hydrogens("S"), 2);
   EXPECT_EQ(hydrogens("F") + hydrogens("Cl") + hydrogens("Br") + hydrogens("I"), 4);
-  EXPECT_EQ(hydrogens("FN(F)(F)F"), 1);         // five
-  EXPECT_EQ(hydrogens("FP(F)(F)F"), 1);         // five
-  EXPECT_EQ(hydrogens("FS(F)F"), 1);            // four
-  EXPECT_EQ(hydrogens("FS(F)(F)(F)F"), 1);      // six
+  EXPECT_EQ(hydrogens("FN(F)(F)F"), 1);     // five
+  EXPECT_EQ(hydrogens("FP(F)(F)F"), 1);     // five
+  EXPECT_EQ(hydrogens("FS(F)F"), 1);        // four
+  EXPECT_EQ(hydrogens("FS(F)(F)(F)F"), 1);  // six
   EXPECT_EQ(hydrogens("FS(F)(F)(F)(F)(F)F"), 0);
-  EXPECT_EQ(hydrogens("FC(F)(F)(F)F"), 0);      // above every valence: none
+  EXPECT_EQ(hydrogens("FC(F)(F)(F)F"), 0);  // above every valence: none
   EXPECT_EQ(hydrogens("*C"), 3);
-  EXPECT_EQ(hydrogens("[C]"), 0);               // brackets state their hydrogens
+  EXPECT_EQ(hydrogens("[C]"), 0);  // brackets state their hydrogens
 }
 
 // Molecules that the standard itself shows (OpenSMILES 1.0, sections 3.1 to 3.9).

@@ -27,7 +27,8 @@ using Counts = std::map<int, double>;
 
 /// A formula text with nested brackets, and what it holds, counted while it is written.
 std::pair<std::string, Counts> random_formula(int depth) {
-  const std::array<std::pair<const char*, int>, 8> elements = {{{"C", 6}, {"H", 1}, {"N", 7}, {"O", 8}, {"Cl", 17}, {"Co", 27}, {"S", 16}, {"D", 2001}}};
+  const std::array<std::pair<const char*, int>, 8> elements = {
+      {{"C", 6}, {"H", 1}, {"N", 7}, {"O", 8}, {"Cl", 17}, {"Co", 27}, {"S", 16}, {"D", 2001}}};
   std::pair<std::string, Counts> result;
   const int parts = *rc::gen::inRange(1, 5);
   for (int i = 0; i < parts; ++i) {
@@ -76,9 +77,12 @@ std::pair<std::string, std::string> random_branch(int depth) {
   }
   const auto [first, first_smiles] = random_branch(depth - 1);
   switch (*rc::gen::inRange(0, 5)) {
-    case 0: return {"CH2" + first, "C" + first_smiles};
-    case 1: return {"COCH2" + first, "C(=O)C" + first_smiles};
-    case 2: return {"OCH2" + first, "OC" + first_smiles};
+    case 0:
+      return {"CH2" + first, "C" + first_smiles};
+    case 1:
+      return {"COCH2" + first, "C(=O)C" + first_smiles};
+    case 2:
+      return {"OCH2" + first, "OC" + first_smiles};
     case 3: {
       const auto [second, second_smiles] = random_branch(depth - 1);
       return {"CH(" + first + ")CH2" + second, "C(" + first_smiles + ")C" + second_smiles};
@@ -106,9 +110,12 @@ RC_GTEST_PROP(LineFormulaProperties, ReadsTheSameMoleculeAsSmiles, ()) {
 
 RC_GTEST_PROP(EquationProperties, ReadsBackWhatItWrote, ()) {
   const auto term = [] {
-    const auto species = rc::gen::element<std::string>("H2", "2-propanol", "Na+", "SO4^2-", "\"CC(=O)O\"", "1,4-dioxane", "ethyl acetate", "iron(III) oxide", "C=C", "Fe+3", "(+)-limonene");
+    const auto species =
+        rc::gen::element<std::string>("H2", "2-propanol", "Na+", "SO4^2-", "\"CC(=O)O\"", "1,4-dioxane",
+                                      "ethyl acetate", "iron(III) oxide", "C=C", "Fe+3", "(+)-limonene");
     const auto number = rc::gen::element<std::string>("", "2 ", "1/2 ", "0.5 ", "1 1/2 ", "\u00BD ", "12 ");
-    const auto phase = rc::gen::element<std::string>("", "(g)", "(l)", " (s)", "(aq)", "(aq, 20 wt%)", "(diss)");
+    const auto phase =
+        rc::gen::element<std::string>("", "(g)", "(l)", " (s)", "(aq)", "(aq, 20 wt%)", "(diss)");
     return std::make_pair(*species, std::make_pair(*number, *phase));
   };
   std::vector<std::string> species;
@@ -126,7 +133,8 @@ RC_GTEST_PROP(EquationProperties, ReadsBackWhatItWrote, ()) {
   RC_ASSERT(read->reactants.size() == static_cast<std::size_t>(left));
   RC_ASSERT(read->products.size() == static_cast<std::size_t>(right));
   for (int i = 0; i < left + right; ++i) {
-    const Term& one = i < left ? read->reactants[static_cast<std::size_t>(i)] : read->products[static_cast<std::size_t>(i - left)];
+    const Term& one = i < left ? read->reactants[static_cast<std::size_t>(i)]
+                               : read->products[static_cast<std::size_t>(i - left)];
     RC_ASSERT(one.species == species[static_cast<std::size_t>(i)]);
   }
 }
@@ -178,7 +186,8 @@ RC_GTEST_PROP(BalanceProperties, FindsWaysThatBalanceAndMissesNone, ()) {
     for (std::size_t i = 0; i < way.size(); ++i) {
       RC_ASSERT(way[i] >= 0);
       divisor = std::gcd(divisor, way[i]);
-      (i < left.size() ? a : b).emplace_back(static_cast<double>(way[i]), i < left.size() ? left[i] : right[i - left.size()]);
+      (i < left.size() ? a : b)
+          .emplace_back(static_cast<double>(way[i]), i < left.size() ? left[i] : right[i - left.size()]);
     }
     RC_ASSERT(divisor == 1);
     RC_ASSERT(check_balance(a, b).balanced);

@@ -1,6 +1,6 @@
-// Every worksheet in worksheets/ prints the same text natively and in WebAssembly: this suite is compiled to both.
-// The texts in tests/data/worksheets were written by print_examples.cpp on the native build and read line by line
-// by a person; they pin the whole chain from file to print.
+// Every worksheet in worksheets/ prints the same text natively and in WebAssembly: this suite is compiled to
+// both. The texts in tests/data/worksheets were written by print_examples.cpp on the native build and read
+// line by line by a person; they pin the whole chain from file to print.
 #include <gtest/gtest.h>
 
 #include "core/page/writers.hpp"
@@ -14,7 +14,8 @@ std::vector<std::string> example_names() {
   const std::string ending = ".heatledger.json";
   std::vector<std::string> names;
   for (const std::string& name : heatledger::test::list_source_folder("worksheets")) {
-    if (name.size() > ending.size() && name.compare(name.size() - ending.size(), ending.size(), ending) == 0) {
+    if (name.size() > ending.size() &&
+        name.compare(name.size() - ending.size(), ending.size(), ending) == 0) {
       names.push_back(name.substr(0, name.size() - ending.size()));
     }
   }
@@ -24,14 +25,16 @@ std::vector<std::string> example_names() {
 class Example : public ::testing::TestWithParam<std::string> {
  protected:
   void SetUp() override {
-    const Status status = session_.open(heatledger::test::read_source_file("worksheets/" + GetParam() + ".heatledger.json"));
+    const Status status =
+        session_.open(heatledger::test::read_source_file("worksheets/" + GetParam() + ".heatledger.json"));
     ASSERT_TRUE(status.ok()) << status.error().message;
   }
   Session session_;
 };
 
 TEST_P(Example, PrintsItsText) {
-  const std::string expected = heatledger::test::read_source_file("tests/data/worksheets/" + GetParam() + ".txt");
+  const std::string expected =
+      heatledger::test::read_source_file("tests/data/worksheets/" + GetParam() + ".txt");
   EXPECT_EQ(write_text(session_.page(), 100), expected);
 }
 
@@ -56,7 +59,8 @@ TEST_P(Example, EveryReactionIsBalancedAndHasAFigure) {
 }
 
 TEST_P(Example, SavesToTheSameBytes) {
-  const std::string text = heatledger::test::read_source_file("worksheets/" + GetParam() + ".heatledger.json");
+  const std::string text =
+      heatledger::test::read_source_file("worksheets/" + GetParam() + ".heatledger.json");
   EXPECT_EQ(session_.save(), text);
 }
 

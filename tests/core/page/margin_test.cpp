@@ -37,7 +37,8 @@ TEST(Margin, EveryFigureShowsItsWorking) {
 TEST(Margin, ABondLinePutsItsFiguresIn) {
   Session session;
   ASSERT_TRUE(session.edit("r1.equation", "CH4(g) + 2 O2(g) -> CO2(g) + 2 H2O(g)").ok());
-  ASSERT_TRUE(session.command("add_bond", {{"bond", "C-H"}, {"value", "410"}, {"source", "notebook 3"}}).ok());
+  ASSERT_TRUE(
+      session.command("add_bond", {{"bond", "C-H"}, {"value", "410"}, {"source", "notebook 3"}}).ok());
   ASSERT_TRUE(session.edit("r1.row.0", "open").ok());
   const Result<Margin> margin = session.margin("r1.row.0.line.0.total");
   ASSERT_TRUE(margin.ok());

@@ -70,7 +70,8 @@ class Mirror {
       for (const file::Json& id : order->items()) order_.push_back(id.text());
     } else if (read->find("since") == nullptr) {
       order_.clear();
-      for (const file::Json& block : read->find("blocks")->items()) order_.push_back(block.string_or("id", ""));
+      for (const file::Json& block : read->find("blocks")->items())
+        order_.push_back(block.string_or("id", ""));
     }
   }
   std::vector<std::string> blocks() const {
@@ -90,10 +91,12 @@ TEST(PageChanges, AFaceThatAppliesThemSeesTheWholePage) {
   mirror.take(write_json(session.page()));
   std::uint64_t seen = session.page().revision;
   const std::vector<std::pair<std::string, std::string>> edits{
-      {"header.title", "T"},          {"r1.row.0", "open"},         {"r1.row.1.times", "two"},
-      {"r1.row.1.times", "1"},        {"bond.0.bond", "C-H"},       {"bond.0.value", "410"},
-      {"r2.show", "enthalpy profile"}, {"r2.move_up", ""},          {"assumption.0", "Dry."},
-      {"r1.equation", "C3H8 + O2 -> CO2 + H2O"}, {"r1.proposal.0", ""}, {"r2.remove", ""}};
+      {"header.title", "T"},           {"r1.row.0", "open"},
+      {"r1.row.1.times", "two"},       {"r1.row.1.times", "1"},
+      {"bond.0.bond", "C-H"},          {"bond.0.value", "410"},
+      {"r2.show", "enthalpy profile"}, {"r2.move_up", ""},
+      {"assumption.0", "Dry."},        {"r1.equation", "C3H8 + O2 -> CO2 + H2O"},
+      {"r1.proposal.0", ""},           {"r2.remove", ""}};
   for (const auto& edit : edits) {
     ASSERT_TRUE(session.edit(edit.first, edit.second).ok()) << edit.first;
     const Page& page = session.page();

@@ -1,5 +1,6 @@
-// Prints every example worksheet anew into tests/data/worksheets and saves its figures, after a change of data or of the
-// program that is meant to change them. Run from the repository root; read the difference before it is committed.
+// Prints every example worksheet anew into tests/data/worksheets and saves its figures, after a change of
+// data or of the program that is meant to change them. Run from the repository root; read the difference
+// before it is committed.
 #include <cstdio>
 #include <filesystem>
 #include <fstream>

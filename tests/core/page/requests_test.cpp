@@ -14,7 +14,9 @@ file::Json ask(const std::string& request) {
   return answer.ok() ? *answer : file::Json();
 }
 
-bool is_ok(const file::Json& answer) { return answer.find("ok") != nullptr && answer.find("ok")->is_true(); }
+bool is_ok(const file::Json& answer) {
+  return answer.find("ok") != nullptr && answer.find("ok")->is_true();
+}
 
 std::string code_of(const file::Json& answer) {
   const file::Json* error = answer.find("error");
@@ -68,13 +70,15 @@ TEST_F(Requests, SaveAndOpenGiveTheSameSheet) {
   ASSERT_TRUE(is_ok(opened));
   const std::string other = opened.find("value")->find("sheet")->text();
   EXPECT_NE(other, number_);
-  EXPECT_EQ(ask("{\"do\":\"save\",\"sheet\":" + other + "}").find("value")->text(), saved.find("value")->text());
+  EXPECT_EQ(ask("{\"do\":\"save\",\"sheet\":" + other + "}").find("value")->text(),
+            saved.find("value")->text());
   EXPECT_TRUE(is_ok(ask("{\"do\":\"close\",\"sheet\":" + other + "}")));
   EXPECT_EQ(code_of(ask("{\"do\":\"page\",\"sheet\":" + other + "}")), "request.no_such_sheet");
 }
 
 TEST_F(Requests, CommandsTakeArguments) {
-  EXPECT_TRUE(is_ok(about("command", R"("name":"add_reaction","arguments":{"equation":"H2 + Cl2 -> 2 HCl"})")));
+  EXPECT_TRUE(
+      is_ok(about("command", R"("name":"add_reaction","arguments":{"equation":"H2 + Cl2 -> 2 HCl"})")));
   EXPECT_TRUE(is_ok(about("command", R"("name":"undo")")));
   EXPECT_EQ(code_of(about("command", R"("name":"undo")")), "command.nothing_to_undo");
 }
@@ -123,7 +127,8 @@ TEST_F(Requests, BadOnesGetTheOneErrorShape) {
       {"{\"do\":\"edit\",\"sheet\":" + number_ + "}", "request.not_understood"},
       {"{\"do\":\"edit\",\"sheet\":" + number_ + ",\"cell\":\"r1.equation\"}", "request.not_understood"},
       {"{\"do\":\"edit\",\"sheet\":" + number_ + ",\"cell\":[],\"text\":\"\"}", "request.not_understood"},
-      {"{\"do\":\"command\",\"sheet\":" + number_ + ",\"name\":\"undo\",\"arguments\":3}", "request.not_understood"},
+      {"{\"do\":\"command\",\"sheet\":" + number_ + ",\"name\":\"undo\",\"arguments\":3}",
+       "request.not_understood"},
       {"{\"do\":\"command\",\"sheet\":" + number_ + ",\"name\":\"fold\",\"arguments\":{\"row\":3}}",
        "request.not_understood"},
       {std::string(100000, '['), "request.not_understood"},
@@ -152,7 +157,8 @@ TEST(RequestsLimit, RefusesSheetsWithoutEnd) {
     }
   }
   EXPECT_EQ(refused, "request.too_many_sheets");
-  for (const std::string& number : open) EXPECT_TRUE(is_ok(ask("{\"do\":\"close\",\"sheet\":" + number + "}")));
+  for (const std::string& number : open)
+    EXPECT_TRUE(is_ok(ask("{\"do\":\"close\",\"sheet\":" + number + "}")));
 }
 
 }  // namespace

@@ -204,8 +204,9 @@ TEST(Session, NamesWhatUndoWouldTakeBack) {
 
 TEST(Session, RefusesCellsAndCommandsThatDoNotExist) {
   Session session = chlorination();
-  for (const char* cell : {"", "r1", "r1.", "r9.equation", "header.colour", "r1.row.0", "r1.row.99.times", "r1.row.x.times",
-                           "bond.0.colour", "bond.5.value", "assumption.x", "r1.proposal.0.x", ".", "..", "r1.check."}) {
+  for (const char* cell :
+       {"", "r1", "r1.", "r9.equation", "header.colour", "r1.row.0", "r1.row.99.times", "r1.row.x.times",
+        "bond.0.colour", "bond.5.value", "assumption.x", "r1.proposal.0.x", ".", "..", "r1.check."}) {
     if (std::string(cell) == "r1.row.0") continue;  // a fold
     EXPECT_FALSE(session.edit(cell, "1").ok()) << cell;
   }

@@ -22,7 +22,8 @@ Page hostile_page() {
   table.id = "t";
   table.columns = {column("a", kHostile), column("b", "B", Align::Right)};
   Row row = row_of("row");
-  row.cells = {typed_cell("c", kHostile, kHostile, CellKind::Equation), figure_cell("n", "\u22121\u2009234.5")};
+  row.cells = {typed_cell("c", kHostile, kHostile, CellKind::Equation),
+               figure_cell("n", "\u22121\u2009234.5")};
   table.rows.push_back(row);
   page.blocks.push_back(table);
   page.blocks.push_back(note_block("note", NoteKind::Caution, kHostile));
@@ -68,7 +69,9 @@ TEST(Html, ElementsAreClosed) {
   const std::string html = write_html(hostile_page(), {});
   for (const char* element : {"table", "tr", "td", "svg", "figure", "body", "html", "h2", "p"}) {
     const std::string open = std::string("<") + element;
-    EXPECT_EQ(count(html, open + ">") + count(html, open + " "), count(html, std::string("</") + element + ">")) << element;
+    EXPECT_EQ(count(html, open + ">") + count(html, open + " "),
+              count(html, std::string("</") + element + ">"))
+        << element;
   }
 }
 

@@ -75,7 +75,8 @@ BadCase read_bad_case(const std::string& path) {
     ADD_FAILURE() << path << ": first line is to be \"code offset\", the last to end with a line end";
     return {};
   }
-  BadCase bad{content.substr(0, blank), content.substr(blank + 1, line - blank - 1), content.substr(line + 1)};
+  BadCase bad{content.substr(0, blank), content.substr(blank + 1, line - blank - 1),
+              content.substr(line + 1)};
   if (!bad.text.empty()) bad.text.pop_back();
   return bad;
 }

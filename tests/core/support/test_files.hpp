@@ -6,7 +6,8 @@
 
 namespace heatledger::test {
 
-/// Whole text of a file named from the repository root ("tests/data/x.tsv"); fails the test when it cannot be read.
+/// Whole text of a file named from the repository root ("tests/data/x.tsv"); fails the test when it cannot be
+/// read.
 std::string read_source_file(const std::string& path);
 /// Names of the files in a folder named from the repository root, sorted.
 std::vector<std::string> list_source_folder(const std::string& path);

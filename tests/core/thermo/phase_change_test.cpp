@@ -19,8 +19,9 @@ double to_liquid(const char* name) {
   return change.ok() ? change->value.value() / 1000 : 0;
 }
 
-// Majer and Svoboda, Enthalpies of Vaporization of Organic Compounds (1985), and CODATA for water: at 298.15 K.
-// 0.6 kJ/mol: formation enthalpies of two phases from two tables differ by that much from the direct measurement.
+// Majer and Svoboda, Enthalpies of Vaporization of Organic Compounds (1985), and CODATA for water: at 298.15
+// K. 0.6 kJ/mol: formation enthalpies of two phases from two tables differ by that much from the direct
+// measurement.
 TEST(GasToPhase, IsMinusTheVaporisationEnthalpy) {
   EXPECT_NEAR(to_liquid("water"), -44.0, 0.05);
   EXPECT_NEAR(to_liquid("nitrobenzene"), -55.0, 1.2);  // CRC formation enthalpies differ by 56.0
@@ -51,8 +52,13 @@ TEST(GasToPhase, HasNoFigureForAStructureThatNobodyTabulated) {
 }
 
 TEST(TabulatedFormation, IsZeroForElementsInTheirReferenceState) {
-  const struct { const char* name; Phase phase; } cases[] = {
-      {"hydrogen", Phase::Gas}, {"graphite", Phase::Solid}, {"bromine", Phase::Liquid}, {"sulfur", Phase::Solid}};
+  const struct {
+    const char* name;
+    Phase phase;
+  } cases[] = {{"hydrogen", Phase::Gas},
+               {"graphite", Phase::Solid},
+               {"bromine", Phase::Liquid},
+               {"sulfur", Phase::Solid}};
   for (const auto& c : cases) {
     const Result<Sourced> formation = tabulated_formation(*species(c.name), c.phase);
     ASSERT_TRUE(formation.ok()) << c.name;
@@ -77,8 +83,10 @@ TEST(PhaseTaken, LeavesAWrittenPhaseAndFillsAMissingOne) {
 
 TEST(FigureKey, IsOneForOneCompoundUnderTwoNames) {
   const auto a = species("water"), b = species("H2O");
-  EXPECT_EQ(figure_key(uncertainty::SourceKind::Compound, *a, Phase::Gas), figure_key(uncertainty::SourceKind::Compound, *b, Phase::Gas));
-  EXPECT_NE(figure_key(uncertainty::SourceKind::Compound, *a, Phase::Gas), figure_key(uncertainty::SourceKind::Compound, *a, Phase::Liquid));
+  EXPECT_EQ(figure_key(uncertainty::SourceKind::Compound, *a, Phase::Gas),
+            figure_key(uncertainty::SourceKind::Compound, *b, Phase::Gas));
+  EXPECT_NE(figure_key(uncertainty::SourceKind::Compound, *a, Phase::Gas),
+            figure_key(uncertainty::SourceKind::Compound, *a, Phase::Liquid));
 }
 
 }  // namespace

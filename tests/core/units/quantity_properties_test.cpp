@@ -17,8 +17,10 @@ namespace {
 [[maybe_unused]] const int seeded = setenv("RC_PARAMS", "seed=20240229 max_success=1000", 0);
 
 std::string random_unit() {
-  return *rc::gen::element<std::string>("kJ/mol", "kcal/mol", "Btu/lb", "kWh/t", "\u00B0C", "degF", "K", "bar", "barg", "psig", "mmHg", "t/h", "lb/h", "kmol/h", "Nm3/h", "scf/h",
-                                        "m3/h", "L/min", "kg/m3", "J/(mol K)", "kJ/kg K", "W/(m2 K)", "kW/K", "wt%", "mol%", "1/h", "g/cm3", "Btu/(lb degF)");
+  return *rc::gen::element<std::string>("kJ/mol", "kcal/mol", "Btu/lb", "kWh/t", "\u00B0C", "degF", "K",
+                                        "bar", "barg", "psig", "mmHg", "t/h", "lb/h", "kmol/h", "Nm3/h",
+                                        "scf/h", "m3/h", "L/min", "kg/m3", "J/(mol K)", "kJ/kg K", "W/(m2 K)",
+                                        "kW/K", "wt%", "mol%", "1/h", "g/cm3", "Btu/(lb degF)");
 }
 
 RC_GTEST_PROP(QuantityProperties, ReadBackWhatWasWritten, ()) {

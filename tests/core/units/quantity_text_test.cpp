@@ -29,8 +29,8 @@ TEST(Quantities, ReadsWhatEngineersType) {
 }
 
 TEST(Quantities, ReadsTheirInterval) {
-  for (const char* text : {"340 kJ/mol \u00B1 10", "340 \u00B1 10 kJ/mol", "(340 \u00B1 10) kJ/mol", "340 kJ/mol +- 10", "340 kJ/mol +/- 10 kJ/mol",
-                           "340 kJ/mol \u00B1 10000 J/mol"}) {
+  for (const char* text : {"340 kJ/mol \u00B1 10", "340 \u00B1 10 kJ/mol", "(340 \u00B1 10) kJ/mol",
+                           "340 kJ/mol +- 10", "340 kJ/mol +/- 10 kJ/mol", "340 kJ/mol \u00B1 10000 J/mol"}) {
     EXPECT_EQ(read(text).value, 340000) << text;
     ASSERT_TRUE(read(text).u95.has_value()) << text;
     EXPECT_NEAR(*read(text).u95, 10000, 1e-9) << text;
@@ -82,17 +82,42 @@ TEST(Quantities, PrintsForPeopleAndForFiles) {
   EXPECT_EQ(print(1200.0 / 3600, tonnes, 2), "1.20 t/h");
   EXPECT_EQ(machine_text(1200.0 / 3600, tonnes), "1.2 t/h");
   EXPECT_EQ(print(298.15, *parse_unit("degC"), 1), "25.0 \u00B0C");
-  EXPECT_EQ(print(uncertainty::Figure{-552600, 3040}, *parse_unit("kJ/mol"), 1), "\u2212552.6 \u00B1 3.0 kJ/mol");
+  EXPECT_EQ(print(uncertainty::Figure{-552600, 3040}, *parse_unit("kJ/mol"), 1),
+            "\u2212552.6 \u00B1 3.0 kJ/mol");
   EXPECT_EQ(print(4180, *parse_unit("kJ/kg K"), 2), "4.18 kJ/(kg\u00B7K)");
 }
 
 TEST(Quantities, EverySuggestedUnitHasTheDimensionThatSuggestsIt) {
-  for (const Dimension& one : {dimension::kEnergy, dimension::kEnergyPerMole, dimension::kEnergyPerMass, dimension::kPower, dimension::kTemperature, dimension::kPressure,
-                               dimension::kGaugePressure, dimension::kMass, dimension::kAmount, dimension::kMolarMass, dimension::kMassFlow, dimension::kMolarFlow,
-                               dimension::kLength, dimension::kArea, dimension::kVolume, dimension::kVolumeFlow, dimension::kTime, dimension::kRate, dimension::kDensity,
-                               dimension::kConcentration, dimension::kMolality, dimension::kHeatCapacity, dimension::kMolarHeatCapacity, dimension::kMassHeatCapacity,
-                               dimension::kHeatTransferCoefficient, dimension::kHeatTransferPerKelvin, dimension::kMassFraction, dimension::kMoleFraction,
-                               dimension::kVolumeFraction, dimension::kTemperatureDifference}) {
+  for (const Dimension& one : {dimension::kEnergy,
+                               dimension::kEnergyPerMole,
+                               dimension::kEnergyPerMass,
+                               dimension::kPower,
+                               dimension::kTemperature,
+                               dimension::kPressure,
+                               dimension::kGaugePressure,
+                               dimension::kMass,
+                               dimension::kAmount,
+                               dimension::kMolarMass,
+                               dimension::kMassFlow,
+                               dimension::kMolarFlow,
+                               dimension::kLength,
+                               dimension::kArea,
+                               dimension::kVolume,
+                               dimension::kVolumeFlow,
+                               dimension::kTime,
+                               dimension::kRate,
+                               dimension::kDensity,
+                               dimension::kConcentration,
+                               dimension::kMolality,
+                               dimension::kHeatCapacity,
+                               dimension::kMolarHeatCapacity,
+                               dimension::kMassHeatCapacity,
+                               dimension::kHeatTransferCoefficient,
+                               dimension::kHeatTransferPerKelvin,
+                               dimension::kMassFraction,
+                               dimension::kMoleFraction,
+                               dimension::kVolumeFraction,
+                               dimension::kTemperatureDifference}) {
     EXPECT_FALSE(suggested_units(one).empty());
     for (const std::string_view text : suggested_units(one)) {
       const std::string typed = "7 " + std::string(text);
