@@ -129,4 +129,18 @@ Result<Ledger> make_ledger(std::shared_ptr<const Reaction> reaction, const Ledge
   return ledger;
 }
 
+Ledger ledger_rows(std::shared_ptr<const Reaction> reaction, const LedgerOptions& options) {
+  CHECK(reaction != nullptr && options.set != nullptr, "a ledger has a reaction and a bond set");
+  Ledger ledger;
+  ledger.reaction = std::move(reaction);
+  ledger.set = options.set;
+  const std::vector<ReactionSpecies>& species = ledger.reaction->species;
+  for (std::size_t i = 0; i < species.size(); ++i) {
+    const SpeciesFigures figures =
+        species_figures(*species[i].species, species[i].term, *options.set, ContextUse::Never);
+    ledger.rows.push_back(describe_row(species[i], i, figures.priced, *options.set));
+  }
+  return ledger;
+}
+
 }  // namespace heatledger::balance

@@ -146,6 +146,10 @@ struct Calculator::Memory {
     }
     if (!ledger) {
       result.error = ledger.error();
+      if (!result.reaction->balance.balanced) {
+        result.rows =
+            std::make_shared<const balance::Ledger>(balance::ledger_rows(result.reaction, options));
+      }
       return result;
     }
     result.ledger = std::make_shared<const balance::Ledger>(std::move(ledger).value());

@@ -17,8 +17,13 @@ struct ReactionResult {
   std::shared_ptr<const balance::Reaction>
       reaction;                                   ///< null when the equation is empty or could not be read
   std::shared_ptr<const balance::Ledger> ledger;  ///< null when not balanced or not readable
-  std::optional<Error> error;                     ///< of the equation or the ledger
+  std::shared_ptr<const balance::Ledger>
+      rows;                           ///< rows alone of an equation that does not balance, else null
+  std::optional<Error> error;         ///< of the equation or the ledger
   std::optional<Error> option_error;  ///< of basis, bond set or route; the ledger then stands on the default
+
+  /// The ledger or, while the equation does not balance, its rows; null when there is neither.
+  const balance::Ledger* shown() const { return ledger != nullptr ? ledger.get() : rows.get(); }
 };
 
 struct Results {

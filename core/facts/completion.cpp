@@ -104,11 +104,11 @@ std::vector<NameEntry> CompletionIndex::complete(std::string_view text, std::siz
 
   struct Hit {
     int group;
-    std::uint32_t row, length, entry;
+    std::uint32_t row, entry;
     bool operator<(const Hit& other) const {
       if (group != other.group) return group < other.group;
       if (row != other.row) return row < other.row;
-      return length != other.length ? length < other.length : entry < other.entry;
+      return entry < other.entry;  // a row's own name stands before its synonyms
     }
   };
   std::vector<Hit> hits;
@@ -118,7 +118,7 @@ std::vector<NameEntry> CompletionIndex::complete(std::string_view text, std::siz
   for (auto at = from; at != starts_.end() && tail(*at).substr(0, wanted.size()) == wanted; ++at) {
     const std::uint32_t length = keys_[at->entry].length;
     const int group = at->first_word ? (length == wanted.size() ? 0 : 1) : 2;
-    hits.push_back({group, entries_[at->entry].row, length, at->entry});
+    hits.push_back({group, entries_[at->entry].row, at->entry});
   }
   const std::size_t allowed = wanted.size() < 4 ? 0 : wanted.size() < 6 ? 1 : 2;
   if (hits.size() < limit && allowed > 0 && wanted.size() <= 64) {
@@ -136,7 +136,7 @@ std::vector<NameEntry> CompletionIndex::complete(std::string_view text, std::siz
       if (near.size() + allowed < wanted.size()) continue;
       const int distance = pattern.distance_to_beginning(near);
       if (distance == 0 || static_cast<std::size_t>(distance) > allowed) continue;
-      hits.push_back({2 + distance, entries_[at->entry].row, whole.length, at->entry});
+      hits.push_back({2 + distance, entries_[at->entry].row, at->entry});
     }
   }
   std::sort(hits.begin(), hits.end());

@@ -114,7 +114,7 @@ class ReactionEdit {
     if (id.size() == 2) return apply_field(field, text);
     if (field == "row" && id.size() == 4) {
       const std::optional<std::size_t> row = id_index(id[2]);
-      const balance::Ledger* ledger = result().ledger.get();
+      const balance::Ledger* ledger = result().shown();
       if (!row || ledger == nullptr || *row >= ledger->rows.size()) return no_such_cell(cell_);
       if (id[3] != "times") return not_editable(cell_);
       const Result<std::string> equation =

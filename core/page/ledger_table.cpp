@@ -43,15 +43,17 @@ std::string structure_text(const balance::ReactionSpecies& entry) {
 class LedgerTable {
  public:
   LedgerTable(const ReactionView& view, const balance::Review* review)
-      : view_(view), ledger_(*view.result.ledger), review_(review), decimals_(ledger_decimals(ledger_)) {}
+      : view_(view), ledger_(*view.result.shown()), review_(review), decimals_(ledger_decimals(ledger_)) {}
 
   Table build() {
     table_.id = view_.sheet.id + ".ledger";
     table_.look = TableLook::Ledger;
     table_.columns = ledger_columns(review_ != nullptr);
     for (std::size_t i = 0; i < ledger_.rows.size(); ++i) add_species(i);
-    add_sums();
-    add_totals();
+    if (view_.result.ledger != nullptr) {
+      add_sums();
+      add_totals();
+    }
     return std::move(table_);
   }
 

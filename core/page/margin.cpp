@@ -372,8 +372,9 @@ Result<Margin> make_margin(const document::Worksheet& sheet, const document::Res
       explain_balance(*result.reaction, margin);
       return margin;
     }
-    if (result.ledger != nullptr && cell.has_working) {
-      LedgerMargin(*sheet.reactions[index], *result.ledger, margin).explain(id);
+    const balance::Ledger* ledger = result.shown();
+    if (ledger != nullptr && cell.has_working) {
+      LedgerMargin(*sheet.reactions[index], *ledger, margin).explain(id);
       return margin;
     }
   }

@@ -297,7 +297,15 @@ std::vector<Block> reaction_blocks(const ReactionView& view) {
                                  view.count > 1 ? "Reaction " + std::to_string(view.number) : "Reaction"));
   blocks.push_back(reaction_table(view));
   add_equation_notes(view, blocks);
-  if (view.result.ledger != nullptr) add_ledger_blocks(view, blocks);
+  if (view.result.ledger != nullptr) {
+    add_ledger_blocks(view, blocks);
+  } else if (view.result.rows != nullptr) {
+    // The coefficient that was just typed stays where it was typed.
+    blocks.push_back(
+        heading_block(id + ".ledger.heading", "Bond ledger", "no sums: the equation does not balance"));
+    blocks.push_back(options_table(view));
+    blocks.push_back(ledger_table(view, nullptr));
+  }
   blocks.push_back(note_table(view));
   if (view.count > 1) blocks.push_back(move_table(view));
   return blocks;

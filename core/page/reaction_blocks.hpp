@@ -35,6 +35,7 @@ std::vector<Block> reaction_blocks(const ReactionView& view);
 /// "r1.row.0" in "r1.row.0.broken".
 std::string row_id(const document::ReactionSheet& sheet, std::size_t row);
 
+/// The ledger, or its rows without totals while the equation does not balance.
 /// @param review  of the figures typed in the checker's column; null: the column is not shown
 Table ledger_table(const ReactionView& view, const balance::Review* review);
 /// Boxes with the figure taken and what it is per mole and per kilogram.

@@ -125,13 +125,13 @@ struct Session::State {
     const std::size_t reaction = document::find_reaction(sheet(), parts[0]);
     const std::optional<std::size_t> row = id_index(parts[2]);
     if (reaction == sheet().reactions.size() || !row) return false;
-    const balance::Ledger* ledger = results.reactions[reaction]->ledger.get();
+    const balance::Ledger* ledger = results.reactions[reaction]->shown();
     return ledger != nullptr && *row < ledger->rows.size() && !ledger->rows[*row].lines.empty();
   }
 
   void unfold_all() {
     for (std::size_t i = 0; i < sheet().reactions.size(); ++i) {
-      const balance::Ledger* ledger = results.reactions[i]->ledger.get();
+      const balance::Ledger* ledger = results.reactions[i]->shown();
       for (std::size_t row = 0; ledger != nullptr && row < ledger->rows.size(); ++row) {
         if (!ledger->rows[row].lines.empty()) open_rows.insert(row_id(*sheet().reactions[i], row));
       }

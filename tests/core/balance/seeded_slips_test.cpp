@@ -10,16 +10,17 @@
 #include "core/balance/checker.hpp"
 #include "core/base/number_text.hpp"
 #include "tests/core/balance/sheets.hpp"
+#include "tests/core/support/test_files.hpp"
 
 namespace heatledger::balance {
 namespace {
 
 struct Example {
-  const char* equation;
-  const char* basis;
+  std::string equation;
+  std::string basis;
 };
 
-const Example kExamples[] = {
+const Example kOwnExamples[] = {
     {"nitrobenzene(l) + 3 H2(g) -> aniline(l) + 2 H2O(l)", "nitrobenzene"},
     {"methane(g) + 2 O2(g) -> CO2(g) + 2 H2O(g)", "methane"},
     {"CO(g) + H2O(g) -> CO2(g) + H2(g)", "CO"},
@@ -38,6 +39,28 @@ const Example kExamples[] = {
     {"4 NH3(g) + 5 O2(g) -> 4 NO(g) + 6 H2O(g)", "NH3"},
 };
 
+/// The equations above and those of every example worksheet, as written there.
+std::vector<Example> examples() {
+  std::vector<Example> all(std::begin(kOwnExamples), std::end(kOwnExamples));
+  const std::string key = "\"equation\": \"";
+  for (const std::string& name : test::list_source_folder("worksheets")) {
+    if (name.find(".heatledger.json") == std::string::npos) continue;
+    const std::string text = test::read_source_file("worksheets/" + name);
+    std::size_t found = 0;
+    for (std::size_t at = text.find(key); at != std::string::npos; at = text.find(key, at)) {
+      Example example;
+      for (at += key.size(); at < text.size() && text[at] != '"'; ++at) {
+        if (text[at] == '\\') ++at;
+        example.equation += text[at];
+      }
+      all.push_back(example);
+      ++found;
+    }
+    EXPECT_GT(found, 0u) << name << " holds no equation";
+  }
+  return all;
+}
+
 /// The sheet on paper, kJ. `Ledger` gives counts and prices only; all sums are made here.
 struct Paper {
   struct Line {
@@ -45,7 +68,7 @@ struct Paper {
   };
   struct Row {
     std::vector<Line> lines;
-    double coefficient, per_mole, in_equation;
+    double coefficient, per_mole, in_equation, given;
     bool product;
   };
   struct Phase {
@@ -64,6 +87,9 @@ struct Paper {
                              bond.second ? double(bond.second->count) : 0,
                              bond.second ? bond.second->price->value / 1000 : 0, 0});
       }
+      // An element in its reference state has no bonds to add up: its atoms are taken as the sheet gives
+      // them.
+      if (from.lines.empty()) row.given = from.per_mole->value() / 1000;
       row.coefficient = ledger.reaction->species[from.species].coefficient();
       row.product = ledger.reaction->species[from.species].product;
       rows.push_back(row);
@@ -79,7 +105,7 @@ struct Paper {
     broken = formed = 0;
     for (std::size_t r = 0; r < rows.size(); ++r) {
       Row& row = rows[r];
-      row.per_mole = 0;
+      row.per_mole = row.given;
       for (Line& line : row.lines) {
         line.sum = line.count * line.price + line.count2 * line.price2;
         row.per_mole += line.sum;
@@ -252,7 +278,7 @@ bool names(const Review& review, const Seed& slip) {
 
 std::vector<Ledger> sheets() {
   std::vector<Ledger> result;
-  for (const Example& example : kExamples)
+  for (const Example& example : examples())
     result.push_back(test_sheets::ledger(example.equation, example.basis));
   return result;
 }
@@ -348,7 +374,7 @@ TEST(SeededSlips, NoCorrectSheetIsAccused) {
 
 TEST(SeededSlips, ACorrectSheetByAnotherTableIsNotAccused) {
   int compared = 0;
-  for (const Example& example : kExamples) {
+  for (const Example& example : examples()) {
     const Ledger ours = test_sheets::ledger(example.equation, example.basis);
     for (const char* set : {"atkins", "huheey", "reusch"}) {
       const Ledger theirs = test_sheets::ledger(example.equation, example.basis, set);

@@ -76,6 +76,10 @@ TEST(Session, ACoefficientRewritesTheEquation) {
   EXPECT_EQ(find_cell(session.page(), "r1.equation")->edit_text, "4 H2(g) + O2(g) -> 2 H2O(g)");
   EXPECT_EQ(text_of(session, "r1.sum.broken"), "(no such cell)") << "an equation out of balance has no sum";
   EXPECT_NE(find_note(session.page(), "r1.unbalanced"), nullptr);
+  EXPECT_EQ(text_of(session, "r1.row.0.times"), "4") << "the cell stays where it was typed";
+  ASSERT_TRUE(session.edit("r1.row.0.times", "2").ok());
+  EXPECT_EQ(text_of(session, "r1.sum.broken"), before);
+  ASSERT_TRUE(session.command("undo", {}).ok());
   ASSERT_TRUE(session.command("undo", {}).ok());
   EXPECT_EQ(text_of(session, "r1.sum.broken"), before);
   ASSERT_TRUE(session.edit("r1.row.1.times", "3/3").ok());
