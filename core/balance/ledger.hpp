@@ -162,8 +162,8 @@ const Route* find_route(const Ledger& ledger, std::string_view name);
 /// ledger.route_unknown
 Result<Ledger> make_ledger(std::shared_ptr<const Reaction> reaction, const LedgerOptions& options);
 
-/// The rows alone, without totals, corrections or routes: what a sheet keeps in view while the coefficients of
-/// an equation that does not balance are being mended. No figure follows from such an equation.
+/// The rows alone, without totals, corrections or routes: what a sheet keeps in view while the coefficients
+/// of an equation that does not balance are being mended. No figure follows from such an equation.
 Ledger ledger_rows(std::shared_ptr<const Reaction> reaction, const LedgerOptions& options);
 
 }  // namespace heatledger::balance

@@ -147,8 +147,7 @@ struct Calculator::Memory {
     if (!ledger) {
       result.error = ledger.error();
       if (!result.reaction->balance.balanced) {
-        result.rows =
-            std::make_shared<const balance::Ledger>(balance::ledger_rows(result.reaction, options));
+        result.rows = std::make_shared<const balance::Ledger>(balance::ledger_rows(result.reaction, options));
       }
       return result;
     }
