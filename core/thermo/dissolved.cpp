@@ -92,4 +92,25 @@ Result<Sourced> dissolved_formation(const Species& species, const std::optional<
   return from_curve(species, *curve, ratio);
 }
 
+Result<Sourced> formation_in_solvent(const Species& species, FormationOf formation) {
+  Result<Sourced> liquid = formation(species, Phase::Liquid, {});
+  if (!liquid.ok()) return liquid;
+  const facts::Compound* c = species.compound;
+  constexpr double kRoom = 298.15;
+  const bool solid = c != nullptr && ((c->melting_point && c->melting_point->value > kRoom) ||
+                                      (c->solid.formation_enthalpy && !c->liquid.formation_enthalpy));
+  const bool gas = c != nullptr && c->boiling_point && c->boiling_point->value < kRoom;
+  const double mixing = (solid ? 8.0 : gas ? 5.0 : 3.0) * kJ;
+  Sourced result = std::move(liquid).value();
+  result.value.add(Quantity(0, mixing, figure_key(SourceKind::Phase, species, Phase::Dissolved)));
+  result.route = "estimate";
+  result.source += "; dissolved taken as liquid";
+  result.working.push_back(species.name + " dissolved in the solvent is reckoned as liquid; mixing 0 ± " +
+                           display_number(mixing / kJ, 0) + " kJ/mol");
+  result.cautions.push_back(
+      species.name + ": its heat of solution is not known here; the liquid stands for it, ± " +
+      display_number(mixing / kJ, 0) + " kJ/mol. Type a measured one where it matters.");
+  return result;
+}
+
 }  // namespace heatledger::thermo

@@ -5,6 +5,7 @@
 #include "core/base/number_text.hpp"
 #include "core/estimate/context_model.hpp"
 #include "core/estimate/context_molecule.hpp"
+#include "core/thermo/dissolved.hpp"
 
 namespace heatledger::thermo {
 namespace {
@@ -76,6 +77,7 @@ Result<Sourced> estimated_formation(const Species& species, Phase phase) {
 
 Result<Sourced> best_formation(const Species& species, Phase phase,
                                const std::optional<molecule::Strength>& strength) {
+  if (phase == Phase::Dissolved) return formation_in_solvent(species, best_formation);
   Result<Sourced> table = tabulated_formation(species, phase, strength);
   if (table.ok()) return table;
   if (phase == Phase::Liquid) {
@@ -96,6 +98,16 @@ Result<Sourced> best_formation(const Species& species, Phase phase,
 
 Result<Sourced> best_gas_to_phase(const Species& species, Phase to,
                                   const std::optional<molecule::Strength>& strength) {
+  if (to == Phase::Dissolved) {
+    Result<Sourced> dissolved = best_formation(species, to, strength);
+    const Result<Sourced> gas = best_formation(species, Phase::Gas, {});
+    if (!dissolved.ok()) return dissolved;
+    if (!gas.ok()) return gas;
+    Sourced result = std::move(dissolved).value();
+    result.value.add(gas->value, -1);
+    result.working.insert(result.working.end(), gas->working.begin(), gas->working.end());
+    return result;
+  }
   Result<Sourced> table = gas_to_phase(species, to, strength);
   if (table.ok()) return table;
   Result<Sourced> estimate = estimated_gas_to_phase(species, to);

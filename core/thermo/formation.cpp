@@ -3,7 +3,9 @@
 
 #include "core/base/number_text.hpp"
 #include "core/thermo/dissolved.hpp"
+#include "core/thermo/heating_path.hpp"
 #include "core/thermo/species_enthalpy.hpp"
+#include "core/units/constants.hpp"
 
 namespace heatledger::thermo {
 namespace {
@@ -115,6 +117,7 @@ Result<Sourced> tabulated_formation(const Species& species, Phase phase,
                                     const std::optional<molecule::Strength>& strength) {
   if (phase == Phase::Unstated) phase = Phase::Gas;
   if (phase == Phase::Aqueous) return dissolved_formation(species, strength);
+  if (phase == Phase::Dissolved) return formation_in_solvent(species, tabulated_formation);
   const Compound* compound = species.compound;
   if (compound == nullptr) return no_formation(species, phase);
   if (is_reference(*compound, phase)) {
@@ -146,6 +149,21 @@ Result<Sourced> tabulated_formation(const Species& species, Phase phase,
                              display_number(evaporation.value / kJ, 2) + " ± " +
                              display_number(evaporation.u95 / kJ, 2) + " kJ/mol, " +
                              std::string(evaporation.source));
+    return result;
+  }
+
+  // One of solid and liquid, and the enthalpy of fusion between them.
+  const bool to_solid = phase == Phase::Solid && has_formation(*compound, Phase::Liquid);
+  const bool melted = phase == Phase::Liquid && has_formation(*compound, Phase::Solid);
+  if (to_solid || melted) {
+    const Result<Sourced> fusion = fusion_enthalpy(species, units::kReferenceTemperature);
+    if (!fusion.ok()) return no_formation(species, phase);
+    Result<Sourced> known = tabulated_formation(species, melted ? Phase::Solid : Phase::Liquid);
+    if (!known.ok()) return known;
+    Sourced result = std::move(known).value();
+    result.value.add(fusion->value, melted ? 1 : -1);
+    result.source += "; fusion " + fusion->source;
+    result.working.insert(result.working.end(), fusion->working.begin(), fusion->working.end());
     return result;
   }
   return no_formation(species, phase);

@@ -111,17 +111,19 @@ Error no_data(const Species& species, Phase to) {
                species.text, "Type it with its source, or write the species as gas."};
 }
 
-Result<Sourced> gas_to_water(const Species& species, const std::optional<molecule::Strength>& strength) {
+Result<Sourced> gas_to_solution(const Species& species, Phase to,
+                                const std::optional<molecule::Strength>& strength) {
   const Result<Sourced> gas = tabulated_formation(species, Phase::Gas),
-                        dissolved = tabulated_formation(species, Phase::Aqueous, strength);
+                        dissolved = tabulated_formation(species, to, strength);
   if (!dissolved.ok()) return dissolved.error();
-  if (!gas.ok()) return no_data(species, Phase::Aqueous);
+  if (!gas.ok()) return no_data(species, to);
   // A curve that starts from the gas shares its formation enthalpy, which then cancels in value and ±.
   Sourced result = *dissolved;
   result.value.add(gas->value, -1);
   result.source = "formation enthalpies dissolved and as gas, " + dissolved->source;
   result.working.insert(result.working.end(), gas->working.begin(), gas->working.end());
-  result.working.push_back("ΔfH(aq) − ΔfH(g) = " + kj(result.value.value()) + " kJ/mol");
+  result.working.push_back("ΔfH(" + std::string(molecule::phase_text(to)) +
+                           ") − ΔfH(g) = " + kj(result.value.value()) + " kJ/mol");
   return result;
 }
 
@@ -136,8 +138,8 @@ Result<Sourced> gas_to_phase(const Species& species, Phase to,
     none.source = "gas as written";
     return none;
   }
-  if (to == Phase::Aqueous) return gas_to_water(species, strength);
-  if (species.compound == nullptr || to == Phase::Dissolved) return no_data(species, to);
+  if (to == Phase::Aqueous || to == Phase::Dissolved) return gas_to_solution(species, to, strength);
+  if (species.compound == nullptr) return no_data(species, to);
   if (has_own_figure(species, Phase::Gas) && has_own_figure(species, to)) {
     const Result<Sourced> gas = tabulated_formation(species, Phase::Gas),
                           condensed = tabulated_formation(species, to);
@@ -146,6 +148,10 @@ Result<Sourced> gas_to_phase(const Species& species, Phase to,
   if (to == Phase::Liquid && species.compound->vaporisation_enthalpy_298) {
     return from_evaporation(species, *species.compound->vaporisation_enthalpy_298);
   }
+  // Through the enthalpy of fusion, when one of liquid and solid has a figure.
+  const Result<Sourced> gas = tabulated_formation(species, Phase::Gas),
+                        condensed = tabulated_formation(species, to);
+  if (gas.ok() && condensed.ok()) return from_formation(species, to, *gas, *condensed);
   return no_data(species, to);
 }
 
