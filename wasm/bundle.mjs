@@ -48,14 +48,42 @@ function joinModules(entry) {
   return parts.join("");
 }
 
+/**
+ * Size of the pieces that the core is cut into [characters]. The parser gathers the text of one element in a buffer that
+ * it grows by copying: one element with all of it costs twice as much time. A multiple of 4: each piece is base64 by itself.
+ */
+const PIECE = 1 << 16;
+
+/** @param {string} base64 */
+function corePieces(base64) {
+  const pieces = [];
+  for (let at = 0; at < base64.length; at += PIECE) {
+    pieces.push(`<script class="core" type="application/octet-stream">${base64.slice(at, at + PIECE)}</script>`);
+  }
+  return pieces.join("\n");
+}
+
+/**
+ * The page is pure ASCII: a single other character makes the browser hold and parse the whole megabyte in 16-bit
+ * characters, 35 ms of every start.
+ */
+const asciiOf = {
+  /** @param {string} text  strings, regular expressions and comments take this spelling; names are ASCII anyway */
+  script: (text) => text.replace(/[^\0-\x7f]/g, (unit) => `\\u${unit.charCodeAt(0).toString(16).padStart(4, "0")}`),
+  /** @param {string} text */
+  style: (text) => text.replace(/[^\0-\x7f]/gu, (character) => `\\${character.codePointAt(0)?.toString(16)} `),
+  /** @param {string} text */
+  markup: (text) => text.replace(/[^\0-\x7f]/gu, (character) => `&#${character.codePointAt(0)};`),
+};
+
 /** @param {string} text */
 const hashOf = (text) => `'sha256-${createHash("sha256").update(text, "utf8").digest("base64")}'`;
 
 const options = readOptions(process.argv.slice(2));
-const style = STYLES.map((file) => readFileSync(join(options.page, file), "utf8")).join("");
+const style = asciiOf.style(STYLES.map((file) => readFileSync(join(options.page, file), "utf8")).join(""));
 const core = readFileSync(options.core, "utf8");
 // emscripten's start-up declares one variable; the page's own modules find it as a global of their script.
-const script = `${core}\nglobalThis.createHeatledgerCore = createHeatledgerCore;\n${joinModules(join(options.page, "main.js"))}`;
+const script = asciiOf.script(`${core}\nglobalThis.createHeatledgerCore = createHeatledgerCore;\n${joinModules(join(options.page, "main.js"))}`);
 for (const [name, text] of Object.entries({style, script})) {
   if (/<\/(script|style)|<!--/i.test(text)) throw new Error(`the ${name} would end its own element`);
 }
@@ -71,8 +99,8 @@ const policy = [
 ].join("; ");
 
 /** @type {Record<string, string>} */
-const fields = {policy, style, script, core: wasm};
+const fields = {policy, style, script, core: corePieces(wasm)};
 // A function as replacement: the texts hold dollar signs.
-const page = readFileSync(join(options.page, "index.html"), "utf8").replace(/\{\{(\w+)\}\}/g, (_, name) => fields[name]);
+const page = asciiOf.markup(readFileSync(join(options.page, "index.html"), "utf8")).replace(/\{\{(\w+)\}\}/g, (_, name) => fields[name]);
 writeFileSync(options.out, page);
 console.log(`${options.out}: ${Buffer.byteLength(page)} bytes (script ${script.length}, style ${style.length}, core ${wasm.length})`);

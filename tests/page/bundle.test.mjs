@@ -12,6 +12,12 @@ test("the page file stays within 1.5 MB", () => {
   assert.ok(bytes <= 1_500_000, `${bytes} bytes`);
 });
 
+test("the page file is pure ASCII, which the browser parses in half the time", () => {
+  const bytes = readFileSync(pageFile);
+  const at = bytes.findIndex((byte) => byte > 0x7f);
+  assert.equal(at, -1, `${bytes.subarray(at - 40, at + 4)}`);
+});
+
 test("the page opens from disk and asks for nothing but itself", async () => {
   const page = await browser.open();
   /** @type {string[]} */

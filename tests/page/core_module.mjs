@@ -7,7 +7,7 @@ import {coreFile} from "./support.mjs";
 export async function startNodeCore() {
   const {startCore} = await import("../../wasm/page/core.js");
   const create = createRequire(import.meta.url)(coreFile);
-  return startCore(create, new Uint8Array(readFileSync(coreFile.replace(/\.js$/, ".wasm"))));
+  return startCore(create, WebAssembly.compile(readFileSync(coreFile.replace(/\.js$/, ".wasm"))));
 }
 
 /**

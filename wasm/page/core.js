@@ -8,7 +8,8 @@
  * @property {(at: number, size: number) => number} _heatledger_handle_request
  * @property {() => number} _heatledger_answer_size
  *
- * @typedef {(options: {wasmBinary: Uint8Array}) => Promise<CoreModule>} CreateModule
+ * @typedef {(imports: WebAssembly.Imports, receive: (instance: WebAssembly.Instance) => void) => object} InstantiateWasm
+ * @typedef {(options: {instantiateWasm: InstantiateWasm}) => Promise<CoreModule>} CreateModule
  *
  * @typedef {{ok: true, value: any} | {ok: false, error: import("./types.js").CoreError}} Answer
  */
@@ -61,21 +62,36 @@ export class Core {
 
 /**
  * @param {CreateModule} createModule  emscripten's start-up function
- * @param {Uint8Array} wasmBinary
+ * @param {Promise<WebAssembly.Module> | WebAssembly.Module} compiled
  */
-export async function startCore(createModule, wasmBinary) {
-  return new Core(await createModule({wasmBinary}));
+export async function startCore(createModule, compiled) {
+  const module = await compiled;
+  return new Core(
+    await createModule({
+      instantiateWasm: (imports, receive) => {
+        WebAssembly.instantiate(module, imports).then(receive);
+        return {};
+      },
+    }),
+  );
 }
 
 /**
- * Bytes of a block of the page that holds deflated data in base64.
- * @param {string} base64
- * @returns {Promise<Uint8Array>}
+ * Compiles the deflated module that the page carries in base64, in pieces. What is inflated is compiled while the rest
+ * still inflates, and the whole is never held twice.
+ * @param {string[]} pieces
+ * @returns {Promise<WebAssembly.Module>}
  */
-export async function inflateBase64(base64) {
-  const packed = decodeBase64(base64.trim());
-  const stream = new Blob([packed]).stream().pipeThrough(new DecompressionStream("deflate"));
-  return new Uint8Array(await new Response(stream).arrayBuffer());
+export function compileCarried(pieces) {
+  /** @type {ReadableStream<Uint8Array<ArrayBuffer>>} */
+  const packed = new ReadableStream({
+    start(controller) {
+      for (const piece of pieces) controller.enqueue(decodeBase64(piece));
+      controller.close();
+    },
+  });
+  const bytes = packed.pipeThrough(new DecompressionStream("deflate"));
+  return WebAssembly.compileStreaming(new Response(bytes, {headers: {"Content-Type": "application/wasm"}}));
 }
 
 /**

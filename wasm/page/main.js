@@ -1,6 +1,6 @@
 // Puts the page together: core, store, views, keys.
 
-import {inflateBase64, startCore} from "./core.js";
+import {compileCarried, startCore} from "./core.js";
 import {chooseFile, download, droppedFile, saveFile} from "./files.js";
 import {Store} from "./store.js";
 import {BarView} from "./views/bar_view.js";
@@ -25,7 +25,7 @@ function part(id) {
   return node;
 }
 
-const core = await startCore(createModule, await inflateBase64(part("core").textContent ?? ""));
+const core = await startCore(createModule, compileCarried([...document.querySelectorAll("script.core")].map((piece) => piece.textContent ?? "")));
 const store = new Store(core);
 const sheetNode = part("sheet");
 const sheet = new SheetView(sheetNode);
