@@ -67,7 +67,7 @@ export class CellEditor {
     const at = this.at;
     if (!at) return;
     const text = at.field.value;
-    this.#close();
+    this.#close(move !== "leave");
     if (text !== at.before) this.host.commit(at.id, text);
     this.host.move(at.td, move);
   }
@@ -75,16 +75,19 @@ export class CellEditor {
   cancel() {
     const at = this.at;
     if (!at) return;
-    this.#close();
+    this.#close(true);
     this.host.move(at.td, "stay");
   }
 
-  #close() {
+  /** @param {boolean} focusCell  the cell takes the focus back */
+  #close(focusCell) {
     const at = this.at;
     if (!at) return;
-    // Cleared first: taking the field out of the page fires blur, which must find the edit over.
+    // Cleared first: a field that loses the focus fires blur, which must find the edit over.
     this.at = null;
     at.td.classList.remove("editing");
+    // Before the field goes: with nothing else changed yet this is cheap, and taking out what has the focus is not.
+    if (focusCell) at.td.focus({preventScroll: true});
     at.field.remove();
     at.list.node.remove();
   }

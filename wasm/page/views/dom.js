@@ -40,6 +40,29 @@ export function setAttribute(node, name, value) {
 }
 
 /**
+ * Written only when it differs: even the same class anew makes the browser match every rule again.
+ * @param {Element} node
+ * @param {string} className
+ */
+export function setClass(node, className) {
+  if (node.className !== className) node.className = className;
+}
+
+/**
+ * Changes the text in place: a new text node would be boxed and laid out from nothing.
+ * @param {Element} node
+ * @param {string} text
+ */
+export function setText(node, text) {
+  const only = node.childNodes.length === 1 ? node.firstChild : null;
+  if (only instanceof Text && text) {
+    if (only.data !== text) only.data = text;
+  } else if (node.textContent !== text) {
+    node.textContent = text;
+  }
+}
+
+/**
  * Makes the children of `parent` exactly `wanted`, moving as little as possible.
  * @param {Element} parent
  * @param {Element[]} wanted

@@ -46,12 +46,26 @@ class NoteView {
   }
 }
 
+/**
+ * Blocks that belong together lie in one part: a reaction, the title block, the assumptions. A part is laid out by
+ * itself, so an edit costs what its own reaction costs, however long the sheet.
+ * @param {string} blockId
+ */
+function partOf(blockId) {
+  const stem = blockId.split(".", 1)[0];
+  return stem === "sheet" || stem === "header" ? "title" : stem;
+}
+
+/** @typedef {{kind: string, shown: Block, view: BlockView, part: string}} BlockEntry */
+
 export class SheetView {
   /** @param {HTMLElement} node */
   constructor(node) {
     this.node = node;
-    /** @type {Map<string, {kind: string, shown: Block, view: BlockView}>} */
+    /** @type {Map<string, BlockEntry>} */
     this.blocks = new Map();
+    /** @type {Map<string, HTMLElement>} */
+    this.parts = new Map();
     /** @type {Set<HTMLElement>} */
     this.marked = new Set();
   }
@@ -60,16 +74,41 @@ export class SheetView {
   show(page) {
     /** @type {typeof this.blocks} */
     const blocks = new Map();
+    let sameNodes = page.blocks.length === this.blocks.size;
+    const old = this.blocks.keys();
     for (const block of page.blocks) {
       const before = this.blocks.get(block.id);
-      const entry = before && before.kind === block.block ? before : {kind: block.block, shown: block, view: viewFor(block)};
+      const entry =
+        before && before.kind === block.block ? before : {kind: block.block, shown: block, view: viewFor(block), part: partOf(block.id)};
       if (entry !== before || entry.shown !== block) entry.view.show(block);
+      sameNodes = sameNodes && entry === before && old.next().value === block.id;
       entry.shown = block;
       blocks.set(block.id, entry);
     }
     this.blocks = blocks;
-    setChildren(this.node, [...blocks.values()].map((entry) => entry.view.node));
+    if (!sameNodes) this.#arrange();
     this.#markCells(page);
+  }
+
+  /** Puts the blocks into their parts and the parts into the sheet. */
+  #arrange() {
+    /** @type {Map<string, HTMLElement[]>} */
+    const contents = new Map();
+    for (const entry of this.blocks.values()) {
+      const found = contents.get(entry.part);
+      if (found) found.push(entry.view.node);
+      else contents.set(entry.part, [entry.view.node]);
+    }
+    /** @type {typeof this.parts} */
+    const parts = new Map();
+    for (const [name, nodes] of contents) {
+      const part = this.parts.get(name) ?? make("section", "part");
+      part.dataset.part = name;
+      setChildren(part, nodes);
+      parts.set(name, part);
+    }
+    this.parts = parts;
+    setChildren(this.node, [...parts.values()]);
   }
 
   /**

@@ -1,11 +1,12 @@
 // One table of the page: cells are kept and only what changed is written.
 
-import {make, setAttribute, setChildren} from "./dom.js";
+import {make, setAttribute, setChildren, setClass, setText} from "./dom.js";
 
 /**
  * @typedef {import("../types.js").TableBlock} TableBlock
  * @typedef {import("../types.js").Cell} Cell
  * @typedef {import("../types.js").Row} Row
+ * @typedef {import("../types.js").Column} Column
  * @typedef {{node: HTMLTableCellElement, text: HTMLElement, shown: string}} CellView
  * @typedef {{node: HTMLTableRowElement, cells: CellView[], shown: string}} RowView
  */
@@ -44,15 +45,16 @@ export class TableView {
   /** @param {TableBlock} block */
   show(block) {
     const look = block.look ?? "list";
-    if (this.table.className !== look) this.table.className = look;
-    this.node.className = `block table-block look-${look}${block.rows.some(hasWords) ? "" : " unprinted"}`;
-    setAttribute(this.table, "role", block.rows.some((row) => row.fold_id) ? "treegrid" : "grid");
+    const folds = block.rows.some((row) => row.fold_id);
+    setClass(this.table, look);
+    setClass(this.node, `block table-block look-${look}${block.rows.some(hasWords) ? "" : " unprinted"}`);
+    setAttribute(this.table, "role", folds ? "treegrid" : "grid");
     this.#showColumns(block);
     /** @type {Map<string, RowView>} */
     const rows = new Map();
     block.rows.forEach((row, index) => {
       const key = row.id || `#${index}`;
-      rows.set(key, this.#showRow(this.rows.get(key), row, block));
+      rows.set(key, this.#showRow(this.rows.get(key), row, block.columns, folds));
     });
     this.rows = rows;
     setChildren(this.body, [...rows.values()].map((row) => row.node));
@@ -83,23 +85,24 @@ export class TableView {
   /**
    * @param {RowView | undefined} before
    * @param {Row} row
-   * @param {TableBlock} block
+   * @param {Column[]} columns
+   * @param {boolean} inTree  some row of the table unfolds
    * @returns {RowView}
    */
-  #showRow(before, row, block) {
+  #showRow(before, row, columns, inTree) {
     const shown = JSON.stringify(row);
     if (before && before.shown === shown) return before;
     const node = before?.node ?? make("tr");
     const role = row.role ?? "body";
-    node.className = `row-${role}${row.fold_id ? " folds" : ""}${hasWords(row) ? "" : " unprinted"}`;
+    setClass(node, `row-${role}${row.fold_id ? " folds" : ""}${hasWords(row) ? "" : " unprinted"}`);
     setAttribute(node, "role", "row");
     setAttribute(node, "data-fold", row.fold_id || null);
     setAttribute(node, "aria-expanded", row.fold_id ? String(Boolean(row.open)) : null);
-    setAttribute(node, "aria-level", block.rows.some((other) => other.fold_id) ? (role === "detail" ? "2" : "1") : null);
+    setAttribute(node, "aria-level", inTree ? (role === "detail" ? "2" : "1") : null);
     const kept = before?.cells ?? [];
     let column = 0;
     const views = row.cells.map((cell, index) => {
-      const view = showCell(kept[index], cell, block.columns.slice(column, column + (cell.span ?? 1)), Boolean(row.fold_id) && index === 0);
+      const view = showCell(kept[index], cell, columns.slice(column, column + (cell.span ?? 1)), Boolean(row.fold_id) && index === 0);
       column += cell.span ?? 1;
       return view;
     });
@@ -119,7 +122,7 @@ function hasWords(row) {
 /**
  * @param {CellView | undefined} before
  * @param {Cell} cell
- * @param {import("../types.js").Column[]} columns  those it spans
+ * @param {Column[]} columns  those it spans
  * @param {boolean} folds  it carries the mark that unfolds its row
  * @returns {CellView}
  */
@@ -141,10 +144,11 @@ function showCell(before, cell, columns, folds) {
   if (folds) classes.push("fold-mark");
   const words = cell.text || (cell.editable && kind !== "button" ? cell.hint : "") || "";
   if (!cell.text && words) classes.push("empty");
-  node.className = classes.join(" ");
+  setClass(node, classes.join(" "));
   if (kind === "equation" && cell.text) setEquation(text, words);
-  else if (text.textContent !== words) text.textContent = words;
-  node.colSpan = cell.span ?? 1;
+  else setText(text, words);
+  const span = cell.span ?? 1;
+  setAttribute(node, "colspan", span > 1 ? String(span) : null);
   setAttribute(node, "role", "gridcell");
   setAttribute(node, "data-cell", cell.id || null);
   setAttribute(node, "tabindex", cell.id || folds ? node.getAttribute("tabindex") ?? "-1" : null);
