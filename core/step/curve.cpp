@@ -50,7 +50,8 @@ Result<SaturationCurve> SaturationCurve::of(const facts::Species& species) {
   curve.step_ = (1 / coldest - 1 / hottest) / kSteps;
   std::optional<std::size_t> first_known;
   for (int i = 0; i <= kSteps; ++i) {
-    const Result<thermo::Saturation> point = thermo::vapour_pressure(species, 1 / (curve.first_ + i * curve.step_));
+    const Result<thermo::Saturation> point =
+        thermo::vapour_pressure(species, 1 / (curve.first_ + i * curve.step_));
     if (!point.ok()) {
       if (!first_known) continue;  // above the critical temperature
       break;                       // below the range: the last slope goes on
@@ -61,8 +62,9 @@ Result<SaturationCurve> SaturationCurve::of(const facts::Species& species) {
     curve.log_pressure_.push_back(std::log(point->value));
   }
   if (!first_known || curve.log_pressure_.size() < 4) {
-    return Error{"thermo.no_vapour_pressure", "Nothing here tells the vapour pressure of " + species.name + ".",
-                 species.text, "Type its vapour pressure."};
+    return Error{"thermo.no_vapour_pressure",
+                 "Nothing here tells the vapour pressure of " + species.name + ".", species.text,
+                 "Type its vapour pressure."};
   }
   curve.first_ += static_cast<double>(*first_known) * curve.step_;
   const Result<thermo::Saturation> there = thermo::vapour_pressure(species, boiling->value);

@@ -1,5 +1,5 @@
-// h(T) − h(298.15 K) and vapour pressure of one species as plain arithmetic: looked up once, evaluated millions of
-// times. Words and sources of the same figures stand in core/thermo.
+// h(T) − h(298.15 K) and vapour pressure of one species as plain arithmetic: looked up once, evaluated
+// millions of times. Words and sources of the same figures stand in core/thermo.
 #pragma once
 
 #include <memory>

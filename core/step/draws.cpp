@@ -1,4 +1,5 @@
-// Seeded draws through a step. Only + − × ÷ √ and one logarithm a pair, so that native and browser draw alike.
+// Seeded draws through a step. Only + − × ÷ √ and one logarithm a pair, so that native and browser draw
+// alike.
 #include <algorithm>
 #include <cmath>
 
@@ -120,13 +121,25 @@ std::vector<Block> blocks(const Model& model) {
     block.root.assign(n * n, 0);
     for (std::size_t i = 0; i < n; ++i) {
       for (std::size_t j = 0; j <= i; ++j)
-        block.root[i * n + j] = uncertainty::covariance(slots[block.slots[i]].spread, slots[block.slots[j]].spread) /
-                                (kHalfWidth * kHalfWidth);
+        block.root[i * n + j] =
+            uncertainty::covariance(slots[block.slots[i]].spread, slots[block.slots[j]].spread) /
+            (kHalfWidth * kHalfWidth);
     }
     take_root(block.root, n);
     result.push_back(std::move(block));
   }
   return result;
+}
+
+/// Slope of the missing heat by the sought blank at the solution; 0 where the balance has no value beside it.
+double slope_at(const Model& model, const std::vector<double>& nominal) {
+  std::vector<double> v = nominal;
+  Work work;
+  if (model.evaluate(v, work) != Trouble::None) return 0;
+  const double x = v[model.sought()], step = 1e-5 * std::max(std::fabs(x), 1e-3);
+  const std::optional<double> above = heat_missing(model, v, work, x + step),
+                              below = heat_missing(model, v, work, x - step);
+  return above && below ? (*above - *below) / (2 * step) : 0;
 }
 
 DrawnFigure summary(std::vector<double>& values, std::size_t draws) {
@@ -148,7 +161,8 @@ DrawnFigure summary(std::vector<double>& values, std::size_t draws) {
 }  // namespace
 
 std::vector<std::optional<DrawnFigure>> draw_figures(const Model& model, const std::vector<FigureId>& ids,
-                                                     const std::vector<double>& nominal, const DrawOptions& options) {
+                                                     const std::vector<double>& nominal,
+                                                     const DrawOptions& options) {
   const std::vector<Block> drawn_together = blocks(model);
   Random random(options.seed);
   std::vector<std::vector<double>> values(ids.size());
@@ -156,6 +170,7 @@ std::vector<std::optional<DrawnFigure>> draw_figures(const Model& model, const s
   std::vector<double> v = nominal, z;
   std::vector<std::optional<double>> figures;
   Work work;
+  const double slope = slope_at(model, nominal);
   for (std::size_t draw = 0; draw < options.draws; ++draw) {
     v = nominal;
     for (const Block& block : drawn_together) {
@@ -171,7 +186,7 @@ std::vector<std::optional<DrawnFigure>> draw_figures(const Model& model, const s
         if (slot.blank) at = std::min(slot.high, std::max(slot.low, at));
       }
     }
-    if (!solve_near(model, v, work)) continue;
+    if (!solve_near(model, v, work, slope)) continue;
     compute_figures(model, ids, v, work, figures);
     for (std::size_t i = 0; i < ids.size(); ++i) {
       if (figures[i]) values[i].push_back(*figures[i]);
@@ -180,7 +195,8 @@ std::vector<std::optional<DrawnFigure>> draw_figures(const Model& model, const s
   std::vector<std::optional<DrawnFigure>> result(ids.size());
   for (std::size_t i = 0; i < ids.size(); ++i) {
     // Below a tenth of the draws there is no distribution to speak of.
-    if (values[i].size() * 10 >= options.draws && !values[i].empty()) result[i] = summary(values[i], options.draws);
+    if (values[i].size() * 10 >= options.draws && !values[i].empty())
+      result[i] = summary(values[i], options.draws);
   }
   return result;
 }

@@ -21,8 +21,10 @@ double heat_set_free(const Model& model, const std::vector<double>& v, const Wor
   return heat;
 }
 
-/// Heat that is over when all that was charged at `start` has reacted and stands at `end`, nothing evaporated.
-double heat_over(const Model& model, const std::vector<double>& v, const Work& work, double start, double end) {
+/// Heat that is over when all that was charged at `start` has reacted and stands at `end`, nothing
+/// evaporated.
+double heat_over(const Model& model, const std::vector<double>& v, const Work& work, double start,
+                 double end) {
   double heat = -work.reaction_heat;
   for (std::size_t p = 0; p < work.parts.size(); ++p)
     heat += work.parts[p] * model.enthalpy(v, model.part_state(p), start);
@@ -35,15 +37,19 @@ double heat_over(const Model& model, const std::vector<double>& v, const Work& w
 /// Where the heat that is set free ends when nothing is taken away [K].
 std::optional<double> adiabatic_end(const Model& model, const std::vector<double>& v, const Work& work,
                                     double start, double vessel) {
-  constexpr double kColdest = 50, kHottest = 20000;  // extrapolated heat capacities; the sheet says "notional"
-  const auto over = [&](double end) { return heat_over(model, v, work, start, end) - vessel * (end - start); };
+  constexpr double kColdest = 50,
+                   kHottest = 20000;  // extrapolated heat capacities; the sheet says "notional"
+  const auto over = [&](double end) {
+    return heat_over(model, v, work, start, end) - vessel * (end - start);
+  };
   double a = start, fa = over(a), b = a + 1, fb = over(b);
   const double small = 1e-12 * (std::fabs(fa) + std::fabs(work.reaction_heat)) + 1e-300;
   for (int turn = 0; turn < 60; ++turn) {
     if (std::fabs(fb) <= small) return b;
     if (fb == fa) return std::nullopt;
     const double next = std::min(kHottest, std::max(kColdest, b - fb * (b - a) / (fb - fa)));
-    if (next == b) return std::fabs(fb) <= 1e-9 * std::fabs(work.reaction_heat) ? std::optional<double>(b) : std::nullopt;
+    if (next == b)
+      return std::fabs(fb) <= 1e-9 * std::fabs(work.reaction_heat) ? std::optional<double>(b) : std::nullopt;
     a = b, fa = fb;
     b = next, fb = over(b);
   }
@@ -106,7 +112,8 @@ double mass_fed(const Model& model, const Work& work) {
   return mass;
 }
 
-double charge_heat_capacity(const Model& model, const Work& work, const std::vector<double>& v, double temperature) {
+double charge_heat_capacity(const Model& model, const Work& work, const std::vector<double>& v,
+                            double temperature) {
   double sum = 0;
   for (std::size_t p = 0; p < work.parts.size(); ++p) {
     if (work.parts[p] != 0) sum += work.parts[p] * model.heat_capacity(v, model.part_state(p), temperature);
@@ -148,8 +155,8 @@ std::vector<FigureId> figures_of(const Model& model) {
   return ids;
 }
 
-void compute_figures(const Model& model, const std::vector<FigureId>& ids, const std::vector<double>& v, Work& work,
-                     std::vector<std::optional<double>>& out) {
+void compute_figures(const Model& model, const std::vector<FigureId>& ids, const std::vector<double>& v,
+                     Work& work, std::vector<std::optional<double>>& out) {
   const bool charge = model.input().kind == StepKind::Charge;
   const double held = charge ? process_temperature(model, v) : units::kReferenceTemperature;
   const double free = heat_set_free(model, v, work, held);

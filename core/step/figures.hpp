@@ -1,5 +1,5 @@
-// Every figure that a step answers with, as plain numbers: what the sheet shows, what the ± is taken of, what the
-// curves draw.
+// Every figure that a step answers with, as plain numbers: what the sheet shows, what the ± is taken of, what
+// the curves draw.
 #pragma once
 
 #include "core/step/model.hpp"
@@ -7,20 +7,21 @@
 namespace heatledger::step {
 
 enum class FigureId : std::uint8_t {
-  Sought,           ///< the blank that is sought; always the first
-  HeatSetFree,      ///< by the reactions at 25 °C (through-flow) or at process temperature (charge), > 0 exothermic
-  HeatPerMass,      ///< the same per kilogram fed [J/kg]
-  Conductance,      ///< UA that the duty asks for [W/K]
-  Time,             ///< charge: that a typed cooling capacity asks for [s]
-  MeanDuty,         ///< charge: heat set free over the time [W]
-  PeakDuty,         ///< charge: at the start of a first-order reaction held at temperature [W]
-  AdiabaticRise,    ///< heat set free / (m cp) [K]
-  AdiabaticEnd,     ///< process temperature plus that [K]
-  EndByEnthalpy,    ///< adiabatic end temperature by h(T) [K]
-  EndWithVessel,    ///< the same with the vessel [K]
-  ThermalInertia,   ///< 1 + vessel / (m cp)
-  BoilingPoint,     ///< of the final mixture [K]
-  BoiledOff,        ///< solvent boiled off when the rise stops at the boiling point [kg]
+  Sought,          ///< the blank that is sought; always the first
+  HeatSetFree,     ///< by the reactions at 25 °C (through-flow) or at process temperature (charge), > 0
+                   ///< exothermic
+  HeatPerMass,     ///< the same per kilogram fed [J/kg]
+  Conductance,     ///< UA that the duty asks for [W/K]
+  Time,            ///< charge: that a typed cooling capacity asks for [s]
+  MeanDuty,        ///< charge: heat set free over the time [W]
+  PeakDuty,        ///< charge: at the start of a first-order reaction held at temperature [W]
+  AdiabaticRise,   ///< heat set free / (m cp) [K]
+  AdiabaticEnd,    ///< process temperature plus that [K]
+  EndByEnthalpy,   ///< adiabatic end temperature by h(T) [K]
+  EndWithVessel,   ///< the same with the vessel [K]
+  ThermalInertia,  ///< 1 + vessel / (m cp)
+  BoilingPoint,    ///< of the final mixture [K]
+  BoiledOff,       ///< solvent boiled off when the rise stops at the boiling point [kg]
 };
 
 /// Which figures a step has; the order is that of the sheet.

@@ -13,7 +13,8 @@ struct Flash {
 
 /// Moles of vapour, gases that do not condense included. y_i p = x_i p°_i for every condensable i.
 /// @param amounts  [mol] of each substance
-/// @param k        p°_i / p of those that may condense; 0: takes no part (its amount stands in `others` or nowhere)
+/// @param k        p°_i / p of those that may condense; 0: takes no part (its amount stands in `others` or
+/// nowhere)
 /// @source H. H. Rachford, J. D. Rice, J. Pet. Technol. 4 (1952) 10-19, equation for the vapour share
 double vapour_moles(const Flash& others, const std::vector<double>& amounts, const std::vector<double>& k);
 

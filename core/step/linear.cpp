@@ -12,8 +12,8 @@ bool solve_linear(std::vector<double>& rows, std::size_t n, std::vector<double>&
     for (std::size_t i = k + 1; i < n; ++i) {
       if (std::fabs(rows[i * width + k]) > std::fabs(rows[pivot * width + k])) pivot = i;
     }
-    // Coefficients are stoichiometric numbers and shares of them: what is left of one after cancelling is below
-    // 1e-12.
+    // Coefficients are stoichiometric numbers and shares of them: what is left of one after cancelling is
+    // below 1e-12.
     if (std::fabs(rows[pivot * width + k]) < 1e-12) return false;
     if (pivot != k) {
       for (std::size_t c = k; c < width; ++c) std::swap(rows[k * width + c], rows[pivot * width + c]);

@@ -96,7 +96,8 @@ Trouble Model::feed_amounts(const std::vector<double>& v, Work& work) const {
       const Feed& feed = input_.feeds[f];
       if (feed.excess.has_value() != excess) continue;
       const FeedPlan& plan = feeds_[f];
-      const Trouble trouble = feed.shares == ShareKind::None ? parts_by_amount(v, f, work) : parts_by_share(v, f, work);
+      const Trouble trouble =
+          feed.shares == ShareKind::None ? parts_by_amount(v, f, work) : parts_by_share(v, f, work);
       if (trouble != Trouble::None) return trouble;
       for (std::size_t p = 0; p < plan.parts; ++p)
         work.fed[feed.parts[p].substance] += work.parts[plan.first_part + p];
@@ -126,8 +127,7 @@ Trouble Model::parts_by_amount(const std::vector<double>& v, std::size_t f, Work
   const FeedPlan& plan = feeds_[f];
   for (std::size_t p = 0; p < plan.parts; ++p) {
     const FeedPart& part = input_.feeds[f].parts[p];
-    work.parts[plan.first_part + p] =
-        moles(v, f, p, part.measure, v[*figures_[plan.first_part + p].figure]);
+    work.parts[plan.first_part + p] = moles(v, f, p, part.measure, v[*figures_[plan.first_part + p].figure]);
   }
   return Trouble::None;
 }
@@ -193,6 +193,15 @@ Trouble Model::react(const std::vector<double>& v, Work& work) const {
     progress_equations(v, work);
     if (!solve_linear(work.matrix, n, work.extents)) return Trouble::Undetermined;
   }
+  for (std::size_t j = 0; j < n; ++j) {
+    const Progress& progress = input_.reactions[j].progress;
+    if (progress.kind == ProgressKind::Extent || !(work.extents[j] < 0)) continue;
+    if (work.extents[j] < -kShort * work.fed[progress.of]) {
+      work.culprit = progress.of;
+      return Trouble::Backwards;
+    }
+    work.extents[j] = 0;
+  }
   work.gross = work.fed;
   for (std::size_t j = 0; j < n; ++j) {
     for (const Term& term : reactions_[j].terms) {
@@ -242,8 +251,7 @@ void Model::progress_equations(const std::vector<double>& v, Work& work) const {
         break;
       case ProgressKind::Selectivity:
         row[j] = consumed;
-        for (std::size_t k = 0; k < n; ++k)
-          row[k] -= figure * std::max(0.0, -coefficient(k, progress.of));
+        for (std::size_t k = 0; k < n; ++k) row[k] -= figure * std::max(0.0, -coefficient(k, progress.of));
         break;
     }
   }
@@ -315,7 +323,8 @@ void Model::downstream(const std::vector<double>& v, Work& work) const {
       work.outlet_heat += (work.leaving[i] - vapour) * enthalpy(v, plan.state, temperature);
   }
   work.vessel_heat = vessel_ ? v[*vessel_] * (temperature - v[*vessel_temperature_]) : 0;
-  work.needed = work.outlet_heat - work.inlet_heat + work.reaction_heat + work.vessel_heat + v[loss_] - v[shaft_];
+  work.needed =
+      work.outlet_heat - work.inlet_heat + work.reaction_heat + work.vessel_heat + v[loss_] - v[shaft_];
 }
 
 Status Model::curves_present(const std::vector<double>& v, const Work& work) const {

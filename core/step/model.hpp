@@ -1,5 +1,5 @@
-// A step as plain arithmetic: one flat list of numbers in, amounts and heats out. The sought unknown, the ±, the
-// curves and the checker's slips all ask the same arithmetic with some numbers changed.
+// A step as plain arithmetic: one flat list of numbers in, amounts and heats out. The sought unknown, the ±,
+// the curves and the checker's slips all ask the same arithmetic with some numbers changed.
 #pragma once
 
 #include <optional>
@@ -16,14 +16,15 @@ namespace heatledger::step {
 
 /// One number that the step is computed from: a blank of the sheet or a figure of the data.
 struct Slot {
-  std::string id;     ///< "feed.0.temperature", "reaction.1.progress", "outlet.temperature", "duty", "reaction.0.heat", …
+  std::string id;     ///< "feed.0.temperature", "reaction.1.progress", "outlet.temperature", "duty",
+                      ///< "reaction.0.heat", …
   std::string label;  ///< "temperature of the feed air"
   units::Dimension dimension;
-  double value = 0;                ///< SI; of a sought blank the start of the search
-  uncertainty::Quantity spread;    ///< the ± of the value as independent parts; its own value is not used
-  double low = 0, high = 0;        ///< where a search may look
-  bool blank = false;              ///< a person types it, so it may be sought
-  bool typed = false;              ///< a person has typed it
+  double value = 0;              ///< SI; of a sought blank the start of the search
+  uncertainty::Quantity spread;  ///< the ± of the value as independent parts; its own value is not used
+  double low = 0, high = 0;      ///< where a search may look
+  bool blank = false;            ///< a person types it, so it may be sought
+  bool typed = false;            ///< a person has typed it
 };
 
 /// What may be wrong with a set of numbers.
@@ -31,7 +32,8 @@ enum class Trouble : std::uint8_t {
   None,
   Exhausted,     ///< a reaction takes more of a substance than there is (Work::culprit)
   Undetermined,  ///< the progress figures do not fix every extent, or contradict each other
-  BadShare,      ///< shares of a feed above one
+  Backwards,  ///< selectivities or conversions add up to more than 100 %: a reaction would have to run back
+  BadShare,   ///< shares of a feed above one
 };
 
 /// Amounts and heats of one evaluation; memory kept between evaluations. Amounts [mol], heats [J], for
@@ -47,9 +49,9 @@ struct Work {
   double reaction_heat = 0;     ///< Σ ξ ΔrH(25 °C, reference phases)
   double outlet_heat = 0;
   double vessel_heat = 0;
-  double needed = 0;            ///< heat to the process that closes the balance
+  double needed = 0;  ///< heat to the process that closes the balance
   std::size_t culprit = 0;
-  std::vector<double> matrix;   ///< of the progress equations
+  std::vector<double> matrix;  ///< of the progress equations
   std::vector<double> saturation;
 };
 
@@ -67,8 +69,8 @@ class Model {
  public:
   /// Looks up what the step needs and lays out its numbers.
   /// @errors step.nothing_fed, step.blank, step.two_sought, step.no_heat_capacity, step.no_molar_mass,
-  ///         step.no_density, step.key_not_consumed, step.not_a_blank and those of core/thermo; `where` is the id
-  ///         of the blank
+  ///         step.no_density, step.key_not_consumed, step.not_a_blank and those of core/thermo; `where` is
+  ///         the id of the blank
   static Result<Model> of(StepInput input, Lookups& lookups);
 
   const StepInput& input() const { return input_; }
@@ -140,10 +142,10 @@ class Model {
     double density = 0;  ///< liquid [kg/m³]; 0 when not needed
   };
   struct LeavingPlan {
-    std::size_t state = 0;               ///< unsplit, or as liquid
-    std::optional<std::size_t> vapour;   ///< state as vapour when split
-    std::optional<std::size_t> share;    ///< slot of a typed share
-    bool by_saturation = false;          ///< leaves split by saturation
+    std::size_t state = 0;                      ///< unsplit, or as liquid
+    std::optional<std::size_t> vapour;          ///< state as vapour when split
+    std::optional<std::size_t> share;           ///< slot of a typed share
+    bool by_saturation = false;                 ///< leaves split by saturation
     std::optional<SaturationCurve> saturation;  ///< known
     std::optional<std::size_t> saturation_slot;
   };

@@ -47,8 +47,9 @@ class ModelBuilder {
   ModelBuilder(StepInput input, Lookups& lookups) : lookups_(lookups) { model_.input_ = std::move(input); }
 
   Result<Model> build() {
-    for (const auto stage : {&ModelBuilder::substances, &ModelBuilder::reactions, &ModelBuilder::feeds,
-                             &ModelBuilder::outlet, &ModelBuilder::reflux, &ModelBuilder::wall, &ModelBuilder::sought}) {
+    for (const auto stage :
+         {&ModelBuilder::substances, &ModelBuilder::reactions, &ModelBuilder::feeds, &ModelBuilder::outlet,
+          &ModelBuilder::reflux, &ModelBuilder::wall, &ModelBuilder::sought}) {
       if (const Status done = (this->*stage)(); !done.ok()) return done.error();
     }
     return std::move(model_);
@@ -58,8 +59,9 @@ class ModelBuilder {
   const StepInput& input() const { return model_.input_; }
 
   /// Lays out a number. An empty blank is only allowed where it is sought.
-  Result<std::size_t> blank(const std::string& id, const std::string& label, const units::Dimension& dimension,
-                            const Blank& typed, double low, double high, std::optional<double> otherwise = {}) {
+  Result<std::size_t> blank(const std::string& id, const std::string& label,
+                            const units::Dimension& dimension, const Blank& typed, double low, double high,
+                            std::optional<double> otherwise = {}) {
     const bool is_sought = id == input().sought;
     if (!typed && !is_sought && !otherwise) return blank_error(id, label);
     Slot slot;
@@ -71,7 +73,8 @@ class ModelBuilder {
     slot.blank = true;
     slot.typed = typed.has_value();
     slot.value = typed ? typed->value : otherwise.value_or(0);
-    if (!is_sought && typed && !(std::isfinite(typed->value) && typed->value >= low && typed->value <= high)) {
+    if (!is_sought && typed &&
+        !(std::isfinite(typed->value) && typed->value >= low && typed->value <= high)) {
       return Error{"step.out_of_range", "The " + label + " is outside what it can be.", id,
                    "Look at the figure and its unit."};
     }
@@ -101,7 +104,8 @@ class ModelBuilder {
 
   Status substances() {
     for (const SubstanceInput& substance : input().substances) {
-      CHECK(substance.species != nullptr || substance.by_mass, "a substance is a species or a mixture by mass");
+      CHECK(substance.species != nullptr || substance.by_mass,
+            "a substance is a species or a mixture by mass");
       // Kilograms stand in for moles where there is no molar mass.
       double molar_mass = substance.by_mass ? 1 : substance.species->molar_mass;
       if (!(molar_mass > 0)) molar_mass = 0;
@@ -110,7 +114,8 @@ class ModelBuilder {
     // The reference state of a substance: as the reactions write it, else as it is fed.
     std::vector<std::optional<State>> first(input().substances.size());
     for (const StepReaction& reaction : input().reactions) {
-      CHECK(reaction.substances.size() == reaction.reaction->species.size(), "one substance for each species");
+      CHECK(reaction.substances.size() == reaction.reaction->species.size(),
+            "one substance for each species");
       for (std::size_t i = 0; i < reaction.substances.size(); ++i) {
         std::optional<State>& state = first[reaction.substances[i]];
         if (!state) state = written_state(reaction, i);
@@ -156,11 +161,12 @@ class ModelBuilder {
     std::optional<Quantity> deviation;
     if (whole_cp && condensed(curve.state.phase) && molar_mass > 0) {
       // One typed figure for the whole mass: one error that all its parts share.
-      curve.curve = Curve::constant(whole_cp->value * molar_mass, whole_cp->u95 * molar_mass, "cp of the mass, typed");
+      curve.curve =
+          Curve::constant(whole_cp->value * molar_mass, whole_cp->u95 * molar_mass, "cp of the mass, typed");
       if (!mass_deviation_) {
-        mass_deviation_ = datum("cp", "typed heat capacity of the mass", units::dimension::kNumber, 0,
-                                Quantity(0, 1, uncertainty::source_key(SourceKind::Typed,
-                                                                       text_hash(input().title + "|cp"))));
+        mass_deviation_ = datum(
+            "cp", "typed heat capacity of the mass", units::dimension::kNumber, 0,
+            Quantity(0, 1, uncertainty::source_key(SourceKind::Typed, text_hash(input().title + "|cp"))));
       }
       curve.deviation = mass_deviation_;
     } else if (substance.heat_capacity) {
@@ -182,9 +188,10 @@ class ModelBuilder {
           substance.species != nullptr
               ? thermo::figure_key(SourceKind::HeatCapacity, *substance.species, curve.state.phase)
               : uncertainty::source_key(SourceKind::Typed, text_hash(substance.name + "|cp"));
-      curve.deviation = datum(at + ".cp", "heat capacity of " + substance.name + ", " +
-                                              std::string(thermo::phase_word(curve.state.phase)),
-                              units::dimension::kNumber, 0, Quantity(0, 1, key));
+      curve.deviation = datum(
+          at + ".cp",
+          "heat capacity of " + substance.name + ", " + std::string(thermo::phase_word(curve.state.phase)),
+          units::dimension::kNumber, 0, Quantity(0, 1, key));
     }
     model_.states_.push_back(std::move(curve));
     return model_.states_.size() - 1;
@@ -220,7 +227,8 @@ class ModelBuilder {
     }
     for (const auto& facts : {here, there}) {
       if (facts->from_gas.ok())
-        model_.cautions_.insert(model_.cautions_.end(), facts->from_gas->cautions.begin(), facts->from_gas->cautions.end());
+        model_.cautions_.insert(model_.cautions_.end(), facts->from_gas->cautions.begin(),
+                                facts->from_gas->cautions.end());
     }
     StateCurve curve;
     curve.substance = substance;
@@ -261,6 +269,27 @@ class ModelBuilder {
       model_.reactions_.push_back(std::move(plan));
       if (const Status done = progress(j); !done.ok()) return done;
     }
+    return selectivities();
+  }
+
+  /// Selectivities share out what is consumed; something has to say how much that is.
+  Status selectivities() const {
+    for (std::size_t j = 0; j < input().reactions.size(); ++j) {
+      const Progress& progress = input().reactions[j].progress;
+      if (progress.kind != ProgressKind::Selectivity) continue;
+      bool settled = false;
+      for (std::size_t k = 0; k < input().reactions.size(); ++k) {
+        settled = settled || (input().reactions[k].progress.kind != ProgressKind::Selectivity &&
+                              model_.coefficient(k, progress.of) < 0);
+      }
+      if (!settled) {
+        return Error{"step.progress",
+                     "A selectivity needs to know how much " + input().substances[progress.of].name +
+                         " is consumed in all.",
+                     "reaction." + std::to_string(j) + ".progress",
+                     "Give the total conversion with the last of its reactions."};
+      }
+    }
     return success();
   }
 
@@ -269,13 +298,14 @@ class ModelBuilder {
     const Progress& progress = reaction.progress;
     const std::string id = "reaction." + std::to_string(j) + ".progress";
     const bool extent = progress.kind == ProgressKind::Extent;
-    const char* const words = extent                                          ? "extent of "
+    const char* const words = extent                                       ? "extent of "
                               : progress.kind == ProgressKind::Yield       ? "yield of "
                               : progress.kind == ProgressKind::Selectivity ? "selectivity of "
                                                                            : "conversion by ";
     const Result<std::size_t> slot =
         blank(id, words + reaction.name,
-              extent ? (input().kind == StepKind::ThroughFlow ? units::dimension::kMolarFlow : units::dimension::kAmount)
+              extent ? (input().kind == StepKind::ThroughFlow ? units::dimension::kMolarFlow
+                                                              : units::dimension::kAmount)
                      : units::dimension::kNumber,
               progress.figure, 0, extent ? kFar : 1);
     if (!slot.ok()) return slot.error();
@@ -289,8 +319,8 @@ class ModelBuilder {
     if (progress.kind == ProgressKind::Yield || progress.kind == ProgressKind::Selectivity) {
       if (!(model_.coefficient(j, progress.product) > 0)) {
         return Error{"step.product_not_formed",
-                     input().substances[progress.product].name + " is not formed by " + reaction.name + ".", id,
-                     "Choose a product of this reaction."};
+                     input().substances[progress.product].name + " is not formed by " + reaction.name + ".",
+                     id, "Choose a product of this reaction."};
       }
     }
     return success();
@@ -306,27 +336,31 @@ class ModelBuilder {
       Model::FeedPlan plan;
       plan.first_part = model_.figures_.size();
       plan.parts = feed.parts.size();
-      const Result<std::size_t> temperature = blank(id + ".temperature", "temperature of " + feed.name,
-                                                    units::dimension::kTemperature, feed.temperature, kColdest, kHottest);
+      const Result<std::size_t> temperature =
+          blank(id + ".temperature", "temperature of " + feed.name, units::dimension::kTemperature,
+                feed.temperature, kColdest, kHottest);
       if (!temperature.ok()) return temperature.error();
       plan.temperature = *temperature;
-      const Result<std::size_t> pressure = blank(id + ".pressure", "pressure of " + feed.name,
-                                                 units::dimension::kPressure, feed.pressure, kLeastPressure,
-                                                 kMostPressure, units::kStandardAtmosphere);
+      const Result<std::size_t> pressure =
+          blank(id + ".pressure", "pressure of " + feed.name, units::dimension::kPressure, feed.pressure,
+                kLeastPressure, kMostPressure, units::kStandardAtmosphere);
       if (!pressure.ok()) return pressure.error();
       plan.pressure = *pressure;
       if (feed.shares != ShareKind::None) {
         const Result<std::size_t> total =
-            feed.excess ? blank(id + ".total", "excess in " + feed.name, units::dimension::kNumber, feed.total, 0, 1000)
-                        : blank(id + ".total", "amount of " + feed.name, measure_dimension(feed.measure, flow),
-                                feed.total, 0, kFar);
+            feed.excess ? blank(id + ".total", "excess in " + feed.name, units::dimension::kNumber,
+                                feed.total, 0, 1000)
+                        : blank(id + ".total", "amount of " + feed.name,
+                                measure_dimension(feed.measure, flow), feed.total, 0, kFar);
         if (!total.ok()) return total.error();
         plan.total = *total;
         if (feed.excess) {
           const ExcessOver& over = *feed.excess;
-          if (!(model_.coefficient(over.reaction, over.substance) < 0 && model_.coefficient(over.reaction, over.key) < 0)) {
-            return Error{"step.key_not_consumed", "An excess is reckoned between two reactants of one reaction.",
-                         id + ".total", "Choose two reactants."};
+          if (!(model_.coefficient(over.reaction, over.substance) < 0 &&
+                model_.coefficient(over.reaction, over.key) < 0)) {
+            return Error{"step.key_not_consumed",
+                         "An excess is reckoned between two reactants of one reaction.", id + ".total",
+                         "Choose two reactants."};
           }
         }
       }
@@ -364,7 +398,8 @@ class ModelBuilder {
       return Error{"step.no_molar_mass", substance.name + " has no molar mass.", id, "Enter it by mass."};
     }
     if ((by_mass || by_volume) && !(model_.molar_mass_[part.substance] > 0)) {
-      return Error{"step.no_molar_mass", substance.name + " has no molar mass.", id, "Enter it in moles, or give its molar mass."};
+      return Error{"step.no_molar_mass", substance.name + " has no molar mass.", id,
+                   "Enter it in moles, or give its molar mass."};
     }
     State state = part.state;
     if (state.phase == Phase::Unstated) state = reference_states_[part.substance];
@@ -393,7 +428,8 @@ class ModelBuilder {
       plan.rest = p;
     } else {
       const Result<std::size_t> slot =
-          shares ? blank(id, "share of " + substance.name + " in " + feed.name, units::dimension::kNumber, part.figure, 0, 1)
+          shares ? blank(id, "share of " + substance.name + " in " + feed.name, units::dimension::kNumber,
+                         part.figure, 0, 1)
                  : blank(id, "amount of " + substance.name + " in " + feed.name,
                          measure_dimension(part.measure, flow), part.figure, 0, kFar);
       if (!slot.ok()) return slot.error();
@@ -405,8 +441,9 @@ class ModelBuilder {
 
   Status outlet() {
     const Outlet& outlet = input().outlet;
-    const Result<std::size_t> temperature = blank("outlet.temperature", end_words(), units::dimension::kTemperature,
-                                                  outlet.temperature, kColdest, kHottest);
+    const Result<std::size_t> temperature =
+        blank("outlet.temperature", end_words(), units::dimension::kTemperature, outlet.temperature, kColdest,
+              kHottest);
     if (!temperature.ok()) return temperature.error();
     model_.outlet_temperature_ = *temperature;
     const Result<std::size_t> pressure =
@@ -434,7 +471,8 @@ class ModelBuilder {
     const SubstanceInput& substance = input().substances[leaving.substance];
     const std::string id = "leaving." + std::to_string(l);
     Model::LeavingPlan& plan = model_.leaving_[leaving.substance];
-    const bool split = leaving.vapour_share || leaving.by_saturation || input().sought == id + ".vapour_share";
+    const bool split =
+        leaving.vapour_share || leaving.by_saturation || input().sought == id + ".vapour_share";
     State state = leaving.state;
     if (split && state.phase != Phase::Liquid) state = State{Phase::Liquid, {}};
     if (state.phase == Phase::Unstated) state = reference_states_[leaving.substance];
@@ -447,8 +485,9 @@ class ModelBuilder {
     if (!vapour.ok()) return vapour.error();
     plan.vapour = *vapour;
     if (!leaving.by_saturation) {
-      const Result<std::size_t> share = blank(id + ".vapour_share", "share of " + substance.name + " that leaves as vapour",
-                                              units::dimension::kNumber, leaving.vapour_share, 0, 1);
+      const Result<std::size_t> share =
+          blank(id + ".vapour_share", "share of " + substance.name + " that leaves as vapour",
+                units::dimension::kNumber, leaving.vapour_share, 0, 1);
       if (!share.ok()) return share.error();
       plan.share = *share;
       return success();
@@ -486,7 +525,8 @@ class ModelBuilder {
     return success();
   }
 
-  /// Under reflux the liquids of the charge boil together; what has no vapour pressure is taken not to evaporate.
+  /// Under reflux the liquids of the charge boil together; what has no vapour pressure is taken not to
+  /// evaporate.
   Status reflux() {
     if (!input().charge.solvent) return success();
     const std::size_t solvent = *input().charge.solvent;
@@ -498,7 +538,8 @@ class ModelBuilder {
       const SubstanceInput& substance = input().substances[i];
       if (!model_.is_liquid(i) || (substance.species == nullptr && !substance.vapour_pressure)) continue;
       if (!saturation(i).ok()) {
-        model_.cautions_.push_back(substance.name + " has no vapour pressure here and is taken not to evaporate.");
+        model_.cautions_.push_back(substance.name +
+                                   " has no vapour pressure here and is taken not to evaporate.");
       }
     }
     return success();
@@ -521,13 +562,15 @@ class ModelBuilder {
     }
     const Vessel& vessel = input().vessel;
     if (vessel.heat_capacity || input().sought == "vessel.heat_capacity") {
-      const Result<std::size_t> capacity = blank("vessel.heat_capacity", "heat capacity of the vessel",
-                                                 units::dimension::kHeatCapacity, vessel.heat_capacity, 0, kFar);
+      const Result<std::size_t> capacity =
+          blank("vessel.heat_capacity", "heat capacity of the vessel", units::dimension::kHeatCapacity,
+                vessel.heat_capacity, 0, kFar);
       if (!capacity.ok()) return capacity.error();
       model_.vessel_ = *capacity;
       if (vessel.temperature || input().sought == "vessel.temperature") {
-        const Result<std::size_t> start = blank("vessel.temperature", "temperature of the vessel at the start",
-                                                units::dimension::kTemperature, vessel.temperature, kColdest, kHottest);
+        const Result<std::size_t> start =
+            blank("vessel.temperature", "temperature of the vessel at the start",
+                  units::dimension::kTemperature, vessel.temperature, kColdest, kHottest);
         if (!start.ok()) return start.error();
         model_.vessel_temperature_ = *start;
       } else {

@@ -10,7 +10,6 @@ namespace heatledger::step {
 /// A value, or nothing where the function has none.
 using Function = std::function<std::optional<double>(double)>;
 
-
 struct Search {
   std::vector<double> roots;              ///< rising
   std::optional<double> lowest, highest;  ///< of the function over the points tried; empty: no value anywhere

@@ -54,14 +54,15 @@ Error no_solution(const Model& model, const Search& search) {
   const bool flow = model.input().kind == StepKind::ThroughFlow;
   if (!search.lowest) {
     return Error{"step.no_solution",
-                 "No value of the " + slot.label + " leaves amounts that can be: a reaction always takes more than there is.",
+                 "No value of the " + slot.label +
+                     " leaves amounts that can be: a reaction always takes more than there is.",
                  slot.id, "Look at the conversions and the amounts fed."};
   }
   const std::string near = value_text(search.nearest_x, slot.dimension, flow);
   return Error{"step.no_solution",
                "No " + slot.label + " from " + value_text(search.first_x, slot.dimension, flow) + " to " +
-                   value_text(search.last_x, slot.dimension, flow) + " closes the balance; nearest, at " + near + ", " +
-                   heat_text(std::fabs(search.nearest), flow) +
+                   value_text(search.last_x, slot.dimension, flow) + " closes the balance; nearest, at " +
+                   near + ", " + heat_text(std::fabs(search.nearest), flow) +
                    (search.nearest > 0 ? " of heat are still missing." : " of heat are left over."),
                slot.id, "Look at the duty, the amounts and the temperatures that are typed."};
 }
@@ -89,14 +90,22 @@ Error trouble_error(const Model& model, Trouble trouble, const Work& work) {
                    "The reactions take more " + name + " than there is: " +
                        amount_text(work.gross[work.culprit] - work.leaving[work.culprit],
                                    model.input().kind == StepKind::ThroughFlow) +
-                       " of " + amount_text(work.gross[work.culprit], model.input().kind == StepKind::ThroughFlow) + ".",
+                       " of " +
+                       amount_text(work.gross[work.culprit], model.input().kind == StepKind::ThroughFlow) +
+                       ".",
                    "reactions", "Lower a conversion, or feed more " + name + "."};
     }
     case Trouble::Undetermined:
-      return Error{"step.progress",
-                   "The progress figures do not settle how far each reaction goes: two of them say the same, or one "
-                   "refers to a species that is not there.",
-                   "reactions", "Give one figure for each reaction; with selectivities, one total conversion."};
+      return Error{
+          "step.progress",
+          "The progress figures do not settle how far each reaction goes: two of them say the same, or one "
+          "refers to a species that is not there.",
+          "reactions", "Give one figure for each reaction; with selectivities, one total conversion."};
+    case Trouble::Backwards:
+      return Error{"step.above_whole",
+                   "The conversions and selectivities of " + model.input().substances[work.culprit].name +
+                       " add up to more than 100 %.",
+                   "reactions", "Lower one of them."};
     case Trouble::BadShare:
       return Error{"step.shares", "The shares of a feed add up to more than 100 %, or to nothing.", "feeds",
                    "Correct the shares; one blank share is the rest."};
@@ -137,7 +146,8 @@ Status solve_sought(const Model& model, std::vector<double>& v, Work& work) {
   };
   const Search search = find_roots(f, points(model), 0);
   // A balance that never moves by more than rounding has nothing to do with this blank.
-  if (search.lowest && *search.highest - *search.lowest <= 1e-13 * (scale + std::fabs(v[model.duty_slot()]))) {
+  if (search.lowest &&
+      *search.highest - *search.lowest <= 1e-13 * (scale + std::fabs(v[model.duty_slot()]))) {
     const Slot& slot = model.slots()[model.sought()];
     return Error{"step.no_influence", "The " + slot.label + " does not change the balance.", slot.id,
                  "Seek a blank that does."};
@@ -147,7 +157,8 @@ Status solve_sought(const Model& model, std::vector<double>& v, Work& work) {
       std::vector<double> start = v;
       start[model.sought()] = model.slots()[model.sought()].low;
       const Trouble trouble = model.evaluate(start, work);
-      if (trouble != Trouble::None && trouble != Trouble::Exhausted) return trouble_error(model, trouble, work);
+      if (trouble != Trouble::None && trouble != Trouble::Exhausted)
+        return trouble_error(model, trouble, work);
     }
     return no_solution(model, search);
   }
@@ -157,7 +168,7 @@ Status solve_sought(const Model& model, std::vector<double>& v, Work& work) {
   return success();
 }
 
-bool solve_near(const Model& model, std::vector<double>& v, Work& work) {
+bool solve_near(const Model& model, std::vector<double>& v, Work& work, double known_slope) {
   const std::size_t s = model.sought();
   const Slot& slot = model.slots()[s];
   if (is_duty(model) || model.outlet_sought()) {
@@ -169,11 +180,14 @@ bool solve_near(const Model& model, std::vector<double>& v, Work& work) {
       return true;
     }
   }
-  double a = v[s], step = is_temperature(slot) ? 1.0 : (a != 0 ? 1e-3 * a : 1e-6);
-  if (a + step > slot.high) step = -step;
+  double a = v[s];
   std::optional<double> fa = heat_missing(model, v, work, a);
   if (!fa) return false;
   const double tolerance = 1e-11 * (heat_scale(work) + std::fabs(v[model.duty_slot()]));
+  if (std::fabs(*fa) <= tolerance) return true;
+  double step = is_temperature(slot) ? 1.0 : (a != 0 ? 1e-3 * a : 1e-6);
+  if (known_slope != 0) step = -*fa / known_slope;
+  if (!(a + step <= slot.high && a + step >= slot.low)) step = -1e-3 * step;
   double b = a + step;
   std::optional<double> fb = heat_missing(model, v, work, b);
   for (int turn = 0; turn < 40 && fb; ++turn) {

@@ -12,9 +12,10 @@ namespace heatledger::step {
 ///         step.exhausted, step.progress, step.shares: the numbers themselves are wrong
 Status solve_sought(const Model& model, std::vector<double>& v, Work& work);
 
-/// The same from a point near by, without words: secant steps, then the bracket.
+/// The same from a point near by, without words: secant steps.
+/// @param slope  of the missing heat by the sought blank there; 0 when it is not known
 /// @return false when there is none
-bool solve_near(const Model& model, std::vector<double>& v, Work& work);
+bool solve_near(const Model& model, std::vector<double>& v, Work& work, double slope = 0);
 
 /// Heat still missing: needed − duty, with the sought blank at `x`; empty where the numbers are wrong.
 std::optional<double> heat_missing(const Model& model, std::vector<double>& v, Work& work, double x);

@@ -45,7 +45,8 @@ class Gradient {
   Work work_;
 };
 
-/// Slopes of the figures and of the missing heat by one number; one-sided where the other side does not exist.
+/// Slopes of the figures and of the missing heat by one number; one-sided where the other side does not
+/// exist.
 struct Slopes {
   Values figures;
   double missing = 0;
@@ -121,7 +122,8 @@ std::vector<std::optional<FigureSpread>> first_order(const Model& model, const s
     if (variance > 0) {
       for (const Contribution& c : found[i])
         spread.shares.push_back(
-            {c.slot, c.slope * uncertainty::covariance(model.slots()[c.slot].spread, spread.value) / variance});
+            {c.slot,
+             c.slope * uncertainty::covariance(model.slots()[c.slot].spread, spread.value) / variance});
       std::stable_sort(spread.shares.begin(), spread.shares.end(),
                        [](const Share& a, const Share& b) { return a.share > b.share; });
     }

@@ -1,4 +1,5 @@
-// The ± of a step's figures: to first order with all correlations, and by seeded draws where the answer bends.
+// The ± of a step's figures: to first order with all correlations, and by seeded draws where the answer
+// bends.
 #pragma once
 
 #include "core/step/figures.hpp"
@@ -8,7 +9,8 @@ namespace heatledger::step {
 /// How much of a figure's ± one number carries.
 struct Share {
   std::size_t slot = 0;
-  double share = 0;  ///< of the variance; all shares of a figure add up to one, correlated ones may be negative
+  double share =
+      0;  ///< of the variance; all shares of a figure add up to one, correlated ones may be negative
 };
 
 struct FigureSpread {
@@ -26,7 +28,7 @@ std::vector<std::optional<FigureSpread>> first_order(const Model& model, const s
 struct DrawnFigure {
   double low = 0, high = 0;  ///< 2.5 and 97.5 % of the draws
   double median = 0;
-  double without = 0;        ///< share of the draws in which the figure does not exist
+  double without = 0;  ///< share of the draws in which the figure does not exist
 };
 
 struct DrawOptions {
@@ -34,9 +36,10 @@ struct DrawOptions {
   std::uint64_t seed = 20250131;
 };
 
-/// Draws every number with a ± from its normal distribution, with the correlations of the data, keeps shares and
-/// conversions within their limits, and solves the step again for each.
+/// Draws every number with a ± from its normal distribution, with the correlations of the data, keeps shares
+/// and conversions within their limits, and solves the step again for each.
 std::vector<std::optional<DrawnFigure>> draw_figures(const Model& model, const std::vector<FigureId>& ids,
-                                                     const std::vector<double>& v, const DrawOptions& options = {});
+                                                     const std::vector<double>& v,
+                                                     const DrawOptions& options = {});
 
 }  // namespace heatledger::step

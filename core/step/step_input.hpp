@@ -1,5 +1,6 @@
-// What a person has put down for one process step, in SI: what goes in, what reacts and how far, how it leaves,
-// what crosses the wall. Reading the typed texts is the worksheet's; what follows from them is in step.hpp.
+// What a person has put down for one process step, in SI: what goes in, what reacts and how far, how it
+// leaves, what crosses the wall. Reading the typed texts is the worksheet's; what follows from them is in
+// step.hpp.
 #pragma once
 
 #include <cstdint>
@@ -15,8 +16,8 @@
 
 namespace heatledger::step {
 
-/// Through-flow: amounts are per second, heats are power. Charge: amounts are what is put into the vessel, heats
-/// are energy.
+/// Through-flow: amounts are per second, heats are power. Charge: amounts are what is put into the vessel,
+/// heats are energy.
 enum class StepKind : std::uint8_t { ThroughFlow, Charge };
 
 /// A typed figure [SI] with its ± as typed; no ± counts as exact and is counted.
@@ -36,11 +37,12 @@ struct State {
 struct SubstanceInput {
   std::string name;  ///< as the sheet shows it
   std::shared_ptr<const facts::Species> species;
-  Blank heat_capacity;         ///< typed, any phase [J/(mol K)]
-  Blank mass_heat_capacity;    ///< typed, any phase [J/(kg K)]
-  Blank density;               ///< of the liquid [kg/m³]
-  Blank vapour_pressure;       ///< at the outlet temperature [Pa]; the enthalpy of vaporisation carries it elsewhere
-  bool by_mass = false;        ///< no molar mass: counted in kilograms, in no reaction
+  Blank heat_capacity;       ///< typed, any phase [J/(mol K)]
+  Blank mass_heat_capacity;  ///< typed, any phase [J/(kg K)]
+  Blank density;             ///< of the liquid [kg/m³]
+  Blank
+      vapour_pressure;  ///< at the outlet temperature [Pa]; the enthalpy of vaporisation carries it elsewhere
+  bool by_mass = false;  ///< no molar mass: counted in kilograms, in no reaction
 };
 
 /// How an amount is written.
@@ -70,19 +72,20 @@ struct Feed {
   Blank temperature;  ///< [K]
   Blank pressure;     ///< [Pa], for volumes of gas
   ShareKind shares = ShareKind::None;
-  Blank total;  ///< with shares: [mol], [kg] or [m³] by `measure`; with `excess`: the excess itself (0.2 is 20 %)
+  Blank total;  ///< with shares: [mol], [kg] or [m³] by `measure`; with `excess`: the excess itself (0.2 is
+                ///< 20 %)
   Measure measure = Measure::Mole;
   std::optional<ExcessOver> excess;
   std::vector<FeedPart> parts;
 };
 
 enum class ProgressKind : std::uint8_t {
-  Extent,       ///< [mol]
-  Conversion,   ///< of `of`, consumed by this reaction / fed
+  Extent,                ///< [mol]
+  Conversion,            ///< of `of`, consumed by this reaction / fed
   ConversionOfArriving,  ///< the same, of what is fed and what the reactions above have made or left
-  TotalConversion,       ///< of `of` by all reactions together; this reaction takes what the others leave of it
-  Yield,        ///< `of` turned into `product` by this reaction / fed
-  Selectivity,  ///< `of` turned into `product` by this reaction / consumed by all
+  TotalConversion,  ///< of `of` by all reactions together; this reaction takes what the others leave of it
+  Yield,            ///< `of` turned into `product` by this reaction / fed
+  Selectivity,      ///< `of` turned into `product` by this reaction / consumed by all
 };
 
 struct Progress {
@@ -134,11 +137,11 @@ struct Vessel {
 
 /// What a charge step asks beyond the balance.
 struct ChargeInput {
-  Blank process_temperature;        ///< [K]; empty: that of the outlet, else of the first feed
+  Blank process_temperature;           ///< [K]; empty: that of the outlet, else of the first feed
   std::optional<std::size_t> solvent;  ///< boils under reflux
-  Blank limit_temperature;          ///< typed decomposition limit or other limit [K]
-  Blank cooling;                    ///< capacity of the cooling [W]: gives the time it needs
-  Blank rate_constant;              ///< first order, held at temperature [1/s]: gives the peak
+  Blank limit_temperature;             ///< typed decomposition limit or other limit [K]
+  Blank cooling;                       ///< capacity of the cooling [W]: gives the time it needs
+  Blank rate_constant;                 ///< first order, held at temperature [1/s]: gives the peak
 };
 
 /// The cooled or heated surface.
@@ -154,10 +157,10 @@ struct StepInput {
   std::vector<Feed> feeds;
   std::vector<StepReaction> reactions;
   Outlet outlet;
-  Blank duty;  ///< heat to the process [W] or [J]
-  Blank loss;  ///< heat lost to the surroundings, > 0 [W] or [J]
-  Blank shaft_work;  ///< done on the process, > 0 [W] or [J]
-  Blank time;  ///< charge: over which the heat is set free [s]
+  Blank duty;                ///< heat to the process [W] or [J]
+  Blank loss;                ///< heat lost to the surroundings, > 0 [W] or [J]
+  Blank shaft_work;          ///< done on the process, > 0 [W] or [J]
+  Blank time;                ///< charge: over which the heat is set free [s]
   Blank mass_heat_capacity;  ///< "cp of the mass" [J/(kg K)]: takes the place of all liquids and solids
   Vessel vessel;
   ChargeInput charge;

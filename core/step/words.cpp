@@ -53,7 +53,8 @@ std::string celsius(double kelvin) {
 
 std::string value_text(double value, const units::Dimension& dimension, bool flow) {
   if (dimension == units::dimension::kTemperature) return celsius(value);
-  if (dimension == units::dimension::kPower || dimension == units::dimension::kEnergy) return heat_text(value, flow);
+  if (dimension == units::dimension::kPower || dimension == units::dimension::kEnergy)
+    return heat_text(value, flow);
   if (dimension == units::dimension::kMolarFlow || dimension == units::dimension::kAmount)
     return amount_text(value, flow);
   if (dimension == units::dimension::kNumber) return digits(value * 100) + " %";

@@ -1,0 +1,227 @@
+#include "core/step/step_cautions.hpp"
+
+#include <algorithm>
+#include <cmath>
+
+#include "core/base/number_text.hpp"
+#include "core/step/words.hpp"
+#include "core/thermo/saturation.hpp"
+
+namespace heatledger::step {
+namespace {
+
+using molecule::Phase;
+
+std::string range_text(const Curve& curve) {
+  return display_number(curve.from(), 0) + " to " + display_number(curve.to(), 0) + " K";
+}
+
+void caution_ranges(StepResult& result, const std::vector<StreamLine>& lines) {
+  for (const StreamLine& line : lines) {
+    if (line.amount == 0) continue;
+    for (const StateCurve& state : result.model->states()) {
+      if (state.substance != line.substance || state.state.phase != line.state.phase || !state.curve)
+        continue;
+      if (state.curve->covers(line.temperature)) continue;
+      result.cautions.push_back(result.model->input().substances[line.substance].name + " at " +
+                                celsius(line.temperature) + " is outside the range of its heat capacity, " +
+                                range_text(*state.curve) +
+                                "; the value at the end of the range is carried on.");
+    }
+  }
+}
+
+/// Gas that would condense, liquid that would boil, gas that is no longer ideal.
+void caution_phases(StepResult& result, const std::vector<StreamLine>& lines, bool leaving) {
+  const StepInput& input = result.model->input();
+  for (std::size_t s = 0; s < (leaving ? 1 : input.feeds.size()); ++s) {
+    const double pressure = result.values[*result.model->slot(
+        leaving ? std::string("outlet.pressure") : "feed." + std::to_string(s) + ".pressure")];
+    double gas = 0;
+    for (const StreamLine& line : lines) {
+      if ((leaving || line.stream == s) && line.state.phase == Phase::Gas) gas += line.amount;
+    }
+    for (const StreamLine& line : lines) {
+      if ((!leaving && line.stream != s) || line.amount == 0) continue;
+      const SubstanceInput& substance = input.substances[line.substance];
+      if (substance.species == nullptr || substance.species->coded) continue;
+      const std::string at = substance.name + " at " + celsius(line.temperature);
+      const bool split = leaving && result.model->vapour_state(line.substance).has_value() &&
+                         input.kind == StepKind::ThroughFlow;
+      if (line.state.phase == Phase::Gas) {
+        const double partial = pressure * line.amount / gas;
+        if (const std::string text = thermo::ideal_gas_caution(*substance.species, line.temperature, partial);
+            !text.empty())
+          result.cautions.push_back(text);
+        const Result<thermo::Saturation> over = thermo::vapour_pressure(*substance.species, line.temperature);
+        if (!split && over.ok() && partial > 1.02 * over->value) {
+          result.cautions.push_back(
+              at + " is kept as gas although it would condense: " + display_number(partial / 1000, 1) +
+              " kPa against a saturation pressure of " + display_number(over->value / 1000, 1) + " kPa.");
+        }
+      } else if (line.state.phase == Phase::Liquid && !split) {
+        const Result<thermo::Saturation> boils = thermo::boiling_temperature(*substance.species, pressure);
+        if (boils.ok() && line.temperature > boils->value + 0.05) {
+          result.cautions.push_back(at + " is kept liquid above its boiling point of " +
+                                    celsius(boils->value) + " at " + display_number(pressure / 1000, 0) +
+                                    " kPa.");
+        }
+      }
+    }
+  }
+}
+
+void caution_heats(StepResult& result) {
+  for (const StepReaction& reaction : result.model->input().reactions) {
+    const ReactionHeat& heat = reaction.heat;
+    if (!heat.typed) continue;
+    if (heat.includes_mixing == Includes::Unknown) {
+      result.cautions.push_back(
+          "The typed heat of " + reaction.name +
+          " does not say whether it holds mixing, dilution, evaporation and loss of gas.");
+    } else if (heat.includes_mixing == Includes::Yes) {
+      result.notes.push_back("Mixing and dilution are in the measured heat of " + reaction.name + ".");
+    }
+    if (!reaction.reaction->checkable) {
+      result.notes.push_back("The element balance of " + reaction.name + " is not checkable.");
+    }
+  }
+}
+
+void caution_charge(StepResult& result) {
+  const StepInput& input = result.model->input();
+  if (input.kind != StepKind::Charge || input.reactions.empty()) return;
+  if (!input.charge.rate_constant) result.notes.push_back("Peak heat rate unknown: no rate law.");
+  result.notes.push_back("A mean heat rate is not the duty to design for.");
+  for (const Answer& answer : result.answers) {
+    if (answer.id != FigureId::BoiledOff || answer.value.value() == 0) continue;
+    double there = 0;
+    for (const StreamLine& line : result.out) {
+      if (line.substance == *input.charge.solvent) there += line.mass;
+    }
+    if (answer.value.value() > there) {
+      result.cautions.push_back("The solvent boils dry: " + mass_text(answer.value.value(), false) +
+                                " to boil off, " + mass_text(there, false) + " there.");
+    }
+    result.cautions.push_back(
+        "Reflux holds only while the condenser has cooling and solvent remains; swelling is not assessed.");
+  }
+}
+
+double lowest_limit(const StepResult& result) {
+  double limit = 1e9;
+  if (result.model->input().charge.limit_temperature)
+    limit = result.model->input().charge.limit_temperature->value;
+  const double pressure = result.values[*result.model->slot("outlet.pressure")];
+  for (const StreamLine& line : result.out) {
+    const SubstanceInput& substance = result.model->input().substances[line.substance];
+    if (line.state.phase == Phase::Liquid && substance.species != nullptr && !substance.species->coded) {
+      const Result<thermo::Saturation> boils = thermo::boiling_temperature(*substance.species, pressure);
+      if (boils.ok()) limit = std::min(limit, boils->value);
+    }
+    for (const StateCurve& state : result.model->states()) {
+      if (state.substance == line.substance && state.state.phase == line.state.phase && state.curve)
+        limit = std::min(limit, state.curve->to());
+    }
+  }
+  return limit;
+}
+
+}  // namespace
+
+void add_cautions(StepResult& result, const Work& work) {
+  result.cautions.insert(result.cautions.end(), result.model->cautions().begin(),
+                         result.model->cautions().end());
+  caution_ranges(result, result.in);
+  caution_ranges(result, result.out);
+  caution_phases(result, result.in, false);
+  caution_phases(result, result.out, true);
+  caution_heats(result);
+  caution_charge(result);
+  if (result.closure.duty_by_formation) {
+    const double other = *result.closure.duty_by_formation,
+                 scale =
+                     std::fabs(work.outlet_heat) + std::fabs(work.inlet_heat) + std::fabs(work.reaction_heat);
+    if (std::fabs(other - result.duty) > 1e-6 * scale) {
+      const bool flow = result.model->input().kind == StepKind::ThroughFlow;
+      result.notes.push_back("By formation enthalpies alone the duty is " + heat_text(other, flow) +
+                             "; the heats taken give " + heat_text(result.duty, flow) + ".");
+    }
+  }
+  if (result.exact_inputs > 0)
+    result.notes.push_back(std::to_string(result.exact_inputs) + " typed inputs taken as exact.");
+  std::vector<std::string> once;
+  for (std::string& caution : result.cautions) {
+    if (std::find(once.begin(), once.end(), caution) == once.end()) once.push_back(std::move(caution));
+  }
+  result.cautions = std::move(once);
+}
+
+std::string why_no_figure(const Model& model, FigureId id, const std::vector<double>& v) {
+  switch (id) {
+    case FigureId::Conductance:
+      return "the medium is not " + std::string(v[model.duty_slot()] > 0 ? "warmer" : "colder") +
+             " than the process on its whole way.";
+    case FigureId::Time:
+      return "no heat is set free.";
+    case FigureId::BoilingPoint:
+    case FigureId::BoiledOff:
+      return "the mixture has no boiling point by the data at hand.";
+    default:
+      return "it does not exist at these figures.";
+  }
+}
+
+std::vector<std::string> figure_working(const StepResult& result, const Work& work, FigureId id) {
+  const Model& model = *result.model;
+  const std::vector<double>& v = result.values;
+  const double held = process_temperature(model, v);
+  const auto find = [&](FigureId which) {
+    for (const Answer& answer : result.answers) {
+      if (answer.id == which) return answer.value.value();
+    }
+    return 0.0;
+  };
+  const bool flow = model.input().kind == StepKind::ThroughFlow;
+  switch (id) {
+    case FigureId::HeatPerMass:
+      return {heat_text(find(FigureId::HeatSetFree), flow) + " ÷ " + mass_text(mass_fed(model, work), flow)};
+    case FigureId::MeanDuty:
+      return {heat_text(find(FigureId::HeatSetFree), false) + " ÷ " +
+              display_number(model.input().time->value / 3600, 2) + " h"};
+    case FigureId::PeakDuty:
+      return {heat_text(find(FigureId::HeatSetFree), false) + " × " +
+              digits(model.input().charge.rate_constant->value * 3600) + " /h, first order, held at " +
+              celsius(held)};
+    case FigureId::AdiabaticRise: {
+      const double capacity = charge_heat_capacity(model, work, v, held), mass = mass_fed(model, work);
+      return {"heat set free at " + celsius(held) + ": " + heat_text(find(FigureId::HeatSetFree), false),
+              "÷ (" + mass_text(mass, false) + " × " + digits(capacity / mass / 1000) + " kJ/(kg K))"};
+    }
+    case FigureId::AdiabaticEnd:
+      return {celsius(held) + " + " + digits(find(FigureId::AdiabaticRise)) + " K"};
+    case FigureId::ThermalInertia: {
+      const double capacity = charge_heat_capacity(model, work, v, held);
+      return {"1 + " + digits(v[*model.slot("vessel.heat_capacity")] / 1000) + " kJ/K ÷ " +
+              digits(capacity / 1000) + " kJ/K"};
+    }
+    default:
+      return {};
+  }
+}
+
+std::string figure_mark(const StepResult& result, FigureId id, double value) {
+  switch (id) {
+    case FigureId::AdiabaticEnd:
+    case FigureId::EndByEnthalpy:
+    case FigureId::EndWithVessel:
+      return value > lowest_limit(result) ? "notional" : "";
+    case FigureId::AdiabaticRise:
+      return process_temperature(*result.model, result.values) + value > lowest_limit(result) ? "notional"
+                                                                                              : "";
+    default:
+      return {};
+  }
+}
+
+}  // namespace heatledger::step
