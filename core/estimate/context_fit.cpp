@@ -1,6 +1,7 @@
 #include "core/estimate/context_fit.hpp"
 
 #include <algorithm>
+#include <bit>
 #include <cmath>
 
 #include "core/base/check.hpp"
@@ -131,31 +132,29 @@ LowerTriangle ContextFit::information() const {
   }
   LowerTriangle matrix;
   matrix.start.assign(1, 0);
+  matrix.row.reserve(row_index_.size() * 2);
+  matrix.value.reserve(row_index_.size() * 2);
   std::vector<double> column(unknowns, 0.0);
-  std::vector<char> touched(unknowns, 0);
-  std::vector<std::uint32_t> rows;
+  std::vector<std::uint64_t> touched((unknowns + 63) / 64, 0);
   for (std::uint32_t j = 0; j < unknowns; ++j) {
-    rows.assign(1, j);
-    touched[j] = 1;
+    touched[j / 64] |= std::uint64_t{1} << (j % 64);
     column[j] = 1;
     for (std::uint32_t at = first[j]; at < first[j + 1]; ++at) {
       const std::uint32_t r = row_of[at];
       const double weight = row_value_[where[at]] / row_noise_[r];
       for (std::uint32_t e = where[at]; e < row_start_[r + 1]; ++e) {
         const std::uint32_t i = row_index_[e];
-        if (touched[i] == 0) {
-          touched[i] = 1;
-          rows.push_back(i);
-        }
+        touched[i / 64] |= std::uint64_t{1} << (i % 64);
         column[i] += weight * row_value_[e];
       }
     }
-    std::sort(rows.begin(), rows.end());
-    for (const std::uint32_t i : rows) {
-      matrix.row.push_back(static_cast<int>(i));
-      matrix.value.push_back(column[i]);
-      column[i] = 0;
-      touched[i] = 0;
+    for (std::size_t w = j / 64; w < touched.size(); ++w) {
+      for (; touched[w] != 0; touched[w] &= touched[w] - 1) {
+        const std::size_t i = w * 64 + static_cast<std::size_t>(std::countr_zero(touched[w]));
+        matrix.row.push_back(static_cast<int>(i));
+        matrix.value.push_back(column[i]);
+        column[i] = 0;
+      }
     }
     matrix.start.push_back(static_cast<int>(matrix.row.size()));
   }

@@ -38,7 +38,8 @@ class SparseCholesky {
   double squared_norm(const std::vector<double>& x) const;
 
  private:
-  void factor_sparse(const LowerTriangle& permuted);
+  struct Panel;
+  void factor_sparse(const LowerTriangle& permuted, std::vector<Panel>& panels);
   void factor_dense();
   void forward_sparse(std::vector<double>& z) const;
   void forward_dense(double* z) const;
