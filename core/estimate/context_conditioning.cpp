@@ -17,6 +17,11 @@ double dot(const std::vector<double>& a, const std::vector<double>& b) {
 
 using Parts = std::vector<std::pair<std::uint64_t, double>>;
 
+/// Key of a part that is no direction of the matrix; those are numbered from 0.
+std::uint64_t outside_matrix(std::uint64_t key) {
+  return key | std::uint64_t{1} << 63;
+}
+
 Parts merged(Parts parts) {
   std::stable_sort(parts.begin(), parts.end(),
                    [](const auto& a, const auto& b) { return a.first < b.first; });
@@ -157,25 +162,29 @@ double Conditioning::mean(const Direction& direction, std::size_t right_hand_sid
 }
 
 Conditioning::Parts Conditioning::parts_before_measurements(const Direction& direction) const {
-  Parts parts;
+  Parts shared, parts;
+  shared.reserve(direction.z.size());
   for (std::size_t j = 0; j < direction.z.size(); ++j) {
-    if (direction.z[j] != 0) parts.emplace_back(mix(j, 0x21), direction.z[j]);
+    if (direction.z[j] != 0) shared.emplace_back(j, direction.z[j]);
   }
   std::uint64_t set = 0;
   for (const std::uint32_t row : without_) set = mix(set, row);
   for (std::size_t i = 0; i < direction.widened.size(); ++i)
-    parts.emplace_back(mix(set, mix(i, 0x22)), direction.widened[i]);
+    parts.emplace_back(outside_matrix(mix(set, mix(i, 0x22))), direction.widened[i]);
   for (const Functional::Latent& latent : direction.functional.latents)
-    parts.emplace_back(latent.key, latent.coefficient);
+    parts.emplace_back(outside_matrix(latent.key), latent.coefficient);
   // A row ties its unknowns u together: their covariance is 1 - u u'/variance, whose root is 1 - a u u'.
   for (const Functional::RowShare& share : direction.functional.rows) {
     double squares = 0;
     const Parts latents = fit_.row_latents(share.row);
     for (const auto& latent : latents) squares += latent.second * latent.second;
     const double a = (1 - std::sqrt(std::max(0.0, 1 - squares / fit_.row_variance(share.row)))) / squares;
-    for (const auto& [key, in_row] : latents) parts.emplace_back(key, -a * in_row * share.share);
+    for (const auto& [key, in_row] : latents)
+      parts.emplace_back(outside_matrix(key), -a * in_row * share.share);
   }
-  return merged(std::move(parts));
+  parts = merged(std::move(parts));
+  shared.insert(shared.end(), parts.begin(), parts.end());
+  return shared;
 }
 
 std::vector<std::pair<std::uint64_t, double>> Conditioning::parts(const Direction& direction) const {

@@ -51,7 +51,7 @@ class Conditioning {
   /// What the mean changes by when the figure of each row changes by one.
   std::vector<double> row_weights(const Direction& direction) const;
   /// The direction as independent parts: their squares add up to the variance, products of equal keys to a
-  /// covariance.
+  /// covariance. Sorted by key; keys below 2^32 are the directions of the fit's own matrix.
   std::vector<std::pair<std::uint64_t, double>> parts(const Direction& direction) const;
   const std::vector<std::uint32_t>& without() const { return without_; }
 

@@ -58,6 +58,15 @@ Prediction finished(double value, double s, double scale, const ContextSettings&
   return out;
 }
 
+/// Every property but the gas heat capacity comes from one fit.
+Prediction from_one_fit(const Query& query, FitKind kind) {
+  const ContextEstimate at = query.estimate();
+  Prediction out = finished(at.value[0], std::sqrt(at.variance), unit_of(kind), context_settings(kind), at);
+  if (kind != FitKind::Liquid)
+    out.reading = out.s <= 8000 ? Reading::Good : out.s <= 15000 ? Reading::Rough : Reading::None;
+  return out;
+}
+
 }  // namespace
 
 Result<Prediction> ContextModel::predict(Property property, std::span<const ContextTerm> terms,
@@ -67,11 +76,7 @@ Result<Prediction> ContextModel::predict(Property property, std::span<const Cont
   };
   if (property != Property::GasHeatCapacity) {
     const FitKind kind = fit_kind_of(property);
-    const ContextEstimate at = estimate(kind, terms);
-    Prediction out = finished(at.value[0], std::sqrt(at.variance), unit_of(kind), context_settings(kind), at);
-    if (kind != FitKind::Liquid)
-      out.reading = out.s <= 8000 ? Reading::Good : out.s <= 15000 ? Reading::Rough : Reading::None;
-    return out;
+    return from_one_fit(Query(kind, terms, options), kind);
   }
   if (options.temperature < gas_range_low || options.temperature > gas_range_high) {
     return Error{"estimate.temperature", "Gas heat capacities are estimated from 273.15 K to 1000 K.",
@@ -113,27 +118,55 @@ Result<Prediction> ContextModel::predict(Property property, const ContextMolecul
   return predict(property, std::span<const ContextTerm>(&term, 1), options);
 }
 
-Result<uncertainty::Quantity> ContextModel::quantity(Property property, std::span<const ContextTerm> terms,
-                                                     const ContextOptions& options) const {
-  Result<Prediction> prediction = predict(property, terms, options);
-  if (!prediction) return prediction.error();
-  // A gas heat capacity between two fits takes the shape of its deviation from the nearer one.
-  const bool above =
-      property == Property::GasHeatCapacity && options.temperature > (gas_nodes[0] + gas_nodes[1]) / 2;
-  const FitKind kind = above ? FitKind::GasAbove : fit_kind_of(property);
-  const Query query(kind, terms, options);
-  double squares = 0;
+namespace {
+
+/// The parts of a query scaled to the ± of a prediction.
+uncertainty::Quantity with_parts(const Prediction& prediction, const Query& query, FitKind kind) {
   const std::vector<std::pair<std::uint64_t, double>> found = query.parts();
+  double squares = 0;
   for (const auto& part : found) squares += part.second * part.second;
-  const double scale = squares > 0 ? prediction->u95 / std::sqrt(squares) : 0;
+  const double scale = squares > 0 ? prediction.u95 / std::sqrt(squares) : 0;
   std::vector<uncertainty::Part> parts;
+  parts.reserve(found.size());
   for (const auto& part : found) {
     if (part.second == 0) continue;
-    parts.push_back({uncertainty::source_key(uncertainty::SourceKind::Estimate,
-                                             mix(part.first, static_cast<std::uint64_t>(kind))),
-                     scale * part.second});
+    // Directions of the matrix keep their order and stay apart from the hashes of everything else.
+    const bool of_matrix = part.first >> 32 == 0;
+    const std::uint64_t index =
+        of_matrix ? static_cast<std::uint64_t>(kind) << 32 | part.first
+                  : mix(part.first, static_cast<std::uint64_t>(kind)) | std::uint64_t{1} << 55;
+    parts.push_back({uncertainty::source_key(uncertainty::SourceKind::Estimate, index), scale * part.second});
   }
-  return uncertainty::Quantity(prediction->value, std::move(parts));
+  const auto hashes = std::find_if(
+      parts.begin(), parts.end(), [](const uncertainty::Part& part) { return (part.source >> 55 & 1) != 0; });
+  std::sort(hashes, parts.end(),
+            [](const uncertainty::Part& a, const uncertainty::Part& b) { return a.source < b.source; });
+  return uncertainty::Quantity(prediction.value, std::move(parts));
+}
+
+}  // namespace
+
+Result<ContextFigure> ContextModel::figure(Property property, std::span<const ContextTerm> terms,
+                                           const ContextOptions& options) const {
+  if (property != Property::GasHeatCapacity) {
+    const FitKind kind = fit_kind_of(property);
+    const Query query(kind, terms, options);
+    const Prediction prediction = from_one_fit(query, kind);
+    return ContextFigure{prediction, with_parts(prediction, query, kind)};
+  }
+  const Result<Prediction> prediction = predict(property, terms, options);
+  if (!prediction) return prediction.error();
+  // A gas heat capacity between two fits takes the shape of its deviation from the nearer one.
+  const bool above = options.temperature > (gas_nodes[0] + gas_nodes[1]) / 2;
+  const FitKind kind = above ? FitKind::GasAbove : FitKind::Gas298;
+  return ContextFigure{*prediction, with_parts(*prediction, Query(kind, terms, options), kind)};
+}
+
+Result<uncertainty::Quantity> ContextModel::quantity(Property property, std::span<const ContextTerm> terms,
+                                                     const ContextOptions& options) const {
+  Result<ContextFigure> made = figure(property, terms, options);
+  if (!made) return made.error();
+  return std::move(made->quantity);
 }
 
 }  // namespace heatledger::estimate

@@ -54,6 +54,14 @@ struct Prediction {
   bool in_table = false;  ///< a molecule's own row takes part
 };
 
+/// An estimate with the independent parts of its ±.
+struct ContextFigure {
+  Prediction prediction;
+  /// Parts are u95 times the sensitivity to one independent direction of the fit, so that two figures of one
+  /// sheet keep their correlation.
+  uncertainty::Quantity quantity;
+};
+
 /// The fitted model. Each property is fitted when it is first asked for.
 class ContextModel {
  public:
@@ -71,9 +79,10 @@ class ContextModel {
   Result<Prediction> predict(Property property, const ContextMolecule& molecule,
                              const ContextOptions& options = {}) const;
 
-  /// The same as a quantity with independent parts, so that two figures of one sheet keep their correlation.
-  /// Parts are u95 times the sensitivity to one independent direction of the fit.
-  /// @errors as predict
+  /// The same with the parts of its ±. @errors as predict
+  Result<ContextFigure> figure(Property property, std::span<const ContextTerm> terms,
+                               const ContextOptions& options = {}) const;
+  /// The quantity of figure() alone. @errors as predict
   Result<uncertainty::Quantity> quantity(Property property, std::span<const ContextTerm> terms,
                                          const ContextOptions& options = {}) const;
 

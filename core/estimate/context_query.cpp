@@ -65,32 +65,23 @@ std::vector<ContextFit::Term> Query::parts_of_terms() const {
   return parts;
 }
 
-Direction Query::direction() const {
-  return conditioning_->direction(parts_of_terms());
+const Direction& Query::direction() const {
+  if (!direction_) direction_ = conditioning_->direction(parts_of_terms());
+  return *direction_;
 }
 
 ContextEstimate Query::estimate() const {
   ContextEstimate out;
-  const auto take = [&](const Functional& functional, double variance, const auto& mean) {
-    // Rounding may leave a variance of nothing a hair below zero.
-    out.variance = std::max(0.0, variance);
-    out.unseen = functional.unseen;
-    out.in_table = functional.in_table;
-    for (std::size_t k = 0; k < fitted_.temperatures.size(); ++k) {
-      double value = mean(k);
-      for (const ContextTerm& term : terms_)
-        value += term.coefficient * offset(kind_, *term.molecule, fitted_.temperatures[k]);
-      out.value.push_back(sign_of(kind_) * value);
-    }
-  };
-  if (plain()) {
-    const Functional functional = fitted_.fit->functional(parts_of_terms(), {});
-    take(functional, fitted_.fit->variance(functional),
-         [&](std::size_t k) { return fitted_.fit->mean(functional, k); });
-  } else {
-    const Direction direction = this->direction();
-    take(direction.functional, conditioning_->variance(direction),
-         [&](std::size_t k) { return conditioning_->mean(direction, k); });
+  const Direction& asked = direction();
+  // Rounding may leave a variance of nothing a hair below zero.
+  out.variance = std::max(0.0, conditioning_->variance(asked));
+  out.unseen = asked.functional.unseen;
+  out.in_table = asked.functional.in_table;
+  for (std::size_t k = 0; k < fitted_.temperatures.size(); ++k) {
+    double value = conditioning_->mean(asked, k);
+    for (const ContextTerm& term : terms_)
+      value += term.coefficient * offset(kind_, *term.molecule, fitted_.temperatures[k]);
+    out.value.push_back(sign_of(kind_) * value);
   }
   return out;
 }

@@ -3,6 +3,7 @@
 #pragma once
 
 #include <memory>
+#include <optional>
 #include <span>
 #include <unordered_map>
 #include <vector>
@@ -41,13 +42,14 @@ class Query {
   std::vector<ReferenceRow> reference_rows(std::size_t most) const;
 
  private:
-  Direction direction() const;
+  const Direction& direction() const;
   std::vector<ContextFit::Term> parts_of_terms() const;
   FitKind kind_;
   std::vector<ContextTerm> terms_;
   const FittedProperty& fitted_;
   std::unique_ptr<Conditioning> own_;
   const Conditioning* conditioning_ = nullptr;
+  mutable std::optional<Direction> direction_;  ///< made when first needed: it costs most of an estimate
 };
 
 /// What one count of each feature of a molecule adds, under a query.

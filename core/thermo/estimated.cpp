@@ -1,18 +1,15 @@
 #include "core/thermo/estimated.hpp"
 
-#include <array>
+#include <memory>
 
 #include "core/base/number_text.hpp"
-#include "core/estimate/context_model.hpp"
-#include "core/estimate/context_molecule.hpp"
+#include "core/estimate/structure_figure.hpp"
 #include "core/thermo/dissolved.hpp"
 
 namespace heatledger::thermo {
 namespace {
 
-using estimate::ContextModel;
-using estimate::ContextMolecule;
-using estimate::ContextTerm;
+using estimate::ContextFigure;
 using estimate::Prediction;
 using estimate::Property;
 using estimate::Reading;
@@ -28,24 +25,19 @@ Error no_estimate(const Species& species, const std::string& why) {
 
 Result<Sourced> estimated(const Species& species, Property property, const std::string& what) {
   if (!species.graph) return no_estimate(species, "it has no structure here.");
-  const Result<ContextMolecule> read = estimate::context_molecule(*species.graph);
-  if (!read.ok()) return no_estimate(species, read.error().message);
-  const std::array<ContextTerm, 1> one = {ContextTerm{1, &*read}};
-  const ContextModel& model = ContextModel::embedded();
-  const Result<Prediction> prediction = model.predict(property, *read);
-  Result<uncertainty::Quantity> quantity = model.quantity(property, one);
-  if (!prediction.ok()) return no_estimate(species, prediction.error().message);
-  if (!quantity.ok()) return no_estimate(species, quantity.error().message);
+  const Result<std::shared_ptr<const ContextFigure>> figure = structure_figure(property, *species.graph);
+  if (!figure.ok()) return no_estimate(species, figure.error().message);
+  const Prediction& prediction = (*figure)->prediction;
   Sourced result;
-  result.value = std::move(quantity).value();
+  result.value = (*figure)->quantity;
   result.route = "estimate";
   result.source = "bonds in context";
   result.working.push_back(what + " of " + species.name +
-                           ", bonds in context: " + display_signed(prediction->value / kJ, 1) + " ± " +
-                           display_number(prediction->u95 / kJ, 1) + " kJ/mol");
-  if (prediction->reading == Reading::None) {
+                           ", bonds in context: " + display_signed(prediction.value / kJ, 1) + " ± " +
+                           display_number(prediction.u95 / kJ, 1) + " kJ/mol");
+  if (prediction.reading == Reading::None) {
     result.cautions.push_back(species.name + ": the structure alone gives no reliable figure (± " +
-                              display_number(prediction->u95 / kJ, 0) + " kJ/mol); measure this.");
+                              display_number(prediction.u95 / kJ, 0) + " kJ/mol); measure this.");
   }
   return result;
 }

@@ -14,8 +14,9 @@ Quantity::Quantity(double value, double u95, SourceKey source) : value_(value) {
 }
 
 Quantity::Quantity(double value, std::vector<Part> parts) : value_(value), parts_(std::move(parts)) {
-  std::stable_sort(parts_.begin(), parts_.end(),
-                   [](const Part& a, const Part& b) { return a.source < b.source; });
+  const auto before = [](const Part& a, const Part& b) { return a.source < b.source; };
+  if (!std::is_sorted(parts_.begin(), parts_.end(), before))
+    std::stable_sort(parts_.begin(), parts_.end(), before);
   std::size_t kept = 0;
   for (std::size_t i = 0; i < parts_.size(); ++i) {
     if (kept != 0 && parts_[kept - 1].source == parts_[i].source) {
