@@ -201,9 +201,12 @@ bool count_quickly(const Graph& graph, BondTally& out) {
     auto add = static_cast<std::uint16_t>(bond.order);
     if (bond.order == Order::Double) {
       if (a + b == 14 && (a == 6 || b == 6)) add = 2 + 256;
-      // Two hetero atoms of a ring may have to pass the double bond on (pyridazine).
-      const auto passes_on = [](int element) { return element != 6 && element != 8 && element != 16; };
-      if (passes_on(a) && passes_on(b)) return false;
+      // Two hetero atoms of a ring may have to pass the double bond on (pyridazine); a neutral oxygen with
+      // one stands outside any ring.
+      const auto passes_on = [](const Atom& atom) {
+        return atom.element != 6 && (atom.element != 8 || atom.charge != 0);
+      };
+      if (passes_on(graph.atoms[bond.a]) && passes_on(graph.atoms[bond.b])) return false;
     }
     if (bond.order == Order::Zero || graph.atoms[bond.a].charge * graph.atoms[bond.b].charge < 0)
       return false;

@@ -117,7 +117,9 @@ class EquationReader {
         std::size_t end = at;
         while (end < text_.size() && text_[end] == '=') ++end;
         if (end < text_.size() && text_[end] == '>') return {Joint::Arrow, end + 1 - at};
-        if (end - at == 1 && blank_or_start(at) && blank_or_end(end)) return {Joint::Arrow, 1};
+        // "A =-> B" holds two arrows; it is no species that ends in "=".
+        const bool ends = blank_or_end(end) || text_[end] == '+' || arrow_at(end).joint != Joint::None;
+        if (end - at == 1 && (at == joint_end_ || blank_or_start(at)) && ends) return {Joint::Arrow, 1};
         return {};
       }
       default:

@@ -3,6 +3,7 @@
 #include <algorithm>
 #include <bit>
 #include <cstddef>
+#include <tuple>
 #include <utility>
 
 #include "core/molecule/matching.hpp"
@@ -77,9 +78,31 @@ bool rematch(Matching& matching, const std::vector<std::uint32_t>& atoms) {
   return true;
 }
 
+// One digit of base 13 per kind of pair (its two elements), holding how many pairs of that kind the set
+// joins; 12 pairs at most make 12 kinds.
+std::vector<std::uint64_t> kind_weights(const Graph& graph, const std::vector<Edge>& pairs) {
+  const auto kind = [&](const Edge& pair) {
+    const int a = graph.atoms[pair.first].element;
+    const int b = graph.atoms[pair.second].element;
+    return std::pair{std::min(a, b), std::max(a, b)};
+  };
+  std::vector<std::pair<int, int>> kinds;
+  for (const Edge& pair : pairs) kinds.push_back(kind(pair));
+  std::sort(kinds.begin(), kinds.end());
+  kinds.erase(std::unique(kinds.begin(), kinds.end()), kinds.end());
+  std::vector<std::uint64_t> weights;
+  for (const Edge& pair : pairs) {
+    std::uint64_t weight = 1;
+    for (std::size_t k = 0; kinds[k] != kind(pair); ++k) weight *= 13;
+    weights.push_back(weight);
+  }
+  return weights;
+}
+
 // Leaves as few hetero pairs joined as any Kekulé structure of this system needs; the others are forbidden
-// after it. Of several sets with that number the first in the order of the pairs is taken.
-void thin_out(Matching& matching, const System& system) {
+// after it. Of several sets with that number one with the lightest kinds of pairs is taken, so that the bonds
+// counted do not depend on the numbering, and of those the first in the order of the pairs.
+void thin_out(const Graph& graph, Matching& matching, const System& system) {
   constexpr std::size_t exhaustive = 12;
   const std::vector<Edge>& pairs = system.hetero_pairs;
   if (pairs.size() > exhaustive) {
@@ -91,15 +114,27 @@ void thin_out(Matching& matching, const System& system) {
     }
     return;
   }
-  const unsigned sets = 1u << pairs.size();
-  for (int allowed = 0; allowed <= static_cast<int>(pairs.size()); ++allowed) {
-    for (unsigned set = 0; set < sets; ++set) {
-      if (std::popcount(set) != allowed) continue;
-      for (std::size_t p = 0; p < pairs.size(); ++p) {
-        matching.set_forbidden(pairs[p].first, pairs[p].second, ((set >> p) & 1u) == 0);
-      }
-      if (rematch(matching, system.atoms)) return;
+  const std::vector<std::uint64_t> weights = kind_weights(graph, pairs);
+  struct Choice {
+    int joined;
+    std::uint64_t weight;
+    unsigned set;
+  };
+  std::vector<Choice> choices(std::size_t{1} << pairs.size());
+  for (unsigned set = 0; set < choices.size(); ++set) {
+    choices[set] = {std::popcount(set), 0, set};
+    for (std::size_t p = 0; p < pairs.size(); ++p) {
+      if ((set >> p) & 1u) choices[set].weight += weights[p];
     }
+  }
+  std::sort(choices.begin(), choices.end(), [](const Choice& a, const Choice& b) {
+    return std::tie(a.joined, a.weight, a.set) < std::tie(b.joined, b.weight, b.set);
+  });
+  for (const Choice& choice : choices) {
+    for (std::size_t p = 0; p < pairs.size(); ++p) {
+      matching.set_forbidden(pairs[p].first, pairs[p].second, ((choice.set >> p) & 1u) == 0);
+    }
+    if (rematch(matching, system.atoms)) return;
   }
 }
 
@@ -162,7 +197,8 @@ void choose(Graph& graph, const std::vector<std::uint32_t>* ranks) {
              Edge{std::min(rank(b.first), rank(b.second)), std::max(rank(b.first), rank(b.second))};
     });
     // Without a joined pair the number is lowest already; the ranks still want the others kept out.
-    if (system.joined_pair || (ranks != nullptr && !system.hetero_pairs.empty())) thin_out(matching, system);
+    if (system.joined_pair || (ranks != nullptr && !system.hetero_pairs.empty()))
+      thin_out(graph, matching, system);
     if (ranks != nullptr) match_by_rank(matching, system);
   }
   for (const std::size_t at : edge_bond) {

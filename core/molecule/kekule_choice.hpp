@@ -16,7 +16,8 @@ void find_mobile_bonds(const Graph& graph, std::vector<std::uint8_t>& mobile);
 
 /// Moves double bonds around rings so that as few as possible join two hetero atoms: pyridazine gets two C=N
 /// and one N-N, whatever the spelling. Atoms keep their valences. Structures without such a ring bond stay as
-/// they are. With carbon and one kind of hetero atom the number of bonds of each type is then unique.
+/// they are. Of structures with as few such pairs the lightest elements are paired. The number of bonds of
+/// each type is then unique.
 /// @complexity exhaustive over sets of hetero pairs up to 12 of them in one conjugated system, stepwise above
 void choose_kekule_bonds(Graph& graph);
 

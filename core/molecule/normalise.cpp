@@ -2,6 +2,7 @@
 
 #include <algorithm>
 #include <optional>
+#include <tuple>
 #include <vector>
 
 #include "core/molecule/kekule_choice.hpp"
@@ -48,6 +49,10 @@ bool any_charge(const Graph& graph) {
     if (atom.charge != 0) return true;
   }
   return false;
+}
+
+bool keeps_octet(const Atom& atom) {
+  return atom.element == 7 || atom.element == 8;
 }
 
 int octet_bonds(const Atom& atom) {
@@ -99,90 +104,122 @@ std::optional<std::uint32_t> carbon_of_triple_bond(const Graph& graph, const Adj
   return std::nullopt;
 }
 
-// `ranks`: what decides between equal bonds; null where only the number of bonds matters.
-void return_to_octet(Graph& graph, const Adjacency& adjacency, const std::vector<int>& excess,
+// `ranks`: what decides between equal bonds; null where only the number of bonds matters. @return whether an
+// order or a charge moved
+bool return_to_octet(Graph& graph, const Adjacency& adjacency, const std::vector<int>& excess,
                      const std::vector<std::uint32_t>* ranks, std::uint32_t atom) {
-  if (excess[atom] < 1 || excess[atom] > 2) return;
+  if (excess[atom] < 1 || excess[atom] > 2) return false;
   Atom& centre = graph.atoms[atom];
   if (const std::optional<std::uint32_t> carbon = carbon_of_triple_bond(graph, adjacency, atom)) {
     ++centre.charge;
     --graph.atoms[*carbon].charge;
-    return;
+    return true;
   }
   const Adjacency::Entry* best = nullptr;
-  int best_class = 0;
+  struct Preference {  // lower first; the element decides where a class holds several, as bonds differ by it
+    int kind;
+    int element;
+    std::uint32_t rank;
+    bool operator<(const Preference& other) const {
+      return std::tie(kind, element, rank) < std::tie(other.kind, other.element, other.rank);
+    }
+  } best_preference{};
   for (std::uint32_t e = adjacency.first[atom]; e < adjacency.first[atom + 1]; ++e) {
     const Adjacency::Entry& entry = adjacency.entries[e];
     const int kind = giving_class(graph, adjacency, entry);
-    if (kind < 0 || excess[entry.atom] > 0 || (best != nullptr && kind > best_class)) continue;
-    if (best != nullptr && kind == best_class &&
-        (ranks == nullptr || (*ranks)[entry.atom] > (*ranks)[best->atom]))
-      continue;
+    if (kind < 0 || excess[entry.atom] > 0) continue;
+    const int element = graph.atoms[entry.atom].element;
+    const Preference preference{kind, element == 6 ? -1 : element,
+                                ranks == nullptr ? 0 : (*ranks)[entry.atom]};
+    if (best != nullptr && !(preference < best_preference)) continue;
     best = &entry;
-    best_class = kind;
+    best_preference = preference;
   }
-  if (best == nullptr) return;
+  if (best == nullptr) return false;
   Bond& bond = graph.bonds[best->bond];
   bond.order = static_cast<Order>(static_cast<int>(bond.order) - 1);
   ++centre.charge;
   --graph.atoms[best->atom].charge;
+  return true;
 }
 
-// `keep_adducts`: a borate or aluminate beside a cation has its octet by its charge and keeps it.
-void join_charges(Graph& graph, bool keep_adducts) {
-  if (!any_charge(graph)) return;
-  const std::vector<int> excess = octet_excess(graph);
-  for (bool changed = true; changed;) {
-    changed = false;
-    for (int turn = 0; turn < partner_classes; ++turn) {
-      for (Bond& bond : graph.bonds) {
-        Atom& a = graph.atoms[bond.a];
-        Atom& b = graph.atoms[bond.b];
-        if (!opposite(a, b)) continue;
-        Atom& plus = a.charge > 0 ? a : b;
-        Atom& minus = a.charge > 0 ? b : a;
-        if (partner_class(minus.element) != turn ||
-            !can_give_pair(minus, excess[&minus - graph.atoms.data()]))
-          continue;
-        if (keep_adducts && (minus.element == 5 || minus.element == 13)) continue;
-        --plus.charge;
-        ++minus.charge;
-        if (!bond.aromatic && bond.order < Order::Triple) {
-          bond.order = static_cast<Order>(static_cast<int>(bond.order) + 1);
-        }
-        changed = true;
-      }
-    }
-  }
-}
-
-}  // namespace
-
-void neutralise_charges(Graph& graph) {
-  join_charges(graph, false);
-}
-
-void take_octet_form(Graph& graph, const TieBreaker* ties) {
-  for (Bond& bond : graph.bonds) bond.aromatic = false;
-  join_charges(graph, true);
+// One pass over the atoms above their octet. Two of them side by side need another: what the first hands back
+// may put the second within reach. @return whether an order was handed back; each lowers one, so passes come
+// to an end
+bool hand_back_orders(Graph& graph, const TieBreaker* ties) {
   const std::vector<int> excess = octet_excess(graph);
   std::vector<std::uint32_t> over;
   for (std::uint32_t i = 0; i < graph.atoms.size(); ++i) {
     if (excess[i] > 0) over.push_back(i);
   }
-  if (!over.empty()) {
-    Adjacency adjacency;
-    build_adjacency(graph, adjacency);
-    std::vector<std::uint32_t> ranks;
-    if (ties != nullptr) {
-      ranks = (*ties)(graph);
-      std::sort(over.begin(), over.end(),
-                [&](std::uint32_t a, std::uint32_t b) { return ranks[a] < ranks[b]; });
-    }
-    for (const std::uint32_t atom : over) {
-      return_to_octet(graph, adjacency, excess, ties != nullptr ? &ranks : nullptr, atom);
+  if (over.empty()) return false;
+  Adjacency adjacency;
+  build_adjacency(graph, adjacency);
+  std::vector<std::uint32_t> ranks;
+  if (ties != nullptr) {
+    ranks = (*ties)(graph);
+    std::sort(over.begin(), over.end(),
+              [&](std::uint32_t a, std::uint32_t b) { return ranks[a] < ranks[b]; });
+  }
+  bool changed = false;
+  for (const std::uint32_t atom : over) {
+    changed |= return_to_octet(graph, adjacency, excess, ties != nullptr ? &ranks : nullptr, atom);
+  }
+  return changed;
+}
+
+// What join_charges leaves as it is.
+struct Joining {
+  bool keep_adducts = false;      // a borate or aluminate beside a cation has its octet by its charge
+  bool keep_octet_atoms = false;  // a positive nitrogen or oxygen
+};
+
+// One round over the bonds whose positive end keeps its octet or does not. @return whether a pair was joined
+bool join_pairs(Graph& graph, const Joining& joining, const std::vector<int>& excess, bool octet_ends) {
+  bool changed = false;
+  for (int turn = 0; turn < partner_classes; ++turn) {
+    for (Bond& bond : graph.bonds) {
+      Atom& a = graph.atoms[bond.a];
+      Atom& b = graph.atoms[bond.b];
+      if (!opposite(a, b)) continue;
+      Atom& plus = a.charge > 0 ? a : b;
+      Atom& minus = a.charge > 0 ? b : a;
+      if (keeps_octet(plus) != octet_ends) continue;
+      const auto minus_at = static_cast<std::size_t>(&minus - graph.atoms.data());
+      if (partner_class(minus.element) != turn || !can_give_pair(minus, excess[minus_at])) continue;
+      if (joining.keep_adducts && (minus.element == 5 || minus.element == 13)) continue;
+      --plus.charge;
+      ++minus.charge;
+      if (!bond.aromatic && bond.order < Order::Triple) {
+        bond.order = static_cast<Order>(static_cast<int>(bond.order) + 1);
+      }
+      changed = true;
     }
   }
+  return changed;
+}
+
+// Positive ends that may go beyond an octet come first: a nitrogen would only hand the order back.
+void join_charges(Graph& graph, const Joining& joining) {
+  if (!any_charge(graph)) return;
+  const std::vector<int> excess = octet_excess(graph);
+  while (join_pairs(graph, joining, excess, false)) continue;
+  while (!joining.keep_octet_atoms && join_pairs(graph, joining, excess, true)) continue;
+}
+
+}  // namespace
+
+void neutralise_charges(Graph& graph) {
+  join_charges(graph, {});
+}
+
+void take_octet_form(Graph& graph, const TieBreaker* ties) {
+  for (Bond& bond : graph.bonds) bond.aromatic = false;
+  join_charges(graph, {.keep_adducts = true});
+  bool moved = false;
+  while (hand_back_orders(graph, ties)) moved = true;
+  // A charge handed back beside a metal cation is taken up there, as it would be from the text of this form.
+  if (moved) join_charges(graph, {.keep_adducts = true, .keep_octet_atoms = true});
   choose_kekule_bonds(graph);
 }
 
