@@ -335,7 +335,9 @@ void measure(const ContextGraph& graph, DeviationMeasures& measures) {
 
 }  // namespace
 
-FeatureSink::FeatureSink() : slots_(256, 0) {}
+FeatureSink::FeatureSink() : slots_(256, 0) {
+  counts_.reserve(slots_.size() / 2);  // a molecule of ten heavy atoms has some fifty features
+}
 
 void FeatureSink::grow() {
   slots_.assign(slots_.size() * 2, 0);
