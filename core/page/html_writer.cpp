@@ -4,6 +4,7 @@
 
 #include "core/page/markup.hpp"
 #include "core/page/print_view.hpp"
+#include "core/page/role_names.hpp"
 #include "core/page/writers.hpp"
 
 namespace heatledger::page {
@@ -48,84 +49,9 @@ constexpr std::string_view kStyle =
     "0;padding-left:1.6em}"
     "@media print{body{margin:0;max-width:none}}";
 
+/// A plain figure needs no class.
 const char* class_of(Tone tone) {
-  switch (tone) {
-    case Tone::Plain:
-      return "";
-    case Tone::Quiet:
-      return "quiet";
-    case Tone::Strong:
-      return "strong";
-    case Tone::Broken:
-      return "broken";
-    case Tone::Formed:
-      return "formed";
-    case Tone::Caution:
-      return "caution";
-    case Tone::Good:
-      return "good";
-  }
-  return "";
-}
-
-const char* class_of(Align align) {
-  switch (align) {
-    case Align::Left:
-      return "left";
-    case Align::Right:
-      return "right";
-    case Align::Centre:
-      return "centre";
-  }
-  return "";
-}
-
-const char* class_of(RowRole role) {
-  switch (role) {
-    case RowRole::Body:
-      return "body";
-    case RowRole::Detail:
-      return "detail";
-    case RowRole::Subtotal:
-      return "subtotal";
-    case RowRole::Result:
-      return "result";
-    case RowRole::Correction:
-      return "correction";
-  }
-  return "";
-}
-
-const char* class_of(TableLook look) {
-  switch (look) {
-    case TableLook::Ledger:
-      return "ledger";
-    case TableLook::Form:
-      return "form";
-    case TableLook::Boxes:
-      return "boxes";
-    case TableLook::List:
-      return "list";
-    case TableLook::Banner:
-      return "banner";
-  }
-  return "";
-}
-
-const char* class_of(NoteKind kind) {
-  switch (kind) {
-    case NoteKind::Info:
-      return "info";
-    case NoteKind::Assumption:
-      return "assumption";
-    case NoteKind::Caution:
-      return "caution";
-    case NoteKind::Disagreement:
-      return "disagreement";
-    case NoteKind::Error:
-      return "error";
-  }
-  return "";
+  return tone == Tone::Plain ? "" : spelled(tone);
 }
 
 /// The equation with its state marks, "(l)" after a species, set lower and smaller.
@@ -147,7 +73,7 @@ std::string equation_markup(const std::string& text) {
 }
 
 std::string cell_classes(const Cell& cell, const Column& last) {
-  std::string classes = class_of(last.align);
+  std::string classes = spelled(last.align);
   if (cell.span > 1) classes = "left";
   const std::string tone = class_of(cell.tone);
   if (!tone.empty()) classes += " " + tone;
@@ -182,20 +108,20 @@ class HtmlWriter {
   }
 
   void add(const Note& note) {
-    out_ += "<p class=\"note " + std::string(class_of(note.kind)) + "\">" + escaped(note.text) + "</p>";
+    out_ += "<p class=\"note " + std::string(spelled(note.kind)) + "\">" + escaped(note.text) + "</p>";
   }
 
   void add(const Drawing& drawing) { out_ += "<figure>" + svg_element(drawing) + "</figure>"; }
 
   void add(const Table& table) {
     if (table.look == TableLook::Boxes) return add_boxes(table);
-    out_ += "<table class=\"" + std::string(class_of(table.look)) + "\">";
+    out_ += "<table class=\"" + std::string(spelled(table.look)) + "\">";
     const bool headed = std::any_of(table.columns.begin(), table.columns.end(),
                                     [](const Column& column) { return !column.heading.empty(); });
     if (headed) {
       out_ += "<thead><tr>";
       for (const Column& column : table.columns) {
-        out_ += "<th class=\"" + std::string(class_of(column.align)) + (column.spine_after ? " spine" : "") +
+        out_ += "<th class=\"" + std::string(spelled(column.align)) + (column.spine_after ? " spine" : "") +
                 "\">" + escaped(column.heading) + "</th>";
       }
       out_ += "</tr></thead>";
@@ -206,7 +132,7 @@ class HtmlWriter {
   }
 
   void add_row(const Table& table, const Row& row) {
-    out_ += "<tr class=\"" + std::string(class_of(row.role)) + "\">";
+    out_ += "<tr class=\"" + std::string(spelled(row.role)) + "\">";
     std::size_t at = 0;
     for (const Cell& cell : row.cells) {
       const auto span = static_cast<std::size_t>(std::max(cell.span, 1));

@@ -183,17 +183,17 @@ class LedgerTable {
     const std::string broken = ledger_.broken ? kj(ledger_.broken->value(), decimals_) : "";
     const std::string formed = ledger_.formed ? kj(ledger_.formed->value(), decimals_) : "";
     if (review_ == nullptr) {
-      add_sum("Sum of bonds", RowRole::Subtotal, broken, formed, "");
+      add_sum("Sum of bonds", broken, formed, "");
     } else {
-      add_sum("Sum of bonds broken", RowRole::Subtotal, broken, "", "broken");
-      add_sum("Sum of bonds formed", RowRole::Body, "", formed, "formed");
+      add_sum("Sum of bonds broken", broken, "", "broken");
+      add_sum("Sum of bonds formed", "", formed, "formed");
     }
   }
 
-  void add_sum(const std::string& what, RowRole role, const std::string& broken, const std::string& formed,
+  void add_sum(const std::string& what, const std::string& broken, const std::string& formed,
                const std::string& figure) {
     const std::string id = view_.sheet.id + ".sum";
-    Row row = row_of(figure.empty() ? id : id + "." + figure + ".row", role);
+    Row row = row_of(figure.empty() ? id : id + "." + figure + ".row", RowRole::Subtotal);
     row.cells = {label_cell(what, Tone::Strong, kLabelSpan - 1),
                  figure_cell(id + ".broken", broken, Tone::Broken),
                  figure_cell(id + ".formed", formed, Tone::Formed), label_cell("")};
