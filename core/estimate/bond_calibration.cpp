@@ -121,7 +121,7 @@ std::vector<PricedCompound> priced_compounds() {
   Result<BondSet> set = BondSet::published("");
   CHECK(set.ok(), "a primary bond set");
   std::vector<PricedCompound> compounds;
-  for (const TrainingFigure& figure : training_figures(FitKind::Formation)) {
+  for (const TrainingFigure& figure : training_figures(FitKind::Formation, TrainingRows::Original)) {
     if (!figure.trusted) continue;
     Result<molecule::Graph> graph = molecule::parse_smiles(training_compounds()[figure.compound].smiles);
     CHECK(graph.ok(), "a readable structure in the training table");

@@ -114,6 +114,18 @@ std::vector<LeftOutRow> leave_folds_out(FitKind kind, std::size_t right_hand_sid
   return out;
 }
 
+std::vector<LeftOutRow> rows_set_aside(const FittedProperty& fitted, FitKind kind) {
+  const std::vector<TrainingFigure> figures = training_figures(kind, TrainingRows::SetAside);
+  const std::vector<FitRow> rows = fit_rows(kind, figures, fitted.temperatures);
+  std::vector<LeftOutRow> out;
+  for (std::uint32_t r = 0; r < rows.size(); ++r) {
+    LeftOutRow one = compare(*fitted.fit, *fitted.plain, kind, rows[r], figures[r], 0);
+    one.figure = r;
+    out.push_back(one);
+  }
+  return out;
+}
+
 unsigned families_of(std::size_t compound) {
   Result<molecule::Graph> graph = molecule::parse_smiles(training_compounds()[compound].smiles);
   CHECK(graph.ok(), "a readable structure in the training table");
@@ -179,9 +191,16 @@ std::vector<AccuracyLine> accuracy_table(const FittedProperty& fitted, FitKind k
   add("trusted, organic", [&](std::size_t i) { return trusted[i] && organic(i); });
   add("  half kept for report", [&](std::size_t i) { return trusted[i] && organic(i) && reported[i]; });
   for (std::size_t f = 0; f <= exclusive_families; ++f) {
-    add(kFamilyNames[f], [&](std::size_t i) { return trusted[i] && (families[i] >> f & 1) != 0; });
+    const bool overlaps = f == exclusive_families;  // strained rings: of organic molecules
+    add(kFamilyNames[f], [&](std::size_t i) {
+      return trusted[i] && (families[i] >> f & 1) != 0 && (!overlaps || organic(i));
+    });
   }
   add("one source only", [&](std::size_t i) { return !trusted[i]; });
+  if (kind == FitKind::Formation) {
+    const std::vector<LeftOutRow> aside = rows_set_aside(fitted, kind);
+    lines.push_back(accuracy_of("set aside", aside, settings, std::vector<bool>(aside.size(), true)));
+  }
   return lines;
 }
 

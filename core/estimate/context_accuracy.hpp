@@ -20,7 +20,7 @@ enum class Family : std::uint8_t {
   Halogen,
   SiliconPhosphorusBoron,
   Inorganic,
-  Strained  ///< a ring of up to four atoms, or bridged rings
+  Strained  ///< a ring of up to four atoms, or bridged rings, in an organic molecule
 };
 constexpr std::size_t exclusive_families = 9;
 
@@ -38,6 +38,9 @@ std::vector<LeftOutRow> leave_each_out(const FittedProperty& fitted, FitKind kin
 
 /// By refitting without one fold at a time; molecules of one constitution fall into one fold.
 std::vector<LeftOutRow> leave_folds_out(FitKind kind, std::size_t right_hand_side, unsigned folds);
+
+/// Rows set aside from the fit, predicted by it; `figure` counts them alone.
+std::vector<LeftOutRow> rows_set_aside(const FittedProperty& fitted, FitKind kind);
 
 /// Which families a compound of the table belongs to: bit i is Family i.
 unsigned families_of(std::size_t compound);

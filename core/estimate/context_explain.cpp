@@ -185,7 +185,7 @@ class BondLines {
 
  private:
   void place(const FeatureInstance& instance, const FeatureValues& values) {
-    const bool base = instance.family == FeatureClass::B;
+    const bool base = instance.family == FeatureClass::B || instance.family == FeatureClass::Bx;
     const FeatureValues::Value found = values.of(instance.key);
     const double value = found.value * instance.amount;
     const FeatureSite& site = instance.site;

@@ -57,9 +57,10 @@ enum class FeatureClass : std::uint8_t {
   CT,
   HB0,
   HB,
-  VX
+  VX,
+  Bx  ///< B with Si, P or B in it: few rows, so closer to the prior
 };
-constexpr std::size_t feature_class_count = static_cast<std::size_t>(FeatureClass::VX) + 1;
+constexpr std::size_t feature_class_count = static_cast<std::size_t>(FeatureClass::Bx) + 1;
 
 /// One feature of one molecule. `key` is a hash of class and description, equal in every build.
 struct FeatureCount {

@@ -48,8 +48,8 @@ std::string accuracy_report() {
       "of errors\n"
       "inside the stated 68 and 95 % intervals, median standard deviation. \"Trusted\": two sources share "
       "the value; families\n"
-      "count trusted rows. Printed by `heatledger_refit accuracy`; a test compares it with the model as "
-      "shipped.\n\n";
+      "count trusted rows; rows set aside stand in the README of the tables. Printed by `heatledger_refit "
+      "accuracy`; a test\ncompares it with the model as shipped.\n\n";
   for (const Section& section : kSections) text += section_text(section);
   return text;
 }

@@ -28,19 +28,31 @@ double number(std::string_view text) {
   return *value;
 }
 
-void take_sources(std::string_view letters, TrainingFigure& figure) {
+/// Marks in front of the letters: '!' set aside, '=' settled at full weight, '+' shared by two sources.
+void take_sources(std::string_view letters, TrainingFigure& figure, TrainingRows which) {
+  const char mark = letters.empty() ? ' ' : letters[0];
+  if (mark == '!' || mark == '=') letters.remove_prefix(1);
+  figure.set_aside = mark == '!';
+  if (mark == '=' && which != TrainingRows::Original) figure.weight = 1;
   figure.trusted = !letters.empty() && letters[0] == '+';
   if (figure.trusted) letters.remove_prefix(1);
   figure.sources = letters;
 }
 
-TrainingFigure single_figure(std::size_t compound, std::string_view cell) {
+constexpr char kLaterSource = 'L';  ///< rows that were added to the table since
+
+bool takes_part(const TrainingFigure& figure, TrainingRows which) {
+  if (which == TrainingRows::Original) return figure.sources.find(kLaterSource) == std::string_view::npos;
+  return figure.set_aside == (which == TrainingRows::SetAside);
+}
+
+TrainingFigure single_figure(std::size_t compound, std::string_view cell, TrainingRows which) {
   TrainingFigure figure;
   figure.compound = compound;
   figure.value.assign(1, number(take(cell, ' ')));
   figure.u95 = number(take(cell, ' '));
   figure.weight = number(take(cell, ' '));
-  take_sources(cell, figure);
+  take_sources(cell, figure, which);
   return figure;
 }
 
@@ -70,7 +82,7 @@ TrainingFigure gas_figure(std::size_t compound, const GasCell& gas, std::size_t 
   figure.value.assign(1, *gas.value[node]);
   figure.u95 = *gas.value[node] * gas.percent / 100;
   figure.weight = weight;
-  take_sources(gas.sources, figure);
+  take_sources(gas.sources, figure, TrainingRows::Shipped);
   return figure;
 }
 
@@ -112,7 +124,7 @@ const ContextMolecule& training_molecule(std::size_t compound) {
   return *molecule;
 }
 
-std::vector<TrainingFigure> training_figures(FitKind kind) {
+std::vector<TrainingFigure> training_figures(FitKind kind, TrainingRows which) {
   const std::vector<TrainingCompound>& compounds = training_compounds();
   std::vector<TrainingFigure> figures;
   if (kind == FitKind::Gas298) return training_figures_at(0);
@@ -124,7 +136,8 @@ std::vector<TrainingFigure> training_figures(FitKind kind) {
     const std::string_view cell = compounds[c].cells[column];
     if (cell.empty()) continue;
     if (column < 3) {
-      figures.push_back(single_figure(c, cell));
+      TrainingFigure figure = single_figure(c, cell, which);
+      if (takes_part(figure, which)) figures.push_back(std::move(figure));
       continue;
     }
     const GasCell gas = gas_cell(cell);
@@ -176,7 +189,8 @@ std::string source_text(std::string_view letters) {
                                         {'Z', "Zabransky"},
                                         {'E', "Perry 8"},
                                         {'V', "VDI"},
-                                        {'H', "compilation of vaporisation enthalpies"}};
+                                        {'H', "compilation of vaporisation enthalpies"},
+                                        {'L', "literature on strained molecules"}};
   std::string text;
   for (const char letter : letters) {
     for (const Source& source : kSources) {

@@ -26,6 +26,7 @@ struct TrainingFigure {
   double u95 = 0;
   double weight = 1;
   bool trusted = false;      ///< at least two sources share the value
+  bool set_aside = false;    ///< contradicts its own homologues; no part of the fit
   std::string_view sources;  ///< one letter each
 };
 
@@ -41,8 +42,12 @@ const std::vector<TrainingCompound>& training_compounds();
 /// the model covers (a test sees to that).
 const ContextMolecule& training_molecule(std::size_t compound);
 
+/// Which rows of the table: those of the shipped fit, those set aside from it, or the table that the
+/// independent implementation was fitted to (without the later marks and rows).
+enum class TrainingRows : std::uint8_t { Shipped, SetAside, Original };
+
 /// Figures of one fit in the order of the table. Rows that lack a temperature of GasAbove are left out of it.
-std::vector<TrainingFigure> training_figures(FitKind kind);
+std::vector<TrainingFigure> training_figures(FitKind kind, TrainingRows which = TrainingRows::Shipped);
 /// Heat capacities at one of the higher temperatures alone, with every row that has it; for the reference
 /// settings.
 std::vector<TrainingFigure> training_figures_at(std::size_t node);

@@ -10,7 +10,7 @@ constexpr const char* kSymbols[kind_count] = {"H", "C", "N", "O", "F", "Si", "P"
 constexpr const char* kClassNames[feature_class_count] = {
     "K0",  "B",   "Ac", "Ao",  "Ax",  "B1c", "B1o",  "B1x", "B2c",  "B2o", "B2x", "B3c", "B3o", "B3x", "G1c",
     "G1o", "G1x", "P2", "P2h", "P3",  "P3h", "P4h",  "GA",  "P5",   "P5m", "R0",  "R1",  "R1h", "R2c", "R2o",
-    "R2x", "RS",  "RF", "RP",  "BAY", "SC",  "OMP0", "OMP", "OMP2", "CT0", "CT",  "HB0", "HB",  "VX"};
+    "R2x", "RS",  "RF", "RP",  "BAY", "SC",  "OMP0", "OMP", "OMP2", "CT0", "CT",  "HB0", "HB",  "VX",  "Bx"};
 
 constexpr unsigned kCarbonHydrogen =
     1u << static_cast<unsigned>(Kind::C) | 1u << static_cast<unsigned>(Kind::H);
@@ -134,6 +134,12 @@ const char* class_name(FeatureClass family) {
 
 FeatureClass FeatureCode::family() const {
   switch (family_) {
+    case FeatureClass::B: {
+      const auto either = [&](Kind kind) {
+        return bytes_[0] == static_cast<std::uint8_t>(kind) || bytes_[1] == static_cast<std::uint8_t>(kind);
+      };
+      return either(Kind::Si) || either(Kind::P) || either(Kind::B) ? FeatureClass::Bx : family_;
+    }
     case FeatureClass::Ac:
     case FeatureClass::B1c:
     case FeatureClass::B2c:

@@ -19,9 +19,35 @@ void set_composition(Species& species, molecule::Composition composition) {
   species.composition = std::move(composition);
 }
 
+/// The open ends of a unit are one bond to the next unit: the two bonds to '*' become the single bond between
+/// the atoms that they hang on.
+void link_open_ends(const molecule::Graph& graph, molecule::BondTally& tally) {
+  int element[2] = {0, 0}, ends = 0;
+  for (const molecule::Bond& bond : graph.bonds) {
+    const int a = graph.atoms[bond.a].element, b = graph.atoms[bond.b].element;
+    if (a == 0 || b == 0) element[ends++ & 1] = a == 0 ? b : a;
+  }
+  tally.erase(std::remove_if(tally.begin(), tally.end(),
+                             [](const molecule::BondCount& entry) {
+                               return entry.type.first == 0 || entry.type.second == 0;
+                             }),
+              tally.end());
+  const molecule::BondType link =
+      molecule::make_bond_type(element[0], element[1], molecule::Order::Single, molecule::Setting::Plain);
+  const auto place = std::lower_bound(
+      tally.begin(), tally.end(), link,
+      [](const molecule::BondCount& entry, const molecule::BondType& type) { return entry.type < type; });
+  if (place != tally.end() && place->type == link) {
+    ++place->count;
+  } else {
+    tally.insert(place, molecule::BondCount{link, 1});
+  }
+}
+
 void set_structure(Species& species, molecule::Graph graph, std::string canonical) {
   molecule::perceive_aromaticity(graph);
   species.bonds = molecule::count_bonds_with_rings(graph);
+  if (species.repeat_unit) link_open_ends(graph, species.bonds);
   species.canonical = std::move(canonical);
   species.graph = std::move(graph);
 }

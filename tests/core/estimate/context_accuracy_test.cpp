@@ -4,6 +4,8 @@
 
 #include <gtest/gtest.h>
 
+#include <algorithm>
+
 #include "core/estimate/context_accuracy.hpp"
 #include "tests/core/support/test_files.hpp"
 
@@ -23,9 +25,29 @@ TEST(ContextAccuracy, MeetsItsFigures) {
   const AccuracyLine& organic = lines.at(2);
   ASSERT_EQ(organic.set, "trusted, organic");
   EXPECT_LE(organic.median, 2.3);
-  EXPECT_LE(organic.mean, 6.3);
+  EXPECT_LE(organic.mean, 5.7);
   EXPECT_GE(organic.cover95, 0.93);
   EXPECT_LE(organic.cover95, 0.97);
+  // What the independent implementation reaches by family, on a table that was slightly larger. Small
+  // inorganic molecules (35.5 there, 44.5 here) belong into tables, not into estimates.
+  const struct {
+    const char* family;
+    double mean;
+  } limits[] = {{"hydrocarbon", 3.57},
+                {"alcohol, ether", 5.11},
+                {"carbonyl, acid, ester", 8.01},
+                {"amine, nitrile, amide", 11.14},
+                {"nitro", 7.89},
+                {"sulfur", 5.11},
+                {"halogen", 5.57},
+                {"Si, P, B", 21.65},
+                {"strained ring, cage", 17.67}};
+  for (const auto& limit : limits) {
+    const auto line = std::find_if(lines.begin(), lines.end(),
+                                   [&](const AccuracyLine& one) { return one.set == limit.family; });
+    ASSERT_NE(line, lines.end()) << limit.family;
+    EXPECT_LE(line->mean, limit.mean) << limit.family;
+  }
 }
 
 }  // namespace

@@ -32,7 +32,9 @@ inline std::map<std::string, double> counts_of(const ContextGraph& graph) {
   molecule_from(graph, sink);
   std::map<std::string, double> counts;
   for (const FeatureInstance& instance : instances) {
-    std::string name = std::string(class_name(instance.family)) + " " + instance.code.text();
+    // The data were counted before bonds of other elements became a class of their own.
+    const FeatureClass family = instance.family == FeatureClass::Bx ? FeatureClass::B : instance.family;
+    std::string name = std::string(class_name(family)) + " " + instance.code.text();
     if (instance.family == FeatureClass::SC) name += " #" + std::to_string(instance.key);
     counts[name] += instance.amount;
   }
