@@ -144,6 +144,7 @@ function showCell(before, cell, columns, folds) {
   if (folds) classes.push("fold-mark");
   const words = cell.text || (cell.editable && kind !== "button" ? cell.hint : "") || "";
   if (!cell.text && words) classes.push("empty");
+  if (!words && !cell.id) classes.push("blank");
   setClass(node, classes.join(" "));
   if (kind === "equation" && cell.text) setEquation(text, words);
   else setText(text, words);
