@@ -10,7 +10,7 @@ import {TableView} from "./table_view.js";
  */
 
 /** Marks in front of a note, so that its kind does not rest on colour. */
-const noteMarks = {info: "", assumption: "", caution: "Caution", disagreement: "Routes differ", error: "Not understood"};
+const noteMarks = {info: "", assumption: "", caution: "Caution", disagreement: "Differs", error: "Not understood"};
 
 class HeadingView {
   /** @param {string} id */
@@ -104,6 +104,8 @@ export class SheetView {
     for (const [name, nodes] of contents) {
       const part = this.parts.get(name) ?? make("section", "part");
       part.dataset.part = name;
+      // A short part is not worth the guess at its height that leaving it out takes.
+      part.classList.toggle("long", nodes.length > 6);
       setChildren(part, nodes);
       parts.set(name, part);
     }
