@@ -19,8 +19,9 @@ class Keeping : public benchmark::ConsoleReporter {
  public:
   void ReportRuns(const std::vector<Run>& runs) override {
     for (const Run& run : runs) {
-      for (const auto& counter : run.counters)
-        kept_[run.benchmark_name()][counter.first] = counter.second.value;
+      std::string name = run.run_name.function_name;
+      if (!run.aggregate_name.empty()) name += "_" + run.aggregate_name;
+      for (const auto& counter : run.counters) kept_[name][counter.first] = counter.second.value;
     }
     ConsoleReporter::ReportRuns(runs);
   }
