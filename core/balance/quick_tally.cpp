@@ -3,6 +3,7 @@
 #include <array>
 #include <string>
 #include <unordered_map>
+#include <utility>
 #include <vector>
 
 #include "core/balance/figures.hpp"
@@ -20,8 +21,19 @@ struct KnownTerm {
   double coefficient = 1;
   SpeciesFigures figures;
   std::vector<std::pair<int, double>> atoms;  ///< times the coefficient; charge under key -1
-  bool whole = false;  ///< all counts are whole numbers, so that sums of them are exact
+  bool whole = false;     ///< all counts are whole numbers, so that sums of them are exact
+  std::size_t parts = 0;  ///< of the ± of all figures: what the term takes in memory
 };
+
+std::size_t parts_of(const SpeciesFigures& figures) {
+  std::size_t parts = 0;
+  for (const std::optional<Quantity>* figure :
+       {&figures.priced.per_mole, &figures.to_phase, &figures.formation, &figures.formation_row,
+        &figures.context, &figures.context_row}) {
+    if (*figure) parts += (*figure)->parts().size();
+  }
+  return parts;
+}
 
 std::optional<Figure> figure_of(const std::optional<Quantity>& quantity) {
   if (!quantity) return std::nullopt;
@@ -100,6 +112,7 @@ struct QuickTally::State {
   std::size_t capacity = 1;
   CachedSpecies species;
   Terms newer, older;
+  std::size_t newer_parts = 0, older_parts = 0;
   std::vector<Piece> pieces;
   std::vector<const KnownTerm*> terms;
   std::vector<Entry> entries;
@@ -109,16 +122,20 @@ struct QuickTally::State {
     const auto found = older.find(text);
     if (found == older.end()) return nullptr;
     std::shared_ptr<const KnownTerm> term = found->second;
-    if (newer.size() >= capacity)
-      return term.get();  // renewing would drop the half that this equation is read from
+    if (full()) return term.get();  // renewing would drop the half that this equation is read from
+    newer_parts += term->parts;
     return newer.emplace(std::string(text), std::move(term)).first->second.get();
   }
 
+  bool full() const { return newer.size() >= capacity || newer_parts >= QuickTally::most_parts; }
+
   void remember(std::string_view text, std::shared_ptr<const KnownTerm> term) {
-    if (newer.size() >= capacity) {
+    if (full()) {
       older = std::move(newer);
       newer.clear();
+      older_parts = std::exchange(newer_parts, 0);
     }
+    newer_parts += term->parts;
     newer.insert_or_assign(std::string(text), std::move(term));
   }
 
@@ -171,6 +188,7 @@ struct QuickTally::State {
       auto term = std::make_shared<KnownTerm>();
       term->coefficient = entry.coefficient();
       term->figures = species_figures(*entry.species, entry.term, *set, context);
+      term->parts = parts_of(term->figures);
       term->whole = entry.term.coefficient.denominator == 1 && entry.species->composition.has_value();
       if (entry.species->composition) {
         for (const auto& atom : entry.species->composition->atoms) {
@@ -206,6 +224,10 @@ QuickTally::QuickTally(std::shared_ptr<const estimate::BondSet> set, ContextUse 
 }
 
 QuickTally::~QuickTally() = default;
+
+std::size_t QuickTally::remembered_parts() const {
+  return state_->newer_parts + state_->older_parts;
+}
 
 Result<QuickAnswer> QuickTally::tally(std::string_view equation) {
   if (state_->by_known_terms(equation)) return state_->answer();

@@ -27,6 +27,12 @@ class QuickTally {
                       ContextUse context = ContextUse::WhereNeeded, std::size_t capacity = 8192);
   ~QuickTally();
 
+  /// Parts of ± kept in each half of the memory before it is renewed [16 bytes each]: an estimate brings a
+  /// thousand with each of its figures, a figure of a table one.
+  static constexpr std::size_t most_parts = std::size_t{1} << 20;
+  /// Parts of ± held now: at most twice most_parts and the terms of one equation.
+  std::size_t remembered_parts() const;
+
   /// @errors as read_reaction and make_ledger without basis: equation.*, species.*, smiles.*, formula.*,
   /// ledger.not_balanced
   /// @example QuickTally, GivesTheDigitsOfTheLedger

@@ -2,6 +2,10 @@
 
 #include <gtest/gtest.h>
 
+#include <algorithm>
+#include <array>
+#include <string>
+
 #include "tests/core/balance/sheets.hpp"
 
 namespace heatledger::balance {
@@ -71,6 +75,21 @@ TEST(QuickTally, KeepsItsMemoryBoundedAndItsAnswersRight) {
     ASSERT_TRUE(answer.ok());
     EXPECT_EQ(answer->gas_298->value, expected);
   }
+}
+
+TEST(QuickTally, KeepsItsMemoryBoundedWhereEveryTermIsAnEstimate) {
+  // Each chain brings some thousands of parts, so that the memory is renewed several times over.
+  QuickTally quick(test_sheets::bond_set(), ContextUse::Always);
+  std::size_t most = 0;
+  for (int i = 0; i < 800; ++i) {
+    std::string chain = "C";
+    for (int rest = i, k = 0; k < 5; ++k, rest /= 4)
+      chain += std::array<const char*, 4>{"C", "C(C)", "C(CC)", "C(F)"}[static_cast<std::size_t>(rest % 4)];
+    ASSERT_TRUE(quick.tally("\"" + chain + "Cl\"(g) -> \"" + chain + "Cl\"(g)").ok()) << chain;
+    most = std::max(most, quick.remembered_parts());
+  }
+  EXPECT_GT(most, QuickTally::most_parts);  // or the bound was never met
+  EXPECT_LE(most, 2 * QuickTally::most_parts + 20000);
 }
 
 }  // namespace
