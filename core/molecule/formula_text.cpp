@@ -88,7 +88,8 @@ int common_denominator(const std::vector<Entry>& entries) {
   for (int factor = 1; factor <= 10000; ++factor) {
     const bool whole = std::all_of(entries.begin(), entries.end(), [factor](const Entry& entry) {
       const double scaled = entry.count * factor;
-      return std::fabs(scaled - std::round(scaled)) <= 1e-9 * std::max(1.0, scaled);
+      // What the digits of a typed count leave, but never a share of an atom that a reader would see.
+      return std::fabs(scaled - std::round(scaled)) <= std::min(1e-9 * std::max(1.0, scaled), 1e-6);
     });
     if (whole) return factor;
   }
@@ -103,7 +104,7 @@ std::string formula_text(const Composition& composition, bool display) {
     const double count = denominator == 0 ? entry.count : std::round(entry.count * denominator);
     text += symbol_text(entry.key, display);
     if (count == 1) continue;
-    const std::string number = machine_number(count);
+    const std::string number = machine_number(count, 15);
     text += display ? lowered(number) : number;
   }
   if (denominator > 1) text = "(" + text + ")1/" + std::to_string(denominator);

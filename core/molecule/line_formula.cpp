@@ -61,6 +61,20 @@ struct Level {
   bool waiting() const { return front_hydrogens > 0 || !front_pieces.empty(); }
 };
 
+/// Sulfur with more than six bonds or phosphorus with more than five: each =O in brackets adds two.
+bool binds_beyond_expansion(const Graph& graph) {
+  std::vector<int> bonds(graph.atoms.size());
+  for (std::size_t i = 0; i < bonds.size(); ++i) bonds[i] = graph.atoms[i].hydrogens;
+  for (const Bond& bond : graph.bonds) {
+    for (const std::uint32_t end : {bond.a, bond.b}) bonds[end] += static_cast<int>(bond.order);
+  }
+  for (std::size_t i = 0; i < bonds.size(); ++i) {
+    const int element = graph.atoms[i].element;
+    if ((element == 16 && bonds[i] > 6) || (element == 15 && bonds[i] > 5)) return true;
+  }
+  return false;
+}
+
 class LineReader {
  public:
   explicit LineReader(std::string_view text) : text_(text) {}
@@ -80,6 +94,7 @@ class LineReader {
     // Without carbon or hydrogen ("OO", "NN") the text says nothing about its bonds.
     if (!any || !whole.close_valences())
       return not_condensed(begin, "The valences of this formula do not close in one single way.");
+    if (binds_beyond_expansion(whole.graph)) return crowded(begin);
     if (is_also_molecular(whole.graph))
       return ambiguous(begin, "This is also a molecular formula, and isomers have it.");
     return std::move(whole.graph);

@@ -36,6 +36,9 @@ void require(bool holds, const char* what, std::string_view text, const std::str
 /// Two neighbouring atoms of nitrogen, oxygen or fluorine above their octet, one of them by two bonds
 /// (C=O=OC): nobody means such a text, and which of its atoms hand back their bonds depends on the reading.
 bool beyond_reading(const Graph& graph) {
+  for (const Atom& atom : graph.atoms) {
+    if (atom.charge < -2 || atom.charge > 2) return true;
+  }
   std::vector<int> excess(graph.atoms.size());
   for (std::size_t i = 0; i < excess.size(); ++i) {
     const Atom& atom = graph.atoms[i];
