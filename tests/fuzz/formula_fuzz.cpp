@@ -38,6 +38,8 @@ extern "C" int LLVMFuzzerTestOneInput(const std::uint8_t* data, std::size_t size
   const std::string hill = hill_formula(*first);
   if (hill.find('.') != std::string::npos) return 0;  // counts that are no fractions up to 1/10,000
   const Result<Composition> from_hill = parse_formula(hill);
+  // A fraction in front of a large count multiplies it beyond what a formula may hold.
+  if (!from_hill && from_hill.error().code == "formula.too_large") return 0;
   CHECK(from_hill.ok() && close(*first, *from_hill), "Hill text reads back");
   CHECK(hill_formula(*from_hill) == hill, "Hill text is a fixed point");
   return 0;
