@@ -22,6 +22,8 @@ constexpr double kReference = units::kReferenceTemperature;
 /// Enthalpy increments of two sets of gas polynomials part by up to 1.2 % (methane, 1000 K, NASA 1993 and
 /// JANAF 1998).
 constexpr double kPolynomialShare = 0.012;
+/// Heat capacities of gases fall by up to 8 % from 298 to 200 K (sulfur dioxide, JANAF 1998).
+constexpr double kColdGasShare = 0.05;
 constexpr double kPolynomialGasConstant = 8.314510;  ///< [J/(mol K)] goes with the coefficients
 /// Heat capacities of solids drift by up to 0.3 % a kelvin; a constant one misses the mean over ΔT by half.
 constexpr double kSolidDrift = 0.003 / 2;
@@ -80,9 +82,16 @@ HeatCapacityPiece straight(double from, double to, double cp, double at, double 
   return p;
 }
 
+/// The table of polynomials names some compounds otherwise than the library: "propene" for propylene.
 const facts::Polynomial* polynomial_of(const Species& species, Phase phase) {
+  if (species.compound == nullptr) return nullptr;
   const char letter = phase == Phase::Liquid ? 'l' : phase == Phase::Solid ? 's' : 'g';
-  return species.compound == nullptr ? nullptr : facts::find_polynomial(species.compound->name, letter);
+  const facts::Polynomial* found = facts::find_polynomial(species.compound->name, letter);
+  for (const std::string_view synonym : species.compound->synonyms) {
+    if (found != nullptr) break;
+    found = facts::find_polynomial(synonym, letter);
+  }
+  return found != nullptr && found->formula == species.compound->formula ? found : nullptr;
 }
 
 void by_polynomial(HeatCapacityCurve& curve, const facts::Polynomial& polynomial) {
@@ -97,8 +106,13 @@ void by_polynomial(HeatCapacityCurve& curve, const facts::Polynomial& polynomial
     curve.pieces.push_back(p);
   }
   HeatCapacityPiece& first = curve.pieces.front();
-  if (first.from > kReference && first.from <= 300) {
+  if (first.from >= kReference && first.from <= 300) {
     first.from = kReference;  // 1.85 K of extrapolation move cp by less than 0.1 %
+    // A gas goes on down to where the other polynomials begin, with the heat capacity at its lower end.
+    const double low = cp_of(first, kReference);
+    if (curve.phase == Phase::Gas)
+      curve.pieces.insert(curve.pieces.begin(),
+                          straight(kLowestGas, kReference, low, 0, 0, kColdGasShare * low));
   } else if (first.from > kReference) {
     // A phase that appears above 298 K: carried down with the heat capacity at its lower end.
     const double low = cp_of(first, first.from);
@@ -160,10 +174,10 @@ std::array<double, 2> liquid_rise(const Species& species, double cp, double cp_u
       compound->vapour_associates)
     return rise;
   const double boiling = compound->boiling_point->value, span = boiling - kReference;
-  if (span < 20) return rise;  // too short a way to tell a slope
+  if (std::fabs(span) < 20) return rise;  // too short a way to tell a slope
   const Result<Sourced> here = gas_to_phase(species, Phase::Liquid);
   const Result<HeatCapacityCurve> gas = heat_capacity_curve(species, Phase::Gas);
-  if (!here.ok() || !gas.ok() || boiling > gas->highest()) return rise;
+  if (!here.ok() || !gas.ok() || boiling > gas->highest() || boiling < gas->lowest()) return rise;
   const facts::Datum& there = *compound->vaporisation_enthalpy_boiling;
   const double liquid = -here->value.value() + gas->increment(boiling) - there.value;  // ∫ cp,l dT
   const double seen = 2 * (liquid / span - cp) / (span * cp);
@@ -282,8 +296,8 @@ double HeatCapacityCurve::deviation(double temperature) const {
   const double t = std::clamp(temperature, lowest(), highest());
   const HeatCapacityPiece& p = piece_at(pieces, t);
   const double span = temperature - kReference;
-  const double figure = kind == CurveKind::Polynomial ? kPolynomialShare * increment(temperature)
-                                                      : p.deviation + p.u95 * (temperature - p.from);
+  double figure = p.deviation + p.u95 * (temperature - p.from);
+  if (kind == CurveKind::Polynomial) figure = std::hypot(figure, kPolynomialShare * increment(temperature));
   const double grown = drift * std::fabs(span) * at_298 * span;
   const double both = std::sqrt(figure * figure + grown * grown);
   return span < 0 ? -both : both;
@@ -365,7 +379,8 @@ Result<Sourced> heat_capacity_of(const HeatCapacityCurve& curve, double temperat
   if (!in_range(curve, temperature)) return out_of_range(curve, temperature);
   const double value = curve.heat_capacity(temperature);
   const HeatCapacityPiece& p = piece_at(curve.pieces, temperature);
-  const double figure = curve.kind == CurveKind::Polynomial ? kPolynomialShare * value : p.u95;
+  const double figure =
+      curve.kind == CurveKind::Polynomial ? std::hypot(p.u95, kPolynomialShare * value) : p.u95;
   const double grown = 2 * curve.drift * std::fabs(temperature - kReference) * curve.at_298;
   Sourced result;
   result.value = Quantity(value, {uncertainty::Part{curve.key, std::sqrt(figure * figure + grown * grown)}});
