@@ -5,6 +5,7 @@
 #include "core/balance/figures.hpp"
 #include "core/balance/proposals.hpp"
 #include "core/balance/routes.hpp"
+#include "core/balance/table_notes.hpp"
 #include "core/balance/temperature.hpp"
 #include "core/base/check.hpp"
 #include "core/thermo/estimated.hpp"
@@ -124,6 +125,7 @@ Result<Ledger> make_ledger(std::shared_ptr<const Reaction> reaction, const Ledge
     ledger.notes.emplace_back("Element balance not checkable: a species has no formula.");
   note_phases(ledger);
   add_routes(ledger, entries, sums, options);
+  note_tables(ledger);
   if (options.reactants_at || options.products_at) run_at_temperatures(ledger, options);
   note_set(ledger);
   return ledger;

@@ -2,6 +2,9 @@
 #include <cmath>
 
 #include "core/base/number_text.hpp"
+#include "core/facts/atoms.hpp"
+#include "core/facts/polynomials.hpp"
+#include "core/molecule/formula.hpp"
 #include "core/thermo/dissolved.hpp"
 #include "core/thermo/heating_path.hpp"
 #include "core/thermo/species_enthalpy.hpp"
@@ -70,6 +73,27 @@ Error no_formation(const Species& species, Phase phase) {
                species.text, "Write another phase, or type a value with its source."};
 }
 
+/// A formula that no compound of the library has, small radicals mostly: the one gas of that composition
+/// among the polynomials. Never for a structure, which may be another isomer.
+Result<Sourced> radical_formation(const Species& species, Phase phase) {
+  if (phase != Phase::Gas || species.graph || !species.composition || species.composition->charge != 0)
+    return no_formation(species, phase);
+  const std::vector<const facts::Polynomial*> found =
+      facts::find_polynomials(molecule::hill_formula(*species.composition), 'g');
+  if (found.size() != 1 || !found.front()->stable_at_298) return no_formation(species, phase);
+  // OH, CH2 and NH2 of that report lie 2 to 3 kJ/mol from ATcT 1.112.
+  constexpr double kU95 = 4 * kJ;
+  Sourced result;
+  result.value =
+      Quantity(found.front()->formation_enthalpy, kU95, figure_key(SourceKind::Compound, species, phase));
+  result.route = "table";
+  result.source = "NASA TM-4513, 1993";
+  result.working.push_back("ΔfH(g) " + std::string(found.front()->name) + " = " +
+                           display_signed(found.front()->formation_enthalpy / kJ, 2) + " ± " +
+                           display_number(kU95 / kJ, 0) + " kJ/mol, " + result.source);
+  return result;
+}
+
 }  // namespace
 
 std::string_view phase_word(Phase phase) {
@@ -119,7 +143,7 @@ Result<Sourced> tabulated_formation(const Species& species, Phase phase,
   if (phase == Phase::Aqueous) return dissolved_formation(species, strength);
   if (phase == Phase::Dissolved) return formation_in_solvent(species, tabulated_formation);
   const Compound* compound = species.compound;
-  if (compound == nullptr) return no_formation(species, phase);
+  if (compound == nullptr) return radical_formation(species, phase);
   if (is_reference(*compound, phase)) {
     Sourced zero;
     zero.value = Quantity(0);
@@ -132,6 +156,12 @@ Result<Sourced> tabulated_formation(const Species& species, Phase phase,
   const facts::PhaseFacts* facts = facts_of(*compound, phase);
   if (facts != nullptr && facts->formation_enthalpy)
     return from_datum(species, phase, *facts->formation_enthalpy);
+
+  if (phase == Phase::Gas && compound->reference_element && species.composition &&
+      species.composition->atoms.size() == 1 && species.composition->atoms.begin()->second == 1) {
+    const std::optional<Datum> atom = facts::gas_atom_formation(species.composition->atoms.begin()->first);
+    if (atom) return from_datum(species, phase, *atom);
+  }
 
   // One of gas and liquid is tabulated, and what lies between them: the other follows.
   const bool to_gas = phase == Phase::Gas && has_formation(*compound, Phase::Liquid);

@@ -95,6 +95,34 @@ TEST(PublishedHeats, AtTemperature) {
   }
 }
 
+/// Fragments that the library holds: atoms, small molecules, a few radicals. The others are named, since no
+/// figure is made up for a radical.
+TEST(PublishedHeats, OfBondDissociation) {
+  const test::Table table = test::read_table("tests/data/checks/bond_dissociation.tsv");
+  ASSERT_EQ(table.rows.size(), 31u);
+  int compared = 0;
+  std::string without;
+  for (const auto& row : table.rows) {
+    const Result<Ledger> made =
+        test_sheets::try_ledger(row[1] + "(g) -> " + row[2] + "(g) + " + row[3] + "(g)");
+    ASSERT_TRUE(made.ok()) << row[0] << ": " << made.error().message;
+    const Route* route = find_route(*made, kFormationRoute);
+    ASSERT_NE(route, nullptr);
+    if (!route->as_written) {
+      EXPECT_FALSE(route->why_not.empty()) << row[0];
+      without += " " + row[0];
+      continue;
+    }
+    ++compared;
+    EXPECT_NEAR(route->as_written->value() / 1000, *parse_number(row[4]),
+                std::fmax(*parse_number(row[5]), room(*made)))
+        << row[0] << ", " << row[7];
+  }
+  std::printf("bond dissociation: %d of %zu; without a figure:%s\n", compared, table.rows.size(),
+              without.c_str());
+  EXPECT_GE(compared, 21);
+}
+
 /// Published polymerisation heats against the estimate of the unit. Each within its tolerance or within the ±
 /// that is stated; doubtful ones are printed.
 TEST(PublishedHeats, OfPolymerisation) {

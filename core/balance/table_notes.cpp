@@ -1,0 +1,69 @@
+#include "core/balance/table_notes.hpp"
+
+#include <cmath>
+
+#include "core/balance/bond_words.hpp"
+#include "core/base/number_text.hpp"
+
+namespace heatledger::balance {
+namespace {
+
+using molecule::Phase;
+
+constexpr double kMoves = 2000;  ///< [J] for the written coefficients
+
+const facts::Datum* formation_of(const LedgerRow& row, const facts::Compound& compound) {
+  const facts::PhaseFacts* facts = row.phase == Phase::Gas      ? &compound.gas
+                                   : row.phase == Phase::Liquid ? &compound.liquid
+                                   : row.phase == Phase::Solid  ? &compound.solid
+                                                                : nullptr;
+  return facts != nullptr && facts->formation_enthalpy ? &*facts->formation_enthalpy : nullptr;
+}
+
+void note_rivals(Ledger& ledger, const LedgerRow& row) {
+  const ReactionSpecies& entry = ledger.reaction->species[row.species];
+  if (entry.species->compound == nullptr) return;
+  const facts::Datum* datum = formation_of(row, *entry.species->compound);
+  if (datum == nullptr) return;
+  std::string others;
+  for (const facts::Rival& rival : datum->rivals) {
+    if (std::fabs(rival.value - datum->value) * entry.coefficient() < kMoves) continue;
+    others += (others.empty() ? "" : ", ") + display_number(rival.value / 1000, 1) + " (" +
+              std::string(rival.source) + ")";
+  }
+  if (others.empty()) return;
+  std::string why(datum->why_taken);
+  if (!why.empty() && why.back() != '.') why += '.';
+  ledger.notes.push_back("Tables part on ΔfH of " + display_species(entry) + ": " +
+                         display_number(datum->value / 1000, 1) + " kJ/mol (" + std::string(datum->source) +
+                         ") is taken, not " + others + "." + (why.empty() ? "" : " " + why));
+}
+
+/// Solutions of a stated strength among the reactants, each with a solute of its own.
+std::size_t solutions_mixed(const Ledger& ledger) {
+  std::size_t count = 0;
+  for (const ReactionSpecies& entry : ledger.reaction->species) {
+    const bool strong =
+        entry.term.strength && entry.term.strength->kind != molecule::Strength::Kind::InfiniteDilution;
+    count += !entry.product && strong ? 1 : 0;
+  }
+  return count;
+}
+
+}  // namespace
+
+void note_tables(Ledger& ledger) {
+  const Route* formation = find_route(ledger, kFormationRoute);
+  if (formation == nullptr || !formation->as_written) return;
+  for (const LedgerRow& row : ledger.rows) note_rivals(ledger, row);
+  if (solutions_mixed(ledger) > 1) {
+    ledger.cautions.push_back(
+        "Solutions of stated strength are mixed here. Every heat of solution is that of one solute in its "
+        "own "
+        "water; the heat of mixing the concentrated liquids is no line of this ledger, so the heat given off "
+        "is a "
+        "lower bound. Type a measured one where it matters.");
+  }
+}
+
+}  // namespace heatledger::balance

@@ -1,0 +1,14 @@
+// What a reader should know of the data behind the formation route: tables that part, heats that are not in
+// it.
+#pragma once
+
+#include "core/balance/ledger.hpp"
+
+namespace heatledger::balance {
+
+/// Notes where published formation enthalpies of a species part beyond their ± and by enough to move the
+/// figure (2 kJ for the written coefficients); a caution where solutions of several solutes meet, whose heat
+/// of mixing is in no figure here. Only where the formation route has a figure.
+void note_tables(Ledger& ledger);
+
+}  // namespace heatledger::balance
