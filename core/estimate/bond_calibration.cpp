@@ -117,9 +117,9 @@ unsigned fold_of(const PricedCompound& compound, unsigned folds) {
 
 }  // namespace
 
-std::vector<PricedCompound> priced_compounds() {
-  Result<BondSet> set = BondSet::published("");
-  CHECK(set.ok(), "a primary bond set");
+std::vector<PricedCompound> priced_compounds(std::string_view name) {
+  Result<BondSet> set = BondSet::published(name);
+  CHECK(set.ok(), "a published bond set");
   std::vector<PricedCompound> compounds;
   for (const TrainingFigure& figure : training_figures(FitKind::Formation, TrainingRows::Original)) {
     if (!figure.trusted) continue;
@@ -193,31 +193,38 @@ double bond_coverage_left_out(const std::vector<PricedCompound>& compounds, unsi
 }
 
 std::string bond_spread_table() {
-  const std::vector<PricedCompound> compounds = priced_compounds();
-  const std::vector<BondSpread> spreads = fit_bond_spreads(compounds);
-  std::vector<BondSpread> bare = spreads;
-  for (BondSpread& spread : bare) spread.u95 = spread.table_u95;
   const auto percent = [](double share) { return machine_number(100 * share, 3) + " %"; };
   std::string text =
       "# How many times the spread of the tables a bond's ± has to be, so that the stated 95 % interval of a "
       "molecule covers\n"
-      "# 95 % of the molecules left out of the fit. Printed by `heatledger_refit bonds`; a test compares "
-      "it.\n"
-      "# " +
-      std::to_string(compounds.size()) +
-      " compounds whose formation enthalpy two sources share, primary set: bare spread covers " +
-      percent(bond_coverage(compounds, bare)) + ", with the factors " +
-      percent(bond_coverage(compounds, spreads)) +
-      ",\n"
-      "# compounds left out of the fit in ten parts " +
-      percent(bond_coverage_left_out(compounds, 10)) +
-      ".\n"
+      "# 95 % of the molecules left out of the fit; one pair of columns a set. Printed by `heatledger_refit "
+      "bonds`; a test compares it.\n"
+      "# Compounds whose formation enthalpy two sources share, priced by each set:\n";
+  std::vector<std::vector<BondSpread>> sets;
+  std::string heading = "first\tbond\tsecond\tsetting";
+  for (const std::string& name : BondSet::names()) {
+    const std::vector<PricedCompound> compounds = priced_compounds(name);
+    std::vector<BondSpread> spreads = fit_bond_spreads(compounds), bare = spreads;
+    for (BondSpread& spread : bare) spread.u95 = spread.table_u95;
+    text += "#   " + name + ": " + std::to_string(compounds.size()) + " compounds, bare spread covers " +
+            percent(bond_coverage(compounds, bare)) + ", with the factors " +
+            percent(bond_coverage(compounds, spreads)) + ", left out in ten parts " +
+            percent(bond_coverage_left_out(compounds, 10)) + "\n";
+    heading += "\t" + name + "\tn_" + name;
+    sets.push_back(std::move(spreads));
+  }
+  text +=
       "# setting as in bond_averages.tsv; n: molecules that the factor rests on; below 5 it is the median of "
-      "the others\n"
-      "first\tbond\tsecond\tsetting\tfactor\tn\n";
-  for (const BondSpread& spread : spreads) {
-    text += table_cells(spread.type);
-    text += machine_number(spread.u95 / spread.table_u95, 3) + "\t" + std::to_string(spread.compounds) + "\n";
+      "the others\n" +
+      heading + "\n";
+  for (std::size_t row = 0; row < sets.front().size(); ++row) {
+    std::string cells = table_cells(sets.front()[row].type);
+    for (const std::vector<BondSpread>& spreads : sets) {
+      cells += machine_number(spreads[row].u95 / spreads[row].table_u95, 3) + "\t" +
+               std::to_string(spreads[row].compounds) + "\t";
+    }
+    cells.back() = '\n';
+    text += cells;
   }
   return text;
 }

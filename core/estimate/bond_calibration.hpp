@@ -5,21 +5,23 @@
 
 #include <cstddef>
 #include <string>
+#include <string_view>
 #include <vector>
 
 #include "core/molecule/bonds.hpp"
 
 namespace heatledger::estimate {
 
-/// One trusted compound of the training table, priced with the primary bond set.
+/// One trusted compound of the training table, priced with one bond set.
 struct PricedCompound {
   std::size_t compound = 0;                               ///< index into training_compounds()
   std::vector<std::pair<molecule::BondType, int>> bonds;  ///< as priced, each type once, sorted
   double miss = 0;  ///< sum of average bonds minus tabulated atomisation [J/mol]
 };
 
-/// Compounds whose every bond the primary set prices.
-std::vector<PricedCompound> priced_compounds();
+/// Compounds whose every bond a set prices.
+/// @param set  an id of BondSet::names(); empty: the primary set
+std::vector<PricedCompound> priced_compounds(std::string_view set = {});
 
 /// ± of one bond type.
 struct BondSpread {
@@ -40,7 +42,8 @@ double bond_coverage(const std::vector<PricedCompound>& compounds, const std::ve
 /// The same with each of `folds` parts judged by spreads fitted to the other parts.
 double bond_coverage_left_out(const std::vector<PricedCompound>& compounds, unsigned folds);
 
-/// tables/bond_spread_factors.tsv as it should be, with the coverages in its comment lines.
+/// Every set has factors of its own: tables/bond_spread_factors.tsv as it should be, with the coverages in
+/// its comment lines.
 std::string bond_spread_table();
 
 }  // namespace heatledger::estimate

@@ -117,7 +117,7 @@ Result<BondSet> BondSet::published(std::string_view name) {
     BondValue value;
     value.type = row.type;
     value.value = *row.value[at];
-    value.u95 = row.spread_u95 * row.factor;
+    value.u95 = row.spread_u95 * row.factor[*index];
     value.origin = is_specific(row.type) ? BondOrigin::TableSpecific : BondOrigin::TableMean;
     value.source = std::string(bond_table_info(*column).source);
     if (row.from_memory[at]) value.source += " (from memory)";

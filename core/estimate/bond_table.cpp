@@ -107,15 +107,18 @@ std::vector<BondTableRow> read_tables() {
   });
   std::sort(rows.begin(), rows.end(),
             [](const BondTableRow& a, const BondTableRow& b) { return a.type < b.type; });
-  for_each_row(tables::bond_spread_factors, 6, [&rows](const std::vector<std::string_view>& cells) {
-    const BondType type = type_of(cells);
-    const auto row =
-        std::find_if(rows.begin(), rows.end(), [&type](const BondTableRow& r) { return r.type == type; });
-    const std::optional<double> factor = parse_number(cells[4]), molecules = parse_number(cells[5]);
-    CHECK(row != rows.end() && factor && molecules, "a spread factor belongs to a bond of the tables");
-    row->factor = *factor;
-    row->factor_molecules = static_cast<int>(*molecules);
-  });
+  for_each_row(
+      tables::bond_spread_factors, 4 + 2 * kBondTables, [&rows](const std::vector<std::string_view>& cells) {
+        const BondType type = type_of(cells);
+        const auto row =
+            std::find_if(rows.begin(), rows.end(), [&type](const BondTableRow& r) { return r.type == type; });
+        CHECK(row != rows.end(), "a spread factor belongs to a bond of the tables");
+        for (std::size_t i = 0; i < kBondTables; ++i) {
+          const std::optional<double> factor = parse_number(cells[4 + 2 * i]);
+          CHECK(factor.has_value(), "a spread factor is a number");
+          row->factor[i] = *factor;
+        }
+      });
   return rows;
 }
 

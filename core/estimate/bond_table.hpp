@@ -29,8 +29,9 @@ struct BondTableRow {
   std::array<bool, kBondColumns> from_memory{};
   std::string_view remark;
   double spread_u95 = 0;  ///< [J/mol] 95 % half width that the spread of the columns gives, floor included
-  double factor = 1;  ///< calibrated multiple of the spread (bond_spread_factors.tsv); 1 where none is known
-  int factor_molecules = 0;
+  /// Calibrated multiple of the spread, one for each table to choose from (bond_spread_factors.tsv); 1 where
+  /// none is known.
+  std::array<double, kBondTables> factor = {1, 1, 1, 1};
 };
 
 /// All rows, read once from the embedded table; sorted by type.

@@ -2,6 +2,7 @@
 
 #include <gtest/gtest.h>
 
+#include "core/estimate/bond_set.hpp"
 #include "tests/core/support/test_files.hpp"
 
 namespace heatledger::estimate {
@@ -13,11 +14,13 @@ TEST(BondCalibration, IsWhatTheShippedTableSays) {
          "bond tables.";
 }
 
-TEST(BondCalibration, CoversCompoundsLeftOut) {
-  const std::vector<PricedCompound> compounds = priced_compounds();
-  EXPECT_GT(compounds.size(), 1000u);
-  // 95 % of 1,087 has a sampling error of 0.7 %; twice that and a little is allowed each way.
-  EXPECT_NEAR(bond_coverage_left_out(compounds, 5), 0.95, 0.02);
+TEST(BondCalibration, CoversCompoundsLeftOutByEverySet) {
+  for (const std::string& name : BondSet::names()) {
+    const std::vector<PricedCompound> compounds = priced_compounds(name);
+    EXPECT_GT(compounds.size(), 900u) << name;
+    // 95 % of a thousand has a sampling error of 0.7 %; twice that and a little is allowed each way.
+    EXPECT_NEAR(bond_coverage_left_out(compounds, 5), 0.95, 0.02) << name;
+  }
 }
 
 TEST(BondCalibration, BareSpreadOfTablesCoversFarTooLittle) {
