@@ -85,13 +85,15 @@ std::optional<double> boiling_point(const Model& model, const std::vector<double
   return std::fabs(fb) < 1e-9 ? std::optional<double>(hottest) : std::nullopt;
 }
 
-/// UA = heat / mean temperature difference; log mean when the medium warms, else process less medium.
+/// UA = heat / mean temperature difference. A cooler or heater without reaction: log mean of the two ends in
+/// counter-flow. With reaction: well mixed at the outlet temperature, log mean over the medium's way.
 std::optional<double> conductance(const Model& model, const std::vector<double>& v, double heat) {
   const Surface& surface = model.input().surface;
   const double process = v[model.outlet_temperature_slot()];
   const double in = surface.medium_in ? surface.medium_in->value : surface.medium_out->value;
   const double out = surface.medium_out ? surface.medium_out->value : in;
-  const double one = in - process, two = out - process;
+  const bool along = model.input().kind == StepKind::ThroughFlow && model.input().reactions.empty();
+  const double one = in - process, two = out - (along ? v[model.feed_temperature_slot(0)] : process);
   if (one * two <= 0 || heat / one <= 0) return std::nullopt;  // the medium cannot take or give this heat
   const double mean = one == two ? one : (one - two) / std::log(one / two);
   return heat / mean;

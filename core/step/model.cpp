@@ -152,11 +152,10 @@ Trouble Model::parts_by_share(const std::vector<double>& v, std::size_t f, Work&
   if (feed.shares == ShareKind::MassShare) {
     for (std::size_t p = 0; p < plan.parts; ++p) share[p] /= molar_mass_[feed.parts[p].substance];
   }
-  double moles_per_share = 0, measured = 0, brought = 0;
+  double measured = 0, brought = 0;
   for (std::size_t p = 0; p < plan.parts; ++p) {
     const std::size_t substance = feed.parts[p].substance;
     const FigurePlan& figure = figures_[plan.first_part + p];
-    moles_per_share += share[p];
     if (feed.excess) {
       if (substance == feed.excess->substance) brought += share[p];
     } else if (feed.measure == Measure::Mass) {
@@ -229,7 +228,7 @@ void Model::progress_equations(const std::vector<double>& v, Work& work) const {
     const Progress& progress = input_.reactions[j].progress;
     const double figure = v[reactions_[j].progress];
     const double fed = work.fed[progress.of];
-    const double consumed = -coefficient(j, progress.of);
+    const double consumed = -coefficient_of(j, progress.of);
     switch (progress.kind) {
       case ProgressKind::Extent:
         row[j] = 1;
@@ -242,22 +241,22 @@ void Model::progress_equations(const std::vector<double>& v, Work& work) const {
         break;
       case ProgressKind::ConversionOfArriving:
         row[j] = consumed;
-        for (std::size_t k = 0; k < j; ++k) row[k] -= figure * coefficient(k, progress.of);
+        for (std::size_t k = 0; k < j; ++k) row[k] -= figure * coefficient_of(k, progress.of);
         row[n] = figure * fed;
         break;
       case ProgressKind::TotalConversion:
-        for (std::size_t k = 0; k < n; ++k) row[k] -= coefficient(k, progress.of);
+        for (std::size_t k = 0; k < n; ++k) row[k] -= coefficient_of(k, progress.of);
         row[n] = figure * fed;
         break;
       case ProgressKind::Selectivity:
         row[j] = consumed;
-        for (std::size_t k = 0; k < n; ++k) row[k] -= figure * std::max(0.0, -coefficient(k, progress.of));
+        for (std::size_t k = 0; k < n; ++k) row[k] -= figure * std::max(0.0, -coefficient_of(k, progress.of));
         break;
     }
   }
 }
 
-double Model::coefficient(std::size_t reaction, std::size_t substance) const {
+double Model::coefficient_of(std::size_t reaction, std::size_t substance) const {
   double sum = 0;
   for (const Term& term : reactions_[reaction].terms) {
     if (term.substance == substance) sum += term.coefficient;

@@ -114,6 +114,8 @@ class Model {
   double vapour_pressure(const std::vector<double>& v, std::size_t substance, double temperature) const;
   /// Leaves as liquid (or dissolved) when it is not vapour.
   bool is_liquid(std::size_t substance) const;
+  /// Stoichiometric number of a substance in a reaction, negative for what is consumed.
+  double coefficient_of(std::size_t reaction, std::size_t substance) const;
   double molar_mass(std::size_t substance) const { return molar_mass_[substance]; }
   /// Splits what leaves at a temperature into vapour and the rest (Work::vapour).
   void split(const std::vector<double>& v, double temperature, Work& work) const;
@@ -127,8 +129,6 @@ class Model {
                double amount) const;
   Trouble react(const std::vector<double>& v, Work& work) const;
   void progress_equations(const std::vector<double>& v, Work& work) const;
-  /// Stoichiometric number of a substance in a reaction, negative for what is consumed.
-  double coefficient(std::size_t reaction, std::size_t substance) const;
 
   struct FeedPlan {
     std::size_t temperature = 0;

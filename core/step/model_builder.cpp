@@ -280,7 +280,7 @@ class ModelBuilder {
       bool settled = false;
       for (std::size_t k = 0; k < input().reactions.size(); ++k) {
         settled = settled || (input().reactions[k].progress.kind != ProgressKind::Selectivity &&
-                              model_.coefficient(k, progress.of) < 0);
+                              model_.coefficient_of(k, progress.of) < 0);
       }
       if (!settled) {
         return Error{"step.progress",
@@ -311,13 +311,13 @@ class ModelBuilder {
     if (!slot.ok()) return slot.error();
     model_.reactions_[j].progress = *slot;
     if (extent) return success();
-    if (!(model_.coefficient(j, progress.of) < 0) && progress.kind != ProgressKind::TotalConversion) {
+    if (!(model_.coefficient_of(j, progress.of) < 0) && progress.kind != ProgressKind::TotalConversion) {
       return Error{"step.key_not_consumed",
                    input().substances[progress.of].name + " is not consumed by " + reaction.name + ".", id,
                    "Choose a reactant of this reaction."};
     }
     if (progress.kind == ProgressKind::Yield || progress.kind == ProgressKind::Selectivity) {
-      if (!(model_.coefficient(j, progress.product) > 0)) {
+      if (!(model_.coefficient_of(j, progress.product) > 0)) {
         return Error{"step.product_not_formed",
                      input().substances[progress.product].name + " is not formed by " + reaction.name + ".",
                      id, "Choose a product of this reaction."};
@@ -356,8 +356,8 @@ class ModelBuilder {
         plan.total = *total;
         if (feed.excess) {
           const ExcessOver& over = *feed.excess;
-          if (!(model_.coefficient(over.reaction, over.substance) < 0 &&
-                model_.coefficient(over.reaction, over.key) < 0)) {
+          if (!(model_.coefficient_of(over.reaction, over.substance) < 0 &&
+                model_.coefficient_of(over.reaction, over.key) < 0)) {
             return Error{"step.key_not_consumed",
                          "An excess is reckoned between two reactants of one reaction.", id + ".total",
                          "Choose two reactants."};

@@ -184,6 +184,13 @@ std::vector<std::string> figure_working(const StepResult& result, const Work& wo
   };
   const bool flow = model.input().kind == StepKind::ThroughFlow;
   switch (id) {
+    case FigureId::Conductance: {
+      const bool along = flow && model.input().reactions.empty();
+      return {
+          along
+              ? "duty ÷ log mean temperature difference of the two ends, counter-flow"
+              : "heat ÷ log mean temperature difference between the medium and the mixed process at its end"};
+    }
     case FigureId::HeatPerMass:
       return {heat_text(find(FigureId::HeatSetFree), flow) + " ÷ " + mass_text(mass_fed(model, work), flow)};
     case FigureId::MeanDuty:
