@@ -1,8 +1,12 @@
 #include "core/thermo/dissolved.hpp"
 
+#include <algorithm>
+#include <map>
+
 #include "core/base/number_text.hpp"
 #include "core/facts/ions.hpp"
 #include "core/facts/solution_heats.hpp"
+#include "core/molecule/smiles.hpp"
 
 namespace heatledger::thermo {
 namespace {
@@ -56,6 +60,38 @@ Result<Sourced> from_curve(const Species& species, const SolutionHeats& curve, s
   return result;
 }
 
+/// A salt at infinite dilution is its ions: the sum of their formation enthalpies, all from one table.
+std::optional<Sourced> from_ions(const Species& species) {
+  if (species.compound == nullptr || species.compound->structure != facts::Structure::Formal)
+    return std::nullopt;
+  std::map<std::string, int> ions;  // formula of the table, how many
+  std::string_view rest = species.compound->smiles;
+  while (!rest.empty()) {
+    const std::size_t end = std::min(rest.find('.'), rest.size());
+    const Result<molecule::Graph> graph = molecule::parse_smiles(rest.substr(0, end));
+    rest.remove_prefix(std::min(end + 1, rest.size()));
+    if (!graph.ok()) return std::nullopt;
+    const molecule::Composition composition = molecule::composition(*graph);
+    const facts::AqueousSubstance* ion = facts::find_aqueous_formula(molecule::hill_formula(composition));
+    if (composition.charge == 0 || ion == nullptr) return std::nullopt;
+    ++ions[std::string(ion->formula)];
+  }
+  Sourced result;
+  result.route = "table";
+  for (const auto& ion : ions) {
+    const Result<std::shared_ptr<const Species>> read = facts::resolve_species(ion.first, false);
+    if (!read.ok()) return std::nullopt;
+    const Result<Sourced> one = dissolved_formation(**read, std::nullopt);
+    if (!one.ok()) return std::nullopt;
+    result.value.add(one->value, ion.second);
+    result.source = one->source;
+    result.working.insert(result.working.end(), one->working.begin(), one->working.end());
+    if (ion.second > 1) result.working.back() += ", " + std::to_string(ion.second) + " ×";
+  }
+  result.source = "sum of the ions at infinite dilution, " + result.source;
+  return result;
+}
+
 const SolutionHeats* curve_of(const Species& species, bool infinite) {
   if (species.compound == nullptr) return nullptr;
   for (const char phase : {'s', 'l', 'g'}) {
@@ -88,6 +124,9 @@ Result<Sourced> dissolved_formation(const Species& species, const std::optional<
   if (!ratio && species.aqueous != nullptr && species.aqueous->formation_enthalpy)
     return from_table_of_ions(*species.aqueous, species);
   const SolutionHeats* curve = curve_of(species, !ratio);
+  if (curve == nullptr && !ratio) {
+    if (std::optional<Sourced> ions = from_ions(species)) return *std::move(ions);
+  }
   if (curve == nullptr) return no_solution(species, ratio ? " at that strength" : "");
   return from_curve(species, *curve, ratio);
 }
@@ -99,7 +138,9 @@ Result<Sourced> formation_in_solvent(const Species& species, FormationOf formati
   constexpr double kRoom = 298.15;
   const bool solid = c != nullptr && ((c->melting_point && c->melting_point->value > kRoom) ||
                                       (c->solid.formation_enthalpy && !c->liquid.formation_enthalpy));
-  const bool gas = c != nullptr && c->boiling_point && c->boiling_point->value < kRoom;
+  const bool boils_below = c != nullptr && c->boiling_point && c->boiling_point->value < kRoom;
+  const bool gas = boils_below || (c != nullptr && !c->boiling_point && !solid && c->gas.formation_enthalpy &&
+                                   !c->liquid.formation_enthalpy);
   const double mixing = (solid ? 8.0 : gas ? 5.0 : 3.0) * kJ;
   Sourced result = std::move(liquid).value();
   result.value.add(Quantity(0, mixing, figure_key(SourceKind::Phase, species, Phase::Dissolved)));

@@ -200,6 +200,19 @@ TEST(FusionEnthalpy, IsCarriedToAnotherTemperature) {
   EXPECT_GT(here->value.u95(), there->value.u95());
 }
 
+// NBS 1982: sodium sulfate in water −1389.5 kJ/mol, its ions 2 × −240.1 − 909.3.
+TEST(Dissolved, ASaltIsTheSumOfItsIons) {
+  const Result<Sourced> salt = tabulated_formation(*species("sodium sulfate"), Phase::Aqueous);
+  ASSERT_TRUE(salt.ok()) << salt.error().message;
+  EXPECT_NEAR(salt->value.value() / 1000, -1389.5, 0.5);
+  // The same errors as its ions: dissociation in water is nothing, ± nothing.
+  uncertainty::Quantity left = salt->value;
+  left.add(tabulated_formation(*species("Na+"), Phase::Aqueous)->value, -2);
+  left.add(tabulated_formation(*species("SO4^2-"), Phase::Aqueous)->value, -1);
+  EXPECT_NEAR(left.value(), 0, 1e-6);
+  EXPECT_EQ(left.u95(), 0);
+}
+
 TEST(Dissolved, IsTheLiquidWithAWideError) {
   const auto naphthalene = species("naphthalene");
   const Result<Sourced> dissolved = best_formation(*naphthalene, Phase::Dissolved, {}),
