@@ -1,5 +1,6 @@
 #include "core/balance/figures.hpp"
 
+#include "core/balance/context_rows.hpp"
 #include "core/thermo/estimated.hpp"
 
 namespace heatledger::balance {
@@ -24,26 +25,35 @@ void add_to(std::optional<Quantity>& sum, const std::optional<Quantity>& part, d
 
 /// Elements and what the model does not cover keep their table value; the rest is estimated as gas and
 /// brought into its phase.
-void add_context(const facts::Species& species, bool by_bonds, SpeciesFigures& figures) {
+void add_context(const facts::Species& species, bool by_bonds, const estimate::Observations* observations,
+                 SpeciesFigures& figures) {
   const bool element = species.compound != nullptr && species.compound->reference_element;
-  const Result<thermo::Sourced> gas = thermo::estimated_formation(species, Phase::Gas);
-  if (element || !by_bonds || !gas.ok()) {
+  if (!element && by_bonds) {
+    const Result<thermo::Sourced> gas = thermo::estimated_formation(species, Phase::Gas, observations);
+    figures.in_context = gas.ok();
+    figures.context_row = figures.context = value_of(gas);
+  }
+  if (!figures.in_context) {
     figures.context = figures.formation;
     figures.context_row = figures.formation_row;
-    return;
+  } else if (figures.corrected) {
+    add_to(figures.context, figures.to_phase, 1);
   }
-  figures.context_row = gas->value;
-  figures.context = gas->value;
-  if (figures.corrected) add_to(figures.context, figures.to_phase, 1);
+  if (!figures.context_row) return;
+  const std::optional<double> atoms = gas_atoms_in_context(species);
+  if (!atoms) return;
+  figures.context_sum.emplace(*atoms);
+  figures.context_sum->add(*figures.context_row, -1);
 }
 
 }  // namespace
 
 SpeciesFigures species_figures(const facts::Species& species, const molecule::Term& written,
-                               const estimate::BondSet& set, ContextUse context) {
+                               const estimate::BondSet& set, ContextUse context,
+                               const estimate::Observations* observations) {
   const bool may_estimate = context != ContextUse::Never;
   const auto formation_of = [&](Phase phase) {
-    return may_estimate ? thermo::best_formation(species, phase, written.strength)
+    return may_estimate ? thermo::best_formation(species, phase, written.strength, observations)
                         : thermo::tabulated_formation(species, phase, written.strength);
   };
   SpeciesFigures figures;
@@ -55,13 +65,14 @@ SpeciesFigures species_figures(const facts::Species& species, const molecule::Te
   const bool by_bonds = figures.priced.route == RowRoute::Bonds || !figures.priced.missing.empty();
   figures.corrected = by_bonds && phase != Phase::Gas;
   if (figures.corrected) {
-    figures.to_phase = value_of(may_estimate ? thermo::best_gas_to_phase(species, phase, written.strength)
-                                             : thermo::gas_to_phase(species, phase, written.strength));
+    figures.to_phase =
+        value_of(may_estimate ? thermo::best_gas_to_phase(species, phase, written.strength, observations)
+                              : thermo::gas_to_phase(species, phase, written.strength));
     figures.formation_row = value_of(formation_of(Phase::Gas));
   } else {
     figures.formation_row = figures.formation;
   }
-  if (context == ContextUse::Always) add_context(species, by_bonds, figures);
+  if (context == ContextUse::Always) add_context(species, by_bonds, observations, figures);
   return figures;
 }
 
@@ -71,12 +82,16 @@ EquationFigures add_up(const std::vector<Entry>& entries) {
   sums.formed.emplace();
   sums.formation_gas_298.emplace();
   sums.formation_as_written.emplace();
+  sums.context_broken.emplace();
+  sums.context_formed.emplace();
   sums.context_gas_298.emplace();
   sums.context_as_written.emplace();
   for (const Entry& entry : entries) {
     add_to(entry.product ? sums.formed : sums.broken, entry.figures->priced.per_mole, entry.coefficient);
     add_to(sums.formation_gas_298, entry.figures->formation_row, entry.signed_coefficient());
     add_to(sums.formation_as_written, entry.figures->formation, entry.signed_coefficient());
+    add_to(entry.product ? sums.context_formed : sums.context_broken, entry.figures->context_sum,
+           entry.coefficient);
     add_to(sums.context_gas_298, entry.figures->context_row, entry.signed_coefficient());
     add_to(sums.context_as_written, entry.figures->context, entry.signed_coefficient());
   }

@@ -20,10 +20,15 @@ struct SpeciesFigures {
   bool formation_estimated = false;  ///< no table has `formation`: bonds in context
   std::optional<uncertainty::Quantity> context,
       context_row;  ///< as `formation`, by bonds in context (ContextUse::Always)
+  std::optional<uncertainty::Quantity>
+      context_sum;          ///< gas atoms minus `context_row`: the row of a ledger in context
+  bool in_context = false;  ///< `context_row` is an estimate; else a table or the zero of an element
 };
 
+/// @param observations  measurements that sharpen the estimates; null: none
 SpeciesFigures species_figures(const facts::Species& species, const molecule::Term& written,
-                               const estimate::BondSet& set, ContextUse context);
+                               const estimate::BondSet& set, ContextUse context,
+                               const estimate::Observations* observations = nullptr);
 
 /// One species of an equation with its figures.
 struct Entry {
@@ -38,6 +43,7 @@ struct Entry {
 struct EquationFigures {
   std::optional<uncertainty::Quantity> broken, formed, gas_298, as_written;  ///< average bonds
   std::optional<uncertainty::Quantity> formation_gas_298, formation_as_written;
+  std::optional<uncertainty::Quantity> context_broken, context_formed;
   std::optional<uncertainty::Quantity> context_gas_298, context_as_written;
 };
 

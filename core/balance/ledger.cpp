@@ -2,6 +2,8 @@
 #include "core/balance/ledger.hpp"
 
 #include "core/balance/bond_words.hpp"
+#include "core/balance/context_rows.hpp"
+#include "core/balance/disagreement.hpp"
 #include "core/balance/figures.hpp"
 #include "core/balance/proposals.hpp"
 #include "core/balance/routes.hpp"
@@ -17,7 +19,7 @@ using molecule::Phase;
 using uncertainty::Quantity;
 
 Correction phase_correction(const Reaction& reaction, std::size_t index, const SpeciesFigures& figures,
-                            bool may_estimate, std::vector<std::string>& cautions) {
+                            const LedgerOptions& options, std::vector<std::string>& cautions) {
   const ReactionSpecies& entry = reaction.species[index];
   const Phase phase = figures.priced.phase;
   Correction correction;
@@ -28,8 +30,9 @@ Correction phase_correction(const Reaction& reaction, std::size_t index, const S
       display_species(entry) + ", " + (entry.product ? gas + " to " + other : other + " to " + gas);
   if (correction.times != 1) correction.what += ", " + times_text(correction.times) + " ×";
   const Result<thermo::Sourced> change =
-      may_estimate ? thermo::best_gas_to_phase(*entry.species, phase, entry.term.strength)
-                   : thermo::gas_to_phase(*entry.species, phase, entry.term.strength);
+      options.context != ContextUse::Never
+          ? thermo::best_gas_to_phase(*entry.species, phase, entry.term.strength, options.observations.get())
+          : thermo::gas_to_phase(*entry.species, phase, entry.term.strength);
   if (!change.ok()) {
     correction.why_not = change.error().message;
     return correction;
@@ -66,6 +69,14 @@ void note_phases(Ledger& ledger) {
 }
 
 void note_set(Ledger& ledger) {
+  if (ledger.in_context) {
+    ledger.notes.emplace_back(
+        "Rows by bonds in context: each line is a bond in its surroundings, its base value and what the "
+        "surroundings add; rings, neighbours and the molecule's own deviation stand on lines of their own. ± "
+        "is "
+        "that of the estimate; what both sides share cancels in the sums.");
+    return;
+  }
   bool priced = false, typed = false;
   for (const LedgerRow& row : ledger.rows) {
     for (const BondLine& line : row.lines) {
@@ -88,11 +99,13 @@ Quantity on_basis(const Quantity& quantity, const Basis& basis) {
 
 Result<Ledger> make_ledger(std::shared_ptr<const Reaction> reaction, const LedgerOptions& options) {
   CHECK(reaction != nullptr && options.set != nullptr, "a ledger has a reaction and a bond set");
+  CHECK(!options.context_rows || options.context == ContextUse::Always, "rows in context need the estimates");
   if (reaction->checkable && !reaction->balance.balanced) return not_balanced(*reaction);
   if (!options.pinned_route.empty() && options.pinned_route != kAverageRoute &&
-      options.pinned_route != kFormationRoute && options.pinned_route != kContextRoute) {
+      options.pinned_route != kFormationRoute && options.pinned_route != kContextRoute &&
+      options.pinned_route != kMeasuredRoute) {
     return Error{"ledger.route_unknown", "There is no route \"" + options.pinned_route + "\".",
-                 "pinned_route", "Choose average, context or formation, or leave it empty."};
+                 "pinned_route", "Choose average, context, formation or measured, or leave it empty."};
   }
   Result<Basis> basis = find_basis(*reaction, options.basis);
   if (!basis.ok()) return basis.error();
@@ -101,32 +114,41 @@ Result<Ledger> make_ledger(std::shared_ptr<const Reaction> reaction, const Ledge
   ledger.reaction = std::move(reaction);
   ledger.set = options.set;
   ledger.basis = std::move(basis).value();
+  ledger.in_context = options.context_rows;
+  ledger.observations = options.observations;
+  ledger.reactants_at = options.reactants_at;
+  ledger.products_at = options.products_at;
   const std::vector<ReactionSpecies>& species = ledger.reaction->species;
   std::vector<SpeciesFigures> figures;
   figures.reserve(species.size());
   std::vector<Entry> entries(species.size());
   for (std::size_t i = 0; i < species.size(); ++i) {
-    figures.push_back(species_figures(*species[i].species, species[i].term, *options.set, options.context));
+    figures.push_back(species_figures(*species[i].species, species[i].term, *options.set, options.context,
+                                      options.observations.get()));
     entries[i].coefficient = species[i].coefficient();
     entries[i].product = species[i].product;
     entries[i].figures = &figures[i];
-    ledger.rows.push_back(describe_row(species[i], i, figures[i].priced, *options.set));
+    ledger.rows.push_back(options.context_rows
+                              ? describe_context_row(species[i], i, figures[i], options.observations.get())
+                              : describe_row(species[i], i, figures[i].priced, *options.set));
     if (figures[i].corrected)
-      ledger.corrections.push_back(phase_correction(*ledger.reaction, i, figures[i],
-                                                    options.context != ContextUse::Never, ledger.cautions));
+      ledger.corrections.push_back(
+          phase_correction(*ledger.reaction, i, figures[i], options, ledger.cautions));
     if (!species[i].species->note.empty()) ledger.notes.push_back(species[i].species->note);
   }
   const EquationFigures sums = add_up(entries);
-  ledger.broken = sums.broken;
-  ledger.formed = sums.formed;
-  ledger.gas_298 = sums.gas_298;
-  ledger.as_written = sums.as_written;
+  ledger.broken = options.context_rows ? sums.context_broken : sums.broken;
+  ledger.formed = options.context_rows ? sums.context_formed : sums.formed;
+  ledger.gas_298 = options.context_rows ? sums.context_gas_298 : sums.gas_298;
+  ledger.as_written = options.context_rows ? sums.context_as_written : sums.as_written;
   if (!ledger.reaction->checkable)
     ledger.notes.emplace_back("Element balance not checkable: a species has no formula.");
   note_phases(ledger);
-  add_routes(ledger, entries, sums, options);
+  if (const Status status = add_routes(ledger, entries, sums, options); !status.ok()) return status.error();
+  note_disagreements(ledger, entries);
   note_tables(ledger);
   if (options.reactants_at || options.products_at) run_at_temperatures(ledger, options);
+  if (options.pressure) note_pressure(ledger, *options.pressure);
   note_set(ledger);
   return ledger;
 }
@@ -136,11 +158,16 @@ Ledger ledger_rows(std::shared_ptr<const Reaction> reaction, const LedgerOptions
   Ledger ledger;
   ledger.reaction = std::move(reaction);
   ledger.set = options.set;
+  ledger.in_context = options.context_rows;
+  ledger.observations = options.observations;
   const std::vector<ReactionSpecies>& species = ledger.reaction->species;
   for (std::size_t i = 0; i < species.size(); ++i) {
-    const SpeciesFigures figures =
-        species_figures(*species[i].species, species[i].term, *options.set, ContextUse::Never);
-    ledger.rows.push_back(describe_row(species[i], i, figures.priced, *options.set));
+    const SpeciesFigures figures = species_figures(*species[i].species, species[i].term, *options.set,
+                                                   options.context_rows ? options.context : ContextUse::Never,
+                                                   options.observations.get());
+    ledger.rows.push_back(options.context_rows
+                              ? describe_context_row(species[i], i, figures, options.observations.get())
+                              : describe_row(species[i], i, figures.priced, *options.set));
   }
   return ledger;
 }

@@ -10,6 +10,8 @@
 
 #include "core/balance/reaction.hpp"
 #include "core/estimate/bond_set.hpp"
+#include "core/estimate/context_explain.hpp"
+#include "core/estimate/context_observations.hpp"
 #include "core/thermo/species_enthalpy.hpp"
 #include "core/uncertainty/quantity.hpp"
 
@@ -52,6 +54,9 @@ struct LedgerRow {
   std::size_t species = 0;  ///< index into Reaction::species
   RowRoute route = RowRoute::Bonds;
   std::vector<BondLine> lines;
+  /// In a ledger by bonds in context: the lines of the species, in place of `lines`; null where its sum is
+  /// not an estimate.
+  std::shared_ptr<const estimate::Explanation> context;
   std::optional<uncertainty::Quantity> per_mole;     ///< bond sum of one mole [J/mol]
   std::optional<uncertainty::Quantity> in_equation;  ///< times the coefficient [J]
   std::vector<molecule::BondType> missing;           ///< bond types without a value
@@ -63,6 +68,8 @@ struct LedgerRow {
   std::vector<std::string>
       strains;  ///< what average bonds do not hold in this structure: "aromatic ring", "nitro group"
   std::vector<std::string> working;
+
+  bool unfolds() const { return !lines.empty() || context != nullptr; }
 };
 
 /// One correction line under the totals.
@@ -86,6 +93,17 @@ struct Route {
   std::string why_not;
   std::vector<std::string> working;
   std::vector<std::size_t> estimated;  ///< indices of species whose figure no table has
+};
+
+/// The measured enthalpy of this very reaction, as typed on the sheet.
+struct MeasuredHeat {
+  double value = 0;          ///< [J/mol of `per`], or [J] for the coefficients written
+  double u95 = 0;            ///< half width of the 95 % interval; 0: taken as exact
+  std::string per;           ///< species as for "per mole of" (see find_basis); empty: for the coefficients
+  std::optional<double> at;  ///< [K] at which it was measured; empty: 298.15 K
+  std::string source;        ///< who measured it with what and when
+  std::string remark;        ///< medium, what else the figure includes
+  std::uint64_t key = 0;     ///< equal for the same measurement wherever it acts
 };
 
 /// What the figures are stated per.
@@ -121,7 +139,9 @@ struct Ledger {
   std::optional<uncertainty::Quantity> broken, formed;  ///< sums of the two columns [J]
   std::optional<uncertainty::Quantity> gas_298;         ///< broken − formed by the chosen bond set [J]
   std::vector<Correction> corrections;
-  std::optional<uncertainty::Quantity> as_written;  ///< phases as written, 25 °C [J], by bonds
+  std::optional<uncertainty::Quantity>
+      as_written;           ///< phases as written, 25 °C [J], by the bonds of the rows
+  bool in_context = false;  ///< rows and sums are those of bonds in context
   std::vector<Route> routes;
   std::string taken;  ///< name of the route whose figure goes on
   /// Species brought from 25 °C to their real temperature; empty when none was given.
@@ -129,6 +149,8 @@ struct Ledger {
   std::optional<uncertainty::Quantity>
       as_run;  ///< the figure taken plus these [J]; empty without temperatures or data
   Basis basis;
+  std::optional<double> reactants_at, products_at;             ///< [K] as asked for; empty: 298.15 K
+  std::shared_ptr<const estimate::Observations> observations;  ///< that sharpened the estimates; or null
   std::vector<std::string> notes, cautions;
 };
 
@@ -145,12 +167,16 @@ struct LedgerOptions {
   std::string basis;         ///< "" as written, "NAME" per mole of a species, "kg NAME", "kg reactants"
   std::string pinned_route;  ///< empty: the best
   ContextUse context = ContextUse::WhereNeeded;
+  bool context_rows = false;  ///< rows and sums by bonds in context; takes ContextUse::Always
   std::optional<double> reactants_at, products_at;  ///< [K] > 0; empty: 298.15 K
+  std::optional<double> pressure;                   ///< [Pa] of the gases, for cautions; empty: not asked
+  std::optional<MeasuredHeat> measured;
+  std::shared_ptr<const estimate::Observations> observations;  ///< sharpen every estimate; null: none
 };
 
 /// Names of the routes.
 inline constexpr std::string_view kAverageRoute = "average", kFormationRoute = "formation",
-                                  kContextRoute = "context";
+                                  kContextRoute = "context", kMeasuredRoute = "measured";
 
 /// A figure on the chosen basis [J, J/mol or J/kg].
 uncertainty::Quantity on_basis(const uncertainty::Quantity& quantity, const Basis& basis);
@@ -158,8 +184,10 @@ uncertainty::Quantity on_basis(const uncertainty::Quantity& quantity, const Basi
 /// The route of that name; null when the ledger has none.
 const Route* find_route(const Ledger& ledger, std::string_view name);
 
+/// The measured route, where there is one, is taken before all others unless another is pinned.
 /// @errors ledger.not_balanced (hint lists proposals), ledger.basis_unknown, ledger.no_molar_mass,
-/// ledger.route_unknown
+/// ledger.route_unknown, ledger.measured_per (the species a measured heat is stated for is not in the
+/// equation)
 Result<Ledger> make_ledger(std::shared_ptr<const Reaction> reaction, const LedgerOptions& options);
 
 /// The rows alone, without totals, corrections or routes: what a sheet keeps in view while the coefficients

@@ -148,6 +148,8 @@ struct QuickTally::State {
     result.as_written = figure_of(sums.as_written);
     result.formation_gas_298 = figure_of(sums.formation_gas_298);
     result.formation = figure_of(sums.formation_as_written);
+    result.context_broken = figure_of(sums.context_broken);
+    result.context_formed = figure_of(sums.context_formed);
     result.context_gas_298 = figure_of(sums.context_gas_298);
     result.context = figure_of(sums.context_as_written);
     if (result.formation) {

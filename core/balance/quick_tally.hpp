@@ -14,7 +14,8 @@ namespace heatledger::balance {
 struct QuickAnswer {
   std::optional<uncertainty::Figure> broken, formed, gas_298, as_written;  ///< average bonds
   std::optional<uncertainty::Figure> formation_gas_298, formation;  ///< formation enthalpies; as written
-  std::optional<uncertainty::Figure> context_gas_298, context;      ///< bonds in context (ContextUse::Always)
+  std::optional<uncertainty::Figure> context_broken, context_formed, context_gas_298,
+      context;             ///< bonds in context (ContextUse::Always)
   std::string_view taken;  ///< name of the route whose figure goes on; empty when there is none
 };
 

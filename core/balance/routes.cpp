@@ -3,6 +3,7 @@
 #include <cmath>
 
 #include "core/balance/bond_words.hpp"
+#include "core/balance/measured.hpp"
 #include "core/base/number_text.hpp"
 #include "core/thermo/estimated.hpp"
 
@@ -11,13 +12,17 @@ namespace {
 
 using uncertainty::Quantity;
 
-Route average_route(const Ledger& ledger, const EquationFigures& sums) {
+Route average_route(const Ledger& ledger, const std::vector<Entry>& entries, const EquationFigures& sums) {
   Route route;
   route.name = kAverageRoute;
   route.gas_298 = sums.gas_298;
   route.as_written = sums.as_written;
-  for (const LedgerRow& row : ledger.rows) {
-    if (!row.per_mole && route.why_not.empty()) route.why_not = row.remark;
+  for (std::size_t i = 0; i < entries.size(); ++i) {
+    if (entries[i].figures->priced.per_mole || !route.why_not.empty()) continue;
+    const LedgerRow& row = ledger.rows[i];
+    route.why_not = ledger.in_context || row.remark.empty()
+                        ? "no bond sum for " + display_species(ledger.reaction->species[i])
+                        : row.remark;
   }
   for (const Correction& correction : ledger.corrections) {
     if (!correction.value && route.why_not.empty()) route.why_not = correction.why_not;
@@ -37,7 +42,7 @@ Route average_route(const Ledger& ledger, const EquationFigures& sums) {
 }
 
 Route formation_route(const Ledger& ledger, const std::vector<Entry>& entries, const EquationFigures& sums,
-                      bool may_estimate) {
+                      const LedgerOptions& options) {
   Route route;
   route.name = kFormationRoute;
   route.gas_298 = sums.formation_gas_298;
@@ -46,8 +51,9 @@ Route formation_route(const Ledger& ledger, const std::vector<Entry>& entries, c
     const ReactionSpecies& entry = ledger.reaction->species[i];
     const molecule::Phase phase = ledger.rows[i].phase;
     const Result<thermo::Sourced> formation =
-        may_estimate ? thermo::best_formation(*entry.species, phase, entry.term.strength)
-                     : thermo::tabulated_formation(*entry.species, phase, entry.term.strength);
+        options.context != ContextUse::Never
+            ? thermo::best_formation(*entry.species, phase, entry.term.strength, options.observations.get())
+            : thermo::tabulated_formation(*entry.species, phase, entry.term.strength);
     if (entries[i].figures->formation_estimated) route.estimated.push_back(i);
     if (!formation.ok()) {
       if (route.why_not.empty()) route.why_not = formation.error().message;
@@ -99,48 +105,6 @@ void note_estimates(Ledger& ledger) {
   ledger.notes.push_back("No table has " + names + ": estimated from bonds in context.");
 }
 
-/// The row where bonds and table part most, for the written coefficients.
-const LedgerRow* widest_gap(const Ledger& ledger, double& gap) {
-  const LedgerRow* widest = nullptr;
-  gap = 0;
-  for (std::size_t i = 0; i < ledger.rows.size(); ++i) {
-    const LedgerRow& row = ledger.rows[i];
-    if (!row.table || !row.per_mole) continue;
-    const ReactionSpecies& entry = ledger.reaction->species[i];
-    const double here =
-        (entry.product ? -1 : 1) * entry.coefficient() * (row.per_mole->value() - row.table->value());
-    if (std::fabs(here) > std::fabs(gap)) {
-      gap = here;
-      widest = &row;
-    }
-  }
-  return widest;
-}
-
-void note_disagreement(Ledger& ledger) {
-  const Route *average = find_route(ledger, kAverageRoute), *formation = find_route(ledger, kFormationRoute);
-  if (!average->gas_298 || !formation->gas_298) return;
-  const double apart = average->gas_298->value() - formation->gas_298->value();
-  const double allowed = std::sqrt(average->gas_298->u95() * average->gas_298->u95() +
-                                   formation->gas_298->u95() * formation->gas_298->u95());
-  if (std::fabs(apart) <= allowed) return;
-  std::string text = "Average bonds give " + kj_with_u95(*average->gas_298, "kJ") +
-                     ", formation enthalpies " + kj_with_u95(*formation->gas_298, "kJ") +
-                     " for the gas: " + ledger_kj(std::fabs(apart)) + " kJ apart, beyond their ±.";
-  double gap = 0;
-  if (const LedgerRow* row = widest_gap(ledger, gap)) {
-    const ReactionSpecies& entry = ledger.reaction->species[row->species];
-    text += " Most of it stands on the row of " + display_species(entry) + " (" + ledger_kj(std::fabs(gap)) +
-            " kJ).";
-    for (const std::string& strain : row->strains) {
-      std::string sentence = strain;
-      if (sentence[0] >= 'a' && sentence[0] <= 'z') sentence[0] = static_cast<char>(sentence[0] - 'a' + 'A');
-      text += " " + sentence + ".";
-    }
-  }
-  ledger.notes.push_back(std::move(text));
-}
-
 }  // namespace
 
 const Route* find_route(const Ledger& ledger, std::string_view name) {
@@ -150,13 +114,19 @@ const Route* find_route(const Ledger& ledger, std::string_view name) {
   return nullptr;
 }
 
-void add_routes(Ledger& ledger, const std::vector<Entry>& entries, const EquationFigures& sums,
-                const LedgerOptions& options) {
+Status add_routes(Ledger& ledger, const std::vector<Entry>& entries, const EquationFigures& sums,
+                  const LedgerOptions& options) {
   const std::string_view pinned = options.pinned_route;
-  ledger.routes.push_back(average_route(ledger, sums));
+  ledger.routes.push_back(average_route(ledger, entries, sums));
   if (options.context == ContextUse::Always) ledger.routes.push_back(context_route(ledger, entries, sums));
-  ledger.routes.push_back(formation_route(ledger, entries, sums, options.context != ContextUse::Never));
-  for (const std::string_view name : {pinned, kFormationRoute, kContextRoute, kAverageRoute}) {
+  ledger.routes.push_back(formation_route(ledger, entries, sums, options));
+  if (options.measured) {
+    Result<Route> measured = measured_route(ledger, *options.measured);
+    if (!measured.ok()) return measured.error();
+    ledger.routes.push_back(std::move(measured).value());
+  }
+  for (const std::string_view name :
+       {pinned, kMeasuredRoute, kFormationRoute, kContextRoute, kAverageRoute}) {
     const Route* route = find_route(ledger, name);
     if (route != nullptr && route->as_written) {
       ledger.taken = name;
@@ -171,7 +141,7 @@ void add_routes(Ledger& ledger, const std::vector<Entry>& entries, const Equatio
     ledger.notes.push_back("The figure taken is pinned to the route by " + ledger.taken + ".");
   }
   note_estimates(ledger);
-  note_disagreement(ledger);
+  return success();
 }
 
 }  // namespace heatledger::balance

@@ -7,7 +7,8 @@ namespace heatledger::balance {
 
 /// Fills `routes`, `taken` and the notes about them.
 /// @param entries  one for each row of the ledger
-void add_routes(Ledger& ledger, const std::vector<Entry>& entries, const EquationFigures& sums,
-                const LedgerOptions& options);
+/// @errors ledger.measured_per
+Status add_routes(Ledger& ledger, const std::vector<Entry>& entries, const EquationFigures& sums,
+                  const LedgerOptions& options);
 
 }  // namespace heatledger::balance

@@ -27,11 +27,19 @@ void note_rivals(Ledger& ledger, const LedgerRow& row) {
   if (datum == nullptr) return;
   std::string others;
   for (const facts::Rival& rival : datum->rivals) {
-    if (std::fabs(rival.value - datum->value) * entry.coefficient() < kMoves) continue;
+    // What a typed figure covers is shown however near it lies.
+    if (!datum->typed && std::fabs(rival.value - datum->value) * entry.coefficient() < kMoves) continue;
     others += (others.empty() ? "" : ", ") + display_number(rival.value / 1000, 1) + " (" +
               std::string(rival.source) + ")";
   }
   if (others.empty()) return;
+  if (datum->typed) {
+    ledger.notes.push_back(display_species(entry) + ", ΔfH as " + std::string(thermo::phase_word(row.phase)) +
+                           ": " + display_number(datum->value / 1000, 2) +
+                           (datum->u95 > 0 ? " ± " + display_number(datum->u95 / 1000, 2) : std::string()) +
+                           " kJ/mol (" + std::string(datum->source) + "), typed in place of " + others + ".");
+    return;
+  }
   std::string why(datum->why_taken);
   if (!why.empty() && why.back() != '.') why += '.';
   ledger.notes.push_back("Tables part on ΔfH of " + display_species(entry) + ": " +

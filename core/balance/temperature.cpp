@@ -54,4 +54,30 @@ void run_at_temperatures(Ledger& ledger, const LedgerOptions& options) {
   }
 }
 
+void note_pressure(Ledger& ledger, double pressure) {
+  constexpr double kShareOfCritical = 0.1;  // below it gas enthalpies depart by some 1 % of RT at most
+  constexpr double kHighestUnknown = 1e6;
+  std::string near, unknown;
+  for (const LedgerRow& row : ledger.rows) {
+    if (row.phase != molecule::Phase::Gas) continue;
+    const ReactionSpecies& entry = ledger.reaction->species[row.species];
+    const facts::Compound* compound = entry.species->compound;
+    if (compound != nullptr && compound->critical_pressure) {
+      const double critical = compound->critical_pressure->value;
+      if (pressure <= kShareOfCritical * critical) continue;
+      near += (near.empty() ? "" : ", ") + display_species(entry) + " (p/pc " +
+              display_number(pressure / critical, 2) + ")";
+    } else if (pressure > kHighestUnknown) {
+      unknown += (unknown.empty() ? "" : ", ") + display_species(entry);
+    }
+  }
+  if (near.empty() && unknown.empty()) return;
+  std::string text =
+      "Gases are taken as ideal. At " + display_number(pressure / 1e5, 1) + " bar that is in doubt for ";
+  text += near;
+  if (!unknown.empty()) text += (near.empty() ? "" : "; ") + unknown + " (critical pressure not known)";
+  ledger.cautions.push_back(text +
+                            ": the departure of their enthalpy from the ideal gas is not in the figure.");
+}
+
 }  // namespace heatledger::balance

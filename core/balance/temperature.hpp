@@ -9,4 +9,9 @@ namespace heatledger::balance {
 /// Δh(T) − Σ reactants ν Δh(T), every species kept in the phase written.
 void run_at_temperatures(Ledger& ledger, const LedgerOptions& options);
 
+/// Adds a caution for gases that are no longer ideal at this pressure: above a tenth of the critical
+/// pressure, or above 10 bar where that is unknown.
+/// @param pressure  [Pa]
+void note_pressure(Ledger& ledger, double pressure);
+
 }  // namespace heatledger::balance

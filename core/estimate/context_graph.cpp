@@ -15,37 +15,6 @@ namespace {
 constexpr unsigned kMostNeighbours = 8;
 constexpr std::uint32_t kHydrogen = 0xffffffffU;  ///< marks an explicit hydrogen in the index map
 
-std::optional<Kind> kind_of(int atomic_number) {
-  switch (atomic_number) {
-    case 1:
-      return Kind::H;
-    case 5:
-      return Kind::B;
-    case 6:
-      return Kind::C;
-    case 7:
-      return Kind::N;
-    case 8:
-      return Kind::O;
-    case 9:
-      return Kind::F;
-    case 14:
-      return Kind::Si;
-    case 15:
-      return Kind::P;
-    case 16:
-      return Kind::S;
-    case 17:
-      return Kind::Cl;
-    case 35:
-      return Kind::Br;
-    case 53:
-      return Kind::I;
-    default:
-      return std::nullopt;
-  }
-}
-
 Error refusal(const char* code, std::string message, std::size_t atom, const char* hint) {
   return Error{code, std::move(message), "atom " + std::to_string(atom + 1), hint};
 }

@@ -155,6 +155,12 @@ double model_gas_atom(Kind kind) {
   return prior().gas_atom[static_cast<std::size_t>(kind)];
 }
 
+std::optional<double> model_gas_atom_of(int atomic_number) {
+  const std::optional<Kind> kind = kind_of(atomic_number);
+  if (!kind) return std::nullopt;
+  return 1000 * model_gas_atom(*kind);
+}
+
 double offset(FitKind kind, const ContextMolecule& molecule, double temperature) {
   switch (kind) {
     case FitKind::Formation:

@@ -4,6 +4,7 @@
 #pragma once
 
 #include <array>
+#include <optional>
 
 #include "core/estimate/context_molecule.hpp"
 #include "core/estimate/feature_code.hpp"
@@ -30,6 +31,8 @@ double own_variance(const ContextSettings& settings, const DeviationMeasures& me
 double prior_bond(Kind a, Kind b, unsigned order);
 /// Gas atom formation enthalpy as the model takes it [kJ/mol].
 double model_gas_atom(Kind kind);
+/// The same by atomic number [J/mol]; empty for elements that the model does not cover.
+std::optional<double> model_gas_atom_of(int atomic_number);
 
 /// Part of a property that is not fitted but added [kJ/mol or J/(mol K)].
 /// @param temperature  [K] for the gas heat capacity

@@ -125,6 +125,37 @@ std::string omp_text(Reader& in) {
 
 }  // namespace
 
+std::optional<Kind> kind_of(int atomic_number) {
+  switch (atomic_number) {
+    case 1:
+      return Kind::H;
+    case 5:
+      return Kind::B;
+    case 6:
+      return Kind::C;
+    case 7:
+      return Kind::N;
+    case 8:
+      return Kind::O;
+    case 9:
+      return Kind::F;
+    case 14:
+      return Kind::Si;
+    case 15:
+      return Kind::P;
+    case 16:
+      return Kind::S;
+    case 17:
+      return Kind::Cl;
+    case 35:
+      return Kind::Br;
+    case 53:
+      return Kind::I;
+    default:
+      return std::nullopt;
+  }
+}
+
 const char* kind_symbol(Kind kind) {
   return kSymbols[static_cast<std::size_t>(kind)];
 }

@@ -4,6 +4,7 @@
 
 #include <array>
 #include <cstdint>
+#include <optional>
 #include <string>
 
 #include "core/estimate/context_molecule.hpp"
@@ -14,6 +15,8 @@ namespace heatledger::estimate {
 enum class Kind : std::uint8_t { H, C, N, O, F, Si, P, S, Cl, Br, I, B };
 constexpr std::size_t kind_count = 12;
 const char* kind_symbol(Kind kind);
+/// Empty for an element that the model does not cover.
+std::optional<Kind> kind_of(int atomic_number);
 
 /// How unsaturated an atom is: written u(i) in the feature text.
 enum class Unsaturation : std::uint8_t { None, Double, Triple, Aromatic };

@@ -28,7 +28,8 @@ struct Datum {
   std::string_view source;  ///< short name; source_reference() in sources.hpp spells it out
   std::string_view
       remark;  ///< why a row is an exception, a temperature other than 298.15 K; empty: nothing to say
-  std::string_view why_taken;  ///< empty unless tables disagree beyond their ±
+  bool typed = false;          ///< on a sheet or in a site table: goes before whatever is published or fitted
+  std::string_view why_taken;  ///< empty unless tables disagree beyond their ±, or a typed figure covers one
   std::span<const Rival> rivals;
 };
 

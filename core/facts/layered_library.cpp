@@ -73,6 +73,7 @@ void LayeredLibrary::State::lay(const SiteRecord& record) {
     datum.u95 = typed.u95;
     datum.source = typed.source;
     datum.remark = typed.remark;
+    datum.typed = true;
     if (place) {
       std::vector<Rival> others = {{place->value, place->source}};
       others.insert(others.end(), place->rivals.begin(), place->rivals.end());

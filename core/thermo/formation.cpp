@@ -55,11 +55,13 @@ std::uint64_t text_hash(std::string_view text) {
 Sourced from_datum(const Species& species, Phase phase, const Datum& datum) {
   Sourced result;
   result.value = Quantity(datum.value, datum.u95, figure_key(SourceKind::Compound, species, phase));
-  result.route = "table";
+  result.route = datum.typed ? "typed" : "table";
   result.source = std::string(datum.source);
   std::string line = "ΔfH(" + std::string(molecule::phase_text(phase)) + ") " + species.name + " = " +
-                     display_signed(datum.value / kJ, 2) + " ± " + display_number(datum.u95 / kJ, 2) +
-                     " kJ/mol, " + result.source;
+                     display_signed(datum.value / kJ, 2) +
+                     (datum.u95 > 0 ? " ± " + display_number(datum.u95 / kJ, 2) : std::string()) +
+                     " kJ/mol, " + (datum.typed ? "typed: " : "") + result.source;
+  if (datum.typed && datum.u95 <= 0) line += ", taken as exact";
   if (datum.u95_is_default) line += " (± is the table's default)";
   result.working.push_back(std::move(line));
   if (!datum.remark.empty()) result.cautions.push_back(species.name + ": " + std::string(datum.remark));

@@ -209,6 +209,13 @@ void by_constant(HeatCapacityCurve& curve, const Species& species, double cp, do
   curve.pieces.push_back(straight(low, high, cp, kReference, curve.slope, u95));
 }
 
+/// A heat capacity of the sheet or a site table, which goes before polynomials and estimates.
+const facts::Datum* typed_figure(const Species& species, Phase phase) {
+  if (species.compound == nullptr || phase == Phase::Aqueous) return nullptr;
+  const std::optional<facts::Datum>& datum = facts_of(*species.compound, phase).heat_capacity;
+  return datum && datum->typed && datum->value > 0 ? &*datum : nullptr;
+}
+
 bool by_tabulated(HeatCapacityCurve& curve, const Species& species) {
   if (species.compound == nullptr) return false;
   const std::optional<facts::Datum>& datum = facts_of(*species.compound, curve.phase).heat_capacity;
@@ -324,6 +331,13 @@ Result<HeatCapacityCurve> heat_capacity_curve(const Species& species, Phase phas
     if (curve.phase == Phase::Aqueous)
       return !(strength && strength->kind != molecule::Strength::Kind::InfiniteDilution) &&
              by_partial_molar(curve, species);
+    if (const facts::Datum* sheet = typed_figure(species, curve.phase)) {
+      curve.kind = CurveKind::Typed;
+      curve.route = "typed";
+      curve.source = std::string(sheet->source);
+      curve.pieces.push_back(straight(kLowestCondensed, kReference + 1000, sheet->value, 0, 0, sheet->u95));
+      return true;
+    }
     if (const facts::Polynomial* polynomial = polynomial_of(species, curve.phase)) {
       by_polynomial(curve, *polynomial);
       return true;
