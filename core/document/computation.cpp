@@ -4,7 +4,10 @@
 #include <tuple>
 #include <utility>
 
-#include "core/document/typed_energy.hpp"
+#include "core/balance/measured.hpp"
+#include "core/document/observations.hpp"
+#include "core/document/typed_bonds.hpp"
+#include "core/document/typed_conditions.hpp"
 
 namespace heatledger::document {
 namespace {
@@ -13,69 +16,45 @@ namespace {
 /// recomputing.
 constexpr std::size_t kSpareResults = 512;
 
-/// The inputs of one ledger; typed bonds enter by the identity of their list.
+/// The inputs of one ledger; typed bonds, species and observations enter by identity.
 struct LedgerKey {
-  std::string equation, basis, bond_set, pinned_route;
+  std::string texts;
   const TypedBonds* typed_bonds = nullptr;
+  const SheetLibrary* library = nullptr;
+  const estimate::Observations* observations = nullptr;
 
   friend bool operator<(const LedgerKey& a, const LedgerKey& b) {
-    return std::tie(a.equation, a.basis, a.bond_set, a.pinned_route, a.typed_bonds) <
-           std::tie(b.equation, b.basis, b.bond_set, b.pinned_route, b.typed_bonds);
+    return std::tie(a.texts, a.typed_bonds, a.library, a.observations) <
+           std::tie(b.texts, b.typed_bonds, b.library, b.observations);
   }
 };
+
+/// Every text of a reaction that its ledger depends on.
+std::string texts_of(const ReactionSheet& sheet) {
+  std::string out;
+  const TypedHeat& heat = sheet.measured;
+  for (const std::string* text :
+       {&sheet.equation, &sheet.basis, &sheet.bond_set, &sheet.pinned_route, &sheet.reactants_at,
+        &sheet.products_at, &sheet.pressure, &heat.value, &heat.per, &heat.at, &heat.medium, &heat.includes,
+        &heat.source, &heat.from}) {
+    out += *text;
+    out += '\0';
+  }
+  // A measured heat is a source of error of its own in each reaction.
+  if (!heat.value.empty()) out += sheet.id;
+  return out;
+}
 
 struct Remembered {
   std::shared_ptr<const ReactionResult> result;
-  std::shared_ptr<const TypedBonds> typed_bonds;  ///< keeps the identity in the key from being used again
+  std::shared_ptr<const void> typed_bonds,
+      observations;  ///< keep the identities in the key from being used again
   std::size_t last_used = 0;
 };
 
-/// The typed bonds of a sheet, read once.
-struct Overlay {
-  std::vector<estimate::BondValue> values;
-  std::vector<Error> errors;
-};
-
-Overlay read_typed_bonds(const TypedBonds& typed) {
-  Overlay overlay;
-  for (std::size_t i = 0; i < typed.size(); ++i) {
-    const TypedBond& entry = typed[i];
-    const std::string path = "bonds[" + std::to_string(i) + "]";
-    if (entry.bond.empty() && entry.value.empty()) continue;
-    const Result<molecule::BondType> type = molecule::parse_bond_type(entry.bond);
-    if (!type) {
-      Error error = type.error();
-      error.where = path + ".bond" + (error.where.empty() ? "" : ", " + error.where);
-      overlay.errors.push_back(std::move(error));
-      continue;
-    }
-    const Result<uncertainty::Figure> figure = parse_molar_energy(entry.value);
-    if (!figure) {
-      Error error = figure.error();
-      error.where = path + ".value, " + error.where;
-      overlay.errors.push_back(std::move(error));
-      continue;
-    }
-    if (figure->value <= 0) {
-      overlay.errors.push_back({"typed_bond.not_positive", "A bond enthalpy is a positive figure.",
-                                path + ".value",
-                                "Breaking a bond takes heat: type the figure without a sign."});
-      continue;
-    }
-    estimate::BondValue value;
-    value.type = *type;
-    value.value = figure->value;
-    value.u95 = figure->u95;
-    value.origin = estimate::BondOrigin::User;
-    value.source = entry.source.empty() ? "typed on this sheet, no source given" : entry.source;
-    overlay.values.push_back(std::move(value));
-  }
-  return overlay;
-}
-
 using SetResult = Result<std::shared_ptr<const estimate::BondSet>>;
 
-SetResult build_set(const std::string& id, const Overlay& overlay) {
+SetResult build_set(const std::string& id, const ReadBonds& overlay) {
   const std::string name = id.empty() ? estimate::BondSet::names().front() : id;
   Result<estimate::BondSet> published = estimate::BondSet::published(name);
   if (!published) return published.error();
@@ -86,11 +65,15 @@ SetResult build_set(const std::string& id, const Overlay& overlay) {
 }  // namespace
 
 struct Calculator::Memory {
-  balance::CachedSpecies species;
   std::map<std::string, Result<std::shared_ptr<const balance::Reaction>>> equations;
   std::map<LedgerKey, Remembered> ledgers;
+  std::map<std::string, std::shared_ptr<const estimate::Measurement>> measurements;  ///< null: says nothing
+  ObservationStore observations;
   std::shared_ptr<const TypedBonds> overlay_of;  ///< what `overlay` and `sets` were made from
-  Overlay overlay;
+  ReadBonds overlay;
+  std::shared_ptr<const TypedFigures> library_of;  ///< what `library` was made from
+  std::shared_ptr<SheetLibrary> library;
+  std::vector<estimate::Measurement> measured_species;
   std::map<std::string, SetResult> sets;
   std::size_t clock = 0;
 
@@ -98,7 +81,7 @@ struct Calculator::Memory {
     const auto found = equations.find(text);
     if (found != equations.end()) return found->second;
     if (equations.size() > 2 * kSpareResults) equations.clear();
-    Result<balance::Reaction> read = balance::read_reaction(text, species);
+    Result<balance::Reaction> read = balance::read_reaction(text, *library);
     Result<std::shared_ptr<const balance::Reaction>> kept =
         read ? Result<std::shared_ptr<const balance::Reaction>>(
                    std::make_shared<const balance::Reaction>(std::move(read).value()))
@@ -112,8 +95,56 @@ struct Calculator::Memory {
     return sets.emplace(id, build_set(id, overlay)).first->second;
   }
 
-  ReactionResult compute(const ReactionSheet& sheet) {
+  void take_over(const Worksheet& sheet) {
+    if (overlay_of != sheet.typed_bonds.handle()) {
+      overlay_of = sheet.typed_bonds.handle();
+      overlay = read_typed_bonds(*sheet.typed_bonds);
+      sets.clear();
+    }
+    if (library_of != sheet.typed_figures.handle()) {
+      library_of = sheet.typed_figures.handle();
+      library = std::make_shared<SheetLibrary>(*sheet.typed_figures);
+      measured_species = observations_of(*library);
+      equations.clear();
+      measurements.clear();
+    }
+  }
+
+  /// What the measured heat of a reaction says of other estimates; null where it says nothing.
+  std::shared_ptr<const estimate::Measurement> measurement(const ReactionSheet& sheet) {
+    if (sheet.measured.value.empty()) return nullptr;
+    const std::string key = texts_of(sheet);
+    const auto found = measurements.find(key);
+    if (found != measurements.end()) return found->second;
+    if (measurements.size() > kSpareResults) measurements.clear();
+    std::shared_ptr<const estimate::Measurement> said;
+    const auto& reaction = equation(sheet.equation);
+    const SetResult& primary = set(std::string());
+    if (reaction.ok() && primary.ok()) {
+      balance::LedgerOptions options;
+      options.set = *primary;
+      options.measured = read_conditions(sheet).measured;
+      const Result<balance::Ledger> ledger = balance::make_ledger(*reaction, options);
+      if (ledger.ok()) {
+        Result<estimate::Measurement> one = balance::observation_of(*ledger);
+        if (one.ok()) said = std::make_shared<const estimate::Measurement>(std::move(one).value());
+      }
+    }
+    return measurements.emplace(key, std::move(said)).first->second;
+  }
+
+  std::shared_ptr<const estimate::Observations> observe(const Worksheet& sheet) {
+    std::vector<estimate::Measurement> list = measured_species;
+    for (const Shared<ReactionSheet>& reaction : sheet.reactions) {
+      if (const auto one = measurement(*reaction)) list.push_back(*one);
+    }
+    return observations.of(list);
+  }
+
+  ReactionResult compute(const ReactionSheet& sheet,
+                         const std::shared_ptr<const estimate::Observations>& observed) {
     ReactionResult result;
+    result.library = library;
     if (sheet.equation.find_first_not_of(" \t\r\n") == std::string::npos) return result;
     const auto& reaction = equation(sheet.equation);
     if (!reaction) {
@@ -122,10 +153,13 @@ struct Calculator::Memory {
     }
     result.reaction = *reaction;
     balance::LedgerOptions options;
-    const SetResult* chosen = &set(sheet.bond_set);
+    options.context = balance::ContextUse::Always;
+    options.context_rows = sheet.bond_set == kContextSet;
+    options.observations = observed;
+    const SetResult* chosen = &set(options.context_rows ? std::string() : sheet.bond_set);
     if (!*chosen) {
-      result.option_error = chosen->error();
-      result.option_error->where = "bond_set";
+      result.option_errors.push_back(chosen->error());
+      result.option_errors.back().where = "bond_set";
       chosen = &set(std::string());
     }
     if (!*chosen) {
@@ -135,13 +169,21 @@ struct Calculator::Memory {
     options.set = **chosen;
     options.basis = sheet.basis;
     options.pinned_route = sheet.pinned_route;
+    Conditions conditions = read_conditions(sheet);
+    options.reactants_at = conditions.reactants_at;
+    options.products_at = conditions.products_at;
+    options.pressure = conditions.pressure;
+    options.measured = std::move(conditions.measured);
+    for (Error& error : conditions.errors) result.option_errors.push_back(std::move(error));
     Result<balance::Ledger> ledger = balance::make_ledger(result.reaction, options);
     // An option that cannot be followed is reported beside a ledger on the default, not instead of one.
-    for (std::string* option : {&options.basis, &options.pinned_route}) {
-      const char* field = option == &options.basis ? "basis" : "pinned_route";
-      if (ledger.ok() || option->empty() || ledger.error().where != field) continue;
-      result.option_error = ledger.error();
-      option->clear();
+    for (const char* field : {"basis", "pinned_route", "measured.per"}) {
+      if (ledger.ok() || ledger.error().where != field) continue;
+      result.option_errors.push_back(ledger.error());
+      const std::string_view which = field;
+      if (which == "basis") options.basis.clear();
+      if (which == "pinned_route") options.pinned_route.clear();
+      if (which == "measured.per") options.measured.reset();
       ledger = balance::make_ledger(result.reaction, options);
     }
     if (!ledger) {
@@ -173,23 +215,31 @@ Calculator& Calculator::operator=(Calculator&&) noexcept = default;
 Results Calculator::compute(const Worksheet& sheet) {
   Memory& memory = *memory_;
   ++memory.clock;
-  if (memory.overlay_of != sheet.typed_bonds.handle()) {
-    memory.overlay_of = sheet.typed_bonds.handle();
-    memory.overlay = read_typed_bonds(*sheet.typed_bonds);
-    memory.sets.clear();
-  }
+  memory.take_over(sheet);
+  const std::shared_ptr<const estimate::Observations> observed = memory.observe(sheet);
   Results results;
+  results.library = memory.library;
   results.errors = memory.overlay.errors;
+  results.errors.insert(results.errors.end(), memory.library->errors().begin(),
+                        memory.library->errors().end());
+  results.exact = memory.overlay.exact;
+  for (std::size_t i = 0; i < memory.library->figures().size(); ++i) {
+    if (memory.library->figures()[i].exact)
+      results.exact.push_back("species[" + std::to_string(i) + "].value");
+  }
   results.reactions.reserve(sheet.reactions.size());
-  for (const Shared<ReactionSheet>& reaction : sheet.reactions) {
-    LedgerKey key{reaction->equation, reaction->basis, reaction->bond_set, reaction->pinned_route,
-                  memory.overlay_of.get()};
+  for (std::size_t i = 0; i < sheet.reactions.size(); ++i) {
+    const Shared<ReactionSheet>& reaction = sheet.reactions[i];
+    LedgerKey key{texts_of(*reaction), memory.overlay_of.get(), memory.library.get(), observed.get()};
     Remembered& entry = memory.ledgers[std::move(key)];
     if (entry.result == nullptr) {
-      entry.result = std::make_shared<const ReactionResult>(memory.compute(*reaction));
+      entry.result = std::make_shared<const ReactionResult>(memory.compute(*reaction, observed));
       entry.typed_bonds = memory.overlay_of;
+      entry.observations = observed;
     }
     entry.last_used = memory.clock;
+    if (!reaction->measured.value.empty() && read_conditions(*reaction).measured_exact)
+      results.exact.push_back("reactions[" + std::to_string(i) + "].measured.value");
     results.reactions.push_back(entry.result);
   }
   memory.forget_old(sheet.reactions.size());

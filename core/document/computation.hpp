@@ -8,6 +8,7 @@
 
 #include "core/balance/ledger.hpp"
 #include "core/document/history.hpp"
+#include "core/document/typed_species.hpp"
 
 namespace heatledger::document {
 
@@ -18,9 +19,12 @@ struct ReactionResult {
       reaction;                                   ///< null when the equation is empty or could not be read
   std::shared_ptr<const balance::Ledger> ledger;  ///< null when not balanced or not readable
   std::shared_ptr<const balance::Ledger>
-      rows;                           ///< rows alone of an equation that does not balance, else null
-  std::optional<Error> error;         ///< of the equation or the ledger
-  std::optional<Error> option_error;  ///< of basis, bond set or route; the ledger then stands on the default
+      rows;                    ///< rows alone of an equation that does not balance, else null
+  std::optional<Error> error;  ///< of the equation or the ledger
+  /// Of basis, bond set, route, temperatures, pressure, measured heat: `where` begins with the field. The
+  /// ledger then stands on the default.
+  std::vector<Error> option_errors;
+  std::shared_ptr<const SheetLibrary> library;  ///< that the species of `reaction` point into
 
   /// The ledger or, while the equation does not balance, its rows; null when there is neither.
   const balance::Ledger* shown() const { return ledger != nullptr ? ledger.get() : rows.get(); }
@@ -29,6 +33,8 @@ struct ReactionResult {
 struct Results {
   std::vector<std::shared_ptr<const ReactionResult>> reactions;  ///< one for each Worksheet::reactions entry
   std::vector<Error> errors;  ///< typed bonds that cannot be read, and the like; `where` is a field path
+  std::shared_ptr<const SheetLibrary> library;  ///< species as this sheet knows them; never null
+  std::vector<std::string> exact;               ///< field paths of figures typed without ±: "bonds[0].value"
 };
 
 /// Keeps species, equations, bond sets and ledgers between edits, so that one edit recomputes one ledger.

@@ -22,35 +22,83 @@ struct TypedBond {
   std::string bond;   ///< spelling, "C-Cl", or with setting "C=O (CO2)"
   std::string value;  ///< text with unit, "340 kJ/mol"
   std::string source;
+  std::string from;  ///< name of the site table it was copied from; empty: typed here
   std::string unknown;
+};
+
+/// One thing the sheet says of a species itself: a figure, or what it is (molar mass, formula, structure). It
+/// goes before whatever is published.
+struct TypedFigure {
+  std::string species;  ///< as the equations write it; SMILES in double quotes
+  std::string figure;   ///< name of the figure, see typed_species.hpp: "formation_liquid"
+  std::string value;    ///< text with unit, "-412 ± 6 kJ/mol"
+  std::string source;
+  std::string from;  ///< name of the site table it was copied from; empty: typed here
+  std::string unknown;
+};
+
+/// A measured enthalpy of a reaction, as typed.
+struct TypedHeat {
+  std::string value;     ///< text with unit and ±: "-545 ± 8 kJ/mol"; empty: none was measured
+  std::string per;       ///< species it is stated per mole of; empty: for the coefficients written
+  std::string at;        ///< temperature of the measurement; empty: 25 °C
+  std::string medium;    ///< "in methanol"
+  std::string includes;  ///< mixing, dilution, evaporation, gas loss: "yes", "no" or "unknown"
+  std::string source;    ///< who measured it, with what and when
+  std::string from;      ///< name of the site table it was copied from; empty: typed here
+  std::string unknown;
+
+  bool blank() const {
+    return value.empty() && per.empty() && at.empty() && medium.empty() && includes.empty() &&
+           source.empty() && from.empty() && unknown.empty();
+  }
 };
 
 /// A figure that the second engineer found on the sheet under review, keyed by the figure it is held against.
 using CheckerEntries = std::map<std::string, std::string>;
 
+/// ReactionSheet::bond_set of a ledger whose rows are bonds in context.
+inline constexpr const char* kContextSet = "context";
+
 struct ReactionSheet {
   std::string id;  ///< "r1", stable through edits and files
   std::string title;
-  std::string equation;      ///< as typed
-  std::string basis;         ///< see balance::LedgerOptions::basis
-  std::string bond_set;      ///< set id; empty: the primary
-  std::string pinned_route;  ///< name of a route; empty: the best
+  std::string equation;                   ///< as typed
+  std::string basis;                      ///< see balance::LedgerOptions::basis
+  std::string bond_set;                   ///< set id; "context": bonds in context; empty: the primary
+  std::string pinned_route;               ///< name of a route; empty: the best
+  std::string reactants_at, products_at;  ///< temperatures as typed; empty: 25 °C
+  std::string pressure;                   ///< of the gases, as typed; empty: not asked
+  TypedHeat measured;
   std::string note;
   bool show_profile = false;
   bool show_checker = false;
-  CheckerEntries checker;  ///< figure ("gas_298", "row.2.per_mole", …) to text as typed
+  bool show_measured = false;  ///< blanks for a measured heat; shown anyway once one is filled
+  CheckerEntries checker;      ///< figure ("gas_298", "row.2.per_mole", …) to text as typed
   std::string unknown;
 };
 
 using TypedBonds = std::vector<TypedBond>;
+using TypedFigures = std::vector<TypedFigure>;
 using Lines = std::vector<std::string>;
+
+/// An entry of a list in the file that no such list can hold (a number among texts): kept as it came and
+/// written back to its place.
+struct Misfit {
+  std::string list;       ///< key of the list at the top level of the file
+  std::size_t place = 0;  ///< index it had there
+  std::string json;
+};
+using Misfits = std::vector<Misfit>;
 
 struct Worksheet {
   Shared<Header> header;
   std::vector<Shared<ReactionSheet>> reactions;
   Shared<TypedBonds> typed_bonds;
+  Shared<TypedFigures> typed_figures;
   Shared<Lines> notes;        ///< free notes
   Shared<Lines> assumptions;  ///< numbered on the sheet
+  Shared<Misfits> misfits;
   /// JSON object text of the keys of this level that this version does not know, kept for the round trip; or
   /// empty.
   Shared<std::string> unknown;

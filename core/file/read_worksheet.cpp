@@ -2,87 +2,13 @@
 #include <cstdlib>
 
 #include "core/base/number_text.hpp"
-#include "core/file/json.hpp"
+#include "core/file/entries.hpp"
+#include "core/file/fields.hpp"
 #include "core/file/migration.hpp"
 #include "core/file/worksheet_file.hpp"
 
 namespace heatledger::file {
 namespace {
-
-/// Reads the members of one object that this version knows; all others are kept as `rest`.
-class Fields {
- public:
-  Fields(const Json& object, std::string path, std::vector<Error>& problems)
-      : path_(std::move(path)),
-        problems_(problems),
-        members_(object.members()),
-        taken_(members_.size(), false) {}
-
-  void text(std::string_view key, std::string& out) {
-    if (const Json* value = take(key, Json::Kind::String, "a text")) out = value->text();
-  }
-
-  void flag(std::string_view key, bool& out) {
-    const Json* value = peek(key);
-    if (value == nullptr) return;
-    if (!value->is_boolean()) return complain(key, "true or false");
-    mark(key);
-    out = value->is_true();
-  }
-
-  /// A member of the kind wanted; nullptr when it is missing or of another kind, which is then kept and
-  /// reported.
-  const Json* take(std::string_view key, Json::Kind kind, const char* wanted) {
-    const Json* value = peek(key);
-    if (value == nullptr) return nullptr;
-    if (value->kind() != kind) {
-      complain(key, wanted);
-      return nullptr;
-    }
-    mark(key);
-    return value;
-  }
-
-  void skip(std::string_view key) { mark(key); }
-
-  void complain(std::string_view key, const std::string& wanted) {
-    problems_.push_back({"file.wrong_kind",
-                         "\"" + at(key) + "\" should be " + wanted + "; it was kept but not used.", at(key),
-                         "Compare with worksheets/worksheet.schema.json."});
-  }
-
-  std::string at(std::string_view key) const {
-    return path_.empty() ? std::string(key) : path_ + "." + std::string(key);
-  }
-
-  /// JSON object text of everything that was not taken; empty when nothing is left.
-  std::string rest() const {
-    Json left = Json::object();
-    for (std::size_t i = 0; i < members_.size(); ++i) {
-      if (!taken_[i]) left.add(members_[i].first, members_[i].second);
-    }
-    return left.members().empty() ? std::string() : write_json_text(left);
-  }
-
- private:
-  const Json* peek(std::string_view key) const {
-    for (const Json::Member& member : members_) {
-      if (member.first == key) return &member.second;
-    }
-    return nullptr;
-  }
-
-  void mark(std::string_view key) {
-    for (std::size_t i = 0; i < members_.size(); ++i) {
-      if (members_[i].first == key) taken_[i] = true;
-    }
-  }
-
-  std::string path_;
-  std::vector<Error>& problems_;
-  const std::vector<Json::Member>& members_;
-  std::vector<bool> taken_;
-};
 
 document::Header read_header(const Json& object, std::vector<Error>& problems) {
   document::Header header;
@@ -115,57 +41,64 @@ document::ReactionSheet read_reaction_sheet(const Json& object, const std::strin
   fields.text("basis", reaction.basis);
   fields.text("bond_set", reaction.bond_set);
   fields.text("pinned_route", reaction.pinned_route);
+  fields.text("reactants_at", reaction.reactants_at);
+  fields.text("products_at", reaction.products_at);
+  fields.text("pressure", reaction.pressure);
+  if (const Json* measured = fields.take("measured", Json::Kind::Object, "an object")) {
+    reaction.measured = read_heat(*measured, path + ".measured", problems);
+  }
   fields.text("note", reaction.note);
   fields.flag("show_profile", reaction.show_profile);
   fields.flag("show_checker", reaction.show_checker);
+  fields.flag("show_measured", reaction.show_measured);
   if (const Json* checker = fields.take("checker", Json::Kind::Object, "an object of texts")) {
+    Json others = Json::object();
     for (const Json::Member& member : checker->members()) {
       if (member.second.is_string()) {
         reaction.checker[member.first] = member.second.text();
       } else {
         problems.push_back({"file.wrong_kind",
-                            "A figure of the checker's column should be a text; it was left out.",
+                            "A figure of the checker's column should be a text; it was kept but not used.",
                             path + ".checker." + member.first, "Write figures as texts: \"-518 kJ\"."});
+        others.add(member.first, member.second);
       }
     }
+    fields.keep("checker", std::move(others));
   }
   reaction.unknown = fields.rest();
   return reaction;
 }
 
-document::TypedBond read_typed_bond(const Json& object, const std::string& path,
-                                    std::vector<Error>& problems) {
-  document::TypedBond bond;
-  Fields fields(object, path, problems);
-  fields.text("bond", bond.bond);
-  fields.text("value", bond.value);
-  fields.text("source", bond.source);
-  bond.unknown = fields.rest();
-  return bond;
+/// Keeps an item that its list cannot hold, and says so.
+void keep_misfit(const Json& item, const std::string& list, std::size_t place, const char* wanted,
+                 document::Worksheet& sheet, std::vector<Error>& problems) {
+  const std::string at = list + "[" + std::to_string(place) + "]";
+  problems.push_back({"file.wrong_kind", "\"" + at + "\" should be " + wanted + "; it was kept but not used.",
+                      at, "Compare with worksheets/worksheet.schema.json."});
+  sheet.misfits.change().push_back({list, place, write_json_text(item)});
 }
 
-/// Calls `read` for every object of an array; other items are reported and left out.
+/// Calls `read` for every object of an array; other items are kept aside.
 template <typename Read>
-void each_object(const Json& array, const std::string& path, std::vector<Error>& problems, Read read) {
+void each_object(const Json& array, const std::string& list, document::Worksheet& sheet,
+                 std::vector<Error>& problems, Read read) {
   for (std::size_t i = 0; i < array.items().size(); ++i) {
-    const std::string at = path + "[" + std::to_string(i) + "]";
     if (array.items()[i].is_object()) {
-      read(array.items()[i], at);
+      read(array.items()[i], list + "[" + std::to_string(i) + "]");
     } else {
-      problems.push_back({"file.wrong_kind", "\"" + at + "\" should be an object; it was left out.", at,
-                          "Compare with worksheets/worksheet.schema.json."});
+      keep_misfit(array.items()[i], list, i, "an object", sheet, problems);
     }
   }
 }
 
-document::Lines read_lines(const Json& array, const std::string& path, std::vector<Error>& problems) {
+document::Lines read_lines(const Json& array, const std::string& list, document::Worksheet& sheet,
+                           std::vector<Error>& problems) {
   document::Lines lines;
   for (std::size_t i = 0; i < array.items().size(); ++i) {
     if (array.items()[i].is_string()) {
       lines.push_back(array.items()[i].text());
     } else {
-      const std::string at = path + "[" + std::to_string(i) + "]";
-      problems.push_back({"file.wrong_kind", "\"" + at + "\" should be a text; it was left out.", at, ""});
+      keep_misfit(array.items()[i], list, i, "a text", sheet, problems);
     }
   }
   return lines;
@@ -243,21 +176,27 @@ Result<Opened> read_worksheet(std::string_view text) {
     sheet.header = document::Shared<document::Header>(read_header(*header, problems));
   }
   if (const Json* reactions = fields.take("reactions", Json::Kind::Array, "a list")) {
-    each_object(*reactions, "reactions", problems, [&](const Json& object, const std::string& path) {
+    each_object(*reactions, "reactions", sheet, problems, [&](const Json& object, const std::string& path) {
       sheet.reactions.push_back(
           document::Shared<document::ReactionSheet>(read_reaction_sheet(object, path, problems)));
     });
   }
   if (const Json* bonds = fields.take("bonds", Json::Kind::Array, "a list")) {
-    each_object(*bonds, "bonds", problems, [&](const Json& object, const std::string& path) {
+    each_object(*bonds, "bonds", sheet, problems, [&](const Json& object, const std::string& path) {
       sheet.typed_bonds.change().push_back(read_typed_bond(object, path, problems));
     });
   }
+  if (const Json* species = fields.take("species", Json::Kind::Array, "a list")) {
+    each_object(*species, "species", sheet, problems, [&](const Json& object, const std::string& path) {
+      sheet.typed_figures.change().push_back(read_typed_figure(object, path, problems));
+    });
+  }
   if (const Json* notes = fields.take("notes", Json::Kind::Array, "a list of texts")) {
-    sheet.notes = document::Shared<document::Lines>(read_lines(*notes, "notes", problems));
+    sheet.notes = document::Shared<document::Lines>(read_lines(*notes, "notes", sheet, problems));
   }
   if (const Json* assumptions = fields.take("assumptions", Json::Kind::Array, "a list of texts")) {
-    sheet.assumptions = document::Shared<document::Lines>(read_lines(*assumptions, "assumptions", problems));
+    sheet.assumptions =
+        document::Shared<document::Lines>(read_lines(*assumptions, "assumptions", sheet, problems));
   }
   if (const Json* results = fields.take("results", Json::Kind::Object, "an object")) {
     opened.results = read_results(*results);

@@ -1,3 +1,5 @@
+#include <algorithm>
+
 #include "core/file/json.hpp"
 #include "core/file/worksheet_file.hpp"
 
@@ -13,21 +15,34 @@ class Writer {
   void flag(const char* key, bool value) {
     if (value) object_.add(key, Json::boolean(true));
   }
-  void lines(const char* key, const document::Lines& lines) {
-    if (lines.empty()) return;
+  void lines(const char* key, const document::Lines& lines, const document::Misfits& misfits) {
     Json array = Json::array();
     for (const std::string& line : lines) array.items().push_back(Json::string(line));
-    object_.add(key, std::move(array));
+    list(key, std::move(array), misfits);
   }
   void value(const char* key, Json value) { object_.add(key, std::move(value)); }
 
-  /// Adds the members of a kept JSON object text, leaving out keys that now have a value of their own.
+  /// A list with the items that were kept aside put back to their places.
+  void list(const char* key, Json array, const document::Misfits& misfits) {
+    for (const document::Misfit& misfit : misfits) {
+      if (misfit.list != key) continue;
+      Result<Json> item = read_json(misfit.json);
+      if (!item.ok()) continue;
+      const std::size_t place = std::min(misfit.place, array.items().size());
+      array.items().insert(array.items().begin() + static_cast<std::ptrdiff_t>(place),
+                           std::move(item).value());
+    }
+    if (!array.items().empty()) object_.add(key, std::move(array));
+  }
+
+  /// Adds the members of a kept JSON object text, leaving out keys that now have a value of their own; what
+  /// was kept of an object that has one goes into it.
   Json finish(const std::string& unknown) {
     if (!unknown.empty()) {
       Result<Json> kept = read_json(unknown);
       if (kept.ok()) {
         for (Json::Member& member : kept->members()) {
-          if (object_.find(member.first) == nullptr) object_.add(member.first, std::move(member.second));
+          merge(std::move(member));
         }
       }
     }
@@ -35,6 +50,18 @@ class Writer {
   }
 
  private:
+  void merge(Json::Member kept) {
+    for (Json::Member& own : object_.members()) {
+      if (own.first != kept.first) continue;
+      if (!own.second.is_object() || !kept.second.is_object()) return;
+      for (Json::Member& inner : kept.second.members()) {
+        if (own.second.find(inner.first) == nullptr) own.second.add(inner.first, std::move(inner.second));
+      }
+      return;
+    }
+    object_.add(std::move(kept.first), std::move(kept.second));
+  }
+
   Json object_ = Json::object();
 };
 
@@ -51,6 +78,18 @@ Json header_json(const document::Header& header) {
   return out.finish(header.unknown);
 }
 
+Json heat_json(const document::TypedHeat& heat) {
+  Writer out;
+  out.text("value", heat.value);
+  out.text("per", heat.per);
+  out.text("at", heat.at);
+  out.text("medium", heat.medium);
+  out.text("includes", heat.includes);
+  out.text("source", heat.source);
+  out.text("from", heat.from);
+  return out.finish(heat.unknown);
+}
+
 Json reaction_json(const document::ReactionSheet& reaction) {
   Writer out;
   out.text("id", reaction.id);
@@ -59,9 +98,15 @@ Json reaction_json(const document::ReactionSheet& reaction) {
   out.text("basis", reaction.basis);
   out.text("bond_set", reaction.bond_set);
   out.text("pinned_route", reaction.pinned_route);
+  out.text("reactants_at", reaction.reactants_at);
+  out.text("products_at", reaction.products_at);
+  out.text("pressure", reaction.pressure);
+  Json measured = heat_json(reaction.measured);
+  if (!measured.members().empty()) out.value("measured", std::move(measured));
   out.text("note", reaction.note);
   out.flag("show_profile", reaction.show_profile);
   out.flag("show_checker", reaction.show_checker);
+  out.flag("show_measured", reaction.show_measured);
   if (!reaction.checker.empty()) {
     Json checker = Json::object();
     for (const auto& entry : reaction.checker) checker.add(entry.first, Json::string(entry.second));
@@ -75,7 +120,18 @@ Json bond_json(const document::TypedBond& bond) {
   out.text("bond", bond.bond);
   out.text("value", bond.value);
   out.text("source", bond.source);
+  out.text("from", bond.from);
   return out.finish(bond.unknown);
+}
+
+Json figure_json(const document::TypedFigure& figure) {
+  Writer out;
+  out.text("species", figure.species);
+  out.text("figure", figure.figure);
+  out.text("value", figure.value);
+  out.text("source", figure.source);
+  out.text("from", figure.from);
+  return out.finish(figure.unknown);
 }
 
 Json results_json(const SavedResults& results) {
@@ -99,12 +155,15 @@ std::string write_worksheet(const document::Worksheet& sheet, const SavedResults
   if (!header.members().empty()) out.value("header", header);
   Json reactions = Json::array();
   for (const auto& reaction : sheet.reactions) reactions.items().push_back(reaction_json(*reaction));
-  if (!reactions.items().empty()) out.value("reactions", std::move(reactions));
+  out.list("reactions", std::move(reactions), *sheet.misfits);
   Json bonds = Json::array();
   for (const auto& bond : *sheet.typed_bonds) bonds.items().push_back(bond_json(bond));
-  if (!bonds.items().empty()) out.value("bonds", std::move(bonds));
-  out.lines("notes", *sheet.notes);
-  out.lines("assumptions", *sheet.assumptions);
+  out.list("bonds", std::move(bonds), *sheet.misfits);
+  Json species = Json::array();
+  for (const auto& figure : *sheet.typed_figures) species.items().push_back(figure_json(figure));
+  out.list("species", std::move(species), *sheet.misfits);
+  out.lines("notes", *sheet.notes, *sheet.misfits);
+  out.lines("assumptions", *sheet.assumptions, *sheet.misfits);
   Json saved = results_json(results);
   if (!saved.members().empty()) out.value("results", std::move(saved));
   return write_json_text(out.finish(*sheet.unknown)) + "\n";

@@ -124,10 +124,13 @@ TEST(Schema, KnowsEveryKeyThatIsWritten) {
   sheet.header.change() = {"a", "b", "c", "d", "e", "f", "g", "h", ""};
   document::ReactionSheet& reaction = sheet.reactions[0].change();
   reaction.title = reaction.equation = reaction.basis = reaction.bond_set = reaction.pinned_route =
-      reaction.note = "x";
+      reaction.reactants_at = reaction.products_at = reaction.pressure = reaction.note = "x";
+  reaction.measured = {"a", "b", "c", "d", "e", "f", "g", ""};
+  reaction.show_measured = true;
   reaction.show_profile = reaction.show_checker = true;
   reaction.checker["gas_298"] = "1";
-  sheet.typed_bonds.change().push_back({"a", "b", "c", ""});
+  sheet.typed_bonds.change().push_back({"a", "b", "c", "d", ""});
+  sheet.typed_figures.change().push_back({"a", "b", "c", "d", "e", ""});
   sheet.notes.change().push_back("n");
   sheet.assumptions.change().push_back("a");
   const Result<Json> written = read_json(write_worksheet(sheet, {"0123456789abcdef", {{"r1", "x"}}}));

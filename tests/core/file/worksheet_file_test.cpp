@@ -23,7 +23,18 @@ document::Worksheet full_sheet() {
   second.equation = "half typed ->";
   second.pinned_route = "average";
   sheet.reactions.push_back(document::Shared<document::ReactionSheet>(second));
-  sheet.typed_bonds.change().push_back({"C-Cl", "340 \u00b1 8 kJ/mol", "works notebook 7, p. 31", ""});
+  sheet.typed_bonds.change().push_back({"C-Cl", "340 \u00b1 8 kJ/mol", "works notebook 7, p. 31", "", ""});
+  sheet.typed_figures.change().push_back(
+      {"KX-17", "formation_liquid", "-310 \u00b1 5 kJ/mol", "own calorimetry", "Harbour Works", ""});
+  first.reactants_at = "80 degC";
+  first.products_at = "120 degC";
+  first.pressure = "3 bar";
+  first.measured.value = "-112 \u00b1 4 kJ";
+  first.measured.per = "toluene";
+  first.measured.at = "60 degC";
+  first.measured.medium = "neat";
+  first.measured.includes = "no";
+  first.measured.source = "reaction calorimeter";
   sheet.notes.change().push_back("HCl leaves through the scrubber.");
   sheet.assumptions.change().push_back("No ring chlorination.");
   return sheet;
@@ -65,6 +76,64 @@ TEST(WorksheetFile, RoundTripKeepsEveryField) {
   EXPECT_EQ(opened->results.digest, results.digest);
   EXPECT_EQ(opened->results.figures.at("r1"), "\u2212112 kJ");
   EXPECT_EQ(write_worksheet(sheet, opened->results), text);
+}
+
+TEST(WorksheetFile, WhatAListCannotHoldIsKeptInItsPlace) {
+  const std::string text = R"json({
+  "format": "heatledger-worksheet",
+  "version": 1,
+  "reactions": [
+    {
+      "id": "r1",
+      "measured": {
+        "value": "-5 kJ",
+        "vessel": "RC-1"
+      },
+      "checker": {
+        "gas_298": "-112 kJ",
+        "as_written": 7
+      }
+    },
+    "not a reaction"
+  ],
+  "bonds": [
+    null,
+    {
+      "bond": "C-Cl",
+      "value": "340 kJ/mol"
+    },
+    [1, 2]
+  ],
+  "species": [
+    12,
+    {
+      "species": "KX-17",
+      "figure": "molar_mass",
+      "value": "212 g/mol",
+      "lot": 4
+    }
+  ],
+  "notes": [
+    "first",
+    {
+      "text": "second"
+    },
+    "third"
+  ],
+  "assumptions": [true]
+}
+)json";
+  Result<Opened> opened = read_worksheet(text);
+  ASSERT_TRUE(opened.ok());
+  EXPECT_EQ(opened->not_understood.size(), 7U);
+  EXPECT_EQ(opened->sheet.typed_bonds->size(), 1U);
+  EXPECT_EQ(opened->sheet.notes->size(), 2U);
+  EXPECT_EQ(write_worksheet(opened->sheet, opened->results), text);
+  // An edit elsewhere keeps them too.
+  opened->sheet.notes.change().push_back("fourth");
+  const std::string edited = write_worksheet(opened->sheet, opened->results);
+  EXPECT_NE(edited.find("\"text\": \"second\""), std::string::npos);
+  EXPECT_NE(edited.find("not a reaction"), std::string::npos);
 }
 
 TEST(WorksheetFile, KeepsUnknownKeysAtEveryLevel) {
