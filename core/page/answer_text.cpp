@@ -6,6 +6,7 @@
 
 #include "core/base/number_text.hpp"
 #include "core/molecule/elements.hpp"
+#include "core/page/figures.hpp"
 #include "core/page/page.hpp"
 #include "core/page/writers.hpp"
 #include "core/units/display.hpp"
@@ -84,6 +85,31 @@ Row row(RowRole role, std::vector<Cell> cells) {
   return made;
 }
 
+/// Lines of a row in context, rounded so that they add up to it.
+void add_context_lines(Table& table, const balance::LedgerRow& line, const balance::ReactionSpecies& entry) {
+  const int decimals = units::decimals_for(line.in_equation->u95() / 1000, kMostDecimals);
+  std::vector<double> totals;
+  for (const estimate::ContextLine& one : line.context->lines)
+    totals.push_back(entry.coefficient() * one.total / 1000);
+  const std::vector<double> shown = rounded_to_add_up(0, totals, line.in_equation->value() / 1000, decimals);
+  for (std::size_t i = 0; i < shown.size(); ++i) {
+    const estimate::ContextLine& one = line.context->lines[i];
+    const bool bond = one.kind == estimate::LineKind::Bond;
+    std::string label = "  ";
+    label += one.bond;
+    if (bond && !one.text.empty()) label += " ";
+    label += one.text;
+    std::string each = bond ? display_number(one.base / 1000, 1) : display_signed(one.total / 1000, 1);
+    if (bond && one.surroundings != 0)
+      each += (one.surroundings < 0 ? " − " : " + ") + display_number(std::fabs(one.surroundings) / 1000, 1);
+    const std::string total = display_number(shown[i], decimals);
+    table.rows.push_back(row(
+        RowRole::Detail, {cell(std::move(label), CellKind::Label, Tone::Quiet),
+                          number(bond ? coefficient_text(one.count) : ""), number(std::move(each)),
+                          number(entry.product ? "" : total), number(entry.product ? total : ""), cell("")}));
+  }
+}
+
 Table ledger_table(const balance::Ledger& ledger) {
   Table table;
   table.look = TableLook::Ledger;
@@ -117,6 +143,7 @@ Table ledger_table(const balance::Ledger& ledger) {
       detail.cells.push_back(cell(""));
       table.rows.push_back(std::move(detail));
     }
+    if (line.context != nullptr) add_context_lines(table, line, entry);
   }
   const auto side = [](const std::optional<uncertainty::Quantity>& sum) {
     return sum ? kilojoules(sum->figure()).value : std::string("none");
@@ -124,11 +151,14 @@ Table ledger_table(const balance::Ledger& ledger) {
   table.rows.push_back(row(RowRole::Subtotal, {cell("Sum of bonds", CellKind::Label, Tone::Strong), cell(""),
                                                cell(""), number(side(ledger.broken), Tone::Broken),
                                                number(side(ledger.formed), Tone::Formed), cell("")}));
-  const auto result = [&](std::string what, const std::optional<uncertainty::Quantity>& value, RowRole role) {
+  const auto result = [&](std::string what, const std::optional<uncertainty::Quantity>& value, RowRole role,
+                          const PrintedSum& sum, const std::optional<double>& rounded) {
     Row line = row(role, {cell(std::move(what)), cell(""), cell(""), cell("")});
     if (value) {
       const KilojouleText text = kilojoules(value->figure(), true);
-      line.cells.push_back(number(text.value));
+      line.cells.push_back(number(sum.decimals
+                                      ? display_signed(rounded.value_or(value->value() / 1000), *sum.decimals)
+                                      : text.value));
       line.cells.push_back(number(text.interval, Tone::Quiet));
     } else {
       line.cells.push_back(cell("none", CellKind::Label, Tone::Caution));
@@ -136,16 +166,22 @@ Table ledger_table(const balance::Ledger& ledger) {
     }
     table.rows.push_back(std::move(line));
   };
-  result("Broken − formed, gas, 25 °C", ledger.gas_298, RowRole::Result);
-  for (const balance::Correction& line : ledger.corrections)
-    result(line.what, line.value, RowRole::Correction);
-  result("As written, 25 °C", ledger.as_written, RowRole::Result);
+  const auto add_up = [&](const std::string& from, const std::optional<uncertainty::Quantity>& start,
+                          const std::vector<balance::Correction>& lines, const std::string& to,
+                          const std::optional<uncertainty::Quantity>& end) {
+    const PrintedSum sum = printed_sum(start, lines, end, 1);
+    result(from, start, RowRole::Result, sum, std::nullopt);
+    for (std::size_t i = 0; i < lines.size(); ++i)
+      result(lines[i].what, lines[i].value, RowRole::Correction, sum, sum.line(i));
+    result(to, end, RowRole::Result, sum, std::nullopt);
+  };
+  add_up("Broken − formed, gas, 25 °C", ledger.gas_298, ledger.corrections, "As written, 25 °C",
+         ledger.as_written);
   if (!ledger.to_temperature.empty()) {
     const balance::Route* taken = balance::find_route(ledger, ledger.taken);
-    if (taken != nullptr) result("The figure taken, by " + taken->name, taken->as_written, RowRole::Result);
-    for (const balance::Correction& line : ledger.to_temperature)
-      result(line.what, line.value, RowRole::Correction);
-    result("As run", ledger.as_run, RowRole::Result);
+    add_up("The figure taken, by " + (taken != nullptr ? taken->name : std::string("no route")),
+           taken != nullptr ? taken->as_written : std::nullopt, ledger.to_temperature, "As run",
+           ledger.as_run);
   }
   return table;
 }
@@ -205,7 +241,8 @@ std::string ledger_text(const balance::Ledger& ledger) {
   page.blocks.push_back(note(NoteKind::Info, ledger.reaction->checkable
                                                  ? "balanced: " + element_line(ledger.reaction->balance)
                                                  : "balance not checkable: a species has no composition"));
-  page.blocks.push_back(heading("Bond ledger", ledger.set->title(), 2));
+  page.blocks.push_back(ledger.in_context ? heading("Ledger of bonds in context", {}, 2)
+                                          : heading("Bond ledger", ledger.set->title(), 2));
   page.blocks.push_back(ledger_table(ledger));
   page.blocks.push_back(heading("Routes", {}, 2));
   page.blocks.push_back(routes_table(ledger));

@@ -23,6 +23,7 @@ struct TallyQuestion {
   std::string_view set;                        ///< id of a published bond set; empty: the primary one
   std::string_view basis;                      ///< see balance::LedgerOptions::basis
   std::string_view reactants_at, products_at;  ///< temperatures as typed, "80 degC"; empty: 25 °C
+  std::string_view site_table;  ///< text of a site table whose species and bonds go first; or empty
 };
 
 struct SpeciesQuestion {
@@ -41,7 +42,8 @@ struct Answer {
 /// The ledger of one equation. JSON keys, energies in kJ for the written coefficients:
 /// balanced, equation, broken, broken_u95, formed, formed_u95, gas_298, corrections, as_written, as_run,
 /// per_mole_of, routes (null where a route has no figure; route_reasons says why), rows, cautions.
-/// @errors equation.*, species.*, smiles.*, formula.*, bond_set.unknown, ledger.basis_unknown, unit.*
+/// @errors equation.*, species.*, smiles.*, formula.*, bond_set.unknown, ledger.basis_unknown, unit.*, those
+/// of file::read_site_table
 Result<Answer> answer_tally(const TallyQuestion& question, AnswerShape shape, balance::SpeciesSource& source);
 
 /// The figures of one compound: kJ/mol, J/(mol K), K. JSON keys: name, smiles, formula, molar_mass_g_mol,

@@ -49,6 +49,8 @@ void add_reaction(Digest& digest, const document::ReactionResult& result) {
     add_quantity(digest, route.as_written);
   }
   digest.add(ledger.taken);
+  for (const balance::Correction& line : ledger.to_temperature) add_quantity(digest, line.value);
+  if (!ledger.to_temperature.empty()) add_quantity(digest, ledger.as_run);
 }
 
 }  // namespace

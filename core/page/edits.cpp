@@ -60,6 +60,19 @@ Result<Edited> edit_line(const Worksheet& sheet, document::Shared<document::Line
   return edited;
 }
 
+/// "340 kJ/mol" with 3 % becomes "340 ± 10.2 kJ/mol": in the unit typed.
+std::string with_half_width(const std::string& value, double percent) {
+  std::size_t end = value.find_first_of("0123456789");
+  std::size_t length = 0;
+  const std::optional<double> number = end == std::string::npos
+                                           ? std::nullopt
+                                           : parse_number_prefix(std::string_view(value).substr(end), length);
+  if (!number || length == 0) return value;
+  end += length;
+  const double half = *number * percent / 100;
+  return value.substr(0, end) + " \u00b1 " + machine_number(half, 3) + value.substr(end);
+}
+
 Result<Edited> edit_bond(const Worksheet& sheet, const IdParts& id, const std::string& text,
                          std::string_view cell) {
   const std::optional<std::size_t> index = id.size() == 3 ? id_index(id[1]) : std::nullopt;
@@ -78,8 +91,72 @@ Result<Edited> edit_bond(const Worksheet& sheet, const IdParts& id, const std::s
   } else {
     return no_such_cell(cell);
   }
+  if (id[2] != "source") bond.from.clear();  // what is typed over is no longer the site's
   const bool blank = bond.bond.empty() && bond.value.empty() && bond.source.empty() && bond.unknown.empty();
   if (blank) bonds.erase(bonds.begin() + static_cast<std::ptrdiff_t>(*index));
+  return edited;
+}
+
+/// A cell of the table of species; the last row of the table is empty and adds one.
+Result<Edited> edit_figure(const Worksheet& sheet, const IdParts& id, const std::string& text,
+                           std::string_view cell) {
+  const std::optional<std::size_t> index = id.size() == 3 ? id_index(id[1]) : std::nullopt;
+  if (!index || *index > sheet.typed_figures->size()) return no_such_cell(cell);
+  if (id[2] == "remove") return apply_command(sheet, {}, "remove_figure", {{"figure", id[1]}});
+  if (id[2] == "published") return not_editable(cell);
+  Edited edited{sheet, "edit figure of species"};
+  document::TypedFigures& figures = edited.sheet.typed_figures.change();
+  if (*index == figures.size()) figures.emplace_back();
+  document::TypedFigure& figure = figures[*index];
+  if (id[2] == "species") {
+    figure.species = text;
+  } else if (id[2] == "figure") {
+    const document::FigureName* name = document::find_typed_figure(text);
+    figure.figure = name != nullptr ? std::string(name->id) : text;
+  } else if (id[2] == "value") {
+    figure.value = text;
+  } else if (id[2] == "source") {
+    figure.source = text;
+  } else {
+    return no_such_cell(cell);
+  }
+  // What is typed over is no longer the site's.
+  if (id[2] != "source") figure.from.clear();
+  const bool blank = figure.species.empty() && figure.figure.empty() && figure.value.empty() &&
+                     figure.source.empty() && figure.unknown.empty();
+  if (blank) figures.erase(figures.begin() + static_cast<std::ptrdiff_t>(*index));
+  return edited;
+}
+
+/// Puts a ± behind every typed figure that has none: "3 %" or "5 kJ/mol".
+Result<Edited> give_half_width(const Worksheet& sheet, const document::Results& results,
+                               const std::string& text) {
+  std::string half = text;
+  for (const std::string_view mark : {std::string_view("\u00b1"), std::string_view("+/-")}) {
+    if (half.compare(0, mark.size(), mark) == 0) half = one_line(std::string_view(half).substr(mark.size()));
+  }
+  const std::size_t digits = half.find_first_not_of("0123456789.");
+  const std::string number = half.substr(0, digits);
+  const std::string unit = digits == std::string::npos ? std::string() : one_line(half.substr(digits));
+  const std::optional<double> size = parse_number(number);
+  if (!size || *size <= 0 || unit != "%") {
+    return Error{"edit.half_width", "The \u00b1 for all of them is a share of each figure.", "exact.u95",
+                 "Type a percentage such as 3 %; single figures get theirs in their own cell."};
+  }
+  Edited edited{sheet, "give \u00b1 to typed figures"};
+  for (const std::string& path : results.exact) {
+    const std::size_t open = path.find('['), close = path.find(']');
+    const std::optional<std::size_t> index = id_index(path.substr(open + 1, close - open - 1));
+    if (!index) continue;
+    std::string* value = nullptr;
+    if (path.compare(0, 6, "bonds[") == 0 && *index < sheet.typed_bonds->size())
+      value = &edited.sheet.typed_bonds.change()[*index].value;
+    if (path.compare(0, 8, "species[") == 0 && *index < sheet.typed_figures->size())
+      value = &edited.sheet.typed_figures.change()[*index].value;
+    if (path.compare(0, 10, "reactions[") == 0 && *index < sheet.reactions.size())
+      value = &edited.sheet.reactions[*index].change().measured.value;
+    if (value != nullptr) *value = with_half_width(*value, *size);
+  }
   return edited;
 }
 
@@ -95,6 +172,7 @@ std::string basis_from_choice(const balance::Reaction* reaction, const std::stri
 
 std::string bond_set_from_choice(const std::string& text) {
   const std::vector<std::string>& names = estimate::BondSet::names();
+  if (text == route_words(document::kContextSet)) return document::kContextSet;
   for (std::size_t i = 0; i < names.size(); ++i) {
     const Result<estimate::BondSet> set = estimate::BondSet::published(names[i]);
     if (names[i] != text && !(set.ok() && set->title() == text)) continue;
@@ -127,6 +205,8 @@ class ReactionEdit {
                            {{"reaction", sheet().id}, {"proposal", id[2]}});
     }
     if (field == "check") return apply_check(id, text);
+    if (field == "measured" && id.size() == 3) return apply_measured(id[2], text);
+    if (field == "run" || field == "as_run" || field == "route") return not_editable(cell_);
     return no_such_cell(cell_);
   }
 
@@ -154,6 +234,12 @@ class ReactionEdit {
       return set(&ReactionSheet::pinned_route,
                  text == "the best there is" ? std::string() : route_from_words(text), "pin route");
     }
+    if (field == "reactants_at")
+      return set(&ReactionSheet::reactants_at, text, "edit temperature of reactants");
+    if (field == "products_at") return set(&ReactionSheet::products_at, text, "edit temperature of products");
+    if (field == "pressure") return set(&ReactionSheet::pressure, text, "edit pressure");
+    if (field == "measure")
+      return apply_command(sheet_, results_, "show_measured", {{"reaction", sheet().id}, {"state", "on"}});
     if (field == "show") {
       Edited edited{sheet_, "change what is shown"};
       ReactionSheet& reaction = edited.sheet.reactions[index_].change();
@@ -170,6 +256,23 @@ class ReactionEdit {
     return field == "balance" || field == "gas_298" || field == "as_written" || field == "taken"
                ? not_editable(cell_)
                : no_such_cell(cell_);
+  }
+
+  /// "r1.measured.value"
+  Result<Edited> apply_measured(const std::string& field, const std::string& text) const {
+    Edited edited{sheet_, "edit measured heat"};
+    document::TypedHeat& heat = edited.sheet.reactions[index_].change().measured;
+    std::string* place = field == "value"      ? &heat.value
+                         : field == "per"      ? &heat.per
+                         : field == "at"       ? &heat.at
+                         : field == "medium"   ? &heat.medium
+                         : field == "includes" ? &heat.includes
+                         : field == "source"   ? &heat.source
+                                               : nullptr;
+    if (place == nullptr) return no_such_cell(cell_);
+    *place = text;
+    if (field != "source") heat.from.clear();  // what is typed over is no longer the site's
+    return edited;
   }
 
   /// "r1.check.row.2.per_mole": the figure on the sheet under review; an empty text takes it away.
@@ -250,6 +353,8 @@ Result<Edited> apply_edit(const Worksheet& sheet, const document::Results& resul
     return edited;
   }
   if (id[0] == "bond") return edit_bond(sheet, id, text, cell);
+  if (id[0] == "fact") return edit_figure(sheet, id, text, cell);
+  if (cell == "exact.u95") return give_half_width(sheet, results, text);
   if (id[0] == "assumption" || id[0] == "remark") {
     const std::optional<std::size_t> index = id.size() == 2 ? id_index(id[1]) : std::nullopt;
     if (!index) return no_such_cell(cell);

@@ -1,10 +1,13 @@
 #include "core/page/figures.hpp"
 
+#include <algorithm>
 #include <array>
 #include <cmath>
+#include <string_view>
 #include <utility>
 
 #include "core/balance/bond_words.hpp"
+#include "core/base/check.hpp"
 #include "core/base/number_text.hpp"
 #include "core/units/display.hpp"
 
@@ -14,7 +17,17 @@ namespace {
 constexpr std::array<std::pair<const char*, const char*>, 4> kRoutes{{{"average", "average bonds"},
                                                                       {"context", "bonds in context"},
                                                                       {"formation", "formation enthalpies"},
-                                                                      {"measured", "measured"}}};
+                                                                      {"measured", "the measured heat"}}};
+
+/// The number that the printed text of a value says.
+double as_printed(double value, int decimals) {
+  constexpr std::string_view kThinSpace = "\u2009";
+  std::string text = display_number(value, decimals);
+  for (std::size_t at; (at = text.find(kThinSpace)) != std::string::npos;) text.erase(at, kThinSpace.size());
+  const std::optional<double> number = parse_number(text);
+  CHECK(number.has_value(), "a printed number reads back");
+  return *number;
+}
 
 bool is_whole_kj(double joule) {
   // A twentieth of a kJ is below what one decimal shows.
@@ -42,10 +55,56 @@ std::string figure_kj(const uncertainty::Figure& joule) {
   return text;
 }
 
+std::vector<double> rounded_to_add_up(double start, const std::vector<double>& lines, double end,
+                                      int decimals) {
+  constexpr std::array<double, 7> kSteps{1, 10, 100, 1000, 10000, 100000, 1000000};
+  const double step = kSteps[static_cast<std::size_t>(decimals)];
+  // Whole last digits, as the printed text has them: rounding here must not differ from rounding there.
+  const auto digits = [&](double value) { return std::round(as_printed(value, decimals) * step); };
+  std::vector<double> whole(lines.size());
+  double gap = digits(end) - digits(start);
+  for (std::size_t i = 0; i < lines.size(); ++i) {
+    whole[i] = digits(lines[i]);
+    gap -= whole[i];
+  }
+  // Each line is off by half a digit at most, so the gap is no more than the lines can take.
+  while (gap != 0 && !lines.empty()) {
+    const double by = gap > 0 ? 1 : -1;
+    std::size_t most = 0;
+    for (std::size_t i = 1; i < lines.size(); ++i) {
+      if (by * (lines[i] * step - whole[i]) > by * (lines[most] * step - whole[most])) most = i;
+    }
+    whole[most] += by;
+    gap -= by;
+  }
+  for (double& line : whole) line /= step;
+  return whole;
+}
+
 int decimals_kj(double u95_joule) {
   // One decimal is all that anyone reads off, but a ± must not print as zero.
   const bool vanishes = u95_joule > 0 && u95_joule < 50;
   return units::decimals_for(u95_joule / 1000, vanishes ? 2 : 1);
+}
+
+PrintedSum printed_sum(const std::optional<uncertainty::Quantity>& start,
+                       const std::vector<balance::Correction>& corrections,
+                       const std::optional<uncertainty::Quantity>& end, double factor) {
+  PrintedSum sum;
+  if (corrections.empty() || !start || !end) return sum;
+  const int of_ends = std::max(decimals_kj(factor * start->u95()), decimals_kj(factor * end->u95()));
+  int decimals = of_ends;
+  std::vector<double> lines;
+  for (const balance::Correction& correction : corrections) {
+    if (!correction.value) return sum;
+    // A correction known to 0.01 kJ does not make the whole sum look as if it were.
+    decimals = std::max(decimals, std::min(1, decimals_kj(factor * correction.value->u95())));
+    lines.push_back(factor * correction.value->value() / 1000);
+  }
+  sum.lines =
+      rounded_to_add_up(factor * start->value() / 1000, lines, factor * end->value() / 1000, decimals);
+  sum.decimals = decimals;
+  return sum;
 }
 
 int ledger_decimals(const balance::Ledger& ledger) {

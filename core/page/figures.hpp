@@ -4,6 +4,7 @@
 
 #include <optional>
 #include <string>
+#include <vector>
 
 #include "core/balance/ledger.hpp"
 #include "core/uncertainty/quantity.hpp"
@@ -18,11 +19,34 @@ std::string half_width_kj(double joule, int decimals);
 /// "−552.6 ± 3.0" from [J], decimals after the ±; "−552.6" when the ± is zero.
 std::string figure_kj(const uncertainty::Figure& joule);
 
+/// Numbers of a sum as they are printed: start + lines = end to the last digit shown. Start and end are
+/// rounded as always; where rounding would leave a gap of a last digit, the line that rounding moved furthest
+/// takes it.
+/// @param decimals  0 to 6
+/// @return  the lines, rounded
+std::vector<double> rounded_to_add_up(double start, const std::vector<double>& lines, double end,
+                                      int decimals);
+
 /// Decimals of one figure in kJ: two digits of its ±, at most one; two where the ± would print as zero.
 int decimals_kj(double u95_joule);
 /// Decimals of a ledger's columns: none where every price is a whole number of kJ or the total is vaguer than
 /// that.
 int ledger_decimals(const balance::Ledger& ledger);
+
+/// How a sum "start, corrections, end" is printed. Empty decimals: there is nothing to add up, each figure
+/// keeps its own.
+struct PrintedSum {
+  std::optional<int> decimals;
+  std::vector<double> lines;  ///< [kJ] rounded, one for each correction
+
+  std::optional<double> line(std::size_t index) const {
+    return index < lines.size() ? std::optional<double>(lines[index]) : std::nullopt;
+  }
+};
+/// @param factor  all figures are shown times this
+PrintedSum printed_sum(const std::optional<uncertainty::Quantity>& start,
+                       const std::vector<balance::Correction>& corrections,
+                       const std::optional<uncertainty::Quantity>& end, double factor);
 
 /// A coefficient as typed: "3", "1/2", "0.25".
 std::string coefficient_text(const molecule::Coefficient& coefficient);

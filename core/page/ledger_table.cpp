@@ -1,5 +1,7 @@
 // The ledger as a table: a row per species that unfolds to its bond lines, the spine between broken and
 // formed, totals, corrections, the figure as written.
+#include <cmath>
+
 #include "core/balance/bond_words.hpp"
 #include "core/balance/checker.hpp"
 #include "core/base/number_text.hpp"
@@ -67,7 +69,7 @@ class LedgerTable {
     const balance::ReactionSpecies& written = species(index);
     const std::string id = row_id(view_.sheet, index);
     Row row = row_of(id);
-    const bool unfolds = !entry.lines.empty();
+    const bool unfolds = entry.unfolds();
     if (unfolds) {
       row.fold_id = id;
       row.open = view_.open_rows.count(id) != 0;
@@ -85,6 +87,7 @@ class LedgerTable {
     } else {
       Cell missing =
           figure_cell(id + ".per_mole", entry.missing.empty() ? "no value" : "bond missing", Tone::Caution);
+      missing.hint = entry.remark;
       missing.kind = CellKind::Label;
       row.cells.push_back(std::move(missing));
     }
@@ -103,6 +106,7 @@ class LedgerTable {
     finish(std::move(row), "row." + std::to_string(index) + ".in_equation");
     if (open) {
       for (std::size_t line = 0; line < entry.lines.size(); ++line) add_line(index, line);
+      if (entry.context != nullptr) add_context_lines(index);
     }
     if (!entry.remark.empty() && (open || entry.route != balance::RowRoute::Bonds))
       add_remark(id, entry.remark);
@@ -140,6 +144,49 @@ class LedgerTable {
     row.cells.push_back(label_cell(""));
     finish(std::move(row),
            "row." + std::to_string(index) + ".line." + std::to_string(line_index) + ".per_mole");
+  }
+
+  /// The lines of an estimate, rounded so that they add up to the row.
+  void add_context_lines(std::size_t index) {
+    const balance::LedgerRow& entry = ledger_.rows[index];
+    const balance::ReactionSpecies& written = species(index);
+    const double times = written.coefficient();
+    std::vector<double> totals;
+    for (const estimate::ContextLine& line : entry.context->lines)
+      totals.push_back(times * line.total / 1000);
+    const std::vector<double> shown =
+        rounded_to_add_up(0, totals, entry.in_equation->value() / 1000, decimals_);
+    for (std::size_t i = 0; i < shown.size(); ++i) add_context_line(index, i, shown[i]);
+  }
+
+  void add_context_line(std::size_t index, std::size_t line_index, double total) {
+    const estimate::ContextLine& line = ledger_.rows[index].context->lines[line_index];
+    const balance::ReactionSpecies& written = species(index);
+    const std::string id = row_id(view_.sheet, index) + ".line." + std::to_string(line_index);
+    const bool bond = line.kind == estimate::LineKind::Bond;
+    Row row = row_of(id, RowRole::Detail);
+    Cell what =
+        label_cell(bond ? line.bond + (line.text.empty() ? "" : " " + line.text) : line.text, Tone::Quiet, 2);
+    if (line.unseen > 0) what.hint = "No compound of the table has these surroundings: the \u00b1 is wider.";
+    row.cells.push_back(std::move(what));
+    const std::string times = coefficient_text(written.term.coefficient);
+    const std::string count = bond ? machine_number(line.count, 6) : std::string();
+    row.cells.push_back(label_cell(times == "1"    ? count
+                                   : count.empty() ? "\u00d7 " + times
+                                                   : count + " \u00d7 " + times,
+                                   Tone::Quiet));
+    std::string each = bond ? display_number(line.base / 1000, 1) : display_signed(line.total / 1000, 1);
+    if (bond && line.surroundings != 0) {
+      each += line.surroundings < 0 ? " \u2212 " : " + ";
+      each += display_number(std::fabs(line.surroundings) / 1000, 1);
+    }
+    row.cells.push_back(figure_cell(id + ".each", each, Tone::Quiet, Origin::Estimated));
+    row.cells.push_back(label_cell(line.unseen > 0 ? "unseen" : "", Tone::Quiet));
+    const std::string shown = display_number(total, decimals_);
+    row.cells.push_back(figure_cell(id + ".total", written.product ? "" : shown, Tone::Quiet));
+    row.cells.push_back(figure_cell(id + ".total", written.product ? shown : "", Tone::Quiet));
+    row.cells.push_back(label_cell(""));
+    finish(std::move(row), "");
   }
 
   /// Puts a row into the table; with the checker's column shown, adds the figure under review and what it
@@ -201,16 +248,20 @@ class LedgerTable {
   }
 
   /// One line under the sums: what, figure, ±.
+  /// @param decimals  of the value; the \u00b1 keeps its own
   void add_total(const std::string& id, const std::string& what,
                  const std::optional<uncertainty::Quantity>& value, double factor, RowRole role,
-                 const std::string& why_not, const std::string& figure) {
+                 const std::string& why_not, const std::string& figure,
+                 const std::optional<int>& decimals_of_sum = {}, const std::optional<double>& rounded = {}) {
     Row row = row_of(id, role);
     const Tone tone = role == RowRole::Result ? Tone::Strong : Tone::Plain;
     row.cells.push_back(label_cell(what, tone, kLabelSpan));
     if (value) {
       const uncertainty::Quantity scaled = value->scaled(factor);
       const int decimals = role == RowRole::Result ? total_decimals(scaled) : decimals_kj(scaled.u95());
-      row.cells.push_back(figure_cell(id, signed_unless_result(scaled.value(), decimals, role), tone));
+      const double shown = rounded ? 1000 * *rounded : scaled.value();
+      row.cells.push_back(
+          figure_cell(id, signed_unless_result(shown, decimals_of_sum.value_or(decimals), role), tone));
       row.cells.push_back(figure_cell(id + ".u95", half_width_kj(scaled.u95(), decimals), Tone::Quiet));
     } else {
       Cell missing = figure_cell(id, "no value", Tone::Caution);
@@ -238,17 +289,20 @@ class LedgerTable {
       add_total(id + ".difference", "Broken \u2212 formed, as written, kJ", ledger_.gas_298, 1,
                 RowRole::Subtotal, missing_words(), "gas_298");
     }
+    const PrintedSum sum =
+        printed_sum(ledger_.gas_298, ledger_.corrections, ledger_.as_written, basis.factor);
     add_total(id + ".gas_298", "Broken \u2212 formed, " + (scaled ? basis.text + ", " : "") + basis.unit,
               ledger_.gas_298, basis.factor, RowRole::Result, missing_words(),
-              basis.factor != 1 ? "gas_298.on_basis" : "gas_298");
+              basis.factor != 1 ? "gas_298.on_basis" : "gas_298", sum.decimals);
     for (std::size_t i = 0; i < ledger_.corrections.size(); ++i) {
       const balance::Correction& correction = ledger_.corrections[i];
       add_total(id + ".correction." + std::to_string(i), correction.what, correction.value, basis.factor,
-                RowRole::Correction, correction.why_not, "correction." + std::to_string(i));
+                RowRole::Correction, correction.why_not, "correction." + std::to_string(i), sum.decimals,
+                sum.line(i));
     }
     add_total(id + ".as_written", "As written, 25 \u00b0C, " + basis.unit, ledger_.as_written, basis.factor,
               RowRole::Result, "A line above has no value.",
-              basis.factor != 1 ? "as_written.on_basis" : "as_written");
+              basis.factor != 1 ? "as_written.on_basis" : "as_written", sum.decimals);
   }
 
   /// Which bonds the set does not price, for the total that is missing because of them.
@@ -259,6 +313,9 @@ class LedgerTable {
         const std::string bond = balance::bond_label(type);
         if (text.find(bond) == std::string::npos) text += (text.empty() ? "" : ", ") + bond;
       }
+    }
+    for (const balance::LedgerRow& row : ledger_.rows) {
+      if (ledger_.in_context && !row.per_mole) return row.remark;
     }
     if (text.empty()) return "A species has no bond sum.";
     return "The bond set has no value for " + text + ": type one below, with its source.";

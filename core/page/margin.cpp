@@ -4,6 +4,7 @@
 #include <cmath>
 
 #include "core/balance/bond_words.hpp"
+#include "core/balance/context_rows.hpp"
 #include "core/base/number_text.hpp"
 #include "core/molecule/elements.hpp"
 #include "core/page/edits.hpp"
@@ -51,6 +52,8 @@ class LedgerMargin {
     if (part == "difference" || part == "gas_298") return explain_gas(part == "gas_298");
     if (part == "correction" && id.size() >= 3) return explain_correction(id);
     if (part == "as_written") return explain_as_written();
+    if (part == "run" && id.size() >= 3) return explain_run(id);
+    if (part == "as_run") return explain_as_run();
     if (part == "taken" || part == "per_kg" || part == "per_kg_reactants") return explain_taken(part);
     if (part == "route" && id.size() >= 4) return explain_route(id[2], id[3] == "gas_298");
     return false;
@@ -65,13 +68,15 @@ class LedgerMargin {
     const std::optional<std::size_t> index = id_index(id[2]);
     if (!index || *index >= ledger_.rows.size()) return false;
     const balance::LedgerRow& row = ledger_.rows[*index];
-    if (id[3] == "line" && id.size() >= 6) return explain_line(row, *index, id);
+    if (id[3] == "line" && id.size() >= 6)
+      return row.context != nullptr ? explain_context_line(row, id) : explain_line(row, *index, id);
     margin_.subject = balance::display_species(species(*index));
-    if (id[3] == "u95") {
+    if (id[3] == "u95" && row.context == nullptr) {
       explain_half_width(row);
     } else {
       margin_.steps = row.working;
     }
+    if (row.context != nullptr) add_carriers(species(*index), *row.context);
     for (const balance::BondLine& line : row.lines) add_source(margin_, line.source);
     add_source(margin_, row.table_source);
     std::vector<std::string> remarks = row.strains;
@@ -140,6 +145,110 @@ class LedgerMargin {
       }
     }
     if (!line.remark.empty()) add_section(margin_, "About this bond", {line.remark}, NoteKind::Info);
+    return true;
+  }
+
+  /// The compounds of the table that an estimate rests on, and what no compound of it has.
+  void add_carriers(const balance::ReactionSpecies& entry, const estimate::Explanation& explanation) {
+    if (explanation.rows.empty() && explanation.unseen.empty()) return;
+    std::vector<std::string> texts;
+    for (const estimate::ReferenceRow& row : explanation.rows) {
+      texts.push_back(row.name + ", " + display_signed(row.value / 1000, 1) + " \u00b1 " +
+                      display_number(row.u95 / 1000, 1) + " kJ/mol (" + row.sources +
+                      "): the estimate moves by " + display_signed(row.weight, 2) +
+                      " of what this figure does.");
+    }
+    if (!explanation.unseen.empty()) {
+      std::string unseen;
+      for (const std::string& feature : explanation.unseen) unseen += (unseen.empty() ? "" : "; ") + feature;
+      texts.push_back("No compound of the table has: " + unseen +
+                      ". The parent surroundings stand in, with a "
+                      "wider \u00b1.");
+    }
+    add_section(margin_, "What carries the estimate of " + balance::display_species(entry), texts,
+                NoteKind::Info);
+  }
+
+  /// The same for every species of a route that is estimated, asked for only when somebody looks.
+  void add_carriers_of(const balance::Route& route) {
+    for (std::size_t i = 0; i < ledger_.rows.size(); ++i) {
+      const bool in_context = route.name == balance::kContextRoute;
+      const bool estimated =
+          std::find(route.estimated.begin(), route.estimated.end(), i) != route.estimated.end();
+      const balance::ReactionSpecies& entry = species(i);
+      const bool element = entry.species->compound != nullptr && entry.species->compound->reference_element;
+      if (element || !(in_context || estimated)) continue;
+      const Result<estimate::Explanation> explained =
+          balance::explain_in_context(*entry.species, ledger_.observations.get());
+      if (explained.ok()) add_carriers(entry, *explained);
+    }
+  }
+
+  bool explain_context_line(const balance::LedgerRow& row, const IdParts& id) {
+    const std::optional<std::size_t> at = id_index(id[4]);
+    if (!at || *at >= row.context->lines.size()) return false;
+    const estimate::ContextLine& line = row.context->lines[*at];
+    const balance::ReactionSpecies& entry = ledger_.reaction->species[row.species];
+    const bool bond = line.kind == estimate::LineKind::Bond;
+    margin_.subject = (bond ? line.bond + " " : "") + line.text + ", " + balance::display_species(entry);
+    const auto one = [](double joule) { return display_number(joule / 1000, 2); };
+    if (bond) {
+      margin_.steps.push_back("base value of " + line.bond + ", anywhere: " + one(line.base) + " kJ/mol");
+      margin_.steps.push_back("its surroundings add " + display_signed(line.surroundings / 1000, 2));
+      margin_.steps.push_back(machine_number(line.count, 6) + " \u00d7 " +
+                              one(line.base + line.surroundings) + " = " + one(line.total) + " kJ/mol");
+    } else {
+      margin_.steps.push_back(line.text + ": " + display_signed(line.total / 1000, 2) + " kJ/mol");
+    }
+    if (entry.coefficient() != 1) {
+      margin_.steps.push_back(coefficient_text(entry.term.coefficient) + " \u00d7 " + one(line.total) +
+                              " = " + one(line.total * entry.coefficient()) + " kJ");
+    }
+    add_source(margin_, "bonds in context");
+    if (line.unseen > 0) {
+      add_section(
+          margin_, "About this line",
+          {"No compound of the table has these surroundings: the parent surroundings stand in, with a "
+           "wider \u00b1."},
+          NoteKind::Caution);
+    }
+    add_carriers(entry, *row.context);
+    return true;
+  }
+
+  bool explain_run(const IdParts& id) {
+    if (id[2] == "taken") return explain_taken("taken");
+    const std::optional<std::size_t> index = id_index(id[2]);
+    if (!index || *index >= ledger_.to_temperature.size()) return false;
+    const balance::Correction& line = ledger_.to_temperature[*index];
+    margin_.subject = line.what;
+    margin_.steps = line.working;
+    if (line.value) {
+      margin_.steps.push_back("for the coefficients written: " + balance::kj_with_u95(*line.value, "kJ"));
+      add_basis_step(*line.value);
+    } else {
+      add_section(margin_, "Why there is no value", {line.why_not}, NoteKind::Caution);
+    }
+    add_source(margin_, line.source);
+    return true;
+  }
+
+  bool explain_as_run() {
+    margin_.subject = "the figure at the temperatures of the run";
+    const balance::Route* route = balance::find_route(ledger_, ledger_.taken);
+    if (route != nullptr && route->as_written)
+      margin_.steps.push_back("taken, 25 \u00b0C: " + balance::kj_with_u95(*route->as_written, "kJ"));
+    for (const balance::Correction& line : ledger_.to_temperature) {
+      margin_.steps.push_back(
+          line.what + "  " +
+          (line.value ? balance::fine_kj(line.value->value()) + " kJ" : "no value: " + line.why_not));
+      add_source(margin_, line.source);
+    }
+    if (ledger_.as_run) {
+      margin_.steps.push_back("as run: " + balance::kj_with_u95(*ledger_.as_run, "kJ"));
+      add_basis_step(*ledger_.as_run);
+    }
+    add_section(margin_, "Cautions", ledger_.cautions, NoteKind::Caution);
     return true;
   }
 
@@ -217,7 +326,8 @@ class LedgerMargin {
 
   bool explain_as_written() {
     margin_.subject = "phases as written, 25 \u00b0C, by bonds";
-    if (const balance::Route* route = balance::find_route(ledger_, balance::kAverageRoute)) {
+    if (const balance::Route* route = balance::find_route(
+            ledger_, ledger_.in_context ? balance::kContextRoute : balance::kAverageRoute)) {
       margin_.steps = route->working;
       if (!route->why_not.empty())
         add_section(margin_, "Why there is no value", {route->why_not}, NoteKind::Caution);
@@ -246,9 +356,10 @@ class LedgerMargin {
     } else {
       add_mass_step(which, *route->as_written);
     }
-    add_source(margin_,
-               "by " + route_words(route->name) +
-                   (sheet_.pinned_route.empty() ? ", the best route there is" : ", pinned on this sheet"));
+    if (route->name == balance::kContextRoute) add_carriers_of(*route);
+    add_source(margin_, "by " + route_words(route->name) +
+                            (sheet_.pinned_route != route->name ? ", the best route there is"
+                                                                : ", pinned on this sheet"));
     add_why_different();
     return true;
   }
@@ -290,6 +401,7 @@ class LedgerMargin {
     const std::optional<Quantity>& figure = gas ? route->gas_298 : route->as_written;
     if (figure) add_basis_step(*figure);
     if (!route->why_not.empty()) add_section(margin_, "Where it ends", {route->why_not}, NoteKind::Info);
+    add_carriers_of(*route);
     add_why_different();
     return true;
   }
@@ -304,7 +416,7 @@ class LedgerMargin {
       texts.push_back("Average bonds give " + balance::kj_with_u95(*average->gas_298, "kJ") +
                       ", formation enthalpies " + balance::kj_with_u95(*formation->gas_298, "kJ") +
                       " for the gas: " + balance::ledger_kj(std::fabs(apart)) + " kJ apart.");
-      add_gaps(texts);
+      if (!ledger_.in_context) add_gaps(texts);
     }
     add_section(margin_, "Why the routes differ", texts, NoteKind::Disagreement);
     add_section(margin_, "Cautions", ledger_.cautions, NoteKind::Caution);
@@ -356,6 +468,22 @@ void explain_balance(const balance::Reaction& reaction, Margin& margin) {
   }
 }
 
+/// What a typed figure covers, with all that is published beside it.
+void explain_figure(const document::ReadFigure& read, const document::TypedFigure& entry, Margin& margin) {
+  margin.subject = read.species;
+  if (!entry.from.empty()) add_source(margin, "site table " + entry.from);
+  if (!read.published) return;
+  const facts::Datum& datum = *read.published;
+  margin.steps.push_back("typed here: " + entry.value + (entry.source.empty() ? "" : ", " + entry.source));
+  margin.steps.push_back("published, and covered by it: " + machine_number(datum.value, 8) + " \u00b1 " +
+                         machine_number(datum.u95, 4) + " in SI units, " + std::string(datum.source));
+  for (const facts::Rival& rival : datum.rivals) {
+    margin.steps.push_back("another table: " + machine_number(rival.value, 8) + ", " +
+                           std::string(rival.source));
+  }
+  add_source(margin, std::string(datum.source));
+}
+
 }  // namespace
 
 Result<Margin> make_margin(const document::Worksheet& sheet, const document::Results& results,
@@ -376,6 +504,13 @@ Result<Margin> make_margin(const document::Worksheet& sheet, const document::Res
     if (ledger != nullptr && cell.has_working) {
       LedgerMargin(*sheet.reactions[index], *ledger, margin).explain(id);
       return margin;
+    }
+  }
+  if (id[0] == "fact" && id.size() == 3) {
+    const std::optional<std::size_t> row = id_index(id[1]);
+    if (row && *row < results.library->figures().size()) {
+      explain_figure(results.library->figures()[*row], sheet.typed_figures->at(*row), margin);
+      if (cell.id.compare(cell.id.size() - 9, 9, "published") == 0) return margin;
     }
   }
   if (cell.origin == Origin::Typed) margin.sources.emplace_back("typed on this sheet");

@@ -26,6 +26,12 @@ std::string errors_state(const std::vector<Error>& errors) {
   return state;
 }
 
+std::string lines_state(const std::vector<std::string>& lines) {
+  std::string state;
+  for (const std::string& line : lines) state += line + "\n";
+  return state;
+}
+
 std::vector<Block> add_reaction_blocks() {
   Table table;
   table.id = "reactions.add";
@@ -105,6 +111,13 @@ const Page& PageBuilder::build(PageInput input) {
         });
   }
   add_section("+add", {}, "", add_reaction_blocks);
+  const auto half_width = input.rejected->find("exact.u95");
+  const Error* rejected = half_width == input.rejected->end() ? nullptr : &half_width->second.error;
+  add_section("+exact", {},
+              lines_state(input.results->exact) + (rejected != nullptr ? rejected->message : ""),
+              [&] { return exact_blocks(input.results->exact, sheet, rejected); });
+  add_section("+species", {sheet.typed_figures.handle(), input.results->library}, "",
+              [&] { return typed_species_blocks(*sheet.typed_figures, *input.results->library); });
   add_section("+bonds", {sheet.typed_bonds.handle()}, errors_state(input.results->errors),
               [&] { return typed_bond_blocks(*sheet.typed_bonds, input.results->errors); });
   add_section("+assumptions", {sheet.assumptions.handle()}, "",

@@ -117,9 +117,11 @@ void add_equation_notes(const ReactionView& view, std::vector<Block>& blocks) {
       }
     }
   }
-  if (view.result.option_error) {
-    const std::string& field = view.result.option_error->where;
-    blocks.push_back(note_block(id + ".option", NoteKind::Error, error_words(*view.result.option_error),
+  for (std::size_t i = 0; i < view.result.option_errors.size(); ++i) {
+    const Error& error = view.result.option_errors[i];
+    const std::string field = error.where.substr(0, error.where.find(','));
+    blocks.push_back(note_block(id + ".option" + (i == 0 ? "" : "." + std::to_string(i)), NoteKind::Error,
+                                error_words(error),
                                 {id + "." + (field == "pinned_route" ? "route" : field)}));
   }
   for (auto entry = view.rejected.lower_bound(id + "."); entry != view.rejected.end(); ++entry) {
@@ -157,6 +159,8 @@ Cell bond_set_cell(const ReactionView& view) {
     if (title.first == view.sheet.bond_set || (view.sheet.bond_set.empty() && choices.size() == 1))
       shown = title.second;
   }
+  choices.push_back(route_words(document::kContextSet));
+  if (view.sheet.bond_set == document::kContextSet) shown = choices.back();
   return choice_cell(view.sheet.id + ".bond_set", shown, shown, std::move(choices));
 }
 
@@ -182,6 +186,19 @@ Cell route_cell(const ReactionView& view) {
   return choice_cell(view.sheet.id + ".route", shown, shown, std::move(choices));
 }
 
+/// A blank for a condition of the reaction; a text that cannot be read stands in the ink of a caution.
+Cell condition_cell(const ReactionView& view, const char* field, const std::string& text, const char* hint) {
+  Cell cell = typed_cell(view.sheet.id + "." + field, text, hint, CellKind::Number);
+  for (const Error& error : view.result.option_errors) {
+    if (error.where.compare(0, std::string(field).size(), field) == 0) cell.tone = Tone::Caution;
+  }
+  return cell;
+}
+
+bool shows_measured(const document::ReactionSheet& sheet) {
+  return sheet.show_measured || !sheet.measured.blank();
+}
+
 Table options_table(const ReactionView& view) {
   const std::string& id = view.sheet.id;
   Table table;
@@ -193,14 +210,28 @@ Table options_table(const ReactionView& view) {
                  label_cell("Figures", Tone::Quiet), basis_cell(view)};
   Row second = row_of(id + ".options.2");
   second.cells = {label_cell("Figure taken", Tone::Quiet), route_cell(view), label_cell("", Tone::Quiet, 2)};
+  Row temperatures = row_of(id + ".options.temperatures");
+  temperatures.cells = {label_cell("Reactants at", Tone::Quiet),
+                        condition_cell(view, "reactants_at", view.sheet.reactants_at, "25 degC"),
+                        label_cell("Products at", Tone::Quiet),
+                        condition_cell(view, "products_at", view.sheet.products_at, "25 degC")};
+  Row pressure = row_of(id + ".options.pressure");
+  pressure.cells = {label_cell("Pressure of gases", Tone::Quiet),
+                    condition_cell(view, "pressure", view.sheet.pressure, "ideal gas"),
+                    label_cell("", Tone::Quiet, 2)};
   Row third = row_of(id + ".options.3");
   third.screen_only = true;
   const std::vector<std::string> shows{"nothing more", "enthalpy profile", "checker's column",
                                        "enthalpy profile and checker's column"};
   const std::string shown = shows[(view.sheet.show_profile ? 1U : 0U) + (view.sheet.show_checker ? 2U : 0U)];
   third.cells = {label_cell("Also show", Tone::Quiet), choice_cell(id + ".show", shown, shown, shows),
-                 label_cell("", Tone::Quiet, 2)};
-  table.rows = {std::move(first), std::move(second), std::move(third)};
+                 shows_measured(view.sheet)
+                     ? label_cell("", Tone::Quiet, 2)
+                     : button_cell(id + ".measure", "Type a measured heat",
+                                   "goes before every other route, unless one is pinned")};
+  third.cells.back().span = 2;
+  table.rows = {std::move(first), std::move(second), std::move(temperatures), std::move(pressure),
+                std::move(third)};
   return table;
 }
 
@@ -238,9 +269,11 @@ void add_review_notes(const ReactionView& view, const balance::Review& review, s
 void add_ledger_blocks(const ReactionView& view, std::vector<Block>& blocks) {
   const std::string& id = view.sheet.id;
   const balance::Ledger& ledger = *view.result.ledger;
-  blocks.push_back(
-      heading_block(id + ".ledger.heading", "Bond ledger", "gas, 25 \u00b0C \u00b7 " + ledger.basis.text));
+  blocks.push_back(heading_block(id + ".ledger.heading",
+                                 ledger.in_context ? "Ledger of bonds in context" : "Bond ledger",
+                                 "gas, 25 \u00b0C \u00b7 " + ledger.basis.text));
   blocks.push_back(options_table(view));
+  if (shows_measured(view.sheet)) blocks.push_back(measured_table(view));
   if (view.sheet.show_checker) {
     const balance::Review review = balance::review_sheet(ledger, view.sheet.checker);
     blocks.push_back(ledger_table(view, &review));
@@ -253,6 +286,7 @@ void add_ledger_blocks(const ReactionView& view, std::vector<Block>& blocks) {
   }
   blocks.push_back(heading_block(id + ".result.heading", "Result"));
   blocks.push_back(result_table(view));
+  if (ledger.reactants_at || ledger.products_at) blocks.push_back(run_table(view));
   blocks.push_back(note_block(
       id + ".covers", NoteKind::Info,
       "\u00b1 covers the data of the reaction written above. Side reactions, decomposition and the rate "
@@ -304,6 +338,7 @@ std::vector<Block> reaction_blocks(const ReactionView& view) {
     blocks.push_back(
         heading_block(id + ".ledger.heading", "Bond ledger", "no sums: the equation does not balance"));
     blocks.push_back(options_table(view));
+    if (shows_measured(view.sheet)) blocks.push_back(measured_table(view));
     blocks.push_back(ledger_table(view, nullptr));
   }
   blocks.push_back(note_table(view));

@@ -40,6 +40,12 @@ std::string row_id(const document::ReactionSheet& sheet, std::size_t row);
 Table ledger_table(const ReactionView& view, const balance::Review* review);
 /// Boxes with the figure taken and what it is per mole and per kilogram.
 Table result_table(const ReactionView& view);
+/// "As run, from 80 °C to 120 °C".
+std::string run_words(const balance::Ledger& ledger);
+/// From the figure taken, at 25 °C, through a line for each species to the figure as run; they add up.
+Table run_table(const ReactionView& view);
+/// Blanks for a measured heat of the reaction.
+Table measured_table(const ReactionView& view);
 /// Each route with its figure and ±, or the reason why it has none.
 Table routes_table(const ReactionView& view);
 

@@ -1,5 +1,8 @@
 // The figures that go on from a reaction: the one taken, what it is per mole and per kilogram, and every
 // route.
+#include <algorithm>
+#include <cmath>
+
 #include "core/base/number_text.hpp"
 #include "core/page/cells.hpp"
 #include "core/page/figures.hpp"
@@ -7,6 +10,49 @@
 
 namespace heatledger::page {
 namespace {
+
+std::string celsius(double kelvin) {
+  const double degrees = kelvin - 273.15;
+  return display_number(degrees, degrees == std::round(degrees) ? 0 : 1) + " \u00b0C";
+}
+
+/// Names of the species for which `take` holds: "nitrobenzene, H₂".
+template <typename Take>
+std::string names_where(const balance::Ledger& ledger, Take take) {
+  std::string names;
+  for (std::size_t i = 0; i < ledger.reaction->species.size(); ++i) {
+    if (!take(i)) continue;
+    const std::string name = balance::display_species(ledger.reaction->species[i]);
+    if ((", " + names + ",").find(", " + name + ",") != std::string::npos) continue;
+    names += (names.empty() ? "" : ", ") + name;
+  }
+  return names;
+}
+
+/// What a route rests on, in a few words.
+std::string route_remark(const balance::Ledger& ledger, const balance::Route& route, bool pinned) {
+  if (!route.as_written) return route.why_not;
+  std::string text = route.name == ledger.taken ? (pinned ? "taken, pinned" : "taken") : "";
+  const auto add = [&](const std::string& words) { text += (text.empty() ? "" : "; ") + words; };
+  if (route.name == balance::kFormationRoute) {
+    const auto estimated = [&](std::size_t i) {
+      return std::find(route.estimated.begin(), route.estimated.end(), i) != route.estimated.end();
+    };
+    const std::string context = names_where(ledger, estimated);
+    const std::string tables = names_where(ledger, [&](std::size_t i) { return !estimated(i); });
+    if (context.empty()) {
+      add("every species from tables");
+    } else {
+      if (!tables.empty()) add("tables: " + tables);
+      add("in context: " + context);
+    }
+  }
+  if (ledger.observations != nullptr &&
+      (route.name == balance::kContextRoute ||
+       (route.name == balance::kFormationRoute && !route.estimated.empty())))
+    add("sharpened by what was measured");
+  return text;
+}
 
 class ResultTable {
  public:
@@ -32,8 +78,12 @@ class ResultTable {
     }
     const uncertainty::Quantity& figure = *route->as_written;
     add("taken",
-        "Taken here, by " + route_words(route->name) + (view_.sheet.pinned_route.empty() ? "" : ", pinned"),
+        "Taken here, by " + route_words(route->name) +
+            (view_.sheet.pinned_route == route->name ? ", pinned" : ""),
         figure.scaled(ledger_.basis.factor), ledger_.basis.unit);
+    if (ledger_.as_run) {
+      add("as_run", run_words(ledger_), ledger_.as_run->scaled(ledger_.basis.factor), ledger_.basis.unit);
+    }
     add_per_kilogram(figure);
     return std::move(table_);
   }
@@ -81,6 +131,88 @@ class ResultTable {
 
 }  // namespace
 
+std::string run_words(const balance::Ledger& ledger) {
+  const auto at = [](const std::optional<double>& kelvin) {
+    return kelvin ? celsius(*kelvin) : "25 \u00b0C";
+  };
+  const std::string in = at(ledger.reactants_at), out = at(ledger.products_at);
+  return in == out ? "As run, at " + in : "As run, from " + in + " to " + out;
+}
+
+Table run_table(const ReactionView& view) {
+  const balance::Ledger& ledger = *view.result.ledger;
+  const std::string& id = view.sheet.id;
+  const balance::Route* route = balance::find_route(ledger, ledger.taken);
+  const std::optional<uncertainty::Quantity> taken = route != nullptr ? route->as_written : std::nullopt;
+  const double factor = ledger.basis.factor;
+  const PrintedSum sum = printed_sum(taken, ledger.to_temperature, ledger.as_run, factor);
+  Table table;
+  table.id = id + ".run";
+  table.columns = {column("what", ""), column("value", ledger.basis.unit, Align::Right),
+                   column("u95", "\u00b1", Align::Right), column("source", "")};
+  const auto add = [&](const std::string& row_name, RowRole role, const std::string& what,
+                       const std::optional<uncertainty::Quantity>& value,
+                       const std::optional<double>& rounded, const std::string& remark) {
+    Row row = row_of(row_name, role);
+    const bool result = role == RowRole::Result;
+    row.cells.push_back(label_cell(what, result ? Tone::Strong : Tone::Plain));
+    if (value) {
+      const uncertainty::Quantity scaled = value->scaled(factor);
+      const int decimals = decimals_kj(scaled.u95()), shown = sum.decimals.value_or(decimals);
+      const double figure = rounded ? 1000 * *rounded : scaled.value();
+      row.cells.push_back(figure_cell(row_name, result ? kj(figure, shown) : signed_kj(figure, shown),
+                                      result ? Tone::Strong : Tone::Plain));
+      row.cells.push_back(figure_cell(row_name + ".u95", half_width_kj(scaled.u95(), decimals), Tone::Quiet));
+    } else {
+      Cell missing = figure_cell(row_name, "no value", Tone::Caution);
+      missing.kind = CellKind::Label;
+      row.cells.push_back(std::move(missing));
+      row.cells.push_back(label_cell(""));
+    }
+    row.cells.push_back(label_cell(remark, Tone::Quiet));
+    table.rows.push_back(std::move(row));
+  };
+  add(id + ".run.taken", RowRole::Result, "Taken, 25 \u00b0C", taken, std::nullopt,
+      taken ? "by " + route_words(ledger.taken) : "no route reaches a figure");
+  for (std::size_t i = 0; i < ledger.to_temperature.size(); ++i) {
+    const balance::Correction& line = ledger.to_temperature[i];
+    add(id + ".run." + std::to_string(i), RowRole::Correction, line.what, line.value, sum.line(i),
+        line.value ? line.source : line.why_not);
+  }
+  add(id + ".as_run.line", RowRole::Result, run_words(ledger), ledger.as_run, std::nullopt,
+      ledger.as_run ? "" : "a line above has no value");
+  return table;
+}
+
+Table measured_table(const ReactionView& view) {
+  const std::string id = view.sheet.id + ".measured";
+  const document::TypedHeat& heat = view.sheet.measured;
+  Table table;
+  table.id = id;
+  table.look = TableLook::Form;
+  table.columns = {column("name", ""), column("value", ""), column("name_2", ""), column("value_2", "")};
+  const auto add = [&](const char* row_name, const char* name, Cell first, const char* name_2, Cell second) {
+    Row row = row_of(id + row_name);
+    row.cells = {label_cell(name, Tone::Quiet), std::move(first), label_cell(name_2, Tone::Quiet),
+                 std::move(second)};
+    table.rows.push_back(std::move(row));
+  };
+  Cell value = typed_cell(id + ".value", heat.value, "\u2212545 \u00b1 8 kJ/mol", CellKind::Number);
+  for (const Error& error : view.result.option_errors) {
+    if (error.where.compare(0, 14, "measured.value") == 0) value.tone = Tone::Caution;
+  }
+  add(".row.1", "Measured heat", std::move(value), "per mole of",
+      typed_cell(id + ".per", heat.per, "the coefficients written"));
+  add(".row.2", "at", typed_cell(id + ".at", heat.at, "25 degC"), "in",
+      typed_cell(id + ".medium", heat.medium, "solvent, phase, vessel"));
+  Cell includes =
+      typed_cell(id + ".includes", heat.includes.empty() ? "unknown" : heat.includes, "", CellKind::Choice);
+  includes.choices = {"yes", "no", "unknown"};
+  add(".row.3", "Mixing, dilution, evaporation, gas loss in it", std::move(includes), "by",
+      typed_cell(id + ".source", heat.source, "who, with what, when"));
+  return table;
+}
+
 Table result_table(const ReactionView& view) {
   return ResultTable(view).build();
 }
@@ -116,7 +248,8 @@ Table routes_table(const ReactionView& view) {
     };
     add("gas_298", route.gas_298);
     add("as_written", route.as_written);
-    row.cells.push_back(label_cell(taken ? "taken" : route.why_not, Tone::Quiet));
+    row.cells.push_back(
+        label_cell(route_remark(ledger, route, view.sheet.pinned_route == route.name), Tone::Quiet));
     table.rows.push_back(std::move(row));
   }
   return table;

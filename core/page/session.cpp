@@ -1,6 +1,7 @@
 #include "core/page/session.hpp"
 
 #include "core/facts/library.hpp"
+#include "core/file/site_table.hpp"
 #include "core/file/worksheet_file.hpp"
 #include "core/page/digest.hpp"
 #include "core/page/edits.hpp"
@@ -126,14 +127,14 @@ struct Session::State {
     const std::optional<std::size_t> row = id_index(parts[2]);
     if (reaction == sheet().reactions.size() || !row) return false;
     const balance::Ledger* ledger = results.reactions[reaction]->shown();
-    return ledger != nullptr && *row < ledger->rows.size() && !ledger->rows[*row].lines.empty();
+    return ledger != nullptr && *row < ledger->rows.size() && ledger->rows[*row].unfolds();
   }
 
   void unfold_all() {
     for (std::size_t i = 0; i < sheet().reactions.size(); ++i) {
       const balance::Ledger* ledger = results.reactions[i]->shown();
       for (std::size_t row = 0; ledger != nullptr && row < ledger->rows.size(); ++row) {
-        if (!ledger->rows[row].lines.empty()) open_rows.insert(row_id(*sheet().reactions[i], row));
+        if (ledger->rows[row].unfolds()) open_rows.insert(row_id(*sheet().reactions[i], row));
       }
     }
   }
@@ -166,6 +167,10 @@ Session& Session::operator=(Session&&) noexcept = default;
 
 Status Session::open(std::string_view file_text) {
   Result<file::Opened> opened = file::read_worksheet(file_text);
+  if (!opened && file::looks_like_site_table(file_text)) {
+    return Error{"file.is_site_table", "This file is a site table, not a worksheet.", "format",
+                 "Its rows are copied into the sheet that is open (import_site_table)."};
+  }
   if (!opened) return opened.error();
   if (opened->sheet.reactions.empty()) opened->sheet.reactions = document::empty_worksheet().reactions;
   auto next = std::make_unique<State>(std::move(opened->sheet));
@@ -195,7 +200,8 @@ Status Session::edit(std::string_view cell, std::string_view text) {
   if (state_->can_unfold(cell)) return state_->fold(std::string(cell), std::string(text));
   Result<Edited> edited = apply_edit(state_->sheet(), state_->results, cell, text);
   if (!edited) {
-    if (edited.error().code != "edit.coefficient") return edited.error();
+    if (edited.error().code != "edit.coefficient" && edited.error().code != "edit.half_width")
+      return edited.error();
     state_->rejected[std::string(cell)] = RejectedText{std::string(text), edited.error()};
     state_->stale = true;
     return success();
@@ -274,7 +280,8 @@ std::vector<Session::Suggestion> Session::suggest(std::string_view text, std::si
   // Several synonyms of one compound are one suggestion: its name goes in, the synonym that matched stands
   // beside it.
   std::set<const facts::Compound*> seen;
-  for (const facts::Library::Completion& found : facts::Library::embedded().complete(name, 4 * limit)) {
+  for (const facts::Library::Completion& found :
+       state_->results.library->library().complete(name, 4 * limit)) {
     if (list.size() == limit) break;
     if (!seen.insert(found.compound).second) continue;
     Suggestion suggestion;

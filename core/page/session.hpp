@@ -21,7 +21,7 @@ class Session {
   Session& operator=(Session&&) noexcept;
 
   /// Replaces the sheet by the file's; on error the present sheet stays.
-  /// @errors file.*
+  /// @errors file.*; file.is_site_table: its rows are copied in by the command import_site_table instead
   Status open(std::string_view file_text);
   std::string save();             ///< file text; marks the sheet as saved
   std::string file_text() const;  ///< the same without the mark: for recovery copies

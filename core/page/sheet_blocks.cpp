@@ -1,6 +1,8 @@
 #include "core/page/sheet_blocks.hpp"
 
+#include "core/base/number_text.hpp"
 #include "core/page/cells.hpp"
+#include "core/units/display.hpp"
 
 namespace heatledger::page {
 namespace {
@@ -27,6 +29,52 @@ Table lines_table(const std::string& id, const std::string& stem, const document
     table.rows.push_back(std::move(row));
   }
   return table;
+}
+
+/// Errors of one list of typed entries, each tied to its cell.
+void add_error_notes(const std::string& list, const std::vector<Error>& errors, std::vector<Block>& blocks) {
+  static const document::Worksheet no_reactions;
+  std::size_t shown = 0;
+  for (const Error& error : errors) {
+    if (error.where.compare(0, list.size() + 1, list + "[") != 0) continue;
+    std::string text = error.message;
+    if (!error.hint.empty()) text += " " + error.hint;
+    blocks.push_back(note_block(list + ".error." + std::to_string(shown++), NoteKind::Error, text,
+                                {cell_of_path(error.where, no_reactions)}));
+  }
+}
+
+/// The row's figure, or any: a figure without a name covers nothing.
+const document::FigureName* name_or_first(const document::FigureName* name) {
+  return name != nullptr ? name : &document::typed_figure_names().front();
+}
+
+/// [SI] in the unit that the tables print.
+std::string published_text(const facts::Datum& datum, const document::FigureName& name) {
+  if (!name.kind) return {};
+  for (const facts::FigureColumn& of : facts::kFigureColumns) {
+    if (of.kind != *name.kind) continue;
+    const double u95 = datum.u95 / of.scale;
+    const int decimals = units::decimals_for(u95, 2);
+    std::string text = display_number(datum.value / of.scale, decimals);
+    if (u95 > 0) text += " \u00b1 " + display_number(u95, decimals);
+    return text + " " + std::string(of.unit);
+  }
+  return {};
+}
+
+/// What the typed figure covers: the published one with its source, or nothing.
+Cell replaced_cell(const std::string& id, const document::FigureName& name, const document::ReadFigure& read,
+                   const document::TypedFigure& entry) {
+  if (read.published) {
+    Cell cell =
+        figure_cell(id + ".published", published_text(*read.published, name), Tone::Quiet, Origin::Published);
+    cell.hint = std::string(read.published->source);
+    return cell;
+  }
+  std::string text = read.new_species ? "new species" : read.value ? "nothing published" : "";
+  if (!entry.from.empty()) text += (text.empty() ? "" : "; ") + ("site table " + entry.from);
+  return label_cell(text, Tone::Quiet);
 }
 
 }  // namespace
@@ -86,20 +134,93 @@ std::vector<Block> typed_bond_blocks(const document::TypedBonds& bonds, const st
     table.rows.push_back(std::move(row));
   }
   blocks.push_back(std::move(table));
-  for (std::size_t i = 0; i < errors.size(); ++i) {
-    // "bonds[2].value, offset 3" belongs to the cell "bond.2.value".
-    const std::string& where = errors[i].where;
-    const std::size_t open = where.find('['), close = where.find(']');
-    std::vector<std::string> cells;
-    if (open != std::string::npos && close != std::string::npos) {
-      const std::string field = where.compare(close + 2, 4, "bond") == 0 ? ".bond" : ".value";
-      cells.push_back("bond." + where.substr(open + 1, close - open - 1) + field);
-    }
-    std::string text = errors[i].message;
-    if (!errors[i].hint.empty()) text += " " + errors[i].hint;
-    blocks.push_back(note_block("bonds.error." + std::to_string(i), NoteKind::Error, text, cells));
-  }
+  add_error_notes("bonds", errors, blocks);
   return blocks;
+}
+
+std::vector<Block> typed_species_blocks(const document::TypedFigures& figures,
+                                        const document::SheetLibrary& library) {
+  std::vector<Block> blocks;
+  blocks.push_back(heading_block("species.heading", "Species of this sheet",
+                                 "figures typed here go before published ones; a new name is a new species"));
+  Table table;
+  table.id = "species";
+  table.columns = {
+      column("species", "Species", Align::Left, 0.17),  column("figure", "Figure", Align::Left, 0.2),
+      column("value", "Value", Align::Right, 0.18),     column("source", "Source"),
+      column("published", "In place of", Align::Right), column("remove", "")};
+  std::vector<std::string> choices;
+  for (const document::FigureName& name : document::typed_figure_names()) choices.emplace_back(name.words);
+  for (std::size_t i = 0; i <= figures.size(); ++i) {
+    const std::string id = "fact." + std::to_string(i);
+    const bool last = i == figures.size();
+    const document::TypedFigure entry = last ? document::TypedFigure() : figures[i];
+    const document::FigureName* name = document::find_typed_figure(entry.figure);
+    Row row = row_of(id + ".row");
+    Cell what = typed_cell(id + ".figure", name != nullptr ? std::string(name->words) : entry.figure,
+                           last ? "" : "which figure", CellKind::Choice);
+    what.choices = choices;
+    row.cells = {
+        typed_cell(id + ".species", entry.species, last ? "name, formula or code" : "species"),
+        std::move(what),
+        typed_cell(id + ".value", entry.value,
+                   name != nullptr && !name->unit.empty() ? "figure \u00b1, " + std::string(name->unit) : "",
+                   CellKind::Number),
+        typed_cell(id + ".source", entry.source, last ? "" : "where it comes from"),
+        last ? label_cell("") : replaced_cell(id, *name_or_first(name), library.figures()[i], entry),
+        last ? label_cell("") : button_cell(id + ".remove", "Remove")};
+    for (const Error& error : library.errors()) {
+      const std::string path = "species[" + std::to_string(i) + "].";
+      if (error.where.compare(0, path.size(), path) != 0) continue;
+      const char first = error.where[path.size()];
+      row.cells[first == 's' ? 0 : first == 'f' ? 1 : 2].tone = Tone::Caution;
+    }
+    table.rows.push_back(std::move(row));
+  }
+  blocks.push_back(std::move(table));
+  add_error_notes("species", library.errors(), blocks);
+  return blocks;
+}
+
+std::vector<Block> exact_blocks(const std::vector<std::string>& exact, const document::Worksheet& sheet,
+                                const Error* rejected) {
+  if (exact.empty()) return {};
+  std::vector<std::string> cells;
+  for (const std::string& path : exact) cells.push_back(cell_of_path(path, sheet));
+  const bool one = exact.size() == 1;
+  std::string text = std::to_string(exact.size()) +
+                     (one ? " typed figure has no \u00b1 and is taken as exact."
+                          : " typed figures have no \u00b1 and are taken as exact.") +
+                     " Type it behind the figure (340 \u00b1 8 kJ/mol), or give " +
+                     (one ? "it" : "all of them") + " one here.";
+  Table table;
+  table.id = "exact.form";
+  table.look = TableLook::Form;
+  table.columns = {column("name", ""), column("value", "")};
+  Row row = row_of("exact.row");
+  row.screen_only = true;
+  row.cells = {label_cell("\u00b1 of typed figures without one", Tone::Quiet),
+               typed_cell("exact.u95", "", "3 %")};
+  table.rows.push_back(std::move(row));
+  std::vector<Block> blocks{note_block("exact.note", NoteKind::Caution, text, std::move(cells)),
+                            std::move(table)};
+  if (rejected != nullptr)
+    blocks.push_back(note_block("exact.rejected", NoteKind::Error, rejected->message + " " + rejected->hint,
+                                {"exact.u95"}));
+  return blocks;
+}
+
+std::string cell_of_path(const std::string& path, const document::Worksheet& sheet) {
+  const std::size_t open = path.find('['), close = path.find("].");
+  if (open == std::string::npos || close == std::string::npos) return {};
+  const std::string list = path.substr(0, open), index = path.substr(open + 1, close - open - 1);
+  const std::string field = path.substr(close + 2, path.find(',') - close - 2);
+  if (list == "bonds") return "bond." + index + "." + field;
+  if (list == "species") return "fact." + index + "." + field;
+  std::size_t at = 0;
+  for (const char c : index) at = c >= '0' && c <= '9' ? 10 * at + static_cast<std::size_t>(c - '0') : at;
+  return list == "reactions" && at < sheet.reactions.size() ? sheet.reactions[at]->id + "." + field
+                                                            : std::string();
 }
 
 std::vector<Block> assumption_blocks(const document::Lines& assumptions) {
@@ -121,9 +242,13 @@ std::vector<Block> convention_blocks() {
       "cancels. Not "
       "covered: reactions that are not listed, decomposition, mixing that is not listed, human error.",
       "An average bond enthalpy is a mean over many molecules; a single molecule can lie well away from it.",
-      "A typed value without \u00b1 counts as exact.",
-      "Figures are added before they are rounded for print, so that a printed sum may differ by one in its "
-      "last digit.",
+      "A typed value without \u00b1 counts as exact; the sheet counts them.",
+      "Corrections and the lines of a row in context are printed so that they add up to the last digit "
+      "shown. "
+      "Other figures are added before they are rounded, so that a printed sum may differ by one in its last "
+      "digit.",
+      "Gases are taken as ideal. A measured heat goes before every other route, then formation enthalpies "
+      "species by species, then bonds in context, then average bonds, unless another route is pinned.",
       "Figures for drafting: what can hurt someone is measured, and local codes and licensed practice "
       "govern."};
   Table table;

@@ -3,6 +3,7 @@
 
 #include "core/page/edits.hpp"
 #include "core/page/figures.hpp"
+#include "core/page/site_import.hpp"
 
 namespace heatledger::page {
 namespace {
@@ -98,6 +99,29 @@ Result<Edited> remove_bond(const Worksheet& sheet, const Arguments& arguments) {
   return edited;
 }
 
+Result<Edited> add_figure(const Worksheet& sheet, const Arguments& arguments) {
+  document::TypedFigure figure;
+  figure.species = argument(arguments, "species");
+  const document::FigureName* name = document::find_typed_figure(argument(arguments, "figure"));
+  figure.figure = name != nullptr ? std::string(name->id) : argument(arguments, "figure");
+  figure.value = argument(arguments, "value");
+  figure.source = argument(arguments, "source");
+  if (figure.species.empty()) return bad_argument("species", "A figure belongs to a species.");
+  Edited edited{sheet, "add figure of species"};
+  edited.sheet.typed_figures.change().push_back(std::move(figure));
+  return edited;
+}
+
+Result<Edited> remove_figure(const Worksheet& sheet, const Arguments& arguments) {
+  const std::optional<std::size_t> index = id_index(argument(arguments, "figure"));
+  if (!index || *index >= sheet.typed_figures->size())
+    return bad_argument("figure", "The sheet has no such figure of a species.");
+  Edited edited{sheet, "remove figure of species"};
+  document::TypedFigures& figures = edited.sheet.typed_figures.change();
+  figures.erase(figures.begin() + static_cast<std::ptrdiff_t>(*index));
+  return edited;
+}
+
 Result<Edited> show(const Worksheet& sheet, std::size_t index, bool document::ReactionSheet::*flag,
                     const std::string& state) {
   Edited edited{sheet, "change what is shown"};
@@ -115,8 +139,13 @@ Result<Edited> apply_command(const Worksheet& sheet, const document::Results& re
   if (name == "add_reaction") return add_reaction(sheet, arguments);
   if (name == "add_bond") return add_bond(sheet, arguments);
   if (name == "remove_bond") return remove_bond(sheet, arguments);
+  if (name == "add_figure") return add_figure(sheet, arguments);
+  if (name == "remove_figure") return remove_figure(sheet, arguments);
+  if (name == "import_site_table") {
+    return import_site_table(sheet, argument(arguments, "text"), argument(arguments, "rows") == "all");
+  }
   const bool of_reaction = name == "remove_reaction" || name == "move_reaction" || name == "take_proposal" ||
-                           name == "show_profile" || name == "show_checker";
+                           name == "show_profile" || name == "show_checker" || name == "show_measured";
   if (!of_reaction) {
     return Error{"command.unknown", "There is no command \"" + std::string(name.substr(0, 80)) + "\".",
                  "name", "The commands stand in core/page/README.md."};
@@ -127,8 +156,9 @@ Result<Edited> apply_command(const Worksheet& sheet, const document::Results& re
   if (name == "move_reaction") return move_reaction(sheet, *index, argument(arguments, "direction"));
   if (name == "take_proposal") return take_proposal(sheet, results, *index, argument(arguments, "proposal"));
   return show(sheet, *index,
-              name == "show_profile" ? &document::ReactionSheet::show_profile
-                                     : &document::ReactionSheet::show_checker,
+              name == "show_profile"   ? &document::ReactionSheet::show_profile
+              : name == "show_checker" ? &document::ReactionSheet::show_checker
+                                       : &document::ReactionSheet::show_measured,
               argument(arguments, "state"));
 }
 

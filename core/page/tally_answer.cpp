@@ -2,7 +2,10 @@
 #include <utility>
 
 #include "core/balance/ledger.hpp"
+#include "core/document/computation.hpp"
+#include "core/document/typed_bonds.hpp"
 #include "core/estimate/bond_set.hpp"
+#include "core/file/site_table.hpp"
 #include "core/page/answer_text.hpp"
 #include "core/page/answers.hpp"
 #include "core/page/tally_figures.hpp"
@@ -95,6 +98,33 @@ void write_bond(JsonText& json, const balance::BondLine& line, const molecule::B
   json.close_object();
 }
 
+/// A line of a row in context: bonds of one kind in one kind of surroundings, or what stands on no bond.
+void write_context_line(JsonText& json, const estimate::ContextLine& line) {
+  json.open_object();
+  if (line.bond.empty()) {
+    json.key("bond").null();
+  } else {
+    json.key("bond").string(line.bond);
+  }
+  json.key("label").string(line.text);
+  json.key("count").number(line.count);
+  json.key("base").number(line.base / 1000).key("surroundings").number(line.surroundings / 1000);
+  json.key("subtotal").number(line.total / 1000);
+  if (line.unseen > 0) json.key("unseen").boolean(true);
+  json.close_object();
+}
+
+/// The compounds of the table that an estimate rests on, greatest weight first.
+void write_carriers(JsonText& json, const estimate::Explanation& explanation) {
+  json.key("carried_by").open_array();
+  for (const estimate::ReferenceRow& row : explanation.rows) {
+    json.open_object().key("name").string(row.name).key("smiles").string(row.smiles);
+    json.key("value").number(row.value / 1000).key("u95").number(row.u95 / 1000);
+    json.key("weight").number(row.weight).key("source").string(row.sources).close_object();
+  }
+  json.close_array();
+}
+
 void write_row(JsonText& json, const balance::Ledger& ledger, const balance::LedgerRow& row) {
   const balance::ReactionSpecies& entry = ledger.reaction->species[row.species];
   json.open_object();
@@ -128,7 +158,11 @@ void write_row(JsonText& json, const balance::Ledger& ledger, const balance::Led
     write_bond(json, line, line.type, line.count, line.price);
     if (line.second) write_bond(json, line, line.second->type, line.second->count, line.second->price);
   }
+  if (row.context != nullptr) {
+    for (const estimate::ContextLine& line : row.context->lines) write_context_line(json, line);
+  }
   json.close_array();
+  if (row.context != nullptr) write_carriers(json, *row.context);
   if (!row.remark.empty()) json.key("remark").string(row.remark);
   json.close_object();
 }
@@ -193,16 +227,13 @@ std::string context_reason(const balance::Ledger& ledger) {
 std::string ledger_json(const balance::Ledger& ledger, BondRoute by) {
   const balance::Reaction& reaction = *ledger.reaction;
   const bool context = by == BondRoute::Context;
-  const TallyFigures figures = context ? in_context(tally_figures(ledger)) : tally_figures(ledger);
+  const TallyFigures figures = tally_figures(ledger);
   std::string text;
   JsonText json(text);
   json.open_object();
   json.key("balanced").boolean(reaction.balance.balanced);
   json.key("equation").string(balance::plain_equation(reaction));
   write_columns(json, figures);
-  if (context)
-    json.key("columns_reason")
-        .string("bonds in context are given as a whole; the columns belong to the average set");
   json.key("gas_298");
   write_kilojoules(json, figures.gas_298, context ? context_reason(ledger) : columns_reason(ledger));
   write_lines(json, "corrections", ledger.corrections);
@@ -221,7 +252,7 @@ std::string ledger_json(const balance::Ledger& ledger, BondRoute by) {
   }
   if (!figures.context) json.key("context").string(context_reason(ledger));
   json.close_object();
-  json.key("bond_set").string(ledger.set->title());
+  json.key("bond_set").string(context ? "bonds in context" : ledger.set->title());
   json.key("rows").open_array();
   for (const balance::LedgerRow& row : ledger.rows) write_row(json, ledger, row);
   json.close_array();
@@ -257,8 +288,17 @@ std::string unbalanced_json(const balance::Reaction& reaction, const Error& erro
 
 Result<Answer> answer_tally(const TallyQuestion& question, AnswerShape shape,
                             balance::SpeciesSource& source) {
-  QuotedSpecies quoted(source);
-  balance::SpeciesSource& reader = question.smiles ? static_cast<balance::SpeciesSource&>(quoted) : source;
+  std::unique_ptr<document::SheetLibrary> site;
+  document::TypedBonds site_bonds;
+  if (!question.site_table.empty()) {
+    Result<file::SiteTable> table = file::read_site_table(question.site_table);
+    if (!table.ok()) return table.error();
+    site = std::make_unique<document::SheetLibrary>(table->figures);
+    site_bonds = std::move(table->bonds);
+  }
+  balance::SpeciesSource& known = site != nullptr ? static_cast<balance::SpeciesSource&>(*site) : source;
+  QuotedSpecies quoted(known);
+  balance::SpeciesSource& reader = question.smiles ? static_cast<balance::SpeciesSource&>(quoted) : known;
   Result<balance::Reaction> read = balance::read_reaction(question.equation, reader);
   if (!read.ok()) return read.error();
   const auto reaction = std::make_shared<const balance::Reaction>(std::move(read.value()));
@@ -267,10 +307,12 @@ Result<Answer> answer_tally(const TallyQuestion& question, AnswerShape shape,
       question.set.empty() ? std::string_view(estimate::BondSet::names().front()) : question.set;
   Result<estimate::BondSet> set = estimate::BondSet::published(set_name);
   if (!set.ok()) return set.error();
+  for (const estimate::BondValue& value : document::read_typed_bonds(site_bonds).values) set->lay_over(value);
   balance::LedgerOptions options;
   options.set = std::make_shared<const estimate::BondSet>(std::move(set.value()));
   options.basis = std::string(question.basis);
   options.context = balance::ContextUse::Always;
+  options.context_rows = question.route == BondRoute::Context;
   const auto read_temperature = [](std::string_view typed, std::string_view name,
                                    std::optional<double>& kelvin) -> Status {
     if (typed.empty()) return success();

@@ -52,6 +52,8 @@ TallyFigures tally_figures(const balance::QuickAnswer& answer) {
   figures.as_written = figures.average = answer.as_written;
   figures.formation = answer.formation;
   figures.context = answer.context;
+  figures.context_broken = answer.context_broken;
+  figures.context_formed = answer.context_formed;
   figures.context_gas_298 = answer.context_gas_298;
   figures.taken_route = answer.taken;
   figures.taken = answer.taken == balance::kFormationRoute ? answer.formation
@@ -61,8 +63,8 @@ TallyFigures tally_figures(const balance::QuickAnswer& answer) {
 }
 
 TallyFigures in_context(TallyFigures figures) {
-  figures.broken.reset();
-  figures.formed.reset();
+  figures.broken = figures.context_broken;
+  figures.formed = figures.context_formed;
   figures.gas_298 = figures.context_gas_298;
   figures.as_written = figures.context;
   return figures;

@@ -19,7 +19,8 @@ using MaybeFigure = std::optional<uncertainty::Figure>;
 struct TallyFigures {
   MaybeFigure broken, formed, gas_298, as_written;
   MaybeFigure average, context, formation, measured;  ///< as written, 25 °C, by each route
-  MaybeFigure context_gas_298;                        ///< gas, 25 °C, by bonds in context
+  MaybeFigure context_broken, context_formed;  ///< the two columns by bonds in context, of a short answer
+  MaybeFigure context_gas_298;                 ///< gas, 25 °C, by bonds in context
   MaybeFigure taken;
   std::string_view taken_route;
 };
@@ -27,8 +28,7 @@ struct TallyFigures {
 /// @param ledger  must outlive the figures
 TallyFigures tally_figures(const balance::Ledger& ledger);
 TallyFigures tally_figures(const balance::QuickAnswer& answer);
-/// The same with bonds in context in charge: gas_298 and as_written are that route's, and the two columns,
-/// which belong to the average set, are empty.
+/// A short answer with bonds in context in charge: the columns, gas_298 and as_written are that route's.
 TallyFigures in_context(TallyFigures figures);
 
 /// {"value","u95"} in kJ, or null.

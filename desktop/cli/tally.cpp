@@ -11,7 +11,7 @@ namespace heatledger::cli {
 namespace {
 
 struct Options {
-  std::string equation, set = "average", table, basis, reactants_at, products_at;
+  std::string equation, set = "average", table, basis, reactants_at, products_at, site;
   bool json = false, smiles = false;
 };
 
@@ -30,6 +30,13 @@ int run(const Options& options) {
   question.basis = options.basis;
   question.reactants_at = options.reactants_at;
   question.products_at = options.products_at;
+  std::string site;
+  if (!options.site.empty()) {
+    Result<std::string> text = read_file(options.site);
+    if (!text.ok()) return fail(text.error());
+    site = std::move(text).value();
+    question.site_table = site;
+  }
   balance::CachedSpecies source;
   const Result<page::Answer> answer =
       page::answer_tally(question, options.json ? page::AnswerShape::Json : page::AnswerShape::Text, source);
@@ -64,6 +71,10 @@ void add_tally(CLI::App& app, Chosen& chosen) {
                    "Temperature of what goes in, \"80 degC\"; 25 degC if not given")
       ->type_name("T");
   command->add_option("--products-at", options->products_at, "Temperature of what comes out")->type_name("T");
+  command
+      ->add_option("--site", options->site,
+                   "Site table whose species and bond values go before published ones")
+      ->type_name("FILE");
   command->add_flag("--smiles", options->smiles, "Every species is SMILES, as if in double quotes");
   command->add_flag("--json", options->json, "One JSON object: kJ for the written coefficients");
   command->callback([options, &chosen] { chosen = [options] { return run(*options); }; });

@@ -17,7 +17,7 @@ namespace heatledger::cli {
 namespace {
 
 struct Options {
-  std::string sheet, html, csv, svg;
+  std::string sheet, html, csv, svg, site;
   bool json = false;
 };
 
@@ -60,6 +60,15 @@ int run(const Options& options) {
     Error error = opened.error();
     error.where = error.where.empty() ? options.sheet : options.sheet + ", " + error.where;
     return fail(error);
+  }
+  if (!options.site.empty()) {
+    const Result<std::string> table = read_file(options.site);
+    if (!table.ok()) return fail(table.error());
+    if (const Status copied = session.command("import_site_table", {{"text", *table}}); !copied.ok()) {
+      Error error = copied.error();
+      error.where = options.site + ", " + error.where;
+      return fail(error);
+    }
   }
   const page::Page& shown = session.page();
   std::vector<std::string> written;
@@ -108,6 +117,10 @@ void add_work(CLI::App& app, Chosen& chosen) {
   command->add_option("--html", options->html, "Write a report that prints as it stands")->type_name("OUT");
   command->add_option("--csv", options->csv, "Write every table as comma-separated values")->type_name("OUT");
   command->add_option("--svg", options->svg, "Write every drawing into this folder")->type_name("DIR");
+  command
+      ->add_option("--site", options->site,
+                   "Copy the rows of this site table that the sheet uses, before computing")
+      ->type_name("FILE");
   command->add_flag("--json", options->json, "Print the page as JSON");
   command->callback([options, &chosen] { chosen = [options] { return run(*options); }; });
 }

@@ -240,7 +240,17 @@ bool App::save_or_ask() {
 void App::load(const std::string& path) {
   const Result<std::string> text = cli::read_file(path);
   if (!text.ok()) return say(text.error());
-  if (const Status opened = session_.open(*text); !opened.ok()) {
+  Status opened = session_.open(*text);
+  if (!opened.ok() && opened.error().code == "file.is_site_table") {
+    // Its rows go into the sheet that is open, which keeps its name and place.
+    opened = session_.command("import_site_table", {{"text", *text}});
+    if (opened.ok()) {
+      cancel_edit();
+      page_changed();
+      return say("Copied the rows of " + file_name(path) + " that this sheet uses.");
+    }
+  }
+  if (!opened.ok()) {
     Error error = opened.error();
     error.where = error.where.empty() ? file_name(path) : file_name(path) + ", " + error.where;
     return say(error);

@@ -137,7 +137,15 @@ TEST(Tally, ContextStatesItsOwnFigures) {
   const json answer = tally_json(kHydrogenation, {"--set", "context"});
   ASSERT_FALSE(answer["routes"]["context"].is_null());
   EXPECT_EQ(answer["as_written"]["value"], answer["routes"]["context"]["value"]);
-  EXPECT_TRUE(answer["broken"].is_null());
+  // The columns are those of the bonds in context, and every row shows its lines.
+  EXPECT_NEAR(answer["broken"].get<double>() - answer["formed"].get<double>(),
+              answer["gas_298"]["value"].get<double>(), 1e-4);  // ten digits of 6 000 kJ
+  for (const json& row : answer["rows"]) {
+    double lines = 0;
+    for (const json& line : row["bonds"]) lines += line["subtotal"].get<double>();
+    EXPECT_NEAR(lines, row["per_mole"]["value"].get<double>(), 1e-4) << row["species"];
+    EXPECT_TRUE(row.contains("carried_by"));
+  }
   // -552.6 kJ/mol from CRC formation enthalpies; the estimate's own 95 % interval must reach it.
   EXPECT_NEAR(answer["as_written"]["value"].get<double>(), -552.6, answer["as_written"]["u95"].get<double>());
 }

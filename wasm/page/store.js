@@ -88,6 +88,11 @@ export class Store {
    */
   open(file) {
     const answer = this.core.request({do: "open", text: file.text});
+    if (!answer.ok && answer.error.code === "file.is_site_table" && this.sheet !== null) {
+      // Its rows go into the sheet that is open, which keeps its name and place.
+      this.command("import_site_table", {text: file.text});
+      return false;
+    }
     if (!answer.ok) {
       this.showError({...answer.error, message: `${file.name} was not opened. ${answer.error.message}`});
       return false;

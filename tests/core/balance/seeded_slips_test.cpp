@@ -46,6 +46,8 @@ std::vector<Example> examples() {
   for (const std::string& name : test::list_source_folder("worksheets")) {
     if (name.find(".heatledger.json") == std::string::npos) continue;
     const std::string text = test::read_source_file("worksheets/" + name);
+    // A sheet with species of its own cannot be read without them, and that room stands above this one.
+    if (text.find("\"species\": [") != std::string::npos) continue;
     std::size_t found = 0;
     for (std::size_t at = text.find(key); at != std::string::npos; at = text.find(key, at)) {
       Example example;
