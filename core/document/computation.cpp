@@ -65,6 +65,7 @@ SetResult build_set(const std::string& id, const ReadBonds& overlay) {
 }  // namespace
 
 struct Calculator::Memory {
+  StepCalculator steps;
   std::map<std::string, Result<std::shared_ptr<const balance::Reaction>>> equations;
   std::map<LedgerKey, Remembered> ledgers;
   std::map<std::string, std::shared_ptr<const estimate::Measurement>> measurements;  ///< null: says nothing
@@ -243,6 +244,12 @@ Results Calculator::compute(const Worksheet& sheet) {
     results.reactions.push_back(entry.result);
   }
   memory.forget_old(sheet.reactions.size());
+  std::map<std::string, std::shared_ptr<const balance::Ledger>> ledgers;
+  for (std::size_t i = 0; i < sheet.reactions.size() && !sheet.steps.empty(); ++i) {
+    if (results.reactions[i]->ledger != nullptr)
+      ledgers[sheet.reactions[i]->id] = results.reactions[i]->ledger;
+  }
+  results.steps = memory.steps.compute(sheet.steps, memory.library, ledgers);
   return results;
 }
 

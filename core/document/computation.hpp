@@ -8,6 +8,7 @@
 
 #include "core/balance/ledger.hpp"
 #include "core/document/history.hpp"
+#include "core/document/step_computation.hpp"
 #include "core/document/typed_species.hpp"
 
 namespace heatledger::document {
@@ -31,6 +32,7 @@ struct ReactionResult {
 };
 
 struct Results {
+  std::vector<std::shared_ptr<const StepOutcome>> steps;         ///< one for each Worksheet::steps entry
   std::vector<std::shared_ptr<const ReactionResult>> reactions;  ///< one for each Worksheet::reactions entry
   std::vector<Error> errors;  ///< typed bonds that cannot be read, and the like; `where` is a field path
   std::shared_ptr<const SheetLibrary> library;  ///< species as this sheet knows them; never null

@@ -8,6 +8,7 @@
 #include <vector>
 
 #include "core/document/shared.hpp"
+#include "core/document/step_sheet.hpp"
 
 namespace heatledger::document {
 
@@ -94,6 +95,7 @@ using Misfits = std::vector<Misfit>;
 struct Worksheet {
   Shared<Header> header;
   std::vector<Shared<ReactionSheet>> reactions;
+  std::vector<Shared<StepSheet>> steps;
   Shared<TypedBonds> typed_bonds;
   Shared<TypedFigures> typed_figures;
   Shared<Lines> notes;        ///< free notes
@@ -110,5 +112,8 @@ Worksheet empty_worksheet();
 std::size_t find_reaction(const Worksheet& sheet, const std::string& id);
 /// "r1", "r2", …: the lowest id that no reaction has.
 std::string free_reaction_id(const Worksheet& sheet);
+/// The same for steps: "s1", "s2", …
+std::size_t find_step(const Worksheet& sheet, const std::string& id);
+std::string free_step_id(const Worksheet& sheet);
 
 }  // namespace heatledger::document

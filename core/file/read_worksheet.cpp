@@ -5,6 +5,7 @@
 #include "core/file/entries.hpp"
 #include "core/file/fields.hpp"
 #include "core/file/migration.hpp"
+#include "core/file/step_file.hpp"
 #include "core/file/worksheet_file.hpp"
 
 namespace heatledger::file {
@@ -25,9 +26,9 @@ document::Header read_header(const Json& object, std::vector<Error>& problems) {
   return header;
 }
 
-/// Ids become parts of cell ids: "r" and up to six digits, so that they meet no other word there.
-bool usable_id(const std::string& id) {
-  if (id.size() < 2 || id.size() > 7 || id[0] != 'r') return false;
+/// Ids become parts of cell ids: a letter and up to six digits, so that they meet no other word there.
+bool usable_id(const std::string& id, char letter) {
+  if (id.size() < 2 || id.size() > 7 || id[0] != letter) return false;
   return std::all_of(id.begin() + 1, id.end(), [](char c) { return c >= '0' && c <= '9'; });
 }
 
@@ -146,13 +147,23 @@ void settle_ids(document::Worksheet& sheet, std::vector<Error>& problems) {
   for (std::size_t i = 0; i < sheet.reactions.size(); ++i) {
     const std::string& id = sheet.reactions[i]->id;
     const bool taken = document::find_reaction(sheet, id) < i;
-    if (usable_id(id) && !taken) continue;
+    if (usable_id(id, 'r') && !taken) continue;
     if (!id.empty()) {
       problems.push_back({"file.reaction_id", "The reaction id \"" + id + "\" was replaced.",
                           "reactions[" + std::to_string(i) + "].id",
                           "An id is \"r\" with a number that no other reaction has."});
     }
     sheet.reactions[i].change().id = document::free_reaction_id(sheet);
+  }
+  for (std::size_t i = 0; i < sheet.steps.size(); ++i) {
+    const std::string& id = sheet.steps[i]->id;
+    if (usable_id(id, 's') && document::find_step(sheet, id) == i) continue;
+    if (!id.empty()) {
+      problems.push_back({"file.step_id", "The step id \"" + id + "\" was replaced.",
+                          "steps[" + std::to_string(i) + "].id",
+                          "An id is \"s\" with a number that no other step has."});
+    }
+    sheet.steps[i].change().id = document::free_step_id(sheet);
   }
 }
 
@@ -179,6 +190,11 @@ Result<Opened> read_worksheet(std::string_view text) {
     each_object(*reactions, "reactions", sheet, problems, [&](const Json& object, const std::string& path) {
       sheet.reactions.push_back(
           document::Shared<document::ReactionSheet>(read_reaction_sheet(object, path, problems)));
+    });
+  }
+  if (const Json* steps = fields.take("steps", Json::Kind::Array, "a list")) {
+    each_object(*steps, "steps", sheet, problems, [&](const Json& object, const std::string& path) {
+      sheet.steps.push_back(document::Shared<document::StepSheet>(read_step_sheet(object, path, problems)));
     });
   }
   if (const Json* bonds = fields.take("bonds", Json::Kind::Array, "a list")) {

@@ -1,6 +1,7 @@
 #include <algorithm>
 
 #include "core/file/json.hpp"
+#include "core/file/step_file.hpp"
 #include "core/file/worksheet_file.hpp"
 
 namespace heatledger::file {
@@ -156,6 +157,9 @@ std::string write_worksheet(const document::Worksheet& sheet, const SavedResults
   Json reactions = Json::array();
   for (const auto& reaction : sheet.reactions) reactions.items().push_back(reaction_json(*reaction));
   out.list("reactions", std::move(reactions), *sheet.misfits);
+  Json steps = Json::array();
+  for (const auto& step : sheet.steps) steps.items().push_back(step_json(*step));
+  out.list("steps", std::move(steps), *sheet.misfits);
   Json bonds = Json::array();
   for (const auto& bond : *sheet.typed_bonds) bonds.items().push_back(bond_json(bond));
   out.list("bonds", std::move(bonds), *sheet.misfits);

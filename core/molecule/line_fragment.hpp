@@ -45,8 +45,6 @@ LineFragment phenyl_piece();
 LineFragment phenylene_piece(int apart);
 LineFragment vinyl_piece();
 LineFragment nitro_piece();
-/// N=[N+]=[N-], bound by its first nitrogen.
-LineFragment azide_piece();
 LineFragment carboxyl_piece();
 /// @param kind  'n' straight, 'i' iso (3 or 4 carbons), 's' and 't' (4 carbons)
 LineFragment alkyl_piece(int carbons, char kind);

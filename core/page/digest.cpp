@@ -4,6 +4,7 @@
 #include <cstdint>
 
 #include "core/page/figures.hpp"
+#include "core/page/step_figures.hpp"
 
 namespace heatledger::page {
 namespace {
@@ -66,6 +67,21 @@ file::SavedResults results_to_save(const document::Worksheet& sheet, const docum
     if (!taken.empty())
       saved.figures[sheet.reactions[i]->id] = taken + ", by " + route_words(result.ledger->taken);
   }
+  for (std::size_t i = 0; i < sheet.steps.size(); ++i) {
+    const document::StepOutcome& outcome = *results.steps[i];
+    if (outcome.result == nullptr) {
+      digest.add(outcome.errors.empty() ? "empty" : outcome.errors.front().code);
+      continue;
+    }
+    for (const step::Answer& answer : outcome.result->answers) {
+      const ShownFigure shown = shown_answer(answer);
+      digest.add(answer.label + " " + shown.value + " " + shown.unit + " " + shown.u95);
+    }
+    const step::Answer& first = outcome.result->answers.front();
+    const ShownFigure shown = shown_answer(first);
+    saved.figures[sheet.steps[i]->id] =
+        first.label + " " + shown.value + (shown.u95.empty() ? "" : " " + shown.u95) + " " + shown.unit;
+  }
   saved.digest = digest.hex();
   return saved;
 }
@@ -81,6 +97,16 @@ std::vector<std::string> changed_figures(const document::Worksheet& sheet, const
     const std::string is = after == now.figures.end() ? "no value" : after->second;
     if (was == is) continue;
     sentences.push_back("Reaction " + std::to_string(i + 1) + " read " + was +
+                        " when this sheet was saved and reads " + is +
+                        " now: other tables or another version of the program stand behind it.");
+  }
+  for (std::size_t i = 0; i < sheet.steps.size(); ++i) {
+    const std::string& id = sheet.steps[i]->id;
+    const auto before = saved.figures.find(id), after = now.figures.find(id);
+    const std::string was = before == saved.figures.end() ? "no value" : before->second;
+    const std::string is = after == now.figures.end() ? "no value" : after->second;
+    if (was == is) continue;
+    sentences.push_back("Step " + std::to_string(i + 1) + " read " + was +
                         " when this sheet was saved and reads " + is +
                         " now: other tables or another version of the program stand behind it.");
   }

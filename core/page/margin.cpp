@@ -1,4 +1,5 @@
 #include "core/page/margin.hpp"
+#include "core/page/step_blocks.hpp"
 
 #include <algorithm>
 #include <cmath>
@@ -493,6 +494,10 @@ Result<Margin> make_margin(const document::Worksheet& sheet, const document::Res
   margin.value = cell.text;
   if (!cell.hint.empty()) margin.subject = cell.hint;
   const IdParts id = split_id(cell.id);
+  if (const std::size_t step = document::find_step(sheet, id[0]); step < sheet.steps.size()) {
+    if (std::optional<Margin> found = step_margin(*sheet.steps[step], *results.steps[step], cell.id))
+      return std::move(*found);
+  }
   const std::size_t index = document::find_reaction(sheet, id[0]);
   if (index < sheet.reactions.size() && id.size() >= 2) {
     const document::ReactionResult& result = *results.reactions[index];

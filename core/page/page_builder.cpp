@@ -2,6 +2,7 @@
 
 #include "core/page/cells.hpp"
 #include "core/page/sheet_blocks.hpp"
+#include "core/page/step_blocks.hpp"
 
 namespace heatledger::page {
 namespace {
@@ -111,6 +112,20 @@ const Page& PageBuilder::build(PageInput input) {
         });
   }
   add_section("+add", {}, "", add_reaction_blocks);
+  std::string reaction_ids, above;
+  for (const auto& reaction : sheet.reactions) reaction_ids += reaction->id + " ";
+  for (std::size_t i = 0; i < sheet.steps.size(); ++i) {
+    const document::StepSheet& step = *sheet.steps[i];
+    add_section(step.id, {sheet.steps[i].handle(), input.results->steps[i]},
+                std::to_string(i) + "/" + reaction_ids + "/" + above, [&] {
+                  StepView view{step, *input.results->steps[i], i + 1, {}, {}};
+                  for (const auto& reaction : sheet.reactions) view.reactions.push_back(reaction->id);
+                  for (std::size_t k = 0; k < i; ++k) view.steps_above.push_back(sheet.steps[k]->id);
+                  return step_blocks(view);
+                });
+    above += step.id + " ";
+  }
+  add_section("+add_step", {}, "", add_step_blocks);
   const auto half_width = input.rejected->find("exact.u95");
   const Error* rejected = half_width == input.rejected->end() ? nullptr : &half_width->second.error;
   add_section("+exact", {},
@@ -123,6 +138,7 @@ const Page& PageBuilder::build(PageInput input) {
   add_section("+assumptions", {sheet.assumptions.handle()}, "",
               [&] { return assumption_blocks(*sheet.assumptions); });
   add_section("+notes", {sheet.notes.handle()}, "", [&] { return note_blocks(*sheet.notes); });
+  if (!sheet.steps.empty()) add_section("+step_conventions", {}, "", step_convention_blocks);
   add_section("+conventions", {}, "", convention_blocks);
 
   page_.blocks = std::move(next_blocks_);

@@ -4,6 +4,7 @@
 #include "core/page/edits.hpp"
 #include "core/page/figures.hpp"
 #include "core/page/site_import.hpp"
+#include "core/page/step_edits.hpp"
 
 namespace heatledger::page {
 namespace {
@@ -137,6 +138,8 @@ Result<Edited> show(const Worksheet& sheet, std::size_t index, bool document::Re
 Result<Edited> apply_command(const Worksheet& sheet, const document::Results& results, std::string_view name,
                              const Arguments& arguments) {
   if (name == "add_reaction") return add_reaction(sheet, arguments);
+  if (name == "add_step" || name == "remove_step" || name == "move_step")
+    return step_command(sheet, name, arguments);
   if (name == "add_bond") return add_bond(sheet, arguments);
   if (name == "remove_bond") return remove_bond(sheet, arguments);
   if (name == "add_figure") return add_figure(sheet, arguments);

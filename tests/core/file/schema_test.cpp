@@ -10,10 +10,10 @@
 namespace heatledger::file {
 namespace {
 
-/// The two patterns of the schema, read by hand: ^r[0-9]{1,6}$ and ^[0-9a-f]{16}$.
+/// The patterns of the schema, read by hand: ^r[0-9]{1,6}$, the same with s, and ^[0-9a-f]{16}$.
 bool matches(const std::string& pattern, const std::string& text) {
-  if (pattern == "^r[0-9]{1,6}$") {
-    return text.size() >= 2 && text.size() <= 7 && text[0] == 'r' &&
+  if (pattern == "^r[0-9]{1,6}$" || pattern == "^s[0-9]{1,6}$") {
+    return text.size() >= 2 && text.size() <= 7 && text[0] == pattern[1] &&
            text.find_first_not_of("0123456789", 1) == std::string::npos;
   }
   if (pattern == "^[0-9a-f]{16}$") {

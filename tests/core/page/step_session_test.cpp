@@ -1,0 +1,131 @@
+// A step worked on through a session: edits, answers, what an edit reaches, undo, files, margins.
+#include <gtest/gtest.h>
+
+#include "core/page/session.hpp"
+#include "tests/core/page/page_reader.hpp"
+#include "tests/core/support/test_files.hpp"
+
+namespace heatledger::page {
+namespace {
+
+void type(Session& session, const std::string& cell, const std::string& text) {
+  const Status done = session.edit(cell, text);
+  EXPECT_TRUE(done.ok()) << cell << ": " << (done.ok() ? "" : done.error().message);
+}
+
+/// Water gas shift in a through-flow step, typed cell by cell.
+Session shift_reactor() {
+  Session session;
+  type(session, "r1.equation", "CO(g) + H2O(g) -> CO2(g) + H2(g)");
+  type(session, "steps.add_flow", "");
+  type(session, "s1.feed.0.name", "raw gas");
+  type(session, "s1.feed.0.at", "350 °C");
+  type(session, "s1.feed.0.row.0.species", "CO(g)");
+  type(session, "s1.feed.0.row.0.amount", "100 kmol/h");
+  type(session, "s1.feed.0.row.1.species", "H2O(g)");
+  type(session, "s1.feed.0.row.1.amount", "220 kmol/h");
+  type(session, "s1.reaction.0.reaction", "r1");
+  type(session, "s1.reaction.0.how", "conversion of CO");
+  type(session, "s1.reaction.0.figure", "(90 ± 1) %");
+  type(session, "s1.blank.outlet.temperature", "400 °C");
+  return session;
+}
+
+TEST(StepSession, TypedCellByCellItGivesItsDuty) {
+  Session session = shift_reactor();
+  // By hand with mean heat capacities (CO 30, H2O 35.3, CO2 44.6, H2 29.2 J/(mol K)): 25 mol/s × −41.2 kJ/mol
+  // is −1029 kW, what leaves carries 1202 kW from 25 °C, what enters 965 kW: −792 kW, good to some 1 %.
+  const std::string duty = test::text_of(session, "s1.answer.0");
+  ASSERT_EQ(duty.substr(0, 3), "\u2212") << duty;
+  EXPECT_NEAR(std::stod(duty.substr(3)), 792, 10);
+  const Result<Margin> margin = session.margin("s1.answer.0");
+  ASSERT_TRUE(margin.ok());
+  EXPECT_EQ(margin->subject, "duty, remove");
+  EXPECT_GE(margin->steps.size(), 4u);
+  ASSERT_FALSE(margin->sections.empty());
+  EXPECT_EQ(margin->sections[0].heading, "Which inputs carry the ±");
+}
+
+TEST(StepSession, SeeksAnotherBlankOnceTheDutyIsTyped) {
+  Session session = shift_reactor();
+  type(session, "s1.sought", "outlet or end temperature");
+  type(session, "s1.blank.duty", "0 kW");
+  const double end = std::stod(test::text_of(session, "s1.answer.0"));
+  EXPECT_GT(end, 550);
+  EXPECT_LT(end, 700);
+}
+
+TEST(StepSession, AnEditOfTheReactionReachesTheStepAndUndoTakesItBack) {
+  Session session = shift_reactor();
+  const std::string before = test::text_of(session, "s1.answer.0");
+  type(session, "s1.reaction.0.heat", "-45 ± 2 kJ/mol");
+  EXPECT_NE(test::text_of(session, "s1.answer.0"), before);
+  EXPECT_TRUE(session.command("undo", {}).ok());
+  EXPECT_EQ(test::text_of(session, "s1.answer.0"), before);
+}
+
+TEST(StepSession, WhatCannotBeReadStaysInItsCellBesideItsError) {
+  Session session = shift_reactor();
+  type(session, "s1.feed.0.row.1.amount", "220 kmol/fortnight");
+  EXPECT_EQ(test::text_of(session, "s1.feed.0.row.1.amount"), "220 kmol/fortnight");
+  const Note* note = test::find_note(session.page(), "s1.error.0");
+  ASSERT_NE(note, nullptr);
+  ASSERT_FALSE(note->cells.empty());
+  EXPECT_EQ(note->cells[0], "s1.feed.0.row.1.amount");
+  type(session, "s1.feed.0.row.1.amount", "220 kmol/h");
+  type(session, "s1.blank.outlet.temperature", "");
+  const Note* blank = test::find_note(session.page(), "s1.error.0");
+  ASSERT_NE(blank, nullptr);
+  EXPECT_EQ(blank->cells[0], "s1.blank.outlet.temperature");
+}
+
+TEST(StepSession, ASavedSheetOpensWithTheSameStep) {
+  Session session = shift_reactor();
+  const std::string saved = session.save(), duty = test::text_of(session, "s1.answer.0");
+  Session other;
+  ASSERT_TRUE(other.open(saved).ok());
+  EXPECT_EQ(test::text_of(other, "s1.answer.0"), duty);
+  EXPECT_EQ(other.save(), saved);
+}
+
+TEST(StepSession, OneStepFeedsTheNext) {
+  Session session = shift_reactor();
+  ASSERT_TRUE(session.command("add_step", {{"kind", "through-flow"}}).ok());
+  type(session, "s2.feed.0.name", "shifted gas");
+  type(session, "s2.feed.0.from", "from s1");
+  type(session, "s2.blank.outlet.temperature", "60 °C");
+  type(session, "s2.leaving.0.species", "H2O");
+  type(session, "s2.leaving.0.how", "saturation");
+  EXPECT_EQ(test::find_note(session.page(), "s2.error.0"), nullptr);
+  const std::string before = test::text_of(session, "s2.answer.0");
+  type(session, "s1.reaction.0.figure", "50 %");
+  EXPECT_NE(test::text_of(session, "s2.answer.0"), before);
+  ASSERT_TRUE(session.command("remove_step", {{"step", "s1"}}).ok());
+  EXPECT_NE(test::find_note(session.page(), "s2.error.0"), nullptr);
+}
+
+TEST(StepSession, TheCheckersColumnNamesASlip) {
+  Session session = shift_reactor();
+  type(session, "s1.show_checker", "shown");
+  const std::string duty = test::text_of(session, "s1.answer.0");
+  type(session, "s1.check.sought", duty + " kW");
+  const Note* agrees = test::find_note(session.page(), "s1.checker.summary");
+  ASSERT_NE(agrees, nullptr);
+  EXPECT_EQ(agrees->text, "Every figure typed agrees.");
+  type(session, "s1.check.sought", duty.substr(3) + " kW");  // without its sign
+  const Note* slip = test::find_note(session.page(), "s1.checker.summary");
+  ASSERT_NE(slip, nullptr);
+  EXPECT_EQ(slip->text.substr(0, 71), "One slip explains the sheet: the sign of the duty is turned round.");
+}
+
+TEST(StepSession, CellsThatAreNotThereAreRefused) {
+  Session session = shift_reactor();
+  EXPECT_EQ(session.edit("s1.blank.nonsense", "1").error().code, "edit.no_such_cell");
+  EXPECT_EQ(session.edit("s1.feed.9.at", "1").error().code, "edit.no_such_cell");
+  EXPECT_EQ(session.edit("s2.title", "1").error().code, "edit.no_such_cell");
+  EXPECT_EQ(session.edit("s1.answer.0", "1").error().code, "edit.not_editable");
+  EXPECT_EQ(session.command("remove_step", {{"step", "s7"}}).error().code, "command.argument");
+}
+
+}  // namespace
+}  // namespace heatledger::page
