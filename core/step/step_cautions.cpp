@@ -4,6 +4,7 @@
 #include <cmath>
 
 #include "core/base/number_text.hpp"
+#include "core/step/equilibrium.hpp"
 #include "core/step/words.hpp"
 #include "core/thermo/saturation.hpp"
 
@@ -137,6 +138,14 @@ void add_cautions(StepResult& result, const Work& work) {
   caution_phases(result, result.in, false);
   caution_phases(result, result.out, true);
   caution_heats(result);
+  for (std::size_t j = 0; j < result.reactions.size(); ++j) {
+    const std::optional<EquilibriumCheck> check = equilibrium_check(result, j);
+    if (!check || !check->beyond()) continue;
+    result.cautions.push_back("The progress typed for " + result.model->input().reactions[j].name +
+                              " lies beyond equilibrium at " +
+                              celsius(result.values[result.model->outlet_temperature_slot()]) +
+                              " by entropies of the tables: what leaves would react back.");
+  }
   caution_charge(result);
   if (result.closure.duty_by_formation) {
     const double other = *result.closure.duty_by_formation,
