@@ -1,5 +1,7 @@
 #include "core/balance/figures.hpp"
 
+#include <utility>
+
 #include "core/balance/context_rows.hpp"
 #include "core/thermo/estimated.hpp"
 
@@ -9,9 +11,9 @@ namespace {
 using molecule::Phase;
 using uncertainty::Quantity;
 
-std::optional<Quantity> value_of(const Result<thermo::Sourced>& result) {
+std::optional<Quantity> value_of(Result<thermo::Sourced> result) {
   if (!result.ok()) return std::nullopt;
-  return result->value;
+  return std::move(result->value);
 }
 
 void add_to(std::optional<Quantity>& sum, const std::optional<Quantity>& part, double factor) {
@@ -59,9 +61,10 @@ SpeciesFigures species_figures(const facts::Species& species, const molecule::Te
   SpeciesFigures figures;
   figures.priced = price_species(species, written, set);
   const Phase phase = figures.priced.phase;
-  const Result<thermo::Sourced> formation = formation_of(phase);
-  figures.formation = value_of(formation);
+  Result<thermo::Sourced> formation = formation_of(phase);
   figures.formation_estimated = formation.ok() && formation->route == "estimate";
+  figures.formation_source = formation.ok() ? std::move(formation->source) : formation.error().message;
+  figures.formation = value_of(std::move(formation));
   const bool by_bonds = figures.priced.route == RowRoute::Bonds || !figures.priced.missing.empty();
   figures.corrected = by_bonds && phase != Phase::Gas;
   if (figures.corrected) {

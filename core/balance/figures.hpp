@@ -3,6 +3,7 @@
 #pragma once
 
 #include <optional>
+#include <string>
 #include <vector>
 
 #include "core/balance/rows.hpp"
@@ -17,6 +18,7 @@ struct SpeciesFigures {
   std::optional<uncertainty::Quantity> formation;  ///< ΔfH in the phase taken [J/mol]
   std::optional<uncertainty::Quantity>
       formation_row;                 ///< ΔfH in the phase that the bond sum belongs to [J/mol]
+  std::string formation_source;      ///< of `formation`; why there is none where it is empty
   bool formation_estimated = false;  ///< no table has `formation`: bonds in context
   std::optional<uncertainty::Quantity> context,
       context_row;  ///< as `formation`, by bonds in context (ContextUse::Always)

@@ -41,29 +41,24 @@ Route average_route(const Ledger& ledger, const std::vector<Entry>& entries, con
   return route;
 }
 
-Route formation_route(const Ledger& ledger, const std::vector<Entry>& entries, const EquationFigures& sums,
-                      const LedgerOptions& options) {
+Route formation_route(const Ledger& ledger, const std::vector<Entry>& entries, const EquationFigures& sums) {
   Route route;
   route.name = kFormationRoute;
   route.gas_298 = sums.formation_gas_298;
   route.as_written = sums.formation_as_written;
-  for (std::size_t i = 0; i < ledger.rows.size(); ++i) {
+  for (std::size_t i = 0; i < entries.size(); ++i) {
     const ReactionSpecies& entry = ledger.reaction->species[i];
-    const molecule::Phase phase = ledger.rows[i].phase;
-    const Result<thermo::Sourced> formation =
-        options.context != ContextUse::Never
-            ? thermo::best_formation(*entry.species, phase, entry.term.strength, options.observations.get())
-            : thermo::tabulated_formation(*entry.species, phase, entry.term.strength);
-    if (entries[i].figures->formation_estimated) route.estimated.push_back(i);
-    if (!formation.ok()) {
-      if (route.why_not.empty()) route.why_not = formation.error().message;
+    const SpeciesFigures& figures = *entries[i].figures;
+    if (figures.formation_estimated) route.estimated.push_back(i);
+    if (!figures.formation) {
+      if (route.why_not.empty()) route.why_not = figures.formation_source;
       continue;
     }
-    const double times = entry.product ? entry.coefficient() : -entry.coefficient();
+    const double value = figures.formation->value(), times = entries[i].signed_coefficient();
     route.working.push_back(display_species(entry) + phase_suffix(entry.term) + "  " +
                             display_number(times, times == std::round(times) ? 0 : 4) + " × (" +
-                            fine_kj(formation->value.value()) +
-                            ") = " + fine_kj(times * formation->value.value()) + " kJ; " + formation->source);
+                            fine_kj(value) + ") = " + fine_kj(times * value) + " kJ; " +
+                            figures.formation_source);
   }
   if (route.as_written) {
     route.working.push_back("sum: " + kj_with_u95(*route.as_written, "kJ"));
@@ -119,7 +114,7 @@ Status add_routes(Ledger& ledger, const std::vector<Entry>& entries, const Equat
   const std::string_view pinned = options.pinned_route;
   ledger.routes.push_back(average_route(ledger, entries, sums));
   if (options.context == ContextUse::Always) ledger.routes.push_back(context_route(ledger, entries, sums));
-  ledger.routes.push_back(formation_route(ledger, entries, sums, options));
+  ledger.routes.push_back(formation_route(ledger, entries, sums));
   if (options.measured) {
     Result<Route> measured = measured_route(ledger, *options.measured);
     if (!measured.ok()) return measured.error();
