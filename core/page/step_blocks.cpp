@@ -308,6 +308,18 @@ class Blocks {
         for (int i = 0; i < 4; ++i) row.cells.push_back(label_cell(""));
       }
       list.rows.push_back(std::move(row));
+      if (typed.heat.empty()) continue;
+      Row measured = row_of(id + ".measured", RowRole::Detail);
+      Cell includes = choice_cell(id + ".includes", typed.includes.empty() ? "unknown" : typed.includes,
+                                  {"yes", "no", "unknown"});
+      includes.span = 2;
+      measured.cells = {label_cell("per mole of", Tone::Quiet),
+                        typed_cell(id + ".heat_per", typed.heat_per, "as written"),
+                        label_cell("measured at", Tone::Quiet),
+                        typed_cell(id + ".heat_at", typed.heat_at, "25 °C", CellKind::Number),
+                        label_cell("holds mixing, evaporation, gas loss", Tone::Quiet, 2),
+                        std::move(includes)};
+      list.rows.push_back(std::move(measured));
     }
     return list;
   }

@@ -60,7 +60,12 @@ TEST(StepSession, AnEditOfTheReactionReachesTheStepAndUndoTakesItBack) {
   const std::string before = test::text_of(session, "s1.answer.0");
   type(session, "s1.reaction.0.heat", "-45 ± 2 kJ/mol");
   EXPECT_NE(test::text_of(session, "s1.answer.0"), before);
-  EXPECT_TRUE(session.command("undo", {}).ok());
+  const std::string typed = test::text_of(session, "s1.answer.0");
+  type(session, "s1.reaction.0.heat_at", "400 °C");  // then nothing is left to correct at the outlet
+  EXPECT_NE(test::text_of(session, "s1.answer.0"), typed);
+  type(session, "s1.reaction.0.includes", "yes");
+  EXPECT_EQ(test::text_of(session, "s1.reaction.0.includes"), "yes");
+  for (int i = 0; i < 3; ++i) EXPECT_TRUE(session.command("undo", {}).ok());
   EXPECT_EQ(test::text_of(session, "s1.answer.0"), before);
 }
 
