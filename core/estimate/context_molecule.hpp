@@ -58,7 +58,7 @@ enum class FeatureClass : std::uint8_t {
   HB0,
   HB,
   VX,
-  Bx  ///< B with Si, P or B in it: few rows, so closer to the prior
+  Bx  ///< B with Si, P or B in it, or without C, H and not of N and O alone: few rows, closer to the prior
 };
 constexpr std::size_t feature_class_count = static_cast<std::size_t>(FeatureClass::Bx) + 1;
 

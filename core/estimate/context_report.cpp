@@ -48,8 +48,9 @@ std::string accuracy_report() {
       "of errors\n"
       "inside the stated 68 and 95 % intervals, median standard deviation. \"Trusted\": two sources share "
       "the value; families\n"
-      "count trusted rows; rows set aside stand in the README of the tables. Printed by `heatledger_refit "
-      "accuracy`; a test\ncompares it with the model as shipped.\n\n";
+      "count trusted rows. \"Set aside\": rows of training.tsv that the fit leaves out, each with its reason "
+      "there; the line\nbelow it judges the trusted organic rows together with them. Printed by "
+      "`heatledger_refit accuracy`; a test compares\nit with the model as shipped.\n\n";
   for (const Section& section : kSections) text += section_text(section);
   return text;
 }

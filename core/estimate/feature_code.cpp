@@ -166,10 +166,13 @@ const char* class_name(FeatureClass family) {
 FeatureClass FeatureCode::family() const {
   switch (family_) {
     case FeatureClass::B: {
-      const auto either = [&](Kind kind) {
-        return bytes_[0] == static_cast<std::uint8_t>(kind) || bytes_[1] == static_cast<std::uint8_t>(kind);
-      };
-      return either(Kind::Si) || either(Kind::P) || either(Kind::B) ? FeatureClass::Bx : family_;
+      const Kind first = static_cast<Kind>(bytes_[0]), second = static_cast<Kind>(bytes_[1]);
+      const auto either = [&](Kind kind) { return first == kind || second == kind; };
+      const auto nitrogen_or_oxygen = [](Kind kind) { return kind == Kind::N || kind == Kind::O; };
+      const bool rare = either(Kind::Si) || either(Kind::P) || either(Kind::B);
+      const bool organic =
+          either(Kind::C) || either(Kind::H) || (nitrogen_or_oxygen(first) && nitrogen_or_oxygen(second));
+      return rare || !organic ? FeatureClass::Bx : family_;
     }
     case FeatureClass::Ac:
     case FeatureClass::B1c:

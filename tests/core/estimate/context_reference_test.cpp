@@ -98,15 +98,28 @@ ReferenceFit reference_fit(const std::string& property) {
       settings.spread[static_cast<std::size_t>(family)] = spread;
     };
     set(FeatureClass::B, 31.0);
+    set(FeatureClass::Bx, 31.0);
+    set(FeatureClass::Ao, 101.0);
     set(FeatureClass::B1o, 39.0);
     set(FeatureClass::B1x, 4.29);
+    set(FeatureClass::B2o, 2.53);
     set(FeatureClass::P2, 11.8);
+    set(FeatureClass::P2h, 7.46);
     set(FeatureClass::P3, 4.33);
+    set(FeatureClass::P5m, 10.5);
     set(FeatureClass::R2o, 24.5);
     set(FeatureClass::R2x, 11.3);
+    set(FeatureClass::RP, 7.52);
+    settings.own.polar = 2.78;
+    settings.own.hetero = 4.98;
+    settings.own.inorganic = 3.59;
   }
-  out.fit = std::make_unique<ContextFit>(settings,
-                                         fit_rows(out.kind, figures, {out.temperature}, molecule_as_written));
+  std::vector<FitRow> rows = fit_rows(out.kind, figures, {out.temperature}, molecule_as_written);
+  for (std::size_t i = 0; i < rows.size(); ++i) {
+    rows[i].own = own_variance(settings, rows[i].molecule->measures);
+    rows[i].noise = (rows[i].own + error_variance(settings, figures[i])) / std::min(figures[i].weight, 1.0);
+  }
+  out.fit = std::make_unique<ContextFit>(settings, std::move(rows));
   return out;
 }
 
