@@ -4,6 +4,7 @@
 
 #include "core/balance/bond_words.hpp"
 #include "core/base/number_text.hpp"
+#include "core/thermo/estimated.hpp"
 
 namespace heatledger::balance {
 namespace {
@@ -63,7 +64,12 @@ std::size_t solutions_mixed(const Ledger& ledger) {
 void note_tables(Ledger& ledger) {
   const Route* formation = find_route(ledger, kFormationRoute);
   if (formation == nullptr || !formation->as_written) return;
-  for (const LedgerRow& row : ledger.rows) note_rivals(ledger, row);
+  for (const LedgerRow& row : ledger.rows) {
+    note_rivals(ledger, row);
+    if (std::optional<std::string> caution =
+            thermo::crowded_chain_caution(*ledger.reaction->species[row.species].species))
+      ledger.cautions.push_back(*std::move(caution));
+  }
   if (solutions_mixed(ledger) > 1) {
     ledger.cautions.push_back(
         "Solutions of stated strength are mixed here. Every heat of solution is that of one solute in its "

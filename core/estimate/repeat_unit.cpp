@@ -1,6 +1,7 @@
 #include "core/estimate/repeat_unit.hpp"
 
 #include <algorithm>
+#include <vector>
 
 #include "core/estimate/context_features.hpp"
 
@@ -64,6 +65,35 @@ void subtract(std::vector<FeatureCount>& from, const std::vector<FeatureCount>& 
 bool has_open_ends(const molecule::Graph& graph) {
   return std::any_of(graph.atoms.begin(), graph.atoms.end(),
                      [](const molecule::Atom& atom) { return atom.element == 0; });
+}
+
+bool has_crowded_chain(const molecule::Graph& graph) {
+  const Result<Ends> ends = find_ends(graph);
+  if (!ends) return false;
+  // The way from one end to the other, breadth first: the shortest where rings lie in the chain.
+  constexpr std::uint32_t kUnreached = 0xffffffffU;
+  std::vector<std::uint32_t> from(graph.atoms.size(), kUnreached), queue = {ends->star[0]};
+  from[ends->star[0]] = ends->star[0];
+  for (std::size_t next = 0; next < queue.size(); ++next) {
+    for (const molecule::Bond& bond : graph.bonds) {
+      if (bond.a != queue[next] && bond.b != queue[next]) continue;
+      const std::uint32_t other = bond.a == queue[next] ? bond.b : bond.a;
+      if (from[other] != kUnreached) continue;
+      from[other] = queue[next];
+      queue.push_back(other);
+    }
+  }
+  if (from[ends->star[1]] == kUnreached) return false;
+  for (std::uint32_t i = from[ends->star[1]]; i != ends->star[0]; i = from[i]) {
+    int neighbours = 0;
+    for (const molecule::Bond& bond : graph.bonds) {
+      if (bond.a != i && bond.b != i) continue;
+      const int element = graph.atoms[bond.a == i ? bond.b : bond.a].element;
+      neighbours += element != 1 && element != 9;
+    }
+    if (neighbours >= 4) return true;
+  }
+  return false;
 }
 
 Result<molecule::Graph> chain_of(const molecule::Graph& unit, unsigned units) {

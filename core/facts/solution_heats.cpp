@@ -103,6 +103,24 @@ std::vector<double> slopes_of(const std::vector<Node>& nodes) {
   return slope;
 }
 
+/// A liquid in no water has no heat of solution: a point of the curve that needs no table. Bridged only where
+/// the table begins close to it.
+bool starts_at_pure_liquid(const SolutionHeats& curve) {
+  constexpr double kNear = 1;  // mole of water per mole
+  return curve.phase == 'l' && curve.points.size() >= 2 && curve.points.front().ratio <= kNear;
+}
+
+/// The parabola through the pure liquid and the first two points. Its distance from the straight line to the
+/// first point is what the choice of the curve may be wrong by.
+SolutionHeatPoint near_pure_liquid(const SolutionHeats& curve, double ratio) {
+  const SolutionHeatPoint& first = curve.points[0];
+  const SolutionHeatPoint& second = curve.points[1];
+  const double chord = first.heat / first.ratio;
+  const double bend = (second.heat / second.ratio - chord) / (second.ratio - first.ratio);
+  const double bow = bend * ratio * (ratio - first.ratio);
+  return {ratio, chord * ratio + bow, first.u95, std::fabs(bow)};
+}
+
 }  // namespace
 
 const std::vector<SolutionHeats>& solution_heats() {
@@ -118,8 +136,14 @@ const SolutionHeats* find_solution_heats(std::string_view formula, char phase) {
   return nullptr;
 }
 
+double least_ratio(const SolutionHeats& curve) {
+  if (curve.points.empty()) return HUGE_VAL;
+  return starts_at_pure_liquid(curve) ? 0 : curve.points.front().ratio;
+}
+
 std::optional<SolutionHeatPoint> solution_heat_at(const SolutionHeats& curve, double ratio) {
-  if (curve.points.empty() || !(ratio >= curve.points.front().ratio)) return std::nullopt;
+  if (curve.points.empty() || !(ratio >= least_ratio(curve))) return std::nullopt;
+  if (ratio < curve.points.front().ratio) return near_pure_liquid(curve, ratio);
   if (!curve.infinite && ratio > curve.points.back().ratio) return std::nullopt;
   const std::vector<Node> nodes = nodes_of(curve);
   if (nodes.size() == 1) return curve.points.front();

@@ -12,6 +12,8 @@ struct SolutionHeatPoint {
   double ratio = 0;  ///< moles of water per mole of solute
   double heat = 0;   ///< [J per mole of solute]; < 0 gives off heat
   double u95 = 0;    ///< [J/mol]
+  double bridge =
+      0;  ///< [J/mol] further half width where no table is: between a pure liquid and the first point
 };
 
 struct SolutionHeats {
@@ -29,10 +31,14 @@ const std::vector<SolutionHeats>& solution_heats();
 /// @param formula  as typed; compared by composition, so that "NaOH" and "HNaO" are one
 const SolutionHeats* find_solution_heats(std::string_view formula, char phase);
 
+/// Least water that the curve has a figure for [moles per mole]; a liquid whose table begins at one mole or
+/// less is followed down to the pure liquid, whose heat is zero. Infinite when the curve has no points.
+double least_ratio(const SolutionHeats& curve);
+
 /// Heat of dissolving one mole in `ratio` moles of water [J/mol], interpolated between the points, monotone
 /// where they are, in x = ratio / (ratio + 1); a curve with its infinite dilution reaches x = 1.
 /// @param ratio  moles of water per mole of solute
-/// @return empty below the first point, and beyond the last when the curve has no figure for infinite
+/// @return empty below least_ratio, and beyond the last when the curve has no figure for infinite
 /// dilution
 /// @source F. N. Fritsch and R. E. Carlson, SIAM J. Numer. Anal. 17 (1980) 238: monotone cubic pieces
 std::optional<SolutionHeatPoint> solution_heat_at(const SolutionHeats& curve, double ratio);

@@ -103,14 +103,21 @@ class LineReader {
  private:
   /// "CH3NO" reads as nitrosomethane, but whoever writes it in Hill order most likely means formamide. The
   /// sign of it: Hill order, and a bond between two atoms that are neither carbon nor halogen, outside a
-  /// nitro group.
+  /// nitro group. "C6H5N3" is benzotriazole as often as an azide.
   bool is_also_molecular(const Graph& graph) const {
     auto odd = [&](std::uint32_t i) {
       return graph.atoms[i].element != 6 && !is_halogen(graph.atoms[i].element) && graph.atoms[i].charge == 0;
     };
-    const bool suspect = std::any_of(graph.bonds.begin(), graph.bonds.end(),
-                                     [&](const Bond& bond) { return odd(bond.a) && odd(bond.b); });
+    const bool suspect = std::any_of(graph.bonds.begin(), graph.bonds.end(), [&](const Bond& bond) {
+      const bool nitrogens = graph.atoms[bond.a].element == 7 && graph.atoms[bond.b].element == 7;
+      return nitrogens || (odd(bond.a) && odd(bond.b));
+    });
     return suspect && hill_formula(composition(graph)) == text_;
+  }
+
+  static bool diazo_fits(const LineFragment& chain) {
+    const std::uint32_t end = chain.free_end();
+    return end != kNoAtom && chain.graph.atoms[end].element == 6 && chain.free[end] == 2;
   }
 
   char peek(std::size_t ahead = 0) const { return at_ + ahead < text_.size() ? text_[at_ + ahead] : '\0'; }
@@ -275,6 +282,14 @@ class LineReader {
       at_ += front_nitro ? 1 : 2;
       return attach(level, nitro_piece(), 1, false, 0, begin);
     }
+    // Three nitrogens behind a chain are an azide; nothing else is written so.
+    if (*element == 7 && count == 3 && level.started() && level.mark == 0)
+      return attach(level, azide_piece(), 1, false, 0, begin);
+    // Two behind a carbon that has exactly two valences left, or in front of one: diazo.
+    const bool diazo_end = level.started() && level.mark == 0 && diazo_fits(level.chain);
+    const bool diazo_front = !level.started() && level.front_hydrogens == 0 && (starts("CH") || starts("C("));
+    if (*element == 7 && count == 2 && (diazo_end || diazo_front))
+      return attach(level, diazo_piece(), 1, false, diazo_end ? 2 : 0, begin);
     if (*element == 8 && count == 1 && level.front_hydrogens == 1 && !level.started() && starts("OC") &&
         peek(2) != 'H' && !is_lower(peek(2))) {
       at_ += 2;

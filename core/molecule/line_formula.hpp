@@ -14,8 +14,8 @@ namespace heatledger::molecule {
 ///              halogens belong to the atom they follow, at the beginning to the one they precede
 ///   brackets   after an atom: its substituents; in front: substituents of the next atom; (CH2)4: a chain of
 ///   four marks      - = # ≡ ; valences left over become multiple bonds where only one way exists (CH3CHO,
-///   CH3CN) groups     CO COO CO2 as carbonyl and carboxyl, HOOC in front, NO2 and O2N as nitro, SO SO2 SO3H,
-///   (O) as =O,
+///   CH3CN) groups     CO COO CO2 as carbonyl and carboxyl, HOOC in front, NO2 and O2N as nitro, N3 as azide,
+///   N2 as diazo, SO SO2 SO3H, (O) as =O,
 ///              C2H5, C2H3, C6H5; with a prefix n- i- s- t- one alkyl group, with o- m- p- one C6H4
 /// Benzene rings come in Kekulé spelling with no atom marked aromatic (aromaticity.hpp does that); nitro as
 /// [N+](=O)[O-].

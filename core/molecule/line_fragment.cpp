@@ -186,6 +186,27 @@ LineFragment nitro_piece() {
   return piece;
 }
 
+LineFragment azide_piece() {
+  LineFragment piece;
+  piece.first = piece.current = piece.add_atom(7, 3);
+  const std::uint32_t middle = piece.add_atom(7, 4), end = piece.add_atom(7, 2);
+  piece.graph.atoms[middle].charge = 1;
+  piece.graph.atoms[end].charge = -1;
+  piece.bind(piece.first, middle, 2, true);
+  piece.bind(middle, end, 2, true);
+  return piece;
+}
+
+LineFragment diazo_piece() {
+  LineFragment piece;
+  piece.first = piece.current = piece.add_atom(7, 4);
+  const std::uint32_t end = piece.add_atom(7, 2);
+  piece.graph.atoms[piece.first].charge = 1;
+  piece.graph.atoms[end].charge = -1;
+  piece.bind(piece.first, end, 2, true);
+  return piece;
+}
+
 LineFragment carboxyl_piece() {
   LineFragment piece;
   piece.first = piece.current = piece.add_atom(6, 4);

@@ -45,6 +45,10 @@ LineFragment phenyl_piece();
 LineFragment phenylene_piece(int apart);
 LineFragment vinyl_piece();
 LineFragment nitro_piece();
+/// N=[N+]=[N-], bound by its first nitrogen.
+LineFragment azide_piece();
+/// =[N+]=[N-], bound twice by its first nitrogen.
+LineFragment diazo_piece();
 LineFragment carboxyl_piece();
 /// @param kind  'n' straight, 'i' iso (3 or 4 carbons), 's' and 't' (4 carbons)
 LineFragment alkyl_piece(int carbons, char kind);

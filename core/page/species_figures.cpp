@@ -9,6 +9,7 @@
 #include "core/estimate/context_model.hpp"
 #include "core/facts/atoms.hpp"
 #include "core/facts/polynomials.hpp"
+#include "core/thermo/estimated.hpp"
 #include "core/thermo/species_enthalpy.hpp"
 #include "core/units/constants.hpp"
 
@@ -178,6 +179,8 @@ SpeciesFigures species_figures(std::shared_ptr<const facts::Species> species, bo
         {temperature, table_or(table, in_context(Property::GasHeatCapacity, temperature))});
   }
   if (!it.note.empty()) figures.notes.push_back(it.note);
+  if (std::optional<std::string> caution = thermo::crowded_chain_caution(it))
+    figures.cautions.push_back(*std::move(caution));
   if (compound != nullptr && compound->vapour_associates) {
     figures.cautions.push_back(
         "The real vapour is partly associated; the figures for the gas are for single molecules.");

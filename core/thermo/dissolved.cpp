@@ -39,21 +39,40 @@ Sourced from_table_of_ions(const facts::AqueousSubstance& row, const Species& sp
   return result;
 }
 
+/// Where the curve ends, as a sentence: in moles of water and in per cent.
+std::string reach_of(const SolutionHeats& curve, double molar_mass) {
+  if (curve.points.empty()) return " Its table has infinite dilution only.";
+  const auto percent = [&](double ratio) {
+    return display_number(100 * molar_mass / (molar_mass + ratio * kWaterMolarMass), 1) + " wt%";
+  };
+  const double least = facts::least_ratio(curve), most = curve.points.back().ratio;
+  return " Its table begins at " + machine_number(least, 4) + " mol of water (" + percent(least) + ")" +
+         (curve.infinite ? " and runs to infinite dilution."
+                         : " and ends at " + machine_number(most, 4) + " (" + percent(most) + ").");
+}
+
 /// The pure solute that a curve starts from, and the heat of dissolving it.
 Result<Sourced> from_curve(const Species& species, const SolutionHeats& curve, std::optional<double> ratio) {
   const std::optional<SolutionHeatPoint> heat =
       ratio ? facts::solution_heat_at(curve, *ratio) : curve.infinite;
-  if (!heat)
-    return no_solution(species, ratio ? " with " + machine_number(*ratio, 4) + " mol of water per mole"
-                                      : " at infinite dilution");
+  if (!heat) {
+    Error error = no_solution(species, ratio ? " with " + machine_number(*ratio, 4) + " mol of water per mole"
+                                             : " at infinite dilution");
+    error.message += reach_of(curve, species.molar_mass);
+    error.hint = "Write a strength within the table, the pure phase instead, or type a measured heat.";
+    return error;
+  }
   const Phase pure = curve.phase == 'g' ? Phase::Gas : curve.phase == 'l' ? Phase::Liquid : Phase::Solid;
   Result<Sourced> solute = tabulated_formation(species, pure);
   if (!solute.ok()) return solute;
   Sourced result = std::move(solute).value();
   result.value.add(Quantity(heat->heat, heat->u95, figure_key(SourceKind::Phase, species, Phase::Aqueous)));
+  // Errors of one table are shared by all its strengths; that of the bridge to the pure liquid is its own.
+  if (heat->bridge > 0)
+    result.value.add(Quantity(0, heat->bridge, figure_key(SourceKind::Phase, species, Phase::Unstated)));
   result.source += "; heat of solution " + std::string(curve.source);
   result.working.push_back("plus heat of solution " + display_signed(heat->heat / kJ, 2) + " ± " +
-                           display_number(heat->u95 / kJ, 2) + " kJ/mol " +
+                           display_number((heat->u95 + heat->bridge) / kJ, 2) + " kJ/mol " +
                            (ratio ? "with " + machine_number(*ratio, 4) + " mol of water per mole, "
                                   : std::string("at infinite dilution, ")) +
                            std::string(curve.source) + (curve.from_memory ? " (from memory)" : ""));

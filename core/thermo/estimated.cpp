@@ -6,6 +6,7 @@
 #include "core/estimate/context_model.hpp"
 #include "core/estimate/context_molecule.hpp"
 #include "core/estimate/context_observations.hpp"
+#include "core/estimate/repeat_unit.hpp"
 #include "core/estimate/structure_figure.hpp"
 #include "core/thermo/dissolved.hpp"
 
@@ -135,6 +136,18 @@ Result<Sourced> best_gas_to_phase(const Species& species, Phase to,
   if (table.ok()) return table;
   Result<Sourced> estimate = estimated_gas_to_phase(species, to, observations);
   return estimate.ok() ? std::move(estimate) : std::move(table);
+}
+
+std::optional<std::string> crowded_chain_caution(const Species& species) {
+  if (!species.repeat_unit || !species.graph || !estimate::has_crowded_chain(*species.graph)) return {};
+  // Published heats of polymerisation of isobutene, alpha-methylstyrene and methyl methacrylate (Polymer
+  // Handbook; Roberts 1950) lie 8 to 17 kJ/mol on this side of the estimate.
+  return species.name +
+         ": two side groups on one atom of the chain crowd its neighbours, and no compound behind the "
+         "estimate is "
+         "crowded so. Its formation enthalpy comes out too low and a polymerisation too exothermic, by some "
+         "10 to "
+         "20 kJ per mole of units, which the ± does not hold; type a measured one.";
 }
 
 }  // namespace heatledger::thermo

@@ -1,6 +1,9 @@
 // Formation and vaporisation of species that no table has, from bonds in context.
 #pragma once
 
+#include <optional>
+#include <string>
+
 #include "core/thermo/species_enthalpy.hpp"
 
 namespace heatledger::estimate {
@@ -32,5 +35,9 @@ Result<Sourced> best_formation(const facts::Species& species, molecule::Phase ph
 Result<Sourced> best_gas_to_phase(const facts::Species& species, molecule::Phase to,
                                   const std::optional<molecule::Strength>& strength,
                                   const estimate::Observations* observations = nullptr);
+
+/// What an estimate of a repeat unit does not know: a sentence where its main chain has an atom with two side
+/// groups (polyisobutene, polymethacrylates, poly(alpha-methylstyrene)). Empty for anything else.
+std::optional<std::string> crowded_chain_caution(const facts::Species& species);
 
 }  // namespace heatledger::thermo

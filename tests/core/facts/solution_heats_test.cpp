@@ -64,6 +64,31 @@ TEST(SolutionHeats, GiveNothingOutsideTheCurve) {
   EXPECT_EQ(find_solution_heats("??", 's'), nullptr);
 }
 
+TEST(SolutionHeats, BeginAtThePureLiquid) {
+  const SolutionHeats* acid = find_solution_heats("H2SO4", 'l');
+  ASSERT_NE(acid, nullptr);
+  EXPECT_EQ(least_ratio(*acid), 0);
+  EXPECT_EQ(solution_heat_at(*acid, 0)->heat, 0);
+  EXPECT_FALSE(solution_heat_at(*acid, -0.1).has_value());
+  // Without its first point the curve from the pure acid meets it within its ±, and no worse than the table's
+  // 0.5.
+  SolutionHeats without = *acid;
+  without.points.erase(without.points.begin());
+  const SolutionHeatPoint bridged = *solution_heat_at(without, acid->points[0].ratio);
+  EXPECT_NEAR(bridged.heat, acid->points[0].heat, 500);
+  EXPECT_GT(bridged.bridge, 500);
+  EXPECT_EQ(solution_heat_at(*acid, 0.7)->bridge, 0);
+  // 96 per cent by mass: between the pure acid and the first point, without a step there.
+  const SolutionHeatPoint strong = *solution_heat_at(*acid, 0.2268);
+  EXPECT_LT(strong.heat, -7100);
+  EXPECT_GT(strong.heat, -8700);
+  EXPECT_NEAR(solution_heat_at(*acid, 0.4999999)->heat, acid->points[0].heat, 1);
+  // Nitric acid's table begins at 2.8 moles of water, too far to bridge; solids begin where the table does.
+  EXPECT_GT(least_ratio(*find_solution_heats("HNO3", 'l')), 2);
+  EXPECT_EQ(least_ratio(*find_solution_heats("NaOH", 's')), 3);
+  EXPECT_TRUE(std::isinf(least_ratio(*find_solution_heats("NaCl", 's'))));
+}
+
 TEST(SolutionHeats, BelongToCompoundsOfTheLibrary) {
   for (const SolutionHeats& curve : solution_heats()) {
     EXPECT_FALSE(Library::embedded().find_formula(curve.solute).empty()) << curve.solute;
