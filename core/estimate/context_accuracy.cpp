@@ -189,7 +189,7 @@ std::vector<AccuracyLine> accuracy_table(const FittedProperty& fitted, FitKind k
   add("all rows", [](std::size_t) { return true; });
   add("trusted", [&](std::size_t i) { return trusted[i]; });
   add("trusted, organic", [&](std::size_t i) { return trusted[i] && organic(i); });
-  add("  half kept for report", [&](std::size_t i) { return trusted[i] && organic(i) && reported[i]; });
+  add("  second half", [&](std::size_t i) { return trusted[i] && organic(i) && reported[i]; });
   for (std::size_t f = 0; f <= exclusive_families; ++f) {
     const bool overlaps = f == exclusive_families;  // strained rings: of organic molecules
     add(kFamilyNames[f], [&](std::size_t i) {

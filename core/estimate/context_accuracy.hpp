@@ -57,14 +57,14 @@ struct AccuracyLine {
 AccuracyLine accuracy_of(const std::string& set, const std::vector<LeftOutRow>& rows,
                          const ContextSettings& settings, const std::vector<bool>& take);
 
-/// The whole table of one fit: all, trusted, organic, families, and the half of the compounds that no setting
-/// of this project has been chosen on.
+/// The whole table of one fit: all, trusted, organic, families, the half of the compounds that no first
+/// choice of a setting was made on (the last ones saw all rows), rows set aside, and organic ones with those.
 std::vector<AccuracyLine> accuracy_table(const FittedProperty& fitted, FitKind kind,
                                          const std::vector<LeftOutRow>& rows);
 /// As printed: one line a set.
 std::string accuracy_text(const std::vector<AccuracyLine>& lines);
 
-/// True for the half of the compounds that settings may be chosen on; the other half is kept for the report.
+/// True for the half of the compounds that settings are first chosen on; the second half is to confirm them.
 bool in_choosing_half(const ContextMolecule& molecule);
 
 }  // namespace heatledger::estimate
