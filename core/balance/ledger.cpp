@@ -1,6 +1,11 @@
 // Puts a ledger together: rows, totals, corrections, routes, notes.
 #include "core/balance/ledger.hpp"
 
+#include <algorithm>
+#include <cmath>
+#include <map>
+#include <string>
+
 #include "core/balance/bond_words.hpp"
 #include "core/balance/context_rows.hpp"
 #include "core/balance/disagreement.hpp"
@@ -68,6 +73,21 @@ void note_phases(Ledger& ledger) {
   ledger.notes.push_back(text + ". Write (g), (l), (s) or (aq) behind the name.");
 }
 
+/// Whether every bond broken is formed again: the bonds then cancel by kind and say nothing of the reaction.
+bool bonds_cancel(const Ledger& ledger) {
+  std::map<std::string, double> net;
+  for (const LedgerRow& row : ledger.rows) {
+    if (row.route != RowRoute::Bonds || row.lines.empty()) return false;
+    const ReactionSpecies& entry = ledger.reaction->species[row.species];
+    const double times = entry.product ? -entry.coefficient() : entry.coefficient();
+    for (const BondLine& line : row.lines) {
+      net[molecule::spelling(line.type)] += times * line.count;
+      if (line.second) net[molecule::spelling(line.second->type)] += times * line.second->count;
+    }
+  }
+  return std::all_of(net.begin(), net.end(), [](const auto& bond) { return std::fabs(bond.second) < 1e-9; });
+}
+
 void note_set(Ledger& ledger) {
   if (ledger.in_context) {
     ledger.notes.emplace_back(
@@ -86,6 +106,11 @@ void note_set(Ledger& ledger) {
                line.second->price->origin == estimate::BondOrigin::User);
     }
   }
+  if (priced && bonds_cancel(ledger))
+    ledger.notes.emplace_back(
+        "Every bond broken is formed again, so average bonds give zero whatever their values, and their ± "
+        "says "
+        "nothing of the heat that differing surroundings leave. Go by another route.");
   if (priced) ledger.notes.emplace_back(estimate::BondSet::spread_remark());
   if (typed)
     ledger.notes.emplace_back("Typed bond values act in this ledger; the lines that use them say so.");

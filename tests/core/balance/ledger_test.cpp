@@ -202,6 +202,15 @@ TEST(Ledger, SaysWhatTheIntervalOfTheAverageSetCovers) {
   EXPECT_TRUE(any_contains(ledger("methane(g) + 2 O2(g) -> CO2(g) + 2 H2O(g)").notes, remark));
 }
 
+TEST(Ledger, SaysWhenAllBondsCancelThatTheyTellNothing) {
+  // Transesterification: as many bonds of each kind on both sides.
+  const Ledger even = ledger("methyl acetate(l) + ethanol(l) -> ethyl acetate(l) + methanol(l)");
+  EXPECT_NEAR(kj(even.gas_298), 0, 1e-9);
+  EXPECT_TRUE(any_contains(even.notes, "Every bond broken is formed again"));
+  EXPECT_FALSE(any_contains(ledger("methane(g) + 2 O2(g) -> CO2(g) + 2 H2O(g)").notes,
+                            "Every bond broken is formed again"));
+}
+
 TEST(Ledger, LetsSharedBondsCancelInTheInterval) {
   // Only C–C, H–H and C–H differ between the sides; five C–H and the ring of toluene do not widen the
   // interval.
