@@ -51,6 +51,11 @@ void run_at_temperatures(Ledger& ledger, const LedgerOptions& options) {
       ledger.as_run->add(*correction.value);
     }
     ledger.to_temperature.push_back(std::move(correction));
+    const std::optional<molecule::Strength>& strength = ledger.reaction->species[i].term.strength;
+    if (strength && strength->kind != molecule::Strength::Kind::InfiniteDilution)
+      ledger.cautions.push_back(display_species(ledger.reaction->species[i]) +
+                                ": the water of this solution is not in the correction to temperature; its "
+                                "warming or cooling is a stream of a step.");
   }
 }
 

@@ -168,7 +168,10 @@ TEST(RepeatUnit, WarnsOfACrowdedChain) {
   for (const auto& row : table.rows) {
     if (!warns_of_crowding(row[1])) continue;
     ++warned;
-    const Route* route = find_route(test_sheets::ledger(row[1]), kFormationRoute);
+    const Ledger sheet = test_sheets::ledger(row[1]);
+    const Route* route = find_route(sheet, kFormationRoute);
+    ASSERT_NE(route, nullptr) << row[0];
+    ASSERT_TRUE(route->as_written) << row[0];
     EXPECT_LT(route->as_written->value() / 1000, *parse_number(row[2])) << row[0];
     EXPECT_GT(route->as_written->value() / 1000, *parse_number(row[2]) - 20) << row[0];
   }
