@@ -485,6 +485,10 @@ void explain_figure(const document::ReadFigure& read, const document::TypedFigur
   add_source(margin, std::string(datum.source));
 }
 
+bool is_figure(const std::string& hint) {
+  return std::any_of(hint.begin(), hint.end(), [](char c) { return c >= '0' && c <= '9'; });
+}
+
 }  // namespace
 
 Result<Margin> make_margin(const document::Worksheet& sheet, const document::Results& results,
@@ -492,7 +496,13 @@ Result<Margin> make_margin(const document::Worksheet& sheet, const document::Res
   Margin margin;
   margin.cell = cell.id;
   margin.value = cell.text;
-  if (!cell.hint.empty()) margin.subject = cell.hint;
+  // The hint of a blank for a figure is an example or a default, which must not read as if it had been typed.
+  const bool blank = cell.origin == Origin::Typed && cell.text.empty();
+  if (!is_figure(cell.hint)) {
+    margin.subject = cell.hint;
+  } else if (blank) {
+    margin.subject = "nothing typed; to be written like " + cell.hint;
+  }
   const IdParts id = split_id(cell.id);
   if (const std::size_t step = document::find_step(sheet, id[0]); step < sheet.steps.size()) {
     if (std::optional<Margin> found = step_margin(*sheet.steps[step], *results.steps[step], cell.id))
@@ -518,7 +528,7 @@ Result<Margin> make_margin(const document::Worksheet& sheet, const document::Res
       if (cell.id.compare(cell.id.size() - 9, 9, "published") == 0) return margin;
     }
   }
-  if (cell.origin == Origin::Typed) margin.sources.emplace_back("typed on this sheet");
+  if (cell.origin == Origin::Typed && !blank) margin.sources.emplace_back("typed on this sheet");
   return margin;
 }
 

@@ -128,6 +128,21 @@ double lowest_limit(const StepResult& result) {
   return limit;
 }
 
+/// One log mean over the whole way does not see where something condenses or boils between the two ends.
+void caution_conductance(StepResult& result) {
+  const bool asked = std::any_of(result.answers.begin(), result.answers.end(),
+                                 [](const Answer& answer) { return answer.id == FigureId::Conductance; });
+  bool splits = false;
+  for (std::size_t s = 0; s < result.model->input().substances.size(); ++s)
+    splits = splits || result.model->vapour_state(s).has_value();
+  const StepInput& input = result.model->input();
+  const bool end_to_end = input.kind == StepKind::ThroughFlow && input.reactions.empty();
+  if (!asked || !splits || !end_to_end) return;
+  result.cautions.push_back(
+      "Something condenses or boils on the way, so one log mean from end to end misses the real course of "
+      "temperature: reckon UA zone by zone. Its ± does not cover this.");
+}
+
 }  // namespace
 
 void add_cautions(StepResult& result, const Work& work) {
@@ -147,6 +162,7 @@ void add_cautions(StepResult& result, const Work& work) {
                               " by entropies of the tables: what leaves would react back.");
   }
   caution_charge(result);
+  caution_conductance(result);
   if (result.closure.duty_by_formation) {
     const double other = *result.closure.duty_by_formation,
                  scale =

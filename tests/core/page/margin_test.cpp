@@ -61,6 +61,17 @@ TEST(Margin, SaysWhyTheRoutesDiffer) {
   EXPECT_TRUE(found);
 }
 
+TEST(Margin, ABlankDoesNotPassItsExampleOffAsTyped) {
+  Session session = worked_sheet();
+  ASSERT_TRUE(session.edit("steps.add_charge", "").ok());
+  ASSERT_TRUE(session.edit("s1.feed.0.name", "charge").ok());
+  const Result<Margin> margin = session.margin("s1.feed.0.row.0.amount");
+  ASSERT_TRUE(margin.ok()) << margin.error().message;
+  EXPECT_TRUE(margin->value.empty());
+  EXPECT_EQ(margin->subject, "nothing typed; to be written like 340 kg");
+  EXPECT_TRUE(margin->sources.empty());
+}
+
 TEST(Margin, TypedCellsSayTheyAreTyped) {
   Session session = worked_sheet();
   ASSERT_TRUE(session.edit("header.title", "T").ok());
