@@ -20,6 +20,7 @@ scripts/ci/wasm_page.sh
 
 mkdir -p "$out"
 say "The ledger of $sheet"
+build/release/desktop/cli/heatledger work "$sheet"
 build/release/desktop/cli/heatledger work "$sheet" --html "$out/nitro-hydrogenation.html"
 
 cp build/wasm/wasm/heatledger.html "$out/heatledger.html"
