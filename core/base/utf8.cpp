@@ -55,6 +55,25 @@ CodePoint code_point_at(std::string_view text, std::size_t at) {
   return {value, bytes};
 }
 
+void append(std::string& out, std::uint32_t code) {
+  const auto put = [&](std::uint32_t byte) { out += static_cast<char>(byte); };
+  if (code < 0x80) {
+    put(code);
+  } else if (code < 0x800) {
+    put(0xC0 | code >> 6);
+    put(0x80 | (code & 0x3F));
+  } else if (code < 0x10000) {
+    put(0xE0 | code >> 12);
+    put(0x80 | (code >> 6 & 0x3F));
+    put(0x80 | (code & 0x3F));
+  } else {
+    put(0xF0 | code >> 18);
+    put(0x80 | (code >> 12 & 0x3F));
+    put(0x80 | (code >> 6 & 0x3F));
+    put(0x80 | (code & 0x3F));
+  }
+}
+
 std::size_t first_malformed(std::string_view text) {
   std::size_t at = 0;
   while (at < text.size()) {

@@ -4,6 +4,7 @@
 
 #include <cstddef>
 #include <cstdint>
+#include <string>
 #include <string_view>
 
 namespace heatledger::utf8 {
@@ -16,6 +17,9 @@ struct CodePoint {
   std::size_t bytes = 0;
 };
 CodePoint code_point_at(std::string_view text, std::size_t at);
+
+/// Appends one code point. @param code  up to 0x10FFFF, no surrogate
+void append(std::string& out, std::uint32_t code);
 
 /// Byte offset of the first malformed sequence; text.size() when the whole text is well formed.
 std::size_t first_malformed(std::string_view text);

@@ -1,6 +1,7 @@
 #include "core/document/typed_bonds.hpp"
 
 #include "core/document/typed_energy.hpp"
+#include "core/document/typed_rows.hpp"
 
 namespace heatledger::document {
 
@@ -12,16 +13,12 @@ ReadBonds read_typed_bonds(const TypedBonds& typed) {
     if (entry.bond.empty() && entry.value.empty()) continue;
     const Result<molecule::BondType> type = molecule::parse_bond_type(entry.bond);
     if (!type) {
-      Error error = type.error();
-      error.where = path + ".bond" + (error.where.empty() ? "" : ", " + error.where);
-      overlay.errors.push_back(std::move(error));
+      overlay.errors.push_back(placed(type.error(), path + ".bond"));
       continue;
     }
     const Result<uncertainty::Figure> figure = parse_molar_energy(entry.value);
     if (!figure) {
-      Error error = figure.error();
-      error.where = path + ".value, " + error.where;
-      overlay.errors.push_back(std::move(error));
+      overlay.errors.push_back(placed(figure.error(), path + ".value"));
       continue;
     }
     if (figure->value <= 0) {
@@ -35,8 +32,7 @@ ReadBonds read_typed_bonds(const TypedBonds& typed) {
     value.value = figure->value;
     value.u95 = figure->u95;
     value.origin = estimate::BondOrigin::User;
-    value.source = entry.source.empty() ? "typed on this sheet, no source given" : entry.source;
-    if (!entry.from.empty()) value.source += ", site table " + entry.from;
+    value.source = stated_source(entry.source, entry.from);
     if (value.u95 <= 0) overlay.exact.push_back(path + ".value");
     overlay.values.push_back(std::move(value));
   }

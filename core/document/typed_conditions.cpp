@@ -1,16 +1,11 @@
 #include "core/document/typed_conditions.hpp"
 
 #include "core/document/typed_energy.hpp"
+#include "core/document/typed_rows.hpp"
 #include "core/units/quantity_text.hpp"
 
 namespace heatledger::document {
 namespace {
-
-Error placed(Error error, const std::string& field) {
-  const bool offset = error.where.compare(0, 7, "offset ") == 0;
-  error.where = field + (offset ? ", " + error.where : std::string());
-  return error;
-}
 
 void read_temperature(const std::string& text, const char* field, std::optional<double>& kelvin,
                       std::vector<Error>& errors) {
@@ -63,8 +58,7 @@ void read_measured(const ReactionSheet& sheet, Conditions& out) {
   heat.value = value->value;
   heat.u95 = value->u95;
   heat.per = typed.per;
-  heat.source = typed.source.empty() ? "typed on this sheet, no source given" : typed.source;
-  if (!typed.from.empty()) heat.source += ", site table " + typed.from;
+  heat.source = stated_source(typed.source, typed.from);
   heat.key = key_of(sheet);
   read_temperature(typed.at, "measured.at", heat.at, out.errors);
   if (!typed.medium.empty()) heat.remark = typed.medium + "; ";

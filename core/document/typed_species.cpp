@@ -3,6 +3,7 @@
 #include <algorithm>
 
 #include "core/document/typed_energy.hpp"
+#include "core/document/typed_rows.hpp"
 #include "core/facts/resolve.hpp"
 #include "core/molecule/formula.hpp"
 #include "core/molecule/smiles.hpp"
@@ -19,12 +20,6 @@ constexpr std::string_view kFormula = "formula", kStructure = "structure", kMola
 
 std::string path_of(std::size_t index, const char* field) {
   return "species[" + std::to_string(index) + "]." + field;
-}
-
-Error placed(Error error, std::size_t index, const char* field) {
-  const bool offset = error.where.compare(0, 7, "offset ") == 0;
-  error.where = path_of(index, field) + (offset ? ", " + error.where : std::string());
-  return error;
 }
 
 bool must_be_positive(FigureKind kind) {
@@ -138,7 +133,7 @@ SheetLibrary::SheetLibrary(const TypedFigures& typed) : figures_(typed.size()) {
     if (one.molar_mass_typed) {
       const auto coded = facts::make_coded_species(one.record.name, one.molar_mass, one.record.formula);
       if (!coded.ok()) {
-        errors_.push_back(placed(coded.error(), one.molar_mass_row, "value"));
+        errors_.push_back(placed(coded.error(), path_of(one.molar_mass_row, "value")));
       } else if (one.record.formula.empty() && one.record.smiles.empty()) {
         molar_mass_[one.record.name] = one.molar_mass;
       }
@@ -166,7 +161,7 @@ void SheetLibrary::read(const TypedFigures& typed, std::size_t index, std::vecto
   const Result<std::shared_ptr<const Species>> below = facts::resolve_species(text, quoted);
   // A name that nothing knows is a species of this sheet: a code, a mixture, an intermediate.
   if (!below.ok() && (quoted || text.empty() || below.error().code == "species.several_isomers")) {
-    errors_.push_back(placed(below.error(), index, "species"));
+    errors_.push_back(placed(below.error(), path_of(index, "species")));
     return;
   }
   const facts::Compound* published = below.ok() ? (*below)->compound : nullptr;
@@ -208,7 +203,7 @@ void SheetLibrary::read(const TypedFigures& typed, std::size_t index, std::vecto
     } else if (name->id == kFormula) {
       const Result<molecule::Composition> formula = molecule::parse_formula(entry.value);
       if (!formula.ok()) {
-        errors_.push_back(placed(formula.error(), index, "value"));
+        errors_.push_back(placed(formula.error(), path_of(index, "value")));
         return;
       }
       found->record.formula = molecule::hill_formula(*formula);
@@ -218,7 +213,7 @@ void SheetLibrary::read(const TypedFigures& typed, std::size_t index, std::vecto
       const std::string smiles(unquoted(entry.value, marks));
       const Result<molecule::Graph> graph = molecule::parse_smiles(smiles);
       if (!graph.ok()) {
-        errors_.push_back(placed(graph.error(), index, "value"));
+        errors_.push_back(placed(graph.error(), path_of(index, "value")));
         return;
       }
       found->record.smiles = smiles;
@@ -228,7 +223,7 @@ void SheetLibrary::read(const TypedFigures& typed, std::size_t index, std::vecto
     } else {
       const Result<units::TypedValue> mass = units::parse_quantity(entry.value, d::kMolarMass);
       if (!mass.ok()) {
-        errors_.push_back(placed(mass.error(), index, "value"));
+        errors_.push_back(placed(mass.error(), path_of(index, "value")));
         return;
       }
       found->molar_mass = mass->value;
@@ -240,7 +235,7 @@ void SheetLibrary::read(const TypedFigures& typed, std::size_t index, std::vecto
   }
   const Result<units::TypedValue> value = read_figure(entry.value, *name, found->molar_mass);
   if (!value.ok()) {
-    errors_.push_back(placed(value.error(), index, "value"));
+    errors_.push_back(placed(value.error(), path_of(index, "value")));
     return;
   }
   if (must_be_positive(*name->kind) && value->value <= 0) {
@@ -255,8 +250,7 @@ void SheetLibrary::read(const TypedFigures& typed, std::size_t index, std::vecto
   figure.kind = *name->kind;
   figure.value = out.value->value;
   figure.u95 = out.value->u95;
-  figure.source = entry.source.empty() ? "no source given" : entry.source;
-  if (!entry.from.empty()) figure.source += ", site table " + entry.from;
+  figure.source = stated_source(entry.source, entry.from, "no source given");
   found->record.figures.push_back(std::move(figure));
   const bool sharpens = *name->kind == FigureKind::FormationGas ||
                         *name->kind == FigureKind::FormationLiquid ||

@@ -1,12 +1,14 @@
 // Reading one JSON object member by member, for the readers of this room. Not for callers outside it.
 #pragma once
 
+#include <map>
 #include <string>
 #include <string_view>
 #include <utility>
 #include <vector>
 
 #include "core/file/json.hpp"
+#include "core/file/members.hpp"
 
 namespace heatledger::file {
 
@@ -21,6 +23,39 @@ class Fields {
 
   void text(std::string_view key, std::string& out) {
     if (const Json* value = take(key, Json::Kind::String, "a text")) out = value->text();
+  }
+
+  template <typename T, std::size_t N>
+  void texts(const TextMember<T> (&members)[N], T& record) {
+    for (const TextMember<T>& member : members) text(member.key, record.*member.field);
+  }
+
+  /// An object of texts. One with a member that is none is kept whole and reported.
+  void texts(std::string_view key, std::map<std::string, std::string>& out) {
+    const Json* object = peek(key);
+    if (object == nullptr) return;
+    bool all = object->is_object();
+    if (all) {
+      for (const Json::Member& member : object->members()) all = all && member.second.is_string();
+    }
+    if (!all) return complain(key, "an object of texts");
+    mark(key);
+    for (const Json::Member& member : object->members()) out[member.first] = member.second.text();
+  }
+
+  /// Reads every item of a list of objects. A list with an item that is none is kept whole and reported.
+  template <typename T, typename Read>
+  void objects(std::string_view key, std::vector<T>& out, Read read) {
+    const Json* list = peek(key);
+    if (list == nullptr) return;
+    bool all = list->is_array();
+    if (all) {
+      for (const Json& item : list->items()) all = all && item.is_object();
+    }
+    if (!all) return complain(key, "a list of objects");
+    mark(key);
+    for (std::size_t i = 0; i < list->items().size(); ++i)
+      out.push_back(read(list->items()[i], at(key) + "[" + std::to_string(i) + "]"));
   }
 
   void flag(std::string_view key, bool& out) {
@@ -91,5 +126,16 @@ class Fields {
   std::vector<bool> taken_;
   std::vector<Json::Member> kept_;
 };
+
+/// A record that is texts alone; what is of the wrong kind or unknown goes to its `unknown`.
+template <typename T, std::size_t N>
+T read_record(const Json& object, const TextMember<T> (&members)[N], const std::string& path,
+              std::vector<Error>& problems) {
+  T record;
+  Fields fields(object, path, problems);
+  fields.texts(members, record);
+  record.unknown = fields.rest();
+  return record;
+}
 
 }  // namespace heatledger::file

@@ -1,5 +1,4 @@
 #include "core/base/number_text.hpp"
-#include "core/file/entries.hpp"
 #include "core/file/fields.hpp"
 #include "core/file/site_table.hpp"
 
@@ -57,17 +56,17 @@ Result<SiteTable> read_site_table(std::string_view text) {
   fields.text("name", table.name);
   if (table.name.empty()) return not_a_site_table("name");
   each_entry(fields, "bonds", problems, [&](const Json& object, const std::string& path) {
-    table.bonds.push_back(read_typed_bond(object, path, problems));
+    table.bonds.push_back(read_record(object, kBond, path, problems));
     table.bonds.back().from = table.name;
   });
   each_entry(fields, "species", problems, [&](const Json& object, const std::string& path) {
-    table.figures.push_back(read_typed_figure(object, path, problems));
+    table.figures.push_back(read_record(object, kFigure, path, problems));
     table.figures.back().from = table.name;
   });
   each_entry(fields, "heats", problems, [&](const Json& object, const std::string& path) {
     SiteTable::Heat heat;
     heat.equation = object.string_or("equation", "");
-    heat.heat = read_heat(object, path, problems);
+    heat.heat = read_record(object, kHeat, path, problems);
     heat.heat.unknown.clear();  // the equation is the reaction's on the sheet
     heat.heat.from = table.name;
     table.heats.push_back(std::move(heat));

@@ -2,7 +2,6 @@
 #include <cstdlib>
 
 #include "core/base/number_text.hpp"
-#include "core/file/entries.hpp"
 #include "core/file/fields.hpp"
 #include "core/file/migration.hpp"
 #include "core/file/step_file.hpp"
@@ -10,21 +9,6 @@
 
 namespace heatledger::file {
 namespace {
-
-document::Header read_header(const Json& object, std::vector<Error>& problems) {
-  document::Header header;
-  Fields fields(object, "header", problems);
-  fields.text("title", header.title);
-  fields.text("subtitle", header.subtitle);
-  fields.text("sheet_number", header.sheet_number);
-  fields.text("revision", header.revision);
-  fields.text("prepared", header.prepared);
-  fields.text("prepared_date", header.prepared_date);
-  fields.text("checked", header.checked);
-  fields.text("checked_date", header.checked_date);
-  header.unknown = fields.rest();
-  return header;
-}
 
 /// Ids become parts of cell ids: a letter and up to six digits, so that they meet no other word there.
 bool usable_id(const std::string& id, char letter) {
@@ -36,17 +20,9 @@ document::ReactionSheet read_reaction_sheet(const Json& object, const std::strin
                                             std::vector<Error>& problems) {
   document::ReactionSheet reaction;
   Fields fields(object, path, problems);
-  fields.text("id", reaction.id);
-  fields.text("title", reaction.title);
-  fields.text("equation", reaction.equation);
-  fields.text("basis", reaction.basis);
-  fields.text("bond_set", reaction.bond_set);
-  fields.text("pinned_route", reaction.pinned_route);
-  fields.text("reactants_at", reaction.reactants_at);
-  fields.text("products_at", reaction.products_at);
-  fields.text("pressure", reaction.pressure);
+  fields.texts(kReaction, reaction);
   if (const Json* measured = fields.take("measured", Json::Kind::Object, "an object")) {
-    reaction.measured = read_heat(*measured, path + ".measured", problems);
+    reaction.measured = read_record(*measured, kHeat, path + ".measured", problems);
   }
   fields.text("note", reaction.note);
   fields.flag("show_profile", reaction.show_profile);
@@ -184,7 +160,7 @@ Result<Opened> read_worksheet(std::string_view text) {
   fields.skip("format");
   fields.skip("version");
   if (const Json* header = fields.take("header", Json::Kind::Object, "an object")) {
-    sheet.header = document::Shared<document::Header>(read_header(*header, problems));
+    sheet.header = document::Shared<document::Header>(read_record(*header, kHeader, "header", problems));
   }
   if (const Json* reactions = fields.take("reactions", Json::Kind::Array, "a list")) {
     each_object(*reactions, "reactions", sheet, problems, [&](const Json& object, const std::string& path) {
@@ -199,12 +175,12 @@ Result<Opened> read_worksheet(std::string_view text) {
   }
   if (const Json* bonds = fields.take("bonds", Json::Kind::Array, "a list")) {
     each_object(*bonds, "bonds", sheet, problems, [&](const Json& object, const std::string& path) {
-      sheet.typed_bonds.change().push_back(read_typed_bond(object, path, problems));
+      sheet.typed_bonds.change().push_back(read_record(object, kBond, path, problems));
     });
   }
   if (const Json* species = fields.take("species", Json::Kind::Array, "a list")) {
     each_object(*species, "species", sheet, problems, [&](const Json& object, const std::string& path) {
-      sheet.typed_figures.change().push_back(read_typed_figure(object, path, problems));
+      sheet.typed_figures.change().push_back(read_record(object, kFigure, path, problems));
     });
   }
   if (const Json* notes = fields.take("notes", Json::Kind::Array, "a list of texts")) {

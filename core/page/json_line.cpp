@@ -3,6 +3,7 @@
 #include <set>
 #include <utility>
 
+#include "core/base/utf8.hpp"
 #include "core/page/json_text.hpp"
 
 namespace heatledger::page {
@@ -12,25 +13,6 @@ constexpr int kDeepest = 64;
 
 bool is_digit(char c) {
   return c >= '0' && c <= '9';
-}
-
-void append_utf8(std::string& out, unsigned code) {
-  const auto put = [&](unsigned byte) { out += static_cast<char>(byte); };
-  if (code < 0x80) {
-    put(code);
-  } else if (code < 0x800) {
-    put(0xC0 | code >> 6);
-    put(0x80 | (code & 0x3F));
-  } else if (code < 0x10000) {
-    put(0xE0 | code >> 12);
-    put(0x80 | (code >> 6 & 0x3F));
-    put(0x80 | (code & 0x3F));
-  } else {
-    put(0xF0 | code >> 18);
-    put(0x80 | (code >> 12 & 0x3F));
-    put(0x80 | (code >> 6 & 0x3F));
-    put(0x80 | (code & 0x3F));
-  }
 }
 
 /// One pass over the line; the first thing that is wrong stops it and stands in `error`.
@@ -151,7 +133,7 @@ class Reader {
     } else if (code >= 0xDC00 && code < 0xE000) {
       return fail("bulk.not_json", "Half of a surrogate pair stands alone.");
     }
-    append_utf8(out, code);
+    utf8::append(out, code);
   }
 
   /// A string: points into the line when it holds no escape, else into `memory`.

@@ -18,16 +18,11 @@ struct Used {
       equations;  ///< one for each reaction, as plain text; empty where it cannot be read
 };
 
-std::string plain(const std::string& equation, balance::SpeciesSource& library) {
-  const Result<balance::Reaction> reaction = balance::read_reaction(equation, library);
-  return reaction.ok() ? balance::plain_equation(*reaction) : std::string();
-}
-
 Used used_by(const Worksheet& sheet, document::SheetLibrary& library) {
   Used used;
   for (const auto& entry : sheet.reactions) {
-    used.equations.push_back(plain(entry->equation, library));
     const Result<balance::Reaction> reaction = balance::read_reaction(entry->equation, library);
+    used.equations.push_back(reaction.ok() ? balance::plain_equation(*reaction) : std::string());
     if (!reaction.ok()) continue;
     for (const balance::ReactionSpecies& one : reaction->species) {
       used.species.insert(one.species->name);
@@ -81,8 +76,9 @@ Result<Edited> import_site_table(const Worksheet& sheet, std::string_view text, 
   }
   bonds.insert(bonds.begin(), kept_bonds.begin(), kept_bonds.end());
   for (const file::SiteTable::Heat& heat : table->heats) {
-    const std::string equation = plain(heat.equation, library);
-    if (equation.empty()) continue;
+    const Result<balance::Reaction> reaction = balance::read_reaction(heat.equation, library);
+    if (!reaction.ok()) continue;
+    const std::string equation = balance::plain_equation(*reaction);
     for (std::size_t i = 0; i < edited.sheet.reactions.size(); ++i) {
       const document::TypedHeat& present = edited.sheet.reactions[i]->measured;
       const bool free = present.blank() || present.from == table->name;

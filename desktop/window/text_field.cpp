@@ -3,6 +3,8 @@
 #include <algorithm>
 #include <utility>
 
+#include "core/base/utf8.hpp"
+
 namespace heatledger::window {
 namespace {
 
@@ -16,27 +18,6 @@ bool is_blank(char c) {
 }
 
 }  // namespace
-
-std::string utf8(char32_t code) {
-  std::string out;
-  const auto put = [&](char32_t byte) { out += static_cast<char>(byte); };
-  if (code < 0x80) {
-    put(code);
-  } else if (code < 0x800) {
-    put(0xC0 | code >> 6);
-    put(0x80 | (code & 0x3F));
-  } else if (code < 0x10000) {
-    put(0xE0 | code >> 12);
-    put(0x80 | (code >> 6 & 0x3F));
-    put(0x80 | (code & 0x3F));
-  } else {
-    put(0xF0 | code >> 18);
-    put(0x80 | (code >> 12 & 0x3F));
-    put(0x80 | (code >> 6 & 0x3F));
-    put(0x80 | (code & 0x3F));
-  }
-  return out;
-}
 
 std::string one_line(std::string_view text) {
   std::string out;
@@ -94,7 +75,8 @@ void TextField::character(char32_t code) {
   if (code < 0x20 || code == 0x7F) return;
   remember(!has_selection());
   erase_selection();
-  const std::string bytes = utf8(code);
+  std::string bytes;
+  utf8::append(bytes, code);
   text_.insert(caret_, bytes);
   caret_ = anchor_ = caret_ + bytes.size();
 }

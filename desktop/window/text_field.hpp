@@ -60,8 +60,6 @@ class TextField {
   bool typing_ = false;  ///< the last step was typing, which joins into one
 };
 
-/// UTF-8 of one character.
-std::string utf8(char32_t code);
 /// One line: tabs, line ends and other control characters become blanks, blanks at both ends go.
 std::string one_line(std::string_view text);
 

@@ -47,7 +47,8 @@ TEST(Readme, ExamplesPrintWhatTheySay) {
   ASSERT_FALSE(examples.empty()) << "README.md shows no example of the program";
   // A folder of its own, so that examples that write files leave the source tree alone.
   const TemporaryFolder folder;
-  std::filesystem::create_directory_symlink(source + "/worksheets", folder / "worksheets");
+  std::filesystem::create_directory_symlink(std::filesystem::path(source) / "worksheets",
+                                            folder / "worksheets");
   const std::string program = std::filesystem::path(HEATLEDGER_PROGRAM).parent_path().string();
   for (const Example& example : examples) {
     const Ran ran =

@@ -18,6 +18,16 @@ TEST(Utf8, TellsWhereTextIsMalformed) {
   }
 }
 
+TEST(Utf8, WritesWhatItReads) {
+  // First and last code point of each length (RFC 3629, section 3).
+  for (const std::uint32_t code : {0x0u, 0x7Fu, 0x80u, 0x7FFu, 0x800u, 0xFFFFu, 0x10000u, 0x10FFFFu}) {
+    std::string text;
+    append(text, code);
+    EXPECT_EQ(code_point_at(text, 0).value, code);
+    EXPECT_EQ(code_point_at(text, 0).bytes, text.size()) << code;
+  }
+}
+
 TEST(Utf8, TrimsBlanksOfEveryKind) {
   EXPECT_EQ(trim(" \t\u00A0a b\u2009\r\n"), "a b");
   EXPECT_EQ(trim("  "), "");
