@@ -3,7 +3,7 @@
 # past core/page.
 set -euo pipefail
 cd "$(dirname "$0")/../.."
-rooms=(base uncertainty units molecule facts estimate thermo balance step document file page)
+rooms=(base uncertainty units molecule facts estimate thermo balance step mixing burning dosing safety document file page)
 bad=0
 for i in "${!rooms[@]}"; do
   for ((k = i + 1; k < ${#rooms[@]}; k++)); do
