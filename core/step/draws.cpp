@@ -1,90 +1,24 @@
-// Seeded draws through a step. Only + − × ÷ √ and one logarithm a pair, so that native and browser draw
-// alike.
+// Seeded draws through a step.
 #include <algorithm>
 #include <cmath>
 
 #include "core/step/sought.hpp"
 #include "core/step/spread.hpp"
 #include "core/uncertainty/covariance.hpp"
+#include "core/uncertainty/normal_draws.hpp"
 
 namespace heatledger::step {
 namespace {
 
+using uncertainty::kHalfWidth;
 using uncertainty::Part;
-
-/// 95 % half width of the normal distribution in standard deviations.
-constexpr double kHalfWidth = 1.959963984540054;
-
-/// xoshiro256** with a splitmix64 start. @source D. Blackman, S. Vigna, ACM Trans. Math. Softw. 47 (2021) 36
-class Random {
- public:
-  explicit Random(std::uint64_t seed) {
-    for (std::uint64_t& word : state_) {
-      seed += 0x9e3779b97f4a7c15ULL;
-      std::uint64_t z = seed;
-      z = (z ^ (z >> 30)) * 0xbf58476d1ce4e5b9ULL;
-      z = (z ^ (z >> 27)) * 0x94d049bb133111ebULL;
-      word = z ^ (z >> 31);
-    }
-  }
-
-  /// Standard normal, by Marsaglia's polar method. @source SIAM Rev. 6 (1964) 260
-  double normal() {
-    if (kept_) {
-      kept_ = false;
-      return other_;
-    }
-    double a = 0, b = 0, square = 0;
-    do {
-      a = 2 * uniform() - 1;
-      b = 2 * uniform() - 1;
-      square = a * a + b * b;
-    } while (square >= 1 || square == 0);
-    const double factor = std::sqrt(-2 * std::log(square) / square);
-    other_ = b * factor;
-    kept_ = true;
-    return a * factor;
-  }
-
- private:
-  static std::uint64_t turned(std::uint64_t x, int by) { return (x << by) | (x >> (64 - by)); }
-
-  double uniform() {
-    const std::uint64_t result = turned(state_[1] * 5, 7) * 9, shifted = state_[1] << 17;
-    state_[2] ^= state_[0];
-    state_[3] ^= state_[1];
-    state_[1] ^= state_[2];
-    state_[0] ^= state_[3];
-    state_[2] ^= shifted;
-    state_[3] = turned(state_[3], 45);
-    return static_cast<double>(result >> 11) * 0x1.0p-53;
-  }
-
-  std::uint64_t state_[4];
-  double other_ = 0;
-  bool kept_ = false;
-};
+using uncertainty::Random;
 
 /// Numbers that share sources of error, drawn together through the root of their covariance.
 struct Block {
   std::vector<std::size_t> slots;
   std::vector<double> root;  ///< lower triangle by rows, in standard deviations
 };
-
-/// Cholesky's root; a direction without any spread of its own keeps a zero there.
-void take_root(std::vector<double>& m, std::size_t n) {
-  for (std::size_t j = 0; j < n; ++j) {
-    for (std::size_t i = j; i < n; ++i) {
-      double sum = m[i * n + j];
-      for (std::size_t k = 0; k < j; ++k) sum -= m[i * n + k] * m[j * n + k];
-      if (i == j) {
-        m[j * n + j] = sum > 1e-12 * m[j * n + j] ? std::sqrt(sum) : 0;
-      } else {
-        m[i * n + j] = m[j * n + j] > 0 ? sum / m[j * n + j] : 0;
-      }
-    }
-  }
-}
 
 std::vector<Block> blocks(const Model& model) {
   struct Use {
@@ -125,7 +59,7 @@ std::vector<Block> blocks(const Model& model) {
             uncertainty::covariance(slots[block.slots[i]].spread, slots[block.slots[j]].spread) /
             (kHalfWidth * kHalfWidth);
     }
-    take_root(block.root, n);
+    uncertainty::take_root(block.root, n);
     result.push_back(std::move(block));
   }
   return result;
