@@ -5,6 +5,7 @@
 #include <vector>
 
 #include "core/document/step_reading.hpp"
+#include "core/step/findings.hpp"
 #include "core/step/step_checker.hpp"
 
 namespace heatledger::document {
@@ -17,8 +18,11 @@ struct CurvePoint {
 
 /// A step computed. Immutable: the same inputs give the same object.
 struct StepOutcome {
-  std::shared_ptr<const step::StepResult> result;  ///< null: `errors` say why
-  std::vector<Error> errors;                       ///< of single texts, and of the step as a whole
+  /// The balance of streams; null: `errors` say why, or the kind of step has none.
+  std::shared_ptr<const step::StepResult> result;
+  /// What the kind of step answers beyond that; null: nothing.
+  std::shared_ptr<const step::Findings> findings;
+  std::vector<Error> errors;  ///< of single texts, and of the step as a whole
   std::vector<std::string> notes;
   std::shared_ptr<const void> library;  ///< that its species point into
   std::vector<CurvePoint> curve;  ///< answer against StepSheet::curve; empty when not asked or not possible

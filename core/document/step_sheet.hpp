@@ -26,6 +26,7 @@ struct FeedSheet {
   std::string at;    ///< temperature
   std::string pressure;
   std::string total;  ///< with shares: "1.2 t/h"; "20 % excess oxygen over methane"
+  std::string role;   ///< what it is for in this kind of step, see KindOfStep::roles; empty: the first
   std::vector<FeedRow> rows;
   std::string unknown;
 };
@@ -39,6 +40,17 @@ struct ProgressSheet {
   std::string heat_per;  ///< species it is stated per mole of; empty: for the coefficients written
   std::string heat_at;   ///< temperature it was measured at; empty: 25 °C
   std::string includes;  ///< mixing, dilution, evaporation, gas loss: "yes", "no", "unknown"
+  std::string rate_constant;  ///< "2.1e-4 L/(mol s)"; empty: as fast as dosed
+  std::string rate_at;        ///< temperature of the rate constant; empty: 25 °C
+  std::string activation;     ///< activation energy, "78 kJ/mol"
+  std::string orders;         ///< "1 in toluene, 1 in nitric acid"; empty: first order in each reactant
+  std::string unknown;
+};
+
+/// One point of a dosing profile: how much of the dosed feed has gone in by then; straight between points.
+struct ProfileRow {
+  std::string time;    ///< "1.5 h"
+  std::string amount;  ///< "40 %" of the feed
   std::string unknown;
 };
 
@@ -62,11 +74,12 @@ struct SpeciesRow {
 struct StepSheet {
   std::string id;  ///< "s1", stable through edits and files
   std::string title;
-  std::string kind;  ///< "through-flow" (also when empty) or "charge"
+  std::string kind;  ///< name of a kind, see step_kinds.hpp
   std::vector<FeedSheet> feeds;
   std::vector<ProgressSheet> reactions;
   std::vector<LeavingRow> leaving;
   std::vector<SpeciesRow> species;
+  std::vector<ProfileRow> profile;  ///< of the dosed feed
   /// Single blanks by name, see step_blanks(): "outlet.temperature" to "180 °C".
   std::map<std::string, std::string> blanks;
   std::string sought;  ///< id of the blank that is sought; empty: the duty
@@ -81,8 +94,8 @@ struct StepSheet {
 struct StepBlank {
   const char* id;
   const char* label;
-  const char* hint;  ///< an example with its unit
-  char kind;         ///< 'f' through-flow only, 'c' charge only, 'b' both
+  const char* hint;   ///< an example with its unit
+  const char* kinds;  ///< KindOfStep::letter of every kind that has it
 };
 /// In the order of the sheet.
 const std::vector<StepBlank>& step_blanks();

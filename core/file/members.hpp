@@ -58,17 +58,26 @@ inline constexpr TextMember<document::TypedFigure> kFigure[] = {{"species", &doc
 inline constexpr TextMember<document::FeedRow> kFeedRow[] = {{"species", &document::FeedRow::species},
                                                              {"amount", &document::FeedRow::amount}};
 
-inline constexpr TextMember<document::FeedSheet> kFeed[] = {{"name", &document::FeedSheet::name},
-                                                            {"from", &document::FeedSheet::from},
-                                                            {"at", &document::FeedSheet::at},
-                                                            {"pressure", &document::FeedSheet::pressure},
-                                                            {"total", &document::FeedSheet::total}};
+inline constexpr TextMember<document::FeedSheet> kFeed[] = {
+    {"name", &document::FeedSheet::name},   {"from", &document::FeedSheet::from},
+    {"at", &document::FeedSheet::at},       {"pressure", &document::FeedSheet::pressure},
+    {"total", &document::FeedSheet::total}, {"role", &document::FeedSheet::role}};
 
 inline constexpr TextMember<document::ProgressSheet> kProgress[] = {
-    {"reaction", &document::ProgressSheet::reaction}, {"how", &document::ProgressSheet::how},
-    {"figure", &document::ProgressSheet::figure},     {"heat", &document::ProgressSheet::heat},
-    {"heat_per", &document::ProgressSheet::heat_per}, {"heat_at", &document::ProgressSheet::heat_at},
-    {"includes", &document::ProgressSheet::includes}};
+    {"reaction", &document::ProgressSheet::reaction},
+    {"how", &document::ProgressSheet::how},
+    {"figure", &document::ProgressSheet::figure},
+    {"heat", &document::ProgressSheet::heat},
+    {"heat_per", &document::ProgressSheet::heat_per},
+    {"heat_at", &document::ProgressSheet::heat_at},
+    {"includes", &document::ProgressSheet::includes},
+    {"rate_constant", &document::ProgressSheet::rate_constant},
+    {"rate_at", &document::ProgressSheet::rate_at},
+    {"activation", &document::ProgressSheet::activation},
+    {"orders", &document::ProgressSheet::orders}};
+
+inline constexpr TextMember<document::ProfileRow> kProfile[] = {{"time", &document::ProfileRow::time},
+                                                                {"amount", &document::ProfileRow::amount}};
 
 inline constexpr TextMember<document::LeavingRow> kLeaving[] = {{"species", &document::LeavingRow::species},
                                                                 {"how", &document::LeavingRow::how}};

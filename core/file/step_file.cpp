@@ -56,6 +56,7 @@ Json step_json(const StepSheet& step) {
   add_records(out, "reactions", step.reactions, kProgress);
   add_records(out, "leaving", step.leaving, kLeaving);
   add_records(out, "species", step.species, kSpecies);
+  add_records(out, "profile", step.profile, kProfile);
   out.texts("blanks", step.blanks);
   out.flag("show_checker", step.show_checker);
   out.texts("checker", step.checker);
@@ -71,6 +72,7 @@ StepSheet read_step_sheet(const Json& object, const std::string& path, std::vect
   read_records(fields, "reactions", step.reactions, kProgress, problems);
   read_records(fields, "leaving", step.leaving, kLeaving, problems);
   read_records(fields, "species", step.species, kSpecies, problems);
+  read_records(fields, "profile", step.profile, kProfile, problems);
   fields.texts("blanks", step.blanks);
   fields.flag("show_checker", step.show_checker);
   fields.texts("checker", step.checker);

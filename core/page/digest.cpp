@@ -4,6 +4,7 @@
 #include <cstdint>
 
 #include "core/page/figures.hpp"
+#include "core/page/findings_blocks.hpp"
 #include "core/page/step_figures.hpp"
 
 namespace heatledger::page {
@@ -54,6 +55,18 @@ void add_reaction(Digest& digest, const document::ReactionResult& result) {
   if (!ledger.to_temperature.empty()) add_quantity(digest, ledger.as_run);
 }
 
+/// Every figure goes into the digest, the first that there is stands in the list.
+void add_findings(Digest& digest, const std::string& id, const step::Findings& findings,
+                  file::SavedResults& saved) {
+  for (const step::FindingGroup& group : findings.groups) {
+    for (const step::Finding& finding : group.findings) {
+      const std::string sentence = finding_sentence(finding);
+      digest.add(sentence);
+      if (finding.why_missing.empty()) saved.figures.emplace(id, sentence);
+    }
+  }
+}
+
 }  // namespace
 
 file::SavedResults results_to_save(const document::Worksheet& sheet, const document::Results& results) {
@@ -69,7 +82,9 @@ file::SavedResults results_to_save(const document::Worksheet& sheet, const docum
   }
   for (std::size_t i = 0; i < sheet.steps.size(); ++i) {
     const document::StepOutcome& outcome = *results.steps[i];
+    if (outcome.findings != nullptr) add_findings(digest, sheet.steps[i]->id, *outcome.findings, saved);
     if (outcome.result == nullptr) {
+      if (outcome.findings != nullptr) continue;
       digest.add(outcome.errors.empty() ? "empty" : outcome.errors.front().code);
       continue;
     }

@@ -4,6 +4,7 @@
 
 #include "core/balance/ledger.hpp"
 #include "core/base/number_text.hpp"
+#include "core/document/step_kinds.hpp"
 #include "core/page/figures.hpp"
 #include "core/page/step_edits.hpp"
 
@@ -364,8 +365,9 @@ Result<Edited> apply_edit(const Worksheet& sheet, const document::Results& resul
                : edit_line(sheet, &Worksheet::assumptions, *index, text, cell, "edit assumption");
   }
   if (cell == "reactions.add_reaction") return apply_command(sheet, results, "add_reaction", {});
-  if (cell == "steps.add_flow") return add_step(sheet, "through-flow");
-  if (cell == "steps.add_charge") return add_step(sheet, "charge");
+  for (const document::KindOfStep& kind : document::kinds_of_step()) {
+    if (cell == std::string("steps.add.") + kind.letter) return add_step(sheet, kind.name);
+  }
   const std::size_t step = document::find_step(sheet, id[0]);
   if (step < sheet.steps.size()) return edit_step(sheet, step, id, text);
   const std::size_t index = document::find_reaction(sheet, id[0]);

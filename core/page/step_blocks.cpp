@@ -1,8 +1,10 @@
 #include "core/page/step_blocks.hpp"
 
 #include "core/base/number_text.hpp"
+#include "core/document/step_kinds.hpp"
 #include "core/molecule/equation.hpp"
 #include "core/page/cells.hpp"
+#include "core/page/findings_blocks.hpp"
 #include "core/page/step_figures.hpp"
 #include "core/step/words.hpp"
 
@@ -12,12 +14,10 @@ namespace {
 using document::StepSheet;
 using step::StepResult;
 
-bool is_charge(const StepSheet& sheet) {
-  return sheet.kind == "charge";
-}
-
 /// Blanks that can be sought, with their words.
 std::vector<std::pair<std::string, std::string>> seekable(const StepSheet& sheet) {
+  const document::KindOfStep& kind = document::kind_of(sheet);
+  if (!kind.sought.empty()) return {kind.sought.begin(), kind.sought.end()};
   std::vector<std::pair<std::string, std::string>> list{{"duty", "duty, heat to the process"},
                                                         {"outlet.temperature", "outlet or end temperature"},
                                                         {"loss", "heat loss"},
@@ -34,7 +34,7 @@ std::vector<std::pair<std::string, std::string>> seekable(const StepSheet& sheet
   for (std::size_t j = 0; j < sheet.reactions.size(); ++j)
     list.push_back({"reaction." + std::to_string(j) + ".progress",
                     "progress of " + sheet.reactions[j].reaction + ", " + sheet.reactions[j].how});
-  if (is_charge(sheet)) list.push_back({"vessel.heat_capacity", "vessel and internals"});
+  if (!kind.per_time) list.push_back({"vessel.heat_capacity", "vessel and internals"});
   return list;
 }
 
@@ -47,30 +47,42 @@ Cell choice_cell(std::string id, std::string text, std::vector<std::string> choi
 class Blocks {
  public:
   explicit Blocks(const StepView& view)
-      : view_(view), sheet_(view.sheet), result_(view.outcome.result.get()), id_(view.sheet.id) {}
+      : view_(view),
+        sheet_(view.sheet),
+        kind_(document::kind_of(view.sheet)),
+        result_(view.outcome.result.get()),
+        findings_(view.outcome.findings.get()),
+        id_(view.sheet.id) {}
 
   std::vector<Block> build() {
-    const std::string kind = is_charge(sheet_) ? "charge" : "through-flow";
+    const std::string kind = kind_.name;
     blocks_.push_back(heading_block(
         id_ + ".heading",
         "Step " + std::to_string(view_.number) + ": " + (sheet_.title.empty() ? kind : sheet_.title), kind));
     add(head());
     errors();
     add(answers());
+    if (findings_ != nullptr) add_all(findings_groups(id_, *findings_));
     add(feeds());
-    add(reactions());
+    if (kind_.profile) add(profile());
+    if (kind_.reactions) add(reactions());
     add(conditions());
-    add(leaving());
-    add(species());
+    if (kind_.leaving) add(leaving());
+    if (kind_.species) add(species());
     add(out());
     checker();
     drawings();
+    if (findings_ != nullptr) add_all(findings_charts(id_, *findings_));
     notes();
     return std::move(blocks_);
   }
 
  private:
-  bool flow() const { return !is_charge(sheet_); }
+  bool flow() const { return kind_.per_time; }
+
+  void add_all(std::vector<Block> blocks) {
+    for (Block& block : blocks) blocks_.push_back(std::move(block));
+  }
 
   void add(Table table) {
     if (!table.rows.empty()) blocks_.push_back(std::move(table));
@@ -95,15 +107,20 @@ class Blocks {
   Table head() {
     Table form = table("head", TableLook::Form, {column("what", "", Align::Left, 0.35), column("value", "")});
     form_row(form, "title", "Title", typed_cell(id_ + ".title", sheet_.title, "what happens in this step"));
-    form_row(form, "kind", "Kind of step",
-             choice_cell(id_ + ".kind", is_charge(sheet_) ? "charge" : "through-flow",
-                         {"through-flow", "charge"}));
+    std::vector<std::string> kinds;
+    for (const document::KindOfStep& kind : document::kinds_of_step()) kinds.emplace_back(kind.name);
+    form_row(form, "kind", "Kind of step", choice_cell(id_ + ".kind", kind_.name, std::move(kinds)));
     std::vector<std::string> blanks, drawn{"nothing"};
     for (const auto& entry : seekable(sheet_)) blanks.push_back(entry.second);
     drawn.insert(drawn.end(), blanks.begin(), blanks.end());
-    const std::string sought = sheet_.sought.empty() ? "duty" : sheet_.sought;
-    form_row(form, "sought", "Sought",
-             choice_cell(id_ + ".sought", sought_words(sheet_, sought), std::move(blanks)));
+    const std::string sought = sheet_.sought.empty() ? seekable(sheet_).front().first : sheet_.sought;
+    if (blanks.size() > 1)
+      form_row(form, "sought", "Sought",
+               choice_cell(id_ + ".sought", sought_words(sheet_, sought), std::move(blanks)));
+    if (!kind_.sought.empty()) {
+      form_row(form, "remove", "", button_cell(id_ + ".remove", "Remove this step"), true);
+      return form;
+    }
     form_row(
         form, "curve", "Drawn against",
         choice_cell(id_ + ".curve", sheet_.curve.empty() ? "nothing" : sought_words(sheet_, sheet_.curve),
@@ -153,7 +170,9 @@ class Blocks {
       for (const document::StepBlank& blank : document::step_blanks()) {
         if (cell == blank.id) return {id_ + ".blank." + cell};
       }
-      if (!begins("leaving.") && !begins("species.") && !begins("feed.") && !begins("reaction.")) return {};
+      if (!begins("leaving.") && !begins("species.") && !begins("profile.") && !begins("feed.") &&
+          !begins("reaction."))
+        return {};
       if (const std::size_t part = cell.find(".part."); part != std::string::npos) {
         cell.replace(part, 6, ".row.");
         cell += ".amount";
@@ -224,14 +243,21 @@ class Blocks {
                     typed_cell(id + ".total", feed.total, "with shares: its amount", CellKind::Number),
                     typed_cell(id + ".at", feed.at, "25 °C", CellKind::Number),
                     typed_cell(id + ".pressure", feed.pressure, "1 atm", CellKind::Number)};
+      int free = 3;
+      if (!kind_.roles.empty()) {
+        std::vector<std::string> roles(kind_.roles.begin(), kind_.roles.end());
+        head.cells.push_back(
+            choice_cell(id + ".role", feed.role.empty() ? roles.front() : feed.role, std::move(roles)));
+        --free;
+      }
       if (view_.steps_above.empty()) {
-        head.cells.push_back(label_cell("", Tone::Plain, 3));
+        head.cells.push_back(label_cell("", Tone::Plain, free));
       } else {
         std::vector<std::string> sources{"own rows"};
         for (const std::string& above : view_.steps_above) sources.push_back("from " + above);
         Cell from = choice_cell(id + ".from", feed.from.empty() ? "own rows" : "from " + feed.from,
                                 std::move(sources));
-        from.span = 3;
+        from.span = free;
         head.cells.push_back(std::move(from));
       }
       list.rows.push_back(std::move(head));
@@ -308,6 +334,7 @@ class Blocks {
         for (int i = 0; i < 4; ++i) row.cells.push_back(label_cell(""));
       }
       list.rows.push_back(std::move(row));
+      if (kind_.rate_law && !spare) list.rows.push_back(rate_law(typed, id));
       if (typed.heat.empty()) continue;
       Row measured = row_of(id + ".measured", RowRole::Detail);
       Cell includes = choice_cell(id + ".includes", typed.includes.empty() ? "unknown" : typed.includes,
@@ -324,12 +351,45 @@ class Blocks {
     return list;
   }
 
+  static Row rate_law(const document::ProgressSheet& typed, const std::string& id) {
+    Row row = row_of(id + ".rate", RowRole::Detail);
+    Cell orders = typed_cell(id + ".orders", typed.orders, "1 in each reactant");
+    orders.span = 2;
+    row.cells = {
+        label_cell("rate constant", Tone::Quiet),
+        typed_cell(id + ".rate_constant", typed.rate_constant, "none: as fast as dosed", CellKind::Number),
+        label_cell("at", Tone::Quiet),
+        typed_cell(id + ".rate_at", typed.rate_at, "25 °C", CellKind::Number),
+        label_cell("activation energy", Tone::Quiet),
+        typed_cell(id + ".activation", typed.activation, "78 kJ/mol", CellKind::Number),
+        std::move(orders)};
+    return row;
+  }
+
+  /// How much of the dosed feed has gone in by when.
+  Table profile() {
+    Table list = table("profile", TableLook::List,
+                       {column("time", "Dosing: time since the start", Align::Left, 0.5),
+                        column("amount", "gone in by then")});
+    for (std::size_t i = 0; i <= sheet_.profile.size(); ++i) {
+      const bool spare = i == sheet_.profile.size();
+      const document::ProfileRow typed = spare ? document::ProfileRow{} : sheet_.profile[i];
+      const std::string id = id_ + ".profile." + std::to_string(i);
+      Row row = row_of(id + ".line");
+      row.screen_only = spare;
+      row.cells = {typed_cell(id + ".time", typed.time, "1.5 h", CellKind::Number),
+                   typed_cell(id + ".amount", typed.amount, "40 %", CellKind::Number)};
+      list.rows.push_back(std::move(row));
+    }
+    return list;
+  }
+
   Table conditions() {
     Table form =
         table("conditions", TableLook::Form, {column("what", "", Align::Left, 0.35), column("value", "")});
-    const std::string sought = sheet_.sought.empty() ? "duty" : sheet_.sought;
+    const std::string sought = sheet_.sought.empty() ? seekable(sheet_).front().first : sheet_.sought;
     for (const document::StepBlank& blank : document::step_blanks()) {
-      if (blank.kind == 'c' && flow()) continue;
+      if (std::string_view(blank.kinds).find(kind_.letter) == std::string_view::npos) continue;
       const auto typed = sheet_.blanks.find(blank.id);
       const std::string text = typed == sheet_.blanks.end() ? std::string() : typed->second;
       Cell cell = typed_cell(id_ + ".blank." + blank.id, text, blank.hint, CellKind::Number);
@@ -491,21 +551,33 @@ class Blocks {
     const auto add_note = [&](NoteKind kind, const std::string& text) {
       blocks_.push_back(note_block(id_ + ".note." + std::to_string(n++), kind, text));
     };
-    if (result_ == nullptr) {
+    if (result_ == nullptr && findings_ == nullptr) {
       if (sheet_.feeds.empty())
         add_note(NoteKind::Info,
                  "Name a feed and what it brings; the balance follows as soon as it is complete.");
       return;
     }
-    for (const std::string& caution : result_->cautions) add_note(NoteKind::Caution, caution);
+    if (result_ != nullptr) {
+      for (const std::string& caution : result_->cautions) add_note(NoteKind::Caution, caution);
+    }
+    if (findings_ != nullptr) {
+      for (const std::string& caution : findings_->cautions) add_note(NoteKind::Caution, caution);
+    }
     for (const std::string& note : view_.outcome.notes) add_note(NoteKind::Info, note);
-    for (const std::string& note : result_->notes) add_note(NoteKind::Info, note);
+    if (result_ != nullptr) {
+      for (const std::string& note : result_->notes) add_note(NoteKind::Info, note);
+    }
+    if (findings_ != nullptr) {
+      for (const std::string& note : findings_->notes) add_note(NoteKind::Info, note);
+    }
     if (!sheet_.note.empty()) add_note(NoteKind::Info, sheet_.note);
   }
 
   const StepView& view_;
   const StepSheet& sheet_;
+  const document::KindOfStep& kind_;
   const StepResult* result_;
+  const step::Findings* findings_;
   std::string id_;
   std::vector<Block> blocks_;
 };
@@ -532,11 +604,13 @@ std::vector<Block> add_step_blocks() {
   Table table;
   table.id = "steps.add";
   table.look = TableLook::Form;
-  table.columns = {column("flow", ""), column("charge", "")};
   Row row = row_of("steps.add.row");
   row.screen_only = true;
-  row.cells = {button_cell("steps.add_flow", "Add a through-flow step"),
-               button_cell("steps.add_charge", "Add a charge step")};
+  for (const document::KindOfStep& kind : document::kinds_of_step()) {
+    const std::string letter(1, kind.letter);
+    table.columns.push_back(column(letter, ""));
+    row.cells.push_back(button_cell("steps.add." + letter, kind.button));
+  }
   table.rows.push_back(std::move(row));
   return {std::move(table)};
 }
@@ -557,6 +631,9 @@ std::string sought_from_words(const StepSheet& sheet, const std::string& words) 
 
 std::optional<Margin> step_margin(const StepSheet& sheet, const document::StepOutcome& outcome,
                                   const std::string& cell) {
+  if (outcome.findings != nullptr) {
+    if (std::optional<Margin> found = findings_margin(sheet.id, *outcome.findings, cell)) return found;
+  }
   if (outcome.result == nullptr) return std::nullopt;
   const StepResult& result = *outcome.result;
   Margin margin;

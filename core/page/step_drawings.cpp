@@ -3,39 +3,13 @@
 #include <cmath>
 
 #include "core/base/number_text.hpp"
+#include "core/page/plot.hpp"
 #include "core/page/step_blocks.hpp"
 #include "core/page/step_figures.hpp"
 #include "core/step/words.hpp"
 
 namespace heatledger::page {
 namespace {
-
-Words words_at(double x, double y, std::string text, Ink ink = Ink::Text, Align anchor = Align::Left,
-               double size = 9) {
-  Words words;
-  words.x = x;
-  words.y = y;
-  words.text = std::move(text);
-  words.ink = ink;
-  words.anchor = anchor;
-  words.size = size;
-  return words;
-}
-
-Stroke line(double x0, double y0, double x1, double y1, Ink ink, double width = 1) {
-  Stroke stroke;
-  stroke.xy = {x0, y0, x1, y1};
-  stroke.ink = ink;
-  stroke.width = width;
-  return stroke;
-}
-
-Fill box(double x0, double y0, double x1, double y1, Ink ink) {
-  Fill fill;
-  fill.ink = ink;
-  fill.xy = {x0, y0, x1, y0, x1, y1, x0, y1};
-  return fill;
-}
 
 Ink ink_of(step::HeatLine::Kind kind) {
   switch (kind) {
@@ -48,23 +22,6 @@ Ink ink_of(step::HeatLine::Kind kind) {
     default:
       return Ink::Formed;
   }
-}
-
-/// 1, 2 or 5 times a power of ten, at least range / most.
-double tick_step(double range, int most) {
-  double step = 1e-6;
-  const double factors[3] = {2, 2.5, 2};
-  for (int i = 0; range / step > most && i < 90; ++i) step *= factors[i % 3];
-  return step;
-}
-
-int tick_decimals(double step) {
-  int decimals = 0;
-  while (step < 0.999 && decimals < 6) {
-    step *= 10;
-    ++decimals;
-  }
-  return decimals;
 }
 
 }  // namespace
@@ -89,8 +46,8 @@ Drawing heat_bands(const std::string& id, const step::StepResult& result) {
       if ((heat.in > 0) != coming) continue;
       const double height = kHeight * std::fabs(heat.in) / in;
       const double x0 = coming ? kLeft : kRight - kBand, x1 = coming ? kLeft + kBand : kRight;
-      drawing.fills.push_back(box(x0, y, x1, y + height, ink_of(heat.kind)));
-      drawing.strokes.push_back(line(x0, y, x1, y, Ink::Axis, 0.5));
+      drawing.fills.push_back(box_between(x0, y, x1, y + height, ink_of(heat.kind)));
+      drawing.strokes.push_back(line_between(x0, y, x1, y, Ink::Axis, 0.5));
       // Thin bands keep their labels apart.
       words_y = std::max(y + height / 2 + 3, words_y + kPitch);
       drawing.words.push_back(words_at(coming ? kLeft - 8 : kRight + 8, words_y,
@@ -101,10 +58,10 @@ Drawing heat_bands(const std::string& id, const step::StepResult& result) {
     lowest = std::max(lowest, words_y + 4);
   }
   // Between them runs the whole.
-  drawing.fills.push_back(box(kLeft + kBand, kTop, kRight - kBand, kTop + kHeight, Ink::Grid));
+  drawing.fills.push_back(box_between(kLeft + kBand, kTop, kRight - kBand, kTop + kHeight, Ink::Grid));
   drawing.words.push_back(
       words_at(kMiddle, kTop + kHeight / 2 + 3, shown_heat(in, flow), Ink::QuietText, Align::Centre));
-  drawing.strokes.push_back(line(kLeft, kTop + kHeight, kRight, kTop + kHeight, Ink::Axis, 0.5));
+  drawing.strokes.push_back(line_between(kLeft, kTop + kHeight, kRight, kTop + kHeight, Ink::Axis, 0.5));
   drawing.height = lowest + 8;
   return drawing;
 }
@@ -130,39 +87,10 @@ Drawing answer_curve(const std::string& id, const document::StepOutcome& outcome
     low = std::min(low, y_of(point.y - point.u95));
     high = std::max(high, y_of(point.y + point.u95));
   }
-  if (!(high - low > 1e-9 * std::max(std::fabs(low), std::fabs(high)))) {
-    const double around = std::max(1.0, std::fabs(high)) / 10;
-    low -= around;
-    high += around;
-  }
-  const double y_step = tick_step(high - low, 5);
-  low = std::floor(low / y_step) * y_step;
-  high = std::ceil(high / y_step) * y_step;
   const double left = x_of(outcome.curve.front().x), right = x_of(outcome.curve.back().x);
-  const double x_step = tick_step(right - left, 6);
-
-  constexpr double kLeft = 70, kRight = 480, kTop = 26, kBottom = 190;
-  const auto px = [&](double x) { return kLeft + (kRight - kLeft) * (x - left) / (right - left); };
-  const auto py = [&](double y) { return kBottom - (kBottom - kTop) * (y - low) / (high - low); };
-  drawing.width = 520;
-  drawing.height = kBottom + 36;
-  for (int i = 0; low + i * y_step <= high + y_step / 2; ++i) {
-    const double y = low + i * y_step;
-    drawing.strokes.push_back(line(kLeft, py(y), kRight, py(y), Ink::Grid, 0.5));
-    drawing.words.push_back(words_at(kLeft - 6, py(y) + 3, display_number(y, tick_decimals(y_step)),
-                                     Ink::QuietText, Align::Right));
-  }
-  for (int i = 0;; ++i) {
-    const double x = (std::ceil(left / x_step - 1e-9) + i) * x_step;
-    if (x > right + 1e-9 * x_step) break;
-    drawing.strokes.push_back(line(px(x), kBottom, px(x), kBottom + 4, Ink::Axis, 0.5));
-    drawing.words.push_back(words_at(px(x), kBottom + 15, display_number(x, tick_decimals(x_step)),
-                                     Ink::QuietText, Align::Centre));
-  }
-  drawing.words.push_back(words_at(kLeft - 6, kTop - 12, y_unit, Ink::QuietText, Align::Right));
-  drawing.words.push_back(
-      words_at(kRight, kBottom + 30, outcome.curve_label + ", " + x_unit, Ink::QuietText, Align::Right));
-  drawing.strokes.push_back(line(kLeft, kBottom, kRight, kBottom, Ink::Axis, 0.5));
+  const Plot plot(drawing, {left, right, low, high, outcome.curve_label + ", " + x_unit, y_unit});
+  const auto px = [&](double x) { return plot.x(x); };
+  const auto py = [&](double y) { return plot.y(y); };
 
   Fill band;
   band.ink = Ink::Band;
@@ -185,7 +113,7 @@ Drawing answer_curve(const std::string& id, const document::StepOutcome& outcome
   for (const step::Slot& slot : model.slots()) {
     if (slot.label != outcome.curve_label) continue;
     const double x = px(x_of(slot.value)), y = py(y_of(answer.value.value()));
-    drawing.fills.push_back(box(x - 3, y - 3, x + 3, y + 3, Ink::Typed));
+    drawing.fills.push_back(box_between(x - 3, y - 3, x + 3, y + 3, Ink::Typed));
     drawing.words.push_back(words_at(x + 6, y + 13, "as typed", Ink::Typed));
   }
   return drawing;

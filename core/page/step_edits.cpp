@@ -1,5 +1,6 @@
 #include "core/page/step_edits.hpp"
 
+#include "core/document/step_kinds.hpp"
 #include "core/page/step_blocks.hpp"
 
 namespace heatledger::page {
@@ -40,11 +41,14 @@ bool blank_row(const document::FeedRow& row) {
 }
 bool blank_feed(const document::FeedSheet& feed) {
   return feed.name.empty() && feed.from.empty() && feed.at.empty() && feed.pressure.empty() &&
-         feed.total.empty() && feed.rows.empty() && feed.unknown.empty();
+         feed.total.empty() && feed.role.empty() && feed.rows.empty() && feed.unknown.empty();
 }
 bool blank_progress(const document::ProgressSheet& progress) {
   return progress.reaction.empty() && progress.how.empty() && progress.figure.empty() &&
-         progress.heat.empty() && progress.unknown.empty();
+         progress.heat.empty() && progress.rate_constant.empty() && progress.unknown.empty();
+}
+bool blank_profile(const document::ProfileRow& row) {
+  return row.time.empty() && row.amount.empty() && row.unknown.empty();
 }
 bool blank_leaving(const document::LeavingRow& row) {
   return row.species.empty() && row.how.empty() && row.unknown.empty();
@@ -71,24 +75,34 @@ std::string* place(StepSheet& step, const IdParts& id) {
            : id[3] == "pressure" ? &feed->pressure
            : id[3] == "total"    ? &feed->total
            : id[3] == "from"     ? &feed->from
+           : id[3] == "role"     ? &feed->role
                                  : nullptr;
   }
   if (field == "reaction" && id.size() == 4) {
     document::ProgressSheet* progress = entry(step.reactions, id[2]);
     if (progress == nullptr) return nullptr;
-    return id[3] == "reaction"   ? &progress->reaction
-           : id[3] == "how"      ? &progress->how
-           : id[3] == "figure"   ? &progress->figure
-           : id[3] == "heat"     ? &progress->heat
-           : id[3] == "heat_per" ? &progress->heat_per
-           : id[3] == "heat_at"  ? &progress->heat_at
-           : id[3] == "includes" ? &progress->includes
-                                 : nullptr;
+    return id[3] == "reaction"        ? &progress->reaction
+           : id[3] == "how"           ? &progress->how
+           : id[3] == "figure"        ? &progress->figure
+           : id[3] == "heat"          ? &progress->heat
+           : id[3] == "heat_per"      ? &progress->heat_per
+           : id[3] == "heat_at"       ? &progress->heat_at
+           : id[3] == "includes"      ? &progress->includes
+           : id[3] == "rate_constant" ? &progress->rate_constant
+           : id[3] == "rate_at"       ? &progress->rate_at
+           : id[3] == "activation"    ? &progress->activation
+           : id[3] == "orders"        ? &progress->orders
+                                      : nullptr;
   }
   if (field == "leaving" && id.size() == 4) {
     document::LeavingRow* row = entry(step.leaving, id[2]);
     if (row == nullptr) return nullptr;
     return id[3] == "species" ? &row->species : id[3] == "how" ? &row->how : nullptr;
+  }
+  if (field == "profile" && id.size() == 4) {
+    document::ProfileRow* row = entry(step.profile, id[2]);
+    if (row == nullptr) return nullptr;
+    return id[3] == "time" ? &row->time : id[3] == "amount" ? &row->amount : nullptr;
   }
   if (field == "species" && id.size() == 4) {
     document::SpeciesRow* row = entry(step.species, id[2]);
@@ -103,11 +117,24 @@ std::string* place(StepSheet& step, const IdParts& id) {
   return nullptr;
 }
 
+/// How the file names a kind; the first goes without a name, and what names none is taken for it.
+std::string kept_kind(const std::string& kind) {
+  const auto& kinds = document::kinds_of_step();
+  for (std::size_t i = 1; i < kinds.size(); ++i) {
+    if (kind == kinds[i].name) return kind;
+  }
+  return {};
+}
+
 /// What a choice or a button of the step stands for: "from s1" is "s1", "none" is nothing.
-std::string meant(const IdParts& id, const std::string& text) {
+std::string meant(const StepSheet& step, const IdParts& id, const std::string& text) {
   if (id.back() == "from")
     return text == "own rows" ? "" : text.compare(0, 5, "from ") == 0 ? text.substr(5) : text;
   if (id.size() == 4 && id[1] == "reaction" && id[3] == "reaction" && text == "none") return {};
+  if (id.back() == "role") {
+    const std::vector<const char*>& roles = document::kind_of(step).roles;
+    if (!roles.empty() && text == roles.front()) return {};
+  }
   return text;
 }
 
@@ -122,16 +149,17 @@ Result<Edited> edit_step(const Worksheet& sheet, std::size_t index, const IdPart
     edited.sheet.steps.erase(edited.sheet.steps.begin() + static_cast<std::ptrdiff_t>(index));
     return edited;
   }
-  if (id[1] == "answer" || id[1] == "out") {
+  if (id[1] == "answer" || id[1] == "find" || id[1] == "out") {
     return Error{"edit.not_editable", "This cell is worked out by the sheet and cannot be typed over.",
                  "cell", "Change what it is worked out from; its working names it."};
   }
   StepSheet& step = edited.sheet.steps[index].change();
   if (id.size() == 2 && id[1] == "kind") {
-    step.kind = text == "charge" ? "charge" : "";
+    step.kind = kept_kind(text);
   } else if (id.size() == 2 && id[1] == "sought") {
     const std::string blank = sought_from_words(step, text);
-    step.sought = blank == "duty" ? "" : blank;
+    const auto& choices = document::kind_of(step).sought;
+    step.sought = blank == (choices.empty() ? "duty" : choices.front().first) ? "" : blank;
   } else if (id.size() == 2 && id[1] == "curve") {
     step.curve = text == "nothing" || text.empty() ? "" : sought_from_words(step, text);
   } else if (id.size() == 2 && id[1] == "show_checker") {
@@ -161,10 +189,11 @@ Result<Edited> edit_step(const Worksheet& sheet, std::size_t index, const IdPart
   } else {
     std::string* at = place(step, id);
     if (at == nullptr) return no_such_cell(id);
-    *at = meant(id, text);
+    *at = meant(step, id, text);
     for (document::FeedSheet& feed : step.feeds) drop_blank(feed.rows, blank_row);
     drop_blank(step.feeds, blank_feed);
     drop_blank(step.reactions, blank_progress);
+    drop_blank(step.profile, blank_profile);
     drop_blank(step.leaving, blank_leaving);
     drop_blank(step.species, blank_species);
   }
@@ -175,7 +204,7 @@ Edited add_step(const Worksheet& sheet, const std::string& kind) {
   Edited edited{sheet, "add step"};
   StepSheet step;
   step.id = document::free_step_id(sheet);
-  step.kind = kind == "charge" ? "charge" : "";
+  step.kind = kept_kind(kind);
   edited.sheet.steps.push_back(document::Shared<StepSheet>(std::move(step)));
   return edited;
 }

@@ -11,7 +11,7 @@ namespace heatledger::page {
 Result<Edited> edit_step(const document::Worksheet& sheet, std::size_t step, const IdParts& id,
                          const std::string& text);
 
-/// @param kind  "through-flow" or "charge"
+/// @param kind  name of a kind, see document/step_kinds.hpp
 Edited add_step(const document::Worksheet& sheet, const std::string& kind);
 
 /// add_step, remove_step, move_step. @errors command.argument, command.unknown

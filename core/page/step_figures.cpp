@@ -40,6 +40,18 @@ Scale scale_of(const units::Dimension& dimension, double size, bool ratio) {
   if (dimension == d::kHeatTransferPerKelvin) return {1e3, 0, "kW/K"};
   if (dimension == d::kHeatCapacity) return {1e3, 0, "kJ/K"};
   if (dimension == d::kPressure) return {1e3, 0, "kPa"};
+  if (dimension == d::kMassFraction) return {0.01, 0, "wt%"};
+  if (dimension == d::kMoleFraction) return {0.01, 0, "mol%"};
+  if (dimension == d::kVolumeFraction) return {0.01, 0, "vol%"};
+  if (dimension == d::kEnergyPerMole) return {1e3, 0, "kJ/mol"};
+  if (dimension == d::kMolarHeatCapacity) return {1, 0, "J/(mol K)"};
+  if (dimension == d::kMassHeatCapacity) return {1e3, 0, "kJ/(kg K)"};
+  if (dimension == d::kHeatTransferCoefficient) return {1, 0, "W/(m² K)"};
+  if (dimension == d::kArea) return {1, 0, "m²"};
+  if (dimension == d::kDensity) return {1, 0, "kg/m³"};
+  if (dimension == d::kConcentration) return {1e3, 0, "mol/L"};
+  if (dimension == d::kMolarMass) return {1e-3, 0, "g/mol"};
+  if (dimension == d::kLength) return {1, 0, "m"};
   return {1, 0, ""};
 }
 
@@ -90,8 +102,8 @@ std::string drawn_text(const step::Answer& answer) {
   return words;
 }
 
-double in_shown_unit(double in_si, const units::Dimension& dimension, double largest) {
-  const Scale scale = scale_of(dimension, largest, false);
+double in_shown_unit(double in_si, const units::Dimension& dimension, double largest, bool ratio) {
+  const Scale scale = scale_of(dimension, largest, ratio);
   return (in_si - scale.offset) / scale.factor;
 }
 

@@ -21,7 +21,7 @@ ShownFigure shown_answer(const step::Answer& answer);
 /// "2.5 to 97.5 % of the draws: 410 to 455 °C"; empty without draws.
 std::string drawn_text(const step::Answer& answer);
 /// A point of an axis or table in the same unit as `shown_figure` gives it.
-double in_shown_unit(double in_si, const units::Dimension& dimension, double largest);
+double in_shown_unit(double in_si, const units::Dimension& dimension, double largest, bool ratio = false);
 
 /// [mol] or [mol/s] as kmol or kmol/h, [kg] or [kg/s] as kg or kg/h; four significant digits.
 std::string shown_amount(double amount, bool flow);

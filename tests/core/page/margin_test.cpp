@@ -63,7 +63,7 @@ TEST(Margin, SaysWhyTheRoutesDiffer) {
 
 TEST(Margin, ABlankDoesNotPassItsExampleOffAsTyped) {
   Session session = worked_sheet();
-  ASSERT_TRUE(session.edit("steps.add_charge", "").ok());
+  ASSERT_TRUE(session.edit("steps.add.c", "").ok());
   ASSERT_TRUE(session.edit("s1.feed.0.name", "charge").ok());
   const Result<Margin> margin = session.margin("s1.feed.0.row.0.amount");
   ASSERT_TRUE(margin.ok()) << margin.error().message;

@@ -17,7 +17,7 @@ void type(Session& session, const std::string& cell, const std::string& text) {
 Session shift_reactor() {
   Session session;
   type(session, "r1.equation", "CO(g) + H2O(g) -> CO2(g) + H2(g)");
-  type(session, "steps.add_flow", "");
+  type(session, "steps.add.f", "");
   type(session, "s1.feed.0.name", "raw gas");
   type(session, "s1.feed.0.at", "350 °C");
   type(session, "s1.feed.0.row.0.species", "CO(g)");

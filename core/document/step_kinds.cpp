@@ -1,0 +1,33 @@
+#include "core/document/step_kinds.hpp"
+
+#include "core/document/step_balance.hpp"
+
+namespace heatledger::document {
+
+const std::vector<KindOfStep>& kinds_of_step() {
+  static const std::vector<KindOfStep> all = {
+      {"through-flow",
+       "Add a through-flow step",
+       'f',
+       true,
+       true,
+       true,
+       true,
+       false,
+       false,
+       {},
+       {},
+       compute_balance},
+      {"charge", "Add a charge step", 'c', false, true, true, true, false, false, {}, {}, compute_balance},
+  };
+  return all;
+}
+
+const KindOfStep& kind_of(const StepSheet& sheet) {
+  for (const KindOfStep& kind : kinds_of_step()) {
+    if (sheet.kind == kind.name) return kind;
+  }
+  return kinds_of_step().front();
+}
+
+}  // namespace heatledger::document
