@@ -10,6 +10,7 @@ extern const std::string_view compounds;
 extern const std::string_view defaults;
 extern const std::string_view ions;
 extern const std::string_view polynomials;
+extern const std::string_view solution_heat_capacities;
 extern const std::string_view solution_heats;
 extern const std::string_view sources;
 extern const std::string_view vapour_pressure;

@@ -15,7 +15,14 @@ namespace {
 
 std::string_view source_text(std::string_view key) {
   if (key == "f") return "NBS Circular 500 (1952) and NBS tables, as reprinted in textbooks";
+  if (key == "o")
+    return "NBS Circular 500 (1952) and NBS tables, as reprinted in textbooks; above 42 wt% Olsson, Jernqvist, "
+           "Aly, Int. J. Thermophys. 18 (1997) 779";
   if (key == "h") return "CRC Handbook 95, after Parker, NSRDS-NBS 2 (1965)";
+  if (key == "n")
+    return "CRC Handbook 95, enthalpy of dilution of acids, after Parker, NSRDS-NBS 2 (1965); above 56 wt% NBS "
+           "Technical Note 270-3 (1968)";
+  if (key == "g") return "Giguère, Morissette, Olmos, Knop, Can. J. Chem. 33 (1955) 804";
   CHECK(key == "p", "solution_heats.tsv uses the sources named at its head");
   return "CRC Handbook 95, enthalpy of dilution of acids, after Parker, NSRDS-NBS 2 (1965)";
 }
@@ -43,6 +50,7 @@ struct Table {
       }
       SolutionHeats& curve = curves.back();
       curve.from_memory = curve.from_memory || table.cell(note) == "m";
+      curve.symmetrical = curve.symmetrical || table.cell(note) == "s";
       SolutionHeatPoint point;
       point.heat = table.number(heat) * 1000;
       point.u95 = table.number(u95) * 1000;
@@ -63,62 +71,11 @@ const Table& table() {
   return all;
 }
 
-/// A point of a curve on the axis that interpolation runs along.
-struct Node {
-  double x, heat, u95;
-};
-
-std::vector<Node> nodes_of(const SolutionHeats& curve) {
-  std::vector<Node> nodes;
-  for (const SolutionHeatPoint& p : curve.points) nodes.push_back({p.ratio / (p.ratio + 1), p.heat, p.u95});
-  if (curve.infinite) nodes.push_back({1.0, curve.infinite->heat, curve.infinite->u95});
-  return nodes;
-}
-
-/// Slopes of monotone cubic pieces: no overshoot between two points.
-std::vector<double> slopes_of(const std::vector<Node>& nodes) {
-  const std::size_t n = nodes.size();
-  std::vector<double> secant(n - 1), slope(n);
-  for (std::size_t i = 0; i + 1 < n; ++i)
-    secant[i] = (nodes[i + 1].heat - nodes[i].heat) / (nodes[i + 1].x - nodes[i].x);
-  slope[0] = secant[0];
-  slope[n - 1] = secant[n - 2];
-  for (std::size_t i = 1; i + 1 < n; ++i) {
-    slope[i] =
-        secant[i - 1] * secant[i] <= 0 ? 0 : 2 * secant[i - 1] * secant[i] / (secant[i - 1] + secant[i]);
-  }
-  for (std::size_t i = 0; i + 1 < n; ++i) {
-    if (secant[i] == 0) {
-      slope[i] = slope[i + 1] = 0;
-      continue;
-    }
-    const double a = slope[i] / secant[i], b = slope[i + 1] / secant[i];
-    const double square = a * a + b * b;
-    if (square > 9) {
-      const double factor = 3 / std::sqrt(square);
-      slope[i] = factor * a * secant[i];
-      slope[i + 1] = factor * b * secant[i];
-    }
-  }
-  return slope;
-}
-
 /// A liquid in no water has no heat of solution: a point of the curve that needs no table. Bridged only where
 /// the table begins close to it.
 bool starts_at_pure_liquid(const SolutionHeats& curve) {
   constexpr double kNear = 1;  // mole of water per mole
   return curve.phase == 'l' && curve.points.size() >= 2 && curve.points.front().ratio <= kNear;
-}
-
-/// The parabola through the pure liquid and the first two points. Its distance from the straight line to the
-/// first point is what the choice of the curve may be wrong by.
-SolutionHeatPoint near_pure_liquid(const SolutionHeats& curve, double ratio) {
-  const SolutionHeatPoint& first = curve.points[0];
-  const SolutionHeatPoint& second = curve.points[1];
-  const double chord = first.heat / first.ratio;
-  const double bend = (second.heat / second.ratio - chord) / (second.ratio - first.ratio);
-  const double bow = bend * ratio * (ratio - first.ratio);
-  return {ratio, chord * ratio + bow, first.u95, std::fabs(bow)};
 }
 
 }  // namespace
@@ -137,29 +94,62 @@ const SolutionHeats* find_solution_heats(std::string_view formula, char phase) {
 }
 
 double least_ratio(const SolutionHeats& curve) {
+  if (curve.symmetrical) return 0;
   if (curve.points.empty()) return HUGE_VAL;
   return starts_at_pure_liquid(curve) ? 0 : curve.points.front().ratio;
 }
 
-std::optional<SolutionHeatPoint> solution_heat_at(const SolutionHeats& curve, double ratio) {
-  if (curve.points.empty() || !(ratio >= least_ratio(curve))) return std::nullopt;
-  if (ratio < curve.points.front().ratio) return near_pure_liquid(curve, ratio);
-  if (!curve.infinite && ratio > curve.points.back().ratio) return std::nullopt;
-  const std::vector<Node> nodes = nodes_of(curve);
-  if (nodes.size() == 1) return curve.points.front();
-  const std::vector<double> slope = slopes_of(nodes);
-  const double x = std::isinf(ratio) ? 1.0 : ratio / (ratio + 1);
+SolutionHeatCurve::SolutionHeatCurve(const SolutionHeats& curve)
+    : points_(curve.points),
+      constant_(curve.phase == 'l' ? 2 : 1),
+      least_(least_ratio(curve)),
+      symmetrical_(curve.symmetrical) {
+  std::vector<double> x, y;
+  for (const SolutionHeatPoint& p : curve.points) {
+    x.push_back(p.ratio / (p.ratio + constant_));
+    y.push_back(p.heat);
+    most_ = p.ratio;
+  }
+  if (curve.infinite) {
+    x.push_back(1.0);
+    y.push_back(curve.infinite->heat);
+    points_.push_back(*curve.infinite);
+    points_.back().ratio = HUGE_VAL;
+    most_ = HUGE_VAL;
+  }
+  for (const double heat : y) span_ = std::max(span_, std::fabs(heat));
+  if (!y.empty()) heat_ = MonotoneCurve(std::move(x), std::move(y));
+}
+
+/// The parabola through the pure liquid and the first two points. Its distance from the straight line to the
+/// first point is what the choice of the curve may be wrong by.
+SolutionHeatPoint SolutionHeatCurve::strong(double ratio) const {
+  const SolutionHeatPoint& first = points_[0];
+  const SolutionHeatPoint& second = points_[1];
+  const double chord = first.heat / first.ratio;
+  const double bend = (second.heat / second.ratio - chord) / (second.ratio - first.ratio);
+  const double bow = bend * ratio * (ratio - first.ratio);
+  return {ratio, chord * ratio + bow, first.u95, std::fabs(bow)};
+}
+
+std::optional<SolutionHeatPoint> SolutionHeatCurve::at(double ratio) const {
+  if (!(ratio >= least_ && ratio <= most_)) return std::nullopt;
+  const double x = std::isinf(ratio) ? 1.0 : ratio / (ratio + constant_);
+  if (symmetrical_) {
+    const double share = std::isinf(ratio) ? 1.0 : ratio / (ratio + 1), limit = points_.back().heat;
+    return SolutionHeatPoint{ratio, limit * share, points_.back().u95 * share,
+                             std::fabs(limit) * share * (1 - share)};
+  }
+  if (ratio < points_.front().ratio) return strong(ratio);
   std::size_t i = 0;
-  while (i + 2 < nodes.size() && x > nodes[i + 1].x) ++i;
-  const Node& a = nodes[i];
-  const Node& b = nodes[i + 1];
-  const double width = b.x - a.x, t = (x - a.x) / width, rest = 1 - t;
-  SolutionHeatPoint out;
-  out.ratio = ratio;
-  out.heat = a.heat * (1 + 2 * t) * rest * rest + b.heat * (3 - 2 * t) * t * t +
-             width * t * rest * (slope[i] * rest - slope[i + 1] * t);
-  out.u95 = std::max(a.u95, b.u95);
-  return out;
+  while (i + 2 < points_.size() && ratio > points_[i + 1].ratio) ++i;
+  const double u95 = points_.size() == 1 ? points_[0].u95 : std::max(points_[i].u95, points_[i + 1].u95);
+  return SolutionHeatPoint{ratio, heat_.at(x), u95, 0};
+}
+
+std::optional<SolutionHeatPoint> solution_heat_at(const SolutionHeats& curve, double ratio) {
+  if (curve.points.empty() && !curve.symmetrical) return std::nullopt;
+  return SolutionHeatCurve(curve).at(ratio);
 }
 
 }  // namespace heatledger::facts

@@ -6,6 +6,8 @@
 #include <string_view>
 #include <vector>
 
+#include "core/facts/monotone_curve.hpp"
+
 namespace heatledger::facts {
 
 struct SolutionHeatPoint {
@@ -21,6 +23,7 @@ struct SolutionHeats {
   char phase = 's';         ///< before dissolving
   std::string_view source;
   bool from_memory = false;                   ///< not compared with a copy of the source
+  bool symmetrical = false;                   ///< infinite dilution alone; in between heat(∞) r/(r + 1)
   std::vector<SolutionHeatPoint> points;      ///< rising ratio; empty for salts with infinite dilution only
   std::optional<SolutionHeatPoint> infinite;  ///< infinite dilution; its ratio is not used
 };
@@ -35,12 +38,32 @@ const SolutionHeats* find_solution_heats(std::string_view formula, char phase);
 /// less is followed down to the pure liquid, whose heat is zero. Infinite when the curve has no points.
 double least_ratio(const SolutionHeats& curve);
 
-/// Heat of dissolving one mole in `ratio` moles of water [J/mol], interpolated between the points, monotone
-/// where they are, in x = ratio / (ratio + 1); a curve with its infinite dilution reaches x = 1.
-/// @param ratio  moles of water per mole of solute
-/// @return empty below least_ratio, and beyond the last when the curve has no figure for infinite
-/// dilution
-/// @source F. N. Fritsch and R. E. Carlson, SIAM J. Numer. Anal. 17 (1980) 238: monotone cubic pieces
+/// A curve made ready: evaluated millions of times in a step.
+class SolutionHeatCurve {
+ public:
+  SolutionHeatCurve() = default;
+  explicit SolutionHeatCurve(const SolutionHeats& curve);
+
+  /// Heat of dissolving one mole in `ratio` moles of water [J/mol], interpolated between the points, monotone
+  /// where they are, in x = ratio / (ratio + c): c is 2 for liquids, whose heats fall slowly from the pure
+  /// liquid on, else 1. A curve with its infinite dilution reaches x = 1.
+  /// @param ratio  moles of water per mole of solute
+  /// @return empty below least_ratio, and beyond the last when the curve has no figure for infinite dilution
+  std::optional<SolutionHeatPoint> at(double ratio) const;
+  double least() const { return least_; }  ///< as least_ratio
+  double most() const { return most_; }    ///< infinite where infinite dilution is known
+  double span() const { return span_; }    ///< largest heat in size [J/mol]
+
+ private:
+  SolutionHeatPoint strong(double ratio) const;
+
+  MonotoneCurve heat_;
+  std::vector<SolutionHeatPoint> points_;  ///< those at infinite dilution last
+  double constant_ = 1, least_ = 0, most_ = 0, span_ = 0;
+  bool symmetrical_ = false;
+};
+
+/// The same for one point of a curve that is not kept.
 std::optional<SolutionHeatPoint> solution_heat_at(const SolutionHeats& curve, double ratio);
 
 }  // namespace heatledger::facts

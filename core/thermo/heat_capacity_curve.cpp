@@ -8,6 +8,7 @@
 #include "core/estimate/context_molecule.hpp"
 #include "core/estimate/gas_interpolation.hpp"
 #include "core/facts/polynomials.hpp"
+#include "core/facts/solution_heat_capacities.hpp"
 #include "core/units/constants.hpp"
 
 namespace heatledger::thermo {
@@ -35,6 +36,9 @@ constexpr double kLiquidRise = 0.0018, kLiquidRiseU95 = 0.002;
 constexpr double kConstantReach = 300, kLowestGas = 200, kLowestCondensed = 100;
 /// Beyond this distance from 298.15 K it carries a caution [K].
 constexpr double kCautionReach = 75;
+/// Where a solution's heat capacity near 25 °C is carried [K]: between freezing of brines and boiling of strong
+/// acids. It rises by some 0.05 % a kelvin (hydrochloric acid, 20 to 60 °C, Perry).
+constexpr double kSolutionLow = 233.15, kSolutionHigh = 523.15, kSolutionDrift = 0.0005;
 
 std::string kelvin(double t) {
   return display_number(t, 2) + " K";
@@ -234,6 +238,27 @@ bool by_estimated_liquid(HeatCapacityCurve& curve, const Species& species,
   curve.route = "estimate";
   curve.source = "bonds in context";
   by_constant(curve, species, cp->value, cp->u95);
+  return true;
+}
+
+/// The apparent heat capacity of the solute: what is left of the solution's own when its water counts as pure
+/// water, so that both together heat as the solution does.
+bool by_solution(HeatCapacityCurve& curve, const Species& species,
+                 const std::optional<molecule::Strength>& strength) {
+  if (!strength || species.compound == nullptr) return false;
+  const std::optional<double> ratio = water_ratio(*strength, species.molar_mass);
+  const facts::SolutionHeatCapacities* table =
+      facts::find_solution_heat_capacities(species.compound->formula);
+  if (!ratio || table == nullptr) return false;
+  const std::optional<ApparentHeatCapacity> apparent =
+      apparent_heat_capacity(*table, *ratio, species.molar_mass);
+  if (!apparent) return false;
+  curve.kind = CurveKind::Constant;
+  curve.route = "table";
+  curve.source = "of the solution less its water, " + std::string(table->source) +
+                 (table->from_memory ? " (from memory)" : "");
+  curve.drift = kSolutionDrift * std::fabs(apparent->of_solution / std::max(1.0, std::fabs(apparent->cp)));
+  curve.pieces.push_back(straight(kSolutionLow, kSolutionHigh, apparent->cp, 0, 0, apparent->u95));
   return true;
 }
 
