@@ -38,8 +38,7 @@ MonotoneCurve::MonotoneCurve(std::vector<double> x, std::vector<double> y)
 double MonotoneCurve::at(double x) const {
   if (x <= x_.front()) return y_.front();
   if (x >= x_.back()) return y_.back();
-  const std::size_t above =
-      static_cast<std::size_t>(std::upper_bound(x_.begin(), x_.end(), x) - x_.begin());
+  const std::size_t above = static_cast<std::size_t>(std::upper_bound(x_.begin(), x_.end(), x) - x_.begin());
   const std::size_t i = above - 1;
   const double width = x_[i + 1] - x_[i], t = (x - x_[i]) / width, rest = 1 - t;
   return y_[i] * (1 + 2 * t) * rest * rest + y_[i + 1] * (3 - 2 * t) * t * t +

@@ -13,9 +13,9 @@ namespace heatledger::facts {
 struct SolutionHeatCapacities {
   std::string_view solute;  ///< formula as typed: "H2SO4"
   std::string_view source;
-  bool from_memory = false;  ///< not compared with a copy of the source
-  double strongest = 0;      ///< mass fraction, 0 .. 1
-  MonotoneCurve cp;          ///< of the solution [J/(kg K)] against the mass fraction
+  bool from_memory = false;           ///< not compared with a copy of the source
+  double strongest = 0;               ///< mass fraction, 0 .. 1
+  MonotoneCurve cp;                   ///< of the solution [J/(kg K)] against the mass fraction
   std::vector<double> fraction, u95;  ///< [J/(kg K)] at the points of the table, straight in between
 };
 

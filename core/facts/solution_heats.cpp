@@ -16,11 +16,13 @@ namespace {
 std::string_view source_text(std::string_view key) {
   if (key == "f") return "NBS Circular 500 (1952) and NBS tables, as reprinted in textbooks";
   if (key == "o")
-    return "NBS Circular 500 (1952) and NBS tables, as reprinted in textbooks; above 42 wt% Olsson, Jernqvist, "
+    return "NBS Circular 500 (1952) and NBS tables, as reprinted in textbooks; above 42 wt% Olsson, "
+           "Jernqvist, "
            "Aly, Int. J. Thermophys. 18 (1997) 779";
   if (key == "h") return "CRC Handbook 95, after Parker, NSRDS-NBS 2 (1965)";
   if (key == "n")
-    return "CRC Handbook 95, enthalpy of dilution of acids, after Parker, NSRDS-NBS 2 (1965); above 56 wt% NBS "
+    return "CRC Handbook 95, enthalpy of dilution of acids, after Parker, NSRDS-NBS 2 (1965); above 56 wt% "
+           "NBS "
            "Technical Note 270-3 (1968)";
   if (key == "g") return "Giguère, Morissette, Olmos, Knop, Can. J. Chem. 33 (1955) 804";
   CHECK(key == "p", "solution_heats.tsv uses the sources named at its head");

@@ -115,7 +115,8 @@ const SolutionHeats* curve_of(const Species& species, bool infinite) {
   if (species.compound == nullptr) return nullptr;
   for (const char phase : {'s', 'l', 'g'}) {
     const SolutionHeats* curve = facts::find_solution_heats(species.compound->formula, phase);
-    if (curve != nullptr && (infinite ? curve->infinite.has_value() : !curve->points.empty() || curve->symmetrical))
+    if (curve != nullptr &&
+        (infinite ? curve->infinite.has_value() : !curve->points.empty() || curve->symmetrical))
       return curve;
   }
   return nullptr;

@@ -8,7 +8,7 @@
 #include "core/estimate/context_molecule.hpp"
 #include "core/estimate/gas_interpolation.hpp"
 #include "core/facts/polynomials.hpp"
-#include "core/facts/solution_heat_capacities.hpp"
+#include "core/thermo/solution.hpp"
 #include "core/units/constants.hpp"
 
 namespace heatledger::thermo {
@@ -36,8 +36,8 @@ constexpr double kLiquidRise = 0.0018, kLiquidRiseU95 = 0.002;
 constexpr double kConstantReach = 300, kLowestGas = 200, kLowestCondensed = 100;
 /// Beyond this distance from 298.15 K it carries a caution [K].
 constexpr double kCautionReach = 75;
-/// Where a solution's heat capacity near 25 °C is carried [K]: between freezing of brines and boiling of strong
-/// acids. It rises by some 0.05 % a kelvin (hydrochloric acid, 20 to 60 °C, Perry).
+/// Where a solution's heat capacity near 25 °C is carried [K]: between freezing of brines and boiling of
+/// strong acids. It rises by some 0.05 % a kelvin (hydrochloric acid, 20 to 60 °C, Perry).
 constexpr double kSolutionLow = 233.15, kSolutionHigh = 523.15, kSolutionDrift = 0.0005;
 
 std::string kelvin(double t) {
@@ -353,6 +353,7 @@ Result<HeatCapacityCurve> heat_capacity_curve(const Species& species, Phase phas
           straight(kLowestCondensed, kReference + 1000, typed->value(), 0, 0, typed->u95()));
       return true;
     }
+    if (curve.phase == Phase::Aqueous && by_solution(curve, species, strength)) return true;
     if (curve.phase == Phase::Aqueous)
       return !(strength && strength->kind != molecule::Strength::Kind::InfiniteDilution) &&
              by_partial_molar(curve, species);

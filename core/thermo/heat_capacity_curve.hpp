@@ -54,7 +54,8 @@ struct HeatCapacityCurve {
 /// Typed figure first, then the polynomial; for gases the estimate, then the tabulated figure at 298.15 K;
 /// for liquids the tabulated figure, then the estimate, both rising by 0.18 ± 0.2 % a kelvin, a slope that is
 /// sharpened where the vaporisation enthalpy is known at 298.15 K and at the boiling point; for solids the
-/// tabulated figure as constant. Dissolved is read as liquid, Aqueous as the partial molar figure.
+/// tabulated figure as constant. Dissolved is read as liquid. Aqueous with a strength: what the solute adds
+/// to its water (apparent_heat_capacity), without one the partial molar figure at infinite dilution.
 /// @param typed  constant heat capacity of the sheet [J/(mol K)]
 /// @errors thermo.no_heat_capacity
 /// @validity polynomials in their ranges; estimates of gases from 200 to 1000 K; constants to 300 K either

@@ -45,14 +45,13 @@ double largest_miss(const SolutionHeats& curve, double up_to) {
 }
 
 TEST(SolutionHeats, InterpolatePointsLeftOut) {
-  // A point left out doubles the step of the table, so that what is found in the middle of a step of the whole
-  // table is about four times nearer (cubic pieces: more). The bounds are four times the ± of the figures; for
-  // hydrogen chloride three times more, where the hydrate between 1 and 3 mol of water bends the curve, for
-  // acetic and formic acid less, because all their heats are small.
-  const std::map<std::string, double> bounds = {{"H2SO4", 2000}, {"HCl", 1500}, {"NaOH", 1000},
-                                                {"HNO3", 600},   {"NH3", 600},  {"HBr", 700},
-                                                {"HI", 400},     {"HClO4", 800}, {"HF", 500},
-                                                {"CH3COOH", 150}, {"HCOOH", 150}};
+  // A point left out doubles the step of the table, so that what is found in the middle of a step of the
+  // whole table is about four times nearer (cubic pieces: more). The bounds are four times the ± of the
+  // figures; for hydrogen chloride three times more, where the hydrate between 1 and 3 mol of water bends the
+  // curve, for acetic and formic acid less, because all their heats are small.
+  const std::map<std::string, double> bounds = {
+      {"H2SO4", 2000}, {"HCl", 1500},  {"NaOH", 1000}, {"HNO3", 600},    {"NH3", 600},  {"HBr", 700},
+      {"HI", 400},     {"HClO4", 800}, {"HF", 500},    {"CH3COOH", 150}, {"HCOOH", 150}};
   int seen = 0;
   for (const SolutionHeats& curve : solution_heats()) {
     if (curve.points.size() < 3) continue;
@@ -66,9 +65,9 @@ TEST(SolutionHeats, InterpolatePointsLeftOut) {
 }
 
 TEST(SolutionHeats, MeetASecondTableBetweenTheirPoints) {
-  // T. Urbanski, Chemistry and Technology of Explosives 1, table 16: heat set free by diluting with 500 mol of
-  // water what already holds r mol, kcal/mol. Differences from r = 0 are integral heats. The ± of that table is
-  // not stated; 0.1 kcal is its scatter.
+  // T. Urbanski, Chemistry and Technology of Explosives 1, table 16: heat set free by diluting with 500 mol
+  // of water what already holds r mol, kcal/mol. Differences from r = 0 are integral heats. The ± of that
+  // table is not stated; 0.1 kcal is its scatter.
   struct Row {
     double r, left;
   };
@@ -83,8 +82,9 @@ TEST(SolutionHeats, MeetASecondTableBetweenTheirPoints) {
   check("H2SO4", {{0, 18.26}, {0.5, 14.53}, {1, 11.57}, {1.5, 9.47}, {2, 8.28}, {3, 6.56}}, 420);
   // Nitric acid: two generations of tables part by 0.6 kJ/mol there (1 to 3 mol of water).
   check("HNO3", {{0, 7.43}, {1, 4.16}, {2, 2.65}, {3, 1.72}}, 650);
-  // The correlation of Olsson, Jernqvist, Aly (1997) halfway between points of the caustic table, evaluated by
-  // hand at 25 degC from 20 mol of water on, which the table has as -42.84: the two part by 0.2 where both are.
+  // The correlation of Olsson, Jernqvist, Aly (1997) halfway between points of the caustic table, evaluated
+  // by hand at 25 degC from 20 mol of water on, which the table has as -42.84: the two part by 0.2 where both
+  // are.
   const SolutionHeats* soda = find_solution_heats("NaOH", 's');
   EXPECT_NEAR(solution_heat_at(*soda, 2.22)->heat, -22240, 250);
   EXPECT_NEAR(solution_heat_at(*soda, 3.5)->heat, -31980, 250);
@@ -111,12 +111,10 @@ TEST(SolutionHeats, MeetThePublishedChecks) {
     for (const SolutionHeats& curve : solution_heats()) {
       if (curve.solute != solute || curve.phase != cell(row, "phase").front()) continue;
       if (parker != (curve.source.find("Parker") != std::string_view::npos)) continue;
-      const std::optional<SolutionHeatPoint> there = std::isinf(ratio) && curve.infinite
-                                                         ? curve.infinite
-                                                         : solution_heat_at(curve, ratio);
+      const std::optional<SolutionHeatPoint> there =
+          std::isinf(ratio) && curve.infinite ? curve.infinite : solution_heat_at(curve, ratio);
       if (!there) continue;
-      const double heat =
-          cell(row, "kind") == "integral" ? there->heat : there->heat - curve.infinite->heat;
+      const double heat = cell(row, "kind") == "integral" ? there->heat : there->heat - curve.infinite->heat;
       tried += std::to_string(heat) + " ";
       met = met || std::fabs(heat - value) <= tolerance;
     }
