@@ -182,8 +182,8 @@ void DenseStep::at(double t, double* y) const {
     y[i] = rest * start[i] + s * (end[i] + rest * (bow[i] + s * skew[i]));
 }
 
-Ending integrate(const Equations& equations, double from, double to, std::vector<double>& y, double longest, Progress& progress,
-                 const std::function<bool(DenseStep&)>& after) {
+Ending integrate(const Equations& equations, double from, double to, std::vector<double>& y, double longest,
+                 Progress& progress, const std::function<bool(DenseStep&)>& after) {
   Integrator integrator(equations, y);
   double t = from;
   double h = progress.length;

@@ -55,7 +55,7 @@ struct Progress {
 /// @source G. Steinebach, Order reduction of ROW methods for DAEs and method of lines applications, Preprint
 ///         1741, TH Darmstadt 1995; E. Hairer, G. Wanner, Solving Ordinary Differential Equations II, 2nd
 ///         ed., Springer 1996, IV.7 and VI.4
-Ending integrate(const Equations& equations, double from, double to, std::vector<double>& y, double longest, Progress& progress,
-                 const std::function<bool(DenseStep&)>& after);
+Ending integrate(const Equations& equations, double from, double to, std::vector<double>& y, double longest,
+                 Progress& progress, const std::function<bool(DenseStep&)>& after);
 
 }  // namespace heatledger::dosing

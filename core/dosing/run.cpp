@@ -115,8 +115,8 @@ std::vector<Course::Sample> Course::samples(std::size_t count) const {
   for (std::size_t i = 0; i < count; ++i)
     samples.push_back({end() * static_cast<double>(i) / static_cast<double>(count - 1), false});
   for (std::size_t p = 0; p + 1 < pieces_.size(); ++p) {
-    const bool bend = pieces_[p].stretch != pieces_[p + 1].stretch ||
-                      pieces_[p].limiting != pieces_[p + 1].limiting;
+    const bool bend =
+        pieces_[p].stretch != pieces_[p + 1].stretch || pieces_[p].limiting != pieces_[p + 1].limiting;
     if (!bend) continue;
     const double t = pieces_[p].step.to();
     samples.push_back({t, true});
@@ -125,11 +125,10 @@ std::vector<Course::Sample> Course::samples(std::size_t count) const {
   std::sort(samples.begin(), samples.end(), [](const Sample& a, const Sample& b) {
     return a.time != b.time ? a.time < b.time : a.before && !b.before;
   });
-  samples.erase(std::unique(samples.begin(), samples.end(),
-                            [](const Sample& a, const Sample& b) {
-                              return a.time == b.time && a.before == b.before;
-                            }),
-                samples.end());
+  samples.erase(
+      std::unique(samples.begin(), samples.end(),
+                  [](const Sample& a, const Sample& b) { return a.time == b.time && a.before == b.before; }),
+      samples.end());
   return samples;
 }
 

@@ -26,8 +26,7 @@ constexpr double kTogether = 1e-9;
 
 }  // namespace
 
-Kettle::Kettle(const DosedSystem& system, const RunOptions& options)
-    : system_(system), options_(options) {
+Kettle::Kettle(const DosedSystem& system, const RunOptions& options) : system_(system), options_(options) {
   const std::size_t substances = system.substances.size();
   for (std::size_t j = 0; j < system.reactions.size(); ++j)
     (system.reactions[j].speed == Speed::ByRateLaw ? slow_ : fast_).push_back(j);
@@ -129,8 +128,8 @@ double Kettle::temperature_of(const std::vector<double>& amounts, double enthalp
   // The enthalpy rises with temperature everywhere, nearly in a straight line: Newton's method.
   double temperature = guess;
   for (int i = 0; i < 60; ++i) {
-    const double missing = enthalpy_wanted - enthalpy(amounts, temperature) -
-                           vessel * (temperature - kReferenceTemperature);
+    const double missing =
+        enthalpy_wanted - enthalpy(amounts, temperature) - vessel * (temperature - kReferenceTemperature);
     const double slope = heat_capacity(amounts, temperature) + vessel;
     if (!(slope > 0)) return temperature;  // nothing there to be heated
     const double step = missing / slope;
@@ -203,8 +202,8 @@ void Kettle::fill(double t, const double* y, Scratch& s) const {
   if (system_.thermal == Thermal::Held) {
     s.temperature = system_.start_temperature;
   } else {
-    s.temperature = temperature_of(s.amounts, content_enthalpy(t, y, s), system_.vessel_heat_capacity,
-                                   s.temperature);
+    s.temperature =
+        temperature_of(s.amounts, content_enthalpy(t, y, s), system_.vessel_heat_capacity, s.temperature);
   }
 }
 
@@ -229,8 +228,8 @@ void Kettle::put_back(double t, const double* y, Scratch& s) const {
     s.amounts[i] = std::max(0.0, s.amounts[i]);
   }
   if (moved && system_.thermal != Thermal::Held) {
-    s.temperature = temperature_of(s.amounts, content_enthalpy(t, y, s), system_.vessel_heat_capacity,
-                                   s.temperature);
+    s.temperature =
+        temperature_of(s.amounts, content_enthalpy(t, y, s), system_.vessel_heat_capacity, s.temperature);
   }
 }
 
@@ -258,9 +257,9 @@ void Kettle::slow_rates(const Scratch& s, double* rates) const {
     // A reactant that the law does not name still has to be there.
     for (const DosedReaction::Term& term : system_.reactions[slow_[k]].terms) {
       if (!(term.coefficient < 0)) continue;
-      const bool named = std::any_of(
-          law.factors.begin(), law.factors.end(),
-          [&](const RateLaw::Factor& factor) { return factor.substance == term.substance; });
+      const bool named =
+          std::any_of(law.factors.begin(), law.factors.end(),
+                      [&](const RateLaw::Factor& factor) { return factor.substance == term.substance; });
       if (!named) rate *= power(s.amounts[term.substance] / volume, 0, kLastPart * whole / volume);
     }
     rates[k] = rate;
@@ -331,9 +330,8 @@ std::vector<Pivot> Kettle::best_pivots(const Scratch& s) const {
     for (const DosedReaction::Term& term : system_.reactions[slow_[k]].terms) {
       if (stoichiometry(term.substance, k) < 0) reactants.push_back(term.substance);
     }
-    std::stable_sort(reactants.begin(), reactants.end(), [&](std::size_t a, std::size_t b) {
-      return scarcity(k, a, s) < scarcity(k, b, s);
-    });
+    std::stable_sort(reactants.begin(), reactants.end(),
+                     [&](std::size_t a, std::size_t b) { return scarcity(k, a, s) < scarcity(k, b, s); });
     std::vector<Pivot> candidates;
     for (const std::size_t reactant : reactants) candidates.push_back({true, reactant});
     candidates.push_back({false, k});
@@ -409,15 +407,14 @@ bool Kettle::pivots_outrun(double t, const double* y) const {
 std::vector<double> Kettle::scales() const {
   std::vector<double> scales;
   double heat = 0;
-  for (std::size_t j = 0; j < whole_.size(); ++j)
-    heat += std::fabs(whole_[j] * system_.reactions[j].heat);
+  for (std::size_t j = 0; j < whole_.size(); ++j) heat += std::fabs(whole_[j] * system_.reactions[j].heat);
   double largest = 0;
   for (const double amount : all_) largest = std::max(largest, amount);
   for (const std::size_t j : slow_) scales.push_back(whole_[j] > 0 ? whole_[j] : largest);
   if (system_.thermal == Thermal::Jacket) {
     // A kelvin of the whole content at least, also where nothing reacts.
-    scales.push_back(std::max(heat, heat_capacity(all_, system_.start_temperature) +
-                                        system_.vessel_heat_capacity));
+    scales.push_back(
+        std::max(heat, heat_capacity(all_, system_.start_temperature) + system_.vessel_heat_capacity));
   }
   return scales;
 }
@@ -428,7 +425,8 @@ void Kettle::tolerances(double t, const double* y, double* allowed) const {
     double least = std::fabs(y[k]);
     if (!pivots_[k].amount) {
       for (const DosedReaction::Term& term : system_.reactions[slow_[pivots_[k].index]].terms) {
-        if (term.coefficient < 0) least = std::min(least, scarcity(pivots_[k].index, term.substance, scratch_));
+        if (term.coefficient < 0)
+          least = std::min(least, scarcity(pivots_[k].index, term.substance, scratch_));
       }
     }
     allowed[k] = options_.absolute * scales_[k] + options_.relative * least;

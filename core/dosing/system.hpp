@@ -16,7 +16,7 @@ struct DosedSubstance {
   std::string name;
   double molar_mass = 0;    ///< [kg/mol]
   double molar_volume = 0;  ///< [m³/mol] of the liquid; 0 when no rate law needs it
-  Enthalpy enthalpy;        ///< from 25 °C in the phase in which the heats of reaction hold, liquid held liquid
+  Enthalpy enthalpy;  ///< from 25 °C in the phase in which the heats of reaction hold, liquid held liquid
 };
 
 struct DosedFeed {
@@ -32,9 +32,9 @@ struct RateLaw {
     std::size_t substance = 0;
     double order = 1;  ///< >= 0
   };
-  double constant = 0;               ///< k(T_ref) in mol, m³ and s: (mol/m³)^(1 − Σ order) / s
-  double reference = 298.15;         ///< T_ref [K]
-  double activation_energy = 0;      ///< [J/mol]
+  double constant = 0;           ///< k(T_ref) in mol, m³ and s: (mol/m³)^(1 − Σ order) / s
+  double reference = 298.15;     ///< T_ref [K]
+  double activation_energy = 0;  ///< [J/mol]
   std::vector<Factor> factors;
 };
 
@@ -64,7 +64,7 @@ enum class Thermal : unsigned char {
 
 struct DosedSystem {
   std::vector<DosedSubstance> substances;
-  std::vector<double> start;         ///< in the vessel before dosing, one for each substance [mol]
+  std::vector<double> start;          ///< in the vessel before dosing, one for each substance [mol]
   double start_temperature = 298.15;  ///< of the content [K]
   std::vector<DosedFeed> feeds;
   std::vector<DosedReaction> reactions;
@@ -78,23 +78,23 @@ struct DosedSystem {
 
 /// What stands in the vessel at one moment, and what follows from it.
 struct Moment {
-  double time = 0;                 ///< [s]
-  double temperature = 0;          ///< [K]
-  double mass = 0;                 ///< [kg]
-  double volume = 0;               ///< [m³]; 0 when no rate law needs it
-  double heat_capacity = 0;        ///< m cp of the content at its temperature, vessel excluded [J/K]
-  std::vector<double> amounts;     ///< [mol]
-  std::vector<double> extents;     ///< of each reaction [mol]
-  std::vector<double> rates;       ///< of each reaction [mol/s]
-  double heat_rate = 0;            ///< set free by the reactions at the temperature of the content [W]
-  double cold_feed = 0;            ///< taken up by what is fed on its way to that temperature [W]
-  double cooling = 0;              ///< taken out through the wall, or asked for [W]; < 0: heating
-  double wall_heat = 0;            ///< brought in through the wall so far [J]
-  std::vector<double> open;        ///< extents still possible if feeding stops here [mol]
-  double open_heat = 0;            ///< that they would set free at the temperature of the content [J]
-  double mtsr = 0;                 ///< temperature + open_heat / heat_capacity [K]
-  double accumulation = 0;         ///< of the extent of the whole step; several reactions: of its heat
-  double conversion = 0;           ///< of the charged or fed substance that limits the first reaction
+  double time = 0;              ///< [s]
+  double temperature = 0;       ///< [K]
+  double mass = 0;              ///< [kg]
+  double volume = 0;            ///< [m³]; 0 when no rate law needs it
+  double heat_capacity = 0;     ///< m cp of the content at its temperature, vessel excluded [J/K]
+  std::vector<double> amounts;  ///< [mol]
+  std::vector<double> extents;  ///< of each reaction [mol]
+  std::vector<double> rates;    ///< of each reaction [mol/s]
+  double heat_rate = 0;         ///< set free by the reactions at the temperature of the content [W]
+  double cold_feed = 0;         ///< taken up by what is fed on its way to that temperature [W]
+  double cooling = 0;           ///< taken out through the wall, or asked for [W]; < 0: heating
+  double wall_heat = 0;         ///< brought in through the wall so far [J]
+  std::vector<double> open;     ///< extents still possible if feeding stops here [mol]
+  double open_heat = 0;         ///< that they would set free at the temperature of the content [J]
+  double mtsr = 0;              ///< temperature + open_heat / heat_capacity [K]
+  double accumulation = 0;      ///< of the extent of the whole step; several reactions: of its heat
+  double conversion = 0;        ///< of the charged or fed substance that limits the first reaction
 };
 
 /// Error that a step of the integration may make.
@@ -110,7 +110,9 @@ struct RunOptions {
 struct Pivot {
   bool amount = true;     ///< of a substance, before what is as fast as dosed; else an extent
   std::size_t index = 0;  ///< of the substance, or within the reactions with a rate law
-  friend bool operator==(const Pivot& a, const Pivot& b) { return a.amount == b.amount && a.index == b.index; }
+  friend bool operator==(const Pivot& a, const Pivot& b) {
+    return a.amount == b.amount && a.index == b.index;
+  }
 };
 
 /// A system in one stretch of its feed profiles: the right-hand side of its equations.
@@ -157,11 +159,12 @@ class Kettle : public Equations {
   double heat_capacity(const std::vector<double>& amounts, double temperature) const;
   double mass(const std::vector<double>& amounts) const;
   /// Temperature at which some amounts have an enthalpy, `vessel` [J/K] moving with them [K].
-  double temperature_of(const std::vector<double>& amounts, double enthalpy, double vessel, double guess) const;
+  double temperature_of(const std::vector<double>& amounts, double enthalpy, double vessel,
+                        double guess) const;
 
   const DosedSystem& system() const { return system_; }
-  const std::vector<double>& all_charged() const { return all_; }       ///< start and all feeds [mol]
-  const std::vector<double>& whole_extents() const { return whole_; }   ///< of the step run to the end [mol]
+  const std::vector<double>& all_charged() const { return all_; }      ///< start and all feeds [mol]
+  const std::vector<double>& whole_extents() const { return whole_; }  ///< of the step run to the end [mol]
   bool has_rate_law() const { return !slow_.empty(); }
   bool has_unknown_speed() const;
 
@@ -185,13 +188,13 @@ class Kettle : public Equations {
 
   const DosedSystem& system_;
   RunOptions options_;
-  std::vector<double> scales_;            ///< of each unknown over the whole step
-  std::vector<std::size_t> slow_, fast_;  ///< reactions by rate law, and the others
+  std::vector<double> scales_;              ///< of each unknown over the whole step
+  std::vector<std::size_t> slow_, fast_;    ///< reactions by rate law, and the others
   std::vector<double> slow_stoichiometry_;  ///< of each substance in each of slow_
   std::vector<Pivot> pivots_;               ///< one for each of slow_
   std::vector<double> to_extents_;          ///< inverse of the pivots' rows
-  std::vector<ProfileLine> lines_;        ///< of each feed, in the stretch entered
-  std::vector<std::size_t> limiting_;     ///< substance for each of fast_
+  std::vector<ProfileLine> lines_;          ///< of each feed, in the stretch entered
+  std::vector<std::size_t> limiting_;       ///< substance for each of fast_
   std::vector<double> all_, whole_;
   double start_enthalpy_ = 0;  ///< content and vessel [J]
   double whole_mass_fed_ = 0;

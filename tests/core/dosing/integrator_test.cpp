@@ -34,14 +34,13 @@ Ran run(double stiffness, double tolerance) {
   std::vector<double> y = {1, 1};
   Progress progress;
   Ran ran;
-  const Ending ending = integrate(Stiff(stiffness, tolerance), 0, 10, y, 10, progress,
-                                  [&](DenseStep& step) {
-                                    double at[2];
-                                    const double t = step.from + 0.4 * step.length;
-                                    step.at(t, at);
-                                    ran.inside = std::max(ran.inside, std::fabs(at[1] - std::exp(std::sin(t))));
-                                    return true;
-                                  });
+  const Ending ending = integrate(Stiff(stiffness, tolerance), 0, 10, y, 10, progress, [&](DenseStep& step) {
+    double at[2];
+    const double t = step.from + 0.4 * step.length;
+    step.at(t, at);
+    ran.inside = std::max(ran.inside, std::fabs(at[1] - std::exp(std::sin(t))));
+    return true;
+  });
   EXPECT_EQ(ending, Ending::Reached);
   ran.error = std::fabs(y[1] - std::exp(std::sin(10.0)));
   ran.steps = progress.steps;
@@ -76,8 +75,7 @@ TEST(Integrator, RefusesABlowUp) {
   };
   std::vector<double> y = {1};
   Progress progress;
-  EXPECT_EQ(integrate(Bursts(), 0, 2, y, 2, progress, [](DenseStep&) { return true; }),
-            Ending::TooSteep);
+  EXPECT_EQ(integrate(Bursts(), 0, 2, y, 2, progress, [](DenseStep&) { return true; }), Ending::TooSteep);
 }
 
 /// The same charge in amounts and temperature, written anew, by the classical Runge–Kutta formula with

@@ -20,9 +20,10 @@ std::shared_ptr<DosedSystem> crowded(Thermal thermal) {
   charge.end = 20000;
   auto system = charge.system();
   system->vessel_heat_capacity = 4e5;
-  system->substances.push_back({"D", 0.3, 0.3e-3, Enthalpy::tabulated(
-      [](double t) { return 450 * (t - 298.15) + 0.3 * (t * t - 298.15 * 298.15); },
-      [](double t) { return 450 + 0.6 * t; })});
+  system->substances.push_back(
+      {"D", 0.3, 0.3e-3,
+       Enthalpy::tabulated([](double t) { return 450 * (t - 298.15) + 0.3 * (t * t - 298.15 * 298.15); },
+                           [](double t) { return 450 + 0.6 * t; })});
   system->start.push_back(0);
   system->feeds[0].amounts.push_back(0);
   Result<Profile> steps = Profile::of({{0, 0}, {600, 0.2}, {3000, 0.2}, {3600, 0.7}, {9000, 1}});
@@ -66,7 +67,8 @@ TEST_P(Closure, ElementsAndEnergyAtEveryMoment) {
     EXPECT_NEAR(m.amounts[1] + m.amounts[2] + 2 * m.amounts[4], b, 1e-9 * 5000);
     // Enthalpy of what is there from its own amounts and temperature, against all that came in.
     double there = 4e5 * (m.temperature - 298.15);
-    for (std::size_t s = 0; s < 5; ++s) there += m.amounts[s] * system->substances[s].enthalpy.at(m.temperature);
+    for (std::size_t s = 0; s < 5; ++s)
+      there += m.amounts[s] * system->substances[s].enthalpy.at(m.temperature);
     const double start = (4e5 + 1000 * 2000) * (333.15 - 298.15);
     const double came = start + enthalpy_fed + m.wall_heat + 180e3 * m.extents[0] + 90e3 * m.extents[1];
     EXPECT_NEAR(there, came, 1e-9 * (std::fabs(came) + 180e3 * 5000));
@@ -91,7 +93,8 @@ TEST_P(Closure, WallHeatIsWhatTheCoolingAddsUpTo) {
   EXPECT_NEAR(course.at(20000).wall_heat, sum, 2e-6 * 1e9);
 }
 
-INSTANTIATE_TEST_SUITE_P(AllWays, Closure, ::testing::Values(Thermal::Held, Thermal::Jacket, Thermal::Adiabatic));
+INSTANTIATE_TEST_SUITE_P(AllWays, Closure,
+                         ::testing::Values(Thermal::Held, Thermal::Jacket, Thermal::Adiabatic));
 
 TEST(DosedInvariants, GridOfTheAnswersHasNoPartInThem) {
   const auto system = crowded(Thermal::Jacket);

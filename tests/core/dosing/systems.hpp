@@ -11,15 +11,15 @@ namespace heatledger::dosing::test_systems {
 
 /// A + B → C, A in the vessel, B fed at a constant rate; all of one density and heat capacity.
 struct Charge {
-  double a = 5000, b = 5000;          ///< [mol]
+  double a = 5000, b = 5000;            ///< [mol]
   double volume_a = 1, volume_b = 0.5;  ///< [m³] of the charge and of the feed
-  double dosing = 7200, end = 7200;   ///< [s]
-  double heat = -180e3;               ///< [J/mol]
-  double k = 2e-7;                    ///< [m³/(mol s)]
-  double activation_energy = 0;       ///< [J/mol]
+  double dosing = 7200, end = 7200;     ///< [s]
+  double heat = -180e3;                 ///< [J/mol]
+  double k = 2e-7;                      ///< [m³/(mol s)]
+  double activation_energy = 0;         ///< [J/mol]
   double temperature = 333.15, feed_temperature = 333.15, jacket = 333.15;  ///< [K]
-  double cp = 2000;                   ///< [J/(kg K)]
-  double ua = 0, ua_end = 0;          ///< [W/K]
+  double cp = 2000;                                                         ///< [J/(kg K)]
+  double ua = 0, ua_end = 0;                                                ///< [W/K]
   Speed speed = Speed::ByRateLaw;
   Thermal thermal = Thermal::Held;
 
