@@ -62,7 +62,7 @@ Closure close(const StepResult& result, const Work& work) {
   closure.heat_closes = closure.heat <= kClosed;
   close_elements(result, closure);
 
-  double enthalpy = work.vessel_heat + result.values[*result.model->slot("loss")] -
+  double enthalpy = work.vessel_heat + work.departure + result.values[*result.model->slot("loss")] -
                     result.values[*result.model->slot("shaft")];
   bool all = true;
   for (const StreamLine& line : result.out) {

@@ -1,5 +1,6 @@
 #include "core/step/figures.hpp"
 
+#include <algorithm>
 #include <cmath>
 
 #include "core/base/check.hpp"
@@ -99,6 +100,41 @@ std::optional<double> conductance(const Model& model, const std::vector<double>&
   return heat / mean;
 }
 
+std::vector<FigureId> all_figures(const Model& model) {
+  const StepInput& input = model.input();
+  std::vector<FigureId> ids{FigureId::Sought};
+  if (!input.reactions.empty()) {
+    ids.push_back(FigureId::HeatSetFree);
+    ids.push_back(FigureId::HeatPerMass);
+  }
+  const bool medium = input.surface.medium_in || input.surface.medium_out;
+  if (input.kind == StepKind::ThroughFlow) {
+    if (medium) ids.push_back(FigureId::Conductance);
+    return ids;
+  }
+  if (input.charge.cooling) ids.push_back(FigureId::Time);
+  const bool timed = input.time && input.sought != "time";  // what is sought is not also an input
+  if (timed) {
+    ids.push_back(FigureId::MeanDuty);
+    if (medium) ids.push_back(FigureId::Conductance);
+  }
+  if (input.charge.rate_constant) ids.push_back(FigureId::PeakDuty);
+  if (!input.reactions.empty()) {
+    ids.push_back(FigureId::AdiabaticRise);
+    ids.push_back(FigureId::AdiabaticEnd);
+    ids.push_back(FigureId::EndByEnthalpy);
+    if (input.vessel.heat_capacity) {
+      ids.push_back(FigureId::EndWithVessel);
+      ids.push_back(FigureId::ThermalInertia);
+    }
+    if (input.charge.solvent) {
+      ids.push_back(FigureId::BoilingPoint);
+      ids.push_back(FigureId::BoiledOff);
+    }
+  }
+  return ids;
+}
+
 }  // namespace
 
 double process_temperature(const Model& model, const std::vector<double>& v) {
@@ -123,40 +159,20 @@ double charge_heat_capacity(const Model& model, const Work& work, const std::vec
   return sum;
 }
 
-std::vector<FigureId> figures_of(const Model& model) {
-  const StepInput& input = model.input();
-  std::vector<FigureId> ids{FigureId::Sought};
-  if (!input.reactions.empty()) {
-    ids.push_back(FigureId::HeatSetFree);
-    ids.push_back(FigureId::HeatPerMass);
-  }
-  const bool medium = input.surface.medium_in || input.surface.medium_out;
-  if (input.kind == StepKind::ThroughFlow) {
-    if (medium) ids.push_back(FigureId::Conductance);
-    return ids;
-  }
-  if (input.charge.cooling) ids.push_back(FigureId::Time);
-  if (input.time) {
-    ids.push_back(FigureId::MeanDuty);
-    if (medium) ids.push_back(FigureId::Conductance);
-  }
-  if (input.charge.rate_constant) ids.push_back(FigureId::PeakDuty);
-  if (!input.reactions.empty()) {
-    ids.push_back(FigureId::AdiabaticRise);
-    ids.push_back(FigureId::AdiabaticEnd);
-    ids.push_back(FigureId::EndByEnthalpy);
-    if (input.vessel.heat_capacity) {
-      ids.push_back(FigureId::EndWithVessel);
-      ids.push_back(FigureId::ThermalInertia);
-    }
-    if (input.charge.solvent) {
-      ids.push_back(FigureId::BoilingPoint);
-      ids.push_back(FigureId::BoiledOff);
-    }
-  }
-  return ids;
+FigureId headline(const Model& model) {
+  const std::string& sought = model.input().sought;
+  return sought == "conductance" ? FigureId::Conductance
+         : sought == "time"      ? FigureId::Time
+                                 : FigureId::Sought;
 }
 
+std::vector<FigureId> figures_of(const Model& model) {
+  const FigureId first = headline(model);
+  std::vector<FigureId> ids = all_figures(model);
+  ids.erase(std::remove(ids.begin(), ids.end(), first), ids.end());
+  ids.insert(ids.begin(), first);
+  return ids;
+}
 void compute_figures(const Model& model, const std::vector<FigureId>& ids, const std::vector<double>& v,
                      Work& work, std::vector<std::optional<double>>& out) {
   const bool charge = model.input().kind == StepKind::Charge;
@@ -225,7 +241,8 @@ std::string figure_label(const Model& model, FigureId id) {
     case FigureId::Sought:
       return model.slots()[model.sought()].label;
     case FigureId::HeatSetFree:
-      return "heat set free by reaction";
+      return model.input().kind == StepKind::Charge ? "heat set free at process temperature"
+                                                    : "heat set free at 25 °C";
     case FigureId::HeatPerMass:
       return "heat set free per kg fed";
     case FigureId::Conductance:

@@ -24,7 +24,10 @@ enum class FigureId : std::uint8_t {
   BoiledOff,       ///< solvent boiled off when the rise stops at the boiling point [kg]
 };
 
-/// Which figures a step has; the order is that of the sheet.
+/// The figure that the person asked for: the sought blank, or UA or time that follow from it.
+FigureId headline(const Model& model);
+
+/// Which figures a step has; the order is that of the sheet, the headline first.
 std::vector<FigureId> figures_of(const Model& model);
 
 /// The figures after the sought blank is solved. A figure that does not exist at these numbers is empty.

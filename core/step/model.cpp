@@ -313,17 +313,26 @@ void Model::downstream(const std::vector<double>& v, Work& work) const {
   const double temperature = v[outlet_temperature_];
   split(v, temperature, work);
   work.outlet_heat = 0;
+  double gases = 0;
   for (std::size_t i = 0; i < leaving_.size(); ++i) {
     if (work.leaving[i] == 0) continue;
     const LeavingPlan& plan = leaving_[i];
     const double vapour = plan.vapour ? work.vapour[i] : 0;
-    if (vapour != 0) work.outlet_heat += vapour * enthalpy(v, *plan.vapour, temperature);
-    if (vapour != work.leaving[i])
-      work.outlet_heat += (work.leaving[i] - vapour) * enthalpy(v, plan.state, temperature);
+    if (vapour != 0) {
+      const double heat = vapour * enthalpy(v, *plan.vapour, temperature);
+      work.outlet_heat += heat;
+      gases += heat;
+    }
+    if (vapour != work.leaving[i]) {
+      const double heat = (work.leaving[i] - vapour) * enthalpy(v, plan.state, temperature);
+      work.outlet_heat += heat;
+      if (states_[plan.state].state.phase == molecule::Phase::Gas) gases += heat;
+    }
   }
+  work.departure = departure_ ? v[*departure_] : departure_share_ ? v[*departure_share_] * gases : 0;
   work.vessel_heat = vessel_ ? v[*vessel_] * (temperature - v[*vessel_temperature_]) : 0;
-  work.needed =
-      work.outlet_heat - work.inlet_heat + work.reaction_heat + work.vessel_heat + v[loss_] - v[shaft_];
+  work.needed = work.outlet_heat - work.inlet_heat + work.reaction_heat + work.vessel_heat + work.departure +
+                v[loss_] - v[shaft_];
 }
 
 Status Model::curves_present(const std::vector<double>& v, const Work& work) const {

@@ -49,7 +49,8 @@ struct Work {
   double reaction_heat = 0;     ///< Σ ξ ΔrH(25 °C, reference phases)
   double outlet_heat = 0;
   double vessel_heat = 0;
-  double needed = 0;  ///< heat to the process that closes the balance
+  double departure = 0;  ///< from ideal gas
+  double needed = 0;     ///< heat to the process that closes the balance
   std::size_t culprit = 0;
   std::vector<double> matrix;  ///< of the progress equations
   std::vector<double> saturation;
@@ -68,7 +69,7 @@ struct StateCurve {
 class Model {
  public:
   /// Looks up what the step needs and lays out its numbers.
-  /// @errors step.nothing_fed, step.blank, step.two_sought, step.no_heat_capacity, step.no_molar_mass,
+  /// @errors step.nothing_fed, step.blank, step.over_specified, step.no_heat_capacity, step.no_molar_mass,
   ///         step.no_density, step.key_not_consumed, step.not_a_blank and those of core/thermo; `where` is
   ///         the id of the blank
   static Result<Model> of(StepInput input, Lookups& lookups);
@@ -170,7 +171,7 @@ class Model {
   std::vector<ReactionPlan> reactions_;
   std::vector<std::string> cautions_;
   std::size_t sought_ = 0, duty_ = 0, loss_ = 0, shaft_ = 0, outlet_temperature_ = 0;
-  std::optional<std::size_t> outlet_pressure_, vessel_, vessel_temperature_;
+  std::optional<std::size_t> outlet_pressure_, vessel_, vessel_temperature_, departure_, departure_share_;
   bool splits_ = false, saturates_ = false;
 };
 

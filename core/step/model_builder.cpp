@@ -47,6 +47,7 @@ class ModelBuilder {
   ModelBuilder(StepInput input, Lookups& lookups) : lookups_(lookups) { model_.input_ = std::move(input); }
 
   Result<Model> build() {
+    if (const Status chosen = choose_sought(); !chosen.ok()) return chosen.error();
     for (const auto stage :
          {&ModelBuilder::substances, &ModelBuilder::reactions, &ModelBuilder::feeds, &ModelBuilder::outlet,
           &ModelBuilder::reflux, &ModelBuilder::wall, &ModelBuilder::sought}) {
@@ -62,7 +63,7 @@ class ModelBuilder {
   Result<std::size_t> blank(const std::string& id, const std::string& label,
                             const units::Dimension& dimension, const Blank& typed, double low, double high,
                             std::optional<double> otherwise = {}) {
-    const bool is_sought = id == input().sought;
+    const bool is_sought = id == sought_;
     if (!typed && !is_sought && !otherwise) return blank_error(id, label);
     Slot slot;
     slot.id = id;
@@ -341,6 +342,10 @@ class ModelBuilder {
                 feed.temperature, kColdest, kHottest);
       if (!temperature.ok()) return temperature.error();
       plan.temperature = *temperature;
+      if (feed.carried_temperature && sought_ != id + ".temperature") {
+        model_.slots_[*temperature].spread = *feed.carried_temperature;
+        model_.slots_[*temperature].typed = false;
+      }
       const Result<std::size_t> pressure =
           blank(id + ".pressure", "pressure of " + feed.name, units::dimension::kPressure, feed.pressure,
                 kLeastPressure, kMostPressure, units::kStandardAtmosphere);
@@ -419,7 +424,7 @@ class ModelBuilder {
                      "Type its density, or enter it by mass."};
       }
     }
-    const bool is_sought = id == input().sought;
+    const bool is_sought = id == sought_;
     if (shares && !part.figure && !is_sought) {
       if (plan.rest) {
         return Error{"step.blank", "Two shares of " + feed.name + " are not filled in.", id,
@@ -434,6 +439,8 @@ class ModelBuilder {
                          measure_dimension(part.measure, flow), part.figure, 0, kFar);
       if (!slot.ok()) return slot.error();
       figure.figure = *slot;
+      if (part.shared && !is_sought) model_.slots_[*slot].spread = *part.shared;
+      if (part.derived) model_.slots_[*slot].typed = false;
     }
     model_.figures_.push_back(figure);
     return success();
@@ -471,8 +478,7 @@ class ModelBuilder {
     const SubstanceInput& substance = input().substances[leaving.substance];
     const std::string id = "leaving." + std::to_string(l);
     Model::LeavingPlan& plan = model_.leaving_[leaving.substance];
-    const bool split =
-        leaving.vapour_share || leaving.by_saturation || input().sought == id + ".vapour_share";
+    const bool split = leaving.vapour_share || leaving.by_saturation || sought_ == id + ".vapour_share";
     State state = leaving.state;
     if (split && state.phase != Phase::Liquid) state = State{Phase::Liquid, {}};
     if (state.phase == Phase::Unstated) state = reference_states_[leaving.substance];
@@ -560,14 +566,25 @@ class ModelBuilder {
       if (!slot.ok()) return slot.error();
       entry.slot = *slot;
     }
+    if (input().departure || sought_ == "departure") {
+      const Result<std::size_t> slot =
+          blank("departure", "departure from ideal gas", heat, input().departure, -kFar, kFar);
+      if (!slot.ok()) return slot.error();
+      model_.departure_ = *slot;
+    } else if (input().departure_share) {
+      const Result<std::size_t> slot = blank("departure", "departure from ideal gas",
+                                             units::dimension::kNumber, input().departure_share, -1, 1);
+      if (!slot.ok()) return slot.error();
+      model_.departure_share_ = *slot;
+    }
     const Vessel& vessel = input().vessel;
-    if (vessel.heat_capacity || input().sought == "vessel.heat_capacity") {
+    if (vessel.heat_capacity || sought_ == "vessel.heat_capacity") {
       const Result<std::size_t> capacity =
           blank("vessel.heat_capacity", "heat capacity of the vessel", units::dimension::kHeatCapacity,
                 vessel.heat_capacity, 0, kFar);
       if (!capacity.ok()) return capacity.error();
       model_.vessel_ = *capacity;
-      if (vessel.temperature || input().sought == "vessel.temperature") {
+      if (vessel.temperature || sought_ == "vessel.temperature") {
         const Result<std::size_t> start =
             blank("vessel.temperature", "temperature of the vessel at the start",
                   units::dimension::kTemperature, vessel.temperature, kColdest, kHottest);
@@ -580,8 +597,29 @@ class ModelBuilder {
     return success();
   }
 
+  /// What the balance itself is closed by. UA and time follow once duty and outlet temperature are known.
+  Status choose_sought() {
+    const StepInput& in = input();
+    sought_ = in.sought;
+    const bool conductance = in.sought == "conductance", time = in.sought == "time";
+    if (!conductance && !time) return success();
+    if (conductance && !in.surface.medium_in && !in.surface.medium_out)
+      return blank_error("medium_in", "temperature of the cooling or heating medium");
+    if (conductance && in.kind == StepKind::Charge && !in.time)
+      return blank_error("time", "time over which it reacts");
+    if (time && (in.kind != StepKind::Charge || !in.charge.cooling))
+      return blank_error("cooling", "cooling capacity");
+    if (in.duty && in.outlet.temperature) {
+      return Error{"step.over_specified",
+                   "Duty and outlet temperature are both typed, and each settles the other.", "duty",
+                   "Leave one of them blank."};
+    }
+    sought_ = in.duty ? "outlet.temperature" : "duty";
+    return success();
+  }
+
   Status sought() {
-    const std::optional<std::size_t> slot = model_.slot(input().sought);
+    const std::optional<std::size_t> slot = model_.slot(sought_);
     if (!slot || !model_.slots_[*slot].blank) {
       return Error{"step.not_a_blank", "The blank marked as sought is not on this step.", input().sought,
                    "Mark one of the step's own blanks."};
@@ -592,6 +630,7 @@ class ModelBuilder {
 
   Lookups& lookups_;
   Model model_;
+  std::string sought_;  ///< id of the number that closes the balance
   std::vector<State> reference_states_;
   std::optional<std::size_t> mass_deviation_;
 };

@@ -129,8 +129,8 @@ class Sheet {
       if (vapour != 0) heat += vapour * sensible(*model_.vapour_state(i), temperature);
       outlet_ += heat * factor(variation_.out_heat, i);
     }
-    model_.downstream(v_, work_);  // for the vessel
-    return outlet_ - inlet_ + reaction + work_.vessel_heat +
+    model_.downstream(v_, work_);  // for the vessel and the departure from ideal gas
+    return outlet_ - inlet_ + reaction + work_.vessel_heat + work_.departure +
            v_[*model_.slot("loss")] * variation_.loss_factor - v_[*model_.slot("shaft")];
   }
 

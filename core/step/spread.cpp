@@ -132,4 +132,68 @@ std::vector<std::optional<FigureSpread>> first_order(const Model& model, const s
   return result;
 }
 
+LeavingSpread leaving_spread(const Model& model, const std::vector<double>& nominal) {
+  std::vector<double> v = nominal;
+  Work work;
+  const std::size_t sought = model.sought();
+  const auto at = [&](std::size_t slot, double value) {
+    const double kept = v[slot];
+    v[slot] = value;
+    const bool exists = model.evaluate(v, work) == Trouble::None;
+    v[slot] = kept;
+    return exists;
+  };
+  struct Side {
+    std::vector<double> total, vapour;
+    double missing = 0;
+  };
+  /// Slopes by one number, one-sided at the edge of what can be; empty where neither side exists.
+  const auto slopes = [&](std::size_t slot, double step) -> std::optional<Side> {
+    std::optional<Side> sides[2];
+    double width = 0;
+    for (int s = 0; s < 2; ++s) {
+      const bool exists = at(slot, v[slot] + (s == 0 ? step : -step));
+      width += exists ? step : 0;
+      if (!exists && !at(slot, v[slot])) return std::nullopt;
+      sides[s] = Side{work.leaving, work.vapour, work.needed - v[model.duty_slot()]};
+    }
+    if (width == 0) return std::nullopt;
+    Side slope = *sides[0];
+    for (std::size_t i = 0; i < slope.total.size(); ++i)
+      slope.total[i] = (slope.total[i] - sides[1]->total[i]) / width;
+    for (std::size_t i = 0; i < slope.vapour.size(); ++i)
+      slope.vapour[i] = (slope.vapour[i] - sides[1]->vapour[i]) / width;
+    slope.missing = (slope.missing - sides[1]->missing) / width;
+    return slope;
+  };
+  CHECK(at(sought, v[sought]), "the step is solved before its ± is asked");
+  const std::vector<double> total = work.leaving, vapour = work.vapour;
+  std::vector<std::vector<Part>> total_parts(total.size()), vapour_parts(vapour.size());
+  const std::optional<Side> by_sought = slopes(sought, 1e-5 * std::max(std::fabs(v[sought]), 1e-3));
+  for (std::size_t s = 0; s < model.slots().size(); ++s) {
+    const Quantity& spread = model.slots()[s].spread;
+    if (s == sought || !(spread.u95() > 0)) continue;
+    const std::optional<Side> by_slot = slopes(s, 0.01 * spread.u95());
+    if (!by_slot) continue;
+    const double follows = by_sought && by_sought->missing != 0 ? -by_slot->missing / by_sought->missing : 0;
+    const auto add = [&](std::vector<std::vector<Part>>& parts, const std::vector<double>& direct,
+                         const std::vector<double>& along) {
+      for (std::size_t i = 0; i < parts.size(); ++i) {
+        const double slope = direct[i] + (follows != 0 ? along[i] * follows : 0);
+        if (slope == 0) continue;
+        for (const Part& part : spread.parts()) parts[i].push_back({part.source, slope * part.u95});
+      }
+    };
+    static const std::vector<double> none;
+    add(total_parts, by_slot->total, by_sought ? by_sought->total : none);
+    add(vapour_parts, by_slot->vapour, by_sought ? by_sought->vapour : none);
+  }
+  LeavingSpread result;
+  for (std::size_t i = 0; i < total.size(); ++i)
+    result.total.push_back(Quantity(total[i], std::move(total_parts[i])));
+  for (std::size_t i = 0; i < vapour.size(); ++i)
+    result.vapour.push_back(Quantity(vapour[i], std::move(vapour_parts[i])));
+  return result;
+}
+
 }  // namespace heatledger::step

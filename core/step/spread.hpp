@@ -24,6 +24,12 @@ struct FigureSpread {
 std::vector<std::optional<FigureSpread>> first_order(const Model& model, const std::vector<FigureId>& ids,
                                                      const std::vector<double>& v);
 
+/// Amounts of the substances that leave, with the sources of their ± at the solution.
+struct LeavingSpread {
+  std::vector<uncertainty::Quantity> total, vapour;  ///< one for each substance; [mol] or [mol/s]
+};
+LeavingSpread leaving_spread(const Model& model, const std::vector<double>& v);
+
 /// What seeded draws say of one figure.
 struct DrawnFigure {
   double low = 0, high = 0;  ///< 2.5 and 97.5 % of the draws

@@ -100,6 +100,7 @@ void add_heats(StepResult& result, const Work& work) {
         -work.extents[j] * model.reaction_heat(result.values, j));
   add(HeatLine::Kind::Work, "shaft work", result.values[*model.slot("shaft")]);
   add(HeatLine::Kind::Duty, "duty", result.duty);
+  add(HeatLine::Kind::Loss, "departure from ideal gas", -work.departure);
   add(HeatLine::Kind::Loss, "heat loss", -result.values[*model.slot("loss")]);
   double vapour = 0, rest = 0;
   for (const StreamLine& line : result.out)
@@ -128,6 +129,7 @@ std::vector<std::string> duty_working(const StepResult& result, const Work& work
   if (work.vessel_heat != 0) lines.push_back("plus the vessel: " + heat(work.vessel_heat));
   const double loss = result.values[*result.model->slot("loss")],
                shaft = result.values[*result.model->slot("shaft")];
+  if (work.departure != 0) lines.push_back("plus departure from ideal gas: " + heat(work.departure));
   if (loss != 0) lines.push_back("plus heat loss: " + heat(loss));
   if (shaft != 0) lines.push_back("less shaft work: " + heat(shaft));
   lines.push_back("= duty " + heat(result.duty) +
@@ -183,7 +185,8 @@ Result<StepResult> solve_step(StepInput input, Lookups& lookups, const SolveOpti
   if (const Status present = model.curves_present(result.values, work); !present.ok()) return present.error();
   result.duty = result.values[model.duty_slot()];
   for (const Slot& slot : model.slots()) {
-    if (slot.blank && slot.typed && slot.spread.parts().empty() && slot.id != model.input().sought)
+    if (slot.blank && slot.typed && slot.spread.parts().empty() &&
+        slot.id != model.slots()[model.sought()].id)
       ++result.exact_inputs;
   }
   add_streams(result, work, lookups);

@@ -221,6 +221,9 @@ std::vector<std::string> figure_working(const StepResult& result, const Work& wo
     case FigureId::MeanDuty:
       return {heat_text(find(FigureId::HeatSetFree), false) + " ÷ " +
               display_number(model.input().time->value / 3600, 2) + " h"};
+    case FigureId::Time:
+      return {heat_text(find(FigureId::HeatSetFree), false) + " ÷ " +
+              heat_text(model.input().charge.cooling->value, true) + " of cooling"};
     case FigureId::PeakDuty:
       return {heat_text(find(FigureId::HeatSetFree), false) + " × " +
               digits(model.input().charge.rate_constant->value * 3600) + " /h, first order, held at " +

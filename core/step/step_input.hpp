@@ -58,6 +58,11 @@ struct FeedPart {
   State state;
   Blank figure;  ///< an amount, or with a total a share 0 .. 1; one empty share is the rest
   Measure measure = Measure::Mole;
+  /// The figure with the sources of its ± when they are not its own: carried from a step above, or one of
+  /// several parts of an entry such as air.
+  std::optional<uncertainty::Quantity> shared;
+  bool derived = false;  ///< not typed itself: carried, or a further part of an entry
+  std::size_t row = 0;   ///< entry of the sheet that it comes from
 };
 
 /// A feed that brings so much of a species that `excess` is left over when the key of a reaction is all gone.
@@ -69,8 +74,9 @@ struct ExcessOver {
 
 struct Feed {
   std::string name;
-  Blank temperature;  ///< [K]
-  Blank pressure;     ///< [Pa], for volumes of gas
+  Blank temperature;                                         ///< [K]
+  std::optional<uncertainty::Quantity> carried_temperature;  ///< of a step above, with the sources of its ±
+  Blank pressure;                                            ///< [Pa], for volumes of gas
   ShareKind shares = ShareKind::None;
   Blank total;  ///< with shares: [mol], [kg] or [m³] by `measure`; with `excess`: the excess itself (0.2 is
                 ///< 20 %)
@@ -160,12 +166,16 @@ struct StepInput {
   Blank duty;                ///< heat to the process [W] or [J]
   Blank loss;                ///< heat lost to the surroundings, > 0 [W] or [J]
   Blank shaft_work;          ///< done on the process, > 0 [W] or [J]
+  Blank departure;           ///< departure from ideal gas: heat beyond that of ideal gases [W] or [J]
+  Blank departure_share;     ///< the same as a share of what the gases carry out from 25 °C
   Blank time;                ///< charge: over which the heat is set free [s]
   Blank mass_heat_capacity;  ///< "cp of the mass" [J/(kg K)]: takes the place of all liquids and solids
   Vessel vessel;
   ChargeInput charge;
   Surface surface;
-  std::string sought = "duty";  ///< id of the blank that is sought
+  /// Id of the blank that is sought. "conductance" and "time" follow from the balance: then of duty and
+  /// outlet temperature one is typed and the other sought.
+  std::string sought = "duty";
 };
 
 }  // namespace heatledger::step

@@ -203,6 +203,94 @@ TEST(SoughtBlank, RefusesWhatCannotBe) {
   EXPECT_EQ(w.solve().error().code, "step.key_not_consumed");
 }
 
+TEST(SoughtBlank, ConductanceFollowsFromDutyOrOutlet) {
+  // 90 kW over 37.5 K, as in SurfaceAgainstOneMediumTemperatureAndByLogMean.
+  Writer w = one_reaction(-90e3 / 7, 150, 1);
+  w.input.surface.medium_in = Typed{282.5, 0};
+  w.input.sought = "conductance";
+  w.input.outlet.temperature = Typed{320, 0};
+  const StepResult by_outlet = solved(w);
+  EXPECT_EQ(by_outlet.answers.front().id, FigureId::Conductance);
+  EXPECT_NEAR(by_outlet.answers.front().value.value(), 2400, 1e-6);
+  w.input.duty = Typed{by_outlet.duty, 0};
+  EXPECT_EQ(w.solve().error().code, "step.over_specified");
+  w.input.outlet.temperature.reset();
+  const StepResult by_duty = solved(w);
+  EXPECT_EQ(by_duty.answers.front().id, FigureId::Conductance);
+  // The outlet is found to 1e-9 of the heat: 1e-6 K in 37.5 K.
+  EXPECT_NEAR(by_duty.answers.front().value.value(), 2400, 1e-3);
+  w.input.surface.medium_in.reset();
+  EXPECT_EQ(w.solve().error().where, "medium_in");
+}
+
+TEST(SoughtBlank, TimeFollowsFromTheCoolingCapacity) {
+  Writer w = one_reaction(-30e3, 150, 1);  // 7 mol
+  w.input.kind = StepKind::Charge;
+  w.input.outlet.temperature = Typed{320, 0};
+  w.input.sought = "time";
+  EXPECT_EQ(w.solve().error().where, "cooling");
+  w.input.charge.cooling = Typed{50, 0};
+  const StepResult r = solved(w);
+  EXPECT_EQ(r.answers.front().id, FigureId::Time);
+  EXPECT_NEAR(r.answers.front().value.value(), 210e3 / 50, 1e-6);
+}
+
+TEST(ClosedForms, DepartureFromIdealGasIsALineOfItsOwn) {
+  Writer w;
+  w.feed("gas", 300);
+  w.part("nitrogen", Phase::Gas, 3);
+  w.input.substances[0].heat_capacity = Typed{30, 0};
+  w.input.outlet.temperature = Typed{400, 0};
+  EXPECT_NEAR(solved(w).duty, 9000, 1e-9);
+  w.input.departure = Typed{-250, 20};
+  const StepResult typed = solved(w);
+  EXPECT_NEAR(typed.duty, 8750, 1e-9);
+  EXPECT_NEAR(typed.answers.front().value.u95(), 20, 1e-6);
+  EXPECT_TRUE(typed.closure.heat_closes);
+  w.input.departure.reset();
+  w.input.departure_share = Typed{-0.02, 0};  // of 3 × 30 × (400 − 298.15)
+  const StepResult share = solved(w);
+  EXPECT_NEAR(share.duty, 9000 - 0.02 * 3 * 30 * 101.85, 1e-9);
+  EXPECT_TRUE(share.closure.heat_closes);
+}
+
+/// A step cut in two with the stream handed on: what is typed above moves the answer below as if it stood
+/// there.
+TEST(CarriedStream, KeepsTheSourcesOfItsSpread) {
+  Writer whole = one_reaction(-30e3, 150, 0.4);
+  whole.input.feeds[0].parts[0].figure = Typed{7, 0.5};
+  whole.input.reactions[0].progress.figure = Typed{0.4, 0.05};
+  whole.input.outlet.temperature = Typed{350, 0};
+  const StepResult above = solved(whole);
+  const LeavingSpread leaving = leaving_spread(*above.model, above.values);
+  ASSERT_EQ(leaving.total.size(), 2u);
+  // B leaves as 7 X: 7 × 0.05 and 0.4 × 0.5 together; A as 7 (1 − X).
+  EXPECT_NEAR(leaving.total[1].u95(), std::sqrt(0.35 * 0.35 + 0.2 * 0.2), 1e-9);
+  EXPECT_NEAR(leaving.total[0].u95(), std::sqrt(0.35 * 0.35 + 0.3 * 0.3), 1e-9);
+  uncertainty::Quantity both = leaving.total[0];
+  both.add(leaving.total[1]);
+  EXPECT_NEAR(both.u95(), 0.5, 1e-9);  // what has reacted is lost on one side and won on the other
+
+  Writer below = whole;
+  below.input.title = "below";
+  below.input.reactions.clear();
+  below.input.feeds[0].temperature = Typed{350, 0};
+  below.input.feeds[0].parts.resize(1);
+  below.input.feeds[0].parts.push_back(below.input.feeds[0].parts[0]);
+  for (std::size_t i = 0; i < 2; ++i) {
+    FeedPart& part = below.input.feeds[0].parts[i];
+    part.substance = i;
+    part.figure = Typed{leaving.total[i].value(), 0};
+    part.shared = leaving.total[i];
+    part.derived = true;
+  }
+  below.input.outlet.temperature = Typed{360, 0};
+  const StepResult on = solved(below);
+  // Both have the same heat capacity of 150: 10 K × 150 × 0.5 mol.
+  EXPECT_NEAR(on.answers.front().value.u95(), 750, 1e-6);
+  EXPECT_EQ(on.exact_inputs, 2);  // the two temperatures
+}
+
 TEST(Draws, AgreeWithFirstOrderWhereTheAnswerIsLinear) {
   Writer w = one_reaction(-30e3, 150, 0.4);
   w.input.duty = Typed{0, 0};
