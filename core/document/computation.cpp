@@ -22,10 +22,11 @@ struct LedgerKey {
   const TypedBonds* typed_bonds = nullptr;
   const SheetLibrary* library = nullptr;
   const estimate::Observations* observations = nullptr;
+  const NamedQuantities* quantities = nullptr;
 
   friend bool operator<(const LedgerKey& a, const LedgerKey& b) {
-    return std::tie(a.texts, a.typed_bonds, a.library, a.observations) <
-           std::tie(b.texts, b.typed_bonds, b.library, b.observations);
+    return std::tie(a.texts, a.typed_bonds, a.library, a.observations, a.quantities) <
+           std::tie(b.texts, b.typed_bonds, b.library, b.observations, b.quantities);
   }
 };
 
@@ -47,8 +48,8 @@ std::string texts_of(const ReactionSheet& sheet) {
 
 struct Remembered {
   std::shared_ptr<const ReactionResult> result;
-  std::shared_ptr<const void> typed_bonds,
-      observations;  ///< keep the identities in the key from being used again
+  std::shared_ptr<const void> typed_bonds, observations,
+      quantities;  ///< keep the identities in the key from being used again
   std::size_t last_used = 0;
 };
 
@@ -75,6 +76,8 @@ struct Calculator::Memory {
   std::shared_ptr<const TypedFigures> library_of;  ///< what `library` was made from
   std::shared_ptr<SheetLibrary> library;
   std::vector<estimate::Measurement> measured_species;
+  std::shared_ptr<const NamedQuantities> quantities_of;  ///< what `quantities` was read from
+  std::shared_ptr<const ReadQuantities> quantities;
   std::map<std::string, SetResult> sets;
   std::size_t clock = 0;
 
@@ -109,6 +112,11 @@ struct Calculator::Memory {
       equations.clear();
       measurements.clear();
     }
+    if (quantities_of != sheet.quantities.handle() || quantities == nullptr) {
+      quantities_of = sheet.quantities.handle();
+      quantities = std::make_shared<const ReadQuantities>(read_quantities(*sheet.quantities));
+      measurements.clear();
+    }
   }
 
   /// What the measured heat of a reaction says of other estimates; null where it says nothing.
@@ -124,7 +132,7 @@ struct Calculator::Memory {
     if (reaction.ok() && primary.ok()) {
       balance::LedgerOptions options;
       options.set = *primary;
-      options.measured = read_conditions(sheet).measured;
+      options.measured = read_conditions(sheet, quantities->names).measured;
       const Result<balance::Ledger> ledger = balance::make_ledger(*reaction, options);
       if (ledger.ok()) {
         Result<estimate::Measurement> one = balance::observation_of(*ledger);
@@ -170,7 +178,7 @@ struct Calculator::Memory {
     options.set = **chosen;
     options.basis = sheet.basis;
     options.pinned_route = sheet.pinned_route;
-    Conditions conditions = read_conditions(sheet);
+    Conditions conditions = read_conditions(sheet, quantities->names);
     options.reactants_at = conditions.reactants_at;
     options.products_at = conditions.products_at;
     options.pressure = conditions.pressure;
@@ -223,6 +231,9 @@ Results Calculator::compute(const Worksheet& sheet) {
   results.errors = memory.overlay.errors;
   results.errors.insert(results.errors.end(), memory.library->errors().begin(),
                         memory.library->errors().end());
+  results.errors.insert(results.errors.end(), memory.quantities->errors.begin(),
+                        memory.quantities->errors.end());
+  results.quantities = memory.quantities;
   results.exact = memory.overlay.exact;
   for (std::size_t i = 0; i < memory.library->figures().size(); ++i) {
     if (memory.library->figures()[i].exact)
@@ -231,15 +242,18 @@ Results Calculator::compute(const Worksheet& sheet) {
   results.reactions.reserve(sheet.reactions.size());
   for (std::size_t i = 0; i < sheet.reactions.size(); ++i) {
     const Shared<ReactionSheet>& reaction = sheet.reactions[i];
-    LedgerKey key{texts_of(*reaction), memory.overlay_of.get(), memory.library.get(), observed.get()};
+    LedgerKey key{texts_of(*reaction), memory.overlay_of.get(), memory.library.get(), observed.get(),
+                  memory.quantities_of.get()};
     Remembered& entry = memory.ledgers[std::move(key)];
     if (entry.result == nullptr) {
       entry.result = std::make_shared<const ReactionResult>(memory.compute(*reaction, observed));
       entry.typed_bonds = memory.overlay_of;
       entry.observations = observed;
+      entry.quantities = memory.quantities_of;
     }
     entry.last_used = memory.clock;
-    if (!reaction->measured.value.empty() && read_conditions(*reaction).measured_exact)
+    if (!reaction->measured.value.empty() &&
+        read_conditions(*reaction, memory.quantities->names).measured_exact)
       results.exact.push_back("reactions[" + std::to_string(i) + "].measured.value");
     results.reactions.push_back(entry.result);
   }
@@ -249,7 +263,7 @@ Results Calculator::compute(const Worksheet& sheet) {
     if (results.reactions[i]->ledger != nullptr)
       ledgers[sheet.reactions[i]->id] = results.reactions[i]->ledger;
   }
-  results.steps = memory.steps.compute(sheet.steps, memory.library, ledgers);
+  results.steps = memory.steps.compute(sheet.steps, memory.library, ledgers, memory.quantities);
   return results;
 }
 

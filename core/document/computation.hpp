@@ -8,6 +8,7 @@
 
 #include "core/balance/ledger.hpp"
 #include "core/document/history.hpp"
+#include "core/document/named_quantities.hpp"
 #include "core/document/step_computation.hpp"
 #include "core/document/typed_species.hpp"
 
@@ -35,8 +36,9 @@ struct Results {
   std::vector<std::shared_ptr<const StepOutcome>> steps;         ///< one for each Worksheet::steps entry
   std::vector<std::shared_ptr<const ReactionResult>> reactions;  ///< one for each Worksheet::reactions entry
   std::vector<Error> errors;  ///< typed bonds that cannot be read, and the like; `where` is a field path
-  std::shared_ptr<const SheetLibrary> library;  ///< species as this sheet knows them; never null
-  std::vector<std::string> exact;               ///< field paths of figures typed without ±: "bonds[0].value"
+  std::shared_ptr<const SheetLibrary> library;       ///< species as this sheet knows them; never null
+  std::shared_ptr<const ReadQuantities> quantities;  ///< named ones, worked out; never null
+  std::vector<std::string> exact;  ///< field paths of figures typed without ±: "bonds[0].value"
 };
 
 /// Keeps species, equations, bond sets and ledgers between edits, so that one edit recomputes one ledger.

@@ -34,12 +34,13 @@ StepCalculator& StepCalculator::operator=(StepCalculator&&) noexcept = default;
 
 std::vector<std::shared_ptr<const StepOutcome>> StepCalculator::compute(
     const std::vector<Shared<StepSheet>>& steps, const std::shared_ptr<balance::SpeciesSource>& species,
-    const std::map<std::string, std::shared_ptr<const balance::Ledger>>& ledgers) {
+    const std::map<std::string, std::shared_ptr<const balance::Ledger>>& ledgers,
+    const std::shared_ptr<const ReadQuantities>& quantities) {
   constexpr std::size_t kKept = 8;  // undo and redo over the last edits
   std::vector<std::shared_ptr<const StepOutcome>> outcomes;
   for (std::size_t s = 0; s < steps.size(); ++s) {
     const StepSheet& sheet = *steps[s];
-    Key key{steps[s].handle(), {species}};
+    Key key{steps[s].handle(), {species, quantities}};
     for (const ProgressSheet& progress : sheet.reactions) {
       const auto found = ledgers.find(progress.reaction);
       key.stands_on.push_back(found == ledgers.end() ? nullptr : found->second);
@@ -58,6 +59,7 @@ std::vector<std::shared_ptr<const StepOutcome>> StepCalculator::compute(
     }
     StepContext context;
     context.species = species.get();
+    context.names = &quantities->names;
     context.ledger = [&](const std::string& id) -> std::shared_ptr<const balance::Ledger> {
       const auto found = ledgers.find(id);
       return found == ledgers.end() ? nullptr : found->second;

@@ -4,6 +4,7 @@
 #include <memory>
 #include <vector>
 
+#include "core/document/named_quantities.hpp"
 #include "core/document/step_reading.hpp"
 #include "core/step/findings.hpp"
 #include "core/step/step_checker.hpp"
@@ -40,10 +41,12 @@ class StepCalculator {
   StepCalculator& operator=(StepCalculator&&) noexcept;
 
   /// @param species  as the sheet knows them; another source computes everything anew
+  /// @param quantities  what cells may call by name; others compute everything anew
   /// @param ledgers  one for each reaction id that has a figure; their identity decides what is recomputed
   std::vector<std::shared_ptr<const StepOutcome>> compute(
       const std::vector<Shared<StepSheet>>& steps, const std::shared_ptr<balance::SpeciesSource>& species,
-      const std::map<std::string, std::shared_ptr<const balance::Ledger>>& ledgers);
+      const std::map<std::string, std::shared_ptr<const balance::Ledger>>& ledgers,
+      const std::shared_ptr<const ReadQuantities>& quantities);
 
  private:
   struct Memory;

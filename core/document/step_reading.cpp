@@ -66,8 +66,8 @@ class Reader {
   /// A typed quantity of one dimension; empty when nothing or nothing readable is written.
   Blank quantity(const std::string& text, const units::Dimension& dimension, const std::string& where) {
     if (trimmed(text).empty()) return std::nullopt;
-    const Result<units::TypedValue> read =
-        units::parse_quantity(dimension == d::kNumber ? per_cent_of_both(text) : text, dimension);
+    const Result<units::TypedValue> read = units::evaluate_quantity(
+        dimension == d::kNumber ? per_cent_of_both(text) : text, dimension, *context_.names);
     if (!read.ok()) {
       refuse(read.error(), where);
       return std::nullopt;
@@ -77,7 +77,7 @@ class Reader {
 
   Blank pressure(const std::string& text, const std::string& where) {
     if (trimmed(text).empty()) return std::nullopt;
-    const Result<units::TypedValue> read = units::parse_quantity(text);
+    const Result<units::TypedValue> read = units::evaluate_quantity(text, *context_.names);
     if (!read.ok()) {
       refuse(read.error(), where);
       return std::nullopt;
@@ -353,7 +353,7 @@ class Reader {
     if (text == "rest") {
       if (feed.shares == step::ShareKind::None) feed.shares = step::ShareKind::MoleShare;
     } else if (!text.empty()) {
-      const Result<units::TypedValue> read = units::parse_quantity(text);
+      const Result<units::TypedValue> read = units::evaluate_quantity(text, *context_.names);
       if (!read.ok()) {
         refuse(read.error(), where + ".amount");
         return;
@@ -413,7 +413,7 @@ class Reader {
       excesses_.push_back({index, text.substr(excess + 7), where + ".total"});
       return;
     }
-    const Result<units::TypedValue> read = units::parse_quantity(text);
+    const Result<units::TypedValue> read = units::evaluate_quantity(text, *context_.names);
     if (!read.ok()) {
       refuse(read.error(), where + ".total");
       return;
@@ -473,7 +473,7 @@ class Reader {
       if (!species) continue;
       step::SubstanceInput& substance = input().substances[species->substance];
       if (!trimmed(row.heat_capacity).empty()) {
-        const Result<units::TypedValue> read = units::parse_quantity(row.heat_capacity);
+        const Result<units::TypedValue> read = units::evaluate_quantity(row.heat_capacity, *context_.names);
         if (!read.ok()) {
           refuse(read.error(), where + ".heat_capacity");
         } else if (read->dimension() == d::kMolarHeatCapacity && read->value > 0) {

@@ -6,12 +6,14 @@
 #include "core/balance/ledger.hpp"
 #include "core/document/step_sheet.hpp"
 #include "core/step/step.hpp"
+#include "core/units/expression.hpp"
 
 namespace heatledger::document {
 
 /// What a step refers to.
 struct StepContext {
   balance::SpeciesSource* species = nullptr;
+  const units::NamedFigures* names = nullptr;  ///< what the cells may call; never null
   /// The ledger of a reaction by its id; null when there is none that goes on.
   std::function<std::shared_ptr<const balance::Ledger>(const std::string& id)> ledger;
   /// The result of a step above by its id; null when there is none.

@@ -2,15 +2,15 @@
 
 #include "core/document/typed_energy.hpp"
 #include "core/document/typed_rows.hpp"
-#include "core/units/quantity_text.hpp"
 
 namespace heatledger::document {
 namespace {
 
 void read_temperature(const std::string& text, const char* field, std::optional<double>& kelvin,
-                      std::vector<Error>& errors) {
+                      const units::NamedFigures& names, std::vector<Error>& errors) {
   if (text.empty()) return;
-  const Result<units::TypedValue> value = units::parse_quantity(text, units::dimension::kTemperature);
+  const Result<units::TypedValue> value =
+      units::evaluate_quantity(text, units::dimension::kTemperature, names);
   if (!value.ok()) {
     errors.push_back(placed(value.error(), field));
   } else if (value->value <= 0) {
@@ -21,9 +21,10 @@ void read_temperature(const std::string& text, const char* field, std::optional<
   }
 }
 
-void read_pressure(const std::string& text, std::optional<double>& pascal, std::vector<Error>& errors) {
+void read_pressure(const std::string& text, std::optional<double>& pascal, const units::NamedFigures& names,
+                   std::vector<Error>& errors) {
   if (text.empty()) return;
-  const Result<units::TypedValue> typed = units::parse_quantity(text);
+  const Result<units::TypedValue> typed = units::evaluate_quantity(text, names);
   if (!typed.ok()) {
     errors.push_back(placed(typed.error(), "pressure"));
     return;
@@ -46,7 +47,7 @@ std::uint64_t key_of(const ReactionSheet& sheet) {
   return hash;
 }
 
-void read_measured(const ReactionSheet& sheet, Conditions& out) {
+void read_measured(const ReactionSheet& sheet, const units::NamedFigures& names, Conditions& out) {
   const TypedHeat& typed = sheet.measured;
   if (typed.value.empty()) return;
   const Result<uncertainty::Figure> value = parse_molar_energy(typed.value);
@@ -60,7 +61,7 @@ void read_measured(const ReactionSheet& sheet, Conditions& out) {
   heat.per = typed.per;
   heat.source = stated_source(typed.source, typed.from);
   heat.key = key_of(sheet);
-  read_temperature(typed.at, "measured.at", heat.at, out.errors);
+  read_temperature(typed.at, "measured.at", heat.at, names, out.errors);
   if (!typed.medium.empty()) heat.remark = typed.medium + "; ";
   const std::string includes = typed.includes.empty() ? "unknown" : typed.includes;
   heat.remark += "mixing, dilution, evaporation, gas loss in it: " + includes;
@@ -75,12 +76,12 @@ void read_measured(const ReactionSheet& sheet, Conditions& out) {
 
 }  // namespace
 
-Conditions read_conditions(const ReactionSheet& sheet) {
+Conditions read_conditions(const ReactionSheet& sheet, const units::NamedFigures& names) {
   Conditions out;
-  read_temperature(sheet.reactants_at, "reactants_at", out.reactants_at, out.errors);
-  read_temperature(sheet.products_at, "products_at", out.products_at, out.errors);
-  read_pressure(sheet.pressure, out.pressure, out.errors);
-  read_measured(sheet, out);
+  read_temperature(sheet.reactants_at, "reactants_at", out.reactants_at, names, out.errors);
+  read_temperature(sheet.products_at, "products_at", out.products_at, names, out.errors);
+  read_pressure(sheet.pressure, out.pressure, names, out.errors);
+  read_measured(sheet, names, out);
   return out;
 }
 

@@ -5,6 +5,7 @@
 
 #include "core/balance/ledger.hpp"
 #include "core/document/worksheet.hpp"
+#include "core/units/expression.hpp"
 
 namespace heatledger::document {
 
@@ -17,6 +18,7 @@ struct Conditions {
   std::vector<Error> errors;    ///< `where` begins with the field: "reactants_at", "measured.value, offset 3"
 };
 
-Conditions read_conditions(const ReactionSheet& sheet);
+/// @param names  what the cells may call
+Conditions read_conditions(const ReactionSheet& sheet, const units::NamedFigures& names);
 
 }  // namespace heatledger::document

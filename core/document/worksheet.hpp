@@ -38,6 +38,15 @@ struct TypedFigure {
   std::string unknown;
 };
 
+/// A quantity that other cells may call by its name.
+struct NamedQuantity {
+  std::string name;   ///< "feed_ratio", see units::usable_name
+  std::string value;  ///< a quantity or arithmetic over quantities and other names
+  std::string unit;   ///< that it is shown in; empty: one that suits
+  std::string note;
+  std::string unknown;
+};
+
 /// A measured enthalpy of a reaction, as typed.
 struct TypedHeat {
   std::string value;     ///< text with unit and ±: "-545 ± 8 kJ/mol"; empty: none was measured
@@ -81,6 +90,7 @@ struct ReactionSheet {
 
 using TypedBonds = std::vector<TypedBond>;
 using TypedFigures = std::vector<TypedFigure>;
+using NamedQuantities = std::vector<NamedQuantity>;
 using Lines = std::vector<std::string>;
 
 /// An entry of a list in the file that no such list can hold (a number among texts): kept as it came and
@@ -98,6 +108,7 @@ struct Worksheet {
   std::vector<Shared<StepSheet>> steps;
   Shared<TypedBonds> typed_bonds;
   Shared<TypedFigures> typed_figures;
+  Shared<NamedQuantities> quantities;
   Shared<Lines> notes;        ///< free notes
   Shared<Lines> assumptions;  ///< numbered on the sheet
   Shared<Misfits> misfits;

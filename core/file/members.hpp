@@ -58,6 +58,12 @@ inline constexpr TextMember<document::TypedFigure> kFigure[] = {{"species", &doc
 inline constexpr TextMember<document::FeedRow> kFeedRow[] = {{"species", &document::FeedRow::species},
                                                              {"amount", &document::FeedRow::amount}};
 
+inline constexpr TextMember<document::NamedQuantity> kQuantity[] = {
+    {"name", &document::NamedQuantity::name},
+    {"value", &document::NamedQuantity::value},
+    {"unit", &document::NamedQuantity::unit},
+    {"note", &document::NamedQuantity::note}};
+
 inline constexpr TextMember<document::FeedSheet> kFeed[] = {
     {"name", &document::FeedSheet::name},   {"from", &document::FeedSheet::from},
     {"at", &document::FeedSheet::at},       {"pressure", &document::FeedSheet::pressure},

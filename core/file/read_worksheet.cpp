@@ -183,6 +183,11 @@ Result<Opened> read_worksheet(std::string_view text) {
       sheet.typed_figures.change().push_back(read_record(object, kFigure, path, problems));
     });
   }
+  if (const Json* quantities = fields.take("quantities", Json::Kind::Array, "a list")) {
+    each_object(*quantities, "quantities", sheet, problems, [&](const Json& object, const std::string& path) {
+      sheet.quantities.change().push_back(read_record(object, kQuantity, path, problems));
+    });
+  }
   if (const Json* notes = fields.take("notes", Json::Kind::Array, "a list of texts")) {
     sheet.notes = document::Shared<document::Lines>(read_lines(*notes, "notes", sheet, problems));
   }

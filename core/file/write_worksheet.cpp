@@ -45,6 +45,10 @@ std::string write_worksheet(const document::Worksheet& sheet, const SavedResults
   Json species = Json::array();
   for (const auto& figure : *sheet.typed_figures) species.items().push_back(record_json(figure, kFigure));
   out.list("species", std::move(species), *sheet.misfits);
+  Json quantities = Json::array();
+  for (const auto& quantity : *sheet.quantities)
+    quantities.items().push_back(record_json(quantity, kQuantity));
+  out.list("quantities", std::move(quantities), *sheet.misfits);
   out.lines("notes", *sheet.notes, *sheet.misfits);
   out.lines("assumptions", *sheet.assumptions, *sheet.misfits);
   Json saved = results_json(results);

@@ -99,6 +99,29 @@ Result<Edited> edit_bond(const Worksheet& sheet, const IdParts& id, const std::s
   return edited;
 }
 
+/// A cell of the table of quantities; the last row of the table is empty and adds one.
+Result<Edited> edit_quantity(const Worksheet& sheet, const IdParts& id, const std::string& text,
+                             std::string_view cell) {
+  const std::optional<std::size_t> index = id.size() == 3 ? id_index(id[1]) : std::nullopt;
+  if (!index || *index > sheet.quantities->size()) return no_such_cell(cell);
+  if (id[2] == "figure") return not_editable(cell);
+  Edited edited{sheet, id[2] == "remove" ? "remove quantity" : "edit quantity"};
+  document::NamedQuantities& list = edited.sheet.quantities.change();
+  if (*index == list.size()) list.emplace_back();
+  document::NamedQuantity& entry = list[*index];
+  std::string* field = id[2] == "name"    ? &entry.name
+                       : id[2] == "value" ? &entry.value
+                       : id[2] == "unit"  ? &entry.unit
+                       : id[2] == "note"  ? &entry.note
+                                          : nullptr;
+  if (field == nullptr && id[2] != "remove") return no_such_cell(cell);
+  if (field != nullptr) *field = text;
+  const bool blank = entry.name.empty() && entry.value.empty() && entry.unit.empty() && entry.note.empty() &&
+                     entry.unknown.empty();
+  if (blank || field == nullptr) list.erase(list.begin() + static_cast<std::ptrdiff_t>(*index));
+  return edited;
+}
+
 /// A cell of the table of species; the last row of the table is empty and adds one.
 Result<Edited> edit_figure(const Worksheet& sheet, const IdParts& id, const std::string& text,
                            std::string_view cell) {
@@ -355,6 +378,7 @@ Result<Edited> apply_edit(const Worksheet& sheet, const document::Results& resul
     return edited;
   }
   if (id[0] == "bond") return edit_bond(sheet, id, text, cell);
+  if (id[0] == "quantity") return edit_quantity(sheet, id, text, cell);
   if (id[0] == "fact") return edit_figure(sheet, id, text, cell);
   if (cell == "exact.u95") return give_half_width(sheet, results, text);
   if (id[0] == "assumption" || id[0] == "remark") {

@@ -131,6 +131,9 @@ const Page& PageBuilder::build(PageInput input) {
   add_section("+exact", {},
               lines_state(input.results->exact) + (rejected != nullptr ? rejected->message : ""),
               [&] { return exact_blocks(input.results->exact, sheet, rejected); });
+  add_section("+quantities", {sheet.quantities.handle(), input.results->quantities}, "", [&] {
+    return quantity_blocks(*sheet.quantities, *input.results->quantities, input.results->errors);
+  });
   add_section("+species", {sheet.typed_figures.handle(), input.results->library}, "",
               [&] { return typed_species_blocks(*sheet.typed_figures, *input.results->library); });
   add_section("+bonds", {sheet.typed_bonds.handle()}, errors_state(input.results->errors),

@@ -138,6 +138,55 @@ std::vector<Block> typed_bond_blocks(const document::TypedBonds& bonds, const st
   return blocks;
 }
 
+std::vector<Block> quantity_blocks(const document::NamedQuantities& typed,
+                                   const document::ReadQuantities& read, const std::vector<Error>& errors) {
+  std::vector<Block> blocks;
+  blocks.push_back(heading_block("quantities.heading", "Quantities of this sheet",
+                                 "any cell with a number may call these by name"));
+  Table table;
+  table.id = "quantities";
+  table.columns = {column("name", "Name", Align::Left, 0.16),
+                   column("value", "Written", Align::Left, 0.24),
+                   column("figure", "Value", Align::Right),
+                   column("unit", "Unit", Align::Left, 0.1),
+                   column("note", "Note"),
+                   column("remove", "")};
+  for (std::size_t i = 0; i <= typed.size(); ++i) {
+    const std::string id = "quantity." + std::to_string(i);
+    const bool last = i == typed.size();
+    const document::NamedQuantity entry = last ? document::NamedQuantity() : typed[i];
+    std::string value, unit;
+    if (!last && read.rows[i].figure) {
+      const units::Evaluated& figure = *read.rows[i].figure;
+      const units::Unit& shown = read.rows[i].shown_in ? *read.rows[i].shown_in : figure.unit;
+      units::Unit bare = shown;
+      bare.display.clear();
+      constexpr int kMostDecimals = 4;
+      value = units::print(figure.value.figure(), bare, kMostDecimals);
+      unit = shown.display;
+    }
+    Row row = row_of(id + ".row");
+    Cell figure = figure_cell(id + ".figure", value);
+    figure.has_working = false;
+    row.cells = {typed_cell(id + ".name", entry.name, last ? "feed_ratio" : "name"),
+                 typed_cell(id + ".value", entry.value, last ? "2*(1.05-0.03) kmol/h" : "", CellKind::Number),
+                 std::move(figure),
+                 typed_cell(id + ".unit", entry.unit, unit),
+                 typed_cell(id + ".note", entry.note, ""),
+                 last ? label_cell("") : button_cell(id + ".remove", "Remove")};
+    for (const Error& error : errors) {
+      const std::string path = "quantities[" + std::to_string(i) + "].";
+      if (error.where.compare(0, path.size(), path) != 0) continue;
+      const char field = error.where[path.size()];
+      row.cells[field == 'n' ? 0 : field == 'v' ? 1 : 3].tone = Tone::Caution;
+    }
+    table.rows.push_back(std::move(row));
+  }
+  blocks.push_back(std::move(table));
+  add_error_notes("quantities", errors, blocks);
+  return blocks;
+}
+
 std::vector<Block> typed_species_blocks(const document::TypedFigures& figures,
                                         const document::SheetLibrary& library) {
   std::vector<Block> blocks;
@@ -217,6 +266,7 @@ std::string cell_of_path(const std::string& path, const document::Worksheet& she
   const std::string field = path.substr(close + 2, path.find(',') - close - 2);
   if (list == "bonds") return "bond." + index + "." + field;
   if (list == "species") return "fact." + index + "." + field;
+  if (list == "quantities") return "quantity." + index + "." + field;
   std::size_t at = 0;
   for (const char c : index) at = c >= '0' && c <= '9' ? 10 * at + static_cast<std::size_t>(c - '0') : at;
   return list == "reactions" && at < sheet.reactions.size() ? sheet.reactions[at]->id + "." + field

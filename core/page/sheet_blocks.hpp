@@ -14,6 +14,9 @@ namespace heatledger::page {
 std::vector<Block> title_blocks(const document::Header& header);
 /// @param errors  of the sheet, see document::Results; those of typed bonds are shown
 std::vector<Block> typed_bond_blocks(const document::TypedBonds& bonds, const std::vector<Error>& errors);
+/// The table of named quantities, each with what it comes to.
+std::vector<Block> quantity_blocks(const document::NamedQuantities& typed,
+                                   const document::ReadQuantities& read, const std::vector<Error>& errors);
 /// Figures of species typed on the sheet, each with the published figure that it covers.
 std::vector<Block> typed_species_blocks(const document::TypedFigures& figures,
                                         const document::SheetLibrary& library);

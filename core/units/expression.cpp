@@ -63,9 +63,15 @@ bool has_scale(const Dimension& dimension) {
   return dimension.kind == Kind::Temperature || dimension.kind == Kind::GaugePressure;
 }
 
+/// One typed ±: its cell and its place there. Bit 55 keeps it apart from typed figures of other rooms.
+uncertainty::SourceKey typed_source(std::uint64_t cell, std::size_t at) {
+  return uncertainty::source_key(uncertainty::SourceKind::Typed, (std::uint64_t{1} << 55) | cell << 20 | at);
+}
+
 class Reader {
  public:
-  Reader(std::string_view text, const NamedFigures& names) : text_(text), names_(names) {}
+  Reader(std::string_view text, const NamedFigures& names, std::uint64_t cell)
+      : text_(text), names_(names), cell_(cell) {}
 
   Result<Term> read() {
     Result<Term> term = sum(0);
@@ -209,7 +215,20 @@ class Reader {
       Term again = base;
       if (std::optional<Error> failed = multiply(*term, again, 1, begin)) return *failed;
     }
+    if (std::optional<Error> failed = take_unit(*term, begin)) return *failed;
     return term;
+  }
+
+  /// The unit behind a bracket or power that comes to a plain number.
+  std::optional<Error> take_unit(Term& term, std::size_t at) {
+    if (term.dimension != dimension::kNumber) return std::nullopt;
+    const std::optional<Unit> unit = unit_here();
+    if (!unit) return std::nullopt;
+    if (unit->offset != 0)
+      return error_at("unit.no_product", "A bracket cannot stand on a scale of temperature.", at,
+                      "Write its unit inside, at each figure.");
+    apply(term, *unit);
+    return std::nullopt;
   }
 
   Result<Term> primary(int depth) {
@@ -227,14 +246,7 @@ class Reader {
         return error_at("unit.unclosed_bracket", "This bracket is never closed.", begin,
                         "Add the closing bracket.");
       ++at_;
-      if (inner->dimension == dimension::kNumber) {
-        if (const std::optional<Unit> unit = unit_here()) {
-          if (unit->offset != 0)
-            return error_at("unit.no_product", "A bracket cannot stand on a scale of temperature.", begin,
-                            "Write its unit inside, at each figure.");
-          apply(*inner, *unit);
-        }
-      }
+      if (std::optional<Error> failed = take_unit(*inner, begin)) return *failed;
       return inner;
     }
     if (const std::size_t length = name_length(text_.substr(at_)); length > 0) {
@@ -242,8 +254,8 @@ class Reader {
       ++joints_;
       const auto found = names_.find(name);
       if (found == names_.end())
-        return error_at("unit.unknown_name", "No quantity is called \"" + std::string(name) + "\" here.", begin,
-                        "Name it in the table of quantities, or write a number.");
+        return error_at("unit.unknown_name", "No quantity is called \"" + std::string(name) + "\" here.",
+                        begin, "Name it in the table of quantities, or write a number.");
       at_ += length;
       Term term;
       term.value = found->second.value;
@@ -260,7 +272,8 @@ class Reader {
     const std::string_view rest = text_.substr(begin);
     const std::size_t sign = rest.substr(0, 1) == "-" ? 1 : rest.substr(0, 3) == "\u2212" ? 3 : 0;
     if (!parse_number_prefix(rest.substr(sign), length)) {
-      const Result<TypedValue> failed = parse_quantity(rest.substr(0, std::min<std::size_t>(rest.size(), 40)));
+      const Result<TypedValue> failed =
+          parse_quantity(rest.substr(0, std::min<std::size_t>(rest.size(), 40)));
       if (!failed) return moved(failed.error(), begin);
       return error_at("unit.no_number", "A number is expected here.", begin,
                       "Write a number and its unit, such as 1.2 t/h.");
@@ -281,9 +294,11 @@ class Reader {
     if (!best) return moved(parse_quantity(text_.substr(begin, end - begin)).error(), begin);
     at_ = best_end;
     Term term;
-    term.value = best->u95 ? Quantity(best->value, *best->u95, typed_source(begin)) : Quantity(best->value);
+    term.value =
+        best->u95 ? Quantity(best->value, *best->u95, typed_source(cell_, begin)) : Quantity(best->value);
     term.dimension = best->unit.dimension;
-    term.kelvin = term.dimension.kind == Kind::Temperature && best->unit.offset == 0 && best->unit.factor == 1;
+    term.kelvin =
+        term.dimension.kind == Kind::Temperature && best->unit.offset == 0 && best->unit.factor == 1;
     term.decimals = best->decimals;
     term.unit = std::move(best->unit);
     return term;
@@ -307,7 +322,8 @@ class Reader {
       const std::string_view candidate = text_.substr(at_, to - at_);
       if (utf8::trim(candidate).size() != candidate.size()) continue;
       const char first = candidate.front();
-      if (first == '/' || first == '*' || first == '(' || first == '+' || first == '-' || is_digit(first)) break;
+      if (first == '/' || first == '*' || first == '(' || first == '+' || first == '-' || is_digit(first))
+        break;
       Result<Unit> unit = parse_unit(candidate);
       if (!unit) continue;
       best = std::move(*unit);
@@ -357,8 +373,9 @@ class Reader {
       return std::abs(exponent) <= 30;
     };
     const Dimension &l = left.dimension, &r = right.dimension;
-    const bool fits = grow(l.kg, r.kg, product.kg) && grow(l.m, r.m, product.m) && grow(l.s, r.s, product.s) &&
-                      grow(l.K, r.K, product.K) && grow(l.mol, r.mol, product.mol);
+    const bool fits = grow(l.kg, r.kg, product.kg) && grow(l.m, r.m, product.m) &&
+                      grow(l.s, r.s, product.s) && grow(l.K, r.K, product.K) &&
+                      grow(l.mol, r.mol, product.mol);
     if (!fits)
       return error_at("unit.out_of_range", "This product measures nothing that the sheet knows.", at, "");
     // A fraction or a difference times a plain number stays what it is.
@@ -386,14 +403,11 @@ class Reader {
     return error;
   }
 
-  static uncertainty::SourceKey typed_source(std::size_t at) {
-    return uncertainty::source_key(uncertainty::SourceKind::Typed, 0xE0000000u + at);
-  }
-
   static constexpr std::size_t kLongestQuantity = 60;
 
   std::string_view text_;
   const NamedFigures& names_;
+  std::uint64_t cell_;
   std::size_t at_ = 0;
   int joints_ = 0;
 };
@@ -421,23 +435,21 @@ TypedValue as_typed(const Evaluated& figure) {
 
 }  // namespace
 
-Result<Evaluated> evaluate(std::string_view text, const NamedFigures& names) {
+Result<Evaluated> evaluate(std::string_view text, const NamedFigures& names, std::uint64_t cell) {
   // What reads as a single quantity is one.
   Result<TypedValue> single = parse_quantity(text);
   Evaluated figure;
   if (single.ok()) {
-    constexpr std::uint64_t kSingle = 0xE0000000u;
-    figure.value = single->u95 ? Quantity(single->value, *single->u95,
-                                          uncertainty::source_key(uncertainty::SourceKind::Typed, kSingle))
-                               : Quantity(single->value);
+    figure.value =
+        single->u95 ? Quantity(single->value, *single->u95, typed_source(cell, 0)) : Quantity(single->value);
     figure.dimension = single->dimension();
-    figure.kelvin = figure.dimension.kind == Kind::Temperature && single->unit.offset == 0 &&
-                    single->unit.factor == 1;
+    figure.kelvin =
+        figure.dimension.kind == Kind::Temperature && single->unit.offset == 0 && single->unit.factor == 1;
     figure.unit = std::move(single->unit);
     figure.decimals = single->decimals;
     return figure;
   }
-  Reader reader(text, names);
+  Reader reader(text, names, cell);
   Result<Term> term = reader.read();
   if (!term.ok()) return reader.joints() == 0 ? single.error() : term.error();
   if (term->dimension.kind == Kind::Temperature && !term->kelvin && term->value.value() < 0)
@@ -453,7 +465,14 @@ Result<Evaluated> evaluate(std::string_view text, const NamedFigures& names) {
   return figure;
 }
 
-Result<TypedValue> evaluate(std::string_view text, const Dimension& expected, const NamedFigures& names) {
+Result<TypedValue> evaluate_quantity(std::string_view text, const NamedFigures& names) {
+  Result<Evaluated> figure = evaluate(text, names);
+  if (!figure.ok()) return figure.error();
+  return as_typed(*figure);
+}
+
+Result<TypedValue> evaluate_quantity(std::string_view text, const Dimension& expected,
+                                     const NamedFigures& names) {
   Result<TypedValue> single = parse_quantity(text, expected);
   if (single.ok()) return single;
   Result<Evaluated> figure = evaluate(text, names);
@@ -465,12 +484,11 @@ Result<TypedValue> evaluate(std::string_view text, const Dimension& expected, co
   const Dimension bare{expected.kg, expected.m, expected.s, expected.K, expected.mol, Kind::Plain};
   if (figure->dimension != expected && !(ratio && bare == dimension::kNumber) &&
       !(difference && figure->kelvin)) {
-    return Error{"unit.dimension",
-                 "This comes to " + describe(figure->dimension) + ", but " + describe(expected) +
-                     " is expected.",
-                 "",
-                 difference ? "Subtract two temperatures, or write the difference in K."
-                        : "Check the units and the names in it."};
+    return Error{
+        "unit.dimension",
+        "This comes to " + describe(figure->dimension) + ", but " + describe(expected) + " is expected.", "",
+        difference ? "Subtract two temperatures, or write the difference in K."
+                   : "Check the units and the names in it."};
   }
   figure->unit = suiting(expected);
   figure->unit.dimension = expected;
@@ -502,8 +520,8 @@ std::vector<std::string> names_called(std::string_view text,
 Status usable_name(std::string_view name) {
   constexpr std::size_t kLongest = 40;
   if (name.empty() || name_length(name) != name.size() || name.size() > kLongest)
-    return Error{"unit.bad_name", "\"" + std::string(name.substr(0, kLongest)) + "\" cannot name a quantity.", "",
-                 "Use letters, digits and underscores, a letter first: feed_ratio."};
+    return Error{"unit.bad_name", "\"" + std::string(name.substr(0, kLongest)) + "\" cannot name a quantity.",
+                 "", "Use letters, digits and underscores, a letter first: feed_ratio."};
   if (parse_unit(name).ok())
     return Error{"unit.bad_name", "\"" + std::string(name) + "\" is a unit.", "",
                  "Choose a longer name, such as " + std::string(name) + "_feed."};

@@ -32,17 +32,21 @@ struct Evaluated {
 
 /// Reads a quantity, or sums, differences, products, quotients, whole powers and brackets of quantities and
 /// names. A bracket may carry a unit. Temperatures: a scale plus or minus a difference is a temperature, the
-/// difference of two is a difference; K counts as a difference behind a sign and in products. Gauge pressures:
-/// likewise with a pressure.
+/// difference of two is a difference; K counts as a difference behind a sign and in products. Gauge
+/// pressures: likewise with a pressure.
 /// @errors those of parse_quantity; unit.unknown_name, unit.no_sum (both dimensions spelled out),
 ///         unit.no_product, unit.division_by_zero, unit.bad_exponent, unit.unclosed_bracket, unit.unexpected,
 ///         unit.out_of_range; `where` is "offset N"
 /// @example Expressions.ReadsArithmeticAsOnPaper
-Result<Evaluated> evaluate(std::string_view text, const NamedFigures& names);
+/// @param cell  below 2^32: keeps the ± typed in one cell apart from those typed in others
+Result<Evaluated> evaluate(std::string_view text, const NamedFigures& names, std::uint64_t cell = 0);
 
-/// The same as a quantity of this dimension, with the leave that parse_quantity gives.
+/// The same as parse_quantity gives it.
+Result<TypedValue> evaluate_quantity(std::string_view text, const NamedFigures& names);
+/// The same, and the dimension must be this one, with the leave that parse_quantity gives.
 /// @errors also unit.dimension and unit.missing
-Result<TypedValue> evaluate(std::string_view text, const Dimension& expected, const NamedFigures& names);
+Result<TypedValue> evaluate_quantity(std::string_view text, const Dimension& expected,
+                                     const NamedFigures& names);
 
 /// The names that an expression calls, each once, in the order of the text; units are none.
 std::vector<std::string> names_called(std::string_view text,
