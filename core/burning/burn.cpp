@@ -292,7 +292,7 @@ Result<Numbers> burn(const BurnInput& typed, bool with_equilibrium) {
       n.load = mixed->flue_enthalpy - out;
       n.efficiency = *n.load / n.net_heat;
     }
-    if (in.chamber_volume && in.per_time) {
+    if (in.chamber_volume) {
       const double flow = total(n.chamber) * units::kGasConstant * *n.chamber_temperature / in.pressure;
       n.residence = in.chamber_volume->value / flow;
     }

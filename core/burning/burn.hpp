@@ -27,7 +27,7 @@ enum class Sought : std::uint8_t {
   Ratio         ///< air ratio for a typed chamber temperature
 };
 
-/// All in SI; amounts are per second where they are flows, and heats then power.
+/// All in SI; amounts are flows per second and heats are power.
 struct BurnInput {
   std::vector<Stream> streams;  ///< all but air
   Air air = dry_air();
@@ -46,7 +46,6 @@ struct BurnInput {
   step::Blank so3, hcl;          ///< shares of the wet flue gas, typed for the acid dew point
   double combustion_temperature = 298.15, metering_temperature = 273.15;  ///< [K] of the calorific values
   Sought sought = Sought::Temperature;
-  bool per_time = true;
   ProductOffsets offsets{};  ///< for the ± only
 };
 
