@@ -82,9 +82,9 @@ std::vector<Moved> moved_inputs(const BurnInput& in) {
   figure(in.air_figure, [](BurnInput& m, double v) { m.air_figure.value = v; });
   figure(in.dilution.value_or(step::Typed{}), [](BurnInput& m, double v) { m.dilution->value = v; });
   figure(in.dilution_temperature, [](BurnInput& m, double v) { m.dilution_temperature.value = v; });
-  for (const auto member :
-       {&BurnInput::loss, &BurnInput::loss_share, &BurnInput::chamber_temperature, &BurnInput::flue_temperature,
-        &BurnInput::chamber_volume, &BurnInput::so3, &BurnInput::hcl, &BurnInput::lfl})
+  for (const auto member : {&BurnInput::loss, &BurnInput::loss_share, &BurnInput::chamber_temperature,
+                            &BurnInput::flue_temperature, &BurnInput::chamber_volume, &BurnInput::so3,
+                            &BurnInput::hcl, &BurnInput::lfl})
     blank(member);
   std::map<SourceKey, bool> formations;  // in the order of the keys: the same everywhere
   for (std::size_t i = 0; i < in.streams.size(); ++i) {
@@ -93,7 +93,8 @@ std::vector<Moved> moved_inputs(const BurnInput& in) {
       const Part& part = in.streams[i].parts[k];
       figure({part.moles, part.u95}, [&](BurnInput& m, double v) { m.streams[i].parts[k].moles = v; });
       if (!part.heat)
-        figure(part.heat_capacity, [&](BurnInput& m, double v) { m.streams[i].parts[k].heat_capacity.value = v; });
+        figure(part.heat_capacity,
+               [&](BurnInput& m, double v) { m.streams[i].parts[k].heat_capacity.value = v; });
       for (const uncertainty::Part& source : part.formation.parts()) formations[source.source] = true;
     }
   }
@@ -118,7 +119,8 @@ std::vector<Moved> moved_inputs(const BurnInput& in) {
   }
   for (std::size_t p = 0; p < kProducts; ++p) {
     if (product_facts()[p].share != 0)
-      move(product_facts()[p].heat_capacity, [&](BurnInput& m) { m.offsets[p].factor += product_facts()[p].share; });
+      move(product_facts()[p].heat_capacity,
+           [&](BurnInput& m) { m.offsets[p].factor += product_facts()[p].share; });
   }
   return all;
 }
@@ -165,6 +167,12 @@ class Answer {
     out_.groups.push_back(std::move(g));
   }
 
+  /// Adds the error of a published rule itself.
+  static void rule_error(Finding& f, double u95, std::uint64_t rule) {
+    f.value.add(
+        Quantity(0, u95, uncertainty::source_key(uncertainty::SourceKind::Other, 0xb0000000ULL + rule)));
+  }
+
   template <typename Get>
   Finding& add(std::string id, std::string label, const units::Dimension& dimension, const Get& get,
                std::vector<std::string> working = {}, std::vector<std::string> sources = {}) {
@@ -202,11 +210,16 @@ class Answer {
   /// "39.82 ± 0.02 MJ/m³" of a figure that has a unit of its own.
   template <typename Get>
   std::string text_of(const Get& get, double unit, const char* name, int most = 3) const {
-    const Quantity value = q(get).scaled(1 / unit);
-    const double size = std::abs(value.value());
+    const uncertainty::Figure value = q(get).scaled(1 / unit).figure();
     int decimals = most;
-    for (double limit = 10; decimals > 0 && size >= limit; limit *= 10) --decimals;
-    return units::figure_text(value.figure(), std::max(decimals, 1)) + " " + name;
+    for (double limit = 10; decimals > 1 && std::abs(value.value) >= limit; limit *= 10) --decimals;
+    double last = 0.5;
+    for (int i = 0; i < decimals; ++i) last /= 10;
+    if (value.u95 > 0 && value.u95 < last) {
+      return display_number(value.value, decimals) + " ± < " + display_number(2 * last, decimals) + " " +
+             name;
+    }
+    return units::figure_text(value, decimals) + " " + name;
   }
 
   /// [mol/s] in normal cubic metres an hour.
@@ -240,7 +253,8 @@ class Answer {
       const std::vector<std::string> working{
           "amount at which heat of the feeds − heat loss = heat of the flue gas at " +
           step::celsius(in_.chamber_temperature->value)};
-      add("support.mass", "support fuel for the chamber temperature", d::kMassFlow,
+      add(
+          "support.mass", "support fuel for the chamber temperature", d::kMassFlow,
           [=](const Numbers& n) { return n.support * mass; }, working);
       bool by_mole = true;
       for (const Part& part : fuel.parts) by_mole = by_mole && part.species != nullptr;
@@ -249,9 +263,9 @@ class Answer {
               working);
     }
     if (in_.sought == Sought::Ratio)
-      add("ratio.found", "air ratio for the chamber temperature", d::kNumber,
-          [](const Numbers& n) { return n.ratio; })
-          .ratio = true;
+      add("ratio.found", "air ratio for the chamber temperature", d::kNumber, [](const Numbers& n) {
+        return n.ratio;
+      }).ratio = true;
     if (n_.complete) {
       add("flame.complete", "adiabatic flame temperature, complete burning", d::kTemperature,
           [](const Numbers& n) { return *n.flame_temperature; },
@@ -287,8 +301,8 @@ class Answer {
       words("residence", "residence time in the chamber",
             text_of([](const Numbers& n) { return *n.residence; }, 1, "s"),
             {"volume " + digits(in_.chamber_volume->value) + " m³ over the actual flow at " +
-             step::celsius(*n_.chamber_temperature) + ", " + digits(in_.chamber_volume->value / *n_.residence) +
-             " m³/s"});
+             step::celsius(*n_.chamber_temperature) + ", " +
+             digits(in_.chamber_volume->value / *n_.residence) + " m³/s"});
     }
   }
 
@@ -300,8 +314,7 @@ class Answer {
         {"net + product water × 44.0 kJ/mol"});
     add("heat.sensible_in", "sensible heat that the feeds and the air bring", d::kPower,
         [](const Numbers& n) { return n.sensible_in; });
-    if (n_.loss != 0)
-      add("heat.loss", "heat loss", d::kPower, [](const Numbers& n) { return n.loss; });
+    if (n_.loss != 0) add("heat.loss", "heat loss", d::kPower, [](const Numbers& n) { return n.loss; });
     if (!n_.complete) return;
     if (!in_.flue_temperature) {
       missing("heat.load", "heat to the load", "needs the flue gas exit temperature");
@@ -313,7 +326,8 @@ class Answer {
         {"flue gas " + step::amount_text(total(n_.flue), true) + " from 25 °C to " + exit}, {kPolynomials});
     add("heat.latent", "latent loss with its water", d::kPower,
         [](const Numbers& n) { return *n.flue_latent; },
-        {"water " + step::amount_text(of(n_.flue, Product::H2O), true) + " × 44.0 kJ/mol; lost against the gross value"});
+        {"water " + step::amount_text(of(n_.flue, Product::H2O), true) +
+         " × 44.0 kJ/mol; lost against the gross value"});
     Finding& load = add("heat.load", "heat to the load", d::kPower, [](const Numbers& n) { return *n.load; },
                         {"net " + step::heat_text(n_.net_heat, true) + " + sensible heat in " +
                          step::heat_text(n_.sensible_in, true) + " − loss " + step::heat_text(n_.loss, true) +
@@ -330,12 +344,14 @@ class Answer {
     if (n_.oxygen_brought > 0)
       add("air.brought", "oxygen that the feeds bring", d::kMolarFlow,
           [](const Numbers& n) { return n.oxygen_brought; });
-    add("air.stoichiometric", "stoichiometric air", d::kMolarFlow,
+    add("air.stoichiometric", "stoichiometric air for all that burns", d::kMolarFlow,
         [](const Numbers& n) { return n.stoichiometric; },
-        {"oxygen still needed / " + digits(100 * in_.air.oxygen) + " % of the dry air" +
-         (in_.air.water > 0 ? ", with " + digits(in_.air.water) + " mol water to each mole" : std::string())});
+        {"oxygen needed / " + digits(100 * in_.air.oxygen) + " % of the dry air" +
+         (in_.air.water > 0 ? ", with " + digits(in_.air.water) + " mol water to each mole"
+                            : std::string())});
     words("air.stoichiometric.mass", "the same per kilogram of fuel",
-          text_of([](const Numbers& n) { return n.stoichiometric * n.air_molar_mass / n.fuel_mass; }, 1, "kg/kg"));
+          text_of([](const Numbers& n) { return n.stoichiometric * n.air_molar_mass / n.fuel_mass; }, 1,
+                  "kg/kg"));
     add("air.flow", "combustion air", d::kMolarFlow, [](const Numbers& n) { return n.air; });
     words("air.volume", "the same",
           normal_flow([&](const Numbers& n) { return n.air / (1 + in_.air.water); }) + ", dry");
@@ -363,8 +379,11 @@ class Answer {
     for (const bool wet : {true, false}) {
       for (std::size_t p = 0; p < kProducts; ++p) {
         if (n_.flue[p] <= 0 || (!wet && static_cast<Product>(p) == Product::H2O)) continue;
-        const auto share = [=](const Numbers& n) { return n.flue[p] / (wet ? total(n.flue) : total_dry(n.flue)); };
-        const std::string id = std::string(wet ? "flue.wet." : "flue.dry.") + std::string(kProductFormulas[p]);
+        const auto share = [=](const Numbers& n) {
+          return n.flue[p] / (wet ? total(n.flue) : total_dry(n.flue));
+        };
+        const std::string id =
+            std::string(wet ? "flue.wet." : "flue.dry.") + std::string(kProductFormulas[p]);
         const std::string label = std::string(kProductFormulas[p]) + (wet ? ", wet" : ", dry");
         if (share(n_) < 0.001) {
           words(id, label, text_of(share, 1e-6, "ppm by volume"));
@@ -380,18 +399,23 @@ class Answer {
           {"IAPWS SR1-86(1992), saturation line of water"});
     }
     if (n_.sulfuric_dew_point)
-      add("flue.dew.sulfuric", "acid dew point, sulfuric acid", d::kTemperature,
-          [](const Numbers& n) { return *n.sulfuric_dew_point; },
-          {"SO3 as typed, " + digits(1e6 * in_.so3->value) + " ppm of the wet gas; the rule is good to some 10 K"},
-          {"F. H. Verhoff, J. T. Banchero, Chem. Eng. Prog. 70 (1974) 71"});
+      rule_error(add("flue.dew.sulfuric", "acid dew point, sulfuric acid", d::kTemperature,
+                     [](const Numbers& n) { return *n.sulfuric_dew_point; },
+                     {"SO3 as typed, " + digits(1e6 * in_.so3->value) +
+                      " ppm of the wet gas; the rule is good to some 10 K"},
+                     {"F. H. Verhoff, J. T. Banchero, Chem. Eng. Prog. 70 (1974) 71"}),
+                 10, 1);
     if (n_.hydrochloric_dew_point)
-      add("flue.dew.hydrochloric", "acid dew point, hydrochloric acid", d::kTemperature,
-          [](const Numbers& n) { return *n.hydrochloric_dew_point; },
-          {"HCl as typed, " + digits(1e6 * in_.hcl->value) + " ppm of the wet gas; the rule is good to some 10 K"},
-          {"Y.-H. Kiang, Chem. Eng. 88 (1981) 127"});
+      rule_error(add("flue.dew.hydrochloric", "acid dew point, hydrochloric acid", d::kTemperature,
+                     [](const Numbers& n) { return *n.hydrochloric_dew_point; },
+                     {"HCl as typed, " + digits(1e6 * in_.hcl->value) +
+                      " ppm of the wet gas; the rule is good to some 10 K"},
+                     {"Y.-H. Kiang, Chem. Eng. 88 (1981) 127"}),
+                 10, 2);
     const bool acid = of(n_.flue, Product::SO2) > 0 || of(n_.flue, Product::HCl) > 0;
     if (acid && !n_.sulfuric_dew_point && !n_.hydrochloric_dew_point)
-      missing("flue.dew.acid", "acid dew point", "not calculated: type the share of SO3 or HCl in the wet flue gas");
+      missing("flue.dew.acid", "acid dew point",
+              "not calculated: type the share of SO3 or HCl in the wet flue gas");
   }
 
   void calorific(std::size_t i) {
@@ -400,10 +424,12 @@ class Answer {
     const std::string id = "calorific." + std::to_string(fuel.stream) + ".";
     group("calorific." + std::to_string(fuel.stream), "Calorific value of " + stream.name,
           "combustion " + step::celsius(in_.combustion_temperature) +
-              (fuel.gas ? ", metering " + step::celsius(in_.metering_temperature) + ", 101.325 kPa, ideal gas" : ""));
+              (fuel.gas ? ", metering " + step::celsius(in_.metering_temperature) + ", 101.325 kPa, ideal gas"
+                        : ""));
     std::vector<std::string> sources;
     for (const Part& part : stream.parts) {
-      if (std::find(sources.begin(), sources.end(), part.source) == sources.end()) sources.push_back(part.source);
+      if (std::find(sources.begin(), sources.end(), part.source) == sources.end())
+        sources.push_back(part.source);
     }
     for (const bool gross : {true, false}) {
       const std::string which = gross ? "gross" : "net";
@@ -412,17 +438,19 @@ class Answer {
           step::heat_text(heat_of(n_), true) + " set free by " + step::mass_text(fuel.mass, true) + " of it",
           gross ? "product water liquid; CO2, SO2, HCl and N2 gas" : "all water as vapour"};
       if (!fuel.by_mass)
-        add(id + which + ".mole", which, d::kEnergyPerMole,
+        add(
+            id + which + ".mole", which, d::kEnergyPerMole,
             [=](const Numbers& n) { return heat_of(n) / n.fuels[i].moles; }, working, sources);
-      add(id + which + ".mass", which, d::kEnergyPerMass,
+      add(
+          id + which + ".mass", which, d::kEnergyPerMass,
           [=](const Numbers& n) { return heat_of(n) / n.fuels[i].mass; }, working, sources);
       if (fuel.gas && !fuel.by_mass) {
         const auto per_volume = [=](const Numbers& n) {
           return heat_of(n) / n.fuels[i].moles / n.fuels[i].molar_volume;
         };
         const bool normal = std::abs(in_.metering_temperature - 273.15) < 1e-6;
-        words(id + which + ".volume", which, text_of(per_volume, 1e6, normal ? "MJ/normal m³" : "MJ/m³"), working,
-              sources);
+        words(id + which + ".volume", which, text_of(per_volume, 1e6, normal ? "MJ/normal m³" : "MJ/m³"),
+              working, sources);
         if (fuel.compression)
           words(id + which + ".real", which + ", real gas",
                 text_of([=](const Numbers& n) { return per_volume(n) / *fuel.compression; }, 1e6,
@@ -433,7 +461,8 @@ class Answer {
     if (fuel.gas && !fuel.by_mass) {
       words(id + "wobbe", "Wobbe index, gross",
             text_of([=](const Numbers& n) { return n.fuels[i].wobbe_gross; }, 1e6, "MJ/m³"),
-            {"gross per cubic metre / √ relative density " + digits(fuel.relative_density)}, {"ISO 6976:2016"});
+            {"gross per cubic metre / √ relative density " + digits(fuel.relative_density)},
+            {"ISO 6976:2016"});
     }
   }
 
@@ -471,22 +500,22 @@ class Answer {
     const double reference = in_.reference_oxygen->value;
     const double y = in_.air.oxygen;
     const double actual = of(n_.flue, Product::O2) / total_dry(n_.flue);
-    group("emissions", "Concentrations at " + digits(100 * reference) + " % O2, dry",
+    group("emissions", "Concentrations at " + machine_number(100 * reference, 4) + " % O2, dry",
           "normal m³: 0 °C, 101.325 kPa");
     const auto carried = [=](const Numbers& n, double moles, double gram_per_mole) {
       const double dry = total_dry(n.flue);
       const double oxygen = of(n.flue, Product::O2) / dry;
       return moles / dry * gram_per_mole / units::kNormalMolarVolume * (y - reference) / (y - oxygen);
     };
-    const std::vector<std::string> working{"share × molar mass / 22.414 m³/kmol × (" + digits(100 * y) + " − " +
-                                           digits(100 * reference) + ") / (" + digits(100 * y) + " − " +
-                                           digits(100 * actual) + ")"};
+    const std::vector<std::string> working{"share × molar mass / 22.414 m³/kmol × (" + digits(100 * y) +
+                                           " − " + digits(100 * reference) + ") / (" + digits(100 * y) +
+                                           " − " + digits(100 * actual) + ")"};
     for (const Product product : {Product::SO2, Product::HCl, Product::Cl2}) {
       if (of(n_.flue, product) <= 0) continue;
       const std::string formula(kProductFormulas[static_cast<std::size_t>(product)]);
       words("emissions." + formula, formula + ", before any cleaning",
-            text_of([=](const Numbers& n) { return carried(n, of(n.flue, product), molar_mass_of(product)); }, 1e-3,
-                    "mg/normal m³"),
+            text_of([=](const Numbers& n) { return carried(n, of(n.flue, product), molar_mass_of(product)); },
+                    1e-3, "mg/normal m³"),
             working);
     }
     const struct {
@@ -499,8 +528,8 @@ class Answer {
       std::size_t j = 0;
       while (combustion_gases()[j].formula != gas.formula) ++j;
       words(std::string("emissions.") + gas.formula, gas.label,
-            text_of([=](const Numbers& n) { return carried(n, n.equilibrium->moles[j], gas.gram_per_mole); }, 1e-3,
-                    "mg/normal m³"),
+            text_of([=](const Numbers& n) { return carried(n, n.equilibrium->moles[j], gas.gram_per_mole); },
+                    1e-3, "mg/normal m³"),
             working)
           .mark = "no prediction";
     }
@@ -516,23 +545,34 @@ class Answer {
     if (fuel.lfl_typed) {
       working.push_back("typed");
     } else {
-      working.push_back("1050 / net heat in kcal/mol, per cent by volume; mixtures by Le Chatelier's rule; the rule is "
-                        "good to some 10 %");
+      working.push_back(
+          "1050 / net heat in kcal/mol, per cent by volume; mixtures by Le Chatelier's rule; the rule is "
+          "good to some 10 %");
       sources = {"M. J. Burgess, R. V. Wheeler, J. Chem. Soc. Trans. 99 (1911) 2013",
                  "H. Le Chatelier, Ann. Mines 19 (1891) 388"};
     }
-    add(id, "lower flammability limit of what burns, 25 °C", d::kVolumeFraction,
+    // Burgess and Wheeler's product lies within a tenth of 1050 for most gases.
+    const double share = fuel.lfl_typed ? 0 : 0.1;
+    Finding& limit = add(
+        id, "lower flammability limit of what burns, 25 °C", d::kVolumeFraction,
         [=](const Numbers& n) { return n.fuels[i].lfl; }, working, sources);
-    if (std::abs(stream.temperature.value - 298.15) > 0.5)
-      add(id + ".hot", "the same at " + step::celsius(stream.temperature.value), d::kVolumeFraction,
-          [=](const Numbers& n) { return n.fuels[i].lfl_at; },
-          {"× (1 − 0.000721 (T − 25 °C))"}, {"M. G. Zabetakis, Bulletin 627, US Bureau of Mines, 1965"});
+    rule_error(limit, share * fuel.lfl, 3);
+    limit.unfavourable = fuel.lfl - limit.value.u95();
+    if (std::abs(stream.temperature.value - 298.15) > 0.5) {
+      Finding& hot =
+          add(id + ".hot", "the same at " + step::celsius(stream.temperature.value), d::kVolumeFraction,
+              [=](const Numbers& n) { return n.fuels[i].lfl_at; }, {"× (1 − 0.000721 (T − 25 °C))"},
+              {"M. G. Zabetakis, Bulletin 627, US Bureau of Mines, 1965"});
+      rule_error(hot, share * fuel.lfl_at, 3);
+    }
     if (stream.role != Role::Vent) return;
     add(id + ".share", "what burns in it", d::kVolumeFraction,
         [=](const Numbers& n) { return n.fuels[i].combustible_share; });
-    add(id + ".of", "of the lower flammability limit", d::kNumber,
-        [=](const Numbers& n) { return n.fuels[i].combustible_share / n.fuels[i].lfl_at; },
-        {"25 % is customary without monitoring"});
+    Finding& part = add(id + ".of", "of the lower flammability limit", d::kNumber,
+                        [=](const Numbers& n) { return n.fuels[i].combustible_share / n.fuels[i].lfl_at; },
+                        {"25 % is customary without monitoring"});
+    rule_error(part, share * part.value.value(), 3);
+    part.unfavourable = part.value.value() + part.value.u95();
   }
 
   void closure() {
@@ -558,10 +598,13 @@ class Answer {
 
   std::vector<std::string> notes() const {
     std::vector<std::string> all;
-    all.push_back("Air: " + in_.air.words + ". Normal cubic metre: 0 °C, 101.325 kPa, dry, 22.414 m³/kmol. Losses and "
+    all.push_back("Air: " + in_.air.words +
+                  ". Normal cubic metre: 0 °C, 101.325 kPa, dry, 22.414 m³/kmol. Losses and "
                   "efficiency are net, 25 °C.");
-    all.push_back("Burning products: C to CO2, H to H2O, S to SO2, N to N2, Cl to HCl while hydrogen lasts, the rest to "
-                  "Cl2. Ideal gas throughout.");
+    all.push_back(
+        "Burning products: C to CO2, H to H2O, S to SO2, N to N2, Cl to HCl while hydrogen lasts, the rest "
+        "to "
+        "Cl2. Ideal gas throughout.");
     for (const Stream& stream : in_.streams) {
       for (const Part& part : stream.parts) {
         if (part.heat || std::abs(stream.temperature.value - 298.15) < 0.5) continue;

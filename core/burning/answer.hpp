@@ -7,8 +7,8 @@
 namespace heatledger::burning {
 
 /// ± by moving one source of error at a time to the end of its interval and working the step out anew: typed
-/// figures, formation enthalpies of feeds and products, heat capacities of the products. Errors that two figures
-/// share keep one source.
+/// figures, formation enthalpies of feeds and products, heat capacities of the products. Errors that two
+/// figures share keep one source.
 /// @errors as burn()
 Result<step::Findings> answer(const BurnInput& input);
 

@@ -249,7 +249,7 @@ Result<Numbers> burn(const BurnInput& typed, bool with_equilibrium) {
   n.oxygen_brought = s.brought;
   n.air = mixed->dry * wet;
   n.dilution = in.dilution ? in.dilution->value : 0;
-  n.stoichiometric = std::max(s.needed - s.brought, 0.0) / in.air.oxygen * wet;
+  n.stoichiometric = s.needed / in.air.oxygen * wet;
   n.air_molar_mass = mass(in.air.products()) / wet;
   const double dry = mixed->dry + n.dilution / wet;
   n.ratio = (s.brought + dry * in.air.oxygen) / s.needed;

@@ -72,7 +72,7 @@ struct Numbers {
   double fuel_mass = 0, fuel_moles = 0;          ///< of the streams that burn
   double oxygen_needed = 0, oxygen_brought = 0;  ///< O2 for complete burning; O2 that the streams bring along
   double air = 0;                                ///< moles of combustion air with its water
-  double stoichiometric = 0;  ///< moles of air, with its water, for complete burning at the ratio one
+  double stoichiometric = 0;  ///< moles of air, with its water, that all which burns would need by itself
   double dilution = 0;
   double air_molar_mass = 0;  ///< [kg/mol]
   double ratio = 0;

@@ -49,7 +49,8 @@ std::vector<Chart> charts(const BurnInput& typed, const Numbers& numbers) {
   const double from = std::max(0.6, brought + dilution), to = std::max({2.5, 1.3 * numbers.ratio, from + 1});
   constexpr int kPoints = 40;
 
-  Chart temperature = chart("temperature", "Flame temperature falls with excess air", "flame temperature", d::kTemperature);
+  Chart temperature =
+      chart("temperature", "Flame temperature falls with excess air", "flame temperature", d::kTemperature);
   ChartCurve complete = curve("complete burning", CurveRole::Second),
              equilibrium = curve("chemical equilibrium", CurveRole::Main);
   Chart gas = chart("flue", "Flue gas thins as air is added", "share of the wet flue gas", d::kNumber);
@@ -79,9 +80,10 @@ std::vector<Chart> charts(const BurnInput& typed, const Numbers& numbers) {
       line->y.push_back(of(n->flame, product) / wet);
     }
   }
-  temperature.described = "Flame temperature at chemical equilibrium is highest near an air ratio of " +
-                          step::digits(hottest_at) + ", " + step::celsius(hottest) +
-                          ", and falls as air is added; complete burning lies above it where the flame is hot.";
+  temperature.described =
+      "Flame temperature at chemical equilibrium is highest near an air ratio of " +
+      step::digits(hottest_at) + ", " + step::celsius(hottest) +
+      ", and falls as air is added; complete burning lies above it where the flame is hot.";
   temperature.curves = {std::move(equilibrium), std::move(complete)};
   if (numbers.equilibrium)
     temperature.marks.push_back({numbers.ratio, numbers.equilibrium->temperature, "this step"});

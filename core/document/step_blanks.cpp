@@ -5,9 +5,9 @@ namespace heatledger::document {
 const std::vector<StepBlank>& step_blanks() {
   static const std::vector<StepBlank> all = {
       {"outlet.temperature", "outlet or end temperature", "180 °C", "fc"},
-      {"outlet.pressure", "pressure", "3 bar", "fc"},
+      {"outlet.pressure", "pressure", "3 bar", "fcb"},
       {"duty", "duty, heat to the process", "-250 kW", "fc"},
-      {"loss", "heat loss", "5 kW", "fc"},
+      {"loss", "heat loss", "5 kW", "fcb"},
       {"shaft", "shaft work", "12 kW", "fc"},
       {"mass_heat_capacity", "cp of the mass", "2.1 kJ/(kg K)", "fc"},
       {"medium_in", "cooling or heating medium, in", "15 °C", "fc"},
@@ -20,6 +20,21 @@ const std::vector<StepBlank>& step_blanks() {
       {"limit_temperature", "limit, such as of decomposition", "160 °C", "c"},
       {"cooling", "cooling capacity", "80 kW", "c"},
       {"rate_constant", "first-order rate constant", "0.4 1/h", "c"},
+      {"air_ratio", "air ratio", "1.15", "b"},
+      {"burner_ratio", "air ratio of the burner alone", "1.1", "b"},
+      {"flue_oxygen", "oxygen in the flue gas", "3 % dry", "b"},
+      {"air", "air", "humid air; dry air; O2 + 3.76 N2; 30 % O2", "b"},
+      {"humidity", "relative humidity", "60 % at 25 °C", "b"},
+      {"chamber_temperature", "chamber temperature", "1100 °C", "b"},
+      {"chamber_volume", "chamber volume", "12 m3", "b"},
+      {"flue_temperature", "flue gas leaves at", "180 °C", "b"},
+      {"calorific", "calorific value of an analysis", "18.2 MJ/kg gross; Channiwala-Parikh; Dulong", "b"},
+      {"reference_oxygen", "concentrations stated at", "3 %", "b"},
+      {"lfl", "lower flammability limit, 25 °C", "5.0 %", "b"},
+      {"so3_share", "SO3 in the wet flue gas", "5 ppmv", "b"},
+      {"hcl_share", "HCl in the wet flue gas", "800 ppmv", "b"},
+      {"combustion_temperature", "combustion temperature of calorific values", "25 °C", "b"},
+      {"metering_temperature", "metering temperature", "0 °C", "b"},
   };
   return all;
 }

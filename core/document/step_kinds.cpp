@@ -1,5 +1,6 @@
 #include "core/document/step_kinds.hpp"
 
+#include "core/document/burning_reading.hpp"
 #include "core/document/step_balance.hpp"
 
 namespace heatledger::document {
@@ -19,6 +20,18 @@ const std::vector<KindOfStep>& kinds_of_step() {
        {},
        compute_balance},
       {"charge", "Add a charge step", 'c', false, true, true, true, false, false, {}, {}, compute_balance},
+      {"burning",
+       "Add a burning step",
+       'b',
+       true,
+       false,
+       false,
+       true,
+       false,
+       false,
+       burning_roles(),
+       {{"chamber_temperature", "temperatures"}, {"support", "support fuel"}, {"air_ratio", "air ratio"}},
+       compute_burning},
   };
   return all;
 }

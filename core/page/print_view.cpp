@@ -29,7 +29,12 @@ Page print_view(const Page& page, bool drawings) {
   out.title = page.title;
   out.revision = page.revision;
   for (const Block& block : page.blocks) {
-    if (!drawings && std::get_if<Drawing>(&block) != nullptr) continue;
+    if (!drawings && std::get_if<Drawing>(&block) != nullptr) {
+      // The heading of a chart goes with it.
+      const Heading* above = out.blocks.empty() ? nullptr : std::get_if<Heading>(&out.blocks.back());
+      if (above != nullptr && above->level == 3) out.blocks.pop_back();
+      continue;
+    }
     if (const Table* table = std::get_if<Table>(&block)) {
       Table kept = *table;
       kept.rows.clear();

@@ -246,8 +246,8 @@ class Blocks {
       int free = 3;
       if (!kind_.roles.empty()) {
         std::vector<std::string> roles(kind_.roles.begin(), kind_.roles.end());
-        head.cells.push_back(
-            choice_cell(id + ".role", feed.role.empty() ? roles.front() : feed.role, std::move(roles)));
+        const std::string role = feed.role.empty() ? roles.front() : feed.role;
+        head.cells.push_back(choice_cell(id + ".role", role, std::move(roles)));
         --free;
       }
       if (view_.steps_above.empty()) {

@@ -44,18 +44,34 @@ TEST_P(Example, ComputesWhatItWasSavedWith) {
   }
 }
 
+/// A cell of the figures that a kind of step answers with.
+bool has_found_figure(const Page& page) {
+  for (const Block& block : page.blocks) {
+    const Table* table = std::get_if<Table>(&block);
+    if (table == nullptr) continue;
+    for (const Row& row : table->rows) {
+      for (const Cell& cell : row.cells) {
+        if (cell.id.find(".find.") != std::string::npos && !cell.text.empty()) return true;
+      }
+    }
+  }
+  return false;
+}
+
 TEST_P(Example, EveryReactionIsBalancedAndHasAFigure) {
   int reactions = 0;
   for (int i = 1; i < 20; ++i) {
     const std::string id = "r" + std::to_string(i);
-    if (test::find_cell(session_.page(), id + ".equation") == nullptr) continue;
+    const Cell* equation = test::find_cell(session_.page(), id + ".equation");
+    if (equation == nullptr || equation->text.empty()) continue;  // a sheet of steps keeps an empty line
     ++reactions;
     EXPECT_EQ(test::text_of(session_, id + ".balance").substr(0, 9), "balanced:") << id;
     const std::string taken = test::text_of(session_, id + ".taken");
     EXPECT_FALSE(taken.find_first_of("0123456789") == std::string::npos) << id << " " << taken;
     EXPECT_EQ(test::find_note(session_.page(), id + ".error"), nullptr);
   }
-  EXPECT_GE(reactions, 1);
+  // A sheet of steps alone has the figures of its first step instead.
+  EXPECT_TRUE(reactions > 0 || has_found_figure(session_.page()));
 }
 
 TEST_P(Example, SavesToTheSameBytes) {
