@@ -4,6 +4,7 @@
 
 #include "core/base/number_text.hpp"
 #include "core/file/json.hpp"
+#include "core/page/comparison.hpp"
 #include "core/page/page_json.hpp"
 #include "core/page/session.hpp"
 #include "core/page/writers.hpp"
@@ -142,8 +143,20 @@ class Request {
       return ok_text(write_text(sheet.page(), static_cast<int>(std::min<std::uint64_t>(width, 1000))));
     }
     if (name == "csv") return ok_text(write_csv(sheet.page()));
+    if (name == "markdown") return ok_text(write_markdown(sheet.page()));
+    if (name == "compare") return compare(sheet);
     if (name == "svg") return svg(sheet);
     return failed(not_understood("There is no request \"" + name.substr(0, 80) + "\".", "do"));
+  }
+
+  /// The sheet as it was, or is, in another file against this one.
+  std::string compare(Session& sheet) {
+    const file::Json* text = json_.find("text");
+    if (text == nullptr || !text->is_string())
+      return failed(not_understood("A comparison needs the text of the other file.", "text"));
+    const Result<Comparison> comparison = compare_sheets(text->text(), sheet.file_text());
+    if (!comparison.ok()) return failed(comparison.error());
+    return ok_text(write_html(comparison_page(*comparison), {}));
   }
 
   /// The page, or what changed since the revision that the caller has.

@@ -23,8 +23,9 @@ namespace heatledger::page {
 ///   report    sheet                               HTML text
 ///   text      sheet, width?                       terminal text
 ///   csv       sheet                               CSV text
-///   svg       sheet, drawing                      SVG text
-///   close     sheet                               true
+///   markdown  sheet                               Markdown text
+///   compare   sheet, text                         HTML text: how this sheet differs from the file of that
+///   text svg       sheet, drawing                      SVG text close     sheet true
 ///
 /// Page: {"title","revision","blocks":[…],"commands":[…]}; members that hold their default are left out. With
 /// "since":

@@ -15,6 +15,8 @@ std::string write_text(const Page& page, int width = 100);
 std::string write_html(const Page& page, const std::vector<Margin>& workings);
 /// Every table, a blank line between; RFC 4180, plain ASCII minus and no thin spaces in number cells.
 std::string write_csv(const Page& page);
+/// The printed sheet without its drawings, tables as pipe tables.
+std::string write_markdown(const Page& page);
 std::string write_svg(const Drawing& drawing);
 std::string write_json(const Page& page);
 std::string write_json(const Margin& margin);

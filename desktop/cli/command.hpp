@@ -17,6 +17,7 @@ void add_tally(CLI::App& app, Chosen& chosen);
 void add_species(CLI::App& app, Chosen& chosen);
 void add_work(CLI::App& app, Chosen& chosen);
 void add_bulk(CLI::App& app, Chosen& chosen);
+void add_compare(CLI::App& app, Chosen& chosen);
 void add_window(CLI::App& app, Chosen& chosen);
 
 }  // namespace heatledger::cli

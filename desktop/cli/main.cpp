@@ -32,6 +32,7 @@ int run(int argc, char** argv) {
   add_species(app, chosen);
   add_work(app, chosen);
   add_bulk(app, chosen);
+  add_compare(app, chosen);
   add_window(app, chosen);
   try {
     app.parse(argc, argv);

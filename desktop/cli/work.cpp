@@ -17,7 +17,7 @@ namespace heatledger::cli {
 namespace {
 
 struct Options {
-  std::string sheet, html, csv, svg, site;
+  std::string sheet, html, csv, markdown, svg, site;
   bool json = false;
 };
 
@@ -82,13 +82,18 @@ int run(const Options& options) {
     if (!status.ok()) return fail(status.error());
     written.push_back(options.csv);
   }
+  if (!options.markdown.empty()) {
+    const Status status = write_file(options.markdown, page::write_markdown(shown));
+    if (!status.ok()) return fail(status.error());
+    written.push_back(options.markdown);
+  }
   if (!options.svg.empty()) {
     const Status status = write_drawings(shown, options.svg, written);
     if (!status.ok()) return fail(status.error());
   }
   if (options.json) {
     if (!print(page::write_json(shown) + '\n')) return kWrongInput;
-  } else if (options.html.empty() && options.csv.empty() && options.svg.empty()) {
+  } else if (written.empty() && options.svg.empty()) {
     if (!print(page::write_text(shown))) return kWrongInput;
   } else {
     for (const std::string& path : written) {
@@ -116,6 +121,7 @@ void add_work(CLI::App& app, Chosen& chosen) {
       ->required();
   command->add_option("--html", options->html, "Write a report that prints as it stands")->type_name("OUT");
   command->add_option("--csv", options->csv, "Write every table as comma-separated values")->type_name("OUT");
+  command->add_option("--markdown", options->markdown, "Write the sheet as Markdown")->type_name("OUT");
   command->add_option("--svg", options->svg, "Write every drawing into this folder")->type_name("DIR");
   command
       ->add_option("--site", options->site,

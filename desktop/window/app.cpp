@@ -8,6 +8,7 @@
 #include <system_error>
 #include <utility>
 
+#include "core/page/comparison.hpp"
 #include "core/page/writers.hpp"
 #include "desktop/cli/files.hpp"
 #include "desktop/window/margin_view.hpp"
@@ -186,6 +187,7 @@ void App::update_bar() {
   buttons.push_back({"save", "Save", "Ctrl+S", true});
   buttons.push_back({"report", "Report", "Ctrl+P", true});
   buttons.push_back({"tables", "Tables", "Ctrl+T", true});
+  buttons.push_back({"compare", "Compare", "Ctrl+D", true});
   const bool changed = session_.changed_since_save();
   const std::string file = path_.empty() ? "new sheet" : file_name(path_);
   const std::string state = changed             ? "changed"
@@ -323,6 +325,7 @@ void App::start_prompt(FilePrompt::Purpose purpose) {
   finish_edit();
   std::string text;
   switch (purpose) {
+    case FilePrompt::Purpose::Compare:
     case FilePrompt::Purpose::Open: {
       const std::filesystem::path folder = std::filesystem::path(path_).parent_path();
       text = folder.empty() ? "" : folder.string() + "/";
@@ -363,6 +366,9 @@ void App::finish_prompt(FilePrompt::Outcome outcome) {
     case FilePrompt::Purpose::Tables:
       write_tables(prompt_.path());
       break;
+    case FilePrompt::Purpose::Compare:
+      write_comparison(prompt_.path());
+      break;
   }
 }
 
@@ -372,8 +378,20 @@ void App::write_report(const std::string& path) {
 }
 
 void App::write_tables(const std::string& path) {
-  const Status written = cli::write_file(path, page::write_csv(session_.page()));
+  const bool markdown = path.size() > 3 && path.compare(path.size() - 3, 3, ".md") == 0;
+  const Status written = cli::write_file(
+      path, markdown ? page::write_markdown(session_.page()) : page::write_csv(session_.page()));
   written.ok() ? say("Wrote " + path + ".") : say(written.error());
+}
+
+void App::write_comparison(const std::string& other) {
+  const Result<std::string> text = cli::read_file(other);
+  if (!text.ok()) return say(text.error());
+  const Result<page::Comparison> comparison = page::compare_sheets(*text, session_.file_text());
+  if (!comparison.ok()) return say(comparison.error());
+  const std::string path = beside(path_.empty() ? other : path_, "-compared.html");
+  const Status written = cli::write_file(path, page::write_html(page::comparison_page(*comparison), {}));
+  written.ok() ? say("Wrote " + path + ": how this sheet differs from " + other + ".") : say(written.error());
 }
 
 // --- frame

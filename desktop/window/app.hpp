@@ -65,6 +65,7 @@ class App final : public Listener {
   void go_on();
   void write_report(const std::string& path);
   void write_tables(const std::string& path);
+  void write_comparison(const std::string& other);
   void start_prompt(FilePrompt::Purpose purpose);
   void finish_prompt(FilePrompt::Outcome outcome);
   void answer_question(const std::string& answer);

@@ -292,6 +292,7 @@ void App::run_command(const std::string& id) {
     return;
   }
   if (id == "report") return start_prompt(FilePrompt::Purpose::Report);
+  if (id == "compare") return start_prompt(FilePrompt::Purpose::Compare);
   if (id == "tables") return start_prompt(FilePrompt::Purpose::Tables);
   constexpr std::string_view kPage = "page:";
   if (id.compare(0, kPage.size(), kPage) != 0) return;

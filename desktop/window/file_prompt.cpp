@@ -23,7 +23,9 @@ const char* title_of(FilePrompt::Purpose purpose) {
     case FilePrompt::Purpose::Report:
       return "Write a report (HTML, prints as it stands)";
     case FilePrompt::Purpose::Tables:
-      return "Write every table (CSV)";
+      return "Write every table (.csv) or the sheet as Markdown (.md)";
+    case FilePrompt::Purpose::Compare:
+      return "Compare with another worksheet";
   }
   return "";
 }
@@ -38,6 +40,8 @@ std::string_view ending_of(FilePrompt::Purpose purpose) {
       return ".html";
     case FilePrompt::Purpose::Tables:
       return ".csv";
+    case FilePrompt::Purpose::Compare:
+      return ".json";
   }
   return "";
 }

@@ -12,7 +12,7 @@ namespace heatledger::window {
 
 class FilePrompt {
  public:
-  enum class Purpose : std::uint8_t { Open, Save, Report, Tables };
+  enum class Purpose : std::uint8_t { Open, Save, Report, Tables, Compare };
   enum class Outcome : std::uint8_t { Waiting, Cancelled, Chosen };
 
   explicit FilePrompt(TextField::Clipboard clipboard) : field_(std::move(clipboard)) {}

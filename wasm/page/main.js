@@ -97,6 +97,18 @@ function saveCopy(verb, ending, type) {
   if (typeof text === "string") download(text, store.fileName().replace(/(\.heatledger)?\.json$/, "") + ending, type);
 }
 
+/** Writes how this sheet differs from a chosen file, which may be an older state of it. */
+async function compareWithFile() {
+  editor.finish("stay");
+  try {
+    const file = await chooseFile();
+    const text = file && store.ask("compare", {text: file.text});
+    if (typeof text === "string") download(text, store.fileName().replace(/(\.heatledger)?\.json$/, "") + "-compared.html", "text/html");
+  } catch (error) {
+    store.showError({code: "page.not_opened", message: `The file was not opened: ${error instanceof Error ? error.message : error}.`});
+  }
+}
+
 /** What the page itself can do; core's own commands are added from the page. */
 /** @type {Action[]} */
 const pageActions = [
@@ -107,6 +119,8 @@ const pageActions = [
   {id: "print", text: "Print", key: "Ctrl+P", run: () => print(false)},
   {id: "print_workings", text: "Print with all workings", run: () => print(true)},
   {id: "report", text: "Save a report (HTML)", run: () => saveCopy("report", ".html", "text/html")},
+  {id: "compare", text: "Compare with another file (HTML)", run: compareWithFile},
+  {id: "markdown", text: "Save the sheet as Markdown", run: () => saveCopy("markdown", ".md", "text/markdown")},
   {id: "csv", text: "Save the tables (CSV)", run: () => saveCopy("csv", ".csv", "text/csv")},
 ];
 

@@ -83,6 +83,22 @@ TEST(Svg, EscapesItsTexts) {
   EXPECT_NE(svg.find("<polyline"), std::string::npos);
 }
 
+TEST(Markdown, KeepsTextAsTextAndFiguresInTheirColumns) {
+  Page page;
+  Table table;
+  table.id = "t";
+  table.columns = {column("a", "Name"), column("b", "kJ|mol", Align::Right)};
+  Row row = row_of("row");
+  row.cells = {typed_cell("c", "*a* | <b>", ""), figure_cell("d", "\u22121.5")};
+  table.rows.push_back(row);
+  page.blocks.push_back(heading_block("h", "Part_1"));
+  page.blocks.push_back(table);
+  page.blocks.push_back(note_block("n", NoteKind::Caution, "Measure #1."));
+  EXPECT_EQ(write_markdown(page),
+            "## Part\\_1\n\n| Name | kJ\\|mol |\n| --- | ---: |\n| \\*a\\* \\| \\<b\\> | \u22121.5 |\n\n"
+            "> Caution: Measure \\#1.\n");
+}
+
 TEST(Csv, QuotesFieldsAndWritesPlainFigures) {
   const std::string csv = write_csv(hostile_page());
   EXPECT_EQ(csv,
