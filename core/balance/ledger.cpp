@@ -128,7 +128,7 @@ Result<Ledger> make_ledger(std::shared_ptr<const Reaction> reaction, const Ledge
   if (reaction->checkable && !reaction->balance.balanced) return not_balanced(*reaction);
   if (!options.pinned_route.empty() && options.pinned_route != kAverageRoute &&
       options.pinned_route != kFormationRoute && options.pinned_route != kContextRoute &&
-      options.pinned_route != kMeasuredRoute) {
+      options.pinned_route != kMeasuredRoute && options.pinned_route != kOtherMeasuredRoute) {
     return Error{"ledger.route_unknown", "There is no route \"" + options.pinned_route + "\".",
                  "pinned_route", "Choose average, context, formation or measured, or leave it empty."};
   }

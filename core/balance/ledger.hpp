@@ -87,13 +87,17 @@ struct Correction {
 /// A reaction enthalpy by one route for the written coefficients [J]; empty with the reason when the route
 /// ends early.
 struct Route {
-  std::string name;  ///< "average", "context", "formation", "measured"
+  std::string name;  ///< see the names of the routes below
   std::optional<uncertainty::Quantity> gas_298;
   std::optional<uncertainty::Quantity> as_written;
   std::string why_not;
   std::vector<std::string> working;
   std::vector<std::size_t> estimated;  ///< indices of species whose figure no table has
+  std::string remark;                  ///< how a measured heat was read; empty where there is one way only
 };
+
+/// Whether a measured heat holds mixing, dilution, evaporation and loss of gas.
+enum class Includes : std::uint8_t { No, Yes, Unknown };
 
 /// The measured enthalpy of this very reaction, as typed on the sheet.
 struct MeasuredHeat {
@@ -102,8 +106,9 @@ struct MeasuredHeat {
   std::string per;           ///< species as for "per mole of" (see find_basis); empty: for the coefficients
   std::optional<double> at;  ///< [K] at which it was measured; empty: 298.15 K
   std::string source;        ///< who measured it with what and when
-  std::string remark;        ///< medium, what else the figure includes
-  std::uint64_t key = 0;     ///< equal for the same measurement wherever it acts
+  std::string remark;        ///< medium
+  Includes includes = Includes::Unknown;
+  std::uint64_t key = 0;  ///< equal for the same measurement wherever it acts
 };
 
 /// What the figures are stated per.
@@ -144,6 +149,8 @@ struct Ledger {
   bool in_context = false;  ///< rows and sums are those of bonds in context
   std::vector<Route> routes;
   std::string taken;  ///< name of the route whose figure goes on
+  /// Mixing and evaporation that the measured heat may hold: added to it, in it, or both results shown.
+  std::vector<Correction> measured_lines;
   /// Species brought from 25 °C to their real temperature; empty when none was given.
   std::vector<Correction> to_temperature;
   std::optional<uncertainty::Quantity>
@@ -177,6 +184,8 @@ struct LedgerOptions {
 /// Names of the routes.
 inline constexpr std::string_view kAverageRoute = "average", kFormationRoute = "formation",
                                   kContextRoute = "context", kMeasuredRoute = "measured";
+/// The reading of a measured heat that is not used: where nobody said what it holds, the larger heat is.
+inline constexpr std::string_view kOtherMeasuredRoute = "measured_other";
 
 /// A figure on the chosen basis [J, J/mol or J/kg].
 uncertainty::Quantity on_basis(const uncertainty::Quantity& quantity, const Basis& basis);

@@ -1,15 +1,19 @@
 #include "core/balance/measured.hpp"
 
 #include <cmath>
+#include <utility>
 
 #include "core/balance/bond_words.hpp"
 #include "core/base/number_text.hpp"
 #include "core/estimate/context_molecule.hpp"
+#include "core/thermo/estimated.hpp"
+#include "core/thermo/saturation.hpp"
 #include "core/units/constants.hpp"
 
 namespace heatledger::balance {
 namespace {
 
+using molecule::Phase;
 using uncertainty::Quantity;
 using uncertainty::source_key;
 using uncertainty::SourceKind;
@@ -36,9 +40,8 @@ std::string bring_to_reference(const Ledger& ledger, double temperature, Quantit
   return {};
 }
 
-}  // namespace
-
-Result<Route> measured_route(const Ledger& ledger, const MeasuredHeat& heat) {
+/// The heat as typed, for the coefficients written, at 25 °C.
+Result<Route> as_measured(const Ledger& ledger, const MeasuredHeat& heat) {
   Route route;
   route.name = kMeasuredRoute;
   double times = 1;
@@ -71,23 +74,170 @@ Result<Route> measured_route(const Ledger& ledger, const MeasuredHeat& heat) {
       route.working.push_back("not corrected to 25 °C: " + why + " The figure stands as measured.");
   }
   route.as_written = value;
-  route.working.push_back("as written, 25 °C: " + kj_with_u95(value, "kJ"));
-  Quantity gas = value;
+  return route;
+}
+
+/// Last lines of a reading: the figure as written, and as gas.
+void finish(const Ledger& ledger, Route& route) {
+  route.working.push_back("as written, 25 °C: " + kj_with_u95(*route.as_written, "kJ"));
+  Quantity gas = *route.as_written;
   for (const Correction& correction : ledger.corrections) {
-    if (!correction.value) return route;
+    if (!correction.value) return;
     gas.add(*correction.value, -1);
   }
   for (const LedgerRow& row : ledger.rows) {
     // A row in its own phase (salts, solutions) leaves no figure that is of the gas throughout.
-    if (row.route == RowRoute::Missing) return route;
+    if (row.route == RowRoute::Missing) return;
   }
   route.gas_298 = std::move(gas);
-  return route;
+}
+
+constexpr const char* kInIt = "mixing and evaporation in it";
+constexpr const char* kAdded = "mixing and evaporation added to it";
+
+bool from_something_condensed(const Ledger& ledger) {
+  for (const LedgerRow& row : ledger.rows) {
+    if (!ledger.reaction->species[row.species].product && row.phase != Phase::Gas) return true;
+  }
+  return false;
+}
+
+/// The phase that the pure species has at a temperature and 101.325 kPa; empty where no table says.
+std::optional<Phase> pure_phase(const facts::Species& species, double temperature) {
+  const Result<thermo::Saturation> boils = thermo::boiling_temperature(species, units::kStandardAtmosphere);
+  if (boils.ok() && boils->value <= temperature) return Phase::Gas;
+  const facts::Compound* compound = species.compound;
+  if (compound != nullptr && compound->melting_point) {
+    if (compound->melting_point->value > temperature) return Phase::Solid;
+    if (boils.ok()) return Phase::Liquid;
+  }
+  for (const Phase phase : {Phase::Liquid, Phase::Solid, Phase::Gas}) {
+    if (thermo::tabulated_formation(species, phase).ok()) return phase;
+  }
+  return boils.ok() ? std::optional<Phase>(Phase::Liquid) : std::nullopt;
+}
+
+std::optional<Correction> line_it_may_hold(const Ledger& ledger, std::size_t index, double temperature,
+                                           bool condensed) {
+  const ReactionSpecies& entry = ledger.reaction->species[index];
+  const Phase written = entry.term.phase;
+  const std::optional<molecule::Strength>& strength = entry.term.strength;
+  const bool mixed =
+      written == Phase::Dissolved ||
+      (written == Phase::Aqueous && strength && strength->kind != molecule::Strength::Kind::InfiniteDilution);
+  if (!mixed && !(written == Phase::Gas && entry.product && condensed)) return std::nullopt;
+  const std::optional<Phase> pure = pure_phase(*entry.species, temperature);
+  if (!mixed && (!pure || *pure != Phase::Liquid)) return std::nullopt;
+  Correction line;
+  line.species = index;
+  line.times = entry.coefficient();
+  const std::string from = pure ? std::string(thermo::phase_word(*pure)) : "pure",
+                    to(thermo::phase_word(written));
+  line.what = display_species(entry) + ", " + (entry.product ? from + " to " + to : to + " to " + from);
+  if (line.times != 1) line.what += ", " + times_text(line.times) + " ×";
+  if (!pure) {
+    line.why_not = "no table has " + display_species(entry) + " undissolved";
+    return line;
+  }
+  const Result<thermo::Sourced> start = thermo::best_formation(*entry.species, *pure, {}),
+                                end = thermo::best_formation(*entry.species, written, strength);
+  if (!start.ok() || !end.ok()) {
+    line.why_not = (start.ok() ? end : start).error().message;
+    return line;
+  }
+  Quantity change = end->value;
+  change.add(start->value, -1);
+  line.value = change.scaled(entry.product ? line.times : -line.times);
+  line.source = end->source;
+  line.working = start->working;
+  line.working.insert(line.working.end(), end->working.begin(), end->working.end());
+  line.working.push_back(times_text(line.times) + " × " + fine_kj((entry.product ? 1 : -1) * change.value()) +
+                         " = " + fine_kj(line.value->value()) + " kJ");
+  return line;
+}
+
+std::vector<Correction> lines_it_may_hold(const Ledger& ledger, const MeasuredHeat& heat) {
+  std::vector<Correction> lines;
+  const bool condensed = from_something_condensed(ledger);
+  for (std::size_t i = 0; i < ledger.rows.size(); ++i) {
+    std::optional<Correction> line =
+        line_it_may_hold(ledger, i, heat.at.value_or(units::kReferenceTemperature), condensed);
+    if (line) lines.push_back(std::move(*line));
+  }
+  return lines;
+}
+
+std::string first_reason(const std::vector<Correction>& lines) {
+  for (const Correction& line : lines) {
+    if (!line.value) return line.why_not;
+  }
+  return {};
+}
+
+/// Of two readings of one heat the one to be prepared for: the larger, and heat released before heat taken
+/// up.
+bool larger_heat(double candidate, double other) {
+  if (candidate < 0 || other < 0) return candidate < other;
+  return candidate > other;
+}
+
+}  // namespace
+
+Status add_measured_routes(Ledger& ledger, const MeasuredHeat& heat) {
+  Result<Route> read = as_measured(ledger, heat);
+  if (!read.ok()) return read.error();
+  Route measured = std::move(read).value();
+  ledger.measured_lines = lines_it_may_hold(ledger, heat);
+  if (ledger.measured_lines.empty()) {
+    finish(ledger, measured);
+    ledger.routes.push_back(std::move(measured));
+    return success();
+  }
+  const std::string lacking = first_reason(ledger.measured_lines);
+  if (heat.includes == Includes::Yes || !lacking.empty()) {
+    measured.remark = heat.includes == Includes::Yes ? kInIt : "";
+    if (heat.includes != Includes::Yes) {
+      ledger.cautions.push_back(
+          "The measured heat " +
+          std::string(heat.includes == Includes::No ? "does not hold" : "does not say whether it holds") +
+          " mixing and evaporation, and no figure of them is known, so it stands as typed: " + lacking);
+    }
+    finish(ledger, measured);
+    ledger.routes.push_back(std::move(measured));
+    return success();
+  }
+  Route added = measured;
+  for (const Correction& line : ledger.measured_lines) {
+    added.as_written->add(*line.value);
+    added.working.push_back(line.what + "  " + fine_kj(line.value->value()) +
+                            " kJ, not in the measured figure");
+  }
+  added.remark = kAdded;
+  measured.remark = kInIt;
+  if (heat.includes == Includes::No) {
+    finish(ledger, added);
+    ledger.routes.push_back(std::move(added));
+    return success();
+  }
+  finish(ledger, measured);
+  finish(ledger, added);
+  if (larger_heat(added.as_written->value(), measured.as_written->value())) std::swap(measured, added);
+  ledger.cautions.push_back("The measured heat does not say whether it holds mixing and evaporation: " +
+                            kj_with_u95(*measured.as_written, "kJ") + " with " + measured.remark + ", " +
+                            kj_with_u95(*added.as_written, "kJ") + " with " + added.remark +
+                            ". The larger heat is used.");
+  measured.remark += "; the larger heat is used";
+  added.name = kOtherMeasuredRoute;
+  ledger.routes.push_back(std::move(measured));
+  ledger.routes.push_back(std::move(added));
+  return success();
 }
 
 Result<estimate::Measurement> observation_of(const Ledger& ledger) {
   const Route* route = find_route(ledger, kMeasuredRoute);
   if (route == nullptr || !route->gas_298) return no_observation("it cannot be brought to the gas.");
+  if (find_route(ledger, kOtherMeasuredRoute) != nullptr)
+    return no_observation("nobody says whether it holds mixing and evaporation.");
   estimate::Measurement measurement;
   measurement.property = estimate::Property::GasFormation;
   double known = 0, variance = route->gas_298->u95() * route->gas_298->u95();

@@ -116,9 +116,8 @@ Status add_routes(Ledger& ledger, const std::vector<Entry>& entries, const Equat
   if (options.context == ContextUse::Always) ledger.routes.push_back(context_route(ledger, entries, sums));
   ledger.routes.push_back(formation_route(ledger, entries, sums));
   if (options.measured) {
-    Result<Route> measured = measured_route(ledger, *options.measured);
-    if (!measured.ok()) return measured.error();
-    ledger.routes.push_back(std::move(measured).value());
+    if (const Status status = add_measured_routes(ledger, *options.measured); !status.ok())
+      return status.error();
   }
   for (const std::string_view name :
        {pinned, kMeasuredRoute, kFormationRoute, kContextRoute, kAverageRoute}) {

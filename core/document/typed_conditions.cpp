@@ -65,6 +65,9 @@ void read_measured(const ReactionSheet& sheet, const units::NamedFigures& names,
   if (!typed.medium.empty()) heat.remark = typed.medium + "; ";
   const std::string includes = typed.includes.empty() ? "unknown" : typed.includes;
   heat.remark += "mixing, dilution, evaporation, gas loss in it: " + includes;
+  heat.includes = includes == "yes"  ? balance::Includes::Yes
+                  : includes == "no" ? balance::Includes::No
+                                     : balance::Includes::Unknown;
   if (includes != "yes" && includes != "no" && includes != "unknown") {
     out.errors.push_back({"measured.includes",
                           "Whether the measured heat includes mixing is yes, no or unknown.",

@@ -197,7 +197,8 @@ Table routes_table(const balance::Ledger& ledger) {
       const KilojouleText text = kilojoules(route.as_written->figure(), true);
       line.cells.push_back(number(text.value));
       line.cells.push_back(number(text.interval, Tone::Quiet));
-      line.cells.push_back(cell(taken ? "taken" : ""));
+      line.cells.push_back(
+          cell(route.remark.empty() ? taken ? "taken" : "" : (taken ? "taken; " : "") + route.remark));
     } else {
       line.cells.push_back(cell("none"));
       line.cells.push_back(cell(""));

@@ -14,10 +14,12 @@
 namespace heatledger::page {
 namespace {
 
-constexpr std::array<std::pair<const char*, const char*>, 4> kRoutes{{{"average", "average bonds"},
-                                                                      {"context", "bonds in context"},
-                                                                      {"formation", "formation enthalpies"},
-                                                                      {"measured", "the measured heat"}}};
+constexpr std::array<std::pair<const char*, const char*>, 5> kRoutes{
+    {{"average", "average bonds"},
+     {"context", "bonds in context"},
+     {"formation", "formation enthalpies"},
+     {"measured", "the measured heat"},
+     {"measured_other", "the other reading"}}};
 
 /// The number that the printed text of a value says.
 double as_printed(double value, int decimals) {

@@ -55,6 +55,12 @@ class LedgerMargin {
     if (part == "as_written") return explain_as_written();
     if (part == "run" && id.size() >= 3) return explain_run(id);
     if (part == "as_run") return explain_as_run();
+    if (part == "measured_line" && id.size() >= 3) return explain_measured_line(id);
+    if (part == "other_reading") {
+      return explain_route(std::string(ledger_.taken == balance::kMeasuredRoute ? balance::kOtherMeasuredRoute
+                                                                                : balance::kMeasuredRoute),
+                           false);
+    }
     if (part == "taken" || part == "per_kg" || part == "per_kg_reactants") return explain_taken(part);
     if (part == "route" && id.size() >= 4) return explain_route(id[2], id[3] == "gas_298");
     return false;
@@ -221,7 +227,16 @@ class LedgerMargin {
     if (id[2] == "taken") return explain_taken("taken");
     const std::optional<std::size_t> index = id_index(id[2]);
     if (!index || *index >= ledger_.to_temperature.size()) return false;
-    const balance::Correction& line = ledger_.to_temperature[*index];
+    return explain_line(ledger_.to_temperature[*index]);
+  }
+
+  bool explain_measured_line(const IdParts& id) {
+    const std::optional<std::size_t> index = id_index(id[2]);
+    if (!index || *index >= ledger_.measured_lines.size()) return false;
+    return explain_line(ledger_.measured_lines[*index]);
+  }
+
+  bool explain_line(const balance::Correction& line) {
     margin_.subject = line.what;
     margin_.steps = line.working;
     if (line.value) {

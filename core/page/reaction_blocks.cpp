@@ -274,6 +274,7 @@ void add_ledger_blocks(const ReactionView& view, std::vector<Block>& blocks) {
                                  "gas, 25 \u00b0C \u00b7 " + ledger.basis.text));
   blocks.push_back(options_table(view));
   if (shows_measured(view.sheet)) blocks.push_back(measured_table(view));
+  if (!ledger.measured_lines.empty()) blocks.push_back(measured_lines_table(view));
   if (view.sheet.show_checker) {
     const balance::Review review = balance::review_sheet(ledger, view.sheet.checker);
     blocks.push_back(ledger_table(view, &review));

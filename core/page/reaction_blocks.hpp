@@ -46,6 +46,8 @@ std::string run_words(const balance::Ledger& ledger);
 Table run_table(const ReactionView& view);
 /// Blanks for a measured heat of the reaction.
 Table measured_table(const ReactionView& view);
+/// Mixing and evaporation that the measured heat may hold; only where the ledger has such lines.
+Table measured_lines_table(const ReactionView& view);
 /// Each route with its figure and ±, or the reason why it has none.
 Table routes_table(const ReactionView& view);
 

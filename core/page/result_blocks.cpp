@@ -34,6 +34,7 @@ std::string route_remark(const balance::Ledger& ledger, const balance::Route& ro
   if (!route.as_written) return route.why_not;
   std::string text = route.name == ledger.taken ? (pinned ? "taken, pinned" : "taken") : "";
   const auto add = [&](const std::string& words) { text += (text.empty() ? "" : "; ") + words; };
+  if (!route.remark.empty()) add(route.remark);
   if (route.name == balance::kFormationRoute) {
     const auto estimated = [&](std::size_t i) {
       return std::find(route.estimated.begin(), route.estimated.end(), i) != route.estimated.end();
@@ -81,6 +82,8 @@ class ResultTable {
         "Taken here, by " + route_words(route->name) +
             (view_.sheet.pinned_route == route->name ? ", pinned" : ""),
         figure.scaled(ledger_.basis.factor), ledger_.basis.unit);
+    if (route->name == balance::kMeasuredRoute || route->name == balance::kOtherMeasuredRoute)
+      add_other_reading(route->name);
     if (ledger_.as_run) {
       add("as_run", run_words(ledger_), ledger_.as_run->scaled(ledger_.basis.factor), ledger_.basis.unit);
     }
@@ -99,6 +102,15 @@ class ResultTable {
                  value.u95() > 0 ? label_cell("\u00b1 " + half_width_kj(value.u95(), decimals), Tone::Quiet)
                                  : label_cell("", Tone::Quiet)};
     table_.rows.push_back(std::move(row));
+  }
+
+  /// The other result of a measured heat of which nobody said what it holds.
+  void add_other_reading(const std::string& taken) {
+    const balance::Route* other = balance::find_route(
+        ledger_, taken == balance::kMeasuredRoute ? balance::kOtherMeasuredRoute : balance::kMeasuredRoute);
+    if (other == nullptr || !other->as_written) return;
+    add("other_reading", "Not taken: with " + other->remark, other->as_written->scaled(ledger_.basis.factor),
+        ledger_.basis.unit);
   }
 
   /// Per kilogram of the species of the basis (else the first reactant) and of all reactants.
@@ -210,6 +222,39 @@ Table measured_table(const ReactionView& view) {
   includes.choices = {"yes", "no", "unknown"};
   add(".row.3", "Mixing, dilution, evaporation, gas loss in it", std::move(includes), "by",
       typed_cell(id + ".source", heat.source, "who, with what, when"));
+  return table;
+}
+
+Table measured_lines_table(const ReactionView& view) {
+  const balance::Ledger& ledger = *view.result.ledger;
+  const std::string id = view.sheet.id + ".measured_line";
+  const balance::Route* other = balance::find_route(ledger, balance::kOtherMeasuredRoute);
+  const bool held = other == nullptr && view.sheet.measured.includes == "yes";
+  Table table;
+  table.id = view.sheet.id + ".measured_lines";
+  table.columns = {column("what", "Mixing and evaporation beside the measured heat"),
+                   column("value", ledger.basis.unit, Align::Right), column("u95", "\u00b1", Align::Right),
+                   column("source", "")};
+  for (std::size_t i = 0; i < ledger.measured_lines.size(); ++i) {
+    const balance::Correction& line = ledger.measured_lines[i];
+    const std::string name = id + "." + std::to_string(i);
+    Row row = row_of(name, RowRole::Correction);
+    row.cells.push_back(label_cell(line.what));
+    if (held || !line.value) {
+      row.cells.push_back(
+          label_cell(held ? "in the measured figure" : "no value", held ? Tone::Quiet : Tone::Caution));
+      row.cells.push_back(label_cell(""));
+      row.cells.push_back(label_cell(held ? "" : line.why_not, Tone::Quiet));
+    } else {
+      const uncertainty::Quantity scaled = line.value->scaled(ledger.basis.factor);
+      const int decimals = decimals_kj(scaled.u95());
+      row.cells.push_back(figure_cell(name, signed_kj(scaled.value(), decimals)));
+      row.cells.push_back(figure_cell(name + ".u95", half_width_kj(scaled.u95(), decimals), Tone::Quiet));
+      row.cells.push_back(
+          label_cell((other != nullptr ? "may be in it; " : "added; ") + line.source, Tone::Quiet));
+    }
+    table.rows.push_back(std::move(row));
+  }
   return table;
 }
 

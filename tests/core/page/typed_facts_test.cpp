@@ -170,6 +170,30 @@ TEST(MeasuredHeat, RoutesThatPartAreSaidAndLocated) {
   EXPECT_NE(text.find("beyond their"), std::string::npos);
 }
 
+TEST(MeasuredHeat, ShowsBothResultsWhereNobodySaysWhatItHolds) {
+  Session session = sheet_of("ethanol(l) -> ethylene(g) + H2O(g)");
+  type(session, "r1.measured.value", "2 \u00b1 1 kJ");
+  EXPECT_EQ(number(text_of(session, "r1.taken")), 46.0);  // the water evaporated: 44.0 kJ/mol more
+  EXPECT_EQ(number(text_of(session, "r1.other_reading")), 2.0);
+  EXPECT_EQ(number(text_of(session, "r1.route.measured_other.as_written")), 2.0);
+  EXPECT_EQ(text_of(session, "r1.measured_line.0"), "+44.00");
+  const std::string report = write_html(session.page(), session.workings());
+  EXPECT_NE(report.find("The larger heat is used"), std::string::npos);
+  EXPECT_NE(report.find("Not taken: with mixing and evaporation in it"), std::string::npos);
+  for (const char* cell : {"r1.other_reading", "r1.measured_line.0", "r1.route.measured_other.as_written"}) {
+    const Result<Margin> margin = session.margin(cell);
+    ASSERT_TRUE(margin.ok()) << cell;
+    EXPECT_FALSE(margin->steps.empty()) << cell;
+  }
+  type(session, "r1.measured.includes", "yes");
+  EXPECT_EQ(number(text_of(session, "r1.taken")), 2.0);
+  EXPECT_EQ(find_cell(session.page(), "r1.other_reading"), nullptr);
+  EXPECT_NE(whole_text(session).find("in the measured figure"), std::string::npos);
+  type(session, "r1.measured.includes", "no");
+  EXPECT_EQ(number(text_of(session, "r1.taken")), 46.0);
+  EXPECT_EQ(find_cell(session.page(), "r1.other_reading"), nullptr);
+}
+
 TEST(ContextLedger, LinesAddUpToTheRowAndRowsToTheSums) {
   Session session = sheet_of("ethyl acetate(l) + H2O(l) -> acetic acid(l) + ethanol(l)");
   type(session, "r1.bond_set", "bonds in context");
