@@ -41,7 +41,8 @@ TEST(MeasuredHeat, NotHoldingMixingGetsTheLinesAdded) {
   const Ledger ledger = measured(kFromStrongAcid, -300, Includes::No);
   ASSERT_EQ(ledger.measured_lines.size(), 1U);
   EXPECT_EQ(ledger.measured_lines[0].what, "H2SO4, solution to liquid");
-  // One mole of water per mole of acid: 28.07 kJ given off on dissolving (NBS tables), taken up on the way out.
+  // One mole of water per mole of acid: 28.07 kJ given off on dissolving (NBS tables), taken up on the way
+  // out.
   EXPECT_NEAR(kj(ledger.measured_lines[0].value), 28.07, 0.005);
   EXPECT_NEAR(written(ledger, kMeasuredRoute), -300 + 28.07, 0.005);
   EXPECT_EQ(find_route(ledger, kOtherMeasuredRoute), nullptr);
@@ -94,8 +95,8 @@ TEST(MeasuredHeat, OfUnknownContentCanBePinnedToItsOtherReadingAndSharpensNothin
 TEST(MeasuredHeat, HasNoLinesWhereNothingIsMixedOrEvaporated) {
   for (const char* equation :
        {"nitrobenzene(l) + 3 H2(g) -> aniline(l) + 2 H2O(l)",
-        "cyclohexene(g) + H2(g) -> cyclohexane(g)",         // all gas: nothing evaporates on the way
-        "HCl(aq) + NaOH(aq) -> NaCl(aq) + H2O(l)",          // dilute on both sides
+        "cyclohexene(g) + H2(g) -> cyclohexane(g)",                // all gas: nothing evaporates on the way
+        "HCl(aq) + NaOH(aq) -> NaCl(aq) + H2O(l)",                 // dilute on both sides
         "CaCO3(s) + 2 HCl(aq) -> CaCl2(aq) + H2O(l) + CO2(g)"}) {  // a gas at 25 °C is no vapour
     const Ledger ledger = measured(equation, -50, Includes::Unknown);
     EXPECT_TRUE(ledger.measured_lines.empty()) << equation;
