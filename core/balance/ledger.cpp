@@ -59,6 +59,14 @@ void note_phases(Ledger& ledger) {
   for (const LedgerRow& row : ledger.rows) {
     const ReactionSpecies& entry = ledger.reaction->species[row.species];
     if (entry.term.phase != Phase::Unstated) continue;
+    if (entry.species->repeat_unit) {
+      ledger.cautions.push_back(
+          display_species(entry) +
+          " is a unit of a polymer and its phase is not written: it is reckoned in chains apart, as in a "
+          "gas, "
+          "which no polymer is. Write (l) behind it: a melt, a glass or what is dissolved in its monomer.");
+      continue;
+    }
     if (row.phase == Phase::Gas) {
       gas += (gas.empty() ? "" : ", ") + display_species(entry);
     } else {

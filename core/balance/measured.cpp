@@ -7,7 +7,7 @@
 #include "core/base/number_text.hpp"
 #include "core/estimate/context_molecule.hpp"
 #include "core/thermo/estimated.hpp"
-#include "core/thermo/saturation.hpp"
+#include "core/thermo/solvent_heat.hpp"
 #include "core/units/constants.hpp"
 
 namespace heatledger::balance {
@@ -102,21 +102,6 @@ bool from_something_condensed(const Ledger& ledger) {
   return false;
 }
 
-/// The phase that the pure species has at a temperature and 101.325 kPa; empty where no table says.
-std::optional<Phase> pure_phase(const facts::Species& species, double temperature) {
-  const Result<thermo::Saturation> boils = thermo::boiling_temperature(species, units::kStandardAtmosphere);
-  if (boils.ok() && boils->value <= temperature) return Phase::Gas;
-  const facts::Compound* compound = species.compound;
-  if (compound != nullptr && compound->melting_point) {
-    if (compound->melting_point->value > temperature) return Phase::Solid;
-    if (boils.ok()) return Phase::Liquid;
-  }
-  for (const Phase phase : {Phase::Liquid, Phase::Solid, Phase::Gas}) {
-    if (thermo::tabulated_formation(species, phase).ok()) return phase;
-  }
-  return boils.ok() ? std::optional<Phase>(Phase::Liquid) : std::nullopt;
-}
-
 std::optional<Correction> line_it_may_hold(const Ledger& ledger, std::size_t index, double temperature,
                                            bool condensed) {
   const ReactionSpecies& entry = ledger.reaction->species[index];
@@ -126,7 +111,7 @@ std::optional<Correction> line_it_may_hold(const Ledger& ledger, std::size_t ind
       written == Phase::Dissolved ||
       (written == Phase::Aqueous && strength && strength->kind != molecule::Strength::Kind::InfiniteDilution);
   if (!mixed && !(written == Phase::Gas && entry.product && condensed)) return std::nullopt;
-  const std::optional<Phase> pure = pure_phase(*entry.species, temperature);
+  const std::optional<Phase> pure = thermo::stable_phase(*entry.species, temperature);
   if (!mixed && (!pure || *pure != Phase::Liquid)) return std::nullopt;
   Correction line;
   line.species = index;

@@ -200,7 +200,7 @@ void add_formation_working(LedgerRow& row, const Species& species,
                    ? "atoms from the element in its reference state (" +
                          std::string(thermo::phase_word(row.phase)) + ")"
                    : "by formation enthalpy as " + std::string(thermo::phase_word(row.phase)) +
-                         ": no bond set reaches ions and salts";
+                         ": no bond set reaches ions, salts and radicals";
 }
 
 void add_table(LedgerRow& row, const Species& species) {

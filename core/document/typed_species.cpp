@@ -27,6 +27,7 @@ bool must_be_positive(FigureKind kind) {
     case FigureKind::FormationGas:
     case FigureKind::FormationLiquid:
     case FigureKind::FormationSolid:
+    case FigureKind::Dissolving:
       return false;
     default:
       return true;
@@ -82,6 +83,7 @@ const std::vector<FigureName>& typed_figure_names() {
       {"vaporisation_boiling", "vaporisation at the boiling point", "kJ/mol", d::kEnergyPerMole,
        FigureKind::VaporisationBoiling},
       {"fusion", "enthalpy of fusion", "kJ/mol", d::kEnergyPerMole, FigureKind::FusionEnthalpy},
+      {"dissolving", "heat of dissolving, as (diss)", "kJ/mol", d::kEnergyPerMole, FigureKind::Dissolving},
       {"melting_point", "melting point", "degC", d::kTemperature, FigureKind::MeltingPoint},
       {"boiling_point", "boiling point", "degC", d::kTemperature, FigureKind::BoilingPoint},
       {"entropy_gas", "entropy, gas", "J/(mol K)", d::kMolarHeatCapacity, FigureKind::EntropyGas},

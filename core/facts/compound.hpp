@@ -66,6 +66,8 @@ struct Compound {
   std::optional<Datum> liquid_density;                 ///< [kg/m3] near 298 K
   std::optional<Datum> critical_temperature;           ///< [K]
   std::optional<Datum> critical_pressure;              ///< [Pa]
+  /// Of one mole of the pure species in the solvent of the sheet, written `(diss)` [J/mol]; typed only.
+  std::optional<Datum> dissolving_enthalpy;
   bool reference_element = false;  ///< an element, formation enthalpy zero in `reference_phase` by definition
   char reference_phase = 0;        ///< 'g', 'l' or 's'
   bool vapour_associates =

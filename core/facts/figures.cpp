@@ -40,6 +40,8 @@ const std::optional<Datum>& figure(const Compound& c, FigureKind kind) {
       return c.critical_temperature;
     case FigureKind::CriticalPressure:
       return c.critical_pressure;
+    case FigureKind::Dissolving:
+      return c.dissolving_enthalpy;
   }
   CHECK(false, "every kind of figure has its place");
 }

@@ -28,6 +28,7 @@ enum class FigureKind : std::uint8_t {
   LiquidDensity,
   CriticalTemperature,
   CriticalPressure,
+  Dissolving,  ///< typed only: no table has it
 };
 
 struct FigureColumn {
@@ -58,7 +59,7 @@ inline constexpr std::array<FigureColumn, 17> kFigureColumns = {{
     {FigureKind::CriticalPressure, "pc", "kPa", 1000},
 }};
 
-/// The place of one figure in a compound.
+/// The place of one figure in a compound, those without a column included.
 std::optional<Datum>& figure(Compound& compound, FigureKind kind);
 const std::optional<Datum>& figure(const Compound& compound, FigureKind kind);
 

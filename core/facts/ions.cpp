@@ -1,5 +1,7 @@
 #include "core/facts/ions.hpp"
 
+#include <algorithm>
+
 #include "core/base/check.hpp"
 #include "core/facts/embedded_tables.hpp"
 #include "core/facts/figure_cell.hpp"
@@ -7,6 +9,8 @@
 #include "core/facts/name_key.hpp"
 #include "core/facts/structure_match.hpp"
 #include "core/facts/table_reader.hpp"
+#include "core/molecule/formula.hpp"
+#include "core/molecule/smiles.hpp"
 
 namespace heatledger::facts {
 
@@ -91,6 +95,29 @@ const AqueousSubstance* find_aqueous_name(std::string_view name) {
 
 const AqueousSubstance* find_aqueous_formula(std::string_view hill) {
   return table().first(table().formulas, hill);
+}
+
+std::vector<std::pair<const AqueousSubstance*, int>> ions_of(const Compound& compound) {
+  std::vector<std::pair<const AqueousSubstance*, int>> ions;
+  if (compound.structure != Structure::Formal) return ions;
+  std::string_view rest = compound.smiles;
+  while (!rest.empty()) {
+    const std::size_t end = std::min(rest.find('.'), rest.size());
+    const Result<molecule::Graph> graph = molecule::parse_smiles(rest.substr(0, end));
+    rest.remove_prefix(std::min(end + 1, rest.size()));
+    if (!graph.ok()) return {};
+    const molecule::Composition composition = molecule::composition(*graph);
+    const AqueousSubstance* ion = find_aqueous_formula(molecule::hill_formula(composition));
+    if (composition.charge == 0 || ion == nullptr) return {};
+    const auto same =
+        std::find_if(ions.begin(), ions.end(), [&](const auto& one) { return one.first == ion; });
+    if (same != ions.end()) {
+      ++same->second;
+    } else {
+      ions.emplace_back(ion, 1);
+    }
+  }
+  return ions;
 }
 
 }  // namespace heatledger::facts

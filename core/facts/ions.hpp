@@ -5,6 +5,7 @@
 #include <optional>
 #include <string>
 #include <string_view>
+#include <utility>
 #include <vector>
 
 #include "core/facts/compound.hpp"
@@ -29,5 +30,8 @@ const std::vector<AqueousSubstance>& aqueous_substances();
 const AqueousSubstance* find_aqueous_name(std::string_view name);
 /// By composition and charge. @param hill  as molecule::hill_formula writes it
 const AqueousSubstance* find_aqueous_formula(std::string_view hill);
+/// The ions that a salt is drawn of and how many of each; empty for anything else and where the table lacks
+/// one.
+std::vector<std::pair<const AqueousSubstance*, int>> ions_of(const Compound& compound);
 
 }  // namespace heatledger::facts

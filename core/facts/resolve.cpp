@@ -4,6 +4,7 @@
 #include <cmath>
 
 #include "core/base/number_text.hpp"
+#include "core/facts/ester_name.hpp"
 #include "core/facts/species_build.hpp"
 #include "core/molecule/line_formula.hpp"
 #include "core/molecule/smiles.hpp"
@@ -38,6 +39,24 @@ bool repeats_a_symbol(std::string_view text) {
 bool looks_like_smiles(std::string_view text) {
   if (text.find(' ') != std::string_view::npos) return false;
   return text.find_first_of("=#@\\/%") != std::string_view::npos || text.substr(0, 1) == "[";
+}
+
+/// "[CH2CH(C6H5)]n", "(C2H4)n", "-(CH2CH2)-n", "-[CH2O]n-".
+bool looks_like_polymer(std::string_view text) {
+  while (!text.empty() && text.back() == '-') text.remove_suffix(1);
+  if (text.size() < 4 || text.back() != 'n') return false;
+  text.remove_suffix(1);
+  while (!text.empty() && (text.back() == '-' || text.back() == '_')) text.remove_suffix(1);
+  while (!text.empty() && text.front() == '-') text.remove_prefix(1);
+  return !text.empty() &&
+         ((text.front() == '[' && text.back() == ']') || (text.front() == '(' && text.back() == ')'));
+}
+
+Error written_as_polymer(std::string_view text) {
+  return Error{"species.repeat_unit",
+               "\"" + std::string(text) + "\" reads like the repeat unit of a polymer.", std::string(text),
+               "Write one unit as SMILES in double quotes with * at both ends: \"*CC(*)c1ccccc1\" is that of "
+               "polystyrene, \"*CC*\" that of polyethylene; (l) behind it for a melt or an amorphous solid."};
 }
 
 std::string list_names(const std::vector<const Compound*>& compounds, std::size_t most,
@@ -123,7 +142,9 @@ class Reader {
     if (const Result<molecule::Graph> line = molecule::parse_line_formula(text_)) {
       return Answer(species_of(text_, *line, library_));
     }
+    if (looks_like_polymer(text_)) return written_as_polymer(text_);
     if (looks_like_smiles(text_)) return structure_->error();
+    if (const std::optional<std::string> ester = smiles_of_ester(text_)) return read_ester(*ester);
     return unknown(text_, library_);
   }
 
@@ -165,6 +186,15 @@ class Reader {
       if (!species->note.empty()) species->note += "; ";
       species->note += formula_won(text_, *species, **structure_, library_);
     }
+    return Answer(species);
+  }
+
+  Answer read_ester(const std::string& smiles) {
+    Result<molecule::Graph> graph = molecule::parse_smiles(smiles);
+    if (!graph) return unknown(text_, library_);
+    std::shared_ptr<Species> species = species_of(text_, std::move(graph).value(), library_);
+    if (species->compound == nullptr)
+      species->note = std::string(text_) + " read by its name as \"" + smiles + "\"";
     return Answer(species);
   }
 

@@ -10,6 +10,7 @@
 #include "core/base/check.hpp"
 #include "core/base/number_text.hpp"
 #include "core/units/display.hpp"
+#include "core/units/unit.hpp"
 
 namespace heatledger::page {
 namespace {
@@ -135,6 +136,16 @@ std::string route_from_words(const std::string& words) {
     if (words == known.second) return known.first;
   }
   return words;
+}
+
+std::string published_figure(double value, double u95, const document::FigureName& name) {
+  const Result<units::Unit> unit = units::parse_unit(name.unit);
+  if (!name.kind || !unit.ok()) return {};
+  const double half = u95 / unit->factor;
+  if (!(half > 0)) return machine_number(unit->from_si(value), 6) + " " + unit->display;
+  const int decimals = units::decimals_for(half, 2);
+  return display_number(unit->from_si(value), decimals) + " \u00b1 " + display_number(half, decimals) + " " +
+         unit->display;
 }
 
 std::string taken_text(const balance::Ledger& ledger) {

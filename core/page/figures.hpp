@@ -7,6 +7,7 @@
 #include <vector>
 
 #include "core/balance/ledger.hpp"
+#include "core/document/typed_species.hpp"
 #include "core/uncertainty/quantity.hpp"
 
 namespace heatledger::page {
@@ -54,6 +55,11 @@ std::string coefficient_text(const molecule::Coefficient& coefficient);
 /// "average bonds" for "average", and back; an unknown name stands for itself.
 std::string route_words(const std::string& route);
 std::string route_from_words(const std::string& words);
+
+/// A published figure in the unit that its blank is typed in: "176.2 ± 1.0 kJ/mol", "110.6 ± 0.1 °C"; its ±
+/// left out where it is zero. Empty for what has no unit.
+/// @param value, u95  SI
+std::string published_figure(double value, double u95, const document::FigureName& name);
 
 /// The figure taken as the sheet prints it, with its unit: "−552.6 ± 3.0 kJ/mol nitrobenzene"; empty without
 /// one.

@@ -490,11 +490,13 @@ void explain_figure(const document::ReadFigure& read, const document::TypedFigur
   if (!entry.from.empty()) add_source(margin, "site table " + entry.from);
   if (!read.published) return;
   const facts::Datum& datum = *read.published;
+  const document::FigureName* name = document::find_typed_figure(entry.figure);
+  if (name == nullptr) return;
   margin.steps.push_back("typed here: " + entry.value + (entry.source.empty() ? "" : ", " + entry.source));
-  margin.steps.push_back("published, and covered by it: " + machine_number(datum.value, 8) + " \u00b1 " +
-                         machine_number(datum.u95, 4) + " in SI units, " + std::string(datum.source));
+  margin.steps.push_back("published, and covered by it: " + published_figure(datum.value, datum.u95, *name) +
+                         ", " + std::string(datum.source));
   for (const facts::Rival& rival : datum.rivals) {
-    margin.steps.push_back("another table: " + machine_number(rival.value, 8) + ", " +
+    margin.steps.push_back("another table: " + published_figure(rival.value, 0, *name) + ", " +
                            std::string(rival.source));
   }
   add_source(margin, std::string(datum.source));

@@ -49,26 +49,13 @@ const document::FigureName* name_or_first(const document::FigureName* name) {
   return name != nullptr ? name : &document::typed_figure_names().front();
 }
 
-/// [SI] in the unit that the tables print.
-std::string published_text(const facts::Datum& datum, const document::FigureName& name) {
-  if (!name.kind) return {};
-  for (const facts::FigureColumn& of : facts::kFigureColumns) {
-    if (of.kind != *name.kind) continue;
-    const double u95 = datum.u95 / of.scale;
-    const int decimals = units::decimals_for(u95, 2);
-    std::string text = display_number(datum.value / of.scale, decimals);
-    if (u95 > 0) text += " \u00b1 " + display_number(u95, decimals);
-    return text + " " + std::string(of.unit);
-  }
-  return {};
-}
-
 /// What the typed figure covers: the published one with its source, or nothing.
 Cell replaced_cell(const std::string& id, const document::FigureName& name, const document::ReadFigure& read,
                    const document::TypedFigure& entry) {
   if (read.published) {
     Cell cell =
-        figure_cell(id + ".published", published_text(*read.published, name), Tone::Quiet, Origin::Published);
+        figure_cell(id + ".published", published_figure(read.published->value, read.published->u95, name),
+                    Tone::Quiet, Origin::Published);
     cell.hint = std::string(read.published->source);
     return cell;
   }

@@ -1,8 +1,12 @@
 #include "core/page/site_import.hpp"
 
 #include <algorithm>
+#include <cmath>
 #include <set>
 
+#include "core/balance/same_reaction.hpp"
+#include "core/base/number_text.hpp"
+#include "core/document/typed_energy.hpp"
 #include "core/file/site_table.hpp"
 
 namespace heatledger::page {
@@ -14,15 +18,14 @@ using document::Worksheet;
 struct Used {
   std::set<std::string> species;  ///< names in the library of sheet and site
   std::set<molecule::BondType> bonds;
-  std::vector<std::string>
-      equations;  ///< one for each reaction, as plain text; empty where it cannot be read
+  std::vector<std::optional<balance::Reaction>> reactions;  ///< empty where an equation cannot be read
 };
 
 Used used_by(const Worksheet& sheet, document::SheetLibrary& library) {
   Used used;
   for (const auto& entry : sheet.reactions) {
     const Result<balance::Reaction> reaction = balance::read_reaction(entry->equation, library);
-    used.equations.push_back(reaction.ok() ? balance::plain_equation(*reaction) : std::string());
+    used.reactions.push_back(reaction.ok() ? std::optional<balance::Reaction>(*reaction) : std::nullopt);
     if (!reaction.ok()) continue;
     for (const balance::ReactionSpecies& one : reaction->species) {
       used.species.insert(one.species->name);
@@ -35,6 +38,30 @@ Used used_by(const Worksheet& sheet, document::SheetLibrary& library) {
     }
   }
   return used;
+}
+
+/// The heat of a site for its own equation, as it reads beside the same reaction on the sheet: `per` by the
+/// name that both know the species by, a heat for the coefficients written times their ratio.
+document::TypedHeat brought_to(const balance::Reaction& reaction, const balance::Reaction& of_site,
+                               double times, document::TypedHeat heat) {
+  if (!heat.per.empty()) {
+    const Result<balance::Basis> basis = balance::find_basis(of_site, heat.per);
+    if (!basis.ok() || basis->kind != balance::Basis::Kind::MoleOf)
+      return heat;  // the sheet says what is wrong
+    const std::string& name = of_site.species[basis->species].species->name;
+    for (const balance::ReactionSpecies& entry : reaction.species) {
+      if (entry.species->name == name) heat.per = entry.term.species;
+    }
+    return heat;
+  }
+  const Result<uncertainty::Figure> value = document::parse_molar_energy(heat.value);
+  if (times == 1 || !value.ok()) return heat;
+  heat.value = machine_number(value->value * times / 1000, 8);
+  if (value->u95 > 0) heat.value += " \u00b1 " + machine_number(value->u95 * times / 1000, 4);
+  heat.value += " kJ";
+  if (!heat.source.empty()) heat.source += "; ";
+  heat.source += "stated for " + balance::plain_equation(of_site);
+  return heat;
 }
 
 template <typename List>
@@ -78,12 +105,14 @@ Result<Edited> import_site_table(const Worksheet& sheet, std::string_view text, 
   for (const file::SiteTable::Heat& heat : table->heats) {
     const Result<balance::Reaction> reaction = balance::read_reaction(heat.equation, library);
     if (!reaction.ok()) continue;
-    const std::string equation = balance::plain_equation(*reaction);
     for (std::size_t i = 0; i < edited.sheet.reactions.size(); ++i) {
       const document::TypedHeat& present = edited.sheet.reactions[i]->measured;
       const bool free = present.blank() || present.from == table->name;
-      if (!free || used.equations[i] != equation) continue;
-      edited.sheet.reactions[i].change().measured = heat.heat;
+      if (!free || !used.reactions[i]) continue;
+      const std::optional<double> times = balance::times_of(*used.reactions[i], *reaction);
+      if (!times) continue;
+      edited.sheet.reactions[i].change().measured =
+          brought_to(*used.reactions[i], *reaction, *times, heat.heat);
       ++copied;
     }
   }

@@ -8,7 +8,7 @@
 #include "core/estimate/context_observations.hpp"
 #include "core/estimate/repeat_unit.hpp"
 #include "core/estimate/structure_figure.hpp"
-#include "core/thermo/dissolved.hpp"
+#include "core/thermo/solvent_heat.hpp"
 
 namespace heatledger::thermo {
 namespace {
@@ -97,7 +97,7 @@ Result<Sourced> best_formation(const Species& species, Phase phase,
                                const std::optional<molecule::Strength>& strength,
                                const estimate::Observations* observations) {
   if (phase == Phase::Dissolved) {
-    return formation_in_solvent(species, [](const Species& of, Phase in, const auto& strong) {
+    return formation_dissolved(species, [](const Species& of, Phase in, const auto& strong) {
       return best_formation(of, in, strong);
     });
   }

@@ -5,8 +5,8 @@
 #include "core/facts/atoms.hpp"
 #include "core/facts/polynomials.hpp"
 #include "core/molecule/formula.hpp"
-#include "core/thermo/dissolved.hpp"
 #include "core/thermo/heating_path.hpp"
+#include "core/thermo/solvent_heat.hpp"
 #include "core/thermo/species_enthalpy.hpp"
 #include "core/units/constants.hpp"
 
@@ -143,7 +143,7 @@ Result<Sourced> tabulated_formation(const Species& species, Phase phase,
                                     const std::optional<molecule::Strength>& strength) {
   if (phase == Phase::Unstated) phase = Phase::Gas;
   if (phase == Phase::Aqueous) return dissolved_formation(species, strength);
-  if (phase == Phase::Dissolved) return formation_in_solvent(species, tabulated_formation);
+  if (phase == Phase::Dissolved) return formation_dissolved(species, tabulated_formation);
   const Compound* compound = species.compound;
   if (compound == nullptr) return radical_formation(species, phase);
   if (is_reference(*compound, phase)) {

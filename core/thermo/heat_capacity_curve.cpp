@@ -7,6 +7,7 @@
 #include "core/estimate/context_model.hpp"
 #include "core/estimate/context_molecule.hpp"
 #include "core/estimate/gas_interpolation.hpp"
+#include "core/facts/ions.hpp"
 #include "core/facts/polynomials.hpp"
 #include "core/thermo/solution.hpp"
 #include "core/units/constants.hpp"
@@ -262,16 +263,60 @@ bool by_solution(HeatCapacityCurve& curve, const Species& species,
   return true;
 }
 
-/// Only at infinite dilution, and negative for many ions: good for a correction to temperature near 25 °C.
-bool by_partial_molar(HeatCapacityCurve& curve, const Species& species) {
-  if (species.aqueous == nullptr || !species.aqueous->heat_capacity) return false;
-  const facts::Datum& datum = *species.aqueous->heat_capacity;
+constexpr double kWaterFreezes = 273.15, kWaterBoils = 373.15;
+
+void by_partial(HeatCapacityCurve& curve, double cp, double u95, const std::string& source) {
   curve.kind = CurveKind::Constant;
   curve.route = "table";
-  curve.source = "partial molar, infinite dilution, " + std::string(datum.source);
+  curve.source = source;
   curve.drift = 0.01;  // partial molar heat capacities of ions change by their own size within 100 K
-  curve.pieces.push_back(straight(273.15, 373.15, datum.value, 0, 0, datum.u95));
+  curve.pieces.push_back(straight(kWaterFreezes, kWaterBoils, cp, 0, 0, u95));
+}
+
+/// A salt: the sum of its ions.
+bool by_ions(HeatCapacityCurve& curve, const Species& species) {
+  if (species.compound == nullptr) return false;
+  double cp = 0, squares = 0;
+  std::string source;
+  const auto ions = facts::ions_of(*species.compound);
+  for (const auto& ion : ions) {
+    if (!ion.first->heat_capacity) return false;
+    const facts::Datum& datum = *ion.first->heat_capacity;
+    cp += ion.second * datum.value;
+    squares += ion.second * datum.u95 * ion.second * datum.u95;
+    source = std::string(datum.source);
+  }
+  if (ions.empty()) return false;
+  by_partial(curve, cp, std::sqrt(squares), "partial molar, sum of the ions at infinite dilution, " + source);
   return true;
+}
+
+/// An organic solute that no table has in water: more than the pure liquid, since water orders itself around
+/// it.
+/// @source partial molar less liquid heat capacity, J/(mol K): methanol 158 − 81, ethanol 260 − 112, acetone
+///         241 − 126, acetic acid 169 − 123 (NBS Tables 1982 and CRC Handbook; from memory): mean 96, twice
+///         the spread 88
+bool by_liquid_in_water(HeatCapacityCurve& curve, const Species& species) {
+  constexpr double kMore = 95, kMoreU95 = 90;
+  constexpr int kCarbon = 6;
+  if (!species.graph || !species.composition || species.composition->atoms.count(kCarbon) == 0) return false;
+  const Result<HeatCapacityCurve> liquid = heat_capacity_curve(species, Phase::Liquid);
+  if (!liquid.ok()) return false;
+  by_partial(curve, liquid->at_298 + kMore, std::hypot(kMoreU95, piece_at(liquid->pieces, kReference).u95),
+             "estimate: the pure liquid (" + liquid->source + ") and 95 ± 90 J/(mol K) more");
+  curve.route = "estimate";
+  return true;
+}
+
+/// Only at infinite dilution, and negative for many ions: good for a correction to temperature near 25 °C.
+bool by_partial_molar(HeatCapacityCurve& curve, const Species& species) {
+  if (species.aqueous != nullptr && species.aqueous->heat_capacity) {
+    const facts::Datum& datum = *species.aqueous->heat_capacity;
+    by_partial(curve, datum.value, datum.u95,
+               "partial molar, infinite dilution, " + std::string(datum.source));
+    return true;
+  }
+  return by_ions(curve, species) || by_liquid_in_water(curve, species);
 }
 
 Error no_heat_capacity(const Species& species, Phase phase) {
@@ -364,7 +409,12 @@ Result<HeatCapacityCurve> heat_capacity_curve(const Species& species, Phase phas
       curve.pieces.push_back(straight(kLowestCondensed, kReference + 1000, sheet->value, 0, 0, sheet->u95));
       return true;
     }
-    if (const facts::Polynomial* polynomial = polynomial_of(species, curve.phase)) {
+    const facts::Polynomial* polynomial = polynomial_of(species, curve.phase);
+    // A liquid whose polynomial ends near 25 °C (octane, 300 K) goes on by its heat capacity there instead.
+    const bool ends_early = polynomial != nullptr && curve.phase == Phase::Liquid &&
+                            polynomial->highest() < kReference + kCautionReach;
+    if (ends_early && by_tabulated(curve, species)) return true;
+    if (polynomial != nullptr) {
       by_polynomial(curve, *polynomial);
       return true;
     }

@@ -40,7 +40,7 @@ double written(const Ledger& ledger, std::string_view route) {
 TEST(MeasuredHeat, NotHoldingMixingGetsTheLinesAdded) {
   const Ledger ledger = measured(kFromStrongAcid, -300, Includes::No);
   ASSERT_EQ(ledger.measured_lines.size(), 1U);
-  EXPECT_EQ(ledger.measured_lines[0].what, "H2SO4, solution to liquid");
+  EXPECT_EQ(ledger.measured_lines[0].what, "H₂SO₄, solution to liquid");
   // One mole of water per mole of acid: 28.07 kJ given off on dissolving (NBS tables), taken up on the way
   // out.
   EXPECT_NEAR(kj(ledger.measured_lines[0].value), 28.07, 0.005);

@@ -158,6 +158,44 @@ TEST(Resolve, HelpsWithWhatItCannotRead) {
   EXPECT_EQ(refuse("\xff\xfe??").code, "species.unknown");
 }
 
+TEST(Resolve, ReadsEstersByAlcoholAndAcid) {
+  const struct {
+    const char *name, *same;
+  } pairs[] = {{"methyl isobutyrate", "COC(=O)C(C)C"},
+               {"Methyl 2-methylpropanoate", "COC(=O)C(C)C"},
+               {"isopropyl valerate", "CCCCC(=O)OC(C)C"},
+               {"tert-butyl 2-methylbutyrate", "CCC(C)C(=O)OC(C)(C)C"},
+               {"2-ethylhexyl crotonate", "C/C=C/C(=O)OCC(CC)CCCC"},
+               {"di-n-butyl sebacate", "CCCCOC(=O)CCCCCCCCC(=O)OCCCC"},
+               {"bis(2-ethylhexyl) fumarate", "CCCCC(CC)COC(=O)/C=C/C(=O)OCC(CC)CCCC"},
+               {"methyl linoleate", "CCCCC/C=C\\C/C=C\\CCCCCCCC(=O)OC"}};
+  for (const auto& pair : pairs) {
+    const Result<std::shared_ptr<const Species>> read = resolve_species(pair.name, false),
+                                                 drawn = resolve_species(pair.same, true);
+    ASSERT_TRUE(read.ok()) << pair.name << ": " << read.error().message;
+    ASSERT_TRUE(drawn.ok()) << pair.same;
+    EXPECT_EQ((*read)->canonical, (*drawn)->canonical) << pair.name;
+  }
+  // By another name than its row has: the compound itself, with its published figures.
+  const Result<std::shared_ptr<const Species>> known = resolve_species("methyl n-valerate", false);
+  ASSERT_TRUE(known.ok());
+  ASSERT_NE((*known)->compound, nullptr);
+  EXPECT_EQ((*known)->compound->name, "methyl pentanoate");
+  for (const char* none :
+       {"methyl", "methyl frobate", "frobyl acetate", "dimethyl acetate", "methyl adipate"})
+    EXPECT_FALSE(resolve_species(none, false).ok()) << none;
+}
+
+TEST(Resolve, SaysHowAPolymerIsWritten) {
+  for (const char* text : {"[CH2CH(C6H5)]n", "(C2H4)n", "-(CH2CH2)-n", "-[CH2O]n-"}) {
+    const Result<std::shared_ptr<const Species>> read = resolve_species(text, false);
+    ASSERT_FALSE(read.ok()) << text;
+    EXPECT_EQ(read.error().code, "species.repeat_unit") << text;
+    EXPECT_NE(read.error().hint.find("*CC(*)c1ccccc1"), std::string::npos);
+  }
+  EXPECT_TRUE(resolve_species("*CC(*)c1ccccc1", true).ok());
+}
+
 TEST(Resolve, TellsCisFromTrans) {
   EXPECT_EQ(read("C/C=C\\C", true)->name, "cis-2-butene");
   EXPECT_EQ(read("C/C=C/C", true)->name, "trans-2-butene");

@@ -238,10 +238,23 @@ TEST(TypedSpecies, LieOverPublishedFiguresWhichStayInSight) {
   EXPECT_NE(published.find("31.6"), std::string::npos) << published;  // CRC Handbook, 95th ed.
   const Result<Margin> margin = session.margin("fact.0.published");
   ASSERT_TRUE(margin.ok());
-  EXPECT_GE(margin->steps.size(), 2u);
+  ASSERT_GE(margin->steps.size(), 2u);
+  // In the unit of the blank, not in J/mol.
+  EXPECT_NE(margin->steps[1].find("31.6"), std::string::npos) << margin->steps[1];
+  EXPECT_NE(margin->steps[1].find("kJ/mol"), std::string::npos) << margin->steps[1];
   EXPECT_NE(whole_text(session).find("typed in place of"), std::string::npos);
   ASSERT_TRUE(session.command("remove_figure", {{"figure", "0"}}).ok());
   EXPECT_EQ(text_of(session, "r1.taken"), before);
+}
+
+TEST(TypedFacts, WhatATemperatureCoversIsShownInItsOwnUnit) {
+  Session session = sheet_of("toluene(l) -> toluene(g)");
+  type(session, "fact.0.species", "toluene");
+  type(session, "fact.0.figure", "boiling point");
+  type(session, "fact.0.value", "111 degC");
+  const std::string published = text_of(session, "fact.0.published");
+  EXPECT_EQ(published.find("110."), 0u) << published;  // 110.6 °C, CRC Handbook, 95th ed.
+  EXPECT_NE(published.find("\u00b0C"), std::string::npos) << published;
 }
 
 TEST(TypedSpecies, ACodeNameReactsByATypedFormationEnthalpy) {
@@ -350,6 +363,46 @@ TEST(SiteTable, RowsThatTheSheetUsesAreCopiedWithTheirOrigin) {
   type(session, "fact.1.value", "40 \u00b1 1 kJ/mol");
   EXPECT_NE(whole_text(session).find("40.00 ± 1.00 kJ/mol"), std::string::npos);
   ASSERT_TRUE(session.command("undo", {}).ok());
+}
+
+/// One heat of a site, for a reaction that the sheet spells in its own way.
+TEST(SiteTable, HeatsFollowTheReactionNotItsSpelling) {
+  const auto taken = [](const std::string& equation, const std::string& heat) {
+    Session session = sheet_of(equation);
+    const Status status = session.command(
+        "import_site_table",
+        {{"text", R"({"format": "heatledger-site-table", "version": 1, "name": "Harbour", "heats": [)" +
+                      heat + "]}"}});
+    return status.ok() ? text_of(session, "r1.taken") : status.error().code;
+  };
+  const std::string per = R"({"equation": "3 H2(g) + C6H5NO2(l) -> 2 water(l) + aniline(l)",
+                    "value" : "-548 ± 4 kJ/mol", "per" : "C6H5NO2"
+})";
+  EXPECT_EQ(taken(kHydrogenation, per), "\u2212548.0");
+EXPECT_EQ(taken("2 nitrobenzene(l) + 6 H2(g) -> 2 aniline(l) + 4 H2O(l)", per), "\u22121\u2009096");
+const std::string whole = R"({"equation": "2 nitrobenzene(l) + 6 H2(g) -> 2 aniline(l) + 4 H2O(l)",
+                  "value" : "-1096 ± 8 kJ"
+})";
+  EXPECT_EQ(taken("H2(g) + 1/3 \"O=N(=O)c1ccccc1\"(l) -> 1/3 aniline(l) + 2/3 H2O(l)", whole), "\u2212182.7");
+EXPECT_EQ(taken("nitrobenzene(l) + H2(g) + 2 H2(g) -> aniline(l) + 2 H2O(l)", whole), "\u2212548.0");
+// Another phase or the reverse is another reaction.
+EXPECT_EQ(taken("nitrobenzene(l) + 3 H2(g) -> aniline(l) + 2 H2O(g)", whole), "site_table.nothing_used");
+EXPECT_EQ(taken("aniline(l) + 2 H2O(l) -> nitrobenzene(l) + 3 H2(g)", whole), "site_table.nothing_used");
+}
+
+TEST(TypedFacts, AHeatOfDissolvingStandsForTheEstimate) {
+  Session session = sheet_of("salicylic acid(s) -> salicylic acid(diss)");
+  const double guessed = number(text_of(session, "r1.route.formation.as_written.u95"));
+  EXPECT_GT(guessed, 5);  // ± of mixing that nobody measured
+  type(session, "fact.0.species", "salicylic acid");
+  type(session, "fact.0.figure", "heat of dissolving, as (diss)");
+  type(session, "fact.0.value", "21.4 \u00b1 0.6 kJ/mol");
+  type(session, "fact.0.source", "solution calorimeter, ethanol");
+  EXPECT_EQ(text_of(session, "r1.taken"), "21.40");
+  EXPECT_NEAR(number(text_of(session, "r1.route.formation.as_written.u95")), 0.6, 1e-9);
+  EXPECT_EQ(whole_text(session).find("its heat of solution is not known"), std::string::npos);
+  type(session, "fact.0.value", "-3 kJ/mol");  // given off: no figure that has to be above zero
+  EXPECT_EQ(number(text_of(session, "r1.taken")), -3);
 }
 
 TEST(SiteTable, IsNoWorksheetToOpen) {

@@ -213,6 +213,45 @@ TEST(Dissolved, ASaltIsTheSumOfItsIons) {
   EXPECT_EQ(left.u95(), 0);
 }
 
+// Hot solutions and liquids whose polynomial ends near 25 °C get a figure with its ± instead of a refusal.
+TEST(HeatCapacity, GoesOnWherePolynomialsEnd) {
+  // Octane: h(371.8 K) − h(298.15 K) = 20.2 kJ/mol from cp 254.7 at 298 K and 286 J/(mol K) at 370 K
+  // (M. Zabransky and others, evaluated liquid heat capacities; from memory, to 2 %).
+  const Result<Sourced> octane = enthalpy_increment(*species("octane"), Phase::Liquid, 371.8);
+  ASSERT_TRUE(octane.ok()) << octane.error().message;
+  EXPECT_NEAR(octane->value.value() / 1000, 19.9, 0.5);
+  EXPECT_GT(octane->value.u95(), 0);
+  EXPECT_GE(curve("octane", Phase::Liquid).highest(), 400);
+}
+
+TEST(HeatCapacity, OfASaltInWaterIsThatOfItsIons) {
+  // CRC Handbook (NBS Tables 1982): Na+ 46.4, Cl− −136.4 J/(mol K) at infinite dilution.
+  const Result<Sourced> salt = enthalpy_increment(*species("NaCl"), Phase::Aqueous, 308.15);
+  ASSERT_TRUE(salt.ok()) << salt.error().message;
+  EXPECT_NEAR(salt->value.value() / 10, 46.4 - 136.4, 0.2);
+  EXPECT_GT(salt->value.u95() / 10, 15);  // two ions of 15 each, in quadrature and growing with the distance
+  EXPECT_NE(salt->source.find("sum of the ions"), std::string::npos) << salt->source;
+  // Twice sodium and once sulfate: 2 × 46.4 − 293.
+  const Result<Sourced> sulfate = enthalpy_increment(*species("sodium sulfate"), Phase::Aqueous, 299.15);
+  ASSERT_TRUE(sulfate.ok());
+  EXPECT_NEAR(sulfate->value.value(), 2 * 46.4 - 293, 0.5);
+}
+
+TEST(HeatCapacity, OfAnOrganicSoluteInWaterIsMoreThanThatOfItsLiquid) {
+  // Partial molar at infinite dilution, 298 K: urea apart, 1-propanol 353, 2-propanol 367 (Jolicoeur and
+  // Lacroix 1976), acetonitrile 190 J/(mol K); from memory. None of them is behind the estimate.
+  const struct {
+    const char* name;
+    double cp;
+  } measured[] = {{"1-propanol", 353}, {"2-propanol", 367}, {"acetonitrile", 190}};
+  for (const auto& one : measured) {
+    const Result<Sourced> step = enthalpy_increment(*species(one.name), Phase::Aqueous, 299.15);
+    ASSERT_TRUE(step.ok()) << one.name;
+    EXPECT_NEAR(step->value.value(), one.cp, 1.5 * step->value.u95()) << one.name;
+    EXPECT_EQ(step->route, "estimate");
+  }
+}
+
 TEST(Dissolved, IsTheLiquidWithAWideError) {
   const auto naphthalene = species("naphthalene");
   const Result<Sourced> dissolved = best_formation(*naphthalene, Phase::Dissolved, {}),
