@@ -89,7 +89,7 @@ LedgerRow describe_context_row(const ReactionSpecies& entry, std::size_t index, 
   const Species& species = *entry.species;
   LedgerRow row;
   row.species = index;
-  row.phase = figures.priced.phase;
+  row.phase = figures.phase;
   row.per_mole = figures.context_sum;
   if (row.per_mole) row.in_equation = row.per_mole->scaled(entry.coefficient());
   const bool element = species.compound != nullptr && species.compound->reference_element;

@@ -3,6 +3,7 @@
 #include <cmath>
 #include <map>
 
+#include "core/balance/background.hpp"
 #include "core/balance/bond_words.hpp"
 #include "core/balance/context_rows.hpp"
 #include "core/balance/strains.hpp"
@@ -29,10 +30,10 @@ std::string capitalised(std::string text) {
 
 /// What a route takes one mole of free atoms' worth of a species for [J/mol]; empty for a measured heat,
 /// which belongs to no single species.
-std::optional<double> atoms_from(std::string_view route, const SpeciesFigures& figures, double atoms) {
-  const std::optional<Quantity>* value = route == kAverageRoute     ? &figures.priced.per_mole
-                                         : route == kContextRoute   ? &figures.context_sum
-                                         : route == kFormationRoute ? &figures.formation_row
+std::optional<double> atoms_from(std::string_view route, const Entry& entry, double atoms) {
+  const std::optional<Quantity>* value = route == kAverageRoute     ? &entry.priced->per_mole
+                                         : route == kContextRoute   ? &entry.figures->context_sum
+                                         : route == kFormationRoute ? &entry.figures->formation_row
                                                                     : nullptr;
   if (value == nullptr || !*value) return std::nullopt;
   return route == kFormationRoute ? atoms - (*value)->value() : (*value)->value();
@@ -43,14 +44,14 @@ struct Gap {
   double joule = 0;  ///< first route less second, for the coefficients written
 };
 
-std::optional<Gap> widest_gap(const Ledger& ledger, const std::vector<Entry>& entries, std::string_view one,
-                              std::string_view other) {
+std::optional<Gap> widest_gap(const Background& background, const std::vector<Entry>& entries,
+                              std::string_view one, std::string_view other) {
   std::optional<Gap> widest;
   for (std::size_t i = 0; i < entries.size(); ++i) {
-    const std::optional<double> atoms = gas_atoms_in_context(*ledger.reaction->species[i].species);
+    const std::optional<double>& atoms = background.gas_atoms[i];
     if (!atoms) continue;
-    const std::optional<double> a = atoms_from(one, *entries[i].figures, *atoms),
-                                b = atoms_from(other, *entries[i].figures, *atoms);
+    const std::optional<double> a = atoms_from(one, entries[i], *atoms),
+                                b = atoms_from(other, entries[i], *atoms);
     if (!a || !b) continue;
     const double here = -entries[i].signed_coefficient() * (*a - *b);
     if (!widest || std::fabs(here) > std::fabs(widest->joule)) widest = Gap{i, here};
@@ -58,17 +59,21 @@ std::optional<Gap> widest_gap(const Ledger& ledger, const std::vector<Entry>& en
   return widest;
 }
 
+const estimate::Explanation* explanation(const Background& background, std::size_t index) {
+  return background.explanations.of(*background.reaction, index, background.observations.get());
+}
+
 /// Which bonds of a species the average set and bonds in context price most differently, in one sentence;
 /// empty where the structure is outside the model.
-std::string bonds_apart(const Ledger& ledger, const facts::Species& species) {
-  const Result<estimate::Explanation> explained = explain_in_context(species, ledger.observations.get());
-  if (!explained.ok()) return {};
+std::string bonds_apart(const Background& background, const estimate::BondSet& set, std::size_t index) {
+  const estimate::Explanation* explained = explanation(background, index);
+  if (explained == nullptr) return {};
   struct Pair {
     double average = 0, context = 0;
   };
   std::map<std::string, Pair> pairs;
-  for (const molecule::BondCount& bond : species.bonds) {
-    const estimate::BondValue* price = ledger.set->find(bond.type);
+  for (const molecule::BondCount& bond : background.reaction->species[index].species->bonds) {
+    const estimate::BondValue* price = set.find(bond.type);
     if (price == nullptr) return {};
     pairs[element_pair(bond.type)].average += bond.count * price->value;
   }
@@ -96,9 +101,9 @@ std::string bonds_apart(const Ledger& ledger, const facts::Species& species) {
 }
 
 /// The line of an estimate that rests on least: surroundings that no compound of the table has.
-std::string weakest_line(const Ledger& ledger, const facts::Species& species) {
-  const Result<estimate::Explanation> explained = explain_in_context(species, ledger.observations.get());
-  if (!explained.ok()) return {};
+std::string weakest_line(const Background& background, std::size_t index) {
+  const estimate::Explanation* explained = explanation(background, index);
+  if (explained == nullptr) return {};
   for (const estimate::ContextLine& line : explained->lines) {
     if (line.unseen == 0) continue;
     return " Weakest in context: " + (line.bond.empty() ? line.text : line.bond + " " + line.text) +
@@ -107,47 +112,64 @@ std::string weakest_line(const Ledger& ledger, const facts::Species& species) {
   return {};
 }
 
-void compare(Ledger& ledger, const std::vector<Entry>& entries, std::string_view one,
-             std::string_view other) {
-  const Route *a = find_route(ledger, one), *b = find_route(ledger, other);
-  if (a == nullptr || b == nullptr) return;
-  const bool gas = a->gas_298 && b->gas_298;
-  if (!gas && (!a->as_written || !b->as_written)) return;
-  const Quantity &first = gas ? *a->gas_298 : *a->as_written, &second = gas ? *b->gas_298 : *b->as_written;
-  const double apart = first.value() - second.value();
+/// Two routes that part beyond their ±, in words; empty where they agree or one has no figure.
+/// @param set  of the average route; not asked for others
+std::string apart(const Background& background, const estimate::BondSet* set,
+                  const std::vector<Entry>& entries, const Route& a, const Route& b) {
+  const bool gas = a.gas_298 && b.gas_298;
+  if (!gas && (!a.as_written || !b.as_written)) return {};
+  const Quantity &first = gas ? *a.gas_298 : *a.as_written, &second = gas ? *b.gas_298 : *b.as_written;
+  const double distance = first.value() - second.value();
   const double allowed = std::sqrt(first.u95() * first.u95() + second.u95() * second.u95());
-  if (std::fabs(apart) <= allowed) return;
-  std::string text = capitalised(std::string(words(one))) + (one == kMeasuredRoute ? " is " : " give ") +
-                     kj_with_u95(first, "kJ") + ", " + std::string(words(other)) + " " +
-                     kj_with_u95(second, "kJ") + (gas ? " for the gas: " : " as written: ") +
-                     ledger_kj(std::fabs(apart)) + " kJ apart, beyond their ±.";
-  if (const std::optional<Gap> gap = widest_gap(ledger, entries, one, other)) {
-    const ReactionSpecies& entry = ledger.reaction->species[gap->row];
+  if (std::fabs(distance) <= allowed) return {};
+  std::string text = capitalised(std::string(words(a.name))) +
+                     (a.name == kMeasuredRoute ? " is " : " give ") + kj_with_u95(first, "kJ") + ", " +
+                     std::string(words(b.name)) + " " + kj_with_u95(second, "kJ") +
+                     (gas ? " for the gas: " : " as written: ") + ledger_kj(std::fabs(distance)) +
+                     " kJ apart, beyond their ±.";
+  if (const std::optional<Gap> gap = widest_gap(background, entries, a.name, b.name)) {
+    const ReactionSpecies& entry = background.reaction->species[gap->row];
     text += " Most of it stands on the row of " + display_species(entry) + " (" +
             ledger_kj(std::fabs(gap->joule)) + " kJ).";
-    if (one == kAverageRoute) {
+    if (a.name == kAverageRoute) {
       for (const std::string& strain : strains_of(*entry.species)) text += " " + capitalised(strain) + ".";
-      if (find_route(ledger, kContextRoute) != nullptr) text += bonds_apart(ledger, *entry.species);
+      if (background.by_context) text += bonds_apart(background, *set, gap->row);
     } else {
-      text += weakest_line(ledger, *entry.species);
+      text += weakest_line(background, gap->row);
     }
-  } else if (one == kMeasuredRoute) {
+  } else if (a.name == kMeasuredRoute) {
     text +=
         " Look for what the measured figure includes (mixing, evaporation, side reactions) and what it is "
         "stated per.";
   }
-  ledger.notes.push_back(std::move(text));
+  return text;
 }
 
 }  // namespace
 
+std::string context_apart(const Background& background) {
+  if (!background.by_context) return {};
+  return apart(background, nullptr, entries_of(background, background.priced), *background.by_context,
+               background.formation);
+}
+
 void note_disagreements(Ledger& ledger, const std::vector<Entry>& entries) {
-  const Route* formation = find_route(ledger, kFormationRoute);
-  const std::string_view best =
-      formation != nullptr && (formation->gas_298 || formation->as_written) ? kFormationRoute : kContextRoute;
-  compare(ledger, entries, kAverageRoute, best);
-  if (best == kFormationRoute) compare(ledger, entries, kContextRoute, kFormationRoute);
-  compare(ledger, entries, kMeasuredRoute, best);
+  const Background& background = *ledger.background;
+  const bool formed = background.formation.gas_298 || background.formation.as_written;
+  const Route* best = formed                  ? &background.formation
+                      : background.by_context ? &*background.by_context
+                                              : nullptr;
+  if (best == nullptr) return;
+  const auto note = [&ledger](std::string text) {
+    if (!text.empty()) ledger.notes.push_back(std::move(text));
+  };
+  const auto compare = [&](std::string_view name) {
+    const Route* route = find_route(ledger, name);
+    if (route != nullptr) note(apart(background, ledger.set.get(), entries, *route, *best));
+  };
+  compare(kAverageRoute);
+  if (formed) note(background.context_apart);
+  compare(kMeasuredRoute);
 }
 
 }  // namespace heatledger::balance

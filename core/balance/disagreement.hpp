@@ -10,4 +10,7 @@ namespace heatledger::balance {
 /// @param entries  one for each row of the ledger, whose routes are known
 void note_disagreements(Ledger& ledger, const std::vector<Entry>& entries);
 
+/// The note on bonds in context and formation enthalpies, which no bond set changes; empty: they agree.
+std::string context_apart(const Background& background);
+
 }  // namespace heatledger::balance

@@ -10,10 +10,12 @@
 
 namespace heatledger::balance {
 
-/// Figures of one species in one phase that do not depend on the reaction it stands in; per mole.
+/// Figures of one species in one phase that depend neither on the reaction it stands in nor on the bond set;
+/// per mole.
 struct SpeciesFigures {
-  PricedSpecies priced;
-  bool corrected = false;  ///< the phase written is not the one its bond sum belongs to
+  molecule::Phase phase = molecule::Phase::Gas;  ///< phase reckoned with
+  bool by_bonds = false;                         ///< its structure can be taken apart bond by bond
+  bool corrected = false;                        ///< the phase written is not the one its bond sum belongs to
   std::optional<uncertainty::Quantity> to_phase;   ///< gas to the phase written [J/mol]; empty: no data
   std::optional<uncertainty::Quantity> formation;  ///< ΔfH in the phase taken [J/mol]
   std::optional<uncertainty::Quantity>
@@ -29,26 +31,30 @@ struct SpeciesFigures {
 
 /// @param observations  measurements that sharpen the estimates; null: none
 SpeciesFigures species_figures(const facts::Species& species, const molecule::Term& written,
-                               const estimate::BondSet& set, ContextUse context,
-                               const estimate::Observations* observations = nullptr);
+                               ContextUse context, const estimate::Observations* observations = nullptr);
 
 /// One species of an equation with its figures.
 struct Entry {
   double coefficient = 1;
   bool product = false;
   const SpeciesFigures* figures = nullptr;
+  const PricedSpecies* priced = nullptr;  ///< by the bond set of the ledger
 
   double signed_coefficient() const { return product ? coefficient : -coefficient; }
 };
 
-/// Sums over an equation as written [J]; each empty as soon as one species lacks its figure.
-struct EquationFigures {
-  std::optional<uncertainty::Quantity> broken, formed, gas_298, as_written;  ///< average bonds
+/// Sums over an equation as written [J] by average bonds; each empty as soon as one species lacks its figure.
+struct BondSums {
+  std::optional<uncertainty::Quantity> broken, formed, gas_298, as_written;
+};
+BondSums bond_sums(const std::vector<Entry>& entries);
+
+/// The sums that no bond set changes.
+struct OtherSums {
   std::optional<uncertainty::Quantity> formation_gas_298, formation_as_written;
   std::optional<uncertainty::Quantity> context_broken, context_formed;
   std::optional<uncertainty::Quantity> context_gas_298, context_as_written;
 };
-
-EquationFigures add_up(const std::vector<Entry>& entries);
+OtherSums other_sums(const std::vector<Entry>& entries);
 
 }  // namespace heatledger::balance

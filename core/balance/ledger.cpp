@@ -6,7 +6,7 @@
 #include <map>
 #include <string>
 
-#include "core/balance/bond_words.hpp"
+#include "core/balance/background.hpp"
 #include "core/balance/context_rows.hpp"
 #include "core/balance/disagreement.hpp"
 #include "core/balance/figures.hpp"
@@ -15,71 +15,11 @@
 #include "core/balance/table_notes.hpp"
 #include "core/balance/temperature.hpp"
 #include "core/base/check.hpp"
-#include "core/thermo/estimated.hpp"
 
 namespace heatledger::balance {
 namespace {
 
-using molecule::Phase;
 using uncertainty::Quantity;
-
-Correction phase_correction(const Reaction& reaction, std::size_t index, const SpeciesFigures& figures,
-                            const LedgerOptions& options, std::vector<std::string>& cautions) {
-  const ReactionSpecies& entry = reaction.species[index];
-  const Phase phase = figures.priced.phase;
-  Correction correction;
-  correction.species = index;
-  correction.times = entry.coefficient();
-  const std::string gas = "gas", other(thermo::phase_word(phase));
-  correction.what =
-      display_species(entry) + ", " + (entry.product ? gas + " to " + other : other + " to " + gas);
-  if (correction.times != 1) correction.what += ", " + times_text(correction.times) + " ×";
-  const Result<thermo::Sourced> change =
-      options.context != ContextUse::Never
-          ? thermo::best_gas_to_phase(*entry.species, phase, entry.term.strength, options.observations.get())
-          : thermo::gas_to_phase(*entry.species, phase, entry.term.strength);
-  if (!change.ok()) {
-    correction.why_not = change.error().message;
-    return correction;
-  }
-  const double times = entry.product ? correction.times : -correction.times;
-  correction.value = change->value.scaled(times);
-  correction.source = change->source;
-  correction.working = change->working;
-  correction.working.push_back(times_text(correction.times) + " × " +
-                               fine_kj((entry.product ? 1 : -1) * change->value.value()) + " = " +
-                               fine_kj(correction.value->value()) + " kJ");
-  cautions.insert(cautions.end(), change->cautions.begin(), change->cautions.end());
-  return correction;
-}
-
-/// One note for all phases that nobody wrote.
-void note_phases(Ledger& ledger) {
-  std::string gas, other;
-  for (const LedgerRow& row : ledger.rows) {
-    const ReactionSpecies& entry = ledger.reaction->species[row.species];
-    if (entry.term.phase != Phase::Unstated) continue;
-    if (entry.species->repeat_unit) {
-      ledger.cautions.push_back(
-          display_species(entry) +
-          " is a unit of a polymer and its phase is not written: it is reckoned in chains apart, as in a "
-          "gas, "
-          "which no polymer is. Write (l) behind it: a melt, a glass or what is dissolved in its monomer.");
-      continue;
-    }
-    if (row.phase == Phase::Gas) {
-      gas += (gas.empty() ? "" : ", ") + display_species(entry);
-    } else {
-      other += (other.empty() ? "" : ", ") + display_species(entry) + " as " +
-               std::string(thermo::phase_word(row.phase));
-    }
-  }
-  if (gas.empty() && other.empty()) return;
-  std::string text = "No phase is written: ";
-  if (!gas.empty()) text += gas + " taken as gas";
-  if (!other.empty()) text += (gas.empty() ? "" : "; ") + other;
-  ledger.notes.push_back(text + ". Write (g), (l), (s) or (aq) behind the name.");
-}
 
 /// Whether every bond broken is formed again: the bonds then cancel by kind and say nothing of the reaction.
 bool bonds_cancel(const Ledger& ledger) {
@@ -124,6 +64,33 @@ void note_set(Ledger& ledger) {
     ledger.notes.emplace_back("Typed bond values act in this ledger; the lines that use them say so.");
 }
 
+std::vector<PricedSpecies> price(const Background& background, const estimate::BondSet& set) {
+  std::vector<PricedSpecies> priced = background.priced;
+  for (std::size_t i = 0; i < priced.size(); ++i) {
+    if (background.figures[i].by_bonds)
+      priced[i] = price_by_bonds(*background.reaction->species[i].species, priced[i].phase, set);
+  }
+  return priced;
+}
+
+std::vector<LedgerRow> rows_of(const Background& background, const std::vector<PricedSpecies>& priced,
+                               const estimate::BondSet& set) {
+  if (background.context_rows) return background.rows;
+  std::vector<LedgerRow> rows;
+  rows.reserve(background.rows.size());
+  for (std::size_t i = 0; i < background.rows.size(); ++i) {
+    const LedgerRow& begun = background.rows[i];
+    rows.push_back(background.figures[i].by_bonds
+                       ? add_bonds(begun, background.reaction->species[i], priced[i], set)
+                       : begun);
+  }
+  return rows;
+}
+
+void append(std::vector<std::string>& to, const std::vector<std::string>& from) {
+  to.insert(to.end(), from.begin(), from.end());
+}
+
 }  // namespace
 
 Quantity on_basis(const Quantity& quantity, const Basis& basis) {
@@ -143,6 +110,10 @@ Result<Ledger> make_ledger(std::shared_ptr<const Reaction> reaction, const Ledge
   Result<Basis> basis = find_basis(*reaction, options.basis);
   if (!basis.ok()) return basis.error();
 
+  const std::shared_ptr<const Background> background =
+      options.background != nullptr && options.background->fits(reaction, options)
+          ? options.background
+          : make_background(reaction, options);
   Ledger ledger;
   ledger.reaction = std::move(reaction);
   ledger.set = options.set;
@@ -151,36 +122,24 @@ Result<Ledger> make_ledger(std::shared_ptr<const Reaction> reaction, const Ledge
   ledger.observations = options.observations;
   ledger.reactants_at = options.reactants_at;
   ledger.products_at = options.products_at;
-  const std::vector<ReactionSpecies>& species = ledger.reaction->species;
-  std::vector<SpeciesFigures> figures;
-  figures.reserve(species.size());
-  std::vector<Entry> entries(species.size());
-  for (std::size_t i = 0; i < species.size(); ++i) {
-    figures.push_back(species_figures(*species[i].species, species[i].term, *options.set, options.context,
-                                      options.observations.get()));
-    entries[i].coefficient = species[i].coefficient();
-    entries[i].product = species[i].product;
-    entries[i].figures = &figures[i];
-    ledger.rows.push_back(options.context_rows
-                              ? describe_context_row(species[i], i, figures[i], options.observations.get())
-                              : describe_row(species[i], i, figures[i].priced, *options.set));
-    if (figures[i].corrected)
-      ledger.corrections.push_back(
-          phase_correction(*ledger.reaction, i, figures[i], options, ledger.cautions));
-    if (!species[i].species->note.empty()) ledger.notes.push_back(species[i].species->note);
-  }
-  const EquationFigures sums = add_up(entries);
-  ledger.broken = options.context_rows ? sums.context_broken : sums.broken;
-  ledger.formed = options.context_rows ? sums.context_formed : sums.formed;
-  ledger.gas_298 = options.context_rows ? sums.context_gas_298 : sums.gas_298;
-  ledger.as_written = options.context_rows ? sums.context_as_written : sums.as_written;
-  if (!ledger.reaction->checkable)
-    ledger.notes.emplace_back("Element balance not checkable: a species has no formula.");
-  note_phases(ledger);
-  if (const Status status = add_routes(ledger, entries, sums, options); !status.ok()) return status.error();
+  ledger.corrections = background->corrections;
+  ledger.notes = background->opening_notes;
+  ledger.cautions = background->phase_cautions;
+  ledger.background = background;
+  const std::vector<PricedSpecies> priced = price(*background, *options.set);
+  ledger.rows = rows_of(*background, priced, *options.set);
+  const std::vector<Entry> entries = entries_of(*background, priced);
+  const OtherSums& others = background->sums;
+  const BondSums bonds = bond_sums(entries);
+  ledger.broken = options.context_rows ? others.context_broken : bonds.broken;
+  ledger.formed = options.context_rows ? others.context_formed : bonds.formed;
+  ledger.gas_298 = options.context_rows ? others.context_gas_298 : bonds.gas_298;
+  ledger.as_written = options.context_rows ? others.context_as_written : bonds.as_written;
+  if (const Status status = add_routes(ledger, entries, bonds, options); !status.ok()) return status.error();
   note_disagreements(ledger, entries);
-  note_tables(ledger);
-  if (options.reactants_at || options.products_at) run_at_temperatures(ledger, options);
+  append(ledger.notes, background->table_notes);
+  append(ledger.cautions, background->table_cautions);
+  if (options.reactants_at || options.products_at) run_at_temperatures(ledger);
   if (options.pressure) note_pressure(ledger, *options.pressure);
   note_set(ledger);
   return ledger;
@@ -195,12 +154,17 @@ Ledger ledger_rows(std::shared_ptr<const Reaction> reaction, const LedgerOptions
   ledger.observations = options.observations;
   const std::vector<ReactionSpecies>& species = ledger.reaction->species;
   for (std::size_t i = 0; i < species.size(); ++i) {
-    const SpeciesFigures figures = species_figures(*species[i].species, species[i].term, *options.set,
-                                                   options.context_rows ? options.context : ContextUse::Never,
-                                                   options.observations.get());
-    ledger.rows.push_back(options.context_rows
-                              ? describe_context_row(species[i], i, figures, options.observations.get())
-                              : describe_row(species[i], i, figures.priced, *options.set));
+    if (options.context_rows) {
+      const SpeciesFigures figures =
+          species_figures(*species[i].species, species[i].term, options.context, options.observations.get());
+      ledger.rows.push_back(describe_context_row(species[i], i, figures, options.observations.get()));
+      continue;
+    }
+    const PricedSpecies priced = price_species(*species[i].species, species[i].term, *options.set);
+    const bool by_bonds = reachable_by_bonds(*species[i].species, priced.phase);
+    LedgerRow row = start_row(species[i], i, priced, by_bonds);
+    ledger.rows.push_back(by_bonds ? add_bonds(std::move(row), species[i], priced, *options.set)
+                                   : std::move(row));
   }
   return ledger;
 }

@@ -137,6 +137,8 @@ std::vector<BasisChoice> basis_choices(const Reaction& reaction);
 /// @errors ledger.basis_unknown, ledger.no_molar_mass
 Result<Basis> find_basis(const Reaction& reaction, std::string_view name);
 
+struct Background;
+
 struct Ledger {
   std::shared_ptr<const Reaction> reaction;
   std::shared_ptr<const estimate::BondSet> set;
@@ -159,6 +161,7 @@ struct Ledger {
   std::optional<double> reactants_at, products_at;             ///< [K] as asked for; empty: 298.15 K
   std::shared_ptr<const estimate::Observations> observations;  ///< that sharpened the estimates; or null
   std::vector<std::string> notes, cautions;
+  std::shared_ptr<const Background> background;  ///< see LedgerOptions::background
 };
 
 /// When bonds in context are asked. The first question of a program run fits the model, which takes part of a
@@ -179,6 +182,10 @@ struct LedgerOptions {
   std::optional<double> pressure;                   ///< [Pa] of the gases, for cautions; empty: not asked
   std::optional<MeasuredHeat> measured;
   std::shared_ptr<const estimate::Observations> observations;  ///< sharpen every estimate; null: none
+  /// Of an earlier ledger: where it is of the same reaction with the same options but for bond set, basis,
+  /// pinned route, pressure and measured heat, what these do not change is taken over with all its digits;
+  /// where not, or null, everything is computed.
+  std::shared_ptr<const Background> background;
 };
 
 /// Names of the routes.

@@ -20,15 +20,17 @@ using uncertainty::Quantity;
 struct KnownTerm {
   double coefficient = 1;
   SpeciesFigures figures;
+  PricedSpecies priced;
   std::vector<std::pair<int, double>> atoms;  ///< times the coefficient; charge under key -1
   bool whole = false;     ///< all counts are whole numbers, so that sums of them are exact
   std::size_t parts = 0;  ///< of the ± of all figures: what the term takes in memory
 };
 
-std::size_t parts_of(const SpeciesFigures& figures) {
+std::size_t parts_of(const KnownTerm& term) {
+  const SpeciesFigures& figures = term.figures;
   std::size_t parts = 0;
   for (const std::optional<Quantity>* figure :
-       {&figures.priced.per_mole, &figures.to_phase, &figures.formation, &figures.formation_row,
+       {&term.priced.per_mole, &figures.to_phase, &figures.formation, &figures.formation_row,
         &figures.context, &figures.context_row}) {
     if (*figure) parts += (*figure)->parts().size();
   }
@@ -140,12 +142,13 @@ struct QuickTally::State {
   }
 
   QuickAnswer answer() {
-    const EquationFigures sums = add_up(entries);
+    const BondSums bonds = bond_sums(entries);
+    const OtherSums sums = other_sums(entries);
     QuickAnswer result;
-    result.broken = figure_of(sums.broken);
-    result.formed = figure_of(sums.formed);
-    result.gas_298 = figure_of(sums.gas_298);
-    result.as_written = figure_of(sums.as_written);
+    result.broken = figure_of(bonds.broken);
+    result.formed = figure_of(bonds.formed);
+    result.gas_298 = figure_of(bonds.gas_298);
+    result.as_written = figure_of(bonds.as_written);
     result.formation_gas_298 = figure_of(sums.formation_gas_298);
     result.formation = figure_of(sums.formation_as_written);
     result.context_broken = figure_of(sums.context_broken);
@@ -174,6 +177,7 @@ struct QuickTally::State {
       entry.coefficient = term->coefficient;
       entry.product = piece.product;
       entry.figures = &term->figures;
+      entry.priced = &term->priced;
       entries.push_back(entry);
     }
     return balanced_in_whole_numbers(terms, pieces);
@@ -189,8 +193,9 @@ struct QuickTally::State {
     for (const ReactionSpecies& entry : reaction.species) {
       auto term = std::make_shared<KnownTerm>();
       term->coefficient = entry.coefficient();
-      term->figures = species_figures(*entry.species, entry.term, *set, context);
-      term->parts = parts_of(term->figures);
+      term->figures = species_figures(*entry.species, entry.term, context);
+      term->priced = price_species(*entry.species, entry.term, *set);
+      term->parts = parts_of(*term);
       term->whole = entry.term.coefficient.denominator == 1 && entry.species->composition.has_value();
       if (entry.species->composition) {
         for (const auto& atom : entry.species->composition->atoms) {
@@ -205,6 +210,7 @@ struct QuickTally::State {
       sum.coefficient = term->coefficient;
       sum.product = entry.product;
       sum.figures = &term->figures;
+      sum.priced = &term->priced;
       entries.push_back(sum);
       known.push_back(std::move(term));
     }

@@ -2,6 +2,7 @@
 
 #include <cmath>
 
+#include "core/balance/background.hpp"
 #include "core/balance/bond_words.hpp"
 #include "core/balance/measured.hpp"
 #include "core/base/number_text.hpp"
@@ -12,13 +13,13 @@ namespace {
 
 using uncertainty::Quantity;
 
-Route average_route(const Ledger& ledger, const std::vector<Entry>& entries, const EquationFigures& sums) {
+Route average_route(const Ledger& ledger, const std::vector<Entry>& entries, const BondSums& sums) {
   Route route;
   route.name = kAverageRoute;
   route.gas_298 = sums.gas_298;
   route.as_written = sums.as_written;
   for (std::size_t i = 0; i < entries.size(); ++i) {
-    if (entries[i].figures->priced.per_mole || !route.why_not.empty()) continue;
+    if (entries[i].priced->per_mole || !route.why_not.empty()) continue;
     const LedgerRow& row = ledger.rows[i];
     route.why_not = ledger.in_context || row.remark.empty()
                         ? "no bond sum for " + display_species(ledger.reaction->species[i])
@@ -41,20 +42,23 @@ Route average_route(const Ledger& ledger, const std::vector<Entry>& entries, con
   return route;
 }
 
-Route formation_route(const Ledger& ledger, const std::vector<Entry>& entries, const EquationFigures& sums) {
+}  // namespace
+
+Route formation_route(const Background& background) {
   Route route;
   route.name = kFormationRoute;
-  route.gas_298 = sums.formation_gas_298;
-  route.as_written = sums.formation_as_written;
-  for (std::size_t i = 0; i < entries.size(); ++i) {
-    const ReactionSpecies& entry = ledger.reaction->species[i];
-    const SpeciesFigures& figures = *entries[i].figures;
+  route.gas_298 = background.sums.formation_gas_298;
+  route.as_written = background.sums.formation_as_written;
+  for (std::size_t i = 0; i < background.figures.size(); ++i) {
+    const ReactionSpecies& entry = background.reaction->species[i];
+    const SpeciesFigures& figures = background.figures[i];
     if (figures.formation_estimated) route.estimated.push_back(i);
     if (!figures.formation) {
       if (route.why_not.empty()) route.why_not = figures.formation_source;
       continue;
     }
-    const double value = figures.formation->value(), times = entries[i].signed_coefficient();
+    const double value = figures.formation->value(),
+                 times = entry.product ? entry.coefficient() : -entry.coefficient();
     route.working.push_back(display_species(entry) + phase_suffix(entry.term) + "  " +
                             display_number(times, times == std::round(times) ? 0 : 4) + " × (" +
                             fine_kj(value) + ") = " + fine_kj(times * value) + " kJ; " +
@@ -68,18 +72,19 @@ Route formation_route(const Ledger& ledger, const std::vector<Entry>& entries, c
   return route;
 }
 
-Route context_route(const Ledger& ledger, const std::vector<Entry>& entries, const EquationFigures& sums) {
+Route context_route(const Background& background) {
   Route route;
   route.name = kContextRoute;
-  route.gas_298 = sums.context_gas_298;
-  route.as_written = sums.context_as_written;
-  for (std::size_t i = 0; i < entries.size(); ++i) {
-    const ReactionSpecies& entry = ledger.reaction->species[i];
-    if (!entries[i].figures->context) {
+  route.gas_298 = background.sums.context_gas_298;
+  route.as_written = background.sums.context_as_written;
+  for (std::size_t i = 0; i < background.figures.size(); ++i) {
+    const ReactionSpecies& entry = background.reaction->species[i];
+    if (!background.figures[i].context) {
       if (route.why_not.empty()) route.why_not = "no figure in context for " + display_species(entry);
       continue;
     }
-    const double value = entries[i].figures->context->value(), times = entries[i].signed_coefficient();
+    const double value = background.figures[i].context->value(),
+                 times = entry.product ? entry.coefficient() : -entry.coefficient();
     route.working.push_back(display_species(entry) + phase_suffix(entry.term) + "  " +
                             display_number(times, times == std::round(times) ? 0 : 4) + " × (" +
                             fine_kj(value) + ") = " + fine_kj(times * value) + " kJ");
@@ -90,17 +95,14 @@ Route context_route(const Ledger& ledger, const std::vector<Entry>& entries, con
   return route;
 }
 
-/// Which figures of the formation route no table has.
-void note_estimates(Ledger& ledger) {
-  const Route* formation = find_route(ledger, kFormationRoute);
-  if (!formation->as_written || formation->estimated.empty()) return;
+std::string estimates_of(const Background& background) {
+  const Route& formation = background.formation;
+  if (!formation.as_written || formation.estimated.empty()) return {};
   std::string names;
-  for (const std::size_t i : formation->estimated)
-    names += (names.empty() ? "" : ", ") + display_species(ledger.reaction->species[i]);
-  ledger.notes.push_back("No table has " + names + ": estimated from bonds in context.");
+  for (const std::size_t i : formation.estimated)
+    names += (names.empty() ? "" : ", ") + display_species(background.reaction->species[i]);
+  return "No table has " + names + ": estimated from bonds in context.";
 }
-
-}  // namespace
 
 const Route* find_route(const Ledger& ledger, std::string_view name) {
   for (const Route& route : ledger.routes) {
@@ -109,12 +111,13 @@ const Route* find_route(const Ledger& ledger, std::string_view name) {
   return nullptr;
 }
 
-Status add_routes(Ledger& ledger, const std::vector<Entry>& entries, const EquationFigures& sums,
+Status add_routes(Ledger& ledger, const std::vector<Entry>& entries, const BondSums& sums,
                   const LedgerOptions& options) {
   const std::string_view pinned = options.pinned_route;
+  const Background& background = *ledger.background;
   ledger.routes.push_back(average_route(ledger, entries, sums));
-  if (options.context == ContextUse::Always) ledger.routes.push_back(context_route(ledger, entries, sums));
-  ledger.routes.push_back(formation_route(ledger, entries, sums));
+  if (background.by_context) ledger.routes.push_back(*background.by_context);
+  ledger.routes.push_back(background.formation);
   if (options.measured) {
     if (const Status status = add_measured_routes(ledger, *options.measured); !status.ok())
       return status.error();
@@ -134,7 +137,7 @@ Status add_routes(Ledger& ledger, const std::vector<Entry>& entries, const Equat
   } else if (!pinned.empty()) {
     ledger.notes.push_back("The figure taken is pinned to the route by " + ledger.taken + ".");
   }
-  note_estimates(ledger);
+  if (!background.estimated_note.empty()) ledger.notes.push_back(background.estimated_note);
   return success();
 }
 

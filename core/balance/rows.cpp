@@ -214,6 +214,25 @@ void add_table(LedgerRow& row, const Species& species) {
   row.table_source = formation->source;
 }
 
+void add_sum(LedgerRow& row, const ReactionSpecies& entry, const PricedSpecies& priced) {
+  row.route = priced.route;
+  row.per_mole = priced.per_mole;
+  row.missing = priced.missing;
+  if (row.per_mole) row.in_equation = row.per_mole->scaled(entry.coefficient());
+}
+
+void add_sum_working(LedgerRow& row, const ReactionSpecies& entry) {
+  if (!row.per_mole) return;
+  row.working.push_back("sum " + ledger_kj(row.per_mole->value()) + " kJ/mol");
+  row.working.push_back(times_text(entry.coefficient()) + " × " + ledger_kj(row.per_mole->value()) + " = " +
+                        ledger_kj(row.in_equation->value()) + " kJ " + (entry.product ? "formed" : "broken"));
+  if (!row.table) return;
+  const double gap = row.per_mole->value() - row.table->value();
+  row.working.push_back("the table implies " + ledger_kj(row.table->value()) +
+                        " kJ/mol (gas atoms minus ΔfH of the gas, " + row.table_source +
+                        "); bonds − table = " + ledger_kj(gap));
+}
+
 }  // namespace
 
 bool reachable_by_bonds(const Species& species, Phase phase) {
@@ -232,13 +251,17 @@ bool reachable_by_bonds(const Species& species, Phase phase) {
   return !solid_sulfur_or_phosphorus && !has_charged_fragment(*species.graph);
 }
 
+PricedSpecies price_by_bonds(const Species& species, Phase phase, const BondSet& set) {
+  PricedSpecies priced;
+  priced.phase = phase;
+  if (sum_bonds(species, set, priced)) priced.route = RowRoute::Bonds;
+  return priced;
+}
+
 PricedSpecies price_species(const Species& species, const molecule::Term& written, const BondSet& set) {
   PricedSpecies priced;
   priced.phase = thermo::phase_taken(species, written.phase).phase;
-  if (reachable_by_bonds(species, priced.phase)) {
-    if (sum_bonds(species, set, priced)) priced.route = RowRoute::Bonds;
-    return priced;
-  }
+  if (reachable_by_bonds(species, priced.phase)) return price_by_bonds(species, priced.phase, set);
   const Result<thermo::Sourced> formation =
       thermo::tabulated_formation(species, priced.phase, written.strength);
   std::string lacking;
@@ -253,38 +276,33 @@ PricedSpecies price_species(const Species& species, const molecule::Term& writte
   return priced;
 }
 
-LedgerRow describe_row(const ReactionSpecies& entry, std::size_t index, const PricedSpecies& priced,
-                       const BondSet& set) {
+LedgerRow start_row(const ReactionSpecies& entry, std::size_t index, const PricedSpecies& priced,
+                    bool by_bonds) {
   const Species& species = *entry.species;
   LedgerRow row;
   row.species = index;
-  row.route = priced.route;
   row.phase = priced.phase;
-  row.per_mole = priced.per_mole;
-  row.missing = priced.missing;
-  if (row.per_mole) row.in_equation = row.per_mole->scaled(entry.coefficient());
-  if (row.route == RowRoute::Bonds || !row.missing.empty()) {
-    row.lines = bond_lines(species, set);
+  if (by_bonds) {
     row.strains = strains_of(species);
-    add_bond_working(row);
     add_table(row, species);
-    if (row.route == RowRoute::Bonds && row.lines.empty()) row.remark = "free atom: no bond";
-  } else {
-    add_formation_working(row, species, entry.term.strength);
+    return row;
   }
+  add_sum(row, entry, priced);
+  add_formation_working(row, species, entry.term.strength);
   if (row.route == RowRoute::Missing) explain_missing(row, species);
-  if (row.per_mole) {
-    row.working.push_back("sum " + ledger_kj(row.per_mole->value()) + " kJ/mol");
-    row.working.push_back(times_text(entry.coefficient()) + " × " + ledger_kj(row.per_mole->value()) + " = " +
-                          ledger_kj(row.in_equation->value()) + " kJ " +
-                          (entry.product ? "formed" : "broken"));
-  }
-  if (row.table && row.per_mole) {
-    const double gap = row.per_mole->value() - row.table->value();
-    row.working.push_back("the table implies " + ledger_kj(row.table->value()) +
-                          " kJ/mol (gas atoms minus ΔfH of the gas, " + row.table_source +
-                          "); bonds − table = " + ledger_kj(gap));
-  }
+  add_sum_working(row, entry);
+  return row;
+}
+
+LedgerRow add_bonds(LedgerRow row, const ReactionSpecies& entry, const PricedSpecies& priced,
+                    const BondSet& set) {
+  const Species& species = *entry.species;
+  add_sum(row, entry, priced);
+  row.lines = bond_lines(species, set);
+  add_bond_working(row);
+  if (row.route == RowRoute::Bonds && row.lines.empty()) row.remark = "free atom: no bond";
+  if (row.route == RowRoute::Missing) explain_missing(row, species);
+  add_sum_working(row, entry);
   return row;
 }
 

@@ -21,8 +21,20 @@ PricedSpecies price_species(const facts::Species& species, const molecule::Term&
 /// state.
 bool reachable_by_bonds(const facts::Species& species, molecule::Phase phase);
 
-/// Adds what the sheet shows: bond lines, table value, remarks, working.
-LedgerRow describe_row(const ReactionSpecies& entry, std::size_t index, const PricedSpecies& priced,
-                       const estimate::BondSet& set);
+/// As price_species for a species that `reachable_by_bonds` holds for, without asking again.
+/// @param phase  reckoned with
+PricedSpecies price_by_bonds(const facts::Species& species, molecule::Phase phase,
+                             const estimate::BondSet& set);
+
+/// What the sheet shows of a row apart from what a bond set decides: the whole row of a species that no bond
+/// reaches, else its strains and what the table implies.
+/// @param priced    of a species that no bond reaches; of others the phase is enough
+/// @param by_bonds  see reachable_by_bonds
+LedgerRow start_row(const ReactionSpecies& entry, std::size_t index, const PricedSpecies& priced,
+                    bool by_bonds);
+
+/// Adds to a row begun by start_row for a species that bonds reach: bond lines, sum, remarks, working.
+LedgerRow add_bonds(LedgerRow row, const ReactionSpecies& entry, const PricedSpecies& priced,
+                    const estimate::BondSet& set);
 
 }  // namespace heatledger::balance

@@ -21,8 +21,8 @@ const facts::Datum* formation_of(const LedgerRow& row, const facts::Compound& co
   return facts != nullptr && facts->formation_enthalpy ? &*facts->formation_enthalpy : nullptr;
 }
 
-void note_rivals(Ledger& ledger, const LedgerRow& row) {
-  const ReactionSpecies& entry = ledger.reaction->species[row.species];
+void note_rivals(Background& background, const LedgerRow& row) {
+  const ReactionSpecies& entry = background.reaction->species[row.species];
   if (entry.species->compound == nullptr) return;
   const facts::Datum* datum = formation_of(row, *entry.species->compound);
   if (datum == nullptr) return;
@@ -35,23 +35,25 @@ void note_rivals(Ledger& ledger, const LedgerRow& row) {
   }
   if (others.empty()) return;
   if (datum->typed) {
-    ledger.notes.push_back(display_species(entry) + ", ΔfH as " + std::string(thermo::phase_word(row.phase)) +
-                           ": " + display_number(datum->value / 1000, 2) +
-                           (datum->u95 > 0 ? " ± " + display_number(datum->u95 / 1000, 2) : std::string()) +
-                           " kJ/mol (" + std::string(datum->source) + "), typed in place of " + others + ".");
+    background.table_notes.push_back(
+        display_species(entry) + ", ΔfH as " + std::string(thermo::phase_word(row.phase)) + ": " +
+        display_number(datum->value / 1000, 2) +
+        (datum->u95 > 0 ? " ± " + display_number(datum->u95 / 1000, 2) : std::string()) + " kJ/mol (" +
+        std::string(datum->source) + "), typed in place of " + others + ".");
     return;
   }
   std::string why(datum->why_taken);
   if (!why.empty() && why.back() != '.') why += '.';
-  ledger.notes.push_back("Tables part on ΔfH of " + display_species(entry) + ": " +
-                         display_number(datum->value / 1000, 1) + " kJ/mol (" + std::string(datum->source) +
-                         ") is taken, not " + others + "." + (why.empty() ? "" : " " + why));
+  background.table_notes.push_back("Tables part on ΔfH of " + display_species(entry) + ": " +
+                                   display_number(datum->value / 1000, 1) + " kJ/mol (" +
+                                   std::string(datum->source) + ") is taken, not " + others + "." +
+                                   (why.empty() ? "" : " " + why));
 }
 
 /// Solutions of a stated strength among the reactants, each with a solute of its own.
-std::size_t solutions_mixed(const Ledger& ledger) {
+std::size_t solutions_mixed(const Background& background) {
   std::size_t count = 0;
-  for (const ReactionSpecies& entry : ledger.reaction->species) {
+  for (const ReactionSpecies& entry : background.reaction->species) {
     const bool strong =
         entry.term.strength && entry.term.strength->kind != molecule::Strength::Kind::InfiniteDilution;
     count += !entry.product && strong ? 1 : 0;
@@ -61,17 +63,16 @@ std::size_t solutions_mixed(const Ledger& ledger) {
 
 }  // namespace
 
-void note_tables(Ledger& ledger) {
-  const Route* formation = find_route(ledger, kFormationRoute);
-  if (formation == nullptr || !formation->as_written) return;
-  for (const LedgerRow& row : ledger.rows) {
-    note_rivals(ledger, row);
+void note_tables(Background& background) {
+  if (!background.formation.as_written) return;
+  for (const LedgerRow& row : background.rows) {
+    note_rivals(background, row);
     if (std::optional<std::string> caution =
-            thermo::crowded_chain_caution(*ledger.reaction->species[row.species].species))
-      ledger.cautions.push_back(*std::move(caution));
+            thermo::crowded_chain_caution(*background.reaction->species[row.species].species))
+      background.table_cautions.push_back(*std::move(caution));
   }
-  if (solutions_mixed(ledger) > 1) {
-    ledger.cautions.push_back(
+  if (solutions_mixed(background) > 1) {
+    background.table_cautions.push_back(
         "Solutions of stated strength are mixed here. Every heat of solution is that of one solute in its "
         "own "
         "water; the heat of mixing the concentrated liquids is no line of this ledger, so the heat given off "

@@ -2,7 +2,7 @@
 // it.
 #pragma once
 
-#include "core/balance/ledger.hpp"
+#include "core/balance/background.hpp"
 
 namespace heatledger::balance {
 
@@ -11,6 +11,6 @@ namespace heatledger::balance {
 /// solutions of several solutes meet, whose heat of mixing is in no figure here, and where a repeat unit is
 /// crowded along its chain. Only where the formation
 /// route has a figure.
-void note_tables(Ledger& ledger);
+void note_tables(Background& background);
 
 }  // namespace heatledger::balance

@@ -12,9 +12,9 @@ std::string celsius(double kelvin) {
          " °C";
 }
 
-Correction to_temperature(const Ledger& ledger, std::size_t index, double temperature,
+Correction to_temperature(const Background& background, std::size_t index, double temperature,
                           std::vector<std::string>& cautions) {
-  const ReactionSpecies& entry = ledger.reaction->species[index];
+  const ReactionSpecies& entry = background.reaction->species[index];
   Correction correction;
   correction.species = index;
   correction.times = entry.coefficient();
@@ -22,7 +22,7 @@ Correction to_temperature(const Ledger& ledger, std::size_t index, double temper
                                                             : ", " + celsius(temperature) + " to 25 °C");
   if (correction.times != 1) correction.what += ", " + times_text(correction.times) + " ×";
   const Result<thermo::Sourced> change =
-      thermo::enthalpy_increment(*entry.species, ledger.rows[index].phase, temperature);
+      thermo::enthalpy_increment(*entry.species, background.figures[index].phase, temperature);
   if (!change.ok()) {
     correction.why_not = change.error().message;
     return correction;
@@ -36,27 +36,40 @@ Correction to_temperature(const Ledger& ledger, std::size_t index, double temper
 
 }  // namespace
 
-void run_at_temperatures(Ledger& ledger, const LedgerOptions& options) {
+void bring_to_temperatures(Background& background) {
+  for (std::size_t i = 0; i < background.figures.size(); ++i) {
+    const ReactionSpecies& entry = background.reaction->species[i];
+    const std::optional<double>& at = entry.product ? background.products_at : background.reactants_at;
+    if (!at || *at == units::kReferenceTemperature) continue;
+    Correction correction = to_temperature(background, i, *at, background.temperature_cautions);
+    if (!correction.value)
+      background.temperature_notes.push_back("Not corrected to temperature: " + correction.why_not);
+    background.to_temperature.push_back(std::move(correction));
+    const std::optional<molecule::Strength>& strength = entry.term.strength;
+    if (strength && strength->kind != molecule::Strength::Kind::InfiniteDilution)
+      background.temperature_cautions.push_back(
+          display_species(entry) +
+          ": the water of this solution is not in the correction to temperature; its "
+          "warming or cooling is a stream of a step.");
+  }
+}
+
+void run_at_temperatures(Ledger& ledger) {
+  const Background& background = *ledger.background;
   const Route* taken = find_route(ledger, ledger.taken);
   if (taken != nullptr) ledger.as_run = taken->as_written;
-  for (std::size_t i = 0; i < ledger.rows.size(); ++i) {
-    const std::optional<double>& at =
-        ledger.reaction->species[i].product ? options.products_at : options.reactants_at;
-    if (!at || *at == units::kReferenceTemperature) continue;
-    Correction correction = to_temperature(ledger, i, *at, ledger.cautions);
+  ledger.to_temperature = background.to_temperature;
+  for (const Correction& correction : ledger.to_temperature) {
     if (!correction.value) {
       ledger.as_run.reset();
-      ledger.notes.push_back("Not corrected to temperature: " + correction.why_not);
     } else if (ledger.as_run) {
       ledger.as_run->add(*correction.value);
     }
-    ledger.to_temperature.push_back(std::move(correction));
-    const std::optional<molecule::Strength>& strength = ledger.reaction->species[i].term.strength;
-    if (strength && strength->kind != molecule::Strength::Kind::InfiniteDilution)
-      ledger.cautions.push_back(display_species(ledger.reaction->species[i]) +
-                                ": the water of this solution is not in the correction to temperature; its "
-                                "warming or cooling is a stream of a step.");
   }
+  ledger.notes.insert(ledger.notes.end(), background.temperature_notes.begin(),
+                      background.temperature_notes.end());
+  ledger.cautions.insert(ledger.cautions.end(), background.temperature_cautions.begin(),
+                         background.temperature_cautions.end());
 }
 
 void note_pressure(Ledger& ledger, double pressure) {

@@ -1,5 +1,6 @@
 #include "core/document/computation.hpp"
 
+#include <list>
 #include <map>
 #include <tuple>
 #include <utility>
@@ -25,8 +26,9 @@ struct LedgerKey {
   const NamedQuantities* quantities = nullptr;
 
   friend bool operator<(const LedgerKey& a, const LedgerKey& b) {
-    return std::tie(a.texts, a.typed_bonds, a.library, a.observations, a.quantities) <
-           std::tie(b.texts, b.typed_bonds, b.library, b.observations, b.quantities);
+    // Identities first: they tell nearly all keys apart without a look at the texts.
+    return std::tie(a.typed_bonds, a.library, a.observations, a.quantities, a.texts) <
+           std::tie(b.typed_bonds, b.library, b.observations, b.quantities, b.texts);
   }
 };
 
@@ -50,7 +52,34 @@ struct Remembered {
   std::shared_ptr<const ReactionResult> result;
   std::shared_ptr<const void> typed_bonds, observations,
       quantities;  ///< keep the identities in the key from being used again
-  std::size_t last_used = 0;
+  std::list<const LedgerKey*>::iterator used;
+};
+
+/// Results by their inputs; those not used for longest are let go, a few with each edit.
+class Remembrance {
+ public:
+  /// The entry of a key, from now on the one used last; without a result when it is new.
+  Remembered& at(LedgerKey key) {
+    const auto found = entries_.try_emplace(std::move(key));
+    Remembered& entry = found.first->second;
+    if (found.second) {
+      entry.used = by_use_.insert(by_use_.begin(), &found.first->first);
+    } else {
+      by_use_.splice(by_use_.begin(), by_use_, entry.used);
+    }
+    return entry;
+  }
+
+  void keep_at_most(std::size_t count) {
+    while (by_use_.size() > count) {
+      entries_.erase(entries_.find(*by_use_.back()));
+      by_use_.pop_back();
+    }
+  }
+
+ private:
+  std::map<LedgerKey, Remembered> entries_;
+  std::list<const LedgerKey*> by_use_;  ///< latest first
 };
 
 using SetResult = Result<std::shared_ptr<const estimate::BondSet>>;
@@ -68,7 +97,8 @@ SetResult build_set(const std::string& id, const ReadBonds& overlay) {
 struct Calculator::Memory {
   StepCalculator steps;
   std::map<std::string, Result<std::shared_ptr<const balance::Reaction>>> equations;
-  std::map<LedgerKey, Remembered> ledgers;
+  Remembrance ledgers;
+  std::map<std::string, std::shared_ptr<const balance::Background>> backgrounds;  ///< latest, by reaction id
   std::map<std::string, std::shared_ptr<const estimate::Measurement>> measurements;  ///< null: says nothing
   ObservationStore observations;
   std::shared_ptr<const TypedBonds> overlay_of;  ///< what `overlay` and `sets` were made from
@@ -79,7 +109,6 @@ struct Calculator::Memory {
   std::shared_ptr<const NamedQuantities> quantities_of;  ///< what `quantities` was read from
   std::shared_ptr<const ReadQuantities> quantities;
   std::map<std::string, SetResult> sets;
-  std::size_t clock = 0;
 
   const Result<std::shared_ptr<const balance::Reaction>>& equation(const std::string& text) {
     const auto found = equations.find(text);
@@ -165,6 +194,8 @@ struct Calculator::Memory {
     options.context = balance::ContextUse::Always;
     options.context_rows = sheet.bond_set == kContextSet;
     options.observations = observed;
+    std::shared_ptr<const balance::Background>& background = backgrounds[sheet.id];
+    options.background = background;
     const SetResult* chosen = &set(options.context_rows ? std::string() : sheet.bond_set);
     if (!*chosen) {
       result.option_errors.push_back(chosen->error());
@@ -202,17 +233,9 @@ struct Calculator::Memory {
       }
       return result;
     }
+    background = ledger->background;
     result.ledger = std::make_shared<const balance::Ledger>(std::move(ledger).value());
     return result;
-  }
-
-  /// Forgets the results that were not used for longest, half of them at a time so that this is rare.
-  void forget_old(std::size_t in_use) {
-    if (ledgers.size() <= in_use + kSpareResults) return;
-    const std::size_t oldest_kept = clock > kSpareResults / 2 ? clock - kSpareResults / 2 : 0;
-    for (auto entry = ledgers.begin(); entry != ledgers.end();) {
-      entry = entry->second.last_used < oldest_kept ? ledgers.erase(entry) : std::next(entry);
-    }
   }
 };
 
@@ -223,7 +246,6 @@ Calculator& Calculator::operator=(Calculator&&) noexcept = default;
 
 Results Calculator::compute(const Worksheet& sheet) {
   Memory& memory = *memory_;
-  ++memory.clock;
   memory.take_over(sheet);
   const std::shared_ptr<const estimate::Observations> observed = memory.observe(sheet);
   Results results;
@@ -244,20 +266,20 @@ Results Calculator::compute(const Worksheet& sheet) {
     const Shared<ReactionSheet>& reaction = sheet.reactions[i];
     LedgerKey key{texts_of(*reaction), memory.overlay_of.get(), memory.library.get(), observed.get(),
                   memory.quantities_of.get()};
-    Remembered& entry = memory.ledgers[std::move(key)];
+    Remembered& entry = memory.ledgers.at(std::move(key));
     if (entry.result == nullptr) {
       entry.result = std::make_shared<const ReactionResult>(memory.compute(*reaction, observed));
       entry.typed_bonds = memory.overlay_of;
       entry.observations = observed;
       entry.quantities = memory.quantities_of;
     }
-    entry.last_used = memory.clock;
     if (!reaction->measured.value.empty() &&
         read_conditions(*reaction, memory.quantities->names).measured_exact)
       results.exact.push_back("reactions[" + std::to_string(i) + "].measured.value");
     results.reactions.push_back(entry.result);
   }
-  memory.forget_old(sheet.reactions.size());
+  memory.ledgers.keep_at_most(sheet.reactions.size() + kSpareResults);
+  if (memory.backgrounds.size() > sheet.reactions.size() + kSpareResults) memory.backgrounds.clear();
   std::map<std::string, std::shared_ptr<const balance::Ledger>> ledgers;
   for (std::size_t i = 0; i < sheet.reactions.size() && !sheet.steps.empty(); ++i) {
     if (results.reactions[i]->ledger != nullptr)
