@@ -94,15 +94,11 @@ DrawnFigure summary(std::vector<double>& values, std::size_t draws) {
 
 }  // namespace
 
-std::vector<std::optional<DrawnFigure>> draw_figures(const Model& model, const std::vector<FigureId>& ids,
-                                                     const std::vector<double>& nominal,
-                                                     const DrawOptions& options) {
+void for_each_draw(const Model& model, const std::vector<double>& nominal, const DrawOptions& options,
+                   const std::function<void(const std::vector<double>& v, Work& work)>& each) {
   const std::vector<Block> drawn_together = blocks(model);
   Random random(options.seed);
-  std::vector<std::vector<double>> values(ids.size());
-  for (std::vector<double>& list : values) list.reserve(options.draws);
   std::vector<double> v = nominal, z;
-  std::vector<std::optional<double>> figures;
   Work work;
   const double slope = slope_at(model, nominal);
   for (std::size_t draw = 0; draw < options.draws; ++draw) {
@@ -110,7 +106,7 @@ std::vector<std::optional<DrawnFigure>> draw_figures(const Model& model, const s
     for (const Block& block : drawn_together) {
       const std::size_t n = block.slots.size();
       z.resize(n);
-      for (double& each : z) each = random.normal();
+      for (double& one : z) one = random.normal();
       for (std::size_t i = 0; i < n; ++i) {
         double off = 0;
         for (std::size_t j = 0; j <= i; ++j) off += block.root[i * n + j] * z[j];
@@ -120,12 +116,22 @@ std::vector<std::optional<DrawnFigure>> draw_figures(const Model& model, const s
         if (slot.blank) at = std::min(slot.high, std::max(slot.low, at));
       }
     }
-    if (!solve_near(model, v, work, slope)) continue;
+    if (solve_near(model, v, work, slope)) each(v, work);
+  }
+}
+
+std::vector<std::optional<DrawnFigure>> draw_figures(const Model& model, const std::vector<FigureId>& ids,
+                                                     const std::vector<double>& nominal,
+                                                     const DrawOptions& options) {
+  std::vector<std::vector<double>> values(ids.size());
+  for (std::vector<double>& list : values) list.reserve(options.draws);
+  std::vector<std::optional<double>> figures;
+  for_each_draw(model, nominal, options, [&](const std::vector<double>& v, Work& work) {
     compute_figures(model, ids, v, work, figures);
     for (std::size_t i = 0; i < ids.size(); ++i) {
       if (figures[i]) values[i].push_back(*figures[i]);
     }
-  }
+  });
   std::vector<std::optional<DrawnFigure>> result(ids.size());
   for (std::size_t i = 0; i < ids.size(); ++i) {
     // Below a tenth of the draws there is no distribution to speak of.

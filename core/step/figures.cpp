@@ -10,11 +10,6 @@
 namespace heatledger::step {
 namespace {
 
-std::optional<double> at_slot(const Model& model, const std::vector<double>& v, const char* id) {
-  const std::optional<std::size_t> slot = model.slot(id);
-  return slot ? std::optional<double>(v[*slot]) : std::nullopt;
-}
-
 double heat_set_free(const Model& model, const std::vector<double>& v, const Work& work, double temperature) {
   double heat = 0;
   for (std::size_t j = 0; j < work.extents.size(); ++j)
@@ -57,42 +52,13 @@ std::optional<double> adiabatic_end(const Model& model, const std::vector<double
   return std::nullopt;
 }
 
-/// Ideal mixture of the liquids that are there at the end: Σ x p° = p.
-std::optional<double> boiling_point(const Model& model, const std::vector<double>& v, const Work& work) {
-  double liquid = 0, hottest = 0;
-  for (std::size_t i = 0; i < work.leaving.size(); ++i) {
-    if (model.is_liquid(i)) liquid += work.leaving[i];
-  }
-  const double pressure = v[*model.slot("outlet.pressure")];
-  const auto excess = [&](double temperature) {
-    double sum = 0;
-    for (std::size_t i = 0; i < work.leaving.size(); ++i) {
-      if (model.is_liquid(i)) sum += work.leaving[i] / liquid * model.vapour_pressure(v, i, temperature);
-    }
-    return sum > 0 ? std::log(sum / pressure) : -1e3;
-  };
-  if (!(liquid > 0)) return std::nullopt;
-  // ln p is close to a straight line in 1/T; secants in that scale settle in a few turns.
-  double a = 1 / 350.0, fa = excess(350), b = 1 / 360.0, fb = excess(360);
-  for (int turn = 0; turn < 60; ++turn) {
-    if (std::fabs(fb) < 1e-13) break;
-    if (fb == fa) return std::nullopt;
-    const double next = std::min(1 / 100.0, std::max(1 / 2000.0, b - fb * (b - a) / (fb - fa)));
-    if (next == b) break;
-    a = b, fa = fb;
-    b = next, fb = excess(1 / b);
-  }
-  hottest = 1 / b;
-  return std::fabs(fb) < 1e-9 ? std::optional<double>(hottest) : std::nullopt;
-}
-
 /// UA = heat / mean temperature difference. A cooler or heater without reaction: log mean of the two ends in
 /// counter-flow. With reaction: well mixed at the outlet temperature, log mean over the medium's way.
 std::optional<double> conductance(const Model& model, const std::vector<double>& v, double heat) {
-  const Surface& surface = model.input().surface;
+  const Model::Side& side = model.side();
   const double process = v[model.outlet_temperature_slot()];
-  const double in = surface.medium_in ? surface.medium_in->value : surface.medium_out->value;
-  const double out = surface.medium_out ? surface.medium_out->value : in;
+  const double in = v[side.medium_in ? *side.medium_in : *side.medium_out];
+  const double out = side.medium_out ? v[*side.medium_out] : in;
   const bool along = model.input().kind == StepKind::ThroughFlow && model.input().reactions.empty();
   const double one = in - process, two = out - (along ? v[model.feed_temperature_slot(0)] : process);
   if (one * two <= 0 || heat / one <= 0) return std::nullopt;  // the medium cannot take or give this heat
@@ -137,9 +103,38 @@ std::vector<FigureId> all_figures(const Model& model) {
 
 }  // namespace
 
+double vapour_over_mixture(const Model& model, const std::vector<double>& v, const Work& work,
+                           double temperature) {
+  double liquid = 0, sum = 0;
+  for (std::size_t i = 0; i < work.leaving.size(); ++i) {
+    if (!model.is_liquid(i) || work.leaving[i] == 0) continue;
+    liquid += work.leaving[i];
+    sum += work.leaving[i] * model.vapour_pressure(v, i, temperature);
+  }
+  return liquid > 0 ? sum / liquid : 0;
+}
+
+std::optional<double> mixture_boiling_point(const Model& model, const std::vector<double>& v,
+                                            const Work& work, double pressure) {
+  const auto excess = [&](double temperature) {
+    const double sum = vapour_over_mixture(model, v, work, temperature);
+    return sum > 0 ? std::log(sum / pressure) : -1e3;
+  };
+  // ln p is close to a straight line in 1/T; secants in that scale settle in a few turns.
+  double a = 1 / 350.0, fa = excess(350), b = 1 / 360.0, fb = excess(360);
+  for (int turn = 0; turn < 60; ++turn) {
+    if (std::fabs(fb) < 1e-13) break;
+    if (fb == fa) return std::nullopt;
+    const double next = std::min(1 / 100.0, std::max(1 / 2000.0, b - fb * (b - a) / (fb - fa)));
+    if (next == b) break;
+    a = b, fa = fb;
+    b = next, fb = excess(1 / b);
+  }
+  return std::fabs(fb) < 1e-9 ? std::optional<double>(1 / b) : std::nullopt;
+}
+
 double process_temperature(const Model& model, const std::vector<double>& v) {
-  const Blank& typed = model.input().charge.process_temperature;
-  if (typed) return typed->value;
+  if (const std::optional<std::size_t>& typed = model.side().process_temperature) return v[*typed];
   if (model.input().outlet.temperature && !model.outlet_sought()) return v[model.outlet_temperature_slot()];
   return v[model.feed_temperature_slot(0)];
 }
@@ -176,9 +171,10 @@ std::vector<FigureId> figures_of(const Model& model) {
 void compute_figures(const Model& model, const std::vector<FigureId>& ids, const std::vector<double>& v,
                      Work& work, std::vector<std::optional<double>>& out) {
   const bool charge = model.input().kind == StepKind::Charge;
+  const Model::Side& side = model.side();
   const double held = charge ? process_temperature(model, v) : units::kReferenceTemperature;
   const double free = heat_set_free(model, v, work, held);
-  const double vessel = at_slot(model, v, "vessel.heat_capacity").value_or(0);
+  const double vessel = side.vessel ? v[*side.vessel] : 0;
   const double capacity = charge ? charge_heat_capacity(model, work, v, held) : 0;
   std::optional<double> boiling;
   out.assign(ids.size(), std::nullopt);
@@ -194,16 +190,16 @@ void compute_figures(const Model& model, const std::vector<FigureId>& ids, const
         if (const double mass = mass_fed(model, work); mass > 0) out[i] = free / mass;
         break;
       case FigureId::Conductance:
-        out[i] = conductance(model, v, charge ? -free / model.input().time->value : v[model.duty_slot()]);
+        out[i] = conductance(model, v, charge ? -free / v[*side.time] : v[model.duty_slot()]);
         break;
       case FigureId::Time:
-        if (free > 0) out[i] = free / model.input().charge.cooling->value;
+        if (free > 0) out[i] = free / v[*side.cooling];
         break;
       case FigureId::MeanDuty:
-        out[i] = free / model.input().time->value;
+        out[i] = free / v[*side.time];
         break;
       case FigureId::PeakDuty:
-        out[i] = free * model.input().charge.rate_constant->value;
+        out[i] = free * v[*side.rate_constant];
         break;
       case FigureId::AdiabaticRise:
         if (capacity > 0) out[i] = free / capacity;
@@ -221,7 +217,7 @@ void compute_figures(const Model& model, const std::vector<FigureId>& ids, const
         if (capacity > 0) out[i] = 1 + vessel / capacity;
         break;
       case FigureId::BoilingPoint:
-        out[i] = boiling = boiling_point(model, v, work);
+        out[i] = boiling = mixture_boiling_point(model, v, work, v[*model.slot("outlet.pressure")]);
         break;
       case FigureId::BoiledOff:
         if (boiling) {

@@ -35,6 +35,14 @@ std::vector<FigureId> figures_of(const Model& model);
 void compute_figures(const Model& model, const std::vector<FigureId>& ids, const std::vector<double>& v,
                      Work& work, std::vector<std::optional<double>>& out);
 
+/// Σ x p° over the ideal mixture of the liquids that leave [Pa]; 0 where none has a vapour pressure. Only in
+/// a charge.
+double vapour_over_mixture(const Model& model, const std::vector<double>& v, const Work& work,
+                           double temperature);
+/// Where that is a pressure [K]; empty when nothing boils.
+std::optional<double> mixture_boiling_point(const Model& model, const std::vector<double>& v,
+                                            const Work& work, double pressure);
+
 /// Temperature at which the charge is held [K].
 double process_temperature(const Model& model, const std::vector<double>& v);
 /// m cp of all that is charged, at a temperature [J/K].

@@ -90,6 +90,12 @@ class Model {
   std::size_t leaving_state(std::size_t substance) const { return leaving_[substance].state; }
   std::optional<std::size_t> vapour_state(std::size_t substance) const { return leaving_[substance].vapour; }
   std::size_t reference_state(std::size_t substance) const { return reference_[substance]; }
+  /// Numbers beside the balance, where they are typed.
+  struct Side {
+    std::optional<std::size_t> process_temperature, time, cooling, rate_constant, medium_in, medium_out,
+        vessel;
+  };
+  const Side& side() const { return side_; }
   const std::vector<std::string>& cautions() const { return cautions_; }
 
   /// Amounts from the numbers.
@@ -111,7 +117,7 @@ class Model {
   double reaction_heat_at(const std::vector<double>& v, std::size_t reaction, double temperature) const;
   /// [J/(mol K)]; the error of the heat capacity moves it as far as it moves the increment.
   double heat_capacity(const std::vector<double>& v, std::size_t state, double temperature) const;
-  /// Of the pure liquid [Pa]; 0 for what is taken not to evaporate. Only where a solvent is named.
+  /// Of the pure liquid [Pa]; 0 for what is taken not to evaporate. Only in a charge.
   double vapour_pressure(const std::vector<double>& v, std::size_t substance, double temperature) const;
   /// Leaves as liquid (or dissolved) when it is not vapour.
   bool is_liquid(std::size_t substance) const;
@@ -172,6 +178,7 @@ class Model {
   std::vector<std::string> cautions_;
   std::size_t sought_ = 0, duty_ = 0, loss_ = 0, shaft_ = 0, outlet_temperature_ = 0;
   std::optional<std::size_t> outlet_pressure_, vessel_, vessel_temperature_, departure_, departure_share_;
+  Side side_;
   bool splits_ = false, saturates_ = false;
 };
 

@@ -534,16 +534,19 @@ class ModelBuilder {
   /// Under reflux the liquids of the charge boil together; what has no vapour pressure is taken not to
   /// evaporate.
   Status reflux() {
-    if (!input().charge.solvent) return success();
-    const std::size_t solvent = *input().charge.solvent;
-    const Result<std::size_t> vapour = state_of(solvent, State{Phase::Gas, {}}, "charge.solvent");
-    if (!vapour.ok()) return vapour.error();
-    model_.leaving_[solvent].vapour = *vapour;
-    if (const Status known = saturation(solvent); !known.ok()) return known;
+    if (input().kind != StepKind::Charge) return success();
+    const bool boils = input().charge.solvent.has_value();
+    if (boils) {
+      const std::size_t solvent = *input().charge.solvent;
+      const Result<std::size_t> vapour = state_of(solvent, State{Phase::Gas, {}}, "charge.solvent");
+      if (!vapour.ok()) return vapour.error();
+      model_.leaving_[solvent].vapour = *vapour;
+      if (const Status known = saturation(solvent); !known.ok()) return known;
+    }
     for (std::size_t i = 0; i < model_.leaving_.size(); ++i) {
       const SubstanceInput& substance = input().substances[i];
       if (!model_.is_liquid(i) || (substance.species == nullptr && !substance.vapour_pressure)) continue;
-      if (!saturation(i).ok()) {
+      if (!saturation(i).ok() && boils) {
         model_.cautions_.push_back(substance.name +
                                    " has no vapour pressure here and is taken not to evaporate.");
       }
@@ -577,13 +580,14 @@ class ModelBuilder {
       if (!slot.ok()) return slot.error();
       model_.departure_share_ = *slot;
     }
+    if (const Status done = side(); !done.ok()) return done;
     const Vessel& vessel = input().vessel;
     if (vessel.heat_capacity || sought_ == "vessel.heat_capacity") {
       const Result<std::size_t> capacity =
           blank("vessel.heat_capacity", "heat capacity of the vessel", units::dimension::kHeatCapacity,
                 vessel.heat_capacity, 0, kFar);
       if (!capacity.ok()) return capacity.error();
-      model_.vessel_ = *capacity;
+      model_.vessel_ = model_.side_.vessel = *capacity;
       if (vessel.temperature || sought_ == "vessel.temperature") {
         const Result<std::size_t> start =
             blank("vessel.temperature", "temperature of the vessel at the start",
@@ -593,6 +597,37 @@ class ModelBuilder {
       } else {
         model_.vessel_temperature_ = model_.feeds_.front().temperature;
       }
+    }
+    return success();
+  }
+
+  /// Typed numbers that stand beside the balance: they move figures, never the balance itself.
+  Status side() {
+    const StepInput& in = input();
+    Model::Side& at = model_.side_;
+    const struct {
+      const char *id, *label;
+      const units::Dimension& dimension;
+      const Blank& typed;
+      double low, high;
+      std::optional<std::size_t>& slot;
+    } numbers[] = {
+        {"process_temperature", "process temperature", units::dimension::kTemperature,
+         in.charge.process_temperature, kColdest, kHottest, at.process_temperature},
+        {"time", "time over which it reacts", units::dimension::kTime, in.time, 0, kFar, at.time},
+        {"cooling", "cooling capacity", units::dimension::kPower, in.charge.cooling, 0, kFar, at.cooling},
+        {"rate_constant", "first-order rate constant", units::dimension::kRate, in.charge.rate_constant, 0,
+         kFar, at.rate_constant},
+        {"medium_in", "temperature of the medium, in", units::dimension::kTemperature, in.surface.medium_in,
+         kColdest, kHottest, at.medium_in},
+        {"medium_out", "temperature of the medium, out", units::dimension::kTemperature,
+         in.surface.medium_out, kColdest, kHottest, at.medium_out}};
+    for (const auto& number : numbers) {
+      if (!number.typed) continue;
+      const Result<std::size_t> slot =
+          blank(number.id, number.label, number.dimension, number.typed, number.low, number.high);
+      if (!slot.ok()) return slot.error();
+      number.slot = *slot;
     }
     return success();
   }

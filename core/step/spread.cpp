@@ -23,8 +23,8 @@ struct Point {
 
 class Gradient {
  public:
-  Gradient(const Model& model, const std::vector<FigureId>& ids, const std::vector<double>& v)
-      : model_(model), ids_(ids), v_(v) {}
+  Gradient(const Model& model, const Numbers& numbers, const std::vector<double>& v)
+      : model_(model), numbers_(numbers), v_(v) {}
 
   Point at(std::size_t slot, double value) {
     const double kept = v_[slot];
@@ -32,7 +32,7 @@ class Gradient {
     Point point;
     if (model_.evaluate(v_, work_) == Trouble::None) {
       point.missing = work_.needed - v_[model_.duty_slot()];
-      compute_figures(model_, ids_, v_, work_, point.figures);
+      numbers_(v_, work_, point.figures);
     }
     v_[slot] = kept;
     return point;
@@ -40,7 +40,7 @@ class Gradient {
 
  private:
   const Model& model_;
-  const std::vector<FigureId>& ids_;
+  const Numbers& numbers_;
   std::vector<double> v_;
   Work work_;
 };
@@ -79,7 +79,17 @@ Slopes slopes(Gradient& gradient, const Point& base, std::size_t slot, double va
 
 std::vector<std::optional<FigureSpread>> first_order(const Model& model, const std::vector<FigureId>& ids,
                                                      const std::vector<double>& v) {
-  Gradient gradient(model, ids, v);
+  return first_order_of(
+      model,
+      [&](const std::vector<double>& at, Work& work, Values& out) {
+        compute_figures(model, ids, at, work, out);
+      },
+      v);
+}
+
+std::vector<std::optional<FigureSpread>> first_order_of(const Model& model, const Numbers& numbers,
+                                                        const std::vector<double>& v) {
+  Gradient gradient(model, numbers, v);
   const std::size_t sought = model.sought();
   const Point base = gradient.at(sought, v[sought]);
   CHECK(base.missing.has_value(), "the step is solved before its ± is asked");
@@ -90,7 +100,8 @@ std::vector<std::optional<FigureSpread>> first_order(const Model& model, const s
     std::size_t slot;
     double slope;
   };
-  std::vector<std::vector<Contribution>> found(ids.size());
+  const std::size_t count = base.figures.size();
+  std::vector<std::vector<Contribution>> found(count);
   for (std::size_t s = 0; s < model.slots().size(); ++s) {
     const Slot& slot = model.slots()[s];
     const double u95 = slot.spread.u95();
@@ -100,7 +111,7 @@ std::vector<std::optional<FigureSpread>> first_order(const Model& model, const s
     if (!by_slot.known) continue;
     const double follows =
         by_sought.known && by_sought.missing != 0 ? -by_slot.missing / by_sought.missing : 0;
-    for (std::size_t i = 0; i < ids.size(); ++i) {
+    for (std::size_t i = 0; i < count; ++i) {
       if (!by_slot.figures[i]) continue;
       const double along = by_sought.known && by_sought.figures[i] ? *by_sought.figures[i] * follows : 0;
       const double slope = *by_slot.figures[i] + along;
@@ -108,8 +119,8 @@ std::vector<std::optional<FigureSpread>> first_order(const Model& model, const s
     }
   }
 
-  std::vector<std::optional<FigureSpread>> result(ids.size());
-  for (std::size_t i = 0; i < ids.size(); ++i) {
+  std::vector<std::optional<FigureSpread>> result(count);
+  for (std::size_t i = 0; i < count; ++i) {
     if (!base.figures[i]) continue;
     std::vector<Part> parts;
     for (const Contribution& c : found[i]) {
@@ -132,67 +143,15 @@ std::vector<std::optional<FigureSpread>> first_order(const Model& model, const s
   return result;
 }
 
-LeavingSpread leaving_spread(const Model& model, const std::vector<double>& nominal) {
-  std::vector<double> v = nominal;
-  Work work;
-  const std::size_t sought = model.sought();
-  const auto at = [&](std::size_t slot, double value) {
-    const double kept = v[slot];
-    v[slot] = value;
-    const bool exists = model.evaluate(v, work) == Trouble::None;
-    v[slot] = kept;
-    return exists;
+LeavingSpread leaving_spread(const Model& model, const std::vector<double>& v) {
+  const auto amounts = [](const std::vector<double>&, Work& work, Values& out) {
+    out.assign(work.leaving.begin(), work.leaving.end());
+    out.insert(out.end(), work.vapour.begin(), work.vapour.end());
   };
-  struct Side {
-    std::vector<double> total, vapour;
-    double missing = 0;
-  };
-  /// Slopes by one number, one-sided at the edge of what can be; empty where neither side exists.
-  const auto slopes = [&](std::size_t slot, double step) -> std::optional<Side> {
-    std::optional<Side> sides[2];
-    double width = 0;
-    for (int s = 0; s < 2; ++s) {
-      const bool exists = at(slot, v[slot] + (s == 0 ? step : -step));
-      width += exists ? step : 0;
-      if (!exists && !at(slot, v[slot])) return std::nullopt;
-      sides[s] = Side{work.leaving, work.vapour, work.needed - v[model.duty_slot()]};
-    }
-    if (width == 0) return std::nullopt;
-    Side slope = *sides[0];
-    for (std::size_t i = 0; i < slope.total.size(); ++i)
-      slope.total[i] = (slope.total[i] - sides[1]->total[i]) / width;
-    for (std::size_t i = 0; i < slope.vapour.size(); ++i)
-      slope.vapour[i] = (slope.vapour[i] - sides[1]->vapour[i]) / width;
-    slope.missing = (slope.missing - sides[1]->missing) / width;
-    return slope;
-  };
-  CHECK(at(sought, v[sought]), "the step is solved before its ± is asked");
-  const std::vector<double> total = work.leaving, vapour = work.vapour;
-  std::vector<std::vector<Part>> total_parts(total.size()), vapour_parts(vapour.size());
-  const std::optional<Side> by_sought = slopes(sought, 1e-5 * std::max(std::fabs(v[sought]), 1e-3));
-  for (std::size_t s = 0; s < model.slots().size(); ++s) {
-    const Quantity& spread = model.slots()[s].spread;
-    if (s == sought || !(spread.u95() > 0)) continue;
-    const std::optional<Side> by_slot = slopes(s, 0.01 * spread.u95());
-    if (!by_slot) continue;
-    const double follows = by_sought && by_sought->missing != 0 ? -by_slot->missing / by_sought->missing : 0;
-    const auto add = [&](std::vector<std::vector<Part>>& parts, const std::vector<double>& direct,
-                         const std::vector<double>& along) {
-      for (std::size_t i = 0; i < parts.size(); ++i) {
-        const double slope = direct[i] + (follows != 0 ? along[i] * follows : 0);
-        if (slope == 0) continue;
-        for (const Part& part : spread.parts()) parts[i].push_back({part.source, slope * part.u95});
-      }
-    };
-    static const std::vector<double> none;
-    add(total_parts, by_slot->total, by_sought ? by_sought->total : none);
-    add(vapour_parts, by_slot->vapour, by_sought ? by_sought->vapour : none);
-  }
+  const std::vector<std::optional<FigureSpread>> spreads = first_order_of(model, amounts, v);
   LeavingSpread result;
-  for (std::size_t i = 0; i < total.size(); ++i)
-    result.total.push_back(Quantity(total[i], std::move(total_parts[i])));
-  for (std::size_t i = 0; i < vapour.size(); ++i)
-    result.vapour.push_back(Quantity(vapour[i], std::move(vapour_parts[i])));
+  for (std::size_t i = 0; i < spreads.size(); ++i)
+    (i < spreads.size() / 2 ? result.total : result.vapour).push_back(spreads[i]->value);
   return result;
 }
 

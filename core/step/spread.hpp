@@ -2,6 +2,8 @@
 // bends.
 #pragma once
 
+#include <functional>
+
 #include "core/step/figures.hpp"
 
 namespace heatledger::step {
@@ -24,6 +26,13 @@ struct FigureSpread {
 std::vector<std::optional<FigureSpread>> first_order(const Model& model, const std::vector<FigureId>& ids,
                                                      const std::vector<double>& v);
 
+/// Numbers that follow from a solved step, whatever they are; one that does not exist there stays empty.
+using Numbers =
+    std::function<void(const std::vector<double>& v, Work& work, std::vector<std::optional<double>>& out)>;
+/// The same for any numbers. @param numbers  gives equally many at every call
+std::vector<std::optional<FigureSpread>> first_order_of(const Model& model, const Numbers& numbers,
+                                                        const std::vector<double>& v);
+
 /// Amounts of the substances that leave, with the sources of their ± at the solution.
 struct LeavingSpread {
   std::vector<uncertainty::Quantity> total, vapour;  ///< one for each substance; [mol] or [mol/s]
@@ -44,6 +53,10 @@ struct DrawOptions {
 
 /// Draws every number with a ± from its normal distribution, with the correlations of the data, keeps shares
 /// and conversions within their limits, and solves the step again for each.
+/// Calls `each` for every draw in which the step has a solution.
+void for_each_draw(const Model& model, const std::vector<double>& v, const DrawOptions& options,
+                   const std::function<void(const std::vector<double>& v, Work& work)>& each);
+/// What these draws say of the figures.
 std::vector<std::optional<DrawnFigure>> draw_figures(const Model& model, const std::vector<FigureId>& ids,
                                                      const std::vector<double>& v,
                                                      const DrawOptions& options = {});

@@ -213,6 +213,9 @@ std::vector<std::string> step_conventions(StepKind kind) {
         "Adiabatic rise = heat set free / (m cp): all that is charged, at process temperature, liquid held "
         "liquid, "
         "vessel left out.");
+    list.push_back(
+        "Cooling failure: classes after Stoessel (1993), a tie to the worse class; T_D24 is typed, never "
+        "estimated; under ± the worst class that holds 2.5 % of the draws.");
   }
   return list;
 }

@@ -22,7 +22,8 @@ struct Case {
     double amount;  ///< mol/s, or mole share of `total`
   };
   std::vector<Part> parts;
-  double total = 0;  ///< mol/s with shares; 0: amounts
+  double total = 0;                      ///< mol/s with shares; 0: amounts
+  double volume = 0, pressure = 101325;  ///< m³/s at the inlet in place of `total`, and Pa
   double inlet = 0, outlet = 0, loss = 0;
   struct Going {
     std::string equation, key;
@@ -68,12 +69,16 @@ std::vector<Case> cases(std::mt19937& random) {
                        ProgressKind::Conversion,
                        share(random),
                        ""}};
-  std::vector<Case> all{shift, oxide, sulfur};
+  Case blown = sulfur;  // the same gas measured in cubic metres under pressure
+  std::vector<Case> all{shift, oxide, sulfur, blown};
   for (Case& one : all) {
     one.inlet = warm(random);
     one.outlet = hot(random);
     one.loss = 1000 * amount(random);
   }
+  all[3].pressure = 3e5 + 1e5 * share(random);
+  all[3].volume = 0.5 + share(random);
+  all[3].total = all[3].volume * all[3].pressure / (8.314462618 * all[3].inlet);
   return all;
 }
 
@@ -84,6 +89,11 @@ Writer program(const Case& c) {
   if (c.total > 0) {
     w.input.feeds[0].shares = ShareKind::MoleShare;
     w.input.feeds[0].total = Typed{c.total, 0};
+  }
+  if (c.volume > 0) {
+    w.input.feeds[0].measure = Measure::Volume;
+    w.input.feeds[0].total = Typed{c.volume, 0};
+    w.input.feeds[0].pressure = Typed{c.pressure, 0};
   }
   for (const Case::Going& r : c.reactions) w.reaction(r.equation, r.kind, r.figure, r.key, r.product);
   w.input.outlet.temperature = Typed{c.outlet, 0};
@@ -121,6 +131,9 @@ struct Paper {
       const double grams = 1000 * input.substances[i].species->molar_mass;
       const double weight = is(StepSlip::MoleForMassShare) ? c.parts[p].amount / grams : c.parts[p].amount;
       double amount = c.total > 0 ? c.total * weight / per_share : c.parts[p].amount;
+      if (is(StepSlip::GaugeForAbsolute))
+        amount *= (c.pressure + (which == 0 ? -101325 : 101325)) / c.pressure;
+      if (is(StepSlip::BarForAtmosphere)) amount *= which == 0 ? 100 / 101.325 : 101.325 / 100;
       if (is(StepSlip::OtherCubicMetre)) amount *= which == 0 ? 273.15 / 288.15 : 293.15 / 273.15;
       there[i] = amount;
       fed.push_back(amount);
@@ -258,6 +271,10 @@ constexpr Seed kSeeds[] = {{StepSlip::HeatCapacityLeftOut, 0, -1},
                            {StepSlip::MoleForMassShare, 0, 2},
                            {StepSlip::OtherCubicMetre, 0, -1},
                            {StepSlip::OtherCubicMetre, 1, -1},
+                           {StepSlip::GaugeForAbsolute, 0, 3},
+                           {StepSlip::GaugeForAbsolute, 1, 3},
+                           {StepSlip::BarForAtmosphere, 0, 3},
+                           {StepSlip::BarForAtmosphere, 1, 3},
                            {StepSlip::GrossForNet, 0, 1},
                            {StepSlip::PerHourForPerSecond, 0, -1},
                            {StepSlip::ReactionLeftOut, 0, -1},
