@@ -9,6 +9,7 @@ const std::vector<StepBlank>& step_blanks() {
       {"duty", "duty, heat to the process", "-250 kW", "fc"},
       {"loss", "heat loss", "5 kW", "fcb"},
       {"shaft", "shaft work", "12 kW", "fc"},
+      {"departure", "departure from ideal gas", "-12 kW or -2 %", "fc"},
       {"mass_heat_capacity", "cp of the mass", "2.1 kJ/(kg K)", "fc"},
       {"medium_in", "cooling or heating medium, in", "15 °C", "fc"},
       {"medium_out", "the same, out", "25 °C", "fc"},
@@ -35,6 +36,19 @@ const std::vector<StepBlank>& step_blanks() {
       {"hcl_share", "HCl in the wet flue gas", "800 ppmv", "b"},
       {"combustion_temperature", "combustion temperature of calorific values", "25 °C", "b"},
       {"metering_temperature", "metering temperature", "0 °C", "b"},
+      {"technical_limit", "maximum technical temperature, if typed", "140 °C", "c"},
+      {"permissible_pressure", "permissible pressure, if the vessel is closed", "6 bar", "c"},
+      {"free_volume", "free volume of the vessel", "0.8 m3", "c"},
+      {"free_section", "free section for vapour and gas", "0.03 m2", "c"},
+      {"td24", "T_D24 of the mass", "120 °C", "c"},
+      {"td24_source", "its source and the mass tested", "adiabatic calorimetry, 40 g, 2025", "c"},
+      {"time_to_maximum", "time to maximum rate at the highest temperature", "12 h", "c"},
+      {"medium", "what the medium is", "cooling water", "fc"},
+      {"medium_heat_capacity", "heat capacity of the medium", "2.9 kJ/(kg K)", "fc"},
+      {"steam_pressure", "pressure of condensing steam", "3 bar", "fc"},
+      {"coolant", "coolant that evaporates", "ammonia", "fc"},
+      {"coolant_pressure", "its pressure", "2 bar", "fc"},
+      {"heat_transfer_coefficient", "U, fouling included", "350 W/(m2 K)", "fc"},
   };
   return all;
 }

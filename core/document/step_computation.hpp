@@ -27,6 +27,7 @@ struct StepOutcome {
   std::vector<std::string> notes;
   std::shared_ptr<const void> library;  ///< that its species point into
   std::vector<CurvePoint> curve;  ///< answer against StepSheet::curve; empty when not asked or not possible
+  std::shared_ptr<const step::StepResult> own;  ///< the same method with the data of the sheet under review
   std::shared_ptr<const step::StepReview> review;  ///< of the checker's column; null: not shown
   std::string curve_label;
   units::Dimension curve_dimension;

@@ -5,6 +5,7 @@
 #include <optional>
 
 #include "core/base/number_text.hpp"
+#include "core/document/air_row.hpp"
 #include "core/units/quantity_text.hpp"
 
 namespace heatledger::document {
@@ -31,6 +32,13 @@ std::string per_cent_of_both(const std::string& text) {
   return "(" + t.substr(0, t.size() - 1) + ") %";
 }
 
+/// FNV-1a: names the error of a typed figure.
+std::uint64_t text_key(const std::string& text) {
+  std::uint64_t key = 14695981039346656037ULL;
+  for (const char c : text) key = (key ^ static_cast<unsigned char>(c)) * 1099511628211ULL;
+  return key;
+}
+
 bool begins(const std::string& text, const std::string& with) {
   return text.compare(0, with.size(), with) == 0;
 }
@@ -51,6 +59,7 @@ class Reader {
     for (std::size_t i = 0; i < sheet_.reactions.size(); ++i) progress(i);
     excesses();
     blanks();
+    sought_part();
     return std::move(reading_);
   }
 
@@ -222,12 +231,9 @@ class Reader {
         return false;
       }
     }
-    std::uint64_t key = 14695981039346656037ULL;
-    for (const char c : sheet_.id + typed.reaction)
-      key = (key ^ static_cast<unsigned char>(c)) * 1099511628211ULL;
-    reaction.heat.as_written =
-        uncertainty::Quantity(figure->value * times, figure->u95 * times,
-                              uncertainty::source_key(uncertainty::SourceKind::Measurement, key));
+    reaction.heat.as_written = uncertainty::Quantity(
+        figure->value * times, figure->u95 * times,
+        uncertainty::source_key(uncertainty::SourceKind::Measurement, text_key(sheet_.id + typed.reaction)));
     if (const Blank at = quantity(typed.heat_at, d::kTemperature, where + ".heat_at"))
       reaction.heat.temperature = at->value;
     reaction.heat.typed = true;
@@ -305,7 +311,7 @@ class Reader {
       from_above(feed, trimmed(typed.from), where);
     } else {
       for (std::size_t r = 0; r < typed.rows.size(); ++r)
-        feed_row(feed, typed.rows[r], where + ".rows[" + std::to_string(r) + "]");
+        feed_row(feed, typed.rows[r], where + ".rows[" + std::to_string(r) + "]", r);
       total(feed, index, where);
     }
     input().feeds.push_back(std::move(feed));
@@ -321,11 +327,13 @@ class Reader {
     }
     if (!feed.temperature && !above->out.empty()) {
       feed.temperature = Typed{above->out.front().temperature, 0};
+      feed.carried_temperature = above->model->slots()[above->model->outlet_temperature_slot()].spread;
       for (const step::Answer& answer : above->answers) {
         if (answer.id == step::FigureId::Sought && above->model->outlet_sought())
-          feed.temperature->u95 = answer.value.u95();
+          feed.carried_temperature = answer.value;
       }
     }
+    const step::LeavingSpread spread = step::leaving_spread(*above->model, above->values);
     if (!feed.pressure) feed.pressure = Typed{above->values[*above->model->slot("outlet.pressure")], 0};
     for (const step::StreamLine& line : above->out) {
       const step::SubstanceInput& from = above->model->input().substances[line.substance];
@@ -336,19 +344,77 @@ class Reader {
       if (!here.mass_heat_capacity) here.mass_heat_capacity = from.mass_heat_capacity;
       part.state = line.state;
       part.figure = Typed{line.amount, 0};
+      part.derived = true;
+      part.row = feed.parts.size();
+      // One line of a substance that leaves split carries the vapour, the other the rest.
+      const bool as_vapour =
+          above->model->vapour_state(line.substance).has_value() && line.state.phase == molecule::Phase::Gas;
+      part.shared = as_vapour ? spread.vapour[line.substance] : spread.total[line.substance];
+      if (!as_vapour) part.shared->add(spread.vapour[line.substance], -1);
       feed.parts.push_back(std::move(part));
     }
-    reading_.notes.push_back("The amounts of " + feed.name + " come from step " + id +
-                             " and are taken as exact here.");
+    reading_.notes.push_back("The amounts of " + feed.name + " come from step " + id + " with their ±.");
   }
 
-  void feed_row(step::Feed& feed, const FeedRow& typed, const std::string& where) {
+  /// Air goes in as its parts: one entry, one ±. Without an amount it is the whole of its feed.
+  void air_row(step::Feed& feed, const AirRow& air, const FeedRow& typed, const std::string& where,
+               std::size_t row) {
+    const std::string text = trimmed(typed.amount);
+    const std::string whole = text.empty() || text == "rest" ? "100 mol%" : text;
+    const Result<units::TypedValue> read = units::evaluate_quantity(whole, *context_.names);
+    if (!read.ok()) {
+      refuse(read.error(), where + ".amount");
+      return;
+    }
+    const units::Dimension& dimension = read->dimension();
+    const std::optional<step::Measure> measure = measure_of(dimension);
+    const bool by_mass = dimension == d::kMassFraction || measure == step::Measure::Mass;
+    if (dimension == d::kMoleFraction || dimension == d::kVolumeFraction) {
+      share(feed, step::ShareKind::MoleShare, where);
+    } else if (dimension == d::kMassFraction) {
+      share(feed, step::ShareKind::MassShare, where);
+    } else if (!measure) {
+      refuse(Error{"step.figure", "An amount here is " + amount_kinds() + ".", "", amount_examples()},
+             where + ".amount");
+      return;
+    }
+    const double u95 = read->u95.value_or(0);
+    for (const AirPart& one : air.parts) {
+      const std::optional<Named> species = named(one.name, where + ".species");
+      if (!species) return;
+      step::FeedPart part;
+      part.substance = species->substance;
+      part.state.phase = molecule::Phase::Gas;
+      part.row = row;
+      part.derived = !feed.parts.empty() && feed.parts.back().row == row;
+      part.measure = measure.value_or(step::Measure::Mole);
+      const double of_air = by_mass ? one.mass_share : one.mole_share;
+      part.figure = Typed{read->value * of_air, 0};
+      part.shared = uncertainty::Quantity(
+          read->value * of_air, u95 * of_air,
+          uncertainty::source_key(uncertainty::SourceKind::Typed, text_key(sheet_.id + "|" + where)));
+      feed.parts.push_back(std::move(part));
+    }
+    reading_.notes.push_back(feed.name + ": " + air.note + ".");
+  }
+
+  void feed_row(step::Feed& feed, const FeedRow& typed, const std::string& where, std::size_t row) {
     if (trimmed(typed.species).empty() && trimmed(typed.amount).empty()) return;
+    const Result<std::optional<AirRow>> air = read_air(trimmed(typed.species));
+    if (!air.ok()) {
+      refuse(air.error(), where + ".species");
+      return;
+    }
+    if (*air) {
+      air_row(feed, **air, typed, where, row);
+      return;
+    }
     const std::optional<Named> species = named(typed.species, where + ".species");
     if (!species) return;
     step::FeedPart part;
     part.substance = species->substance;
     part.state = species->state;
+    part.row = row;
     const std::string text = trimmed(typed.amount);
     if (text == "rest") {
       if (feed.shares == step::ShareKind::None) feed.shares = step::ShareKind::MoleShare;
@@ -545,6 +611,29 @@ class Reader {
     return quantity(text_of(id), dimension, std::string("blanks.") + id);
   }
 
+  /// As heat, or as a share of what the gases carry out.
+  void departure(const units::Dimension& heat) {
+    const std::string text = trimmed(text_of("departure"));
+    if (!text.empty() && text.back() == '%') {
+      input().departure_share = blank("departure", d::kNumber);
+    } else {
+      input().departure = blank("departure", heat);
+    }
+  }
+
+  /// The sheet counts rows, the balance parts: air is one row and several parts.
+  void sought_part() {
+    const std::string& sought = sheet_.sought;
+    const std::optional<std::string> slot = slot_of_row(input(), sought);
+    if (slot) {
+      input().sought = *slot;
+      return;
+    }
+    refuse(Error{"step.not_a_blank", "Air is several parts at once and cannot be sought.", "",
+                 "Give the feed its shares, and seek its amount."},
+           "sought");
+  }
+
   void blanks() {
     const units::Dimension heat = flow() ? d::kPower : d::kEnergy;
     step::StepInput& in = input();
@@ -553,6 +642,7 @@ class Reader {
     in.duty = blank("duty", heat);
     in.loss = blank("loss", heat);
     in.shaft_work = blank("shaft", heat);
+    departure(heat);
     in.mass_heat_capacity =
         positive(blank("mass_heat_capacity", d::kMassHeatCapacity), "blanks.mass_heat_capacity");
     in.surface.medium_in = blank("medium_in", d::kTemperature);
@@ -581,6 +671,22 @@ class Reader {
 };
 
 }  // namespace
+
+std::optional<std::string> slot_of_row(const step::StepInput& input, const std::string& id) {
+  const std::size_t at = id.find(".part.");
+  if (!begins(id, "feed.") || at == std::string::npos) return id;
+  const std::optional<double> feed = parse_number(id.substr(5, at - 5)),
+                              row = parse_number(id.substr(at + 6));
+  if (!feed || !row || !(*feed >= 0) || !(*feed < static_cast<double>(input.feeds.size()))) return id;
+  std::optional<std::size_t> found;
+  const std::vector<step::FeedPart>& parts = input.feeds[static_cast<std::size_t>(*feed)].parts;
+  for (std::size_t p = 0; p < parts.size(); ++p) {
+    if (static_cast<double>(parts[p].row) != *row) continue;
+    if (found) return std::nullopt;
+    found = p;
+  }
+  return found ? id.substr(0, at + 6) + std::to_string(*found) : id;
+}
 
 StepReading read_step(const StepSheet& sheet, const StepContext& context) {
   return Reader(sheet, context).read();

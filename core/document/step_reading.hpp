@@ -31,6 +31,10 @@ struct StepReading {
 /// step.figure
 StepReading read_step(const StepSheet& sheet, const StepContext& context);
 
+/// A blank of the sheet as the balance numbers it: "feed.0.part.2" counts rows on the sheet and parts there,
+/// and air is one row of several parts. Empty: the row is several parts. Other ids stay as they are.
+std::optional<std::string> slot_of_row(const step::StepInput& input, const std::string& id);
+
 /// "conversion of ethene" and the other ways a progress can be written, for a choice.
 std::vector<std::string> progress_choices(const balance::Reaction& reaction);
 
