@@ -5,7 +5,9 @@
 #include "core/molecule/equation.hpp"
 #include "core/page/cells.hpp"
 #include "core/page/findings_blocks.hpp"
+#include "core/page/step_checker_blocks.hpp"
 #include "core/page/step_figures.hpp"
+#include "core/safety/cautions.hpp"
 #include "core/step/words.hpp"
 
 namespace heatledger::page {
@@ -21,21 +23,33 @@ std::vector<std::pair<std::string, std::string>> seekable(const StepSheet& sheet
   std::vector<std::pair<std::string, std::string>> list{{"duty", "duty, heat to the process"},
                                                         {"outlet.temperature", "outlet or end temperature"},
                                                         {"loss", "heat loss"},
-                                                        {"shaft", "shaft work"}};
+                                                        {"shaft", "shaft work"},
+                                                        {"conductance", "UA of the surface"}};
   for (std::size_t f = 0; f < sheet.feeds.size(); ++f) {
     const document::FeedSheet& feed = sheet.feeds[f];
     const std::string id = "feed." + std::to_string(f),
                       name = feed.name.empty() ? "feed " + std::to_string(f + 1) : feed.name;
     list.push_back({id + ".temperature", "temperature of " + name});
-    if (!feed.total.empty()) list.push_back({id + ".total", "amount of " + name});
+    const bool excess = feed.total.find("excess ") != std::string::npos;
+    if (!feed.total.empty()) list.push_back({id + ".total", (excess ? "excess in " : "amount of ") + name});
     for (std::size_t r = 0; r < feed.rows.size(); ++r)
       list.push_back({id + ".part." + std::to_string(r), feed.rows[r].species + " in " + name});
   }
   for (std::size_t j = 0; j < sheet.reactions.size(); ++j)
     list.push_back({"reaction." + std::to_string(j) + ".progress",
                     "progress of " + sheet.reactions[j].reaction + ", " + sheet.reactions[j].how});
-  if (!kind.per_time) list.push_back({"vessel.heat_capacity", "vessel and internals"});
+  if (!kind.per_time) {
+    list.push_back({"vessel.heat_capacity", "vessel and internals"});
+    list.push_back({"time", "time for the cooling capacity"});
+  }
   return list;
+}
+
+/// What is typed where the answer is sought stays, but is not used.
+void mark_sought(Cell& cell) {
+  cell.hint = "sought";
+  cell.tone = Tone::Quiet;
+  if (!cell.text.empty()) cell.text += " (sought; what is typed is not used)";
 }
 
 Cell choice_cell(std::string id, std::string text, std::vector<std::string> choices) {
@@ -63,6 +77,8 @@ class Blocks {
     errors();
     add(answers());
     if (findings_ != nullptr) add_all(findings_groups(id_, *findings_));
+    spread_covers();
+    exact();
     add(feeds());
     if (kind_.profile) add(profile());
     if (kind_.reactions) add(reactions());
@@ -70,7 +86,7 @@ class Blocks {
     if (kind_.leaving) add(leaving());
     if (kind_.species) add(species());
     add(out());
-    checker();
+    add_all(step_checker_blocks(view_));
     drawings();
     if (findings_ != nullptr) add_all(findings_charts(id_, *findings_));
     notes();
@@ -198,20 +214,57 @@ class Blocks {
       std::string label = answer.label;
       if (!answer.mark.empty()) label += ", " + answer.mark;
       row.cells = {label_cell(std::move(label), Tone::Quiet), figure_cell(cell, shown.value, Tone::Strong),
-                   label_cell(shown.unit), label_cell(shown.u95, Tone::Quiet)};
+                   label_cell(shown.unit), label_cell(beside_answer(answer), Tone::Quiet)};
       boxes.rows.push_back(std::move(row));
     }
     return boxes;
   }
 
-  /// The line of what goes in that belongs to a row of a feed; null when the feed does not stand on its rows.
-  const step::StreamLine* fed(std::size_t feed, std::size_t row) const {
-    if (result_ == nullptr) return nullptr;
-    std::size_t seen = 0;
-    for (const step::StreamLine& line : result_->in) {
-      if (line.stream == feed && seen++ == row) return &line;
+  /// What the ± does not cover stands under the figures that a safety file takes from here.
+  void spread_covers() {
+    bool safety = false;
+    if (findings_ != nullptr) {
+      for (const step::FindingGroup& group : findings_->groups) {
+        for (const step::Finding& finding : group.findings)
+          safety = safety || finding.unfavourable.has_value();
+      }
     }
-    return nullptr;
+    if (result_ != nullptr) {
+      for (const step::Answer& answer : result_->answers) safety = safety || is_for_safety(answer.id);
+    }
+    if (safety) blocks_.push_back(note_block(id_ + ".covers", NoteKind::Info, safety::what_spread_covers()));
+  }
+
+  /// How many inputs count as exact, and one entry that gives all of them a ±.
+  void exact() {
+    if (result_ == nullptr || result_->exact_inputs == 0) return;
+    Table form =
+        table("exact", TableLook::Form, {column("what", "", Align::Left, 0.35), column("value", "")});
+    const bool one = result_->exact_inputs == 1;
+    form_row(form, "exact",
+             std::to_string(result_->exact_inputs) + (one ? " typed input taken as exact; give it a ±"
+                                                          : " typed inputs taken as exact; give them a ±"),
+             typed_cell(id_ + ".exact", "", "1 % or, for temperatures, 1 K", CellKind::Number), true);
+    add(std::move(form));
+  }
+
+  /// What a row of a feed brings, of air all its parts together; empty when there is no result.
+  std::optional<step::StreamLine> fed(std::size_t feed, std::size_t row) const {
+    if (result_ == nullptr || feed >= result_->model->input().feeds.size()) return std::nullopt;
+    const std::vector<step::FeedPart>& parts = result_->model->input().feeds[feed].parts;
+    std::optional<step::StreamLine> sum;
+    std::size_t part = 0;
+    for (const step::StreamLine& line : result_->in) {
+      if (line.stream != feed || part >= parts.size() || parts[part++].row != row) continue;
+      if (!sum) {
+        sum = line;
+        continue;
+      }
+      sum->amount += line.amount;
+      sum->mass += line.mass;
+      sum->heat += line.heat;
+    }
+    return sum;
   }
 
   std::vector<Cell> amounts(const step::StreamLine* line) const {
@@ -233,6 +286,7 @@ class Blocks {
                column("pressure", "pressure"), column("moles", flow() ? "kmol/h" : "kmol", Align::Right),
                column("mass", flow() ? "kg/h" : "kg", Align::Right),
                column("heat", std::string(heat_unit(flow())) + " from 25 °C", Align::Right)});
+    const std::string& sought = sheet_.sought;
     for (std::size_t f = 0; f <= sheet_.feeds.size(); ++f) {
       const document::FeedSheet feed = f < sheet_.feeds.size() ? sheet_.feeds[f] : document::FeedSheet{};
       const std::string id = id_ + ".feed." + std::to_string(f);
@@ -243,6 +297,8 @@ class Blocks {
                     typed_cell(id + ".total", feed.total, "with shares: its amount", CellKind::Number),
                     typed_cell(id + ".at", feed.at, "25 °C", CellKind::Number),
                     typed_cell(id + ".pressure", feed.pressure, "1 atm", CellKind::Number)};
+      if (sought == "feed." + std::to_string(f) + ".total") mark_sought(head.cells[1]);
+      if (sought == "feed." + std::to_string(f) + ".temperature") mark_sought(head.cells[2]);
       int free = 3;
       if (!kind_.roles.empty()) {
         std::vector<std::string> roles(kind_.roles.begin(), kind_.roles.end());
@@ -275,7 +331,9 @@ class Blocks {
             typed_cell(cell + ".species", row_text.species, "ethene(g)"),
             typed_cell(cell + ".amount", row_text.amount, flow() ? "12 kmol/h" : "340 kg", CellKind::Number),
             label_cell("", Tone::Plain, 2)};
-        for (Cell& more : amounts(fed(f, r))) row.cells.push_back(std::move(more));
+        const std::optional<step::StreamLine> brought = fed(f, r);
+        for (Cell& more : amounts(brought ? &*brought : nullptr)) row.cells.push_back(std::move(more));
+        if (sought == "feed." + std::to_string(f) + ".part." + std::to_string(r)) mark_sought(row.cells[1]);
         list.rows.push_back(std::move(row));
       }
     }
@@ -294,12 +352,7 @@ class Blocks {
     }
   }
 
-  std::string species_words(const step::StreamLine& line) const {
-    std::string text = result_->model->input().substances[line.substance].name;
-    const std::string_view phase = molecule::phase_text(line.state.phase);
-    if (!phase.empty()) text += "(" + std::string(phase) + ")";
-    return text;
-  }
+  std::string species_words(const step::StreamLine& line) const { return stream_species(*result_, line); }
 
   Table reactions() {
     Table list = table(
@@ -307,7 +360,7 @@ class Blocks {
         {column("reaction", "What reacts"), column("how", "how far"), column("figure", ""),
          column("heat", "heat, if typed here"), column("extent", flow() ? "kmol/h" : "kmol", Align::Right),
          column("heat_25", "kJ/mol at 25 °C", Align::Right), column("u95", "±", Align::Right),
-         column("free", std::string(heat_unit(flow())) + " set free", Align::Right)});
+         column("free", std::string(heat_unit(flow())) + " set free at 25 °C", Align::Right)});
     if (view_.reactions.empty()) return list;
     for (std::size_t j = 0; j <= sheet_.reactions.size(); ++j) {
       const bool spare = j == sheet_.reactions.size();
@@ -322,6 +375,7 @@ class Blocks {
           typed_cell(id + ".how", typed.how, "conversion of …"),
           typed_cell(id + ".figure", typed.figure, "92 %", CellKind::Number),
           typed_cell(id + ".heat", typed.heat, "as on the ledger", CellKind::Number)};
+      if (sheet_.sought == "reaction." + std::to_string(j) + ".progress") mark_sought(row.cells[2]);
       if (result_ != nullptr && j < result_->reactions.size()) {
         const step::ReactionLine& line = result_->reactions[j];
         const ShownFigure heat = shown_figure({line.heat_25.value() / 1000, line.heat_25.u95() / 1000},
@@ -393,7 +447,7 @@ class Blocks {
       const auto typed = sheet_.blanks.find(blank.id);
       const std::string text = typed == sheet_.blanks.end() ? std::string() : typed->second;
       Cell cell = typed_cell(id_ + ".blank." + blank.id, text, blank.hint, CellKind::Number);
-      if (sought == blank.id) cell.hint = "sought";
+      if (sought == blank.id) mark_sought(cell);
       const bool screen_only = text.empty() && sought != blank.id;
       form_row(form, std::string("blank.") + blank.id, blank.label, std::move(cell), screen_only);
     }
@@ -468,64 +522,6 @@ class Blocks {
         label_cell(result_->closure.sentence, result_->closure.heat_closes ? Tone::Good : Tone::Caution, 6)};
     list.rows.push_back(std::move(closing));
     return list;
-  }
-
-  /// Figures of the sheet under review beside ours, with what explains a difference.
-  void checker() {
-    if (result_ == nullptr || view_.outcome.review == nullptr) return;
-    const step::StepReview& review = *view_.outcome.review;
-    Table list = table("checker", TableLook::List,
-                       {column("what", "Checker's column"), column("ours", "here", Align::Right),
-                        column("theirs", "on the sheet under review"), column("finding", "")});
-    const step::StepInput& input = result_->model->input();
-    const auto row = [&](const std::string& cell, const std::string& label, double value) {
-      const std::optional<units::Dimension> dimension = step::check_dimension(*result_, cell);
-      if (!dimension) return;
-      const auto typed = sheet_.checker.find(cell);
-      Row line = row_of(id_ + ".check." + cell + ".line");
-      line.screen_only = typed == sheet_.checker.end();
-      std::string finding;
-      Tone tone = Tone::Quiet;
-      for (const step::StepCheckedLine& checked : review.lines) {
-        if (checked.cell != cell) continue;
-        finding = checked.finding;
-        tone = checked.verdict == step::StepVerdict::Agrees ? Tone::Good : Tone::Caution;
-      }
-      line.cells = {label_cell(label), label_cell(step::value_text(value, *dimension, flow())),
-                    typed_cell(id_ + ".check." + cell, typed == sheet_.checker.end() ? "" : typed->second,
-                               "their figure with its unit", CellKind::Number),
-                    label_cell(finding, tone)};
-      list.rows.push_back(std::move(line));
-    };
-    row("sought", result_->answers.front().label, result_->answers.front().value.value());
-    double inlet = 0, outlet = 0, free = 0;
-    for (const step::StreamLine& line : result_->in) inlet += line.heat;
-    for (const step::StreamLine& line : result_->out) outlet += line.heat;
-    for (const step::ReactionLine& line : result_->reactions) free += line.set_free;
-    row("outlet", "what leaves, from 25 °C", outlet);
-    row("inlet", "what enters, from 25 °C", inlet);
-    if (!result_->reactions.empty()) row("heat_set_free", "heat set free at 25 °C", free);
-    for (std::size_t j = 0; j < result_->reactions.size(); ++j) {
-      const std::string cell = "reaction." + std::to_string(j);
-      row(cell + ".extent", input.reactions[j].name + ", extent", result_->reactions[j].extent);
-      row(cell + ".heat", input.reactions[j].name + ", heat at 25 °C", result_->reactions[j].heat_25.value());
-      row(cell + ".free", input.reactions[j].name + ", set free", result_->reactions[j].set_free);
-    }
-    for (std::size_t i = 0; i < result_->out.size(); ++i) {
-      const std::string cell = "out." + std::to_string(i);
-      row(cell + ".amount", species_words(result_->out[i]) + " leaving", result_->out[i].amount);
-      row(cell + ".heat", species_words(result_->out[i]) + " leaving, heat", result_->out[i].heat);
-    }
-    for (std::size_t i = 0; i < result_->in.size(); ++i) {
-      const std::string cell = "in." + std::to_string(i);
-      row(cell + ".amount", species_words(result_->in[i]) + " entering", result_->in[i].amount);
-      row(cell + ".heat", species_words(result_->in[i]) + " entering, heat", result_->in[i].heat);
-    }
-    add(std::move(list));
-    if (!review.summary.empty()) {
-      blocks_.push_back(note_block(id_ + ".checker.summary",
-                                   review.agrees ? NoteKind::Info : NoteKind::Disagreement, review.summary));
-    }
   }
 
   void drawings() {
@@ -674,7 +670,7 @@ std::optional<Margin> step_margin(const StepSheet& sheet, const document::StepOu
         "heat at 25 °C, phases as written: " + display_number(line.heat_25.value() / 1000, 2) + " kJ/mol",
         "at the outlet temperature: " + display_number(line.heat_at_end / 1000, 2) + " kJ/mol",
         "extent " + step::amount_text(line.extent, flow),
-        "set free: " + step::heat_text(line.set_free, flow)};
+        "set free at 25 °C: " + step::heat_text(line.set_free, flow)};
     margin.sources = {reaction.heat.source};
     return margin;
   }

@@ -2,6 +2,7 @@
 
 #include "core/document/step_kinds.hpp"
 #include "core/page/step_blocks.hpp"
+#include "core/page/step_exact.hpp"
 
 namespace heatledger::page {
 namespace {
@@ -156,6 +157,9 @@ Result<Edited> edit_step(const Worksheet& sheet, std::size_t index, const IdPart
   StepSheet& step = edited.sheet.steps[index].change();
   if (id.size() == 2 && id[1] == "kind") {
     step.kind = kept_kind(text);
+  } else if (id.size() == 2 && id[1] == "exact") {
+    edited.label = "give ± to typed inputs";
+    if (const Result<int> given = give_half_width_to_step(step, text); !given.ok()) return given.error();
   } else if (id.size() == 2 && id[1] == "sought") {
     const std::string blank = sought_from_words(step, text);
     const auto& choices = document::kind_of(step).sought;

@@ -40,6 +40,7 @@ Scale scale_of(const units::Dimension& dimension, double size, bool ratio) {
   if (dimension == d::kHeatTransferPerKelvin) return {1e3, 0, "kW/K"};
   if (dimension == d::kHeatCapacity) return {1e3, 0, "kJ/K"};
   if (dimension == d::kPressure) return {1e3, 0, "kPa"};
+  if (dimension == units::Dimension{0, 1, -1, 0, 0, units::Kind::Plain}) return {1, 0, "m/s"};
   if (dimension == d::kMassFraction) return {0.01, 0, "wt%"};
   if (dimension == d::kMoleFraction) return {0.01, 0, "mol%"};
   if (dimension == d::kVolumeFraction) return {0.01, 0, "vol%"};
@@ -100,6 +101,37 @@ std::string drawn_text(const step::Answer& answer) {
   if (answer.drawn->without > 0)
     words += "; none in " + display_number(100 * answer.drawn->without, 1) + " % of them";
   return words;
+}
+
+bool is_for_safety(step::FigureId id) {
+  switch (id) {
+    case step::FigureId::AdiabaticRise:
+    case step::FigureId::AdiabaticEnd:
+    case step::FigureId::EndByEnthalpy:
+    case step::FigureId::PeakDuty:
+      return true;
+    default:
+      return false;
+  }
+}
+
+std::string beside_answer(const step::Answer& answer) {
+  std::string text = shown_answer(answer).u95;
+  const double u95 = answer.value.u95();
+  if (u95 == 0) return text;
+  const bool ratio = answer.id == step::FigureId::ThermalInertia;
+  const auto shown = [&](double value) { return shown_figure({value, u95}, answer.dimension, ratio).value; };
+  if (answer.drawn) {
+    // Draws that only repeat the ± are left to the margin.
+    constexpr double kSame = 0.05;
+    const double below = answer.value.value() - answer.drawn->low,
+                 above = answer.drawn->high - answer.value.value();
+    if (std::fabs(below - u95) > kSame * u95 || std::fabs(above - u95) > kSame * u95)
+      text += "; " + shown(answer.drawn->low) + " to " + shown(answer.drawn->high) + " by draws";
+  }
+  if (is_for_safety(answer.id))
+    text += "; unfavourable end " + shown(answer.drawn ? answer.drawn->high : answer.value.value() + u95);
+  return text;
 }
 
 double in_shown_unit(double in_si, const units::Dimension& dimension, double largest, bool ratio) {

@@ -20,6 +20,11 @@ ShownFigure shown_figure(const uncertainty::Figure& in_si, const units::Dimensio
 ShownFigure shown_answer(const step::Answer& answer);
 /// "2.5 to 97.5 % of the draws: 410 to 455 °C"; empty without draws.
 std::string drawn_text(const step::Answer& answer);
+/// What stands beside an answer: its ±, the interval of the draws where it is not the same on both sides, and
+/// for a figure that a safety file uses the unfavourable end.
+std::string beside_answer(const step::Answer& answer);
+/// Whether a safety file uses the figure.
+bool is_for_safety(step::FigureId id);
 /// A point of an axis or table in the same unit as `shown_figure` gives it.
 double in_shown_unit(double in_si, const units::Dimension& dimension, double largest, bool ratio = false);
 

@@ -9,7 +9,7 @@
 namespace heatledger::window {
 namespace {
 
-constexpr float kBeforeHeading = 24, kAfterHeading = 8, kAfterBlock = 8, kGap = 26;
+constexpr float kBeforeHeading = 24, kAfterHeading = 8, kAfterBlock = 8, kBetweenTables = 18, kGap = 26;
 
 /// Goes down the page block by block.
 class Builder {
@@ -32,7 +32,7 @@ class Builder {
           ++i;
         } else {
           add(*table, 0, layout_.width);
-          y_ += kAfterBlock;
+          y_ += form != nullptr ? kBetweenTables : kAfterBlock;
         }
       }
       if (const auto* drawing = std::get_if<page::Drawing>(&block)) {

@@ -123,6 +123,142 @@ TEST(StepSession, TheCheckersColumnNamesASlip) {
   EXPECT_EQ(slip->text.substr(0, 71), "One slip explains the sheet: the sign of the duty is turned round.");
 }
 
+TEST(StepSession, TheSheetsOwnDataStandBesideOurs) {
+  Session session = shift_reactor();
+  type(session, "s1.show_checker", "shown");
+  type(session, "s1.check.own.heat.0", "-40 kJ/mol");
+  // By hand: the same moles leave as enter, 30 J/(mol K) on all 320 kmol/h over 50 K, and 90 kmol/h of −40:
+  // 133.3 − 1000 kW.
+  const Table* own = std::get_if<Table>(test::find_block(session.page(), "s1.own"));
+  ASSERT_NE(own, nullptr);
+  std::vector<std::string> capacities;
+  for (const Row& row : own->rows) {
+    const std::string& id = row.cells[2].id;
+    if (id.find(".own.cp.") != std::string::npos) capacities.push_back(id);
+  }
+  EXPECT_EQ(capacities.size(), 4u);
+  for (const std::string& cell : capacities) type(session, cell, "30 J/(mol K)");
+  type(session, "s1.check.sought", "-866.7 kW");
+  const Note* summary = test::find_note(session.page(), "s1.checker.summary");
+  ASSERT_NE(summary, nullptr);
+  EXPECT_EQ(summary->text, "Every figure typed agrees.");
+  const Table* figures = std::get_if<Table>(test::find_block(session.page(), "s1.checker"));
+  ASSERT_NE(figures, nullptr);
+  EXPECT_EQ(figures->columns[2].heading, "same method, their data");
+  EXPECT_EQ(figures->rows[0].cells[2].text, "\u2212866.7 kW");
+  EXPECT_NE(figures->rows[0].cells[1].text, figures->rows[0].cells[2].text);
+  const std::string saved = session.save();
+  Session other;
+  ASSERT_TRUE(other.open(saved).ok());
+  EXPECT_EQ(test::text_of(other, "s1.check.own.heat.0"), "-40 kJ/mol");
+}
+
+TEST(StepSession, WhatIsTypedWhereTheAnswerIsSoughtIsMarked) {
+  Session session = shift_reactor();
+  type(session, "s1.sought", "outlet or end temperature");
+  type(session, "s1.blank.duty", "0 kW");
+  const Cell* cell = test::find_cell(session.page(), "s1.blank.outlet.temperature");
+  ASSERT_NE(cell, nullptr);
+  EXPECT_EQ(cell->edit_text, "400 °C");
+  EXPECT_NE(cell->text.find("not used"), std::string::npos);
+  EXPECT_EQ(test::text_of(session, "s1.blank.duty"), "0 kW");
+}
+
+TEST(StepSession, ConductanceIsSoughtForATypedOutlet) {
+  Session session = shift_reactor();
+  type(session, "s1.blank.medium_in", "100 °C");
+  type(session, "s1.sought", "UA of the surface");
+  const Cell* cell = test::find_cell(session.page(), "s1.answer.0");
+  ASSERT_NE(cell, nullptr);
+  // −792 kW (above) against 300 K between the medium and the mixed outlet: 2.64 kW/K within its 1 %.
+  EXPECT_NEAR(std::stod(cell->text), 2.64, 0.03);
+}
+
+TEST(StepSession, OneEntryGivesEveryExactInputItsSpread) {
+  Session session = shift_reactor();
+  ASSERT_NE(test::find_cell(session.page(), "s1.exact"), nullptr);
+  type(session, "s1.exact", "1 %");
+  EXPECT_EQ(test::text_of(session, "s1.feed.0.row.0.amount"), "100 ± 1 kmol/h");
+  EXPECT_EQ(test::text_of(session, "s1.feed.0.row.1.amount"), "220 ± 2.2 kmol/h");
+  EXPECT_EQ(test::text_of(session, "s1.reaction.0.figure"), "(90 ± 1) %");
+  EXPECT_EQ(test::text_of(session, "s1.feed.0.at"), "350 °C");
+  type(session, "s1.exact", "2 K");
+  EXPECT_EQ(test::text_of(session, "s1.feed.0.at"), "350 ± 2 °C");
+  EXPECT_EQ(test::text_of(session, "s1.blank.outlet.temperature"), "400 ± 2 °C");
+  EXPECT_EQ(test::find_note(session.page(), "s1.error.0"), nullptr);
+  EXPECT_EQ(test::find_cell(session.page(), "s1.exact"), nullptr);
+  EXPECT_FALSE(session.edit("s1.exact", "many").ok());
+  EXPECT_TRUE(session.command("undo", {}).ok());
+  EXPECT_EQ(test::text_of(session, "s1.feed.0.at"), "350 °C");
+}
+
+TEST(StepSession, AirIsOneEntryOfAFeed) {
+  Session session;
+  type(session, "r1.equation", "CH4(g) + 2 O2(g) -> CO2(g) + 2 H2O(g)");
+  type(session, "steps.add.f", "");
+  type(session, "s1.feed.0.name", "gas");
+  type(session, "s1.feed.0.at", "25 °C");
+  type(session, "s1.feed.0.row.0.species", "CH4(g)");
+  type(session, "s1.feed.0.row.0.amount", "10 kmol/h");
+  type(session, "s1.feed.1.name", "air");
+  type(session, "s1.feed.1.at", "25 °C");
+  type(session, "s1.feed.1.total", "20 % excess oxygen over methane");
+  type(session, "s1.feed.1.row.0.species", "air");
+  type(session, "s1.reaction.0.reaction", "r1");
+  type(session, "s1.reaction.0.how", "conversion of CH4");
+  type(session, "s1.reaction.0.figure", "100 %");
+  type(session, "s1.blank.outlet.temperature", "1200 °C");
+  ASSERT_EQ(test::find_note(session.page(), "s1.error.0"), nullptr);
+  const Table* feeds = std::get_if<Table>(test::find_block(session.page(), "s1.feeds"));
+  ASSERT_NE(feeds, nullptr);
+  double air = 0;
+  for (const Row& row : feeds->rows) {
+    if (row.id == "s1.feed.1.row.0.line") air = std::stod(row.cells[3].text);
+  }
+  EXPECT_NEAR(air, 24 / 0.20946, 0.01);  // 1.2 × 2 × 10 kmol/h of oxygen in 20.946 %
+  // The excess that a hotter outlet needs without any duty.
+  type(session, "s1.blank.duty", "0 kW");
+  type(session, "s1.sought", "excess in air");
+  ASSERT_EQ(test::find_note(session.page(), "s1.error.0"), nullptr);
+  EXPECT_GT(std::stod(test::text_of(session, "s1.answer.0")), 40);
+  type(session, "s1.feed.1.row.0.species", "O2 + 3.76 N2");
+  EXPECT_EQ(test::find_note(session.page(), "s1.error.0"), nullptr);
+  type(session, "s1.feed.1.row.0.species", "humid air, 40 % at 30 °C");
+  EXPECT_EQ(test::find_note(session.page(), "s1.error.0"), nullptr);
+  type(session, "s1.feed.1.row.0.species", "humid air, 140 %");
+  EXPECT_NE(test::find_note(session.page(), "s1.error.0"), nullptr);
+}
+
+TEST(StepSession, AChargeHasItsClassAndItsCautions) {
+  Session session;
+  type(session, "r1.equation", "benzene(l) + nitric acid(l) -> nitrobenzene(l) + water(l)");
+  type(session, "steps.add.c", "");
+  type(session, "s1.feed.0.name", "charge");
+  type(session, "s1.feed.0.at", "50 °C");
+  type(session, "s1.feed.0.row.0.species", "benzene(l)");
+  type(session, "s1.feed.0.row.0.amount", "400 kg");
+  type(session, "s1.feed.0.row.1.species", "nitric acid(l)");
+  type(session, "s1.feed.0.row.1.amount", "330 kg");
+  type(session, "s1.reaction.0.reaction", "r1");
+  type(session, "s1.reaction.0.how", "conversion of benzene");
+  type(session, "s1.reaction.0.figure", "98 %");
+  type(session, "s1.blank.outlet.temperature", "50 °C");
+  ASSERT_EQ(test::find_note(session.page(), "s1.error.0"), nullptr);
+  EXPECT_EQ(test::text_of(session, "s1.find.criticality"), "class needs T_D24");
+  type(session, "s1.blank.td24", "180 °C");
+  type(session, "s1.blank.td24_source", "adiabatic calorimetry, 40 g");
+  EXPECT_EQ(test::text_of(session, "s1.find.criticality").substr(0, 6), "class ");
+  EXPECT_NE(test::text_of(session, "s1.find.criticality"), "class needs T_D24");
+  bool calorimetry = false;
+  for (const Block& block : session.page().blocks) {
+    const Note* note = std::get_if<Note>(&block);
+    calorimetry =
+        calorimetry || (note != nullptr && note->text.find("calorimetry before") != std::string::npos);
+  }
+  EXPECT_TRUE(calorimetry);
+  EXPECT_NE(test::find_note(session.page(), "s1.covers"), nullptr);
+}
+
 TEST(StepSession, CellsThatAreNotThereAreRefused) {
   Session session = shift_reactor();
   EXPECT_EQ(session.edit("s1.blank.nonsense", "1").error().code, "edit.no_such_cell");
