@@ -75,6 +75,45 @@ std::string bond_value(std::size_t turn) {
   return std::to_string(400 + turn % 20) + "." + std::to_string(turn + 1);
 }
 
+/// Forty gases in one feed, adiabatic, outlet temperature sought: every edit also draws 10,000 times.
+page::Session forty_species() {
+  const char* const gases[] = {
+      "methane",          "ethane",         "propane",         "butane",         "isobutane",
+      "pentane",          "hexane",         "heptane",         "octane",         "ethene",
+      "propene",          "1-butene",       "benzene",         "toluene",        "ethylbenzene",
+      "styrene",          "methanol",       "ethanol",         "acetone",        "1-propanol",
+      "2-propanol",       "acetaldehyde",   "formaldehyde",    "dimethyl ether", "ammonia",
+      "diethyl ether",    "hydrogen",       "nitrogen",        "oxygen",         "argon",
+      "chlorine",         "carbon dioxide", "carbon monoxide", "water",          "sulfur dioxide",
+      "hydrogen sulfide", "acetylene",      "nitric oxide",    "nitrous oxide",  "hydrogen chloride"};
+  page::Session session;
+  const auto type = [&](const std::string& cell, const std::string& text) {
+    CHECK(session.edit(cell, text).ok(), "a step is typed");
+  };
+  type("r1.equation", "CO(g) + H2O(g) -> CO2(g) + H2(g)");
+  type("steps.add.f", "");
+  std::size_t row = 0;
+  for (const char* gas : gases) {
+    const std::string cell = "s1.feed.0.row." + std::to_string(row++);
+    type(cell + ".species", std::string(gas) + "(g)");
+    type(cell + ".amount", "1 kmol/h");
+  }
+  type("s1.feed.0.at", "320 °C");
+  type("s1.reaction.0.reaction", "r1");
+  type("s1.reaction.0.how", "conversion of CO");
+  type("s1.blank.duty", "0 kW");
+  type("s1.sought", "outlet or end temperature");
+  return session;
+}
+
+void steps() {
+  page::Session session = forty_species();
+  measure("step of forty species, edit to page with 10,000 draws", 20, [&](std::size_t turn) {
+    const Status done = session.edit("s1.reaction.0.figure", std::to_string(40 + turn) + " %");
+    CHECK(done.ok() && !session.page().blocks.empty(), "a conversion is typed");
+  });
+}
+
 void sheets() {
   const document::Worksheet twenty = sheet();
   measure("sheet, first of the program", 1, [&](std::size_t) { document::Calculator().compute(twenty); });
@@ -145,6 +184,7 @@ void fits() {
 
 int main() {
   heatledger::bench::sheets();
+  heatledger::bench::steps();
   heatledger::bench::fits();
   return 0;
 }
