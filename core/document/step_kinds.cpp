@@ -1,7 +1,9 @@
 #include "core/document/step_kinds.hpp"
 
 #include "core/document/burning_reading.hpp"
+#include "core/document/dosed_reading.hpp"
 #include "core/document/step_balance.hpp"
+#include "core/dosing/dosed_findings.hpp"
 
 namespace heatledger::document {
 
@@ -32,6 +34,19 @@ const std::vector<KindOfStep>& kinds_of_step() {
        burning_roles(),
        {{"chamber_temperature", "temperatures"}, {"support", "support fuel"}, {"air_ratio", "air ratio"}},
        compute_burning},
+      {"dosed charge",
+       "Add a dosed charge",
+       'd',
+       false,
+       true,
+       true,
+       true,
+       true,
+       true,
+       {"in the vessel", "dosed"},
+       {{"duty", "the course over time"}},
+       compute_dosed,
+       dosing::dosed_conventions},
   };
   return all;
 }

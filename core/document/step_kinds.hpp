@@ -2,6 +2,7 @@
 // row here, its blanks in step_blanks(), and its reading beside this file.
 #pragma once
 
+#include <string>
 #include <utility>
 #include <vector>
 
@@ -25,6 +26,8 @@ struct KindOfStep {
   /// Fills everything of the outcome but its library.
   void (*compute)(const StepSheet& sheet, const StepContext& context, step::Lookups& lookups,
                   StepOutcome& outcome);
+  /// What it follows beyond the conventions of the balance, one sentence each; null: nothing.
+  std::vector<std::string> (*conventions)() = nullptr;
 };
 
 /// In the order of the choice.

@@ -1,5 +1,6 @@
 #include "core/page/page_builder.hpp"
 
+#include "core/document/step_kinds.hpp"
 #include "core/page/cells.hpp"
 #include "core/page/sheet_blocks.hpp"
 #include "core/page/step_blocks.hpp"
@@ -141,7 +142,13 @@ const Page& PageBuilder::build(PageInput input) {
   add_section("+assumptions", {sheet.assumptions.handle()}, "",
               [&] { return assumption_blocks(*sheet.assumptions); });
   add_section("+notes", {sheet.notes.handle()}, "", [&] { return note_blocks(*sheet.notes); });
-  if (!sheet.steps.empty()) add_section("+step_conventions", {}, "", step_convention_blocks);
+  if (!sheet.steps.empty()) {
+    std::set<std::string> kinds;
+    for (const auto& step : sheet.steps) kinds.insert(document::kind_of(*step).name);
+    std::string state;
+    for (const std::string& kind : kinds) state += kind + "/";
+    add_section("+step_conventions", {}, state, [&] { return step_convention_blocks(kinds); });
+  }
   add_section("+conventions", {}, "", convention_blocks);
 
   page_.blocks = std::move(next_blocks_);

@@ -409,14 +409,14 @@ class Blocks {
     Row row = row_of(id + ".rate", RowRole::Detail);
     Cell orders = typed_cell(id + ".orders", typed.orders, "1 in each reactant");
     orders.span = 2;
-    row.cells = {
-        label_cell("rate constant", Tone::Quiet),
-        typed_cell(id + ".rate_constant", typed.rate_constant, "none: as fast as dosed", CellKind::Number),
-        label_cell("at", Tone::Quiet),
-        typed_cell(id + ".rate_at", typed.rate_at, "25 °C", CellKind::Number),
-        label_cell("activation energy", Tone::Quiet),
-        typed_cell(id + ".activation", typed.activation, "78 kJ/mol", CellKind::Number),
-        std::move(orders)};
+    row.cells = {label_cell("rate constant", Tone::Quiet),
+                 typed_cell(id + ".rate_constant", typed.rate_constant, "none typed, or: as fast as dosed",
+                            CellKind::Number),
+                 label_cell("at", Tone::Quiet),
+                 typed_cell(id + ".rate_at", typed.rate_at, "25 °C", CellKind::Number),
+                 label_cell("activation energy", Tone::Quiet),
+                 typed_cell(id + ".activation", typed.activation, "78 kJ/mol", CellKind::Number),
+                 std::move(orders)};
     return row;
   }
 
@@ -584,11 +584,16 @@ std::vector<Block> step_blocks(const StepView& view) {
   return Blocks(view).build();
 }
 
-std::vector<Block> step_convention_blocks() {
+std::vector<Block> step_convention_blocks(const std::set<std::string>& kinds) {
   Table table;
   table.id = "step_conventions";
   table.columns = {column("text", "")};
-  for (const std::string& line : step::step_conventions(step::StepKind::Charge)) {
+  std::vector<std::string> lines = step::step_conventions(step::StepKind::Charge);
+  for (const document::KindOfStep& kind : document::kinds_of_step()) {
+    if (kind.conventions == nullptr || kinds.count(kind.name) == 0) continue;
+    for (std::string& line : kind.conventions()) lines.push_back(std::move(line));
+  }
+  for (const std::string& line : lines) {
     Row row = row_of("step_convention." + std::to_string(table.rows.size()));
     row.cells = {label_cell(line, Tone::Quiet)};
     table.rows.push_back(std::move(row));

@@ -1,6 +1,9 @@
 // The blocks of one process step: what goes in, what reacts, what leaves, the answers, drawings, cautions.
 #pragma once
 
+#include <set>
+#include <string>
+
 #include "core/document/step_computation.hpp"
 #include "core/page/page.hpp"
 #include "core/page/reaction_blocks.hpp"
@@ -17,7 +20,8 @@ struct StepView {
 
 std::vector<Block> step_blocks(const StepView& view);
 /// What two engineers must share about steps, printed on every sheet that has one.
-std::vector<Block> step_convention_blocks();
+/// @param kinds  names of the kinds of step on the sheet
+std::vector<Block> step_convention_blocks(const std::set<std::string>& kinds);
 /// The buttons that add a step.
 std::vector<Block> add_step_blocks();
 

@@ -91,7 +91,7 @@ void caution_heats(StepResult& result) {
 
 void caution_charge(StepResult& result) {
   const StepInput& input = result.model->input();
-  if (input.kind != StepKind::Charge || input.reactions.empty()) return;
+  if (input.kind != StepKind::Charge || input.reactions.empty() || input.charge.followed) return;
   if (!input.charge.rate_constant) result.notes.push_back("Peak heat rate unknown: no rate law.");
   result.notes.push_back("A mean heat rate is not the duty to design for.");
   for (const Answer& answer : result.answers) {

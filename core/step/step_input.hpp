@@ -148,6 +148,7 @@ struct ChargeInput {
   Blank limit_temperature;             ///< typed decomposition limit or other limit [K]
   Blank cooling;                       ///< capacity of the cooling [W]: gives the time it needs
   Blank rate_constant;                 ///< first order, held at temperature [1/s]: gives the peak
+  bool followed = false;  ///< its course in time is worked out elsewhere: nothing is said of peaks
 };
 
 /// The cooled or heated surface.
