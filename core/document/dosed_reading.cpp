@@ -40,7 +40,7 @@ class Reader {
   }
 
   /// Typed limits that the class is built on.
-  Blank mtt() { return blank("mtt", d::kTemperature); }
+  Blank mtt() { return blank("technical_limit", d::kTemperature); }
   Blank td24() { return blank("td24", d::kTemperature); }
   std::string text_of(const char* id) const {
     const auto found = sheet_.blanks.find(id);
