@@ -343,6 +343,7 @@ class Reader {
       if (!here.heat_capacity) here.heat_capacity = from.heat_capacity;
       if (!here.mass_heat_capacity) here.mass_heat_capacity = from.mass_heat_capacity;
       part.state = line.state;
+      part.without_water = true;
       part.figure = Typed{line.amount, 0};
       part.derived = true;
       part.row = feed.parts.size();

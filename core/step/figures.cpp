@@ -25,9 +25,9 @@ double heat_over(const Model& model, const std::vector<double>& v, const Work& w
   for (std::size_t p = 0; p < work.parts.size(); ++p)
     heat += work.parts[p] * model.enthalpy(v, model.part_state(p), start);
   for (std::size_t i = 0; i < work.leaving.size(); ++i) {
-    if (work.leaving[i] != 0) heat -= work.leaving[i] * model.enthalpy(v, model.leaving_state(i), end);
+    if (work.leaving[i] != 0) heat -= work.leaving[i] * model.leaving_enthalpy(v, work, i, end);
   }
-  return heat;
+  return heat + work.dissolving.taken - work.dissolving.tables;
 }
 
 /// Where the heat that is set free ends when nothing is taken away [K].
@@ -39,13 +39,13 @@ std::optional<double> adiabatic_end(const Model& model, const std::vector<double
     return heat_over(model, v, work, start, end) - vessel * (end - start);
   };
   double a = start, fa = over(a), b = a + 1, fb = over(b);
-  const double small = 1e-12 * (std::fabs(fa) + std::fabs(work.reaction_heat)) + 1e-300;
+  const double size = std::fabs(work.reaction_heat) + std::fabs(work.dissolving.tables);
+  const double small = 1e-12 * (std::fabs(fa) + size) + 1e-300;
   for (int turn = 0; turn < 60; ++turn) {
     if (std::fabs(fb) <= small) return b;
     if (fb == fa) return std::nullopt;
     const double next = std::min(kHottest, std::max(kColdest, b - fb * (b - a) / (fb - fa)));
-    if (next == b)
-      return std::fabs(fb) <= 1e-9 * std::fabs(work.reaction_heat) ? std::optional<double>(b) : std::nullopt;
+    if (next == b) return std::fabs(fb) <= 1e-9 * size ? std::optional<double>(b) : std::nullopt;
     a = b, fa = fb;
     b = next, fb = over(b);
   }
@@ -69,10 +69,10 @@ std::optional<double> conductance(const Model& model, const std::vector<double>&
 std::vector<FigureId> all_figures(const Model& model) {
   const StepInput& input = model.input();
   std::vector<FigureId> ids{FigureId::Sought};
-  if (!input.reactions.empty()) {
-    ids.push_back(FigureId::HeatSetFree);
-    ids.push_back(FigureId::HeatPerMass);
-  }
+  const bool dissolves = !model.solution().solutes.empty();
+  if (!input.reactions.empty()) ids.push_back(FigureId::HeatSetFree);
+  if (dissolves) ids.push_back(FigureId::HeatOfDilution);
+  if (!input.reactions.empty() || dissolves) ids.push_back(FigureId::HeatPerMass);
   const bool medium = input.surface.medium_in || input.surface.medium_out;
   if (input.kind == StepKind::ThroughFlow) {
     if (medium) ids.push_back(FigureId::Conductance);
@@ -85,7 +85,7 @@ std::vector<FigureId> all_figures(const Model& model) {
     if (medium) ids.push_back(FigureId::Conductance);
   }
   if (input.charge.rate_constant) ids.push_back(FigureId::PeakDuty);
-  if (!input.reactions.empty()) {
+  if (!input.reactions.empty() || dissolves) {
     ids.push_back(FigureId::AdiabaticRise);
     ids.push_back(FigureId::AdiabaticEnd);
     ids.push_back(FigureId::EndByEnthalpy);
@@ -173,7 +173,8 @@ void compute_figures(const Model& model, const std::vector<FigureId>& ids, const
   const bool charge = model.input().kind == StepKind::Charge;
   const Model::Side& side = model.side();
   const double held = charge ? process_temperature(model, v) : units::kReferenceTemperature;
-  const double free = heat_set_free(model, v, work, held);
+  const double by_reaction = heat_set_free(model, v, work, held);
+  const double free = by_reaction + work.dissolving.taken;
   const double vessel = side.vessel ? v[*side.vessel] : 0;
   const double capacity = charge ? charge_heat_capacity(model, work, v, held) : 0;
   std::optional<double> boiling;
@@ -184,7 +185,10 @@ void compute_figures(const Model& model, const std::vector<FigureId>& ids, const
         out[i] = v[model.sought()];
         break;
       case FigureId::HeatSetFree:
-        out[i] = free;
+        out[i] = by_reaction;
+        break;
+      case FigureId::HeatOfDilution:
+        out[i] = work.dissolving.taken;
         break;
       case FigureId::HeatPerMass:
         if (const double mass = mass_fed(model, work); mass > 0) out[i] = free / mass;
@@ -223,7 +227,7 @@ void compute_figures(const Model& model, const std::vector<FigureId>& ids, const
         if (boiling) {
           const std::size_t solvent = *model.input().charge.solvent;
           const double each = model.enthalpy(v, *model.vapour_state(solvent), *boiling) -
-                              model.enthalpy(v, model.leaving_state(solvent), *boiling);
+                              model.leaving_enthalpy(v, work, solvent, *boiling);
           const double over = heat_over(model, v, work, held, *boiling);
           if (each > 0) out[i] = std::max(0.0, over) / each * model.molar_mass(solvent);
         }
@@ -239,6 +243,8 @@ std::string figure_label(const Model& model, FigureId id) {
     case FigureId::HeatSetFree:
       return model.input().kind == StepKind::Charge ? "heat set free at process temperature"
                                                     : "heat set free at 25 °C";
+    case FigureId::HeatOfDilution:
+      return "heat of dilution set free";
     case FigureId::HeatPerMass:
       return "heat set free per kg fed";
     case FigureId::Conductance:
@@ -274,6 +280,7 @@ units::Dimension figure_dimension(const Model& model, FigureId id) {
     case FigureId::Sought:
       return model.slots()[model.sought()].dimension;
     case FigureId::HeatSetFree:
+    case FigureId::HeatOfDilution:
       return flow ? d::kPower : d::kEnergy;
     case FigureId::HeatPerMass:
       return d::kEnergyPerMass;

@@ -10,7 +10,9 @@ enum class FigureId : std::uint8_t {
   Sought,          ///< the blank that is sought; always the first
   HeatSetFree,     ///< by the reactions at 25 °C (through-flow) or at process temperature (charge), > 0
                    ///< exothermic
-  HeatPerMass,     ///< the same per kilogram fed [J/kg]
+  HeatOfDilution,  ///< set free by dissolving and diluting at 25 °C, as the balance takes it, > 0 gives off
+                   ///< heat
+  HeatPerMass,     ///< both per kilogram fed [J/kg]
   Conductance,     ///< UA that the duty asks for [W/K]
   Time,            ///< charge: that a typed cooling capacity asks for [s]
   MeanDuty,        ///< charge: heat set free over the time [W]

@@ -4,8 +4,10 @@
 #include <algorithm>
 #include <cmath>
 
+#include "core/base/number_text.hpp"
 #include "core/step/flash.hpp"
 #include "core/step/linear.hpp"
+#include "core/step/words.hpp"
 #include "core/units/constants.hpp"
 
 namespace heatledger::step {
@@ -82,6 +84,102 @@ double Model::reaction_heat_at(const std::vector<double>& v, std::size_t reactio
   return heat;
 }
 
+double Model::leaving_enthalpy(const std::vector<double>& v, const Work& work, std::size_t substance,
+                               double temperature) const {
+  const std::size_t state = leaving_[substance].state;
+  const Dissolving& solution = work.dissolving;
+  if (solution.ratio.empty() || solution.ratio[substance] < 0) return enthalpy(v, state, temperature);
+  const double above = solution.above_leaving[substance];
+  for (const std::size_t i : solution.active) {
+    const SolutePlan& plan = solution_.solutes[i];
+    if (plan.substance != substance) continue;
+    const std::optional<thermo::ApparentHeatCapacity> cp =
+        plan.heat_capacities != nullptr
+            ? thermo::apparent_heat_capacity(*plan.heat_capacities, solution.ratio[substance],
+                                             molar_mass_[substance])
+            : std::nullopt;
+    if (!cp) break;
+    const StateCurve& of = states_[state];
+    const double error = plan.heat_capacity_error ? v[*plan.heat_capacity_error] : 0;
+    return (of.shift ? v[*of.shift] : 0) + above +
+           (cp->cp + error * cp->u95) * (temperature - units::kReferenceTemperature);
+  }
+  return enthalpy(v, state, temperature) + above;
+}
+
+void Model::dissolve(const std::vector<double>& v, Work& work) const {
+  Dissolving& solution = work.dissolving;
+  const std::size_t n = input_.substances.size();
+  solution.active.clear();
+  solution.pool.clear();
+  solution.ratio.assign(n, -1);
+  solution.above_leaving.assign(n, 0);
+  solution.set_free.assign(solution_.solutes.size(), 0);
+  solution.tables = solution.taken = 0;
+  if (solution_.solutes.empty()) return;
+  const auto liquid = [&](std::size_t i) {
+    return work.leaving[i] - (leaving_[i].vapour ? work.vapour[i] : 0);
+  };
+  const double water = liquid(*solution_.water);
+  for (std::size_t i = 0; i < solution_.solutes.size() && water > 0; ++i) {
+    const double amount = liquid(solution_.solutes[i].substance);
+    if (!(amount > 0)) continue;
+    solution.active.push_back(i);
+    solution.pool.push_back({&solution_.solutes[i].curve, amount});
+  }
+  thermo::share_water(solution.pool, water, solution.share);
+  for (std::size_t a = 0; a < solution.active.size(); ++a) {
+    const SolutePlan& plan = solution_.solutes[solution.active[a]];
+    const double change = solution.share.heat[a] - plan.from_pure;
+    // Errors along one table are taken as independent steps, so that a dilution by nothing has none and one
+    // over the whole table has that of the table; those of the bridge to the pure liquid shrink with it.
+    const double u =
+        std::hypot(solution.share.u95[a] * std::sqrt(std::min(1.0, std::fabs(change) / plan.curve.span())),
+                   solution.share.bridge[a] - plan.bridge);
+    solution.ratio[plan.substance] = solution.share.ratio[a];
+    solution.above_leaving[plan.substance] = change + v[plan.error] * u;
+  }
+  // Set free: what came in as solution less what goes out as solution, both above the reference state.
+  for (std::size_t i = 0; i < solution_.solutes.size(); ++i) {
+    const std::size_t substance = solution_.solutes[i].substance;
+    double heat = 0;
+    for (std::size_t p = 0; p < part_states_.size(); ++p) {
+      const StateCurve& state = states_[part_states_[p]];
+      if (state.substance == substance && state.dissolves) heat += work.parts[p] * v[*state.shift];
+    }
+    const StateCurve& leaving = states_[leaving_[substance].state];
+    heat -=
+        liquid(substance) * ((leaving.dissolves ? v[*leaving.shift] : 0) + solution.above_leaving[substance]);
+    solution.set_free[i] = heat;
+    solution.tables += heat;
+  }
+  solution.taken = solution.tables;
+  if (solution_.typed) {
+    solution.taken = -v[*solution_.typed];
+  } else if (solution_.in_measured == Includes::Yes) {
+    solution.taken = 0;
+  } else if (solution_.in_measured == Includes::Unknown) {
+    solution.taken = std::max(0.0, solution.tables);  // the larger heat of both readings
+  }
+}
+
+Status Model::solutions_present(const Work& work) const {
+  const Dissolving& solution = work.dissolving;
+  if (!solution.share.without || solution.active.empty() || solution_.typed) return success();
+  const SolutePlan& plan = solution_.solutes[solution.active[*solution.share.without]];
+  const double ratio = solution.share.ratio[*solution.share.without];
+  const double mass = molar_mass_[plan.substance], least = plan.curve.least(), most = plan.curve.most();
+  const auto strength = [&](double r) {
+    return digits(r) + " mol of water per mole, " + display_number(100 * thermo::mass_fraction(r, mass), 1) +
+           " wt%";
+  };
+  return Error{"step.solution_range",
+               input_.substances[plan.substance].name + " leaves with " + strength(ratio) +
+                   "; its table of heats of solution " +
+                   (ratio < least ? "begins at " + strength(least) : "ends at " + strength(most)) + ".",
+               "outlet", "Change the amounts, or type the heat of mixing."};
+}
+
 Trouble Model::amounts(const std::vector<double>& v, Work& work) const {
   const Trouble fed = feed_amounts(v, work);
   if (fed != Trouble::None) return fed;
@@ -109,16 +207,15 @@ Trouble Model::feed_amounts(const std::vector<double>& v, Work& work) const {
 double Model::moles(const std::vector<double>& v, std::size_t feed, std::size_t part, Measure measure,
                     double amount) const {
   const FeedPlan& plan = feeds_[feed];
-  const std::size_t substance = input_.feeds[feed].parts[part].substance;
   const FigurePlan& figure = figures_[plan.first_part + part];
   switch (measure) {
     case Measure::Mole:
       return amount;
     case Measure::Mass:
-      return amount / molar_mass_[substance];
+      return amount / figure.mole_mass;
     case Measure::Volume:
       if (figure.gas) return amount * v[*plan.pressure] / (units::kGasConstant * v[plan.temperature]);
-      return amount * figure.density / molar_mass_[substance];
+      return amount * figure.density / figure.mole_mass;
   }
   return amount;
 }
@@ -127,6 +224,11 @@ Trouble Model::parts_by_amount(const std::vector<double>& v, std::size_t f, Work
   const FeedPlan& plan = feeds_[f];
   for (std::size_t p = 0; p < plan.parts; ++p) {
     const FeedPart& part = input_.feeds[f].parts[p];
+    if (part.carried) {
+      work.parts[plan.first_part + p] =
+          part.carried->ratio * work.parts[plan.first_part + part.carried->part];
+      continue;
+    }
     work.parts[plan.first_part + p] = moles(v, f, p, part.measure, v[*figures_[plan.first_part + p].figure]);
   }
   return Trouble::None;
@@ -138,7 +240,7 @@ Trouble Model::parts_by_share(const std::vector<double>& v, std::size_t f, Work&
   double* share = work.parts.data() + plan.first_part;
   double sum = 0;
   for (std::size_t p = 0; p < plan.parts; ++p) {
-    if (plan.rest == p) continue;
+    if (plan.rest == p || feed.parts[p].carried) continue;
     share[p] = v[*figures_[plan.first_part + p].figure];
     sum += share[p];
   }
@@ -150,7 +252,11 @@ Trouble Model::parts_by_share(const std::vector<double>& v, std::size_t f, Work&
   if (!(sum > 0)) return Trouble::BadShare;
   // From here on `share` is mol per unit of shares: mole shares as they are, mass shares over molar mass.
   if (feed.shares == ShareKind::MassShare) {
-    for (std::size_t p = 0; p < plan.parts; ++p) share[p] /= molar_mass_[feed.parts[p].substance];
+    for (std::size_t p = 0; p < plan.parts; ++p) {
+      const FeedPart& part = feed.parts[p];
+      share[p] = part.carried ? part.carried->ratio * share[part.carried->part]
+                              : share[p] / figures_[plan.first_part + p].mole_mass;
+    }
   }
   double measured = 0, brought = 0;
   for (std::size_t p = 0; p < plan.parts; ++p) {
@@ -160,9 +266,11 @@ Trouble Model::parts_by_share(const std::vector<double>& v, std::size_t f, Work&
       if (substance == feed.excess->substance) brought += share[p];
     } else if (feed.measure == Measure::Mass) {
       measured += share[p] * molar_mass_[substance];
+    } else if (feed.measure == Measure::Volume && feed.parts[p].carried) {
+      continue;  // in the volume of its solution
     } else if (feed.measure == Measure::Volume) {
       measured += figure.gas ? share[p] * units::kGasConstant * v[plan.temperature] / v[*plan.pressure]
-                             : share[p] * molar_mass_[substance] / figure.density;
+                             : share[p] * figure.mole_mass / figure.density;
     } else {
       measured += share[p];
     }
@@ -312,6 +420,7 @@ void Model::split(const std::vector<double>& v, double temperature, Work& work) 
 void Model::downstream(const std::vector<double>& v, Work& work) const {
   const double temperature = v[outlet_temperature_];
   split(v, temperature, work);
+  dissolve(v, work);
   work.outlet_heat = 0;
   double gases = 0;
   for (std::size_t i = 0; i < leaving_.size(); ++i) {
@@ -324,7 +433,7 @@ void Model::downstream(const std::vector<double>& v, Work& work) const {
       gases += heat;
     }
     if (vapour != work.leaving[i]) {
-      const double heat = (work.leaving[i] - vapour) * enthalpy(v, plan.state, temperature);
+      const double heat = (work.leaving[i] - vapour) * leaving_enthalpy(v, work, i, temperature);
       work.outlet_heat += heat;
       if (states_[plan.state].state.phase == molecule::Phase::Gas) gases += heat;
     }
@@ -332,7 +441,7 @@ void Model::downstream(const std::vector<double>& v, Work& work) const {
   work.departure = departure_ ? v[*departure_] : departure_share_ ? v[*departure_share_] * gases : 0;
   work.vessel_heat = vessel_ ? v[*vessel_] * (temperature - v[*vessel_temperature_]) : 0;
   work.needed = work.outlet_heat - work.inlet_heat + work.reaction_heat + work.vessel_heat + work.departure +
-                v[loss_] - v[shaft_];
+                v[loss_] - v[shaft_] + work.dissolving.tables - work.dissolving.taken;
 }
 
 Status Model::curves_present(const std::vector<double>& v, const Work& work) const {
@@ -350,7 +459,9 @@ Status Model::curves_present(const std::vector<double>& v, const Work& work) con
     const LeavingPlan& plan = leaving_[i];
     const double vapour = plan.vapour ? work.vapour[i] : 0;
     if (plan.vapour && missing(*plan.vapour, vapour, temperature)) without = *plan.vapour;
-    if (missing(plan.state, work.leaving[i] - vapour, temperature)) without = plan.state;
+    const bool own =
+        !work.dissolving.ratio.empty() && work.dissolving.ratio[i] >= 0 && solution_.has_heat_capacity(i);
+    if (!own && missing(plan.state, work.leaving[i] - vapour, temperature)) without = plan.state;
   }
   if (!without) return success();
   const StateCurve& state = states_[*without];

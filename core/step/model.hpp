@@ -9,6 +9,7 @@
 
 #include "core/base/result.hpp"
 #include "core/step/lookups.hpp"
+#include "core/step/solution_plan.hpp"
 #include "core/step/step_input.hpp"
 #include "core/units/dimension.hpp"
 
@@ -49,8 +50,9 @@ struct Work {
   double reaction_heat = 0;     ///< Σ ξ ΔrH(25 °C, reference phases)
   double outlet_heat = 0;
   double vessel_heat = 0;
-  double departure = 0;  ///< from ideal gas
-  double needed = 0;     ///< heat to the process that closes the balance
+  double departure = 0;   ///< from ideal gas
+  Dissolving dissolving;  ///< what is dissolved and diluted, and its heat
+  double needed = 0;      ///< heat to the process that closes the balance
   std::size_t culprit = 0;
   std::vector<double> matrix;  ///< of the progress equations
   std::vector<double> saturation;
@@ -62,6 +64,7 @@ struct StateCurve {
   State state;
   std::optional<Curve> curve;  ///< empty: no heat capacity; the state only occurs at 25 °C
   std::string why_no_curve;
+  bool dissolves = false;                ///< its distance from the reference state is heat of solution
   std::optional<std::size_t> shift;      ///< slot of h(25 °C) less that of the reference state [J/mol]
   std::optional<std::size_t> deviation;  ///< slot of the heat capacity's error, in units of its ±
 };
@@ -110,6 +113,15 @@ class Model {
   /// The three after each other.
   Trouble evaluate(const std::vector<double>& v, Work& work) const;
 
+  /// Enthalpy of one mole that leaves unsplit or as liquid, from 25 °C in the reference state [J/mol]: as
+  /// strong as it leaves where it is dissolved. After `downstream`.
+  double leaving_enthalpy(const std::vector<double>& v, const Work& work, std::size_t substance,
+                          double temperature) const;
+  const SolutionPlan& solution() const { return solution_; }
+  /// Whether every solution that leaves is within its table, after `evaluate`.
+  /// @errors step.solution_range
+  Status solutions_present(const Work& work) const;
+
   /// Enthalpy of one mole in a state from 25 °C in the reference state [J/mol].
   double enthalpy(const std::vector<double>& v, std::size_t state, double temperature) const;
   /// Heat of reaction at 25 °C for the reference states [J], and at a temperature in the phases written.
@@ -134,6 +146,7 @@ class Model {
   Trouble parts_by_share(const std::vector<double>& v, std::size_t feed, Work& work) const;
   double moles(const std::vector<double>& v, std::size_t feed, std::size_t part, Measure measure,
                double amount) const;
+  void dissolve(const std::vector<double>& v, Work& work) const;
   Trouble react(const std::vector<double>& v, Work& work) const;
   void progress_equations(const std::vector<double>& v, Work& work) const;
 
@@ -146,7 +159,8 @@ class Model {
   struct FigurePlan {
     std::optional<std::size_t> figure;
     bool gas = false;
-    double density = 0;  ///< liquid [kg/m³]; 0 when not needed
+    double density = 0;    ///< liquid [kg/m³]; 0 when not needed
+    double mole_mass = 0;  ///< of one mole with the water it brings along [kg/mol]
   };
   struct LeavingPlan {
     std::size_t state = 0;                      ///< unsplit, or as liquid
@@ -180,6 +194,7 @@ class Model {
   std::optional<std::size_t> outlet_pressure_, vessel_, vessel_temperature_, departure_, departure_share_;
   Side side_;
   bool splits_ = false, saturates_ = false;
+  SolutionPlan solution_;
 };
 
 }  // namespace heatledger::step

@@ -50,7 +50,7 @@ class ModelBuilder {
     if (const Status chosen = choose_sought(); !chosen.ok()) return chosen.error();
     for (const auto stage :
          {&ModelBuilder::substances, &ModelBuilder::reactions, &ModelBuilder::feeds, &ModelBuilder::outlet,
-          &ModelBuilder::reflux, &ModelBuilder::wall, &ModelBuilder::sought}) {
+          &ModelBuilder::reflux, &ModelBuilder::wall, &ModelBuilder::solutions, &ModelBuilder::sought}) {
       if (const Status done = (this->*stage)(); !done.ok()) return done.error();
     }
     return std::move(model_);
@@ -103,7 +103,73 @@ class ModelBuilder {
     return model_.slots_.size() - 1;
   }
 
+  /// Amounts of solutions bring their water along: a part of its own behind the typed ones.
+  Status water_of_solutions() {
+    for (std::size_t f = 0; f < input().feeds.size(); ++f) {
+      const std::size_t typed_parts = input().feeds[f].parts.size();
+      for (std::size_t p = 0; p < typed_parts; ++p) {
+        const FeedPart part = input().feeds[f].parts[p];
+        const std::optional<double> ratio = brought_water(part);
+        if (!ratio) continue;
+        if (input().feeds[f].shares == ShareKind::MoleShare) {
+          return Error{"step.solution_share",
+                       "A share by moles of a solution does not say whether its water counts.",
+                       "feed." + std::to_string(f) + ".part." + std::to_string(p),
+                       "Give the shares by mass, or the solute and its water in rows of their own."};
+        }
+        const Result<std::size_t> water = water_substance();
+        if (!water.ok()) return water.error();
+        FeedPart brought;
+        brought.substance = *water;
+        brought.state.phase = Phase::Liquid;
+        brought.carried = CarriedWater{p, *ratio};
+        brought.derived = true;
+        brought.row = part.row;
+        model_.input_.feeds[f].parts.push_back(std::move(brought));
+      }
+    }
+    return success();
+  }
+
+  /// Moles of water per mole of a part that is a solution of some strength.
+  std::optional<double> brought_water(const FeedPart& part) const {
+    const std::shared_ptr<const facts::Species>& species = input().substances[part.substance].species;
+    if (part.without_water || part.carried || species == nullptr || !(species->molar_mass > 0))
+      return std::nullopt;
+    State state = part.state;
+    if (state.phase == Phase::Unstated) {
+      for (const StepReaction& reaction : input().reactions) {
+        for (std::size_t i = 0; i < reaction.substances.size() && state.phase == Phase::Unstated; ++i) {
+          const molecule::Term& term = reaction.reaction->species[i].term;
+          if (reaction.substances[i] == part.substance) state = State{term.phase, term.strength};
+        }
+      }
+    }
+    if (state.phase != Phase::Aqueous || !state.strength) return std::nullopt;
+    return thermo::water_ratio(*state.strength, species->molar_mass);
+  }
+
+  std::optional<std::size_t> find_water() const {
+    for (std::size_t i = 0; i < input().substances.size(); ++i) {
+      const std::shared_ptr<const facts::Species>& species = input().substances[i].species;
+      if (species != nullptr && species->compound != nullptr && species->compound->formula == "H2O") return i;
+    }
+    return std::nullopt;
+  }
+
+  Result<std::size_t> water_substance() {
+    if (const std::optional<std::size_t> known = find_water()) return *known;
+    Result<std::shared_ptr<const facts::Species>> species = facts::resolve_species("water", false);
+    if (!species.ok()) return species.error();
+    SubstanceInput water;
+    water.name = "water";
+    water.species = std::move(species).value();
+    model_.input_.substances.push_back(std::move(water));
+    return input().substances.size() - 1;
+  }
+
   Status substances() {
+    if (const Status laid = water_of_solutions(); !laid.ok()) return laid;
     for (const SubstanceInput& substance : input().substances) {
       CHECK(substance.species != nullptr || substance.by_mass,
             "a substance is a species or a mixture by mass");
@@ -413,6 +479,17 @@ class ModelBuilder {
     model_.part_states_.push_back(*at);
     Model::FigurePlan figure;
     figure.gas = state.phase == Phase::Gas;
+    const double molar_mass = model_.molar_mass_[part.substance];
+    const std::optional<double> water = brought_water(part);
+    figure.mole_mass = water ? thermo::solution_mass(*water, molar_mass) : molar_mass;
+    if (part.carried) {
+      model_.figures_.push_back(figure);
+      return success();
+    }
+    if (by_volume && water && !substance.density) {
+      return Error{"step.no_density", "No density of this solution of " + substance.name + " is known.", id,
+                   "Type the density of the solution, or enter it by mass."};
+    }
     if (by_volume && !figure.gas) {
       if (substance.density) {
         figure.density = substance.density->value;
@@ -651,6 +728,85 @@ class ModelBuilder {
     }
     sought_ = in.duty ? "outlet.temperature" : "duty";
     return success();
+  }
+
+  /// What leaves in water, with the table of its heats of solution.
+  Status solutions() {
+    SolutionPlan& plan = model_.solution_;
+    plan.water = find_water();
+    const bool flow = input().kind == StepKind::ThroughFlow;
+    if (plan.water && states_are_liquid(*plan.water)) {
+      for (std::size_t i = 0; i < input().substances.size(); ++i) {
+        if (std::optional<SolutePlan> solute = solute_of(i)) plan.solutes.push_back(*std::move(solute));
+      }
+    }
+    if (plan.solutes.empty()) return success();
+    for (const StepReaction& reaction : input().reactions) {
+      if (!reaction.heat.typed || plan.in_measured == Includes::Yes) continue;
+      if (reaction.heat.includes_mixing != Includes::No) plan.in_measured = reaction.heat.includes_mixing;
+    }
+    for (StateCurve& state : model_.states_) {
+      const bool solute = std::any_of(plan.solutes.begin(), plan.solutes.end(),
+                                      [&](const SolutePlan& of) { return of.substance == state.substance; });
+      state.dissolves = solute && state.shift.has_value();
+    }
+    if (input().mixing_heat || input().sought == "mixing_heat") {
+      const Result<std::size_t> typed =
+          blank("mixing_heat", "heat of mixing", flow ? units::dimension::kPower : units::dimension::kEnergy,
+                input().mixing_heat, -kFar, kFar);
+      if (!typed.ok()) return typed.error();
+      plan.typed = *typed;
+    }
+    return success();
+  }
+
+  bool states_are_liquid(std::size_t substance) const {
+    return model_.leaving_[substance].vapour || model_.is_liquid(substance);
+  }
+
+  /// Dissolved in water as it leaves, or a liquid that its table follows down to the pure one.
+  std::optional<SolutePlan> solute_of(std::size_t index) {
+    const std::shared_ptr<const facts::Species>& species = input().substances[index].species;
+    const StateCurve& leaving = model_.states_[model_.leaving_[index].state];
+    const bool aqueous = leaving.state.phase == Phase::Aqueous;
+    if (species == nullptr || species->compound == nullptr ||
+        !(aqueous || leaving.state.phase == Phase::Liquid))
+      return std::nullopt;
+    for (const char phase : {'s', 'l', 'g'}) {
+      const facts::SolutionHeats* heats = facts::find_solution_heats(species->compound->formula, phase);
+      if (heats == nullptr || (heats->points.empty() && !heats->symmetrical)) continue;
+      if (!aqueous && !(phase == 'l' && facts::least_ratio(*heats) == 0)) continue;
+      SolutePlan plan;
+      plan.substance = index;
+      plan.curve = facts::SolutionHeatCurve(*heats);
+      plan.source = std::string(heats->source) + (heats->from_memory ? " (from memory)" : "");
+      if (aqueous) {
+        const Phase pure = phase == 'g' ? Phase::Gas : phase == 'l' ? Phase::Liquid : Phase::Solid;
+        const std::shared_ptr<const StateFacts> here = lookups_.state(species, leaving.state),
+                                                there = lookups_.state(species, State{pure, {}});
+        if (!here->formation.ok() || !there->formation.ok()) continue;
+        plan.from_pure = here->formation->value.value() - there->formation->value.value();
+        const std::optional<double> ratio =
+            leaving.state.strength ? thermo::water_ratio(*leaving.state.strength, species->molar_mass)
+                                   : std::nullopt;
+        if (const auto point = ratio ? plan.curve.at(*ratio) : std::nullopt) plan.bridge = point->bridge;
+      }
+      const std::string id = "solution." + std::to_string(index);
+      plan.error =
+          datum(id, "heat of solution of " + input().substances[index].name, units::dimension::kNumber, 0,
+                Quantity(0, 1, thermo::figure_key(SourceKind::Other, *species, Phase::Aqueous)));
+      const SubstanceInput& typed = input().substances[index];
+      if (!typed.heat_capacity && !typed.mass_heat_capacity && !input().mass_heat_capacity)
+        plan.heat_capacities = facts::find_solution_heat_capacities(species->compound->formula);
+      if (plan.heat_capacities != nullptr) {
+        plan.heat_capacity_error =
+            datum(id + ".cp", "heat capacity of the solution of " + input().substances[index].name,
+                  units::dimension::kNumber, 0,
+                  Quantity(0, 1, thermo::figure_key(SourceKind::HeatCapacity, *species, Phase::Aqueous)));
+      }
+      return plan;
+    }
+    return std::nullopt;
   }
 
   Status sought() {

@@ -64,8 +64,8 @@ class Sheet {
       out[id + ".amount"] = amount;
       out[id + ".heat"] =
           amount *
-          sensible(vapour ? *model_.vapour_state(line.substance) : model_.leaving_state(line.substance),
-                   v_[model_.outlet_temperature_slot()]) *
+          (vapour ? sensible(*model_.vapour_state(line.substance), v_[model_.outlet_temperature_slot()])
+                  : leaving_heat(line.substance, v_[model_.outlet_temperature_slot()])) *
           factor(variation_.out_heat, line.substance);
     }
     out["sought"] = v_[model_.sought()] * variation_.answer_factor;
@@ -89,6 +89,14 @@ class Sheet {
         return shift + of.curve->heat_capacity(temperature) * span;
     }
     return shift;
+  }
+
+  /// As it leaves in water where it does, whose heat capacity the variations leave alone.
+  double leaving_heat(std::size_t substance, double temperature) const {
+    const std::vector<double>& ratio = work_.dissolving.ratio;
+    if (!ratio.empty() && ratio[substance] >= 0)
+      return model_.leaving_enthalpy(v_, work_, substance, temperature);
+    return sensible(model_.leaving_state(substance), temperature);
   }
 
   double heat_of(std::size_t j) const {
@@ -122,16 +130,16 @@ class Sheet {
     for (std::size_t j = 0; j < work_.extents.size(); ++j)
       reaction += work_.extents[j] * reference_heat(j) * factor(variation_.free_only, j);
     const double temperature = v_[model_.outlet_temperature_slot()];
-    model_.split(v_, temperature, work_);
+    model_.downstream(v_, work_);  // for what dissolves, and the vessel
+    const Dissolving& solution = work_.dissolving;
     for (std::size_t i = 0; i < work_.leaving.size(); ++i) {
       const double vapour = model_.vapour_state(i) ? work_.vapour[i] : 0;
-      double heat = (work_.leaving[i] - vapour) * sensible(model_.leaving_state(i), temperature);
+      double heat = (work_.leaving[i] - vapour) * leaving_heat(i, temperature);
       if (vapour != 0) heat += vapour * sensible(*model_.vapour_state(i), temperature);
       outlet_ += heat * factor(variation_.out_heat, i);
     }
-    model_.downstream(v_, work_);  // for the vessel and the departure from ideal gas
-    return outlet_ - inlet_ + reaction + work_.vessel_heat + work_.departure +
-           v_[*model_.slot("loss")] * variation_.loss_factor - v_[*model_.slot("shaft")];
+    return outlet_ - inlet_ + reaction + work_.vessel_heat + work_.departure + solution.tables -
+           solution.taken + v_[*model_.slot("loss")] * variation_.loss_factor - v_[*model_.slot("shaft")];
   }
 
   /// Feeds and extents scaled, what leaves made up anew.

@@ -26,6 +26,80 @@ std::optional<double> formation(const Model& model, Lookups& lookups, std::size_
   return facts->formation.ok() ? std::optional<double>(facts->formation->value.value()) : std::nullopt;
 }
 
+/// The strength of a substance in one part of the feeds: mass fraction, 1 for what is not dissolved.
+double strength_of(const Model& model, const StateCurve& state) {
+  if (state.state.phase != molecule::Phase::Aqueous) return 1;
+  const double mass = model.molar_mass(state.substance);
+  const std::optional<double> ratio =
+      state.state.strength ? thermo::water_ratio(*state.state.strength, mass) : std::nullopt;
+  return ratio ? thermo::mass_fraction(*ratio, mass) : 0;
+}
+
+std::string per_cent(double fraction) {
+  return display_number(100 * fraction, fraction > 0.0995 ? 0 : fraction > 0.00995 ? 1 : 2);
+}
+
+/// "dilution of sulfuric acid, 96 to 78 wt%".
+std::string dilution_words(const DilutionLine& line, const std::string& name, bool included) {
+  const std::string after = line.after > 0 ? per_cent(line.after) + " wt%" : "that of the reaction";
+  std::string words;
+  if (line.before >= 1) {
+    words = "dissolving of " + name + " to " + after;
+  } else if (line.before == 0) {
+    words = "concentration of " + name + " from infinite dilution to " + after;
+  } else {
+    words = (line.after > line.before ? "concentration of " : "dilution of ") + name + ", " +
+            per_cent(line.before) + (line.after > 0 ? " to " : " wt% to ") + after;
+  }
+  return words + (included ? ": in the measured figure" : "");
+}
+
+void add_dilutions(StepResult& result, const Work& work) {
+  const Model& model = *result.model;
+  const SolutionPlan& plan = model.solution();
+  const Dissolving& solution = work.dissolving;
+  const bool flow = is_flow(model);
+  for (std::size_t s = 0; s < plan.solutes.size(); ++s) {
+    const SolutePlan& solute = plan.solutes[s];
+    DilutionLine line;
+    line.substance = solute.substance;
+    double fed = 0, mass = 0, with_water = 0;
+    for (std::size_t p = 0; p < work.parts.size(); ++p) {
+      const StateCurve& state = model.states()[model.part_state(p)];
+      if (state.substance != solute.substance || !(work.parts[p] > 0)) continue;
+      const double fraction = strength_of(model, state),
+                   here = work.parts[p] * model.molar_mass(solute.substance);
+      fed += work.parts[p];
+      mass += here;
+      with_water += fraction > 0 ? here / fraction : 0;
+    }
+    line.by_tables = solution.set_free[s];
+    if (!(fed > 0) && line.by_tables == 0) continue;
+    line.before = with_water > 0 ? mass / with_water : fed > 0 ? 0 : 1;
+    const double ratio = solution.ratio[solute.substance];
+    line.after = ratio >= 0 ? thermo::mass_fraction(ratio, model.molar_mass(solute.substance)) : 0;
+    if (ratio < 0 && line.by_tables == 0) continue;
+    // A typed heat or a measured one takes the place of all tables; each line keeps its share.
+    line.set_free = solution.tables != 0 ? line.by_tables * (solution.taken / solution.tables) : 0;
+    line.source = solute.source;
+    const bool included = plan.in_measured != Includes::No && !plan.typed && solution.taken == 0;
+    line.words = dilution_words(line, model.input().substances[solute.substance].name, included);
+    if (ratio >= 0) {
+      const std::size_t place = static_cast<std::size_t>(
+          std::find(solution.active.begin(), solution.active.end(), s) - solution.active.begin());
+      line.working.push_back(
+          amount_text(solution.pool[place].amount, flow) + " leaves in " + digits(ratio) +
+          " mol of water per mole: heat of solution " + display_number(solution.share.heat[place] / 1000, 2) +
+          " ± " +
+          display_number(std::hypot(solution.share.u95[place], solution.share.bridge[place]) / 1000, 2) +
+          " kJ/mol");
+    }
+    line.working.push_back("set free at 25 °C on the way from how it is fed: " +
+                           heat_text(line.by_tables, flow) + ", " + solute.source);
+    result.dilutions.push_back(std::move(line));
+  }
+}
+
 StreamLine stream_line(const Model& model, Lookups& lookups, const std::vector<double>& v, std::size_t state,
                        double amount, double temperature) {
   const StateCurve& of = model.states()[state];
@@ -43,6 +117,24 @@ StreamLine stream_line(const Model& model, Lookups& lookups, const std::vector<d
   return line;
 }
 
+/// What leaves in water leaves as strong as the water makes it.
+void as_dissolved(StreamLine& line, const Model& model, const std::vector<double>& v, const Work& work) {
+  const StateCurve& state = model.states()[model.leaving_state(line.substance)];
+  const std::vector<double>& ratio = work.dissolving.ratio;
+  const double shift = state.dissolves ? v[*state.shift] : 0;
+  if (ratio.empty() || ratio[line.substance] < 0) {
+    line.heat -= line.amount * shift;
+    return;
+  }
+  const double whole = model.leaving_enthalpy(v, work, line.substance, line.temperature),
+               plain = model.enthalpy(v, model.leaving_state(line.substance), line.temperature);
+  if (line.enthalpy) *line.enthalpy += line.amount * (whole - plain);
+  line.heat = line.amount * (whole - shift - work.dissolving.above_leaving[line.substance]);
+  if (ratio[line.substance] > 0)
+    line.state = State{molecule::Phase::Aqueous,
+                       molecule::Strength{molecule::Strength::Kind::WaterRatio, ratio[line.substance]}};
+}
+
 void add_streams(StepResult& result, const Work& work, Lookups& lookups) {
   const Model& model = *result.model;
   const std::vector<double>& v = result.values;
@@ -51,6 +143,8 @@ void add_streams(StepResult& result, const Work& work, Lookups& lookups) {
     for (std::size_t p = 0; p < model.input().feeds[f].parts.size(); ++p, ++part) {
       StreamLine line = stream_line(model, lookups, v, model.part_state(part), work.parts[part],
                                     v[model.feed_temperature_slot(f)]);
+      const StateCurve& state = model.states()[model.part_state(part)];
+      if (state.dissolves) line.heat -= work.parts[part] * v[*state.shift];
       line.stream = f;
       result.in.push_back(std::move(line));
     }
@@ -61,8 +155,10 @@ void add_streams(StepResult& result, const Work& work, Lookups& lookups) {
     const double vapour = vapour_state ? work.vapour[i] : 0;
     if (vapour > 0) result.out.push_back(stream_line(model, lookups, v, *vapour_state, vapour, temperature));
     if (work.leaving[i] - vapour > 0) {
-      result.out.push_back(
-          stream_line(model, lookups, v, model.leaving_state(i), work.leaving[i] - vapour, temperature));
+      StreamLine line =
+          stream_line(model, lookups, v, model.leaving_state(i), work.leaving[i] - vapour, temperature);
+      as_dissolved(line, model, v, work);
+      result.out.push_back(std::move(line));
     }
   }
 }
@@ -98,6 +194,13 @@ void add_heats(StepResult& result, const Work& work) {
   for (std::size_t j = 0; j < input.reactions.size(); ++j)
     add(HeatLine::Kind::Reaction, input.reactions[j].name,
         -work.extents[j] * model.reaction_heat(result.values, j));
+  double dilution = 0;
+  for (const DilutionLine& line : result.dilutions) {
+    dilution += line.set_free;
+    add(HeatLine::Kind::Dilution, line.words, line.set_free);
+  }
+  // A typed heat of mixing where the tables have none to share it out by.
+  add(HeatLine::Kind::Dilution, "heat of mixing, typed", work.dissolving.taken - dilution);
   add(HeatLine::Kind::Work, "shaft work", result.values[*model.slot("shaft")]);
   add(HeatLine::Kind::Duty, "duty", result.duty);
   add(HeatLine::Kind::Loss, "departure from ideal gas", -work.departure);
@@ -118,14 +221,19 @@ std::vector<std::string> duty_working(const StepResult& result, const Work& work
   const bool flow = is_flow(*result.model);
   const auto heat = [&](double value) { return heat_text(value, flow); };
   std::vector<std::string> lines;
-  lines.push_back("what leaves, from 25 °C: " + heat(work.outlet_heat));
-  lines.push_back("less what enters, from 25 °C: " + heat(work.inlet_heat));
+  double in = 0, out = 0;
+  for (const StreamLine& line : result.in) in += line.heat;
+  for (const StreamLine& line : result.out) out += line.heat;
+  lines.push_back("what leaves, from 25 °C: " + heat(out));
+  lines.push_back("less what enters, from 25 °C: " + heat(in));
   for (std::size_t j = 0; j < result.reactions.size(); ++j) {
     const ReactionLine& line = result.reactions[j];
     lines.push_back("plus " + result.model->input().reactions[j].name + ": " +
                     amount_text(line.extent, flow) + " × (" + display_number(line.heat_25.value() / 1000, 2) +
                     " kJ/mol) = " + heat(-line.set_free));
   }
+  for (const DilutionLine& line : result.dilutions)
+    lines.push_back("less " + line.words + ": " + heat(line.set_free));
   if (work.vessel_heat != 0) lines.push_back("plus the vessel: " + heat(work.vessel_heat));
   const double loss = result.values[*result.model->slot("loss")],
                shaft = result.values[*result.model->slot("shaft")];
@@ -189,7 +297,9 @@ Result<StepResult> solve_step(StepInput input, Lookups& lookups, const SolveOpti
         slot.id != model.slots()[model.sought()].id)
       ++result.exact_inputs;
   }
+  if (const Status present = model.solutions_present(work); !present.ok()) return present.error();
   add_streams(result, work, lookups);
+  add_dilutions(result, work);
   add_reactions(result, work);
   add_heats(result, work);
   result.closure = close(result, work);
@@ -205,6 +315,10 @@ std::vector<std::string> step_conventions(StepKind kind) {
       "The phase written governs: nothing changes its phase unless it is said to. Gases and mixtures are "
       "ideal.",
       "Conversion is consumed / fed, selectivity turned into the product / consumed, yield their product.",
+      "An amount of a solution brings its water along: by mass it is the solution, by moles what is "
+      "dissolved. "
+      "Heats of solution are those of 25 °C; water that is formed, fed, used up or evaporated dilutes or "
+      "concentrates.",
       "± is the 95 % interval of the data of what is written; reactions that are not listed, decomposition, "
       "mixing that "
       "is not listed, a rate law outside its range and human error are not in it."};

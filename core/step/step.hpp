@@ -13,10 +13,11 @@ struct StreamLine {
   std::size_t stream = 0;  ///< index of the feed; for what leaves 0
   std::size_t substance = 0;
   State state;
-  double amount = 0;               ///< [mol] or [mol/s]
-  double mass = 0;                 ///< [kg] or [kg/s]; 0 when no molar mass is known
-  double temperature = 0;          ///< [K]
-  double heat = 0;                 ///< from 25 °C in the reference state [J] or [W]
+  double amount = 0;       ///< [mol] or [mol/s]
+  double mass = 0;         ///< [kg] or [kg/s]; 0 when no molar mass is known
+  double temperature = 0;  ///< [K]
+  double heat =
+      0;  ///< from 25 °C in the reference state, heat of solution left out (DilutionLine) [J] or [W]
   std::optional<double> enthalpy;  ///< with the formation enthalpy [J] or [W]; empty when a species has none
 };
 
@@ -25,6 +26,18 @@ struct ReactionLine {
   uncertainty::Quantity heat_25;  ///< at 25 °C, phases as written, for the coefficients written [J]
   double heat_at_end = 0;         ///< at the outlet temperature [J]
   double set_free = 0;            ///< −extent × heat at 25 °C [J] or [W], > 0 exothermic
+};
+
+/// What one substance gives off by being dissolved, diluted or concentrated.
+struct DilutionLine {
+  std::size_t substance = 0;
+  std::string words;     ///< "dilution of H₂SO₄, 96 to 78 wt%"
+  double before = 0;     ///< mass fraction; 1 for what came undissolved
+  double after = 0;      ///< mass fraction as it leaves; 0: all of it reacted
+  double by_tables = 0;  ///< set free, > 0 gives off heat [J] or [W]
+  double set_free = 0;   ///< as the balance takes it
+  std::vector<std::string> working;
+  std::string source;
 };
 
 struct ElementLine {
@@ -45,7 +58,7 @@ struct Closure {
 
 /// One heat of the balance, for the bands to scale and the working: what comes in is > 0.
 struct HeatLine {
-  enum class Kind : std::uint8_t { Stream, Reaction, Duty, Loss, Work, Vessel } kind = Kind::Stream;
+  enum class Kind : std::uint8_t { Stream, Reaction, Dilution, Duty, Loss, Work, Vessel } kind = Kind::Stream;
   std::string label;
   double in = 0;  ///< [J] or [W], < 0: goes out
 };
@@ -66,6 +79,7 @@ struct StepResult {
   std::vector<double> values;  ///< all numbers at the solution
   std::vector<StreamLine> in, out;
   std::vector<ReactionLine> reactions;
+  std::vector<DilutionLine> dilutions;
   std::vector<HeatLine> heats;
   Closure closure;
   std::vector<Answer> answers;  ///< the sought figure first

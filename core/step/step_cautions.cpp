@@ -7,6 +7,7 @@
 #include "core/step/equilibrium.hpp"
 #include "core/step/words.hpp"
 #include "core/thermo/saturation.hpp"
+#include "core/units/constants.hpp"
 
 namespace heatledger::step {
 namespace {
@@ -89,6 +90,65 @@ void caution_heats(StepResult& result) {
   }
 }
 
+/// Limits, measured heats and states that the heat of dilution rests on.
+void caution_solutions(StepResult& result, const Work& work) {
+  const SolutionPlan& plan = result.model->solution();
+  const Dissolving& solution = work.dissolving;
+  const bool flow = result.model->input().kind == StepKind::ThroughFlow;
+  if (plan.solutes.empty()) return;
+  if (plan.typed) {
+    result.notes.push_back("The typed heat of mixing takes the place of the tables, which give " +
+                           heat_text(-solution.tables, flow) + ".");
+  } else if (plan.in_measured == Includes::Yes && solution.tables != 0) {
+    result.notes.push_back("Heat of dilution is in the measured figure; by the tables it would be " +
+                           heat_text(-solution.tables, flow) + ".");
+  } else if (plan.in_measured == Includes::Unknown && solution.tables != 0) {
+    result.cautions.push_back(
+        "The measured heat does not say whether it holds dilution: with it by the tables " +
+        heat_text(-solution.tables, flow) + " are added, without none; the larger heat is used.");
+  }
+  if (solution.share.two_limits && !plan.typed) {
+    result.cautions.push_back(
+        "Several solutes share the water. Shared by moles their heats of solution are " +
+        heat_text(solution.share.by_mole, flow) + ", with all water to the stronger " +
+        heat_text(solution.share.to_stronger, flow) +
+        "; the larger heat release is used, and the heat of mixing the solutes themselves is left out. Type "
+        "a "
+        "measured heat of the mixture where it matters.");
+  }
+  if (std::fabs(result.values[result.model->outlet_temperature_slot()] - units::kReferenceTemperature) > 1 &&
+      solution.taken != 0) {
+    result.notes.push_back(
+        "Heats of solution are those of 25 °C, carried to other temperatures by the heat capacity of the "
+        "solution.");
+  }
+}
+
+/// Partial molar heat capacities of ions are no bulk heat capacity.
+void caution_ions(StepResult& result) {
+  double ions = 0, all = 0;
+  std::string names;
+  for (const StreamLine& line : result.out) {
+    const bool at_infinite_dilution = line.state.phase == Phase::Aqueous && !line.state.strength;
+    for (const StateCurve& known : result.model->states()) {
+      if (known.substance != line.substance || known.state.phase != line.state.phase || !known.curve)
+        continue;
+      const double capacity = std::fabs(line.amount * known.curve->heat_capacity(line.temperature));
+      all += capacity;
+      if (at_infinite_dilution) {
+        ions += capacity;
+        names += (names.empty() ? "" : ", ") + result.model->input().substances[line.substance].name;
+      }
+      break;
+    }
+  }
+  if (!(ions > 0.1 * all) || result.model->input().mass_heat_capacity) return;
+  result.cautions.push_back(
+      "Over 10 % of the heat capacity of what leaves is that of " + names +
+      " at infinite dilution, partial molar figures that are no bulk heat capacity. Type "
+      "the cp of the mass.");
+}
+
 void caution_charge(StepResult& result) {
   const StepInput& input = result.model->input();
   if (input.kind != StepKind::Charge || input.reactions.empty() || input.charge.followed) return;
@@ -161,6 +221,8 @@ void add_cautions(StepResult& result, const Work& work) {
                               celsius(result.values[result.model->outlet_temperature_slot()]) +
                               " by entropies of the tables: what leaves would react back.");
   }
+  caution_solutions(result, work);
+  caution_ions(result);
   caution_charge(result);
   caution_conductance(result);
   if (result.closure.duty_by_formation) {
@@ -208,7 +270,18 @@ std::vector<std::string> figure_working(const StepResult& result, const Work& wo
     return 0.0;
   };
   const bool flow = model.input().kind == StepKind::ThroughFlow;
+  const bool reacts = !model.input().reactions.empty(), dissolves = !model.solution().solutes.empty();
+  const double free =
+      (reacts ? find(FigureId::HeatSetFree) : 0) + (dissolves ? find(FigureId::HeatOfDilution) : 0);
   switch (id) {
+    case FigureId::HeatOfDilution: {
+      std::vector<std::string> lines;
+      for (const DilutionLine& line : result.dilutions) {
+        lines.push_back(line.words + ": " + heat_text(line.set_free, flow));
+        lines.insert(lines.end(), line.working.begin(), line.working.end());
+      }
+      return lines;
+    }
     case FigureId::Conductance: {
       const bool along = flow && model.input().reactions.empty();
       return {
@@ -217,20 +290,18 @@ std::vector<std::string> figure_working(const StepResult& result, const Work& wo
               : "heat ÷ log mean temperature difference between the medium and the mixed process at its end"};
     }
     case FigureId::HeatPerMass:
-      return {heat_text(find(FigureId::HeatSetFree), flow) + " ÷ " + mass_text(mass_fed(model, work), flow)};
+      return {heat_text(free, flow) + " ÷ " + mass_text(mass_fed(model, work), flow)};
     case FigureId::MeanDuty:
-      return {heat_text(find(FigureId::HeatSetFree), false) + " ÷ " +
-              display_number(model.input().time->value / 3600, 2) + " h"};
+      return {heat_text(free, false) + " ÷ " + display_number(model.input().time->value / 3600, 2) + " h"};
     case FigureId::Time:
-      return {heat_text(find(FigureId::HeatSetFree), false) + " ÷ " +
-              heat_text(model.input().charge.cooling->value, true) + " of cooling"};
+      return {heat_text(free, false) + " ÷ " + heat_text(model.input().charge.cooling->value, true) +
+              " of cooling"};
     case FigureId::PeakDuty:
-      return {heat_text(find(FigureId::HeatSetFree), false) + " × " +
-              digits(model.input().charge.rate_constant->value * 3600) + " /h, first order, held at " +
-              celsius(held)};
+      return {heat_text(free, false) + " × " + digits(model.input().charge.rate_constant->value * 3600) +
+              " /h, first order, held at " + celsius(held)};
     case FigureId::AdiabaticRise: {
       const double capacity = charge_heat_capacity(model, work, v, held), mass = mass_fed(model, work);
-      return {"heat set free at " + celsius(held) + ": " + heat_text(find(FigureId::HeatSetFree), false),
+      return {"heat set free at " + celsius(held) + ": " + heat_text(free, false),
               "÷ (" + mass_text(mass, false) + " × " + digits(capacity / mass / 1000) + " kJ/(kg K))"};
     }
     case FigureId::AdiabaticEnd:

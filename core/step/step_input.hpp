@@ -53,6 +53,12 @@ enum class Measure : std::uint8_t {
 };
 enum class ShareKind : std::uint8_t { None, MoleShare, MassShare };
 
+/// Water that a solution brings along: so many moles for each mole of another part of the feed.
+struct CarriedWater {
+  std::size_t part = 0;
+  double ratio = 0;
+};
+
 struct FeedPart {
   std::size_t substance = 0;
   State state;
@@ -63,6 +69,10 @@ struct FeedPart {
   std::optional<uncertainty::Quantity> shared;
   bool derived = false;  ///< not typed itself: carried, or a further part of an entry
   std::size_t row = 0;   ///< entry of the sheet that it comes from
+  /// The water of a solution stands in a part of its own; else an amount of a solution brings its water
+  /// along: by mass it is the mass of the solution, by mole the moles of what is dissolved.
+  bool without_water = false;
+  std::optional<CarriedWater> carried;  ///< laid out by the model, without a figure
 };
 
 /// A feed that brings so much of a species that `excess` is left over when the key of a reaction is all gone.
@@ -164,12 +174,14 @@ struct StepInput {
   std::vector<Feed> feeds;
   std::vector<StepReaction> reactions;
   Outlet outlet;
-  Blank duty;                ///< heat to the process [W] or [J]
-  Blank loss;                ///< heat lost to the surroundings, > 0 [W] or [J]
-  Blank shaft_work;          ///< done on the process, > 0 [W] or [J]
-  Blank departure;           ///< departure from ideal gas: heat beyond that of ideal gases [W] or [J]
-  Blank departure_share;     ///< the same as a share of what the gases carry out from 25 °C
-  Blank time;                ///< charge: over which the heat is set free [s]
+  Blank duty;             ///< heat to the process [W] or [J]
+  Blank loss;             ///< heat lost to the surroundings, > 0 [W] or [J]
+  Blank shaft_work;       ///< done on the process, > 0 [W] or [J]
+  Blank departure;        ///< departure from ideal gas: heat beyond that of ideal gases [W] or [J]
+  Blank departure_share;  ///< the same as a share of what the gases carry out from 25 °C
+  Blank mixing_heat;      ///< typed heat of all dissolving and diluting, < 0 is set free [J] or [W]; replaces
+                          ///< the tables
+  Blank time;             ///< charge: over which the heat is set free [s]
   Blank mass_heat_capacity;  ///< "cp of the mass" [J/(kg K)]: takes the place of all liquids and solids
   Vessel vessel;
   ChargeInput charge;

@@ -22,6 +22,11 @@ struct ApparentHeatCapacity {
 std::optional<ApparentHeatCapacity> apparent_heat_capacity(const facts::SolutionHeatCapacities& table,
                                                            double ratio, double molar_mass);
 
+/// Mass of the solute per mass of solution. @param ratio  moles of water per mole; @param molar_mass [kg/mol]
+double mass_fraction(double ratio, double molar_mass);
+/// Mass of one mole of solute with its water [kg/mol].
+double solution_mass(double ratio, double molar_mass);
+
 /// One solute of a solution.
 struct Solute {
   const facts::SolutionHeatCurve* curve = nullptr;
@@ -30,13 +35,17 @@ struct Solute {
 
 /// Water given to the solutes of one solution; memory kept between calls.
 struct SharedWater {
-  std::vector<double> ratio;           ///< moles of water per mole, for each solute, as taken
-  std::vector<double> heat;            ///< of solution [J/mol], as taken
-  std::vector<double> u95;             ///< of that, the table's and the bridge's [J/mol]
-  double by_mole = 0;                  ///< heat of all solutes with the water shared by mole [J]
-  double to_stronger = 0;              ///< heat of all with the water given to the one that binds it more [J]
-  bool two_limits = false;             ///< several solutes: the one of larger heat release is taken
-  std::optional<std::size_t> without;  ///< a solute whose table has no figure for the water it gets
+  std::vector<double> ratio;   ///< moles of water per mole, for each solute, as taken
+  std::vector<double> heat;    ///< of solution [J/mol], as taken
+  std::vector<double> u95;     ///< of the table there [J/mol]
+  std::vector<double> bridge;  ///< further half width where no table is [J/mol]
+  double by_mole = 0;          ///< heat of all solutes with the water shared by mole [J]
+  double to_stronger = 0;      ///< heat of all with the water given to the one that binds it more [J]
+  bool two_limits = false;     ///< several solutes: the one of larger heat release is taken
+  /// A solute whose table has no figure for the water it gets; its heat is that at the end of the table, so
+  /// that a search finds its way back.
+  std::optional<std::size_t> without;
+  std::vector<double> other[4];  ///< the same lists for the limit not taken
 };
 
 /// One solute takes all water. Several bound the mixture by two limits: the water shared by mole, and all of
