@@ -131,11 +131,8 @@ void Model::dissolve(const std::vector<double>& v, Work& work) const {
   for (std::size_t a = 0; a < solution.active.size(); ++a) {
     const SolutePlan& plan = solution_.solutes[solution.active[a]];
     const double change = solution.share.heat[a] - plan.from_pure;
-    // Errors along one table are taken as independent steps, so that a dilution by nothing has none and one
-    // over the whole table has that of the table; those of the bridge to the pure liquid shrink with it.
-    const double u =
-        std::hypot(solution.share.u95[a] * std::sqrt(std::min(1.0, std::fabs(change) / plan.curve.span())),
-                   solution.share.bridge[a] - plan.bridge);
+    const double u = thermo::dilution_u95(change, solution.share.u95[a],
+                                          solution.share.bridge[a] - plan.bridge, plan.curve.span());
     solution.ratio[plan.substance] = solution.share.ratio[a];
     solution.above_leaving[plan.substance] = change + v[plan.error] * u;
   }

@@ -281,7 +281,9 @@ class ModelBuilder {
     const std::shared_ptr<const StateFacts> here = lookups_.state(of.species, state),
                                             there = lookups_.state(of.species, reference);
     Quantity shift;
-    if (here->from_gas.ok() && there->from_gas.ok()) {
+    if (const std::optional<Quantity> dissolving = solution_shift(*of.species, reference, state)) {
+      shift = *dissolving;
+    } else if (here->from_gas.ok() && there->from_gas.ok()) {
       shift = here->from_gas->value;
       shift.add(there->from_gas->value, -1);
     } else if (here->formation.ok() && there->formation.ok()) {
@@ -305,6 +307,43 @@ class ModelBuilder {
                             " to " + std::string(thermo::phase_word(state.phase)),
                         units::dimension::kEnergyPerMole, shift.value(), shift);
     return add_state(std::move(curve));
+  }
+
+  /// The first table of heats of solution of a species that knows strengths.
+  static const facts::SolutionHeats* solution_table(const facts::Species& species) {
+    if (species.compound == nullptr) return nullptr;
+    for (const char phase : {'s', 'l', 'g'}) {
+      const facts::SolutionHeats* heats = facts::find_solution_heats(species.compound->formula, phase);
+      if (heats != nullptr && (!heats->points.empty() || heats->symmetrical)) return heats;
+    }
+    return nullptr;
+  }
+
+  /// Heat of solution of a state above the pure solute of its table; empty where the table has none.
+  static std::optional<facts::SolutionHeatPoint> solution_height(const facts::SolutionHeats& heats,
+                                                                 const State& state, double molar_mass) {
+    const Phase pure = heats.phase == 'g' ? Phase::Gas : heats.phase == 'l' ? Phase::Liquid : Phase::Solid;
+    if (state.phase == pure) return facts::SolutionHeatPoint{};
+    if (state.phase != Phase::Aqueous) return std::nullopt;
+    const std::optional<double> ratio =
+        state.strength ? thermo::water_ratio(*state.strength, molar_mass) : std::nullopt;
+    return ratio ? facts::solution_heat_at(heats, *ratio) : heats.infinite;
+  }
+
+  /// From one state of a solute to another by its table alone: formation enthalpies of ions are of another
+  /// table, and the distance between two tables is no heat of dilution.
+  static std::optional<Quantity> solution_shift(const facts::Species& species, const State& from,
+                                                const State& to) {
+    const facts::SolutionHeats* heats = solution_table(species);
+    if (heats == nullptr || (from.phase != Phase::Aqueous && to.phase != Phase::Aqueous)) return std::nullopt;
+    const auto a = solution_height(*heats, from, species.molar_mass),
+               b = solution_height(*heats, to, species.molar_mass);
+    if (!a || !b) return std::nullopt;
+    const double change = b->heat - a->heat;
+    return Quantity(change,
+                    thermo::dilution_u95(change, std::max(a->u95, b->u95), a->bridge - b->bridge,
+                                         facts::SolutionHeatCurve(*heats).span()),
+                    thermo::figure_key(SourceKind::Phase, species, Phase::Aqueous));
   }
 
   Status reactions() {
@@ -772,24 +811,17 @@ class ModelBuilder {
     if (species == nullptr || species->compound == nullptr ||
         !(aqueous || leaving.state.phase == Phase::Liquid))
       return std::nullopt;
-    for (const char phase : {'s', 'l', 'g'}) {
-      const facts::SolutionHeats* heats = facts::find_solution_heats(species->compound->formula, phase);
-      if (heats == nullptr || (heats->points.empty() && !heats->symmetrical)) continue;
-      if (!aqueous && !(phase == 'l' && facts::least_ratio(*heats) == 0)) continue;
+    const facts::SolutionHeats* heats = solution_table(*species);
+    if (heats != nullptr && (aqueous || (heats->phase == 'l' && facts::least_ratio(*heats) == 0))) {
       SolutePlan plan;
       plan.substance = index;
       plan.curve = facts::SolutionHeatCurve(*heats);
       plan.source = std::string(heats->source) + (heats->from_memory ? " (from memory)" : "");
       if (aqueous) {
-        const Phase pure = phase == 'g' ? Phase::Gas : phase == 'l' ? Phase::Liquid : Phase::Solid;
-        const std::shared_ptr<const StateFacts> here = lookups_.state(species, leaving.state),
-                                                there = lookups_.state(species, State{pure, {}});
-        if (!here->formation.ok() || !there->formation.ok()) continue;
-        plan.from_pure = here->formation->value.value() - there->formation->value.value();
-        const std::optional<double> ratio =
-            leaving.state.strength ? thermo::water_ratio(*leaving.state.strength, species->molar_mass)
-                                   : std::nullopt;
-        if (const auto point = ratio ? plan.curve.at(*ratio) : std::nullopt) plan.bridge = point->bridge;
+        const auto height = solution_height(*heats, leaving.state, species->molar_mass);
+        if (!height) return std::nullopt;
+        plan.from_pure = height->heat;
+        plan.bridge = height->bridge;
       }
       const std::string id = "solution." + std::to_string(index);
       plan.error =

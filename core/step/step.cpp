@@ -315,10 +315,6 @@ std::vector<std::string> step_conventions(StepKind kind) {
       "The phase written governs: nothing changes its phase unless it is said to. Gases and mixtures are "
       "ideal.",
       "Conversion is consumed / fed, selectivity turned into the product / consumed, yield their product.",
-      "An amount of a solution brings its water along: by mass it is the solution, by moles what is "
-      "dissolved. "
-      "Heats of solution are those of 25 °C; water that is formed, fed, used up or evaporated dilutes or "
-      "concentrates.",
       "± is the 95 % interval of the data of what is written; reactions that are not listed, decomposition, "
       "mixing that "
       "is not listed, a rate law outside its range and human error are not in it."};

@@ -96,6 +96,9 @@ void caution_solutions(StepResult& result, const Work& work) {
   const Dissolving& solution = work.dissolving;
   const bool flow = result.model->input().kind == StepKind::ThroughFlow;
   if (plan.solutes.empty()) return;
+  result.notes.push_back(
+      "An amount of a solution brings its water along: by mass it is the solution, by moles what is "
+      "dissolved.");
   if (plan.typed) {
     result.notes.push_back("The typed heat of mixing takes the place of the tables, which give " +
                            heat_text(-solution.tables, flow) + ".");

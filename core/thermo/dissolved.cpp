@@ -6,6 +6,7 @@
 #include "core/base/number_text.hpp"
 #include "core/facts/ions.hpp"
 #include "core/facts/solution_heats.hpp"
+#include "core/facts/structure_match.hpp"
 #include "core/molecule/smiles.hpp"
 
 namespace heatledger::thermo {
@@ -79,12 +80,31 @@ Result<Sourced> from_curve(const Species& species, const SolutionHeats& curve, s
   return result;
 }
 
+/// Strong acids, drawn as molecules and ions all the same in water.
+std::string_view ions_of_acid(std::string_view formula) {
+  constexpr std::pair<std::string_view, std::string_view> kAcids[] = {
+      {"HCl", "[H+].[Cl-]"},
+      {"HBr", "[H+].[Br-]"},
+      {"HI", "[H+].[I-]"},
+      {"HNO3", "[H+].[O-][N+](=O)[O-]"},
+      {"HClO4", "[H+].[O-]Cl(=O)(=O)=O"},
+      {"H2SO4", "[H+].[H+].[O-]S(=O)(=O)[O-]"}};
+  const std::optional<std::string> hill = facts::hill_text(formula);
+  for (const auto& acid : kAcids) {
+    if (hill && hill == facts::hill_text(acid.first)) return acid.second;
+  }
+  return {};
+}
+
 /// A salt at infinite dilution is its ions: the sum of their formation enthalpies, all from one table.
 std::optional<Sourced> from_ions(const Species& species) {
-  if (species.compound == nullptr || species.compound->structure != facts::Structure::Formal)
-    return std::nullopt;
+  if (species.compound == nullptr) return std::nullopt;
   std::map<std::string, int> ions;  // formula of the table, how many
-  std::string_view rest = species.compound->smiles;
+  std::string_view rest = ions_of_acid(species.compound->formula);
+  if (rest.empty()) {
+    if (species.compound->structure != facts::Structure::Formal) return std::nullopt;
+    rest = species.compound->smiles;
+  }
   while (!rest.empty()) {
     const std::size_t end = std::min(rest.find('.'), rest.size());
     const Result<molecule::Graph> graph = molecule::parse_smiles(rest.substr(0, end));
@@ -144,10 +164,10 @@ Result<Sourced> dissolved_formation(const Species& species, const std::optional<
   const std::optional<double> ratio = strength ? water_ratio(*strength, species.molar_mass) : std::nullopt;
   if (!ratio && species.aqueous != nullptr && species.aqueous->formation_enthalpy)
     return from_table_of_ions(*species.aqueous, species);
-  const SolutionHeats* curve = curve_of(species, !ratio);
-  if (curve == nullptr && !ratio) {
+  if (!ratio) {
     if (std::optional<Sourced> ions = from_ions(species)) return *std::move(ions);
   }
+  const SolutionHeats* curve = curve_of(species, !ratio);
   if (curve == nullptr) return no_solution(species, ratio ? " at that strength" : "");
   return from_curve(species, *curve, ratio);
 }

@@ -6,7 +6,8 @@
 namespace heatledger::thermo {
 
 /// One mole dissolved at 298.15 K [J/mol], the water itself not counted. Ions only at infinite dilution;
-/// salts too, as the sum of their ions, where no curve of theirs is tabulated.
+/// salts, strong bases and strong acids as the sum of their ions, all of one table; with a strength the pure
+/// solute plus its heat of solution.
 /// @errors thermo.no_solution_data
 Result<Sourced> dissolved_formation(const facts::Species& species,
                                     const std::optional<molecule::Strength>& strength);

@@ -42,6 +42,10 @@ std::optional<ApparentHeatCapacity> apparent_heat_capacity(const facts::Solution
                               cp->cp * mass};
 }
 
+double dilution_u95(double change, double u95, double bridge, double span) {
+  return std::hypot(u95 * std::sqrt(std::min(1.0, std::fabs(change) / span)), bridge);
+}
+
 void share_water(const std::vector<Solute>& solutes, double water, SharedWater& out) {
   const std::size_t n = solutes.size();
   for (std::vector<double>* list : {&out.ratio, &out.heat, &out.u95, &out.bridge}) list->assign(n, 0);

@@ -27,6 +27,15 @@ double mass_fraction(double ratio, double molar_mass);
 /// Mass of one mole of solute with its water [kg/mol].
 double solution_mass(double ratio, double molar_mass);
 
+/// Half width of the 95 % interval of a heat between two points of one table [J/mol]. Its errors are taken as
+/// independent steps along the table, so that a dilution by nothing has none and one over the whole table has
+/// that of the table.
+/// @param change  the heat between the points [J/mol]
+/// @param u95     of the table there [J/mol]
+/// @param bridge  difference of the further half widths where no table is [J/mol]
+/// @param span    largest heat of the table in size [J/mol] > 0
+double dilution_u95(double change, double u95, double bridge, double span);
+
 /// One solute of a solution.
 struct Solute {
   const facts::SolutionHeatCurve* curve = nullptr;
