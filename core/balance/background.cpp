@@ -53,7 +53,8 @@ void note_phases(Background& background) {
     if (entry.species->repeat_unit) {
       background.phase_cautions.push_back(
           display_species(entry) +
-          " is a unit of a polymer and its phase is not written: it is reckoned in chains apart, as in a gas, "
+          " is a unit of a polymer and its phase is not written: it is reckoned in chains apart, as in a "
+          "gas, "
           "which no polymer is. Write (l) behind it: a melt, a glass or what is dissolved in its monomer.");
       continue;
     }

@@ -74,7 +74,8 @@ void append(step::Findings& to, step::Findings from) {
 
 }  // namespace
 
-safety::SafetyInput read_safety(const StepSheet& sheet, const StepContext& context, std::vector<Error>& errors) {
+safety::SafetyInput read_safety(const StepSheet& sheet, const StepContext& context,
+                                std::vector<Error>& errors) {
   BlankTexts blanks(sheet, *context.names, errors);
   safety::SafetyInput input;
   input.td24 = blanks.quantity("td24", d::kTemperature);

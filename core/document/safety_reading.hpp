@@ -8,7 +8,8 @@ namespace heatledger::document {
 
 /// Blanks "td24", "td24_source", "technical_limit", "permissible_pressure", "free_volume", "free_section",
 /// "time_to_maximum". Of a kind that has no such blank they are empty.
-safety::SafetyInput read_safety(const StepSheet& sheet, const StepContext& context, std::vector<Error>& errors);
+safety::SafetyInput read_safety(const StepSheet& sheet, const StepContext& context,
+                                std::vector<Error>& errors);
 
 /// Everything that a safety file and the utilities ask of a through-flow or charge step.
 step::Findings safety_findings(const StepSheet& sheet, const StepContext& context,

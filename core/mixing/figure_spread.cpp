@@ -48,7 +48,8 @@ std::optional<uncertainty::Quantity> spread_of(const step::Model& model, const s
     const double moves = follows && follows->missing != 0 ? -by->missing / follows->missing : 0;
     const double whole = by->figure + (follows ? follows->figure * moves : 0);
     if (whole == 0) continue;
-    for (const uncertainty::Part& part : slot.spread.parts()) parts.push_back({part.source, whole * part.u95});
+    for (const uncertainty::Part& part : slot.spread.parts())
+      parts.push_back({part.source, whole * part.u95});
   }
   return uncertainty::Quantity(base->figure, std::move(parts));
 }

@@ -48,9 +48,8 @@ void let_dissolve(StepInput& input) {
   for (std::size_t i = 0; i < input.substances.size(); ++i) {
     const std::shared_ptr<const facts::Species>& species = input.substances[i].species;
     if (species == nullptr || !has_heats(*species)) continue;
-    const bool said =
-        std::any_of(input.outlet.leaving.begin(), input.outlet.leaving.end(),
-                    [&](const step::Leaving& leaving) { return leaving.substance == i; });
+    const bool said = std::any_of(input.outlet.leaving.begin(), input.outlet.leaving.end(),
+                                  [&](const step::Leaving& leaving) { return leaving.substance == i; });
     bool reacts = false, fed = false, dissolved = false;
     for (const step::StepReaction& reaction : input.reactions)
       reacts = reacts || std::find(reaction.substances.begin(), reaction.substances.end(), i) !=
@@ -101,17 +100,18 @@ step::FindingGroup heats(const StepResult& result) {
   for (std::size_t k = 0; k < result.dilutions.size(); ++k) {
     const step::DilutionLine& line = result.dilutions[k];
     const std::size_t substance = line.substance;
-    Finding made = finding(
-        "dilution." + std::to_string(k), line.words, d::kEnergy,
-        spread_of(model, result.values, [substance](const Model& m, const std::vector<double>&, const Work& w) {
-          const step::Dissolving& solution = w.dissolving;
-          const double part = solution.tables != 0 ? solution.taken / solution.tables : 0;
-          for (std::size_t s = 0; s < m.solution().solutes.size(); ++s) {
-            if (m.solution().solutes[s].substance == substance)
-              return std::optional<double>(-solution.set_free[s] * part);
-          }
-          return std::optional<double>();
-        }));
+    Finding made = finding("dilution." + std::to_string(k), line.words, d::kEnergy,
+                           spread_of(model, result.values,
+                                     [substance](const Model& m, const std::vector<double>&, const Work& w) {
+                                       const step::Dissolving& solution = w.dissolving;
+                                       const double part =
+                                           solution.tables != 0 ? solution.taken / solution.tables : 0;
+                                       for (std::size_t s = 0; s < m.solution().solutes.size(); ++s) {
+                                         if (m.solution().solutes[s].substance == substance)
+                                           return std::optional<double>(-solution.set_free[s] * part);
+                                       }
+                                       return std::optional<double>();
+                                     }));
     made.working = line.working;
     made.sources = {line.source};
     made.mark = line.set_free > 0 ? "set free" : line.set_free < 0 ? "taken up" : "";
@@ -122,12 +122,12 @@ step::FindingGroup heats(const StepResult& result) {
     Finding made = finding(
         "reaction." + std::to_string(j), model.input().reactions[j].name, d::kEnergy,
         spread_of(model, result.values, [j](const Model& m, const std::vector<double>& v, const Work& w) {
-          return std::optional<double>(w.extents[j] *
-                                       m.reaction_heat_at(v, j, units::kReferenceTemperature));
+          return std::optional<double>(w.extents[j] * m.reaction_heat_at(v, j, units::kReferenceTemperature));
         }));
     made.working = {step::amount_text(line.extent, false) + " × " +
                     display_signed(line.heat_25.value() / 1000, 2) + " ± " +
-                    display_number(line.heat_25.u95() / 1000, 2) + " kJ/mol, solutions as the reaction writes them"};
+                    display_number(line.heat_25.u95() / 1000, 2) +
+                    " kJ/mol, solutions as the reaction writes them"};
     made.sources = {model.input().reactions[j].heat.source};
     made.mark = line.set_free > 0 ? "set free" : line.set_free < 0 ? "taken up" : "";
     group.findings.push_back(std::move(made));
@@ -154,23 +154,26 @@ step::FindingGroup strengths(const StepResult& result) {
     const step::DilutionLine& line = result.dilutions[k];
     const std::string name = model.input().substances[line.substance].name, id = std::to_string(k);
     const std::size_t substance = line.substance;
-    Finding before = finding("before." + id, name + " as fed", d::kMassFraction, uncertainty::Quantity(line.before));
+    Finding before =
+        finding("before." + id, name + " as fed", d::kMassFraction, uncertainty::Quantity(line.before));
     if (line.before >= 1) before.text = "undissolved";
     group.findings.push_back(std::move(before));
     Finding after = finding(
         "after." + id, name + " in the mixture", d::kMassFraction,
-        spread_of(model, result.values, [substance](const Model& m, const std::vector<double>&, const Work& w) {
-          const double ratio = w.dissolving.ratio[substance];
-          return ratio >= 0 ? std::optional<double>(thermo::mass_fraction(ratio, m.molar_mass(substance)))
-                            : std::nullopt;
-        }));
+        spread_of(
+            model, result.values, [substance](const Model& m, const std::vector<double>&, const Work& w) {
+              const double ratio = w.dissolving.ratio[substance];
+              return ratio >= 0 ? std::optional<double>(thermo::mass_fraction(ratio, m.molar_mass(substance)))
+                                : std::nullopt;
+            }));
     if (!after.why_missing.empty()) {
       after.why_missing.clear();
       after.text = "none left";
     } else {
-      after.working = {"by mass of it and the water given to it, " + step::digits(
-                           (1 - line.after) / line.after * model.molar_mass(substance) / kWaterMolarMass) +
-                       " mol of water per mole"};
+      after.working = {
+          "by mass of it and the water given to it, " +
+          step::digits((1 - line.after) / line.after * model.molar_mass(substance) / kWaterMolarMass) +
+          " mol of water per mole"};
     }
     group.findings.push_back(std::move(after));
   }
@@ -179,14 +182,16 @@ step::FindingGroup strengths(const StepResult& result) {
     for (std::size_t i = 0; i < w.leaving.size(); ++i) sum += w.leaving[i] * m.molar_mass(i);
     return std::optional<double>(sum);
   };
-  group.findings.push_back(finding("mass", "mass of the mixture", d::kMass, spread_of(model, result.values, mass)));
+  group.findings.push_back(
+      finding("mass", "mass of the mixture", d::kMass, spread_of(model, result.values, mass)));
   Finding cp = finding(
       "cp", "its heat capacity", d::kMassHeatCapacity,
       spread_of(model, result.values, [&](const Model& m, const std::vector<double>& v, const Work& w) {
         const double all = *mass(m, v, w);
         return all > 0 ? std::optional<double>(mixture_capacity(m, v, w) / all) : std::nullopt;
       }));
-  cp.working = {"of the solution by its table where one is known, of everything else by its own heat capacity"};
+  cp.working = {
+      "of the solution by its table where one is known, of everything else by its own heat capacity"};
   group.findings.push_back(std::move(cp));
   return group;
 }
@@ -195,15 +200,14 @@ step::FindingGroup adiabatic_group(const StepResult& result) {
   const Model& model = *result.model;
   step::FindingGroup group{"adiabatic", "When no heat is taken away", "", {}};
   const std::size_t slot = model.outlet_temperature_slot();
-  Finding end = finding("adiabatic.temperature", "adiabatic mixing temperature", d::kTemperature,
-                        spread_of(model, result.values,
-                                  [slot](const Model&, const std::vector<double>& v, const Work&) {
-                                    return std::optional<double>(v[slot]);
-                                  }));
+  Finding end = finding(
+      "adiabatic.temperature", "adiabatic mixing temperature", d::kTemperature,
+      spread_of(model, result.values, [slot](const Model&, const std::vector<double>& v, const Work&) {
+        return std::optional<double>(v[slot]);
+      }));
   if (end.why_missing.empty()) {
     end.unfavourable = end.value.value() + end.value.u95();
-    if (const std::optional<double> boiling = water_boils(result);
-        boiling && end.value.value() > *boiling)
+    if (const std::optional<double> boiling = water_boils(result); boiling && end.value.value() > *boiling)
       end.mark = "notional: it boils before";
   }
   for (const step::Answer& answer : result.answers) {

@@ -14,8 +14,8 @@ struct Mixed {
 };
 
 /// Mixes the feeds. What has heats of solution and is fed solid, liquid or as gas leaves dissolved unless the
-/// sheet says how it leaves. Without an end temperature and with the duty sought, the duty is zero and the end
-/// temperature is sought.
+/// sheet says how it leaves. Without an end temperature and with the duty sought, the duty is zero and the
+/// end temperature is sought.
 /// @param input  kind Charge; amounts [mol], heats [J]
 /// @errors those of step::solve_step
 /// @example Mixing.DilutesSulfuricAcid

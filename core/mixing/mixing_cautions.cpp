@@ -21,14 +21,16 @@ std::string_view formula_of(const StepResult& result, std::size_t substance) {
 bool fed_as(const StepResult& result, std::string_view formula, bool as_base) {
   for (const step::StreamLine& line : result.in) {
     const std::string_view fed = formula_of(result, line.substance);
-    const bool base = fed == "HNaO" || fed == "NaOH" || fed == "HKO" || fed == "KOH" || fed == "H3N" || fed == "NH3";
+    const bool base =
+        fed == "HNaO" || fed == "NaOH" || fed == "HKO" || fed == "KOH" || fed == "H3N" || fed == "NH3";
     if (line.amount > 0 && (as_base ? base : fed == formula)) return true;
   }
   return false;
 }
 
 bool is_acid(std::string_view formula) {
-  for (const std::string_view acid : {"H2O4S", "H2SO4", "HNO3", "ClH", "HCl", "BrH", "HBr", "HClO4", "ClHO4"}) {
+  for (const std::string_view acid :
+       {"H2O4S", "H2SO4", "HNO3", "ClH", "HCl", "BrH", "HBr", "HClO4", "ClHO4"}) {
     if (formula == acid) return true;
   }
   return false;
@@ -45,11 +47,12 @@ void caution_boiling(step::Findings& findings, const StepResult& unheated) {
   constexpr double kClose = 15;  // [K] local overheating where the streams meet
   const double end = unheated.values[unheated.model->outlet_temperature_slot()];
   if (end <= *boils - kClose) return;
-  findings.cautions.push_back(
-      "Without cooling the mixture reaches " + step::celsius(end) + (end > *boils ? ", above" : ", close to") +
-      " the boiling point of water at this pressure, " + step::celsius(*boils) +
-      ": it can boil and spit where the streams meet. What is dissolved raises the boiling point; measure it, "
-      "add slowly, stir and cool.");
+  findings.cautions.push_back("Without cooling the mixture reaches " + step::celsius(end) +
+                              (end > *boils ? ", above" : ", close to") +
+                              " the boiling point of water at this pressure, " + step::celsius(*boils) +
+                              ": it can boil and spit where the streams meet. What is dissolved raises the "
+                              "boiling point; measure it, "
+                              "add slowly, stir and cool.");
 }
 
 void caution_order(step::Findings& findings, const StepResult& result) {
@@ -83,10 +86,10 @@ void caution_salts(step::Findings& findings, const StepResult& result) {
     names += (names.empty() ? "" : ", ") + result.model->input().substances[line.substance].name;
   }
   if (names.empty()) return;
-  findings.cautions.push_back(
-      "What leaves dissolved without a table of strengths (" + names +
-      ") is reckoned at infinite dilution; a strong solution of it may give some kilojoules per mole more or less, "
-      "and may crystallise, which is not looked at.");
+  findings.cautions.push_back("What leaves dissolved without a table of strengths (" + names +
+                              ") is reckoned at infinite dilution; a strong solution of it may give some "
+                              "kilojoules per mole more or less, "
+                              "and may crystallise, which is not looked at.");
 }
 
 void explain_neutralisation(step::Findings& findings, const StepResult& result) {
@@ -94,20 +97,23 @@ void explain_neutralisation(step::Findings& findings, const StepResult& result) 
   for (const step::StreamLine& line : result.in) acid = acid || is_acid(formula_of(result, line.substance));
   if (!acid || !fed_as(result, "", true) || result.reactions.empty()) return;
   findings.notes.push_back(
-      "Strong acid and strong base: published heats of neutralisation are 55.8 kJ/mol of water at infinite dilution "
-      "and 25 °C; 56.6 to 57.3 kJ/mol are of solutions of about 1 mol/L, diluting included, or of 18 to 20 °C. Here "
+      "Strong acid and strong base: published heats of neutralisation are 55.8 kJ/mol of water at infinite "
+      "dilution "
+      "and 25 °C; 56.6 to 57.3 kJ/mol are of solutions of about 1 mol/L, diluting included, or of 18 to 20 "
+      "°C. Here "
       "the reaction is at the strength it is written with and the diluting stands on its own lines, so that "
       "nothing counts twice.");
 }
 
 void caution_gases(step::Findings& findings, const StepResult& result, const StepResult* unheated) {
-  const double end = (unheated != nullptr ? *unheated : result)
-                         .values[result.model->outlet_temperature_slot()];
+  const double end =
+      (unheated != nullptr ? *unheated : result).values[result.model->outlet_temperature_slot()];
   constexpr double kFuming = 323.15;
   for (const step::DilutionLine& line : result.dilutions) {
     const std::string_view formula = formula_of(result, line.substance);
     const bool volatile_one = formula == "HCl" || formula == "ClH" || formula == "HNO3" || formula == "NH3" ||
-                              formula == "H3N" || formula == "HBr" || formula == "BrH" || formula == "HF" || formula == "FH";
+                              formula == "H3N" || formula == "HBr" || formula == "BrH" || formula == "HF" ||
+                              formula == "FH";
     if (volatile_one && line.after > 0.2 && end > kFuming) {
       findings.cautions.push_back(result.model->input().substances[line.substance].name +
                                   " at this strength and " + step::celsius(end) +

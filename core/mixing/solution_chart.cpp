@@ -29,8 +29,8 @@ void add_charts(step::Findings& findings, const step::StepResult& result) {
     const std::string& name = model.input().substances[line.substance].name;
     const double mass = model.molar_mass(line.substance);
     const double strongest = thermo::mass_fraction(plan->curve.least(), mass);
-    const double weakest = std::isinf(plan->curve.most()) ? 0.01 * strongest
-                                                          : thermo::mass_fraction(plan->curve.most(), mass);
+    const double weakest =
+        std::isinf(plan->curve.most()) ? 0.01 * strongest : thermo::mass_fraction(plan->curve.most(), mass);
     const auto heat = [&](double fraction) -> std::optional<double> {
       const auto point = plan->curve.at(fraction >= 1 ? 0 : ratio_at(fraction, mass));
       return point ? std::optional<double>(point->heat) : std::nullopt;

@@ -137,8 +137,8 @@ InputEffect effect_of(const ChangedCell& input, std::string_view first, const Pl
   }
   const Reading now = read_page(session.page());
   for (const ChangedCell& moved : differences(results, now.results)) {
-    effect.moved.push_back({moved.cell, moved.place, moved.before, moved.after,
-                            difference_text(moved.before, moved.after)});
+    effect.moved.push_back(
+        {moved.cell, moved.place, moved.before, moved.after, difference_text(moved.before, moved.after)});
   }
   return effect;
 }

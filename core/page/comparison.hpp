@@ -1,5 +1,5 @@
-// Two worksheets side by side: what was typed differently, which results differ, and how far each changed input
-// alone moves each result.
+// Two worksheets side by side: what was typed differently, which results differ, and how far each changed
+// input alone moves each result.
 #pragma once
 
 #include <string>
@@ -13,8 +13,8 @@ namespace heatledger::page {
 
 /// A cell that reads differently in two sheets; empty where a sheet does not have it.
 struct ChangedCell {
-  std::string cell;    ///< id
-  std::string place;   ///< "Step 1: charge in V-7, outlet or end temperature"
+  std::string cell;   ///< id
+  std::string place;  ///< "Step 1: charge in V-7, outlet or end temperature"
   std::string before, after;
 };
 
@@ -37,9 +37,9 @@ struct Comparison {
   std::vector<std::string> notes;
 };
 
-/// Compares the texts of two worksheet files, the first being the one that the effects start from. Every changed
-/// input is put into the first sheet alone; what it moves there is reported, so effects of several inputs need
-/// not add up.
+/// Compares the texts of two worksheet files, the first being the one that the effects start from. Every
+/// changed input is put into the first sheet alone; what it moves there is reported, so effects of several
+/// inputs need not add up.
 /// @errors file.*, with "first" or "second" in front of the place
 Result<Comparison> compare_sheets(std::string_view first, std::string_view second);
 

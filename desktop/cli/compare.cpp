@@ -39,11 +39,13 @@ int run(const Options& options) {
 
 void add_compare(CLI::App& app, Chosen& chosen) {
   CLI::App* command = app.add_subcommand(
-      "compare", "Compares two worksheets: changed inputs, changed results, and which input moved which result");
+      "compare",
+      "Compares two worksheets: changed inputs, changed results, and which input moved which result");
   const auto options = std::make_shared<Options>();
   command->add_option("first", options->first, "Worksheet file that the changes start from")->required();
   command->add_option("second", options->second, "Worksheet file with the changes")->required();
-  command->add_option("--html", options->html, "Write the comparison as a page that prints")->type_name("OUT");
+  command->add_option("--html", options->html, "Write the comparison as a page that prints")
+      ->type_name("OUT");
   command->add_flag("--json", options->json, "Print the comparison as JSON");
   command->callback([options, &chosen] { chosen = [options] { return run(*options); }; });
 }

@@ -158,8 +158,9 @@ TEST(Mixing, MeetsWorkedExamples) {
       {"naoh-dissolution-20", dissolved("sodium hydroxide", Phase::Solid, 0.2, 3600)},
       {"sulfuric-caustic", sulfuric_caustic()}};
   const test::Table table = test::read_table("tests/data/checks/mixings.tsv");
-  // The caustic example reads its table straight between 5 and 10 mol of water, which is 0.6 to 0.8 kJ/mol short
-  // of the curve there (Olsson, Jernqvist, Aly 1997: -41.98): so are its three heats, each in its own unit.
+  // The caustic example reads its table straight between 5 and 10 mol of water, which is 0.6 to 0.8 kJ/mol
+  // short of the curve there (Olsson, Jernqvist, Aly 1997: -41.98): so are its three heats, each in its own
+  // unit.
   const std::map<std::string, double> straight = {
       {"Hs_kJ_mol", 0.6}, {"heat_kJ_per_kg_solution", 3.0}, {"dT_K", 0.8}};
   int seen = 0;
@@ -210,7 +211,8 @@ TEST(Mixing, ExplainsHeatsOfNeutralisation) {
   EXPECT_NEAR(strong.result.duty,
               value(strong, "reaction.0") + value(strong, "dilution.0") + value(strong, "dilution.1"), 1);
   EXPECT_TRUE(says(strong.findings.cautions, "infinite dilution"));
-  for (const std::string& note : strong.findings.notes) EXPECT_EQ(note.find("No adiabatic"), std::string::npos) << note;
+  for (const std::string& note : strong.findings.notes)
+    EXPECT_EQ(note.find("No adiabatic"), std::string::npos) << note;
   EXPECT_TRUE(says(strong.findings.cautions, "boil"));
 }
 

@@ -82,7 +82,8 @@ TEST(Comparison, WhatWasAddedStandsOnOtherChanges) {
   ASSERT_TRUE(got.ok());
   bool added = false;
   for (const InputEffect& effect : got->inputs) {
-    added = added || (effect.input.cell == "s2.title" && effect.input.before.empty() && !effect.why_not.empty());
+    added =
+        added || (effect.input.cell == "s2.title" && effect.input.before.empty() && !effect.why_not.empty());
   }
   EXPECT_TRUE(added);
 }
