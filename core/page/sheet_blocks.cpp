@@ -2,6 +2,7 @@
 
 #include "core/base/number_text.hpp"
 #include "core/page/cells.hpp"
+#include "core/page/figures.hpp"
 #include "core/units/display.hpp"
 
 namespace heatledger::page {

@@ -4,6 +4,7 @@
 #include <cmath>
 #include <set>
 
+#include "core/balance/ledger.hpp"
 #include "core/balance/same_reaction.hpp"
 #include "core/base/number_text.hpp"
 #include "core/document/typed_energy.hpp"
@@ -55,7 +56,7 @@ document::TypedHeat brought_to(const balance::Reaction& reaction, const balance:
     return heat;
   }
   const Result<uncertainty::Figure> value = document::parse_molar_energy(heat.value);
-  if (times == 1 || !value.ok()) return heat;
+  if (times == 1 || !value.ok() || !std::isfinite(value->value * times)) return heat;
   heat.value = machine_number(value->value * times / 1000, 8);
   if (value->u95 > 0) heat.value += " \u00b1 " + machine_number(value->u95 * times / 1000, 4);
   heat.value += " kJ";

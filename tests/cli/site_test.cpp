@@ -45,11 +45,14 @@ TEST(Site, ItsRowsAreCopiedIntoAWorksheet) {
   ASSERT_TRUE(session.edit("r1.equation", kHydrogenation).ok());
   write_whole(folder / "s.heatledger.json", session.save());
   const Ran ran = heatledger({"work", folder / "s.heatledger.json", "--site", folder / "site.json"});
+  const Ran report = heatledger(
+      {"work", folder / "s.heatledger.json", "--site", folder / "site.json", "--html", folder / "r.html"});
   ASSERT_EQ(ran.status, 0) << ran.err;
   EXPECT_NE(ran.out.find("Taken here, by the measured heat"), std::string::npos);
   EXPECT_NE(ran.out.find("−545"),
             std::string::npos);  // half of the site's −1090, its equation written twofold
-  EXPECT_NE(ran.out.find("site table Harbour Works"), std::string::npos) << ran.out;
+  ASSERT_EQ(report.status, 0) << report.err;
+  EXPECT_NE(read_whole(folder / "r.html").find("site table Harbour Works"), std::string::npos);
 }
 
 TEST(Site, WhatCannotBeReadIsNamedWithItsFile) {

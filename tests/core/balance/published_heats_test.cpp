@@ -196,8 +196,9 @@ TEST(PublishedHeats, OfPolymerisation) {
                 std::fabs(ours - value) <= tolerance ? "" : " beyond tolerance");
     if (row[6] == "yes") continue;
     // Three crowded carbons in a row lie outside the ± too, which the sheet says (WarnsOfACrowdedChain).
-    if (row[0] != "isobutene")
+    if (row[0] != "isobutene") {
       EXPECT_NEAR(ours, value, std::hypot(tolerance, u95)) << row[0] << ", " << row[8];
+    }
     EXPECT_EQ(std::fabs(ours - value) > tolerance, !row[7].empty())
         << row[0] << ": a remark says why a figure is missed, and no other has one";
   }
