@@ -625,6 +625,7 @@ class Reader {
   /// The sheet counts rows, the balance parts: air is one row and several parts.
   void sought_part() {
     const std::string& sought = sheet_.sought;
+    if (sought.empty()) return;
     const std::optional<std::string> slot = slot_of_row(input(), sought);
     if (slot) {
       input().sought = *slot;

@@ -117,9 +117,13 @@ const Page& PageBuilder::build(PageInput input) {
   for (const auto& reaction : sheet.reactions) reaction_ids += reaction->id + " ";
   for (std::size_t i = 0; i < sheet.steps.size(); ++i) {
     const document::StepSheet& step = *sheet.steps[i];
+    const auto refused = input.rejected->find(step.id + ".exact");
+    const RejectedText* rejected = refused == input.rejected->end() ? nullptr : &refused->second;
     add_section(step.id, {sheet.steps[i].handle(), input.results->steps[i]},
-                std::to_string(i) + "/" + reaction_ids + "/" + above, [&] {
-                  StepView view{step, *input.results->steps[i], i + 1, {}, {}};
+                std::to_string(i) + "/" + reaction_ids + "/" + above +
+                    (rejected == nullptr ? std::string() : "/" + rejected->text),
+                [&] {
+                  StepView view{step, *input.results->steps[i], i + 1, {}, {}, rejected};
                   for (const auto& reaction : sheet.reactions) view.reactions.push_back(reaction->id);
                   for (std::size_t k = 0; k < i; ++k) view.steps_above.push_back(sheet.steps[k]->id);
                   return step_blocks(view);

@@ -244,8 +244,15 @@ class Blocks {
     form_row(form, "exact",
              std::to_string(result_->exact_inputs) + (one ? " typed input taken as exact; give it a ±"
                                                           : " typed inputs taken as exact; give them a ±"),
-             typed_cell(id_ + ".exact", "", "1 % or, for temperatures, 1 K", CellKind::Number), true);
+             typed_cell(id_ + ".exact", view_.rejected == nullptr ? "" : view_.rejected->text,
+                        "1 % or, for temperatures, 1 K", CellKind::Number),
+             true);
     add(std::move(form));
+    if (view_.rejected != nullptr) {
+      blocks_.push_back(note_block(id_ + ".exact.rejected", NoteKind::Error,
+                                   view_.rejected->error.message + " " + view_.rejected->error.hint,
+                                   {id_ + ".exact"}));
+    }
   }
 
   /// What a row of a feed brings, of air all its parts together; empty when there is no result.

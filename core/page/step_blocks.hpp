@@ -16,6 +16,8 @@ struct StepView {
   std::size_t number = 1;
   std::vector<std::string> reactions;    ///< ids of the sheet's reactions, for choices
   std::vector<std::string> steps_above;  ///< ids of the steps above this one
+  /// What was typed as the ± of all exact inputs and could not be taken; null: nothing.
+  const RejectedText* rejected = nullptr;
 };
 
 std::vector<Block> step_blocks(const StepView& view);

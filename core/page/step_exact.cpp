@@ -59,7 +59,7 @@ std::string with_half_width(const std::string& text, double half_width) {
 Result<int> give_half_width_to_step(document::StepSheet& step, const std::string& spread) {
   const Result<units::TypedValue> read = units::parse_quantity(spread);
   const bool share = read.ok() && read->dimension() == d::kNumber,
-             kelvin = read.ok() && read->dimension() == d::kTemperatureDifference;
+             kelvin = read.ok() && units::parse_quantity(spread, d::kTemperatureDifference).ok();
   if ((!share && !kelvin) || !(read->value > 0)) {
     return Error{"edit.half_width", "The ± for all of them is a share, or a difference for temperatures.", "",
                  "Type such as 1 % or 1 K; single figures get theirs in their own cell."};

@@ -120,6 +120,17 @@ Result<Boiling> boiling(const facts::Species& species, double pressure) {
   }
   const Result<thermo::Saturation> at = thermo::boiling_temperature(species, pressure);
   if (!at.ok()) return at.error();
+  // Near its boiling point the tabulated heat stands closer than one carried there from 25 °C.
+  constexpr double kNear = 10;  // [K], over which it changes by some 2 %
+  const facts::Compound* c = species.compound;
+  if (c != nullptr && c->boiling_point && c->vaporisation_enthalpy_boiling && species.molar_mass > 0 &&
+      std::fabs(c->boiling_point->value - at->value) < kNear) {
+    const facts::Datum& tabulated = *c->vaporisation_enthalpy_boiling;
+    const Quantity heat(tabulated.value, tabulated.u95,
+                        thermo::figure_key(uncertainty::SourceKind::Phase, species, molecule::Phase::Liquid));
+    return Boiling{
+        at->value, heat.scaled(1 / species.molar_mass), {at->source, std::string(tabulated.source)}};
+  }
   const Result<thermo::Sourced> latent = thermo::vaporisation_enthalpy(species, at->value);
   if (!latent.ok()) return latent.error();
   if (!(latent->value.value() > 0) || !(species.molar_mass > 0))
