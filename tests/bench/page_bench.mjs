@@ -104,6 +104,8 @@ async function editTimes(id, equations) {
     await page.keyboard.press("F2");
     await page.keyboard.press("Control+a");
     await page.keyboard.insertText(equations[i % 2]);
+    // Enter comes when the page has shown the last letter and rests, as it does for a person.
+    await page.evaluate(() => new Promise((resolve) => requestAnimationFrame(() => requestIdleCallback(resolve))));
     await page.evaluate(() => void (/** @type {any} */ (window).times.length = 0));
     await page.keyboard.press("Enter");
     await page.evaluate(() => new Promise((resolve) => requestAnimationFrame(() => setTimeout(resolve, 0))));

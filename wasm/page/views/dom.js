@@ -15,14 +15,50 @@ export function make(tag, className, text) {
 }
 
 /**
- * @param {string} tag
- * @param {Record<string, string | number>} attributes
- * @returns {SVGElement}
+ * An element as it should be. Every shape of one tag under one parent names the same attributes.
+ * @typedef {{tag: string, attributes?: Record<string, string>, text?: string, children?: Shape[]}} Shape
  */
-export function makeSvg(tag, attributes) {
-  const node = document.createElementNS("http://www.w3.org/2000/svg", tag);
-  for (const [name, value] of Object.entries(attributes)) node.setAttribute(name, String(value));
-  return node;
+
+const SVG = "http://www.w3.org/2000/svg";
+
+/**
+ * Makes the children of `parent` those wanted. Elements that are there already are written over where they differ, which
+ * costs far less than new ones: those would be styled, boxed and laid out from nothing.
+ * @param {Element} parent
+ * @param {Shape[]} wanted
+ */
+export function setShapes(parent, wanted) {
+  let at = parent.firstElementChild;
+  for (const shape of wanted) {
+    let node = at;
+    if (!node || node.localName !== shape.tag) {
+      node = document.createElementNS(shape.tag === "svg" ? SVG : parent.namespaceURI, shape.tag);
+      if (at) at.replaceWith(node);
+      else parent.append(node);
+    }
+    at = node.nextElementSibling;
+    const {attributes = {}, children, text = ""} = shape;
+    for (const name in attributes) setAttribute(node, name, attributes[name]);
+    if (children) setShapes(node, children);
+    else setText(node, text);
+  }
+  while (at) {
+    const next = at.nextElementSibling;
+    at.remove();
+    at = next;
+  }
+}
+
+/**
+ * @param {string} tag
+ * @param {string} className
+ * @param {string | Shape[]} content
+ * @returns {Shape}
+ */
+export function shape(tag, className, content) {
+  /** @type {Record<string, string>} */
+  const attributes = className ? {class: className} : {};
+  return typeof content === "string" ? {tag, attributes, text: content} : {tag, attributes, children: content};
 }
 
 /**

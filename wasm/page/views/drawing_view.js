@@ -1,8 +1,11 @@
 // One drawing of the page as inline SVG. Coordinates come in points; roles become classes, ink is the style sheet's.
 
-import {make, makeSvg} from "./dom.js";
+import {make, setShapes, shape} from "./dom.js";
 
-/** @typedef {import("../types.js").DrawingBlock} DrawingBlock */
+/**
+ * @typedef {import("../types.js").DrawingBlock} DrawingBlock
+ * @typedef {import("./dom.js").Shape} Shape
+ */
 
 const anchors = {left: "start", right: "end", centre: "middle"};
 
@@ -11,46 +14,62 @@ export class DrawingView {
   constructor(id) {
     this.node = make("figure", "block drawing-block");
     this.node.dataset.block = id;
-    this.title = make("figcaption");
   }
 
   /** @param {DrawingBlock} drawing */
   show(drawing) {
-    this.title.textContent = drawing.title ?? "";
-    const svg = makeSvg("svg", {
-      viewBox: `0 0 ${drawing.width} ${drawing.height}`,
-      width: `${drawing.width}pt`,
-      height: `${drawing.height}pt`,
-      role: "img",
-      "aria-label": [drawing.title, ...(drawing.words ?? []).map((words) => words.text)].filter(Boolean).join("; "),
-    });
-    for (const fill of drawing.fills ?? []) {
-      svg.append(makeSvg("polygon", {class: `fill-${fill.ink ?? "band"}`, points: fill.xy.join(" ")}));
-    }
-    for (const stroke of drawing.strokes ?? []) svg.append(...drawStroke(stroke));
-    for (const words of drawing.words ?? []) {
-      const text = makeSvg("text", {
-        class: `ink-${words.ink ?? "text"}`,
-        x: words.x,
-        y: words.y,
-        "text-anchor": anchors[words.anchor ?? "left"],
-        "font-size": words.size ?? 11,
-      });
-      text.textContent = words.text;
-      svg.append(text);
-    }
-    this.node.replaceChildren(...(drawing.title ? [this.title] : []), svg);
+    const texts = drawing.words ?? [];
+    /** @type {Shape} */
+    const svg = {
+      tag: "svg",
+      attributes: {
+        viewBox: `0 0 ${drawing.width} ${drawing.height}`,
+        width: `${drawing.width}pt`,
+        height: `${drawing.height}pt`,
+        role: "img",
+        "aria-label": [drawing.title, ...texts.map((words) => words.text)].filter(Boolean).join("; "),
+      },
+      children: [
+        ...(drawing.fills ?? []).map((fill) => polygon(fill.ink ?? "band", fill.xy)),
+        ...(drawing.strokes ?? []).flatMap(drawStroke),
+        ...texts.map((words) => ({
+          tag: "text",
+          attributes: {
+            class: `ink-${words.ink ?? "text"}`,
+            x: String(words.x),
+            y: String(words.y),
+            "text-anchor": anchors[words.anchor ?? "left"],
+            "font-size": String(words.size ?? 11),
+          },
+          text: words.text,
+        })),
+      ],
+    };
+    setShapes(this.node, drawing.title ? [shape("figcaption", "", drawing.title), svg] : [svg]);
   }
 }
 
 /**
+ * @param {string} ink
+ * @param {number[]} points
+ * @returns {Shape}
+ */
+function polygon(ink, points) {
+  return {tag: "polygon", attributes: {class: `fill-${ink}`, points: points.join(" ")}};
+}
+
+/**
  * @param {import("../types.js").Stroke} stroke
- * @returns {SVGElement[]}
+ * @returns {Shape[]}
  */
 function drawStroke(stroke) {
   const width = stroke.width ?? 1;
   const ink = stroke.ink ?? "plain";
-  const line = makeSvg("polyline", {class: `stroke-${ink}${stroke.dashed ? " dashed" : ""}`, points: stroke.xy.join(" "), "stroke-width": width});
+  /** @type {Shape} */
+  const line = {
+    tag: "polyline",
+    attributes: {class: `stroke-${ink}${stroke.dashed ? " dashed" : ""}`, points: stroke.xy.join(" "), "stroke-width": String(width)},
+  };
   const n = stroke.xy.length;
   if (!stroke.arrow || n < 4) return [line];
   // The head is drawn at the last point, along the last segment.
@@ -60,6 +79,5 @@ function drawStroke(stroke) {
   const size = 4 + 2 * width;
   const [bx, by] = [x1 - dx * size, y1 - dy * size];
   const half = size / 2;
-  const points = [x1, y1, bx - dy * half, by + dx * half, bx + dy * half, by - dx * half];
-  return [line, makeSvg("polygon", {class: `fill-${ink}`, points: points.join(" ")})];
+  return [line, polygon(ink, [x1, y1, bx - dy * half, by + dx * half, bx + dy * half, by - dx * half])];
 }

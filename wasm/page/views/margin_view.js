@@ -1,8 +1,11 @@
 // The right margin: all about the selected cell. The same view prints the appendix of workings.
 
-import {make} from "./dom.js";
+import {setShapes, shape} from "./dom.js";
 
-/** @typedef {import("../types.js").Margin} Margin */
+/**
+ * @typedef {import("../types.js").Margin} Margin
+ * @typedef {import("./dom.js").Shape} Shape
+ */
 
 export class MarginView {
   /** @param {HTMLElement} node */
@@ -13,10 +16,11 @@ export class MarginView {
   /** @param {Margin | null} margin */
   show(margin) {
     const empty = !margin || !(margin.value || margin.subject || margin.steps?.length || margin.sections?.length);
-    this.node.replaceChildren(
-      ...(empty
-        ? [make("h2", "", "Working"), make("p", "quiet", "Select a figure on the sheet: its working, where it comes from and what to beware of stand here.")]
-        : workingNodes(/** @type {Margin} */ (margin), "h2")),
+    setShapes(
+      this.node,
+      empty
+        ? [shape("h2", "", "Working"), shape("p", "quiet", "Select a figure on the sheet: its working, where it comes from and what to beware of stand here.")]
+        : workingShapes(/** @type {Margin} */ (margin), "h2"),
     );
   }
 }
@@ -24,29 +28,20 @@ export class MarginView {
 /**
  * @param {Margin} margin
  * @param {"h2" | "h3"} level
- * @returns {HTMLElement[]}
+ * @returns {Shape[]}
  */
-export function workingNodes(margin, level) {
-  const nodes = [];
-  if (level === "h2") nodes.push(make(level, "", "Working"));
-  if (margin.value) nodes.push(make("p", "value", margin.value));
-  if (margin.subject) nodes.push(make("p", "subject", margin.subject));
-  if (margin.steps?.length) {
-    const list = make("ol", "steps");
-    list.append(...margin.steps.map((step) => make("li", "", step)));
-    nodes.push(list);
-  }
-  if (margin.sources?.length) {
-    const list = make("ul", "sources");
-    list.append(...margin.sources.map((source) => make("li", "", source)));
-    nodes.push(list);
-  }
+function workingShapes(margin, level) {
+  const shapes = [];
+  if (level === "h2") shapes.push(shape(level, "", "Working"));
+  if (margin.value) shapes.push(shape("p", "value", margin.value));
+  if (margin.subject) shapes.push(shape("p", "subject", margin.subject));
+  if (margin.steps?.length) shapes.push(shape("ol", "steps", margin.steps.map((step) => shape("li", "", step))));
+  if (margin.sources?.length) shapes.push(shape("ul", "sources", margin.sources.map((source) => shape("li", "", source))));
   for (const section of margin.sections ?? []) {
-    const node = make("section");
-    node.append(make(level, "", section.heading), ...section.notes.map((note) => make("p", `note note-${note.kind ?? "info"}`, note.text)));
-    nodes.push(node);
+    const notes = section.notes.map((note) => shape("p", `note note-${note.kind ?? "info"}`, note.text));
+    shapes.push(shape("section", "", [shape(level, "", section.heading), ...notes]));
   }
-  return nodes;
+  return shapes;
 }
 
 /**
@@ -55,12 +50,5 @@ export function workingNodes(margin, level) {
  * @param {Margin[]} margins
  */
 export function showAppendix(node, margins) {
-  node.replaceChildren(
-    make("h2", "", "Workings"),
-    ...margins.map((margin) => {
-      const entry = make("section", "working");
-      entry.append(...workingNodes(margin, "h3"));
-      return entry;
-    }),
-  );
+  setShapes(node, [shape("h2", "", "Workings"), ...margins.map((margin) => shape("section", "working", workingShapes(margin, "h3")))]);
 }

@@ -1,6 +1,6 @@
 // The sheet: blocks in order, each shown by a view that is kept as long as its block id is.
 
-import {make, setAttribute, setChildren} from "./dom.js";
+import {make, setAttribute, setChildren, setClass, setShapes, shape} from "./dom.js";
 import {DrawingView} from "./drawing_view.js";
 import {TableView} from "./table_view.js";
 
@@ -23,8 +23,8 @@ class HeadingView {
   show(block) {
     const level = block.level ?? 2;
     setAttribute(this.node, "data-level", String(level));
-    const heading = make(level === 1 ? "h1" : "h2", "", block.text);
-    this.node.replaceChildren(heading, make("span", "rule"), ...(block.aside ? [make("span", "aside", block.aside)] : []));
+    const heading = shape(level === 1 ? "h1" : "h2", "", block.text);
+    setShapes(this.node, [heading, shape("span", "rule", ""), ...(block.aside ? [shape("span", "aside", block.aside)] : [])]);
   }
 }
 
@@ -39,10 +39,10 @@ class NoteView {
   /** @param {import("../types.js").NoteBlock} block */
   show(block) {
     const kind = block.kind ?? "info";
-    this.node.className = `block note-block note-${kind}`;
+    setClass(this.node, `block note-block note-${kind}`);
     setAttribute(this.node, "role", kind === "error" ? "alert" : "note");
     const mark = noteMarks[kind];
-    this.node.replaceChildren(...(mark ? [make("strong", "mark", mark)] : []), make("span", "", block.text));
+    setShapes(this.node, [...(mark ? [shape("strong", "mark", mark)] : []), shape("span", "", block.text)]);
   }
 }
 

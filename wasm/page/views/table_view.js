@@ -7,8 +7,8 @@ import {make, setAttribute, setChildren, setClass, setText} from "./dom.js";
  * @typedef {import("../types.js").Cell} Cell
  * @typedef {import("../types.js").Row} Row
  * @typedef {import("../types.js").Column} Column
- * @typedef {{node: HTMLTableCellElement, text: HTMLElement, shown: string}} CellView
- * @typedef {{node: HTMLTableRowElement, cells: CellView[], shown: string}} RowView
+ * @typedef {{node: HTMLTableCellElement, text: HTMLElement, shown: Cell, first: number, folds: boolean}} CellView
+ * @typedef {{node: HTMLTableRowElement, cells: CellView[]}} RowView
  */
 
 /** A bracketed state after a species, as in "H2O(l)"; set lower and lighter, the text itself stays as it came. */
@@ -90,8 +90,6 @@ export class TableView {
    * @returns {RowView}
    */
   #showRow(before, row, columns, inTree) {
-    const shown = JSON.stringify(row);
-    if (before && before.shown === shown) return before;
     const node = before?.node ?? make("tr");
     const role = row.role ?? "body";
     setClass(node, `row-${role}${row.fold_id ? " folds" : ""}${hasWords(row) ? "" : " unprinted"}`);
@@ -102,12 +100,12 @@ export class TableView {
     const kept = before?.cells ?? [];
     let column = 0;
     const views = row.cells.map((cell, index) => {
-      const view = showCell(kept[index], cell, columns.slice(column, column + (cell.span ?? 1)), Boolean(row.fold_id) && index === 0);
+      const view = showCell(kept[index], cell, columns, column, Boolean(row.fold_id) && index === 0);
       column += cell.span ?? 1;
       return view;
     });
     setChildren(node, views.map((view) => view.node));
-    return {node, cells: views, shown};
+    return {node, cells: views};
   }
 }
 
@@ -120,15 +118,36 @@ function hasWords(row) {
 }
 
 /**
- * @param {CellView | undefined} before
+ * Whether two cells differ in nothing but their words, and both have some: all that an edit changes of most cells.
+ * @param {Cell} a
+ * @param {Cell} b
+ */
+function alikeButForWords(a, b) {
+  return (
+    a.id === b.id && a.kind === b.kind && a.tone === b.tone && a.origin === b.origin && a.editable === b.editable &&
+    a.span === b.span && a.hint === b.hint && Boolean(a.text) === Boolean(b.text)
+  );
+}
+
+/**
+ * @param {CellView | undefined} before  in the same place of the same columns
  * @param {Cell} cell
- * @param {Column[]} columns  those it spans
+ * @param {Column[]} all  columns of the table
+ * @param {number} first  column that it begins at
  * @param {boolean} folds  it carries the mark that unfolds its row
  * @returns {CellView}
  */
-function showCell(before, cell, columns, folds) {
-  const shown = JSON.stringify(cell) + folds;
-  if (before && before.shown === shown) return before;
+function showCell(before, cell, all, first, folds) {
+  if (before && before.first === first && before.folds === folds && alikeButForWords(before.shown, cell)) {
+    if (cell.text && before.shown.text !== cell.text) {
+      if (cell.kind === "equation") setEquation(before.text, cell.text);
+      else setText(before.text, cell.text);
+    }
+    before.shown = cell;
+    cells.set(before.node, cell);
+    return before;
+  }
+  const columns = all.slice(first, first + (cell.span ?? 1));
   const node = before?.node ?? make("td");
   const text = before?.text ?? node.appendChild(make("span", "text"));
   const kind = cell.kind ?? "label";
@@ -157,7 +176,7 @@ function showCell(before, cell, columns, folds) {
   setAttribute(node, "aria-haspopup", kind === "choice" && cell.editable ? "listbox" : null);
   setAttribute(node, "title", cell.hint && cell.text ? cell.hint : null);
   cells.set(node, cell);
-  return {node, text, shown};
+  return {node, text, shown: cell, first, folds};
 }
 
 /**
