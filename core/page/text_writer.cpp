@@ -69,13 +69,22 @@ class TextWriter {
   explicit TextWriter(std::size_t width) : width_(width) {}
 
   std::string write(const Page& page) {
+    const Block* above = nullptr;
     for (const Block& block : page.blocks) {
+      if (above != nullptr && stands_apart(*above) && stands_apart(block)) blank_line();
       std::visit([this](const auto& any) { add(any); }, block);
+      above = &block;
     }
     return std::move(out_);
   }
 
  private:
+  /// Tables of their own that would run together; the ledger belongs to the form above it.
+  static bool stands_apart(const Block& block) {
+    const Table* table = std::get_if<Table>(&block);
+    return table != nullptr && table->look != TableLook::Banner && table->look != TableLook::Ledger;
+  }
+
   void blank_line() {
     if (!out_.empty() && (out_.size() < 2 || out_[out_.size() - 2] != '\n')) out_ += '\n';
   }
