@@ -114,6 +114,11 @@ void review(const StepSheet& sheet, step::Lookups& lookups, StepOutcome& outcome
 
 }  // namespace
 
+void finish_balance(const StepSheet& sheet, step::Lookups& lookups, StepOutcome& outcome) {
+  if (!sheet.curve.empty()) add_curve(outcome, sheet.curve);
+  if (sheet.show_checker) review(sheet, lookups, outcome);
+}
+
 void compute_balance(const StepSheet& sheet, const StepContext& context, step::Lookups& lookups,
                      StepOutcome& outcome) {
   StepReading reading = read_step(sheet, context);
@@ -128,8 +133,7 @@ void compute_balance(const StepSheet& sheet, const StepContext& context, step::L
     return;
   }
   outcome.result = std::make_shared<const step::StepResult>(std::move(solved).value());
-  if (!sheet.curve.empty()) add_curve(outcome, sheet.curve);
-  if (sheet.show_checker) review(sheet, lookups, outcome);
+  finish_balance(sheet, lookups, outcome);
   outcome.findings = std::make_shared<const step::Findings>(
       safety_findings(sheet, context, *outcome.result, outcome.errors));
 }

@@ -10,4 +10,7 @@ namespace heatledger::document {
 void compute_balance(const StepSheet& sheet, const StepContext& context, step::Lookups& lookups,
                      StepOutcome& outcome);
 
+/// Curve against a blank and the checker's column of a balance that is solved.
+void finish_balance(const StepSheet& sheet, step::Lookups& lookups, StepOutcome& outcome);
+
 }  // namespace heatledger::document

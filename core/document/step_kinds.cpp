@@ -2,6 +2,7 @@
 
 #include "core/document/burning_reading.hpp"
 #include "core/document/dosed_reading.hpp"
+#include "core/document/mixing_reading.hpp"
 #include "core/document/step_balance.hpp"
 #include "core/dosing/dosed_findings.hpp"
 
@@ -22,6 +23,7 @@ const std::vector<KindOfStep>& kinds_of_step() {
        {},
        compute_balance},
       {"charge", "Add a charge step", 'c', false, true, true, true, false, false, {}, {}, compute_balance},
+      {"mixing", "Add a mixing step", 'm', false, true, true, true, false, false, {}, {}, compute_mixing},
       {"burning",
        "Add a burning step",
        'b',

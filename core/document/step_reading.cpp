@@ -6,6 +6,7 @@
 
 #include "core/base/number_text.hpp"
 #include "core/document/air_row.hpp"
+#include "core/document/step_kinds.hpp"
 #include "core/units/quantity_text.hpp"
 
 namespace heatledger::document {
@@ -49,7 +50,7 @@ class Reader {
 
   StepReading read() {
     input().title = sheet_.id + " " + sheet_.title;
-    input().kind = sheet_.kind == "charge" ? step::StepKind::Charge : step::StepKind::ThroughFlow;
+    input().kind = kind_of(sheet_).per_time ? step::StepKind::ThroughFlow : step::StepKind::Charge;
     if (!sheet_.sought.empty()) input().sought = sheet_.sought;
     code_names();
     reactions();
@@ -647,6 +648,7 @@ class Reader {
     departure(heat);
     in.mass_heat_capacity =
         positive(blank("mass_heat_capacity", d::kMassHeatCapacity), "blanks.mass_heat_capacity");
+    in.mixing_heat = blank("mixing_heat", heat);
     in.surface.medium_in = blank("medium_in", d::kTemperature);
     in.surface.medium_out = blank("medium_out", d::kTemperature);
     if (flow()) return;

@@ -82,6 +82,7 @@ class Blocks {
     add(feeds());
     if (kind_.profile) add(profile());
     if (kind_.reactions) add(reactions());
+    add(dilutions());
     add(conditions());
     if (kind_.leaving) add(leaving());
     if (kind_.species) add(species());
@@ -494,6 +495,25 @@ class Blocks {
                    typed_cell(id + ".density", typed.density, "870 kg/m3", CellKind::Number),
                    typed_cell(id + ".vapour_pressure", typed.vapour_pressure, "4 kPa", CellKind::Number),
                    typed_cell(id + ".molar_mass", typed.molar_mass, "312 g/mol", CellKind::Number)};
+      list.rows.push_back(std::move(row));
+    }
+    return list;
+  }
+
+  /// What dissolves, dilutes or concentrates, each on a line of its own.
+  Table dilutions() {
+    Table list = table("dilutions", TableLook::List,
+                       {column("what", "What dissolves"), column("before", "wt% as fed", Align::Right),
+                        column("after", "wt% as it leaves", Align::Right),
+                        column("free", std::string(heat_unit(flow())) + " set free", Align::Right)});
+    if (result_ == nullptr) return list;
+    for (std::size_t i = 0; i < result_->dilutions.size(); ++i) {
+      const step::DilutionLine& line = result_->dilutions[i];
+      Row row = row_of(id_ + ".dilution." + std::to_string(i));
+      row.cells = {label_cell(line.words),
+                   label_cell(line.before >= 1 ? "pure" : display_number(100 * line.before, 1)),
+                   label_cell(line.after > 0 ? display_number(100 * line.after, 1) : "–"),
+                   label_cell(shown_heat(line.set_free, flow()))};
       list.rows.push_back(std::move(row));
     }
     return list;
