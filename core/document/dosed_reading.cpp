@@ -7,7 +7,7 @@
 #include "core/dosing/dosed_findings.hpp"
 #include "core/safety/criticality.hpp"
 #include "core/step/words.hpp"
-#include "core/units/quantity_text.hpp"
+#include "core/units/expression.hpp"
 
 namespace heatledger::document {
 namespace {
@@ -54,7 +54,7 @@ class Reader {
   }
   Blank quantity(const std::string& text, const units::Dimension& dimension, const std::string& where) {
     if (trimmed(text).empty()) return std::nullopt;
-    const Result<units::TypedValue> read = units::parse_quantity(text, dimension);
+    const Result<units::TypedValue> read = units::evaluate_quantity(text, dimension, *context_.names);
     if (!read.ok()) {
       refuse(read.error(), where);
       return std::nullopt;
@@ -354,11 +354,8 @@ void add_class(Reader& reader, const dosing::DosedModel& model, const dosing::An
     }
   }
   safety::UncertainFailure failure;
-  // Among the numbers of the model the temperature of the start stands with its own ±.
-  for (const dosing::DosedNumber& number : model.numbers()) {
-    if (number.label == "temperature at the start")
-      failure.process = uncertainty::Quantity(number.value, number.spread.parts());
-  }
+  const dosing::DosedNumber& start = model.start_temperature();
+  failure.process = uncertainty::Quantity(start.value, start.spread.parts());
   const dosing::FigureId which = answers.nothing_known ? dosing::FigureId::AllAtOnce : dosing::FigureId::Mtsr;
   failure.mtsr = quantity(answers, which);
   if (mtt.why_missing.empty()) failure.mtt = mtt.value;
@@ -395,7 +392,10 @@ void compute_dosed(const StepSheet& sheet, const StepContext& context, step::Loo
   if (!outcome.errors.empty()) return;
   const Result<dosing::DosedModel> model = dosing::DosedModel::of(std::move(input), lookups);
   if (!model.ok()) {
-    outcome.errors.push_back(model.error());
+    Error error = model.error();
+    // The balance below knows the temperature of the start as that of its end.
+    if (error.where == "outlet.temperature") error.where = "process_temperature";
+    outcome.errors.push_back(std::move(error));
     return;
   }
   const Result<dosing::Answers> answers = dosing::answer(*model);

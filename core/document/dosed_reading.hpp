@@ -7,7 +7,7 @@ namespace heatledger::document {
 
 /// Fills balance, findings and errors of a dosed charge.
 /// Codes: those of read_step and dosing::DosedModel::of, and dosing.thermal, dosing.orders, dosing.profile,
-/// step.blank
+/// step.blank, step.out_of_range
 void compute_dosed(const StepSheet& sheet, const StepContext& context, step::Lookups& lookups,
                    StepOutcome& outcome);
 

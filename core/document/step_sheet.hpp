@@ -40,7 +40,7 @@ struct ProgressSheet {
   std::string heat_per;  ///< species it is stated per mole of; empty: for the coefficients written
   std::string heat_at;   ///< temperature it was measured at; empty: 25 °C
   std::string includes;  ///< mixing, dilution, evaporation, gas loss: "yes", "no", "unknown"
-  std::string rate_constant;  ///< "2.1e-4 L/(mol s)"; empty: as fast as dosed
+  std::string rate_constant;  ///< "2.1e-4 L/(mol s)"; "as fast as dosed"; empty: not known
   std::string rate_at;        ///< temperature of the rate constant; empty: 25 °C
   std::string activation;     ///< activation energy, "78 kJ/mol"
   std::string orders;         ///< "1 in toluene, 1 in nitric acid"; empty: first order in each reactant

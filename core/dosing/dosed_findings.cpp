@@ -6,6 +6,7 @@
 #include "core/base/number_text.hpp"
 #include "core/dosing/dosed_charts.hpp"
 #include "core/step/words.hpp"
+#include "core/units/constants.hpp"
 
 namespace heatledger::dosing {
 namespace {
@@ -360,8 +361,10 @@ class Writer {
   void closure() {
     const Course& course = *answers_.course;
     const Moment last = course.at(course.end());
-    double came = kettle().enthalpy(system().start, system().start_temperature) +
-                  system().vessel_heat_capacity * (system().start_temperature - 298.15) + last.wall_heat;
+    double came =
+        kettle().enthalpy(system().start, system().start_temperature) +
+        system().vessel_heat_capacity * (system().start_temperature - units::kReferenceTemperature) +
+        last.wall_heat;
     double size = std::fabs(last.wall_heat);
     for (const DosedFeed& feed : system().feeds) {
       came += feed.enthalpy * feed.profile.share(last.time);
@@ -372,7 +375,7 @@ class Writer {
       size += std::fabs(last.extents[j] * system().reactions[j].heat);
     }
     const double there = kettle().enthalpy(last.amounts, last.temperature) +
-                         system().vessel_heat_capacity * (last.temperature - 298.15);
+                         system().vessel_heat_capacity * (last.temperature - units::kReferenceTemperature);
     const double left = size > 0 ? std::fabs(there - came) / size : 0;
     findings_.closes = left < 1e-9;
     findings_.closure = findings_.closes ? "Heat closes over the whole course, to better than 1e-9."

@@ -55,6 +55,8 @@ class DosedModel {
   const step::Model& balance() const { return *balance_; }
   const std::vector<DosedNumber>& numbers() const { return numbers_; }
   std::vector<double> values() const;
+  /// Of the content when dosing begins, with its ± [K].
+  const DosedNumber& start_temperature() const { return numbers_[own_.temperature]; }
 
   /// The system at some numbers. @param stretch  factor on every time of the profile
   /// @errors step.exhausted and other troubles of the amounts fed

@@ -248,6 +248,10 @@ void Kettle::slow_rates(const Scratch& s, double* rates) const {
     volume += s.amounts[i] * system_.substances[i].molar_volume;
     whole += all_[i];
   }
+  if (!(volume > 0)) {  // nothing is in yet
+    std::fill(rates, rates + slow_.size(), 0.0);
+    return;
+  }
   for (std::size_t k = 0; k < slow_.size(); ++k) {
     const RateLaw& law = system_.reactions[slow_[k]].law;
     double rate = law.constant * volume *

@@ -1,4 +1,4 @@
-// Dosed charges whose course can be written down, and worked examples.
+// Dosed charges whose course can be written down.
 #include <cmath>
 
 #include "core/dosing/failure.hpp"
@@ -155,21 +155,6 @@ TEST(DosedFast, JacketLagsBehind) {
     // What is fed weighs 1e-7 of the content.
     EXPECT_NEAR(course.at(t).temperature, expected, 1e-4) << t;
   }
-}
-
-// 1.0 m³ with 5 kmol A at constant temperature, 0.5 m³ with 5 kmol B at a constant rate in 2 h, rate =
-// k cA cB, k = 2.0e-4 m³/(kmol s), −180 kJ/mol: 1.74405 kmol of B accumulated at the end, 73.0008 kW then,
-// conversion 0.651191. Own case by the standard method (F. Stoessel, Thermal Safety of Chemical Processes,
-// Wiley-VCH 2008), integrated once with an adaptive Runge–Kutta solver to 1e-9; figures to six digits.
-TEST(DosedSecondOrder, WorkedExample) {
-  const Course course = followed(Charge{}.system());
-  const Moment end = course.at(7200);
-  EXPECT_NEAR(end.amounts[1], 1744.05, 0.01);
-  EXPECT_NEAR(end.heat_rate, 73000.8, 0.5);
-  EXPECT_NEAR(end.conversion, 0.651191, 1e-6);
-  const Course::Peak worst = course.highest([](const Moment& m) { return m.open[0]; });
-  EXPECT_NEAR(worst.value, 1744.05, 0.01);
-  EXPECT_NEAR(worst.time, 7200, 1);
 }
 
 // What comes after the failure: the end of the adiabatic path is the temperature that was foretold.
