@@ -232,6 +232,17 @@ Result<Mixed> mix(StepInput input, step::Lookups& lookups, const step::SolveOpti
   Result<StepResult> solved = step::solve_step(std::move(input), lookups, options);
   if (!solved.ok()) return solved.error();
   Mixed mixed{std::move(solved).value(), {}};
+  // Rises from a process temperature belong to a vessel that is held; here the feeds meet, each at its own.
+  std::vector<step::Answer>& answers = mixed.result.answers;
+  answers.erase(std::remove_if(answers.begin(), answers.end(),
+                               [](const step::Answer& answer) {
+                                 return answer.id == step::FigureId::AdiabaticRise ||
+                                        answer.id == step::FigureId::AdiabaticEnd ||
+                                        answer.id == step::FigureId::EndByEnthalpy ||
+                                        answer.id == step::FigureId::EndWithVessel ||
+                                        answer.id == step::FigureId::ThermalInertia;
+                               }),
+                answers.end());
   const StepResult& result = mixed.result;
   step::Findings& findings = mixed.findings;
   findings.groups.push_back(heats(result));

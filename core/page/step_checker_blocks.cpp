@@ -1,5 +1,6 @@
 #include "core/page/step_checker_blocks.hpp"
 
+#include "core/base/number_text.hpp"
 #include "core/molecule/equation.hpp"
 #include "core/page/cells.hpp"
 #include "core/page/step_figures.hpp"
@@ -171,8 +172,13 @@ std::vector<Block> step_checker_blocks(const StepView& view) {
 std::string stream_species(const StepResult& result, const step::StreamLine& line) {
   std::string text = result.model->input().substances[line.substance].name;
   const std::string_view phase = molecule::phase_text(line.state.phase);
-  if (!phase.empty()) text += "(" + std::string(phase) + ")";
-  return text;
+  if (phase.empty()) return text;
+  text += "(" + std::string(phase);
+  const double mass = result.model->molar_mass(line.substance);
+  const std::optional<double> ratio =
+      line.state.strength && mass > 0 ? thermo::water_ratio(*line.state.strength, mass) : std::nullopt;
+  if (ratio) text += ", " + display_number(100 * thermo::mass_fraction(*ratio, mass), 1) + " wt%";
+  return text + ")";
 }
 
 }  // namespace heatledger::page
