@@ -8,6 +8,7 @@
 #include "core/base/number_text.hpp"
 #include "core/burning/calorific.hpp"
 #include "core/molecule/elements.hpp"
+#include "core/molecule/formula.hpp"
 #include "core/step/words.hpp"
 #include "core/thermo/heat_capacity_curve.hpp"
 #include "core/units/constants.hpp"
@@ -154,7 +155,8 @@ class Answer {
     std::vector<uncertainty::Part> parts;
     for (const auto& [key, numbers] : moved_) {
       const double change = get(numbers) - base;
-      if (std::abs(change) > 1e-13 * std::abs(base)) parts.push_back({key, change});
+      // The searches end at 1e-9; what is smaller than a few of these is their rounding.
+      if (std::abs(change) > 1e-8 * std::abs(base)) parts.push_back({key, change});
     }
     return Quantity(base, std::move(parts));
   }
@@ -207,25 +209,30 @@ class Answer {
     out_.groups.back().findings.push_back(std::move(f));
   }
 
-  /// "39.82 ± 0.02 MJ/m³" of a figure that has a unit of its own.
+  /// In a unit of its own, so as words: "39.83 ± 0.02 MJ/normal m³".
   template <typename Get>
-  std::string text_of(const Get& get, double unit, const char* name, int most = 3) const {
-    const uncertainty::Figure value = q(get).scaled(1 / unit).figure();
-    int decimals = most;
+  Finding& shown_in(const char* unit, double unit_size, std::string id, std::string label, const Get& get,
+                    std::vector<std::string> working = {}, std::vector<std::string> sources = {}) {
+    Finding& f =
+        add(std::move(id), std::move(label), d::kNumber, get, std::move(working), std::move(sources));
+    const uncertainty::Figure value = f.value.scaled(1 / unit_size).figure();
+    int decimals = 3;
     for (double limit = 10; decimals > 1 && std::abs(value.value) >= limit; limit *= 10) --decimals;
     double last = 0.5;
     for (int i = 0; i < decimals; ++i) last /= 10;
-    if (value.u95 > 0 && value.u95 < last) {
-      return display_number(value.value, decimals) + " ± < " + display_number(2 * last, decimals) + " " +
-             name;
-    }
-    return units::figure_text(value, decimals) + " " + name;
+    f.text = value.u95 > 0 && value.u95 < last
+                 ? display_number(value.value, decimals) + " ± < " + display_number(2 * last, decimals)
+                 : units::figure_text(value, decimals);
+    f.text += std::string(" ") + unit;
+    return f;
   }
 
   /// [mol/s] in normal cubic metres an hour.
   template <typename Get>
-  std::string normal_flow(const Get& get) const {
-    return text_of(get, 1 / (units::kNormalMolarVolume * 3600), "normal m³/h");
+  Finding& normal_flow(std::string id, std::string label, const Get& get,
+                       std::vector<std::string> working = {}) {
+    return shown_in("normal m³/h", 1 / (units::kNormalMolarVolume * 3600), std::move(id), std::move(label),
+                    get, std::move(working));
   }
 
   const Stream* support() const {
@@ -259,8 +266,8 @@ class Answer {
       bool by_mole = true;
       for (const Part& part : fuel.parts) by_mole = by_mole && part.species != nullptr;
       if (by_mole)
-        words("support.volume", "the same", normal_flow([=](const Numbers& n) { return n.support * moles; }),
-              working);
+        normal_flow(
+            "support.volume", "the same", [=](const Numbers& n) { return n.support * moles; }, working);
     }
     if (in_.sought == Sought::Ratio)
       add("ratio.found", "air ratio for the chamber temperature", d::kNumber, [](const Numbers& n) {
@@ -280,8 +287,7 @@ class Answer {
         [](const Numbers& n) { return n.equilibrium->temperature; },
         {"least Gibbs energy over " + std::to_string(combustion_gases().size()) +
              " gases at constant enthalpy and pressure",
-         "elements close to " + step::digits(1e12 * n_.equilibrium->closure) + "e-12 of all atoms; " +
-             std::to_string(n_.equilibrium->iterations) + " steps",
+         "independent of where the search begins; elements close to 1e-9 of all atoms",
          "heat capacity with the composition following " +
              digits(n_.equilibrium->heat_capacity / n_.equilibrium->total) + " J/(mol K)"},
         {kPolynomials});
@@ -298,11 +304,11 @@ class Answer {
           {"all quench water evaporated", in_balance(n_.flue, *n_.quench_temperature)}, {kPolynomials});
     }
     if (n_.residence) {
-      words("residence", "residence time in the chamber",
-            text_of([](const Numbers& n) { return *n.residence; }, 1, "s"),
-            {"volume " + digits(in_.chamber_volume->value) + " m³ over the actual flow at " +
-             step::celsius(*n_.chamber_temperature) + ", " +
-             digits(in_.chamber_volume->value / *n_.residence) + " m³/s"});
+      shown_in("s", 1, "residence", "residence time in the chamber",
+               [](const Numbers& n) { return *n.residence; },
+               {"volume " + digits(in_.chamber_volume->value) + " m³ over the actual flow at " +
+                step::celsius(*n_.chamber_temperature) + ", " +
+                digits(in_.chamber_volume->value / *n_.residence) + " m³/s"});
     }
   }
 
@@ -349,12 +355,10 @@ class Answer {
         {"oxygen needed / " + digits(100 * in_.air.oxygen) + " % of the dry air" +
          (in_.air.water > 0 ? ", with " + digits(in_.air.water) + " mol water to each mole"
                             : std::string())});
-    words("air.stoichiometric.mass", "the same per kilogram of fuel",
-          text_of([](const Numbers& n) { return n.stoichiometric * n.air_molar_mass / n.fuel_mass; }, 1,
-                  "kg/kg"));
+    shown_in("kg/kg", 1, "air.stoichiometric.mass", "the same per kilogram of fuel",
+             [](const Numbers& n) { return n.stoichiometric * n.air_molar_mass / n.fuel_mass; });
     add("air.flow", "combustion air", d::kMolarFlow, [](const Numbers& n) { return n.air; });
-    words("air.volume", "the same",
-          normal_flow([&](const Numbers& n) { return n.air / (1 + in_.air.water); }) + ", dry");
+    normal_flow("air.volume", "the same, dry", [&](const Numbers& n) { return n.air / (1 + in_.air.water); });
     add("air.mass", "the same", d::kMassFlow, [](const Numbers& n) { return n.air * n.air_molar_mass; });
     add("air.ratio", "air ratio, all oxygen over oxygen needed", d::kNumber,
         [](const Numbers& n) { return n.ratio; },
@@ -374,7 +378,7 @@ class Answer {
     if (!n_.complete) return;
     group("flue", "Flue gas", "complete burning");
     add("flue.wet", "wet flue gas", d::kMolarFlow, [](const Numbers& n) { return total(n.flue); });
-    words("flue.dry", "dry flue gas", normal_flow([](const Numbers& n) { return total_dry(n.flue); }));
+    normal_flow("flue.dry", "dry flue gas", [](const Numbers& n) { return total_dry(n.flue); });
     add("flue.mass", "the flue gas", d::kMassFlow, [](const Numbers& n) { return mass(n.flue); });
     for (const bool wet : {true, false}) {
       for (std::size_t p = 0; p < kProducts; ++p) {
@@ -384,9 +388,10 @@ class Answer {
         };
         const std::string id =
             std::string(wet ? "flue.wet." : "flue.dry.") + std::string(kProductFormulas[p]);
-        const std::string label = std::string(kProductFormulas[p]) + (wet ? ", wet" : ", dry");
+        const std::string label =
+            molecule::typeset_formula(std::string(kProductFormulas[p])) + (wet ? ", wet" : ", dry");
         if (share(n_) < 0.001) {
-          words(id, label, text_of(share, 1e-6, "ppm by volume"));
+          shown_in("ppmv", 1e-6, id, label, share);
         } else {
           add(id, label, d::kVolumeFraction, share);
         }
@@ -436,7 +441,9 @@ class Answer {
       const auto heat_of = [=](const Numbers& n) { return gross ? n.fuels[i].gross : n.fuels[i].net; };
       const std::vector<std::string> working{
           step::heat_text(heat_of(n_), true) + " set free by " + step::mass_text(fuel.mass, true) + " of it",
-          gross ? "product water liquid; CO2, SO2, HCl and N2 gas" : "all water as vapour"};
+          !gross                  ? "all water as vapour"
+          : in_.chloride_in_water ? "product water liquid, HCl in 600 H2O; CO2, SO2 and N2 gas"
+                                  : "product water liquid; CO2, SO2, HCl and N2 gas"};
       if (!fuel.by_mass)
         add(
             id + which + ".mole", which, d::kEnergyPerMole,
@@ -448,22 +455,24 @@ class Answer {
         const auto per_volume = [=](const Numbers& n) {
           return heat_of(n) / n.fuels[i].moles / n.fuels[i].molar_volume;
         };
-        const bool normal = std::abs(in_.metering_temperature - 273.15) < 1e-6;
-        words(id + which + ".volume", which, text_of(per_volume, 1e6, normal ? "MJ/normal m³" : "MJ/m³"),
-              working, sources);
+        shown_in(volume_unit(), 1e6, id + which + ".volume", which + " per cubic metre", per_volume, working,
+                 sources);
         if (fuel.compression)
-          words(id + which + ".real", which + ", real gas",
-                text_of([=](const Numbers& n) { return per_volume(n) / *fuel.compression; }, 1e6,
-                        normal ? "MJ/normal m³" : "MJ/m³"),
-                {"ideal / Z, Z = " + machine_number(*fuel.compression, 6)}, {"ISO 6976:2016"});
+          shown_in(volume_unit(), 1e6, id + which + ".real", which + " per cubic metre of the real gas",
+                   [=](const Numbers& n) { return per_volume(n) / *fuel.compression; },
+                   {"ideal / Z, Z = " + machine_number(*fuel.compression, 6)}, {"ISO 6976:2016"});
       }
     }
     if (fuel.gas && !fuel.by_mass) {
-      words(id + "wobbe", "Wobbe index, gross",
-            text_of([=](const Numbers& n) { return n.fuels[i].wobbe_gross; }, 1e6, "MJ/m³"),
-            {"gross per cubic metre / √ relative density " + digits(fuel.relative_density)},
-            {"ISO 6976:2016"});
+      shown_in(volume_unit(), 1e6, id + "wobbe", "Wobbe index, gross",
+               [=](const Numbers& n) { return n.fuels[i].wobbe_gross; },
+               {"gross per cubic metre / √ relative density " + digits(fuel.relative_density)},
+               {"ISO 6976:2016"});
     }
+  }
+
+  const char* volume_unit() const {
+    return std::abs(in_.metering_temperature - 273.15) < 1e-6 ? "MJ/normal m³" : "MJ/m³";
   }
 
   void equilibrium() {
@@ -483,9 +492,11 @@ class Answer {
       const auto share = [=](const Numbers& n) { return n.equilibrium->moles[j] / n.equilibrium->total; };
       const std::string formula(combustion_gases()[j].formula);
       if (share(n_) < 0.001) {
-        words("equilibrium." + formula, formula, text_of(share, 1e-6, "ppm by volume"), {}, {kPolynomials});
+        shown_in("ppmv", 1e-6, "equilibrium." + formula, molecule::typeset_formula(formula), share, {},
+                 {kPolynomials});
       } else {
-        add("equilibrium." + formula, formula, d::kVolumeFraction, share, {}, {kPolynomials});
+        add("equilibrium." + formula, molecule::typeset_formula(formula), d::kVolumeFraction, share, {},
+            {kPolynomials});
       }
     }
     if (e.carbon_activity > 1e-3)
@@ -500,7 +511,7 @@ class Answer {
     const double reference = in_.reference_oxygen->value;
     const double y = in_.air.oxygen;
     const double actual = of(n_.flue, Product::O2) / total_dry(n_.flue);
-    group("emissions", "Concentrations at " + machine_number(100 * reference, 4) + " % O2, dry",
+    group("emissions", "Concentrations at " + machine_number(100 * reference, 4) + " % O₂, dry",
           "normal m³: 0 °C, 101.325 kPa");
     const auto carried = [=](const Numbers& n, double moles, double gram_per_mole) {
       const double dry = total_dry(n.flue);
@@ -513,24 +524,23 @@ class Answer {
     for (const Product product : {Product::SO2, Product::HCl, Product::Cl2}) {
       if (of(n_.flue, product) <= 0) continue;
       const std::string formula(kProductFormulas[static_cast<std::size_t>(product)]);
-      words("emissions." + formula, formula + ", before any cleaning",
-            text_of([=](const Numbers& n) { return carried(n, of(n.flue, product), molar_mass_of(product)); },
-                    1e-3, "mg/normal m³"),
-            working);
+      shown_in(
+          "mg/normal m³", 1e-3, "emissions." + formula,
+          molecule::typeset_formula(formula) + ", before any cleaning",
+          [=](const Numbers& n) { return carried(n, of(n.flue, product), molar_mass_of(product)); }, working);
     }
     const struct {
       const char* formula;
       const char* label;
       double gram_per_mole;
-    } trace[] = {{"NO", "NO at the flame's equilibrium, as NO2", 46.005},
+    } trace[] = {{"NO", "NO at the flame's equilibrium, as NO₂", 46.005},
                  {"CO", "CO at the flame's equilibrium", 28.010}};
     for (const auto& gas : trace) {
       std::size_t j = 0;
       while (combustion_gases()[j].formula != gas.formula) ++j;
-      words(std::string("emissions.") + gas.formula, gas.label,
-            text_of([=](const Numbers& n) { return carried(n, n.equilibrium->moles[j], gas.gram_per_mole); },
-                    1e-3, "mg/normal m³"),
-            working)
+      shown_in(
+          "mg/normal m³", 1e-3, std::string("emissions.") + gas.formula, gas.label,
+          [=](const Numbers& n) { return carried(n, n.equilibrium->moles[j], gas.gram_per_mole); }, working)
           .mark = "no prediction";
     }
   }

@@ -231,6 +231,11 @@ Result<Numbers> burn(const BurnInput& typed, bool with_equilibrium) {
     FuelNumbers fuel =
         calorific_numbers(stream, in.combustion_temperature, in.metering_temperature, in.offsets);
     fuel.stream = i;
+    if (in.chloride_in_water && fuel.hydrogen_chloride > 0) {
+      const double more = -fuel.hydrogen_chloride * hydrogen_chloride_into_water().value_or(0);
+      fuel.wobbe_gross *= (fuel.gross + more) / fuel.gross;
+      fuel.gross += more;
+    }
     flammability(stream, in.lfl, fuel);
     n.fuel_mass += fuel.mass;
     n.fuel_moles += fuel.moles;

@@ -45,6 +45,8 @@ struct BurnInput {
   step::Blank lfl;               ///< typed lower flammability limit at 25 °C of what burns in a vent, 0 .. 1
   step::Blank so3, hcl;          ///< shares of the wet flue gas, typed for the acid dew point
   double combustion_temperature = 298.15, metering_temperature = 273.15;  ///< [K] of the calorific values
+  /// Gross values with the hydrogen chloride dissolved in 600 moles of water, as a bomb leaves it.
+  bool chloride_in_water = false;
   Sought sought = Sought::Temperature;
   ProductOffsets offsets{};  ///< for the ± only
 };
@@ -57,6 +59,7 @@ struct FuelNumbers {
   double moles = 0, mass = 0;
   double gross = 0, net = 0;              ///< of the whole stream [J] or [W], at the combustion temperature
   double oxygen = 0;                      ///< moles of O2 its burnable parts need
+  double hydrogen_chloride = 0;           ///< moles formed
   double molar_volume = 0;                ///< [m3/mol] at the metering temperature, ideal
   double relative_density = 0;            ///< ideal, to dry air
   double wobbe_gross = 0, wobbe_net = 0;  ///< [J/m3]

@@ -43,6 +43,19 @@ double vaporisation_of_water(double temperature) {
   return combustion_gas("H2O").enthalpy(temperature) - liquid_water().enthalpy(temperature);
 }
 
+std::optional<double> hydrogen_chloride_into_water() {
+  static const std::optional<double> heat = []() -> std::optional<double> {
+    const auto species = facts::resolve_species("hydrogen chloride", false);
+    CHECK(species.ok(), "the library knows hydrogen chloride");
+    const molecule::Strength strength{molecule::Strength::Kind::WaterRatio, 600};
+    const auto solution = thermo::tabulated_formation(**species, molecule::Phase::Aqueous, strength);
+    const auto gas = thermo::tabulated_formation(**species, molecule::Phase::Gas);
+    if (!solution.ok() || !gas.ok()) return {};
+    return solution->value.value() - gas->value.value();
+  }();
+  return heat;
+}
+
 bool burns(const Stream& stream) {
   return std::any_of(stream.parts.begin(), stream.parts.end(),
                      [](const Part& part) { return part.moles > 0 && oxygen_demand(part.atoms) > 0; });
@@ -93,7 +106,10 @@ FuelNumbers calorific_numbers(const Stream& stream, double combustion_temperatur
   f.mass = stream.mass();
   f.gas = true;
   double burning = 0;
+  double hydrogen = 0, chlorine = 0;
   for (const Part& part : stream.parts) {
+    hydrogen += part.moles * stream.scale * of(part.atoms, Element::H);
+    chlorine += part.moles * stream.scale * of(part.atoms, Element::Cl);
     f.gas = f.gas && part.phase == molecule::Phase::Gas;
     f.by_mass = f.by_mass || part.species == nullptr;
     const double demand = oxygen_demand(part.atoms);
@@ -101,6 +117,7 @@ FuelNumbers calorific_numbers(const Stream& stream, double combustion_temperatur
     f.oxygen += demand * part.moles * stream.scale;
     burning += part.moles * stream.scale;
   }
+  f.hydrogen_chloride = std::min(hydrogen, chlorine);
   if (f.by_mass || !(f.moles > 0)) return f;
   f.combustible_share = burning / f.moles;
   if (!f.gas) return f;

@@ -18,6 +18,10 @@ Heat heat_of_burning(const Stream& stream, double temperature, const ProductOffs
 /// Enthalpy of vaporisation of water [J/mol], ideal vapour less liquid. @param temperature  [K]
 double vaporisation_of_water(double temperature);
 
+/// One mole of gaseous hydrogen chloride into 600 moles of water at 25 °C, the convention of bomb calorimetry
+/// [J/mol], about −74 kJ/mol; empty where the tables do not reach that far.
+std::optional<double> hydrogen_chloride_into_water();
+
 /// Whether anything in it burns.
 bool burns(const Stream& stream);
 

@@ -82,10 +82,43 @@ class Reader {
     if (const Blank t = blank("combustion_temperature", d::kTemperature))
       in().combustion_temperature = t->value;
     if (const Blank t = blank("metering_temperature", d::kTemperature)) in().metering_temperature = t->value;
+    const std::string chloride = text_of("chloride");
+    in().chloride_in_water = chloride == "in 600 H2O";
+    if (!chloride.empty() && chloride != "gas" && !in().chloride_in_water) {
+      refuse(
+          Error{"burning.calorific", "Hydrogen chloride of a gross value is a gas, or dissolved in 600 H2O.",
+                "", "Write gas or in 600 H2O."},
+          "blanks.chloride");
+    }
+    count_exact();
     return std::move(reading_);
   }
 
  private:
+  /// Typed figures without ±, for the note that counts them.
+  void count_exact() {
+    int exact = 0;
+    const auto look = [&](const std::string& text) {
+      const bool figure = text.find_first_of("0123456789") != std::string::npos;
+      const bool interval = text.find("±") != std::string::npos || text.find("+-") != std::string::npos ||
+                            text.find("+/-") != std::string::npos;
+      if (figure && !interval) ++exact;
+    };
+    for (const FeedSheet& feed : sheet_.feeds) {
+      look(feed.total);
+      look(feed.at);
+      look(feed.pressure);
+      for (const FeedRow& row : feed.rows) look(row.amount);
+    }
+    for (const auto& entry : sheet_.blanks) {
+      if (entry.first != "air" && entry.first != "chloride") look(entry.second);
+    }
+    if (exact == 0) return;
+    reading_.notes.push_back(exact == 1
+                                 ? "One typed figure without ± is taken as exact."
+                                 : std::to_string(exact) + " typed figures without ± are taken as exact.");
+  }
+
   burning::BurnInput& in() { return reading_.input; }
 
   void refuse(Error error, const std::string& where) {

@@ -39,6 +39,7 @@ const std::vector<StepBlank>& step_blanks() {
       {"chamber_volume", "chamber volume", "12 m3", "b"},
       {"flue_temperature", "flue gas leaves at", "180 °C", "b"},
       {"calorific", "calorific value of an analysis", "18.2 MJ/kg gross; Channiwala-Parikh; Dulong", "b"},
+      {"chloride", "HCl of gross values", "gas; in 600 H2O", "b"},
       {"reference_oxygen", "concentrations stated at", "3 %", "b"},
       {"lfl", "lower flammability limit, 25 °C", "5.0 %", "b"},
       {"so3_share", "SO3 in the wet flue gas", "5 ppmv", "b"},

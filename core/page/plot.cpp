@@ -82,7 +82,7 @@ Plot::Plot(Drawing& drawing, PlotSpan span) : span_(std::move(span)) {
     drawing.words.push_back(words_at(x(at), kBottom + 15, display_number(at, tick_decimals(x_step)),
                                      Ink::QuietText, Align::Centre));
   }
-  drawing.words.push_back(words_at(kLeft - 6, kTop - 12, span_.y_words, Ink::QuietText, Align::Right));
+  drawing.words.push_back(words_at(0, kTop - 12, span_.y_words, Ink::QuietText, Align::Left));
   drawing.words.push_back(words_at(kRight, kBottom + 30, span_.x_words, Ink::QuietText, Align::Right));
   drawing.strokes.push_back(line_between(kLeft, kBottom, kRight, kBottom, Ink::Axis, 0.5));
 }

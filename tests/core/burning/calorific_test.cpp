@@ -101,6 +101,17 @@ TEST(Calorific, WaterInTheFuelCostsItsEvaporationInTheNetOnly) {
               10);  // 44.004 kJ/mol, CODATA key values; 10 J for the tables' rounding
 }
 
+TEST(Calorific, HydrogenChlorideAsTheBombLeavesIt) {
+  // NBS Tables (Wagman and others, 1982): HCl in 600 H2O less HCl gas, -166.54 + 92.31 kJ/mol; 0.5 for the
+  // tables.
+  ASSERT_TRUE(hydrogen_chloride_into_water());
+  EXPECT_NEAR(*hydrogen_chloride_into_water() / 1000, -74.2, 0.5);
+  BurnInput in = flame_of("chlorobenzene", Phase::Liquid, 1.2);
+  const double gas = burnt(in).fuels[0].gross;
+  in.chloride_in_water = true;
+  EXPECT_NEAR((burnt(in).fuels[0].gross - gas) / 1000, 74.2, 0.5);
+}
+
 TEST(Calorific, UltimateAnalysis) {
   // S. A. Channiwala, P. P. Parikh, Fuel 81 (2002) 1051, their equation by hand for a wood of 50 % C, 6 % H,
   // 43 % O, 0.5 % N, 0.5 % ash, dry: 17.455 + 7.0698 − 4.4462 − 0.00755 − 0.01055 = 20.0605 MJ/kg.
