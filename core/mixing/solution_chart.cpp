@@ -37,9 +37,9 @@ void add_charts(step::Findings& findings, const step::StepResult& result) {
     };
     step::Chart chart;
     chart.id = "heat_of_solution." + std::to_string(k);
-    chart.title = "How much heat does dissolving " + name + " give at each strength?";
+    chart.title = "Heat of solution of " + name + " against strength";
     chart.x_label = "strength of the solution, by mass";
-    chart.y_label = "heat of solution at 25 °C";
+    chart.y_label = "at 25 °C";
     chart.x_dimension = units::dimension::kMassFraction;
     chart.y_dimension = units::dimension::kEnergyPerMole;
     step::ChartCurve curve;
