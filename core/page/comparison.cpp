@@ -22,9 +22,11 @@ struct Reading {
   Places inputs, results;
 };
 
-std::string row_words(const Row& row, const Cell& except) {
+/// What stands in front of a cell in its row.
+std::string row_words(const Row& row, const Cell& before) {
   for (const Cell& cell : row.cells) {
-    if (&cell != &except && cell.kind != CellKind::Button && !cell.text.empty()) return cell.text;
+    if (&cell == &before) break;
+    if (cell.kind != CellKind::Button && !cell.text.empty()) return cell.text;
   }
   return {};
 }
@@ -209,9 +211,10 @@ Page comparison_page(const Comparison& comparison) {
                      column("before", "first"), column("after", "then"), column("by", "by", Align::Right)};
   for (const InputEffect& effect : comparison.inputs) {
     Row head = row_of("effect." + effect.input.cell, RowRole::Subtotal);
-    head.cells = {label_cell(effect.input.place, Tone::Strong),
-                  label_cell(effect.input.before.empty() ? "–" : effect.input.before),
-                  label_cell(effect.input.after.empty() ? "–" : effect.input.after), label_cell("")};
+    const auto text = [](const std::string& of) { return of.empty() ? std::string("–") : of; };
+    head.cells = {
+        label_cell(effect.input.place + ": " + text(effect.input.before) + " → " + text(effect.input.after),
+                   Tone::Strong, 4)};
     effects.rows.push_back(std::move(head));
     if (effect.moved.empty()) {
       Row none = row_of("effect." + effect.input.cell + ".none", RowRole::Detail);

@@ -615,7 +615,11 @@ std::vector<Block> step_convention_blocks(const std::set<std::string>& kinds) {
   Table table;
   table.id = "step_conventions";
   table.columns = {column("text", "")};
-  std::vector<std::string> lines = step::step_conventions(step::StepKind::Charge);
+  bool batch = false;
+  for (const document::KindOfStep& kind : document::kinds_of_step())
+    batch = batch || (!kind.per_time && kinds.count(kind.name) > 0);
+  std::vector<std::string> lines =
+      step::step_conventions(batch ? step::StepKind::Charge : step::StepKind::ThroughFlow);
   for (const document::KindOfStep& kind : document::kinds_of_step()) {
     if (kind.conventions == nullptr || kinds.count(kind.name) == 0) continue;
     for (std::string& line : kind.conventions()) lines.push_back(std::move(line));

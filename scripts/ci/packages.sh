@@ -7,7 +7,7 @@ run_packages=(g++ cmake ninja-build ccache pkg-config nlohmann-json3-dev libeige
   libstb-dev libglfw3-dev libgl-dev libgl1-mesa-dri fonts-dejavu-core googletest libgtest-dev emscripten node-acorn
   ca-certificates git)
 test_packages=(librapidcheck-dev librdkit-dev libopenbabel-dev libboost-dev xvfb xauth x11-utils xdotool xclip chromium
-  poppler-utils clang-format python3)
+  poppler-utils clang-format parallel python3)
 fuzz_packages=(clang libclang-rt-14-dev)
 
 wanted=("${run_packages[@]}")

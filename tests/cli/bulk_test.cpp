@@ -1,5 +1,6 @@
 #include <gtest/gtest.h>
 
+#include <algorithm>
 #include <nlohmann/json.hpp>
 #include <random>
 #include <sstream>
@@ -166,6 +167,20 @@ TEST(Bulk, OrderIsKeptOverManyLines) {
   const std::vector<std::string> answers = lines_of(heatledger({"bulk"}, input).out);
   ASSERT_EQ(answers.size(), static_cast<std::size_t>(kLines));
   for (int i = 0; i < kLines; ++i) ASSERT_EQ(json::parse(answers[static_cast<std::size_t>(i)])["id"], i);
+}
+
+// The README's way to use every core: chunks of lines to several programs at once, answers in order.
+TEST(Bulk, IsAFilterUnderGnuParallel) {
+  std::string lines;
+  constexpr int kLines = 500;
+  for (int i = 0; i < kLines; ++i)
+    lines += "{\"id\":" + std::to_string(i) + ",\"equation\":\"CH4 + 2 O2 -> CO2 + 2 H2O\"}\n";
+  const Ran one = heatledger({"bulk"}, lines);
+  const Ran many = run(
+      {"parallel", "--pipe", "--keep-order", "--block", "4k", "-j", "2", HEATLEDGER_PROGRAM, "bulk"}, lines);
+  ASSERT_EQ(many.status, 0) << many.err;
+  EXPECT_EQ(many.out, one.out);
+  EXPECT_EQ(std::count(one.out.begin(), one.out.end(), '\n'), kLines);
 }
 
 TEST(Bulk, AnswersBeforeItWaitsForMore) {

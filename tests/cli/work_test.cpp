@@ -54,6 +54,30 @@ TEST(Work, WritesReportTablesAndDrawings) {
   }
 }
 
+TEST(Work, WritesTheSheetAsMarkdown) {
+  const TemporaryFolder folder;
+  write_whole(folder / "s.heatledger.json", sheet_text(kHydrogenation));
+  const Ran ran = heatledger({"work", folder / "s.heatledger.json", "--markdown", "-"});
+  ASSERT_EQ(ran.status, 0) << ran.err;
+  EXPECT_EQ(ran.out.compare(0, 31, "# Hydrogenation of nitrobenzene"), 0) << ran.out.substr(0, 80);
+  EXPECT_NE(ran.out.find("| --- |"), std::string::npos);
+}
+
+TEST(Compare, NamesWhatWasTypedAndWhatItMoves) {
+  const TemporaryFolder folder;
+  write_whole(folder / "a.heatledger.json", sheet_text(kHydrogenation));
+  write_whole(folder / "b.heatledger.json", sheet_text("nitrobenzene(l) + 3 H2 -> aniline(l) + 2 H2O(g)"));
+  const Ran ran = heatledger({"compare", folder / "a.heatledger.json", folder / "b.heatledger.json"});
+  ASSERT_EQ(ran.status, 0) << ran.err;
+  EXPECT_NE(ran.out.find("What was typed differently"), std::string::npos);
+  // Two moles of water stay vapour: 2 × 44.0 kJ (CODATA) less heat is set free.
+  EXPECT_NE(ran.out.find("+88.0 kJ"), std::string::npos) << ran.out;
+  const Ran same = heatledger({"compare", folder / "a.heatledger.json", folder / "a.heatledger.json"});
+  EXPECT_NE(same.out.find("The two sheets say the same."), std::string::npos);
+  const Ran missing = heatledger({"compare", folder / "a.heatledger.json", folder / "none.json"});
+  EXPECT_EQ(missing.status, 1);
+}
+
 TEST(Work, JsonIsThePageItself) {
   const TemporaryFolder folder;
   write_whole(folder / "s.heatledger.json", sheet_text(kHydrogenation));
