@@ -382,6 +382,20 @@ void add_class(Reader& reader, const dosing::DosedModel& model, const dosing::An
   findings.groups.push_back(std::move(group));
 }
 
+/// Heats of dissolving and diluting enter the balance over the course, not the course in time.
+void caution_of_dilution(const step::StepResult& balance, step::Findings& findings) {
+  double heat = 0;
+  for (const step::DilutionLine& line : balance.dilutions) heat += line.set_free;
+  if (!(heat > 0)) return;
+  findings.cautions.insert(findings.cautions.begin(),
+                           "Mixing and dilution set free " + step::heat_text(heat, false) +
+                               " that the balance counts and the course in time does not: heat rate, MTSR "
+                               "and class leave it out and "
+                               "are too low by it. Type the heat measured in this mixture, with mixing in "
+                               "it, before any of them is "
+                               "used.");
+}
+
 }  // namespace
 
 void compute_dosed(const StepSheet& sheet, const StepContext& context, step::Lookups& lookups,
@@ -406,6 +420,7 @@ void compute_dosed(const StepSheet& sheet, const StepContext& context, step::Loo
   add_balance(*model, *answers, lookups, outcome);
   step::Findings findings = dosing::findings_of(*model, *answers);
   add_class(reader, *model, *answers, findings);
+  if (outcome.result != nullptr) caution_of_dilution(*outcome.result, findings);
   outcome.findings = std::make_shared<const step::Findings>(std::move(findings));
 }
 

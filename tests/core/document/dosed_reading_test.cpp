@@ -149,6 +149,30 @@ TEST_F(DosedReadingTest, ClassOfTheFailureNeedsBothLimits) {
   EXPECT_EQ(finding(outcome, "td24")->sources.front(), "calorimetry, 3 g");
 }
 
+TEST_F(DosedReadingTest, DilutionThatTheCourseLeavesOutIsCautioned) {
+  const auto cautioned = [this] {
+    const StepOutcome outcome = computed();
+    EXPECT_NE(outcome.findings, nullptr);
+    if (outcome.findings == nullptr) return false;
+    bool found = false;
+    for (const std::string& caution : outcome.findings->cautions)
+      found = found || caution.find("Mixing and dilution set free") == 0;
+    return found;
+  };
+  EXPECT_FALSE(cautioned());
+  FeedRow water, acid;
+  water.species = "water(l)";
+  water.amount = "500 kg";
+  acid.species = "H2SO4(aq, 96 wt%)";
+  acid.amount = "200 kg";
+  sheet_.feeds[0].rows.push_back(water);
+  sheet_.feeds[1].rows.push_back(acid);
+  sheet_.reactions[0].includes = "no";
+  EXPECT_TRUE(cautioned());
+  sheet_.reactions[0].includes = "yes";
+  EXPECT_FALSE(cautioned());
+}
+
 TEST_F(DosedReadingTest, ProfileGoesBeforeTheDosingTime) {
   sheet_.reactions[0].rate_constant = "as fast as dosed";
   const double even = value(computed(), "peak_heat");
