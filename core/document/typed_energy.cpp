@@ -1,6 +1,7 @@
 #include "core/document/typed_energy.hpp"
 
 #include <array>
+#include <cmath>
 #include <string>
 
 #include "core/base/number_text.hpp"
@@ -113,7 +114,14 @@ Result<uncertainty::Figure> parse_molar_energy(std::string_view text) {
                    "offset " + std::to_string(at), "Use kJ/mol, J/mol, kcal/mol, cal/mol or eV."};
     }
   }
-  return uncertainty::Figure{*value * factor, half_width * factor};
+  const uncertainty::Figure figure{*value * factor, half_width * factor};
+  // Far above any heat of reaction, far below what sums and squares of it could not hold.
+  constexpr double kLargest = 1e15;  // [J/mol]
+  if (!(std::fabs(figure.value) <= kLargest && figure.u95 <= kLargest)) {
+    return Error{"typed_energy.out_of_range", "No heat per mole is as large as this.", "offset 0",
+                 "Check the power of ten and the unit."};
+  }
+  return figure;
 }
 
 }  // namespace heatledger::document

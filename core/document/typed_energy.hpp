@@ -12,7 +12,7 @@ namespace heatledger::document {
 /// eV. Thin spaces between thousands and the true minus sign are understood, so that a printed figure reads
 /// back.
 /// @return [J/mol] value and ± (zero when none is typed: taken as exact)
-/// @errors typed_energy.not_a_number, typed_energy.unit; `where` is "offset N"
+/// @errors typed_energy.not_a_number, typed_energy.unit, typed_energy.out_of_range; `where` is "offset N"
 Result<uncertainty::Figure> parse_molar_energy(std::string_view text);
 
 }  // namespace heatledger::document

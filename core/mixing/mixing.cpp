@@ -95,8 +95,6 @@ Finding finding(std::string id, std::string label, const units::Dimension& dimen
 step::FindingGroup heats(const StepResult& result) {
   const Model& model = *result.model;
   step::FindingGroup group{"heats", "Heat of mixing", "at 25 °C; < 0 is set free", {}};
-  double share = 0;
-  for (const step::DilutionLine& line : result.dilutions) share += line.by_tables;
   for (std::size_t k = 0; k < result.dilutions.size(); ++k) {
     const step::DilutionLine& line = result.dilutions[k];
     const std::size_t substance = line.substance;

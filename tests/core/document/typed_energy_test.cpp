@@ -44,6 +44,8 @@ TEST(TypedEnergy, NamesWhatItCannotRead) {
   EXPECT_EQ(parse_molar_energy("340 kJ/kg").error().where, "offset 4");
   EXPECT_EQ(parse_molar_energy("340 \u00b1 -2").error().code, "typed_energy.not_a_number");
   EXPECT_EQ(parse_molar_energy("3,5").error().code, "typed_energy.unit");
+  EXPECT_EQ(parse_molar_energy("-1e308 kJ").error().code, "typed_energy.out_of_range");
+  EXPECT_EQ(parse_molar_energy("1 \u00b1 1e300 kJ").error().code, "typed_energy.out_of_range");
 }
 
 }  // namespace

@@ -1,4 +1,5 @@
 // The integrator against solutions that are known, and dosed charges against an integrator of another kind.
+#include <array>
 #include <cmath>
 
 #include "tests/core/dosing/systems.hpp"
