@@ -6,6 +6,7 @@
 #include "core/base/number_text.hpp"
 #include "core/burning/answer.hpp"
 #include "core/burning/calorific.hpp"
+#include "core/document/typed_rows.hpp"
 #include "core/facts/air.hpp"
 #include "core/units/constants.hpp"
 #include "core/units/quantity_text.hpp"
@@ -47,12 +48,6 @@ const NamedRole* role_of(const FeedSheet& feed) {
 
 bool is_air(const NamedRole& role) {
   return role.role == Role::CombustionAir || role.role == Role::DilutionAir;
-}
-
-std::string trimmed(const std::string& text) {
-  const std::size_t first = text.find_first_not_of(" \t");
-  return first == std::string::npos ? std::string()
-                                    : text.substr(first, text.find_last_not_of(" \t") - first + 1);
 }
 
 bool ends(const std::string& text, const std::string& with) {

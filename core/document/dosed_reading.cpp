@@ -4,6 +4,7 @@
 #include <cmath>
 
 #include "core/base/number_text.hpp"
+#include "core/document/typed_rows.hpp"
 #include "core/dosing/dosed_findings.hpp"
 #include "core/safety/criticality.hpp"
 #include "core/step/words.hpp"
@@ -15,12 +16,6 @@ namespace {
 namespace d = units::dimension;
 using step::Blank;
 using step::Typed;
-
-std::string trimmed(const std::string& text) {
-  const std::size_t first = text.find_first_not_of(" \t");
-  return first == std::string::npos ? std::string()
-                                    : text.substr(first, text.find_last_not_of(" \t") - first + 1);
-}
 
 class Reader {
  public:

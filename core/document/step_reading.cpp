@@ -7,6 +7,7 @@
 #include "core/base/number_text.hpp"
 #include "core/document/air_row.hpp"
 #include "core/document/step_kinds.hpp"
+#include "core/document/typed_rows.hpp"
 #include "core/units/quantity_text.hpp"
 
 namespace heatledger::document {
@@ -15,12 +16,6 @@ namespace {
 namespace d = units::dimension;
 using step::Blank;
 using step::Typed;
-
-std::string trimmed(const std::string& text) {
-  const std::size_t first = text.find_first_not_of(" \t");
-  return first == std::string::npos ? std::string()
-                                    : text.substr(first, text.find_last_not_of(" \t") - first + 1);
-}
 
 /// "82 ± 1.5 %" beside a share means (82 ± 1.5) %, not 82 within 1.5 % of itself.
 std::string per_cent_of_both(const std::string& text) {

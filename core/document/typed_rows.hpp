@@ -8,6 +8,13 @@
 
 namespace heatledger::document {
 
+/// A typed text without blanks and tabs at its ends.
+inline std::string trimmed(const std::string& text) {
+  const std::size_t first = text.find_first_not_of(" \t");
+  return first == std::string::npos ? std::string()
+                                    : text.substr(first, text.find_last_not_of(" \t") - first + 1);
+}
+
 /// The error with the path of its field in front of its offset: "bonds[0].value, offset 3".
 inline Error placed(Error error, const std::string& field) {
   const bool offset = error.where.compare(0, 7, "offset ") == 0;

@@ -5,30 +5,11 @@
 
 #include "core/base/number_text.hpp"
 #include "core/page/figures.hpp"
+#include "core/page/plot.hpp"
 #include "core/page/reaction_blocks.hpp"
 
 namespace heatledger::page {
 namespace {
-
-Words words_at(double x, double y, std::string text, Ink ink = Ink::Text, Align anchor = Align::Left,
-               double size = 9) {
-  Words words;
-  words.x = x;
-  words.y = y;
-  words.text = std::move(text);
-  words.ink = ink;
-  words.anchor = anchor;
-  words.size = size;
-  return words;
-}
-
-Stroke line(double x0, double y0, double x1, double y1, Ink ink, double width = 1) {
-  Stroke stroke;
-  stroke.xy = {x0, y0, x1, y1};
-  stroke.ink = ink;
-  stroke.width = width;
-  return stroke;
-}
 
 /// Eight-sided dot: every face draws polygons, none needs to know circles.
 Fill dot(double x, double y, double radius, Ink ink) {
@@ -114,18 +95,18 @@ Drawing routes_drawing(const std::string& id, const balance::Ledger& ledger) {
   const int decimals = step >= 1 ? 0 : (step >= 0.1 ? 1 : 3);
   for (int i = 0; low + i * step <= high + step / 2; ++i) {
     const double value = low + i * step;
-    drawing.strokes.push_back(line(x_of(value), kTop - 8, x_of(value), axis, Ink::Grid, 0.5));
+    drawing.strokes.push_back(line_between(x_of(value), kTop - 8, x_of(value), axis, Ink::Grid, 0.5));
     drawing.words.push_back(
         words_at(x_of(value), axis + 14, display_number(value, decimals), Ink::QuietText, Align::Centre));
   }
-  drawing.strokes.push_back(line(kLeft, axis, kRight, axis, Ink::Axis));
+  drawing.strokes.push_back(line_between(kLeft, axis, kRight, axis, Ink::Axis));
   double y = kTop;
   for (const RouteFigure& figure : figures) {
     const Ink ink = figure.taken ? Ink::Accent : Ink::Plain;
     drawing.words.push_back(
         words_at(0, y + 3, figure.label + (figure.taken ? ", taken" : ""), Ink::QuietText));
     drawing.strokes.push_back(
-        line(x_of(figure.value - figure.u95), y, x_of(figure.value + figure.u95), y, ink, 2));
+        line_between(x_of(figure.value - figure.u95), y, x_of(figure.value + figure.u95), y, ink, 2));
     drawing.fills.push_back(dot(x_of(figure.value), y, 3.5, ink));
     y += kPitch;
   }
@@ -168,14 +149,16 @@ Drawing profile_drawing(const std::string& id, const balance::Ledger& ledger) {
   const int decimals = ledger_decimals(ledger);
   const balance::Reaction& reaction = *ledger.reaction;
 
-  drawing.strokes.push_back(line(kMiddle - 20, y_of(broken), kMiddle + 90, y_of(broken), Ink::Plain, 1.5));
+  drawing.strokes.push_back(
+      line_between(kMiddle - 20, y_of(broken), kMiddle + 90, y_of(broken), Ink::Plain, 1.5));
   drawing.words.push_back(words_at(kMiddle - 20, y_of(broken) - 6, "free atoms", Ink::QuietText));
-  drawing.strokes.push_back(line(kLeft, y_of(0), kMiddle, y_of(0), Ink::Plain, 1.5));
-  drawing.strokes.push_back(line(kMiddle + 66, y_of(products), kFar, y_of(products), Ink::Plain, 1.5));
-  Stroke up = line(kMiddle - 8, y_of(0), kMiddle - 8, y_of(broken), Ink::Broken, 2);
+  drawing.strokes.push_back(line_between(kLeft, y_of(0), kMiddle, y_of(0), Ink::Plain, 1.5));
+  drawing.strokes.push_back(
+      line_between(kMiddle + 66, y_of(products), kFar, y_of(products), Ink::Plain, 1.5));
+  Stroke up = line_between(kMiddle - 8, y_of(0), kMiddle - 8, y_of(broken), Ink::Broken, 2);
   up.arrow = true;
   drawing.strokes.push_back(std::move(up));
-  Stroke down = line(kMiddle + 76, y_of(broken), kMiddle + 76, y_of(products), Ink::Formed, 2);
+  Stroke down = line_between(kMiddle + 76, y_of(broken), kMiddle + 76, y_of(products), Ink::Formed, 2);
   down.arrow = true;
   drawing.strokes.push_back(std::move(down));
   const double halfway = (y_of(0) + y_of(broken)) / 2;
@@ -193,7 +176,7 @@ Drawing profile_drawing(const std::string& id, const balance::Ledger& ledger) {
   if (phases) {
     const auto written_level = [&](double x0, double x1, double joule, double gas) {
       if (joule == gas) return;
-      Stroke level = line(x0, y_of(joule), x1, y_of(joule), Ink::Plain);
+      Stroke level = line_between(x0, y_of(joule), x1, y_of(joule), Ink::Plain);
       level.dashed = true;
       drawing.strokes.push_back(std::move(level));
       drawing.words.push_back(
