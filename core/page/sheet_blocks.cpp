@@ -130,7 +130,7 @@ std::vector<Block> quantity_blocks(const document::NamedQuantities& typed,
                                    const document::ReadQuantities& read, const std::vector<Error>& errors) {
   std::vector<Block> blocks;
   blocks.push_back(heading_block("quantities.heading", "Quantities of this sheet",
-                                 "any cell with a number may call these by name"));
+                                 "cells of steps, temperatures and pressures call these by name"));
   Table table;
   table.id = "quantities";
   table.columns = {column("name", "Name", Align::Left, 0.16),
